@@ -1,0 +1,30 @@
+import { defineConfig } from 'astro/config';
+import node from '@astrojs/node';
+import react from '@astrojs/react';
+import tailwindcss from '@tailwindcss/vite';
+
+export default defineConfig({
+  output: 'server',
+  adapter: node({ mode: 'standalone' }),
+  devToolbar: { enabled: false },
+  integrations: [react()],
+  vite: {
+    plugins: [tailwindcss()],
+    // Without this list the first visit in development re-optimises and reloads the page.
+    optimizeDeps: {
+      include: [
+        'react',
+        'react-dom/client',
+        'konva',
+        'react-konva',
+        'zustand',
+        'zundo',
+        'comlink',
+        'polygon-clipping',
+        'jspdf',
+        'svg2pdf.js',
+      ],
+    },
+    worker: { format: 'es' },
+  },
+});
