@@ -1,0 +1,49 @@
+import { z } from 'zod';
+import type { LayoutDocument } from '@/paving/layout-document';
+import type { LayoutSummary } from './layouts';
+import type { PersonName, Role } from './people';
+import type { VersionState } from './versions';
+
+const projectFields = z.object({
+  name: z
+    .string({ error: 'Give the project a name' })
+    .trim()
+    .min(1, 'Give the project a name')
+    .max(120, 'Keep the name to 120 characters'),
+  clientName: z.string().trim().max(120, 'Keep it to 120 characters'),
+  siteNote: z.string().trim().max(4000, 'Keep the site note to 4,000 characters'),
+});
+
+/** POST /api/projects. 201 → `ProjectSummary`. */
+export const newProjectSchema = projectFields.extend({
+  clientName: projectFields.shape.clientName.default(''),
+  siteNote: projectFields.shape.siteNote.default(''),
+});
+export type NewProject = z.input<typeof newProjectSchema>;
+
+/** PATCH /api/projects/{id}. 200 → `ProjectSummary`. */
+export const projectChangeSchema = projectFields.extend({ archived: z.boolean() }).partial();
+export type ProjectChange = z.input<typeof projectChangeSchema>;
+
+/** GET /api/projects → `{ projects: ProjectSummary[] }`, last touched first, archived ones included. */
+export interface ProjectSummary {
+  readonly id: string;
+  readonly name: string;
+  readonly clientName: string;
+  readonly siteNote: string;
+  readonly archivedAt: string | null;
+  readonly createdAt: string;
+  readonly updatedAt: string;
+  /** How many layouts this person may see. */
+  readonly layouts: number;
+  /** The furthest state of a version that this person may see; `draft` when there is none. */
+  readonly stage: VersionState | 'draft';
+  /** What to draw it from: its layout last worked on, if it has one. */
+  readonly document: LayoutDocument | null;
+}
+
+/** GET /api/projects/{id}. */
+export interface ProjectDetail extends Omit<ProjectSummary, 'layouts'> {
+  readonly layouts: readonly LayoutSummary[];
+  readonly people: readonly (PersonName & { readonly role: Role })[];
+}

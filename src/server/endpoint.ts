@@ -1,0 +1,68 @@
+import type { APIContext, APIRoute } from 'astro';
+import type { z } from 'zod';
+import { database, type Db } from './database';
+import type { Outcome } from './outcomes';
+import type { Actor } from './permissions';
+import { problemResponse, refusalResponse } from './problem-response';
+import { readBody } from './request-body';
+
+/** What an endpoint hands to a service. */
+export interface Call {
+  readonly db: Db;
+  readonly actor: Actor;
+  /** The `[id]` of the path; empty where there is none. */
+  readonly id: string;
+  readonly context: APIContext;
+}
+
+export const jsonResponse = (value: unknown, status = 200): Response =>
+  new Response(JSON.stringify(value), {
+    status,
+    headers: { 'content-type': 'application/json; charset=utf-8', 'cache-control': 'no-store' },
+  });
+
+export const answer = (outcome: Outcome<unknown>, status = 200): Response =>
+  outcome.ok ? jsonResponse(outcome.value, status) : refusalResponse(outcome);
+
+const callOf = async (context: APIContext): Promise<Call | null> => {
+  const { person, firm, role } = context.locals;
+  if (!person || !firm || !role) return null;
+  return {
+    db: await database(),
+    actor: { personId: person.id, firmId: firm.id, role },
+    id: context.params.id ?? '',
+    context,
+  };
+};
+
+const signIn = () => problemResponse('signed-out', 'Sign in to go on.');
+
+/** A GET endpoint: one service call, its outcome as JSON. */
+export const reading =
+  (run: (call: Call) => Promise<Outcome<unknown>>): APIRoute =>
+  async (context) => {
+    const call = await callOf(context);
+    return call ? answer(await run(call)) : signIn();
+  };
+
+/** An endpoint that takes a JSON body: parsed with the schema, then one service call. */
+export const writing =
+  <S extends z.ZodType>(
+    schema: S,
+    run: (call: Call, input: z.output<S>) => Promise<Outcome<unknown>>,
+    status = 200,
+  ): APIRoute =>
+  async (context) => {
+    const call = await callOf(context);
+    if (!call) return signIn();
+    const body = await readBody(context.request, schema);
+    return body.ok ? answer(await run(call, body.value), status) : body.response;
+  };
+
+/** For `ALL`: every method that the endpoint does not have. */
+export const onlyMethods =
+  (...methods: string[]): APIRoute =>
+  ({ request }) =>
+    problemResponse('wrong-method', `${request.method} is not possible here.`, {
+      headers: { allow: methods.join(', ') },
+    });

@@ -1,0 +1,19 @@
+/** Where to go after signing in: a path of this site, never another site's address. */
+export const nextPage = (asked: string | null | undefined, otherwise = '/projects'): string => {
+  if (!asked?.startsWith('/')) return otherwise;
+  const here = new URL('http://here.invalid');
+  const url = URL.canParse(asked, here) ? new URL(asked, here) : here;
+  const path = `${url.pathname}${url.search}${url.hash}`;
+  return url.origin === here.origin && !path.startsWith('//') ? path : otherwise;
+};
+
+/** Pages that anybody may open. Every other page sends those who are not signed in to `/sign-in`. */
+export const OPEN_PAGES: ReadonlySet<string> = new Set(['/sign-in', '/sign-up', '/404', '/500']);
+
+/** Endpoints that answer without a session. */
+export const OPEN_ENDPOINTS: ReadonlySet<string> = new Set([
+  '/api/health',
+  '/api/sign-up',
+  '/api/sign-in',
+  '/api/sign-out',
+]);

@@ -1,0 +1,54 @@
+import type { Role } from '@/api-types/people';
+import { notAllowed, type Refusal } from './outcomes';
+
+/** Who acts, in which firm and role. Every service takes one, and its firm is in every query. */
+export interface Actor {
+  readonly personId: string;
+  readonly firmId: string;
+  readonly role: Role;
+}
+
+/** Who may do what: the one table. Other modules ask it and never compare roles themselves. */
+export const permissions = {
+  'people, roles, firm settings': { owner: true, designer: false, installer: false, client: false },
+  'catalogue and cost prices': { owner: true, designer: true, installer: false, client: false },
+  'projects, drafts, saving and sharing versions': {
+    owner: true,
+    designer: true,
+    installer: false,
+    client: false,
+  },
+  'see a project': { owner: 'all', designer: 'all', installer: 'put on', client: 'put on' },
+  'see a version': { owner: 'any', designer: 'any', installer: 'issued', client: 'shared' },
+  'comment on a version': { owner: true, designer: true, installer: true, client: true },
+  'accept, ask for a change, pay': {
+    owner: false,
+    designer: false,
+    installer: false,
+    client: true,
+  },
+  'issue an accepted version for set-out': {
+    owner: true,
+    designer: true,
+    installer: false,
+    client: false,
+  },
+  'set-out pack': { owner: 'any', designer: 'any', installer: 'issued', client: 'plan sheet' },
+  'check measurements, course progress': {
+    owner: 'enter',
+    designer: 'enter',
+    installer: 'enter',
+    client: 'see',
+  },
+  'quote totals': { owner: true, designer: true, installer: false, client: true },
+  'cost and margin': { owner: true, designer: true, installer: false, client: false },
+} as const satisfies Record<string, Record<Role, boolean | string>>;
+
+export const mayDraft = (role: Role): boolean =>
+  permissions['projects, drafts, saving and sharing versions'][role];
+
+/** Asked only after what it is about was found to be seen: what is not seen is `not-found`. */
+export const refuseUnlessDrafting = (actor: Actor): Refusal | null =>
+  mayDraft(actor.role)
+    ? null
+    : notAllowed('Only the firm’s owner and designers draw up projects, drafts and versions.');
