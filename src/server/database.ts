@@ -5,7 +5,10 @@ import { environment } from './environment';
 export type { Db } from '@/db/client';
 
 /** One for the process, on globalThis: the start script, the built server and reloaded modules share it. */
-const place = globalThis as typeof globalThis & { evenlayDatabase?: Promise<OpenDatabase> };
+const place = globalThis as typeof globalThis & {
+  evenlayDatabase?: Promise<OpenDatabase>;
+  evenlayEndings?: (() => Promise<void>)[];
+};
 
 /** The open database; opened, and its migrations applied, at the first call. */
 export const theDatabase = (): Promise<OpenDatabase> => {
@@ -30,15 +33,19 @@ export const closeDatabase = async (): Promise<void> => {
   await (await opened?.catch(() => undefined))?.close();
 };
 
-/** Exit codes by custom: 128 and the signal's number. */
-const SIGNALS = { SIGINT: 130, SIGTERM: 143 } as const;
+/** What must end before the database closes, such as a server that still answers requests. */
+export const endBeforeClosing = (end: () => Promise<void>): void => {
+  (place.evenlayEndings ??= []).push(end);
+};
 
 const openAndCloseOnSignal = async (): Promise<OpenDatabase> => {
   const opened = await openDatabase(environment());
-  for (const [signal, code] of Object.entries(SIGNALS)) {
-    process.once(signal, () => {
-      void opened.close().finally(() => process.exit(code));
-    });
-  }
+  const end = async () => {
+    await Promise.allSettled((place.evenlayEndings ?? []).map((ending) => ending()));
+    await opened.close();
+    process.exit(0);
+  };
+  process.once('SIGTERM', () => void end());
+  process.once('SIGINT', () => void end());
   return opened;
 };

@@ -80,8 +80,9 @@ type Save = z.output<typeof saveDraftSchema>;
  */
 const standing = (draft: DraftRow, save: Save): 'next' | 'same' | 'superseded' | 'stale' => {
   if (canonicalJson(draft.document) === canonicalJson(save.document)) return 'same';
-  const sameTab = save.tab?.id === draft.tabId;
-  if (sameTab && save.tab.save <= (draft.tabSave ?? 0)) return 'superseded';
+  const { tab } = save;
+  const sameTab = tab !== undefined && tab.id === draft.tabId;
+  if (sameTab && tab.save <= (draft.tabSave ?? 0)) return 'superseded';
   return sameTab || save.baseRevision === draft.revision ? 'next' : 'stale';
 };
 

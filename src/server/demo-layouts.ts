@@ -1,0 +1,137 @@
+import type { LayoutDocument, Placement, Vertex } from '@/paving/layout-document';
+
+/** A quarter circle's bulge, tan(90° / 4). */
+const QUARTER = Math.SQRT2 - 1;
+
+const circle = (radius: number): Vertex[] => [
+  [radius, 0, QUARTER],
+  [0, radius, QUARTER],
+  [-radius, 0, QUARTER],
+  [0, -radius, QUARTER],
+];
+
+const rectangle = (x: number, y: number, width: number, depth: number): Vertex[] => [
+  [x, y],
+  [x + width, y],
+  [x + width, y + depth],
+  [x, y + depth],
+];
+
+const slab = {
+  id: 'slab',
+  name: 'Slab 450 × 450',
+  length: 450,
+  width: 450,
+  thickness: 50,
+  colour: '#cdc5b4',
+};
+
+const court: Omit<LayoutDocument, 'bond' | 'placement'> = {
+  schema: 'evenlay/layout@1',
+  display: 'metric',
+  ground: {
+    perimeter: [
+      [0, 0],
+      [7200, 0],
+      [7200, 3100],
+      [4300, 3100],
+      [4300, 5400],
+      [0, 5400],
+    ],
+    keepOuts: [{ name: 'Tree pit', ring: rectangle(1500, 3600, 1000, 1000) }],
+  },
+  units: [slab],
+  clearance: 6,
+  lifted: [],
+  cutting: 'none',
+  aggregate: { name: 'River gravel 10 mm', colour: '#a89f8d' },
+  notes:
+    'Edge: 150 mm sawn kerb, set level. The tree stays; its pit keeps a 1 m square of open ground.',
+};
+
+const courtPlan = (bond: LayoutDocument['bond'], placement: Placement): LayoutDocument => ({
+  ...court,
+  bond,
+  placement,
+});
+
+/**
+ * Origins below were found with the project's own laying, over a grid of the lattice cell and then closer
+ * around the best: the most whole units, and of those the most play. The choice is written down; what it
+ * comes to is computed when the version is saved.
+ */
+export const COURT_SQUARE = courtPlan(
+  { kind: 'stack', unit: 'slab', joint: 5 },
+  { origin: [295, 3.4], turn: 0 },
+);
+export const COURT_FIRST_CHEQUER = courtPlan(
+  { kind: 'chequer', unit: 'slab', joint: 3 },
+  { origin: [0, 0], turn: 45 },
+);
+export const COURT_CHEQUER = courtPlan(
+  { kind: 'chequer', unit: 'slab', joint: 3 },
+  { origin: [396.8, 515.7], turn: 45 },
+);
+
+export const ROUND_TERRACE: LayoutDocument = {
+  schema: 'evenlay/layout@1',
+  display: 'metric',
+  ground: {
+    perimeter: circle(2300),
+    keepOuts: [{ name: 'Fire bowl', ring: circle(380) }],
+  },
+  units: [
+    {
+      id: 'block',
+      name: 'Block 200 × 98',
+      length: 200,
+      width: 98,
+      thickness: 60,
+      colour: '#a9694f',
+    },
+  ],
+  bond: { kind: 'herringbone', unit: 'block', joint: 4 },
+  placement: { origin: [25.7, 46.4], turn: 45 },
+  clearance: 4,
+  lifted: [],
+  cutting: 'none',
+  tones: { rule: 'random', second: '#7d4a3a', share: 0.35, seed: 7 },
+  aggregate: { name: 'Slate chippings 6 mm', colour: '#6d7273' },
+  notes: 'Edge: steel strip rolled to a radius of 2.3 m. The fire bowl stands on its own pad.',
+};
+
+export const SIDE_YARD: LayoutDocument = {
+  schema: 'evenlay/layout@1',
+  display: 'metric',
+  ground: {
+    perimeter: [
+      [0, 0],
+      [10_400, 0],
+      [10_400, 2450],
+      [7900, 2450],
+      [7100, 1750],
+      [0, 1750],
+    ],
+    keepOuts: [
+      { name: 'Gully', ring: rectangle(2650, 150, 300, 300) },
+      { name: 'Gate post', ring: rectangle(8700, 1500, 200, 200) },
+    ],
+  },
+  units: [
+    {
+      id: 'plank',
+      name: 'Plank 600 × 200',
+      length: 600,
+      width: 200,
+      thickness: 50,
+      colour: '#b9bcb6',
+    },
+  ],
+  bond: { kind: 'running', unit: 'plank', joint: 5, shift: 0.5 },
+  placement: { origin: [390.3, 187.5], turn: 0 },
+  clearance: 5,
+  lifted: [],
+  cutting: 'none',
+  tones: { rule: 'course', second: '#8f9591', share: 0.5, seed: 1 },
+  aggregate: { name: 'Limestone grit 4 mm', colour: '#d9d3c3' },
+};

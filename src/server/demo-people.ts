@@ -1,0 +1,14 @@
+import type { Role } from '@/api-types/people';
+
+export const DEMO_FIRM = 'Larkmoss Dry Floors';
+
+/** For all of them: the demo is there to be walked into. */
+export const DEMO_PASSWORD = 'laid-whole';
+
+/** Invented people, at addresses that can never exist (the domain `example`, RFC 2606). */
+export const DEMO_PEOPLE: readonly { role: Role; name: string; email: string }[] = [
+  { role: 'owner', name: 'Tamsin Okelby', email: 'owner@larkmoss.example' },
+  { role: 'designer', name: 'Bram Festerley', email: 'designer@larkmoss.example' },
+  { role: 'installer', name: 'Joss Winterpell', email: 'installer@larkmoss.example' },
+  { role: 'client', name: 'Nerys Quillamore', email: 'client@larkmoss.example' },
+];
