@@ -48,7 +48,14 @@ export const vertexSchema = z.union([
   z.tuple([coordinate, coordinate, z.number().min(-100).max(100)]),
 ]);
 
-const ring = z.array(vertexSchema).min(3, 'needs at least 3 corners');
+/** Not closed by repeating the first corner; either direction, stored anticlockwise. */
+const ring = z
+  .array(vertexSchema)
+  .refine(
+    (corners) =>
+      corners.length >= 3 || (corners.length === 2 && corners.some(([, , bulge]) => bulge)),
+    'needs at least 3 corners, or 2 joined by arcs',
+  );
 
 export const keepOutSchema = z.object({
   name: z.string().trim().min(1, 'needs a name').max(80),
