@@ -67,6 +67,8 @@ export const saveDraftSchema = z.object({
   baseRevision: z.number().int().min(1),
   document: layoutDocumentSchema,
   tab: z.object({ id: z.string().min(8).max(64), save: z.number().int().min(1) }).optional(),
+  /** Keeps what the draft held before as set aside: for going on with one's own side of a conflict. */
+  setCurrentAside: z.boolean().optional(),
 });
 export type SaveDraft = z.input<typeof saveDraftSchema>;
 

@@ -88,6 +88,8 @@ const seed = async (db: Db): Promise<void> => {
     'Nerys Quillamore',
     'Lawn on all sides; park on the lane. Steel edge is in and checked for round.',
   );
+  await putOnProject(db, firmId, terrace, installer.personId);
+  await putOnProject(db, firmId, terrace, client.personId);
   await addVersions(db, designer, await layout(terrace, 'Herringbone', ROUND_TERRACE), [
     {
       label: 'Herringbone about the fire bowl',
@@ -100,14 +102,13 @@ const seed = async (db: Db): Promise<void> => {
       ],
     },
   ]);
-  await putOnProject(db, firmId, terrace, installer.personId);
-  await putOnProject(db, firmId, terrace, client.personId);
 
   const court = await project(
     'Fernhollow court',
     'Nerys Quillamore',
     'Kerb is set and level. Water pipe crosses under the north arm at 600 mm.',
   );
+  await putOnProject(db, firmId, court, client.personId);
   await addVersions(db, designer, await layout(court, 'Chequer court', COURT_SQUARE), [
     {
       label: 'Square to the walls',
@@ -128,7 +129,6 @@ const seed = async (db: Db): Promise<void> => {
       ],
     },
   ]);
-  await putOnProject(db, firmId, court, client.personId);
 };
 
 /** Puts the demo firm into a database that holds no firm at all; whether it did. All of it or nothing. */

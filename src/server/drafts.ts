@@ -119,6 +119,9 @@ export const saveDraft = async (
       return done({ revision: draft.revision, savedAt: draft.updatedAt.toISOString() });
     }
     if (stands === 'next') {
+      if (save.setCurrentAside) {
+        await setAside(tx, actor, layoutId, draft.revision, draft.document);
+      }
       return done(
         await storeNext(tx, actor, draft, save.document, {
           tabId: save.tab?.id ?? null,

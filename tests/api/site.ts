@@ -42,7 +42,7 @@ export const serve = async (request: Request): Promise<Response> => {
     request,
     params: route?.params ?? {},
     defaultLocale: 'en',
-    locals: {},
+    locals: { person: null, firm: null, role: null, session: null },
   }) as APIContext;
   const response = await onRequest(context, async () => {
     const handler = route?.endpoint[request.method] ?? route?.endpoint.ALL;
