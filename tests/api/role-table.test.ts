@@ -1,0 +1,378 @@
+import { beforeAll, describe, expect, test } from 'vitest';
+import { putOnProject } from '@/server/projects';
+import { recordVersionEvent } from '@/server/versions';
+import {
+  court,
+  moved,
+  newFirm,
+  newMember,
+  newProject,
+  newVersion,
+  PASSWORD,
+  type Signed,
+} from './firm';
+import { db, endpoints, useEmptyDatabase, Visitor } from './site';
+
+useEmptyDatabase();
+
+/** Who asks: the four roles on the project, two who are not on it, another firm's owner, and nobody. */
+const askers = [
+  'owner',
+  'designer',
+  'installer',
+  'client',
+  'installer elsewhere',
+  'client elsewhere',
+  'stranger',
+  'nobody',
+] as const;
+type Asker = (typeof askers)[number];
+
+interface World {
+  readonly people: Record<Asker, { readonly visitor: Visitor; readonly email: string }>;
+  readonly project: string;
+  /** With three versions: one only saved, one shared, one issued. */
+  readonly layout: string;
+  /** Of the same project, with a draft only. */
+  readonly unshown: string;
+  readonly saved: string;
+  readonly shared: string;
+  readonly issued: string;
+  readonly aside: string;
+}
+
+let world: World;
+
+beforeAll(async () => {
+  const owner = await newFirm();
+  const { firmId } = owner.actor;
+  const member = (role: 'designer' | 'installer' | 'client') => newMember(firmId, role);
+  const designer = await member('designer');
+  const [installer, installerElsewhere] = [await member('installer'), await member('installer')];
+  const [client, clientElsewhere] = [await member('client'), await member('client')];
+  const stranger = await newFirm();
+  await newProject(stranger.visitor);
+  const { projectId: project, layoutId: layout } = await newProject(owner.visitor);
+  const other = await newProject(owner.visitor);
+  const unshown = await owner.visitor.post(`/api/projects/${project}/layouts`, { name: 'Unshown' });
+  const [saved, shared, issued] = [
+    await newVersion(owner.visitor, layout, 'Saved'),
+    await newVersion(owner.visitor, layout, 'Shared'),
+    await newVersion(owner.visitor, layout, 'Issued'),
+  ];
+  const database = await db();
+  await recordVersionEvent(database, owner.actor, shared.id, 'shared');
+  await recordVersionEvent(database, owner.actor, issued.id, 'issued');
+  for (const { actor } of [installer, client]) {
+    await putOnProject(database, firmId, project, actor.personId);
+  }
+  for (const { actor } of [installerElsewhere, clientElsewhere]) {
+    await putOnProject(database, firmId, other.projectId, actor.personId);
+  }
+  const draft = `/api/layouts/${layout}/draft`;
+  await designer.visitor.put(draft, { baseRevision: 1, document: moved(court(), 3) });
+  const stale = await owner.visitor.put(draft, { baseRevision: 1, document: moved(court(), 4) });
+  const people: Record<Asker, Pick<Signed, 'visitor' | 'email'>> = {
+    owner,
+    designer,
+    installer,
+    client,
+    'installer elsewhere': installerElsewhere,
+    'client elsewhere': clientElsewhere,
+    stranger,
+    nobody: { visitor: new Visitor(), email: 'nobody@firm.example' },
+  };
+  world = {
+    people,
+    project,
+    layout,
+    unshown: unshown.body.id,
+    saved: saved.id,
+    shared: shared.id,
+    issued: issued.id,
+    aside: stale.body.setAside.id,
+  };
+});
+
+type Statuses = Readonly<Record<Asker, number>>;
+
+const statuses = (
+  inOrder: readonly [number, number, number, number, number, number, number, number],
+): Statuses =>
+  Object.fromEntries(askers.map((asker, n) => [asker, inOrder[n]])) as Record<Asker, number>;
+
+/** Read against product.md's table: [owner, designer, installer, client | elsewhere: installer, client | stranger, nobody]. */
+interface Row {
+  /** The row of the table, or why there is none. */
+  readonly row: string;
+  readonly endpoint: string;
+  readonly id?: (world: World) => string;
+  readonly body?: (world: World, asker: Asker) => unknown;
+  readonly expected: Statuses;
+}
+
+const revision = async (layout: string): Promise<number> =>
+  (await world.people.owner.visitor.get(`/api/layouts/${layout}/draft`)).body.revision;
+
+const DRAFTS = 'projects, drafts, saving and sharing versions';
+const SEE_PROJECT = 'see a project';
+const SEE_VERSION = 'see a version';
+const drafting = (success: number) => statuses([success, success, 403, 403, 404, 404, 404, 401]);
+
+const rows: readonly Row[] = [
+  {
+    row: 'open to all',
+    endpoint: 'GET /api/health',
+    expected: statuses([200, 200, 200, 200, 200, 200, 200, 200]),
+  },
+  {
+    row: 'open to all: makes a firm of one’s own',
+    endpoint: 'POST /api/sign-up',
+    body: (_world, asker) => ({
+      firmName: 'Own firm',
+      name: 'New',
+      email: `new-${asker.replace(' ', '-')}@firm.example`,
+      password: PASSWORD,
+    }),
+    expected: statuses([201, 201, 201, 201, 201, 201, 201, 201]),
+  },
+  {
+    row: 'open to all: the right password signs in',
+    endpoint: 'POST /api/sign-in',
+    body: ({ people }, asker) => ({ email: people[asker].email, password: PASSWORD }),
+    expected: statuses([200, 200, 200, 200, 200, 200, 200, 401]),
+  },
+  {
+    row: 'open to all: ends one’s own session',
+    endpoint: 'POST /api/sign-out',
+    expected: statuses([204, 204, 204, 204, 204, 204, 204, 204]),
+  },
+  {
+    row: 'one’s own account',
+    endpoint: 'GET /api/account',
+    expected: statuses([200, 200, 200, 200, 200, 200, 200, 401]),
+  },
+  {
+    row: 'one’s own account',
+    endpoint: 'PATCH /api/account',
+    body: () => ({ display: 'metric' }),
+    expected: statuses([200, 200, 200, 200, 200, 200, 200, 401]),
+  },
+  {
+    row: 'computes from what is sent, stores and shows nothing',
+    endpoint: 'POST /api/report',
+    body: () => ({ document: court() }),
+    expected: statuses([200, 200, 200, 200, 200, 200, 200, 401]),
+  },
+  {
+    row: SEE_PROJECT,
+    endpoint: 'GET /api/projects',
+    expected: statuses([200, 200, 200, 200, 200, 200, 200, 401]),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'POST /api/projects',
+    body: () => ({ name: 'Another' }),
+    expected: statuses([201, 201, 403, 403, 403, 403, 201, 401]),
+  },
+  {
+    row: SEE_PROJECT,
+    endpoint: 'GET /api/projects/[id]',
+    id: ({ project }) => project,
+    expected: statuses([200, 200, 200, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'PATCH /api/projects/[id]',
+    id: ({ project }) => project,
+    body: () => ({ siteNote: 'Gate code at the door' }),
+    expected: drafting(200),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'POST /api/projects/[id]/layouts',
+    id: ({ project }) => project,
+    body: () => ({ name: 'Another' }),
+    expected: drafting(201),
+  },
+  {
+    row: SEE_PROJECT,
+    endpoint: 'GET /api/layouts/[id]',
+    id: ({ layout }) => layout,
+    expected: statuses([200, 200, 200, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: `${SEE_VERSION}: a layout with none is not seen`,
+    endpoint: 'GET /api/layouts/[id]',
+    id: ({ unshown }) => unshown,
+    expected: statuses([200, 200, 404, 404, 404, 404, 404, 401]),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'PATCH /api/layouts/[id]',
+    id: ({ layout }) => layout,
+    body: () => ({ name: 'Chequer' }),
+    expected: drafting(200),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'PATCH /api/layouts/[id]',
+    id: ({ unshown }) => unshown,
+    body: () => ({ name: 'Unshown' }),
+    expected: statuses([200, 200, 404, 404, 404, 404, 404, 401]),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'GET /api/layouts/[id]/draft',
+    id: ({ layout }) => layout,
+    expected: drafting(200),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'PUT /api/layouts/[id]/draft',
+    id: ({ layout }) => layout,
+    body: async ({ layout }) => ({
+      baseRevision: await revision(layout),
+      document: moved(court(), 7),
+    }),
+    expected: drafting(200),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'POST /api/layouts/[id]/draft/from-version',
+    id: ({ layout }) => layout,
+    body: async ({ layout, saved }) => ({
+      baseRevision: await revision(layout),
+      versionId: saved,
+    }),
+    expected: drafting(200),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'GET /api/layouts/[id]/set-aside',
+    id: ({ layout }) => layout,
+    expected: drafting(200),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'GET /api/set-aside/[id]',
+    id: ({ aside }) => aside,
+    expected: drafting(200),
+  },
+  {
+    row: SEE_VERSION,
+    endpoint: 'GET /api/layouts/[id]/versions',
+    id: ({ layout }) => layout,
+    expected: statuses([200, 200, 200, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'POST /api/layouts/[id]/versions',
+    id: ({ unshown }) => unshown,
+    body: async ({ unshown }) => ({ baseRevision: await revision(unshown), label: 'Saved' }),
+    expected: statuses([201, 201, 404, 404, 404, 404, 404, 401]),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'POST /api/layouts/[id]/versions',
+    id: ({ layout }) => layout,
+    body: async ({ layout }) => ({ baseRevision: await revision(layout), label: 'Saved' }),
+    expected: drafting(201),
+  },
+  {
+    row: `${SEE_VERSION}: one only saved`,
+    endpoint: 'GET /api/versions/[id]',
+    id: ({ saved }) => saved,
+    expected: statuses([200, 200, 404, 404, 404, 404, 404, 401]),
+  },
+  {
+    row: `${SEE_VERSION}: a shared one`,
+    endpoint: 'GET /api/versions/[id]',
+    id: ({ shared }) => shared,
+    expected: statuses([200, 200, 404, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: `${SEE_VERSION}: an issued one`,
+    endpoint: 'GET /api/versions/[id]',
+    id: ({ issued }) => issued,
+    expected: statuses([200, 200, 200, 404, 404, 404, 404, 401]),
+  },
+];
+
+/** Signing in, up and out change who asks; each of those is asked by a browser of its own. */
+const ENTERING = /sign-(in|up|out)$/;
+
+describe.each(rows)('$endpoint ($row)', ({ endpoint, id, body, expected }) => {
+  test.each(askers)('asked by %s', async (asker) => {
+    const [method, address] = endpoint.split(' ');
+    const url = address.replace('[id]', id?.(world) ?? '');
+    const sent = await body?.(world, asker);
+    const visitor = ENTERING.test(address) ? new Visitor() : world.people[asker].visitor;
+    const answer = await visitor.call(method, url, sent);
+    expect(answer.status, JSON.stringify(answer.body)).toBe(expected[asker]);
+    if (answer.status >= 400) {
+      expect(answer.headers.get('content-type')).toMatch(/^application\/problem\+json/);
+    }
+  });
+});
+
+test('every method of every endpoint has a row', () => {
+  const all = [...endpoints].flatMap(([address, module]) =>
+    Object.keys(module)
+      .filter((method) => method !== 'ALL')
+      .map((method) => `${method} ${address}`),
+  );
+  expect(all.length).toBeGreaterThan(0);
+  expect(new Set(rows.map(({ endpoint }) => endpoint))).toEqual(new Set(all));
+});
+
+test('an id that exists nowhere is answered like one that may not be seen', async () => {
+  const { visitor } = world.people.stranger;
+  for (const { endpoint, id, body } of rows.filter((row) => row.id)) {
+    const [method, address] = endpoint.split(' ');
+    const sent = await body?.(world, 'stranger');
+    const unseen = await visitor.call(method, address.replace('[id]', id?.(world) ?? ''), sent);
+    const nowhere = await visitor.call(method, address.replace('[id]', 'nowhere'), sent);
+    expect(unseen.body, endpoint).toEqual(nowhere.body);
+  }
+});
+
+const names = async (asker: Asker, url: string, list: string, name: string): Promise<string[]> =>
+  (await world.people[asker].visitor.get(url)).body[list].map(
+    (item: Record<string, string>) => item[name],
+  );
+
+test('the list of projects holds those that the person sees', async () => {
+  const ids = (asker: Asker) => names(asker, '/api/projects', 'projects', 'id');
+  expect(await ids('owner')).toContain(world.project);
+  expect(await ids('installer')).toEqual([world.project]);
+  expect(await ids('client')).toEqual([world.project]);
+  expect(await ids('installer elsewhere')).not.toContain(world.project);
+  expect(await ids('stranger')).not.toContain(world.project);
+});
+
+test('the list of versions holds those that the person sees', async () => {
+  const labels = (asker: Asker) =>
+    names(asker, `/api/layouts/${world.layout}/versions`, 'versions', 'label');
+  expect(new Set(await labels('designer'))).toEqual(new Set(['Saved', 'Shared', 'Issued']));
+  expect(await labels('installer')).toEqual(['Issued']);
+  expect(await labels('client')).toEqual(['Shared']);
+});
+
+test('a project shows installers and clients no draft and only what they may see', async () => {
+  for (const [asker, label] of [
+    ['installer', 'Issued'],
+    ['client', 'Shared'],
+  ] as const) {
+    const project = (await world.people[asker].visitor.get(`/api/projects/${world.project}`)).body;
+    expect(project.layouts).toHaveLength(1);
+    expect(project.layouts[0]).toMatchObject({
+      id: world.layout,
+      draftedAt: null,
+      draftRevision: null,
+      versions: 1,
+      latest: { label },
+      document: court(),
+    });
+  }
+});
