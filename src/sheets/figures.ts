@@ -1,0 +1,40 @@
+import type { Display } from '@/paving/length';
+import { lengthParts } from '@/paving/length';
+import { sheetText } from './text-measure';
+
+const OVER = '⁰¹²³⁴⁵⁶⁷⁸⁹';
+const UNDER = '₀₁₂₃₄₅₆₇₈₉';
+const raised = (value: number, digits: string): string =>
+  [...String(value)].map((digit) => digits[Number(digit)]).join('');
+
+/**
+ * A length as drawings figure it: millimetres without their unit (`7 200`), or feet, inches and
+ * sixteenths with the fraction set as one (`23' 7⁷⁄₁₆"`).
+ */
+export function figureText(mm: number, display: Display, decimals = 0): string {
+  const parts = lengthParts(mm, display, decimals);
+  const fraction = parts.fraction
+    ? `${raised(parts.fraction[0], OVER)}⁄${raised(parts.fraction[1], UNDER)}`
+    : '';
+  const between = /\d$/.test(parts.figures) ? '' : parts.figures === '' ? '' : ' ';
+  const unit = display === 'imperial' ? parts.unit : '';
+  return sheetText(
+    `${parts.negative ? '−' : ''}${parts.figures}${fraction ? between + fraction : ''}${unit}`,
+  );
+}
+
+/** The same with its unit, for running text: `6 mm`. */
+export function lengthText(mm: number, display: Display, decimals = 0): string {
+  const figure = figureText(mm, display, decimals);
+  return display === 'metric' ? `${figure}\u2009mm` : figure;
+}
+
+/** A count, its thousands parted: `65 721`. */
+export const countText = (count: number): string =>
+  String(count).replace(/\B(?=(\d{3})+$)/g, '\u2009');
+
+/** Least to greatest, as `11–26`, or one figure when they print alike. */
+export function rangeText(least: number, greatest: number, display: Display): string {
+  const [from, to] = [figureText(least, display), figureText(greatest, display)];
+  return from === to ? from : `${from}–${to}`;
+}

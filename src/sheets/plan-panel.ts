@@ -1,0 +1,306 @@
+import { formatArea } from '@/paving/area';
+import type { LayoutDocument } from '@/paving/layout-document';
+import { MM_PER_FOOT, MM_PER_INCH } from '@/paving/length';
+import { floorCautions } from './cautions';
+import type { DrawCommand, PaperBox } from './drawing';
+import { PENS, boxRing } from './drawing';
+import { cornerName, edgeName, keepOutName } from './edge-names';
+import { countText, figureText, lengthText, rangeText } from './figures';
+import { INK, KEEP_OUT_COLOUR, inkMix } from './inks';
+import type { KeepOutPlace } from './keep-out-place';
+import type { PanelRow } from './panel';
+import {
+  headingRow,
+  keptTogether,
+  itemRow,
+  pairRow,
+  panelText,
+  sampleRow,
+  tableRow,
+  textRows,
+} from './panel';
+import type { PlanInput } from './plan-input';
+import { setOutMark } from './plan-input';
+import { scaleBarRow } from './scale-bar';
+import { scaleName } from './scales';
+import type { StartPoint } from './start-point';
+import { LETTERING, sheetText, textFitted, textWidth } from './text-measure';
+import { aggregateColour, firstTone, toneMark } from './unit-drawing';
+
+/** What the panel says, worked out once for every arrangement. */
+export interface PlanFacts {
+  readonly input: PlanInput;
+  readonly start: StartPoint | null;
+  readonly keepOuts: readonly KeepOutPlace[];
+  readonly asCourses: boolean;
+}
+
+const BOND_NAMES: Readonly<Record<LayoutDocument['bond']['kind'], string>> = {
+  stack: 'Stack',
+  running: 'Running',
+  chequer: 'Chequer',
+  stepping: 'Stepping',
+  basket: 'Basket',
+  herringbone: 'Herringbone',
+  pinwheel: 'Pinwheel',
+  custom: 'Own pattern',
+};
+
+/** The panel's rows for a column of this width, in the order of use. */
+export function planPanelRows(facts: PlanFacts, scale: number, width: number): readonly PanelRow[] {
+  const { input } = facts;
+  const { display } = input.laying.document;
+  return [
+    markRow(setOutMark(input.state), width),
+    ...(input.state === 'superseded'
+      ? textRows('Another version is issued. Do not build from this one.', width)
+      : []),
+    ...quantityRows(input, width),
+    ...startRows(facts, width),
+    headingRow(`Key, scale ${scaleName(scale)}`, width),
+    ...keyRows(facts, width),
+    scaleBarRow(scale, display, width),
+    ...edgeRows(input, width),
+    ...keepOutRows(facts, width),
+    headingRow('Take care', width),
+    ...floorCautions(input.laying.document, input.report).map((text) => itemRow(text, width)),
+    ...noteRows(input.laying.document, width),
+  ];
+}
+
+function markRow(text: string, width: number): PanelRow {
+  const height =
+    textWidth(text, LETTERING.large, 700) <= width - 4 ? LETTERING.large : LETTERING.medium;
+  const fitted = textFitted(text, width - 4, height, 700);
+  return {
+    height: 10.5,
+    draw: ([x, y], rowWidth, frame) => [
+      {
+        kind: 'path',
+        rings: [boxRing({ left: x, top: y, right: x + rowWidth, bottom: y + 9.5 })],
+        stroke: { width: PENS.thick, colour: INK },
+      },
+      panelText([x + rowWidth / 2, y + 4.75 + height / 2], fitted, frame, {
+        height,
+        weight: 700,
+        anchor: 'middle',
+      }),
+    ],
+  };
+}
+
+function quantityRows({ laying, report }: PlanInput, width: number): readonly PanelRow[] {
+  const { document, joint } = laying;
+  const { display } = document;
+  const units = document.units.filter((unit) => (report.byUnit[unit.id] ?? 0) > 0);
+  const thickness = units.length > 0 ? Math.min(...units.map((unit) => unit.thickness)) : 0;
+  const deep = units.every((unit) => unit.thickness === thickness) && thickness > 0;
+  const pair = (name: string, value: string) => pairRow(name, sheetText(value), width);
+  return [
+    headingRow('Units and fill', width),
+    ...units.map((unit) => {
+      const size = [unit.length, unit.width, unit.thickness]
+        .map((side) => figureText(side, display, 1))
+        .join(' × ');
+      const stated = [1, MM_PER_INCH].some((per) =>
+        unit.name
+          .replace(/\s/g, '')
+          .includes(
+            `${Number((unit.length / per).toFixed(3))}×${Number((unit.width / per).toFixed(3))}`,
+          ),
+      );
+      const name = stated
+        ? `${unit.name}, ${lengthText(unit.thickness, display, 1)} thick`
+        : `${unit.name}, ${size}`;
+      return pairRow(name, countText(report.byUnit[unit.id]), width, 700);
+    }),
+    ...(units.length !== 1
+      ? [pairRow('Whole units in all', countText(report.wholeUnits), width, 700)]
+      : []),
+    ...(report.lifted > 0 ? [pair('Lifted out by hand', countText(report.lifted))] : []),
+    pair('Left out, not drawn', countText(report.leftOut)),
+    pair('Bond', BOND_NAMES[document.bond.kind]),
+    pair('Joint', lengthText(joint, display, 1)),
+    pair('Ground', formatArea(report.groundArea, display)),
+    pair('Under units', formatArea(report.coveredArea, display)),
+    pair(document.aggregate?.name ?? 'Fill', formatArea(report.fillArea, display)),
+    ...(deep
+      ? [
+          pair(
+            `The same, ${lengthText(thickness, display, 1)} deep`,
+            volumeText((report.fillArea * thickness) / 1000, display),
+          ),
+        ]
+      : []),
+    ...(report.leastGap === null || report.play === null
+      ? []
+      : [
+          pair('Least gap', lengthText(report.leastGap, display, 1)),
+          pair('Play either way', `±${lengthText(report.play, display, 1)}`),
+        ]),
+  ];
+}
+
+function volumeText(cubicMetres: number, display: 'metric' | 'imperial'): string {
+  const CUBIC_FEET = (1000 / MM_PER_FOOT) ** 3;
+  return display === 'metric'
+    ? `${cubicMetres.toFixed(2)}\u2009m³`
+    : `${(cubicMetres * CUBIC_FEET).toFixed(1)}\u2009ft³`;
+}
+
+function startRows({ input, start }: PlanFacts, width: number): readonly PanelRow[] {
+  if (!start) return [];
+  const { display } = input.laying.document;
+  const corners = input.laying.ground.rings[0].edges.length;
+  const edge = edgeName(0, 0, corners);
+  const along =
+    start.along < -0.5
+      ? `${lengthText(-start.along, display)} beyond A, in line with ${edge}`
+      : `${lengthText(start.along, display)} from A along ${start.chord ? 'the straight line ' : ''}${edge}`;
+  const square =
+    start.square < -0.5
+      ? `${lengthText(-start.square, display)} square behind it`
+      : `${lengthText(start.square, display)} square in`;
+  const angle = Math.round(Math.abs(start.turnDeg) * 100) / 100;
+  const turn =
+    angle === 0
+      ? `Rows run along ${edge}.`
+      : angle === 180
+        ? `Rows run along ${edge}, turned right round.`
+        : `Rows turn ${angle}° ${start.turnDeg > 0 ? 'anticlockwise' : 'clockwise'} from ${edge}.`;
+  return [
+    headingRow('Start', width),
+    ...keptTogether(
+      textRows(`First unit, marked S: its corner nearest A is ${along}, ${square}. ${turn}`, width),
+    ),
+  ];
+}
+
+function keyRows({ input, asCourses }: PlanFacts, width: number): readonly PanelRow[] {
+  const { laying, report } = input;
+  const { document } = laying;
+  const fine = { width: PENS.fine, colour: INK };
+  const colour = aggregateColour(laying);
+  const swatch =
+    (fill: string, extra: (box: PaperBox) => readonly DrawCommand[] = () => []) =>
+    (box: PaperBox): readonly DrawCommand[] => [
+      { kind: 'path', rings: [boxRing(box)], fill, stroke: fine },
+      ...extra(box),
+    ];
+  const units = document.units.filter((unit) => (report.byUnit[unit.id] ?? 0) > 0);
+  const twoTones = document.tones !== undefined && document.tones.rule !== 'single';
+  return [
+    ...units.map((unit) =>
+      sampleRow(
+        swatch(firstTone(unit)),
+        asCourses ? `${unit.name}, drawn as courses at this scale` : unit.name,
+        width,
+      ),
+    ),
+    ...(twoTones && !asCourses
+      ? [
+          sampleRow(
+            swatch(document.tones!.second, (box) => [
+              { kind: 'path', rings: [toneMark(boxRing(box).points)], stroke: fine },
+            ]),
+            'The same in the second tone',
+            width,
+          ),
+        ]
+      : []),
+    sampleRow(
+      swatch(colour, (box) => [
+        {
+          kind: 'path',
+          rings: [1, 2.6, 4.4, 6, 7.8].map((x, n) => ({
+            points: [
+              [box.left + x, box.top + 1 + (n % 2) * 2],
+              [box.left + x + 0.5, box.top + 1.3 + (n % 2) * 2],
+              [box.left + x, box.top + 1.6 + (n % 2) * 2],
+            ],
+            closed: true,
+          })),
+          fill: inkMix(colour, INK, 0.55),
+        },
+      ]),
+      `${document.aggregate?.name ?? 'Fill'}: joints, voids and margin`,
+      width,
+    ),
+    ...(laying.ground.rings.length > 1
+      ? [sampleRow(swatch(KEEP_OUT_COLOUR, crossed), 'Keep-out', width)]
+      : []),
+  ];
+}
+
+/** The two diagonals of a box, as keep-outs are marked. */
+function crossed(box: PaperBox): readonly DrawCommand[] {
+  const stroke = { width: PENS.fine, colour: INK };
+  return [
+    { kind: 'line', from: [box.left, box.top], to: [box.right, box.bottom], stroke },
+    { kind: 'line', from: [box.left, box.bottom], to: [box.right, box.top], stroke },
+  ];
+}
+
+function edgeRows({ laying, report }: PlanInput, width: number): readonly PanelRow[] {
+  const { display } = laying.document;
+  const rows = report.edges.flatMap((edge) => {
+    const ring = laying.ground.rings[edge.ring];
+    const name = edgeName(edge.ring, edge.edge, ring.edges.length);
+    const { bulge, start, end } = ring.edges[edge.edge];
+    const gap =
+      edge.least === null || edge.greatest === null
+        ? '–'
+        : rangeText(edge.least, edge.greatest, display);
+    const row = tableRow([name, figureText(edge.length, display), gap], width);
+    if (bulge === 0) return [row];
+    const chord = Math.hypot(end[0] - start[0], end[1] - start[1]);
+    const radius = (chord * (1 + bulge * bulge)) / (4 * Math.abs(bulge));
+    const arc = `arc of radius ${lengthText(radius, display)}, chord ${lengthText(chord, display)}`;
+    return [{ ...row, keepsNext: true }, ...textRows(arc, width)];
+  });
+  const unit = display === 'metric' ? ', in mm' : '';
+  return [
+    headingRow(`Edges${unit}`, width),
+    { ...tableRow(['Edge', 'Length', 'Gap to units'], width), keepsNext: true },
+    ...rows,
+  ];
+}
+
+function keepOutRows({ input, keepOuts }: PlanFacts, width: number): readonly PanelRow[] {
+  if (keepOuts.length === 0) return [];
+  const { ground, document } = input.laying;
+  const { display } = document;
+  const corners = ground.rings[0].edges.length;
+  return [
+    headingRow('Keep-outs', width),
+    ...keepOuts.map((place) => {
+      const size =
+        place.size === null
+          ? ''
+          : place.size.kind === 'circle'
+            ? `, radius ${figureText(place.size.radius, display)}`
+            : `, ${figureText(place.size.length, display)} × ${figureText(place.size.width, display)}`;
+      const point =
+        place.corner === null ? 'centre' : `corner ${cornerName(place.ring, place.corner)}`;
+      const measures =
+        place.offsets.length === 2
+          ? place.offsets.map(
+              ({ edge, distance }) => [distance, edgeName(0, edge, corners)] as const,
+            )
+          : place.tapes.map(({ corner, distance }) => [distance, cornerName(0, corner)] as const);
+      const offsets = measures
+        .map(([distance, from]) => `${figureText(distance, display)} from ${from}`)
+        .join(', ');
+      const name = ground.rings[place.ring].name ?? 'Keep-out';
+      const where = offsets === '' ? '' : `: ${point} ${offsets}`;
+      return itemRow(`${keepOutName(place.ring)} ${name}${size}${where}`, width);
+    }),
+  ];
+}
+
+function noteRows(document: LayoutDocument, width: number): readonly PanelRow[] {
+  const paragraphs = (document.notes ?? '').split(/\n+/).filter((text) => text.trim() !== '');
+  return paragraphs.length === 0
+    ? []
+    : [headingRow('Notes', width), ...paragraphs.flatMap((text) => textRows(text, width))];
+}

@@ -1,0 +1,311 @@
+import type { Laying } from '@/paving/laying';
+import type { DrawCommand, Drawing, PaperBox } from './drawing';
+import { PENS, boxHeight, boxInset, boxRing, boxWidth } from './drawing';
+import { INK, PAPER } from './inks';
+import { keepOutPlace } from './keep-out-place';
+import type { PanelColumn } from './panel';
+import { panelFlowed } from './panel';
+import type { Orientation, Paper, PaperName } from './paper';
+import { paperOf } from './paper';
+import { planDrawing } from './plan-drawing';
+import type { PlanInput } from './plan-input';
+import { STATE_NAMES, sheetDate } from './plan-input';
+import type { PlanFacts } from './plan-panel';
+import { planPanelRows } from './plan-panel';
+import type { GroundBounds } from './plan-view';
+import { pointsBounds, viewCentred } from './plan-view';
+import { scaleFitting, scaleName } from './scales';
+import { startPoint } from './start-point';
+import { sheetText } from './text-measure';
+import { TITLE_STRIP_HEIGHT, titleFrames, titleStrip } from './title-strip';
+
+/** One sheet of paper: a drawing, and the frames that its texts stay inside. */
+export interface Sheet extends Drawing {
+  readonly paper: Paper;
+  /** Denominator of the scale of the plan. */
+  readonly scale: number;
+  readonly frames: Readonly<Record<string, PaperBox>>;
+}
+
+/** White space round the ground for a line of dimensions and the corners' letters, mm. */
+const DIMENSION_MARGIN = 15;
+const COLUMN_WIDTH = 66;
+const COLUMN_INSET = 3;
+/** A portrait sheet's band of columns may take at most this share of the frame. */
+const GREATEST_BAND = 0.55;
+/** A smaller unit on paper than this, mm, asks for a larger sheet where one would be to a larger scale. */
+const READABLE_UNIT = 3;
+
+interface Arrangement {
+  readonly paper: Paper;
+  readonly scale: number;
+  readonly drawing: PaperBox;
+  readonly title: PaperBox;
+  readonly columns: readonly PanelColumn[];
+  /** Lines between the parts. */
+  readonly rules: readonly DrawCommand[];
+  /** The panel spills to a second sheet. */
+  readonly spills: boolean;
+}
+
+/**
+ * The plan of a version on the paper asked for, or with `auto` on the smallest of its family (A4 and A3;
+ * Letter and Tabloid for imperial) that shows units well. The first sheet has the plan; more
+ * follow when the figures of its edges and notes need them.
+ */
+export function planSheets(input: PlanInput): readonly Sheet[] {
+  const { laying } = input;
+  const facts: PlanFacts = {
+    input,
+    start: startPoint(laying),
+    keepOuts: laying.ground.rings.slice(1).map((ring) => keepOutPlace(laying.ground, ring)),
+    asCourses: false,
+  };
+  const bounds = pointsBounds(laying.ground.rings[0].edges.flatMap((edge) => edge.chords));
+  const arrangement = arrangementChosen(facts, bounds);
+  return sheetsDrawn(facts, bounds, arrangement);
+}
+
+/** The first sheet: the plan itself. */
+export const planSheet = (input: PlanInput): Sheet => planSheets(input)[0];
+
+function arrangementChosen(facts: PlanFacts, bounds: GroundBounds): Arrangement {
+  const { paper } = facts.input;
+  const family: readonly PaperName[] =
+    facts.input.laying.document.display === 'metric' ? ['A4', 'A3'] : ['Letter', 'Tabloid'];
+  const best = (name: PaperName) => bestArrangement(facts, bounds, name);
+  if (paper !== 'auto') return best(paper);
+  const [small, large] = family.map(best);
+  const readable = leastUnitSide(facts.input.laying) / small.scale >= READABLE_UNIT;
+  const enough = !small.spills && (readable || large.scale >= small.scale);
+  return enough ? small : large;
+}
+
+const leastUnitSide = (laying: Laying): number =>
+  Math.min(...laying.motif.map(({ unit }) => Math.min(unit.length, unit.width)));
+
+/** Of a paper's arrangements: none that spills where another does not; then the largest scale; then the roomiest. */
+function bestArrangement(facts: PlanFacts, bounds: GroundBounds, name: PaperName): Arrangement {
+  const orientations: readonly Orientation[] = ['landscape', 'portrait'];
+  const candidates = orientations.flatMap((orientation) => {
+    const paper = paperOf(name, orientation);
+    return orientation === 'portrait'
+      ? [portraitArrangement(facts, bounds, paper)]
+      : [1, 2].flatMap((columns) => landscapeArrangement(facts, bounds, paper, columns));
+  });
+  const room = ({ drawing }: Arrangement) => {
+    const size = boundsSize(bounds);
+    return Math.min(boxWidth(drawing) / size[0], boxHeight(drawing) / size[1]);
+  };
+  return [...candidates].sort(
+    (p, q) => Number(p.spills) - Number(q.spills) || p.scale - q.scale || room(q) - room(p),
+  )[0];
+}
+
+const boundsSize = ({ least, greatest }: GroundBounds): readonly [number, number] => [
+  greatest[0] - least[0],
+  greatest[1] - least[1],
+];
+
+function scaleIn(bounds: GroundBounds, box: PaperBox): number {
+  const [width, height] = boundsSize(bounds);
+  return scaleFitting(
+    width,
+    height,
+    boxWidth(box) - 2 * DIMENSION_MARGIN,
+    boxHeight(box) - 2 * DIMENSION_MARGIN,
+  );
+}
+
+const rule = (from: readonly [number, number], to: readonly [number, number]): DrawCommand => ({
+  kind: 'line',
+  from,
+  to,
+  stroke: { width: PENS.medium, colour: INK },
+});
+
+/** Columns of figures at the right, the title strip under the drawing. */
+function landscapeArrangement(
+  facts: PlanFacts,
+  bounds: GroundBounds,
+  paper: Paper,
+  count: number,
+): readonly Arrangement[] {
+  const { frame } = paper;
+  const split = frame.right - count * COLUMN_WIDTH;
+  if (split - frame.left < 180) return [];
+  const titleTop = frame.bottom - TITLE_STRIP_HEIGHT;
+  const drawing = { left: frame.left, top: frame.top, right: split, bottom: titleTop };
+  const columns = Array.from({ length: count }, (_, n): PanelColumn => ({
+    frame: `column ${n + 1}`,
+    box: boxInset(
+      {
+        left: split + n * COLUMN_WIDTH,
+        top: frame.top,
+        right: split + (n + 1) * COLUMN_WIDTH,
+        bottom: frame.bottom,
+      },
+      COLUMN_INSET,
+    ),
+  }));
+  const scale = scaleIn(bounds, drawing);
+  const rows = planPanelRows(facts, scale, COLUMN_WIDTH - 2 * COLUMN_INSET);
+  return [
+    {
+      paper,
+      scale,
+      drawing,
+      title: { left: frame.left, top: titleTop, right: split, bottom: frame.bottom },
+      columns,
+      rules: [
+        rule([split, frame.top], [split, frame.bottom]),
+        rule([frame.left, titleTop], [split, titleTop]),
+      ],
+      spills: panelFlowed(rows, columns).rest.length > 0,
+    },
+  ];
+}
+
+/** A band of columns over a title strip across the foot. */
+function portraitArrangement(facts: PlanFacts, bounds: GroundBounds, paper: Paper): Arrangement {
+  const { frame } = paper;
+  const count = Math.floor(boxWidth(frame) / 58);
+  const width = boxWidth(frame) / count;
+  const titleTop = frame.bottom - TITLE_STRIP_HEIGHT;
+  const columnsFrom = (top: number) =>
+    Array.from({ length: count }, (_, n): PanelColumn => ({
+      frame: `column ${n + 1}`,
+      box: boxInset(
+        {
+          left: frame.left + n * width,
+          top,
+          right: frame.left + (n + 1) * width,
+          bottom: titleTop,
+        },
+        COLUMN_INSET,
+      ),
+    }));
+  const rowsAt = (scale: number) => planPanelRows(facts, scale, width - 2 * COLUMN_INSET);
+  // The rows are as high at one scale as at another.
+  const rows = rowsAt(100);
+  const greatest = boxHeight(frame) * GREATEST_BAND;
+  let band = 40;
+  while (band < greatest && panelFlowed(rows, columnsFrom(titleTop - band)).rest.length > 0)
+    band += 2;
+  const columns = columnsFrom(titleTop - band);
+  const drawing = { ...frame, bottom: titleTop - band };
+  return {
+    paper,
+    scale: scaleIn(bounds, drawing),
+    drawing,
+    title: { ...frame, top: titleTop },
+    columns,
+    rules: [
+      rule([frame.left, titleTop - band], [frame.right, titleTop - band]),
+      rule([frame.left, titleTop], [frame.right, titleTop]),
+    ],
+    spills: panelFlowed(rows, columns).rest.length > 0,
+  };
+}
+
+function sheetsDrawn(
+  facts: PlanFacts,
+  bounds: GroundBounds,
+  arrangement: Arrangement,
+): readonly Sheet[] {
+  const { paper, scale, drawing, columns } = arrangement;
+  const inside = boxInset(drawing, 1.5);
+  const plan = planDrawing(facts, viewCentred(bounds, scale, drawing), inside);
+  const columnWidth = boxWidth(columns[0].box);
+  const rows = planPanelRows({ ...facts, asCourses: plan.asCourses }, scale, columnWidth);
+  const panels = [panelFlowed(rows, columns)];
+  const further = furtherColumns(paper, columnWidth);
+  while (panels[panels.length - 1].rest.length > 0) {
+    const next = panelFlowed(panels[panels.length - 1].rest, further);
+    if (next.rest.length === panels[panels.length - 1].rest.length)
+      throw new Error('A row of the panel is higher than a whole sheet.');
+    panels.push(next);
+  }
+  return panels.map((panel, n): Sheet => {
+    const title =
+      n === 0
+        ? arrangement.title
+        : { ...paper.frame, top: paper.frame.bottom - TITLE_STRIP_HEIGHT };
+    const fields = titleFields(facts.input, paper, scale, n + 1, panels.length);
+    const used = n === 0 ? columns : further;
+    return {
+      width: paper.width,
+      height: paper.height,
+      paper,
+      scale,
+      frames: {
+        drawing: inside,
+        ...Object.fromEntries(used.map(({ frame, box }) => [frame, box])),
+        ...titleFrames(fields, title),
+      },
+      layers: [
+        { name: 'paper', commands: [paperSheet(paper)] },
+        ...(n === 0 ? plan.layers : []),
+        { name: 'panel', commands: panel.commands },
+        {
+          name: 'title',
+          commands: [
+            ...titleStrip(fields, title),
+            ...(n === 0
+              ? arrangement.rules
+              : [rule([title.left, title.top], [title.right, title.top])]),
+            {
+              kind: 'path',
+              rings: [boxRing(paper.frame)],
+              stroke: { width: PENS.thick, colour: INK },
+            },
+          ],
+        },
+      ],
+    };
+  });
+}
+
+const paperSheet = (paper: Paper): DrawCommand => ({
+  kind: 'path',
+  rings: [boxRing({ left: 0, top: 0, right: paper.width, bottom: paper.height })],
+  fill: PAPER,
+});
+
+/** Columns over the whole of a further sheet. */
+function furtherColumns({ frame }: Paper, columnWidth: number): readonly PanelColumn[] {
+  const count = Math.floor(boxWidth(frame) / (columnWidth + 2 * COLUMN_INSET));
+  const pitch = boxWidth(frame) / count;
+  return Array.from({ length: count }, (_, n) => {
+    const left = frame.left + n * pitch + COLUMN_INSET;
+    return {
+      frame: `column ${n + 1}`,
+      box: {
+        left,
+        top: frame.top + COLUMN_INSET,
+        right: left + columnWidth,
+        bottom: frame.bottom - TITLE_STRIP_HEIGHT - COLUMN_INSET,
+      },
+    };
+  });
+}
+
+function titleFields(input: PlanInput, paper: Paper, scale: number, sheet: number, of: number) {
+  const text = {
+    owner: input.firm,
+    title: input.project,
+    supplement: input.label === '' ? input.layout : `${input.layout}: ${input.label}`,
+    documentType: 'Floor plan',
+    documentNumber: input.documentNumber,
+    version: String(input.version),
+    date: sheetDate(input.date),
+    state: STATE_NAMES[input.state],
+    scale: `${scaleName(scale)} on ${paper.name}`,
+    creator: input.creator,
+    fingerprint: input.fingerprint.slice(0, 10),
+    sheet: `${sheet}/${of}`,
+  };
+  return Object.fromEntries(
+    Object.entries(text).map(([name, value]) => [name, sheetText(value)]),
+  ) as unknown as typeof text;
+}

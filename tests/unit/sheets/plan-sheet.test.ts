@@ -1,0 +1,201 @@
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import { layFloor } from '@/paving/laying';
+import type { LayoutDocument } from '@/paving/layout-document';
+import { COURT_CHEQUER, COURT_SQUARE, ROUND_TERRACE, SIDE_YARD } from '@/server/demo-layouts';
+import { PENS, drawingCommands } from '@/sheets/drawing';
+import { isInside } from '@/sheets/label-space';
+import { PAPER_NAMES } from '@/sheets/paper';
+import { planSheets } from '@/sheets/plan-sheet';
+import { PREFERRED_SCALES } from '@/sheets/scales';
+import { sheetText, textCorners } from '@/sheets/text-measure';
+import {
+  BAY,
+  COURT,
+  PATH,
+  STAIRS,
+  STAR,
+  TERRACE,
+  floor,
+  planInput,
+  randomFloor,
+  rectangle,
+} from './sample-floors';
+import { letteringFaults, outlinesOverlap, sheetTexts } from './sheet-invariants';
+
+const NAMED: Record<string, LayoutDocument> = {
+  'the court': COURT,
+  'the terrace': TERRACE,
+  'the bay': BAY,
+  'a path of 30 m by 1 m': PATH,
+  'a star of 40 corners': STAR,
+  stairs: STAIRS,
+  'demo: chequer': COURT_CHEQUER,
+  'demo: square': COURT_SQUARE,
+  'demo: terrace': ROUND_TERRACE,
+  'demo: yard': SIDE_YARD,
+  'a hand’s breadth of ground': floor(rectangle(0, 0, 100, 100)),
+  'a hundred corners': floor(
+    Array.from({ length: 100 }, (_, n) => [
+      Math.round(5000 * Math.cos((2 * Math.PI * n) / 100)),
+      Math.round(5000 * Math.sin((2 * Math.PI * n) / 100)),
+    ]),
+  ),
+  'names of every length': {
+    ...COURT,
+    notes: 'A long note that goes on. '.repeat(120),
+    aggregate: {
+      name: 'Limestone chippings from the quarry over the hill, washed twice',
+      colour: '#d9c7a0',
+    },
+  },
+};
+
+const outlineText = (text: { text: string }) => text.text;
+
+describe('a plan sheet', () => {
+  for (const [name, document] of Object.entries(NAMED))
+    for (const paper of ['auto', ...PAPER_NAMES] as const)
+      it(`letters ${name} on ${paper} without a text over another or out of its frame`, () => {
+        for (const sheet of planSheets(planInput(document, { paper })))
+          expect(letteringFaults(sheet)).toEqual([]);
+      });
+
+  it('letters any floor without a text over another or out of its frame', () => {
+    fc.assert(
+      fc.property(randomFloor, fc.constantFrom('auto', ...PAPER_NAMES), (document, paper) => {
+        for (const sheet of planSheets(planInput(document, { paper })))
+          expect(letteringFaults(sheet)).toEqual([]);
+      }),
+      { numRuns: 40, seed: 20261014 },
+    );
+  });
+
+  it('takes long names, other scripts and signs that the font lacks', () => {
+    const input = planInput(COURT, {
+      firm: 'Wolfeschlegelsteinhausenbergerdorff und Söhne Pflasterbau Gesellschaft',
+      project:
+        'Двор 庭 → the courtyard behind the old dairy by the mill race at the very end of the lane',
+      label: 'W'.repeat(80),
+      creator: 'Łucja Őry\nand others',
+    });
+    const [sheet] = planSheets(input);
+    expect(letteringFaults(sheet)).toEqual([]);
+    expect(
+      sheetTexts(sheet)
+        .map(outlineText)
+        .filter((text) => sheetText(text) !== text),
+    ).toEqual([]);
+    expect(sheetTexts(sheet).map(outlineText).join(' ')).toContain('Двор ? > the courtyard');
+  });
+
+  it('draws to a recommended scale of ISO 5455 and keeps the ground inside the drawing', () => {
+    fc.assert(
+      fc.property(randomFloor, (document) => {
+        const [sheet] = planSheets(planInput(document));
+        expect(PREFERRED_SCALES).toContain(sheet.scale);
+        const ground = sheet.layers.find(({ name }) => name === 'ground')!.commands;
+        const { drawing } = sheet.frames;
+        for (const command of ground)
+          if (command.kind === 'path')
+            for (const [x, y] of command.rings[0].points) {
+              expect(x).toBeGreaterThan(drawing.left);
+              expect(x).toBeLessThan(drawing.right);
+              expect(y).toBeGreaterThan(drawing.top);
+              expect(y).toBeLessThan(drawing.bottom);
+            }
+      }),
+      { numRuns: 20, seed: 7 },
+    );
+  });
+
+  it('figures each edge of the court once outside it, and both distances of its tree pit', () => {
+    const [sheet] = planSheets(planInput(COURT));
+    const figures = sheet.layers.find(({ name }) => name === 'figures')!.commands;
+    const texts = figures.flatMap((command) => (command.kind === 'text' ? [command.text] : []));
+    const spaced = (text: string) => text.replace('\u2009', ' ');
+    expect(texts.map(spaced)).toEqual(
+      expect.arrayContaining([
+        '7 200',
+        '3 100',
+        '2 900',
+        '2 300',
+        '4 300',
+        '5 400',
+        '1 500',
+        '800',
+      ]),
+    );
+    expect(texts).toEqual(expect.arrayContaining(['A', 'B', 'C', 'D', 'E', 'F', 'S']));
+  });
+
+  it('keeps dimension lines clear of figures and outside the ground', () => {
+    for (const document of [COURT, STAIRS, STAR, PATH]) {
+      const plain = { ...document, ground: { ...document.ground, keepOuts: [] } };
+      const [sheet] = planSheets(planInput(plain));
+      const layer = (wanted: string) => sheet.layers.find(({ name }) => name === wanted)!.commands;
+      const perimeter = layer('ground').at(-1)!;
+      if (perimeter.kind !== 'path') throw new Error('The perimeter is a path.');
+      const fine = layer('figures').flatMap((command) =>
+        command.kind === 'line' && command.stroke.width === PENS.fine ? [command] : [],
+      );
+      const texts = layer('figures').flatMap((command) =>
+        command.kind === 'text' && command.text !== 'S' ? [textCorners(command)] : [],
+      );
+      expect(texts.length).toBeGreaterThan(7);
+      for (const { from, to } of fine) {
+        const crossed = texts.filter((corners) => outlinesOverlap(corners, [from, to]));
+        expect(crossed).toEqual([]);
+        const middle = [(from[0] + to[0]) / 2, (from[1] + to[1]) / 2] as const;
+        if (document !== PATH) expect(isInside(middle, perimeter.rings[0].points)).toBe(false);
+      }
+    }
+  });
+
+  it('says whether it may be built from', () => {
+    const head = (state: 'shared' | 'issued' | 'superseded') =>
+      sheetTexts(planSheets(planInput(COURT, { state }))[0]).map(outlineText);
+    expect(head('shared')).toContain('Not for set-out');
+    expect(head('issued')).toContain('Issued for set-out');
+    expect(head('issued')).not.toContain('Not for set-out');
+    expect(head('superseded').join(' ')).toContain('Do not build');
+  });
+
+  it('draws every laid unit once, and the left-out ones not at all', () => {
+    const laying = layFloor(COURT);
+    const [sheet] = planSheets(planInput(COURT));
+    const units = sheet.layers.find(({ name }) => name === 'units')!.commands;
+    const rings = units.flatMap((command) =>
+      command.kind === 'path' && command.fill ? command.rings : [],
+    );
+    expect(rings).toHaveLength(laying.laid.count);
+    expect(outlinesOverlap(rings[0].points, rings[1].points)).toBe(false);
+  });
+
+  it('continues on a second sheet what the first has no room for, and numbers both', () => {
+    const sheets = planSheets(planInput(NAMED['names of every length'], { paper: 'A4' }));
+    expect(sheets.length).toBeGreaterThan(1);
+    sheets.forEach((sheet, n) => {
+      expect(sheetTexts(sheet).map(outlineText)).toContain(`${n + 1}/${sheets.length}`);
+    });
+    const notes = sheets.flatMap(sheetTexts).filter(({ text }) => text.includes('long note'));
+    expect(notes.length).toBeGreaterThan(20);
+  });
+
+  it('takes the paper asked for, and by itself the smaller of the family that the display system uses', () => {
+    for (const paper of PAPER_NAMES)
+      expect(planSheets(planInput(COURT, { paper }))[0].paper.name).toBe(paper);
+    expect(planSheets(planInput(COURT))[0].paper.name).toBe('A4');
+    expect(planSheets(planInput(BAY))[0].paper.name).toBe('Letter');
+  });
+
+  it('holds only colours and sizes that every sink takes', () => {
+    for (const command of drawingCommands(planSheets(planInput(TERRACE))[0])) {
+      const colours =
+        command.kind === 'text'
+          ? [command.colour]
+          : [command.kind === 'line' ? undefined : command.fill, command.stroke?.colour];
+      for (const colour of colours) if (colour) expect(colour).toMatch(/^#[0-9a-f]{6}$/);
+    }
+  });
+});
