@@ -11,17 +11,21 @@ export function envelopePieces(): EnvelopePieces {
   return { s0: [], t0: [], s1: [], t1: [], owner: [] };
 }
 
+/** Pieces that part by no more than this over a stretch, mm, are level there: rounding does not choose. */
+const LEVEL_MM = 1e-6;
+
 /**
  * The lowest of the pieces along the line, exactly: the sweep stops wherever a piece begins,
  * ends, or crosses the one that was lowest. Calls `emit` with each stretch, in order along the
- * line; stretches where nothing stands are passed over. Where two are level, the one that goes
- * on lower has the stretch.
+ * line; stretches where nothing stands are passed over. Of pieces that are level over a stretch
+ * the one whose owner comes first, by `precedes`, has it, however the line is turned.
  */
 export function lowerEnvelope(
   pieces: EnvelopePieces,
+  precedes: (owner: number, other: number) => boolean,
   emit: (piece: number, from: number, to: number) => void,
 ): void {
-  const { s0, t0, s1, t1 } = pieces;
+  const { s0, t0, s1, t1, owner } = pieces;
   const total = s0.length;
   if (total === 0) return;
   const byStart = Array.from({ length: total }, (_, n) => n).sort((m, n) => s0[m] - s0[n]);
@@ -29,6 +33,9 @@ export function lowerEnvelope(
   const slope = (n: number) => (t1[n] - t0[n]) / (s1[n] - s0[n]);
   const height = (n: number, s: number) =>
     s === s1[n] ? t1[n] : t0[n] + ((s - s0[n]) / (s1[n] - s0[n])) * (t1[n] - t0[n]);
+  const levelOver = (m: number, n: number, from: number, to: number) =>
+    Math.abs(height(m, from) - height(n, from)) <= LEVEL_MM &&
+    Math.abs(height(m, to) - height(n, to)) <= LEVEL_MM;
   let active: number[] = [];
   let next = 0;
   for (let stop = 0; stop + 1 < stops.length; stop++) {
@@ -42,7 +49,10 @@ export function lowerEnvelope(
     let level = height(lowest, from);
     for (const n of active) {
       const at = height(n, from);
-      if (at < level || (at === level && slope(n) < slope(lowest))) {
+      const before = levelOver(n, lowest, from, to)
+        ? precedes(owner[n], owner[lowest])
+        : at < level - LEVEL_MM || (at < level + LEVEL_MM && slope(n) < slope(lowest));
+      if (before) {
         lowest = n;
         level = at;
       }
@@ -54,7 +64,7 @@ export function lowerEnvelope(
       const fall = slope(lowest);
       for (const n of active) {
         const other = slope(n);
-        if (!(other < fall)) continue;
+        if (!(other < fall) || levelOver(n, lowest, at, to)) continue;
         const cross = at + (height(n, at) - height(lowest, at)) / (fall - other);
         if (cross < until || (cross === until && after >= 0 && other < slope(after))) {
           until = Math.max(cross, at);

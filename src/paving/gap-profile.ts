@@ -269,6 +269,8 @@ function edgeProfile(laying: Laying, edge: GroundEdge, reach: number): EdgeProfi
     highS: 0,
     highT: 0,
   };
+  const precedes = (one: number, other: number) =>
+    (laid.k[one] - laid.k[other] || laid.j[one] - laid.j[other] || laid.i[one] - laid.i[other]) < 0;
   let shift = 0;
   for (let m = 0; m + 1 < edge.chords.length; m++) {
     const start = edge.chords[m];
@@ -322,7 +324,7 @@ function edgeProfile(laying: Laying, edge: GroundEdge, reach: number): EdgeProfi
         line: sideLine(side, openFrom, openTo, shift),
       });
     };
-    lowerEnvelope(pieces, (piece, from, to) => {
+    lowerEnvelope(pieces, precedes, (piece, from, to) => {
       const unit = pieces.owner[piece];
       const known = faced.get(unit);
       if (known) known.stretch += to - from;
