@@ -4,7 +4,7 @@ import { guardForwardedFor } from '@/server/client-address';
 import { database } from '@/server/database';
 import { environment } from '@/server/environment';
 import { logError } from '@/server/log';
-import { OPEN_ENDPOINTS, OPEN_PAGES } from '@/server/next-page';
+import { OPEN_ENDPOINTS, isOpenPage } from '@/server/next-page';
 import { problemResponse } from '@/server/problem-response';
 import { cameOverTls, isFromThisSite } from '@/server/request-origin';
 import { addSecurityHeaders } from '@/server/security-headers';
@@ -36,7 +36,7 @@ const guarded = async (context: APIContext, next: MiddlewareNext): Promise<Respo
       if (isApi && !OPEN_ENDPOINTS.has(path)) {
         return problemResponse('signed-out', 'Sign in to go on.');
       }
-      if (!isApi && !OPEN_PAGES.has(path)) {
+      if (!isApi && !isOpenPage(path)) {
         const asked = `${context.url.pathname}${context.url.search}`;
         return context.redirect(`/sign-in?next=${encodeURIComponent(asked)}`, 303);
       }

@@ -7,8 +7,11 @@ export const nextPage = (asked: string | null | undefined, otherwise = '/project
   return url.origin === here.origin && !path.startsWith('//') ? path : otherwise;
 };
 
+const OPEN_PAGES: ReadonlySet<string> = new Set(['/', '/sign-in', '/sign-up', '/404', '/500']);
+
 /** Pages that anybody may open. Every other page sends those who are not signed in to `/sign-in`. */
-export const OPEN_PAGES: ReadonlySet<string> = new Set(['/sign-in', '/sign-up', '/404', '/500']);
+export const isOpenPage = (path: string): boolean =>
+  OPEN_PAGES.has(path) || path === '/guide' || path.startsWith('/guide/');
 
 /** Endpoints that answer without a session. */
 export const OPEN_ENDPOINTS: ReadonlySet<string> = new Set([

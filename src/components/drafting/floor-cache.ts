@@ -1,0 +1,97 @@
+import type { LayoutDocument } from '@/paving/layout-document';
+import type { Laying } from '@/paving/laying';
+import type { DrawingColours } from '../ui/drawing-colours';
+import type { Camera, ScreenSize } from './camera';
+import { paintFloor } from './floor-picture';
+
+/** How much more than the window is painted, on each side, so that a pan has something to show. */
+const MARGIN = 0.5;
+/** From this many units on, a zoom shows the picture stretched until the hand rests. */
+const HEAVY_UNITS = 3000;
+/** How long the hand rests before a stretched picture is painted sharp, ms. */
+const REST_MS = 120;
+
+/**
+ * A picture of the floor larger than the window, kept from frame to frame: panning copies it, and it
+ * is painted anew only when the floor, the zoom or the theme changes or the pan runs past its border.
+ */
+export interface FloorCache {
+  /** Paints the floor as `camera` sees it. Calls `again` later if a sharper picture will be due. */
+  paint(
+    ctx: CanvasRenderingContext2D,
+    document: LayoutDocument,
+    laying: Laying | null,
+    camera: Camera,
+    size: ScreenSize,
+    colours: DrawingColours,
+    pixelRatio: number,
+  ): void;
+  dispose(): void;
+}
+
+export function createFloorCache(again: () => void): FloorCache {
+  let picture: HTMLCanvasElement | null = null;
+  let painted: {
+    document: LayoutDocument;
+    laying: Laying | null;
+    camera: Camera;
+    size: ScreenSize;
+    colours: DrawingColours;
+    pixelRatio: number;
+  } | null = null;
+  let rest: ReturnType<typeof setTimeout> | undefined;
+  let sharpDue = false;
+
+  const repaint = (now: NonNullable<typeof painted>) => {
+    picture ??= window.document.createElement('canvas');
+    const width = Math.ceil(now.size.width * (1 + 2 * MARGIN));
+    const height = Math.ceil(now.size.height * (1 + 2 * MARGIN));
+    picture.width = width * now.pixelRatio;
+    picture.height = height * now.pixelRatio;
+    const ctx = picture.getContext('2d')!;
+    ctx.scale(now.pixelRatio, now.pixelRatio);
+    paintFloor(ctx, now.document, now.laying, now.camera, { width, height }, now.colours);
+    painted = now;
+    sharpDue = false;
+  };
+
+  return {
+    paint(ctx, document, laying, camera, size, colours, pixelRatio) {
+      const now = { document, laying, camera, size, colours, pixelRatio };
+      const same =
+        painted !== null &&
+        painted.document === document &&
+        painted.laying === laying &&
+        painted.colours === colours &&
+        painted.pixelRatio === pixelRatio &&
+        painted.size.width === size.width &&
+        painted.size.height === size.height;
+      const stretch = same ? camera.scale / painted!.camera.scale : 1;
+      const heavy = (laying?.laid.count ?? 0) > HEAVY_UNITS;
+      const shiftX = same ? (painted!.camera.centre[0] - camera.centre[0]) * camera.scale : 0;
+      const shiftY = same ? (camera.centre[1] - painted!.camera.centre[1]) * camera.scale : 0;
+      const inside =
+        Math.abs(shiftX) <= size.width * MARGIN && Math.abs(shiftY) <= size.height * MARGIN;
+      if (!same || (stretch === 1 ? !inside : !heavy || sharpDue)) repaint(now);
+      else if (stretch !== 1) {
+        clearTimeout(rest);
+        rest = setTimeout(() => {
+          sharpDue = true;
+          again();
+        }, REST_MS);
+      }
+      if (!picture || !painted) return;
+      const ratio = camera.scale / painted.camera.scale;
+      const width = (picture.width / painted.pixelRatio) * ratio;
+      const height = (picture.height / painted.pixelRatio) * ratio;
+      const x = size.width / 2 + (painted.camera.centre[0] - camera.centre[0]) * camera.scale;
+      const y = size.height / 2 + (camera.centre[1] - painted.camera.centre[1]) * camera.scale;
+      ctx.drawImage(picture, x - width / 2, y - height / 2, width, height);
+    },
+    dispose() {
+      clearTimeout(rest);
+      picture = null;
+      painted = null;
+    },
+  };
+}

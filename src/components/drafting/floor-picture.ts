@@ -1,0 +1,214 @@
+import type { LayoutDocument } from '@/paving/layout-document';
+import { documentRing, documentRingCount } from '@/paving/ground-edits';
+import type { Laying, UnitSet } from '@/paving/laying';
+import { unitTone } from '@/paving/tones';
+import {
+  colourShaded,
+  PLAIN_AGGREGATE,
+  PLAIN_UNIT,
+  type DrawingColours,
+} from '../ui/drawing-colours';
+import { screenFromGround, type Camera, type ScreenSize } from './camera';
+import { ringOutline } from './ring-outline';
+
+/** Laid units of one colour: their places in `laying.laid`. */
+interface ColourBatch {
+  readonly colour: string;
+  readonly indices: Uint32Array;
+}
+
+/** Slight differences between units of one tone, as a delivered pallet has them. */
+const SHADES = [0, -0.035, 0.22] as const;
+
+/** Below this many pixels across, a unit has no outline of its own. */
+const OUTLINE_FROM_PX = 5;
+
+const batches = new WeakMap<Laying, readonly ColourBatch[]>();
+
+const shadeOf = (i: number, j: number, k: number): number =>
+  ((Math.imul(i, 73856093) ^ Math.imul(j, 19349663) ^ Math.imul(k + 1, 83492791)) >>> 4) % SHADES.length;
+
+function colourBatches(laying: Laying): readonly ColourBatch[] {
+  const known = batches.get(laying);
+  if (known) return known;
+  const { document, laid, motif } = laying;
+  const grouped = new Map<string, number[]>();
+  for (let n = 0; n < laid.count; n++) {
+    const [i, j, k] = [laid.i[n], laid.j[n], laid.k[n]];
+    const second = document.tones ? unitTone(document, i, j, k) === 1 : false;
+    const base = second ? document.tones!.second : (motif[k].unit.colour ?? PLAIN_UNIT);
+    const key = base + shadeOf(i, j, k);
+    const group = grouped.get(key);
+    if (group) group.push(n);
+    else grouped.set(key, [n]);
+  }
+  const made = [...grouped].map(([key, indices]) => ({
+    colour: colourShaded(key.slice(0, 7), SHADES[Number(key.slice(7))]),
+    indices: Uint32Array.from(indices),
+  }));
+  batches.set(laying, made);
+  return made;
+}
+
+function traceRings(ctx: CanvasRenderingContext2D, document: LayoutDocument, camera: Camera, size: ScreenSize) {
+  ctx.beginPath();
+  for (let ring = 0; ring < documentRingCount(document); ring++) {
+    ringOutline(documentRing(document, ring)).forEach((point, n) => {
+      const [x, y] = screenFromGround(camera, size, point);
+      if (n === 0) ctx.moveTo(x, y);
+      else ctx.lineTo(x, y);
+    });
+    ctx.closePath();
+  }
+}
+
+/** Adds the outlines of units to the path in hand, those outside the window left out. */
+function traceUnits(
+  ctx: CanvasRenderingContext2D,
+  laying: Laying,
+  set: UnitSet,
+  indices: Uint32Array | null,
+  camera: Camera,
+  size: ScreenSize,
+) {
+  const { scale, centre } = camera;
+  const halves = laying.motif.map((entry) => ({
+    ax: entry.halfLength[0] * scale,
+    ay: -entry.halfLength[1] * scale,
+    bx: entry.halfWidth[0] * scale,
+    by: -entry.halfWidth[1] * scale,
+    reach: (Math.hypot(...entry.halfLength) + Math.hypot(...entry.halfWidth)) * scale,
+  }));
+  const count = indices ? indices.length : set.count;
+  for (let m = 0; m < count; m++) {
+    const n = indices ? indices[m] : m;
+    const half = halves[set.k[n]];
+    const x = size.width / 2 + (set.x[n] - centre[0]) * scale;
+    const y = size.height / 2 - (set.y[n] - centre[1]) * scale;
+    if (x + half.reach < 0 || x - half.reach > size.width) continue;
+    if (y + half.reach < 0 || y - half.reach > size.height) continue;
+    ctx.moveTo(x + half.ax + half.bx, y + half.ay + half.by);
+    ctx.lineTo(x - half.ax + half.bx, y - half.ay + half.by);
+    ctx.lineTo(x - half.ax - half.bx, y - half.ay - half.by);
+    ctx.lineTo(x + half.ax - half.bx, y + half.ay - half.by);
+    ctx.closePath();
+  }
+}
+
+const GRAIN_TILE = 192;
+const grains = new Map<string, HTMLCanvasElement>();
+
+/** A tile of quiet grain in the aggregate's colour: the same specks each time. */
+function grainTile(colour: string): HTMLCanvasElement {
+  const known = grains.get(colour);
+  if (known) return known;
+  const tile = document.createElement('canvas');
+  tile.width = tile.height = GRAIN_TILE;
+  const ctx = tile.getContext('2d')!;
+  ctx.fillStyle = colour;
+  ctx.fillRect(0, 0, GRAIN_TILE, GRAIN_TILE);
+  let state = 12345;
+  const next = () => (state = (Math.imul(state, 1664525) + 1013904223) >>> 0) / 2 ** 32;
+  for (let n = 0; n < 210; n++) {
+    const [x, y, radius, kind] = [next() * GRAIN_TILE, next() * GRAIN_TILE, 0.5 + next() * 1.1, next()];
+    ctx.fillStyle = colourShaded(colour, kind < 0.5 ? -0.22 : kind < 0.8 ? 0.35 : -0.38);
+    for (const dx of [0, -GRAIN_TILE, GRAIN_TILE])
+      for (const dy of [0, -GRAIN_TILE, GRAIN_TILE]) {
+        ctx.beginPath();
+        ctx.arc(x + dx, y + dy, radius, 0, 2 * Math.PI);
+        ctx.fill();
+      }
+  }
+  grains.set(colour, tile);
+  return tile;
+}
+
+/** Grain that stays on the ground while panning; its size steps by powers of two with the zoom. */
+function grainPattern(ctx: CanvasRenderingContext2D, colour: string, camera: Camera, size: ScreenSize) {
+  const pattern = ctx.createPattern(grainTile(colour), 'repeat');
+  if (!pattern) return colour;
+  const base = 0.12;
+  const size2 = camera.scale / base / 2 ** Math.round(Math.log2(camera.scale / base));
+  const [ox, oy] = screenFromGround(camera, size, [0, 0]);
+  const period = GRAIN_TILE * size2;
+  pattern.setTransform(new DOMMatrix([size2, 0, 0, size2, ox % period, oy % period]));
+  return pattern;
+}
+
+/**
+ * Paints ground, aggregate and units, from flat arrays, into a window of `size` CSS pixels. Laid units
+ * are filled; left-out ones are a dashed ghost; lifted ones a dashed outline crossed through.
+ */
+export function paintFloor(
+  ctx: CanvasRenderingContext2D,
+  document: LayoutDocument,
+  laying: Laying | null,
+  camera: Camera,
+  size: ScreenSize,
+  colours: DrawingColours,
+) {
+  const aggregate = document.aggregate?.colour ?? PLAIN_AGGREGATE;
+  ctx.save();
+  traceRings(ctx, document, camera, size);
+  ctx.fillStyle = grainPattern(ctx, aggregate, camera, size);
+  ctx.fill('evenodd');
+  if (!laying) {
+    ctx.restore();
+    return;
+  }
+
+  const dark = colourShaded(aggregate, -0.45);
+  const across = Math.min(
+    ...laying.motif.map((entry) => 2 * Math.min(Math.hypot(...entry.halfLength), Math.hypot(...entry.halfWidth))),
+  );
+  const outlined = across * camera.scale >= OUTLINE_FROM_PX;
+
+  for (const batch of colourBatches(laying)) {
+    ctx.beginPath();
+    traceUnits(ctx, laying, laying.laid, batch.indices, camera, size);
+    ctx.fillStyle = batch.colour;
+    ctx.fill();
+    if (outlined) {
+      ctx.strokeStyle = dark;
+      ctx.lineWidth = 0.6;
+      ctx.stroke();
+    }
+  }
+
+  if (outlined) {
+    traceRings(ctx, document, camera, size);
+    ctx.clip('evenodd');
+    ctx.strokeStyle = dark;
+    ctx.lineWidth = 0.9;
+    ctx.setLineDash([3, 4]);
+    ctx.beginPath();
+    traceUnits(ctx, laying, laying.leftOut, null, camera, size);
+    ctx.stroke();
+
+    ctx.strokeStyle = colours.graphite;
+    ctx.lineWidth = 1.2;
+    ctx.setLineDash([6, 3]);
+    ctx.beginPath();
+    traceUnits(ctx, laying, laying.lifted, null, camera, size);
+    traceCrosses(ctx, laying, camera, size);
+    ctx.stroke();
+  }
+  ctx.restore();
+}
+
+/** A cross through each lifted unit, corner to corner. */
+function traceCrosses(ctx: CanvasRenderingContext2D, laying: Laying, camera: Camera, size: ScreenSize) {
+  const { lifted, motif } = laying;
+  for (let n = 0; n < lifted.count; n++) {
+    const { halfLength: a, halfWidth: b } = motif[lifted.k[n]];
+    const corner = (p: number, q: number) =>
+      screenFromGround(camera, size, [
+        lifted.x[n] + p * a[0] + q * b[0],
+        lifted.y[n] + p * a[1] + q * b[1],
+      ]);
+    ctx.moveTo(...(corner(1, 1) as [number, number]));
+    ctx.lineTo(...(corner(-1, -1) as [number, number]));
+    ctx.moveTo(...(corner(1, -1) as [number, number]));
+    ctx.lineTo(...(corner(-1, 1) as [number, number]));
+  }
+}

@@ -1,0 +1,57 @@
+import { gapProfile, type EdgeProfile } from '@/paving/gap-profile';
+import { leastGapAt, type LeastGap } from '@/paving/least-gap';
+import type { LayoutDocument } from '@/paving/layout-document';
+import { parseLayoutDocument, type DocumentProblem } from '@/paving/layout-validation';
+import { layFloor, type Laying } from '@/paving/laying';
+import { floorReport, type Report } from '@/paving/report';
+
+/** All that the table shows of a document, worked out once for each and only as far as it is asked for. */
+export interface Floor {
+  readonly document: LayoutDocument;
+  readonly problems: readonly DocumentProblem[];
+  /** Null when the document cannot be laid; `problems` says why. */
+  readonly laying: Laying | null;
+  readonly report: Report | null;
+  readonly profile: readonly EdgeProfile[];
+  readonly leastGap: LeastGap | null;
+}
+
+const floors = new WeakMap<LayoutDocument, Floor>();
+
+function once<T>(make: () => T): () => T {
+  let made: { value: T } | null = null;
+  return () => (made ??= { value: make() }).value;
+}
+
+export function floorOf(document: LayoutDocument): Floor {
+  const known = floors.get(document);
+  if (known) return known;
+  const parsed = parseLayoutDocument(document);
+  const laying = once(() => (parsed.ok ? layFloor(parsed.document) : null));
+  const from = <T>(make: (laying: Laying) => T, without: T) =>
+    once(() => {
+      const laid = laying();
+      return laid ? make(laid) : without;
+    });
+  const report = from<Report | null>(floorReport, null);
+  const profile = from<readonly EdgeProfile[]>(gapProfile, []);
+  const leastGap = from<LeastGap | null>(leastGapAt, null);
+  const floor: Floor = {
+    document,
+    problems: parsed.ok ? [] : parsed.problems,
+    get laying() {
+      return laying();
+    },
+    get report() {
+      return report();
+    },
+    get profile() {
+      return profile();
+    },
+    get leastGap() {
+      return leastGap();
+    },
+  };
+  floors.set(document, floor);
+  return floor;
+}

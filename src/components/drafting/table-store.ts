@@ -1,0 +1,128 @@
+import { temporal } from 'zundo';
+import { createStore } from 'zustand/vanilla';
+import type { Point } from '@/geometry/point';
+import type { LayoutDocument } from '@/paving/layout-document';
+import type { Camera, ScreenSize } from './camera';
+
+export const STEPS = ['ground', 'unit', 'bond', 'place', 'versions'] as const;
+export type Step = (typeof STEPS)[number];
+
+export type ToolName = 'edit' | 'draw' | 'slide' | 'lift' | 'align';
+
+/** What of the ground is picked: a vertex or an edge of a ring. */
+export type Pick =
+  | { readonly kind: 'vertex'; readonly ring: number; readonly vertex: number }
+  | { readonly kind: 'edge'; readonly ring: number; readonly edge: number };
+
+/** A ring being drawn: its corners so far, and where the next would go. */
+export interface Drawing {
+  readonly target: 'perimeter' | 'keepOut';
+  readonly corners: readonly Point[];
+  readonly next: Point | null;
+  /** Typed while drawing; empty means: follow the pointer. */
+  readonly lengthMm: number | null;
+  readonly directionDeg: number | null;
+}
+
+/** A thin line that shows what the pointer has snapped to. */
+export interface Guide {
+  readonly from: Point;
+  readonly to: Point;
+}
+
+/** A spot of the edge lit on the floor and on the gap ribbon alike: `s` mm along edge `edge` of ring `ring`. */
+export interface Lit {
+  readonly ring: number;
+  readonly edge: number;
+  readonly s: number;
+  readonly from: 'floor' | 'ribbon';
+}
+
+export interface TableState {
+  /** The document as last settled: what undo steps through, what is saved. */
+  readonly document: LayoutDocument;
+  /** The document with the gesture in hand applied; settling it is one undo step. */
+  readonly preview: LayoutDocument | null;
+  readonly step: Step;
+  readonly tool: ToolName;
+  readonly pick: Pick | null;
+  readonly hover: Pick | null;
+  readonly drawing: Drawing | null;
+  readonly guides: readonly Guide[];
+  readonly lit: Lit | null;
+  readonly snap: boolean;
+  readonly camera: Camera | null;
+  readonly size: ScreenSize;
+  /** Said to the person, and read aloud by a screen reader. */
+  readonly said: string;
+
+  /** Settles `document` as one undo step. */
+  settle: (document: LayoutDocument) => void;
+  /** Settles what is shown, then a change of it, each an undo step of its own. */
+  edit: (change: (document: LayoutDocument) => LayoutDocument) => void;
+  /** Shows `document` as the gesture in hand; null abandons it. */
+  show: (document: LayoutDocument | null) => void;
+  /** Settles what is shown. */
+  settleShown: () => void;
+  set: (change: Partial<Omit<TableState, 'document' | 'preview'>>) => void;
+  goTo: (step: Step) => void;
+}
+
+/** How many steps can be undone. */
+const UNDO_LIMIT = 1000;
+
+const FIRST_TOOL: Record<Step, ToolName> = {
+  ground: 'edit',
+  unit: 'slide',
+  bond: 'slide',
+  place: 'slide',
+  versions: 'slide',
+};
+
+export function createTableStore(document: LayoutDocument) {
+  return createStore<TableState>()(
+    temporal(
+      (set, get) => ({
+        document,
+        preview: null,
+        step: 'ground',
+        tool: 'edit',
+        pick: null,
+        hover: null,
+        drawing: null,
+        guides: [],
+        lit: null,
+        snap: true,
+        camera: null,
+        size: { width: 0, height: 0 },
+        said: '',
+        settle: (next) => set({ document: next, preview: null, guides: [] }),
+        edit: (change) => {
+          get().settleShown();
+          const { document } = get();
+          const next = change(document);
+          if (next !== document) set({ document: next, guides: [] });
+        },
+        show: (preview) => set({ preview }),
+        settleShown: () => {
+          const { preview } = get();
+          if (preview) set({ document: preview, preview: null, guides: [] });
+        },
+        set: (change) => set(change),
+        goTo: (step) => {
+          get().settleShown();
+          set({ step, tool: FIRST_TOOL[step], pick: null, hover: null, drawing: null, guides: [], lit: null });
+        },
+      }),
+      {
+        limit: UNDO_LIMIT,
+        partialize: (state) => ({ document: state.document }),
+        equality: (past, now) => past.document === now.document,
+      },
+    ),
+  );
+}
+
+export type TableStore = ReturnType<typeof createTableStore>;
+
+export const shownDocument = (state: TableState): LayoutDocument => state.preview ?? state.document;
