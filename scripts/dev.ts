@@ -3,10 +3,12 @@ import path from 'node:path';
 import { openDatabase } from '@/db/client';
 import { seedIfEmpty } from '@/server/demo';
 import { environment } from '@/server/environment';
+import { endWithNpm } from './parent';
 import { demoSignIns, endWith } from './welcome';
 
 /** `npm run dev`: seeds the database if it is empty, lets go of it, and starts Astro's development server. */
 const develop = async (): Promise<void> => {
+  endWithNpm();
   const settings = environment();
   const opened = await openDatabase(settings);
   try {

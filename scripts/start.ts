@@ -6,6 +6,7 @@ import { closeDatabase, endBeforeClosing, theDatabase } from '@/server/database'
 import { demoIsThere, seedIfEmpty } from '@/server/demo';
 import { environment } from '@/server/environment';
 import { buildIfStale } from './build';
+import { endWithNpm } from './parent';
 import { demoSignIns, endWith } from './welcome';
 
 /** How long answers under way may take to end when the server is told to stop, ms. */
@@ -14,6 +15,7 @@ const PATIENCE = 5000;
 /** `npm start`: builds if needed, makes and seeds the database if it is empty, and serves. */
 const start = async (): Promise<void> => {
   process.env.NODE_ENV ??= 'production';
+  endWithNpm();
   const { host, port } = environment();
   await buildIfStale();
   const { db } = await theDatabase();

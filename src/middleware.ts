@@ -58,6 +58,9 @@ const guarded = async (context: APIContext, next: MiddlewareNext): Promise<Respo
 export const onRequest = defineMiddleware(async (context, next) => {
   if (context.isPrerendered) return next();
   const response = await guarded(context, next);
+  if (!response.headers.has('cache-control')) {
+    response.headers.set('cache-control', 'private, no-cache');
+  }
   const tls = cameOverTls(context.request, environment());
   addSecurityHeaders(response.headers, import.meta.env.DEV, tls);
   return response;
