@@ -11,7 +11,7 @@ import { addSecurityHeaders } from '@/server/security-headers';
 import { forgetSession, sendSession, sessionIdOf } from '@/server/session-cookie';
 import { signedInBy } from '@/server/sessions';
 
-guardForwardedFor();
+guardForwardedFor(environment().trustProxy);
 
 const identify = async (context: APIContext): Promise<void> => {
   Object.assign(context.locals, { person: null, firm: null, role: null, session: null });

@@ -1,0 +1,45 @@
+import { expect, test } from 'vitest';
+import { parseEnvironment } from '@/server/environment';
+
+test('with nothing set everything has a value that works', () => {
+  expect(parseEnvironment({})).toEqual({
+    host: '127.0.0.1',
+    port: 4321,
+    dataDir: 'data',
+    databaseUrl: undefined,
+    publicOrigin: undefined,
+    trustProxy: false,
+    secureCookies: 'auto',
+  });
+});
+
+test('a key that is set but empty counts as not set', () => {
+  expect(parseEnvironment({ PORT: '', DATABASE_URL: ' ' })).toEqual(parseEnvironment({}));
+});
+
+test('every bad key is named, with what it is and what would do', () => {
+  const bad = {
+    PORT: 'eighty',
+    DATABASE_URL: 'mysql://host/name',
+    PUBLIC_ORIGIN: 'floors',
+    TRUST_PROXY: 'perhaps',
+    SECURE_COOKIES: 'sometimes',
+  };
+  const message = (() => {
+    try {
+      parseEnvironment(bad);
+      return '';
+    } catch (error) {
+      return String(error);
+    }
+  })();
+  for (const [key, value] of Object.entries(bad)) {
+    expect(message).toMatch(new RegExp(`${key} must .*\\(it is "${value}"\\)`));
+  }
+});
+
+test('an origin is kept without its path', () => {
+  expect(parseEnvironment({ PUBLIC_ORIGIN: 'https://floors.example/app/' }).publicOrigin).toBe(
+    'https://floors.example',
+  );
+});
