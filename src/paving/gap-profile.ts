@@ -1,4 +1,9 @@
-import { envelopePieces, lowerEnvelope, type EnvelopePieces } from '@/geometry/lower-envelope';
+import {
+  envelopeClear,
+  envelopePieces,
+  lowerEnvelope,
+  type EnvelopePieces,
+} from '@/geometry/lower-envelope';
 import type { Point } from '@/geometry/point';
 import { LENGTH_TOLERANCE_MM } from '@/geometry/tolerance';
 import type { GroundEdge } from './ground';
@@ -152,6 +157,9 @@ function lowerSide(
   out.highT = t + rt + lt;
 }
 
+/** Units level with one that screens a chord must still be weighed against it, mm. */
+const SCREEN_MARGIN_MM = 1e-3;
+
 const lineAt = (s: number, s0: number, t0: number, s1: number, t1: number) =>
   s1 === s0 ? Math.min(t0, t1) : t0 + ((s - s0) / (s1 - s0)) * (t1 - t0);
 
@@ -271,6 +279,7 @@ function edgeProfile(laying: Laying, edge: GroundEdge, reach: number): EdgeProfi
   };
   const precedes = (one: number, other: number) =>
     (laid.k[one] - laid.k[other] || laid.j[one] - laid.j[other] || laid.i[one] - laid.i[other]) < 0;
+  const pieces = envelopePieces();
   let shift = 0;
   for (let m = 0; m + 1 < edge.chords.length; m++) {
     const start = edge.chords[m];
@@ -297,10 +306,16 @@ function edgeProfile(laying: Laying, edge: GroundEdge, reach: number): EdgeProfi
         side,
       );
     };
-    const pieces = envelopePieces();
+    envelopeClear(pieces);
+    // A unit that screens the whole chord hides all that begin behind it.
+    let screen = reach;
     unitsBefore(laying, start, along, inward, length, reach, joint / 2, (unit) => {
       place(unit, joint / 2);
-      addUnit(pieces, unit, side, length, reach);
+      addUnit(pieces, unit, side, length, screen);
+      if (side.leftS <= 0 && side.rightS >= length && side.leftT >= 0 && side.rightT >= 0) {
+        const high = Math.max(lowerHeight(side, 0), lowerHeight(side, length));
+        screen = Math.min(screen, high + SCREEN_MARGIN_MM);
+      }
       // The gap is that of the true unit, wherever along the edge it stands before it.
       place(unit, 0);
       const from = Math.max(0, side.leftS);

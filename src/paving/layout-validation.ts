@@ -34,19 +34,32 @@ function nearestIssues(issue: Issue): Issue[] {
   );
 }
 
+/** The schema's own words where it has them, else plain ones for what the library says. */
+function issueMessage(issue: Issue): string {
+  if (!/^(Invalid|Too|Unrecognized)/.test(issue.message)) return issue.message;
+  switch (issue.code) {
+    case 'invalid_type':
+      return issue.message.endsWith('received undefined')
+        ? 'is missing'
+        : `must be ${/^[aeio]/.test(issue.expected) ? 'an' : 'a'} ${issue.expected === 'int' ? 'whole number' : issue.expected}`;
+    case 'invalid_value':
+      return `must be one of ${issue.values.map(String).join(', ')}`;
+    case 'too_big':
+      return `must be at most ${issue.maximum}${issue.origin === 'number' ? '' : ' long'}`;
+    case 'too_small':
+      return `must be at least ${issue.minimum}${issue.origin === 'number' ? '' : ' long'}`;
+    default:
+      return issue.message;
+  }
+}
+
+/** A corner of a ring that is not one says what a corner is. */
 function issueProblem(issue: Issue): DocumentProblem {
   const path = issue.path.map((step) => (typeof step === 'symbol' ? String(step) : step));
-  const vertex = path[path.length - 1];
-  if (
-    typeof vertex === 'number' &&
-    (path.includes('perimeter') || path.includes('ring')) &&
-    (issue.code === 'too_big' || issue.code === 'too_small' || issue.code === 'invalid_type') &&
-    !issue.message.includes('mm') &&
-    !issue.message.includes('km')
-  ) {
-    return { path, message: 'must be a corner [x, y] or [x, y, bulge], in millimetres' };
-  }
-  return { path, message: issue.message };
+  const ring = path[1] === 'perimeter' ? 2 : path[1] === 'keepOuts' && path[3] === 'ring' ? 4 : -1;
+  return path[0] === 'ground' && path.length === ring + 1
+    ? { path, message: 'must be a corner [x, y] or [x, y, bulge]' }
+    : { path, message: issueMessage(issue) };
 }
 
 const shownCount = (count: number) =>

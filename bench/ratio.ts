@@ -1,0 +1,25 @@
+/** One line of a benchmark: a ratio measured within one run, and the least (or greatest) that is asked of it. */
+export interface Ratio {
+  readonly name: string;
+  readonly value: number;
+  readonly least?: number;
+  readonly greatest?: number;
+  /** What the ratio was worked out from. */
+  readonly detail: string;
+}
+
+export interface Bench {
+  readonly name: string;
+  readonly run: () => Ratio[];
+}
+
+/** Median wall time of `runs` calls after `warm` calls that are not counted, ms. */
+export function medianMs(work: () => unknown, runs: number, warm = 2): number {
+  for (let n = 0; n < warm; n++) work();
+  const times = Array.from({ length: runs }, () => {
+    const from = performance.now();
+    work();
+    return performance.now() - from;
+  }).sort((one, other) => one - other);
+  return times[times.length >> 1];
+}
