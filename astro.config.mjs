@@ -6,6 +6,8 @@ import tailwindcss from '@tailwindcss/vite';
 export default defineConfig({
   output: 'server',
   adapter: node({ mode: 'standalone' }),
+  // The middleware's own check of origins covers JSON too; Astro's takes every host for localhost.
+  security: { checkOrigin: false },
   devToolbar: { enabled: false },
   integrations: [react()],
   vite: {

@@ -1,13 +1,13 @@
 import { chromium, type Browser, type BrowserContext, type Page } from 'playwright-core';
 import { inject } from 'vitest';
-import { chromiumPath } from '../../scripts/chromium';
+import { chromium as chromiumPath } from '../../scripts/chromium';
 
 export const base = () => inject('base');
 export const PASSWORD = 'laid-whole';
 
 export const launch = (): Promise<Browser> =>
   chromium.launch({
-    executablePath: chromiumPath() ?? undefined,
+    executablePath: chromiumPath(),
     args: ['--no-sandbox', '--disable-gpu', '--disable-quic', '--disable-background-networking'],
   });
 

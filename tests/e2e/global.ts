@@ -17,7 +17,10 @@ const PATIENCE_MS = 300_000;
 const listening = (server: ChildProcess) =>
   new Promise<string>((resolve, reject) => {
     let printed = '';
-    const timer = setTimeout(() => reject(new Error(`the server did not start:\n${printed}`)), PATIENCE_MS);
+    const timer = setTimeout(
+      () => reject(new Error(`the server did not start:\n${printed}`)),
+      PATIENCE_MS,
+    );
     const read = (chunk: Buffer) => {
       printed += chunk.toString();
       const address = /Evenlay is at (http:\S+)/.exec(printed)?.[1];

@@ -15,7 +15,12 @@ export function BondPicture({ document, size = 76 }: { document: LayoutDocument;
     const cell = Math.abs(a[0] * b[1] - a[1] * b[0]);
     const side = Math.sqrt(cell / motif.length) * STEPS_SHOWN * 1.5;
     const margin = side * 2;
-    const square = (half: number): [number, number][] => [[-half, -half], [half, -half], [half, half], [-half, half]];
+    const square = (half: number): [number, number][] => [
+      [-half, -half],
+      [half, -half],
+      [half, half],
+      [-half, half],
+    ];
     const laying = layFloor({
       ...document,
       ground: { perimeter: square(side / 2 + margin), keepOuts: [] },
@@ -47,9 +52,21 @@ export function BondPicture({ document, size = 76 }: { document: LayoutDocument;
       className="block w-full"
       preserveAspectRatio="xMidYMid slice"
     >
-      <rect x={-side / 2} y={-side / 2} width={side} height={side} fill={document.aggregate?.colour ?? PLAIN_AGGREGATE} />
+      <rect
+        x={-side / 2}
+        y={-side / 2}
+        width={side}
+        height={side}
+        fill={document.aggregate?.colour ?? PLAIN_AGGREGATE}
+      />
       {paths.map(([colour, parts]) => (
-        <path key={colour} d={parts.join('')} fill={colour} stroke="var(--slate)" strokeWidth={side / 160} />
+        <path
+          key={colour}
+          d={parts.join('')}
+          fill={colour}
+          stroke="var(--slate)"
+          strokeWidth={side / 160}
+        />
       ))}
     </svg>
   );

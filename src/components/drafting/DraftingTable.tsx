@@ -30,7 +30,9 @@ interface Props {
 
 /** The drafting table of one layout. */
 export default function DraftingTable({ draft, personId }: Props) {
-  const [queries] = useState(() => new QueryClient({ defaultOptions: { queries: { networkMode: 'always', retry: 1 } } }));
+  const [queries] = useState(
+    () => new QueryClient({ defaultOptions: { queries: { networkMode: 'always', retry: 1 } } }),
+  );
   return (
     <QueryClientProvider client={queries}>
       <Table draft={draft} personId={personId} />
@@ -42,7 +44,8 @@ function Table({ draft, personId }: Props) {
   const [table] = useState(() => createTableStore(draft.document));
   const { mutateAsync } = useMutation({
     networkMode: 'always',
-    mutationFn: (body: SaveDraft) => api<DraftSaved>('PUT', `/api/layouts/${draft.layoutId}/draft`, body),
+    mutationFn: (body: SaveDraft) =>
+      api<DraftSaved>('PUT', `/api/layouts/${draft.layoutId}/draft`, body),
   });
   const send = useRef(mutateAsync);
   useEffect(() => {
@@ -89,12 +92,15 @@ function Board({ draft, sync, ready }: { draft: DraftState; sync: DraftSync; rea
   useEffect(() => {
     const onKey = (event: KeyboardEvent) => {
       const target = event.target as HTMLElement;
-      const typing = target.matches('input:not([type=checkbox]):not([type=radio]), textarea, select');
+      const typing = target.matches(
+        'input:not([type=checkbox]):not([type=radio]), textarea, select',
+      );
       const command = event.ctrlKey || event.metaKey;
       if (open || event.defaultPrevented) return;
       if (typing && !(command && event.key.toLowerCase() === 's')) return;
       // Enter and Space press the button that has the focus; arrows move within radio buttons and sliders.
-      const pressing = target.matches('button, a, summary') && (event.key === 'Enter' || event.key === ' ');
+      const pressing =
+        target.matches('button, a, summary') && (event.key === 'Enter' || event.key === ' ');
       const within = target.matches('[type=radio], [role=slider]') && event.key.startsWith('Arrow');
       if (pressing || within) return;
       const acted = keyActed(table, event, {
@@ -137,7 +143,10 @@ function Board({ draft, sync, ready }: { draft: DraftState; sync: DraftSync; rea
                 label="Lengths"
                 hideLabel
                 value={display}
-                options={[['metric', 'mm'], ['imperial', 'ft in']]}
+                options={[
+                  ['metric', 'mm'],
+                  ['imperial', 'ft in'],
+                ]}
                 onChange={() => displaySwitched(table)}
               />
             </div>
@@ -164,17 +173,39 @@ function Board({ draft, sync, ready }: { draft: DraftState; sync: DraftSync; rea
   );
 }
 
-function Strip({ draft, sync, number, onSave }: { draft: DraftState; sync: DraftSync; number: number; onSave: () => void }) {
+function Strip({
+  draft,
+  sync,
+  number,
+  onSave,
+}: {
+  draft: DraftState;
+  sync: DraftSync;
+  number: number;
+  onSave: () => void;
+}) {
   const turn = useShownFloor().document.placement.turn;
   const cells: [string, React.ReactNode][] = [
-    ['Project', <a className="hover:text-line" href={`/projects/${draft.projectId}`}>{draft.projectName}</a>],
+    [
+      'Project',
+      <a key="project" className="hover:text-line" href={`/projects/${draft.projectId}`}>
+        {draft.projectName}
+      </a>,
+    ],
     ['Layout', draft.layoutName],
-    [draft.basedOn ? `Draft, from version ${draft.basedOn.number}` : 'Draft', <SyncNote sync={sync} />],
+    [
+      draft.basedOn ? `Draft, from version ${draft.basedOn.number}` : 'Draft',
+      <SyncNote key="sync" sync={sync} />,
+    ],
     ['Turn', `${Number(turn.toFixed(2))}°`],
   ];
   return (
     <header className="flex items-stretch border-b border-graphite">
-      <a href="/projects" className="flex items-center gap-2 px-4 text-lg font-bold md:pr-8" aria-label="Evenlay, your projects">
+      <a
+        href="/projects"
+        className="flex items-center gap-2 px-4 text-lg font-bold md:pr-8"
+        aria-label="Evenlay, your projects"
+      >
         <img src="/favicon.svg" alt="" width="26" height="26" className="mark" />
         <span className="hidden lg:inline">Evenlay</span>
       </a>
@@ -221,7 +252,7 @@ function CanvasButtons({ onKeys }: { onKeys: () => void }) {
     ['Keys', Keyboard, onKeys, false],
   ] as const;
   return (
-    <div className="absolute right-3 bottom-3 flex border border-stone-300 bg-stone-50">
+    <div className="absolute right-2 bottom-2 flex border md:right-3 md:bottom-3 border border-stone-300 bg-stone-50">
       {buttons.map(([label, Icon, act, disabled]) => (
         <button
           key={label}
@@ -230,7 +261,7 @@ function CanvasButtons({ onKeys }: { onKeys: () => void }) {
           title={label}
           disabled={disabled}
           onClick={act}
-          className={`flex size-9 items-center justify-center hover:bg-stone-100 disabled:text-stone-300 pointer-coarse:size-11 ${label === 'Keys' ? 'max-md:hidden' : ''}`}
+          className={`flex size-9 items-center justify-center hover:bg-stone-100 disabled:text-stone-300 pointer-coarse:size-11 ${['Keys', 'Zoom in', 'Zoom out'].includes(label) ? 'max-md:hidden' : ''}`}
         >
           <Icon size={17} aria-hidden />
         </button>

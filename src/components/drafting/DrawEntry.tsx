@@ -21,12 +21,20 @@ export const DrawEntry = forwardRef<DrawEntryHandle>(function DrawEntry(_, ref) 
     const now = table.getState().drawing;
     if (!now) return;
     const parsed = lengthText.trim() === '' ? null : parseLength(lengthText, display);
-    const angle = directionText.trim() === '' ? null : Number(directionText.replace(/[°\s]/g, '').replace(',', '.').replace('−', '-'));
+    const angle =
+      directionText.trim() === ''
+        ? null
+        : Number(directionText.replace(/[°\s]/g, '').replace(',', '.').replace('−', '-'));
     setWrong(parsed && !parsed.ok ? parsed.message : null);
     const next = {
       ...now,
       lengthMm: parsed?.ok && parsed.mm > 0 ? parsed.mm : null,
-      directionDeg: angle !== null && Number.isFinite(angle) ? angle : now.directionDeg !== null && directionText === '' ? now.directionDeg : null,
+      directionDeg:
+        angle !== null && Number.isFinite(angle)
+          ? angle
+          : now.directionDeg !== null && directionText === ''
+            ? now.directionDeg
+            : null,
     };
     table.getState().set({ drawing: { ...next, next: typedCorner(next, now.next) ?? now.next } });
   };
@@ -39,7 +47,8 @@ export const DrawEntry = forwardRef<DrawEntryHandle>(function DrawEntry(_, ref) 
   }));
   if (!drawing) return null;
   const last = drawing.corners.at(-1);
-  const live = last && drawing.next ? Math.hypot(drawing.next[0] - last[0], drawing.next[1] - last[1]) : null;
+  const live =
+    last && drawing.next ? Math.hypot(drawing.next[0] - last[0], drawing.next[1] - last[1]) : null;
   const angle =
     last && drawing.next
       ? (Math.atan2(drawing.next[1] - last[1], drawing.next[0] - last[0]) * 180) / Math.PI
@@ -47,7 +56,10 @@ export const DrawEntry = forwardRef<DrawEntryHandle>(function DrawEntry(_, ref) 
   const place = () => {
     const now = table.getState().drawing;
     if (!now) return;
-    const next = typedCorner(now, now.next) ?? now.next ?? (now.corners.length === 0 ? ([0, 0] as const) : null);
+    const next =
+      typedCorner(now, now.next) ??
+      now.next ??
+      (now.corners.length === 0 ? ([0, 0] as const) : null);
     if (!next || wrong) return;
     setLength('');
     setDirection('');

@@ -8,8 +8,12 @@ function Figure({ name, now, before }: { name: string; now: ReactNode; before: R
   return (
     <div className="flex min-w-0 flex-col border-l border-stone-300 pl-2.5 first:border-l-0 first:pl-0">
       <dt className="order-2 text-sm text-slate">{name}</dt>
-      <dd className="order-1 text-[1.45rem] leading-tight font-bold tracking-tight whitespace-nowrap">{now}</dd>
-      <dd className="order-3 min-h-[1.3rem] text-sm text-line">{before !== null && <>was {before}</>}</dd>
+      <dd className="order-1 text-[1.45rem] leading-tight font-bold tracking-tight whitespace-nowrap">
+        {now}
+      </dd>
+      <dd className="order-3 min-h-[1.3rem] text-sm text-line">
+        {before !== null && <>was {before}</>}
+      </dd>
     </div>
   );
 }
@@ -18,7 +22,7 @@ function Row({ name, now, before }: { name: string; now: ReactNode; before: Reac
   return (
     <div className="flex items-baseline justify-between gap-3 py-1.5">
       <dt className="text-slate">{name}</dt>
-      <dd className="text-right font-semibold">
+      <dd className="text-right font-semibold whitespace-nowrap">
         {before !== null && <span className="mr-2 font-normal text-line">was {before}</span>}
         {now}
       </dd>
@@ -28,22 +32,31 @@ function Row({ name, now, before }: { name: string; now: ReactNode; before: Reac
 
 /** What a client makes of the play. */
 function playSentence(report: Report, play: ReactNode): ReactNode {
-  if (report.play === null) return 'No unit lies whole inside the edge. Slide or turn the pattern, or take a smaller unit.';
+  if (report.play === null)
+    return 'No unit lies whole inside the edge. Slide or turn the pattern, or take a smaller unit.';
   if (report.play < 0.5)
     return 'There is next to no play: the pattern must start exactly here, or a unit would have to be cut.';
-  return <>The whole floor may drift {play} in any direction while it is laid before a unit would come too near the edge.</>;
+  return (
+    <>
+      The whole floor may drift {play} in any direction while it is laid before a unit would come
+      too near the edge.
+    </>
+  );
 }
 
-/** The report, live, with what each figure stood at before the gesture in hand. */
-export function FloorFigures() {
+/** The report, live, with what each figure stood at before the gesture in hand. `brief`: the three that matter most. */
+export function FloorFigures({ brief = false }: { brief?: boolean }) {
   const shown = useShownFloor();
   const settled = useSettledFloor();
   const { report } = shown;
   if (!report) return <FloorProblems />;
   const { display } = shown.document;
   const was = settled !== shown ? settled.report : null;
-  const before = <T,>(pick: (r: Report) => T, draw: (value: T) => ReactNode, text: (value: T) => string) =>
-    was && text(pick(was)) !== text(pick(report)) ? draw(pick(was)) : null;
+  const before = <T,>(
+    pick: (r: Report) => T,
+    draw: (value: T) => ReactNode,
+    text: (value: T) => string,
+  ) => (was && text(pick(was)) !== text(pick(report)) ? draw(pick(was)) : null);
   const length = (mm: number | null) =>
     mm === null ? '–' : <Length mm={mm} display={display} decimals={Math.abs(mm) < 10 ? 1 : 0} />;
   const tenth = (mm: number | null) => (mm === null ? '–' : mm.toFixed(1));
@@ -52,7 +65,10 @@ export function FloorFigures() {
 
   return (
     <section aria-label="Figures of the floor">
-      <dl className="grid grid-cols-[0.85fr_1fr_1.1fr] border-t border-b border-t-graphite border-b-stone-300 py-2" data-testid="figures">
+      <dl
+        className="grid grid-cols-[0.85fr_1fr_1.1fr] border-t border-b border-t-graphite border-b-stone-300 py-2"
+        data-testid="figures"
+      >
         <Figure
           name="whole units"
           now={<span data-testid="whole-units">{count(report.wholeUnits)}</span>}
@@ -65,37 +81,61 @@ export function FloorFigures() {
         />
         <Figure
           name="play"
-          now={<span data-testid="play">{report.play === null ? '–' : <>±{length(Math.max(0, report.play))}</>}</span>}
+          now={
+            <span data-testid="play">
+              {report.play === null ? '–' : <>±{length(Math.max(0, report.play))}</>}
+            </span>
+          }
           before={before((r) => r.play, length, tenth)}
         />
       </dl>
-      <p className="mt-2 text-sm text-slate">
-        {playSentence(report, length(report.play === null ? null : Math.max(0, report.play)))}
-      </p>
-      <dl className="mt-3 hairlines text-[0.95rem]">
-        <Row name="Left out at the edge" now={count(report.leftOut)} before={before((r) => r.leftOut, count, String)} />
-        {(report.lifted > 0 || (was?.lifted ?? 0) > 0) && (
-          <Row name="Lifted" now={count(report.lifted)} before={before((r) => r.lifted, count, String)} />
-        )}
-        {Object.keys(report.byUnit).length > 1 &&
-          shown.document.units
-            .filter((unit) => unit.id in report.byUnit)
-            .map((unit) => (
+      {!brief && (
+        <>
+          <p className="mt-2 text-sm text-slate">
+            {playSentence(report, length(report.play === null ? null : Math.max(0, report.play)))}
+          </p>
+          <dl className="mt-3 hairlines text-[0.95rem]">
+            <Row
+              name="Left out at the edge"
+              now={count(report.leftOut)}
+              before={before((r) => r.leftOut, count, String)}
+            />
+            {(report.lifted > 0 || (was?.lifted ?? 0) > 0) && (
               <Row
-                key={unit.id}
-                name={unit.name}
-                now={count(report.byUnit[unit.id])}
-                before={before((r) => r.byUnit[unit.id] ?? 0, count, String)}
+                name="Lifted"
+                now={count(report.lifted)}
+                before={before((r) => r.lifted, count, String)}
               />
-            ))}
-        <Row name="Ground" now={area(report.groundArea)} before={before((r) => r.groundArea, area, area)} />
-        <Row name="Under units" now={area(report.coveredArea)} before={before((r) => r.coveredArea, area, area)} />
-        <Row
-          name={`Left for ${shown.document.aggregate?.name.toLowerCase() ?? 'aggregate'}`}
-          now={<span data-testid="fill-area">{area(report.fillArea)}</span>}
-          before={before((r) => r.fillArea, area, area)}
-        />
-      </dl>
+            )}
+            {Object.keys(report.byUnit).length > 1 &&
+              shown.document.units
+                .filter((unit) => unit.id in report.byUnit)
+                .map((unit) => (
+                  <Row
+                    key={unit.id}
+                    name={unit.name}
+                    now={count(report.byUnit[unit.id])}
+                    before={before((r) => r.byUnit[unit.id] ?? 0, count, String)}
+                  />
+                ))}
+            <Row
+              name="Ground"
+              now={area(report.groundArea)}
+              before={before((r) => r.groundArea, area, area)}
+            />
+            <Row
+              name="Under units"
+              now={area(report.coveredArea)}
+              before={before((r) => r.coveredArea, area, area)}
+            />
+            <Row
+              name="Left for aggregate"
+              now={<span data-testid="fill-area">{area(report.fillArea)}</span>}
+              before={before((r) => r.fillArea, area, area)}
+            />
+          </dl>
+        </>
+      )}
     </section>
   );
 }

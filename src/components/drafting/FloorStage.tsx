@@ -26,16 +26,22 @@ const createTools = (): Record<ToolName, Tool> => ({
   align: createAlignToEdge(),
 });
 
-/** Room round the ground for its dimensions, px. */
-export const fitBorder = (width: number): number => (width < 600 ? 48 : 76);
+/** Below this width the buttons take room from the drawing, px. */
+const NARROW_PX = 600;
 
 export function zoomToFit(table: TableStore): void {
   const { document, drawing, size, set } = table.getState();
   const points = [...ringOutline(documentRing(document, 0)), ...(drawing?.corners ?? [])];
   const xs = points.map((p) => p[0]);
   const ys = points.map((p) => p[1]);
-  const box = { minX: Math.min(...xs), minY: Math.min(...ys), maxX: Math.max(...xs), maxY: Math.max(...ys) };
-  set({ camera: cameraFitted(box, size, fitBorder(size.width)) });
+  const box = {
+    minX: Math.min(...xs),
+    minY: Math.min(...ys),
+    maxX: Math.max(...xs),
+    maxY: Math.max(...ys),
+  };
+  const narrow = size.width < NARROW_PX;
+  set({ camera: cameraFitted(box, size, narrow ? 44 : 76, narrow ? 34 : 0) });
 }
 
 /** One step of a wheel's zoom. */
@@ -119,7 +125,7 @@ export default function FloorStage({ label }: { label: string }) {
   return (
     <div
       ref={frame}
-      className="absolute inset-0 touch-none select-none"
+      className="absolute inset-0 touch-none select-none focus-visible:-outline-offset-2"
       role="application"
       aria-label={label}
       aria-describedby="table-said"
@@ -177,7 +183,8 @@ function pointersBound(table: TableStore, element: HTMLElement): () => void {
   const tools = createTools();
   const tool = () => tools[table.getState().tool];
   const down = new Map<number, Point>();
-  let gesture: { kind: 'tool' | 'pan' | 'pinch'; id: number; last: Point; from: Point } | null = null;
+  let gesture: { kind: 'tool' | 'pan' | 'pinch'; id: number; last: Point; from: Point } | null =
+    null;
   let waiting: TablePointer | null = null;
   let frame = 0;
 
@@ -253,7 +260,10 @@ function pointersBound(table: TableStore, element: HTMLElement): () => void {
     }
     if (gesture.kind === 'pinch') pinch(event.pointerId, pointer.screen);
     else if (gesture.kind === 'tool') moveSoon(pointer);
-    else if (screenDistance(gesture.from, pointer.screen) >= CLICK_SLACK_PX || gesture.last !== gesture.from) {
+    else if (
+      screenDistance(gesture.from, pointer.screen) >= CLICK_SLACK_PX ||
+      gesture.last !== gesture.from
+    ) {
       const { camera, set } = table.getState();
       if (camera)
         set({

@@ -24,8 +24,13 @@ const RING_GAP = 12;
 const CHARACTER_PX = 7;
 
 function ribbonSpans(document: LayoutDocument): Span[] {
-  const rings = Array.from({ length: documentRingCount(document) }, (_, ring) => documentRing(document, ring));
-  const total = rings.reduce((sum, ring) => sum + ring.reduce((s, _, edge) => s + edgeLength(ring, edge), 0), 0);
+  const rings = Array.from({ length: documentRingCount(document) }, (_, ring) =>
+    documentRing(document, ring),
+  );
+  const total = rings.reduce(
+    (sum, ring) => sum + ring.reduce((s, _, edge) => s + edgeLength(ring, edge), 0),
+    0,
+  );
   const scale = (WIDTH - RING_GAP * (rings.length - 1)) / (total || 1);
   const spans: Span[] = [];
   let x = 0;
@@ -72,7 +77,9 @@ export function GapRibbon() {
 
   if (!laying)
     return (
-      <div className="px-4 py-3 text-sm text-slate">The gap ribbon is drawn once the floor can be laid.</div>
+      <div className="px-4 py-3 text-sm text-slate">
+        The gap ribbon is drawn once the floor can be laid.
+      </div>
     );
 
   const light = (x: number) => {
@@ -86,7 +93,9 @@ export function GapRibbon() {
     light(((event.clientX - box.left) / box.width) * WIDTH);
   };
   const litSpan = lit && spans.find((s) => s.ring === lit.ring && s.edge === lit.edge);
-  const litX = litSpan ? litSpan.from + (lit.s / (litSpan.length || 1)) * (litSpan.to - litSpan.from) : null;
+  const litX = litSpan
+    ? litSpan.from + (lit.s / (litSpan.length || 1)) * (litSpan.to - litSpan.from)
+    : null;
   const litGap = lit ? gapAt(floor, lit.ring, lit.edge, lit.s) : null;
   const label = (span: Span) => {
     const edge = floor.profile.find((p) => p.ring === span.ring && p.edge === span.edge);

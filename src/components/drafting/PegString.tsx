@@ -10,7 +10,8 @@ export const STEP_NAMES: Record<Step, string> = {
 };
 
 function Peg({ state }: { state: 'done' | 'now' | 'to come' }) {
-  const fill = state === 'to come' ? 'var(--peg-empty)' : state === 'now' ? 'var(--line)' : 'var(--graphite)';
+  const fill =
+    state === 'to come' ? 'var(--peg-empty)' : state === 'now' ? 'var(--line)' : 'var(--graphite)';
   const stroke = state === 'to come' ? 'var(--slate)' : fill;
   return (
     <svg width="22" height="22" viewBox="0 0 22 22" aria-hidden="true" className="shrink-0">

@@ -16,7 +16,8 @@ interface Props {
   readonly sync: DraftSync;
 }
 
-const newRequestId = () => crypto.randomUUID?.() ?? `${Date.now()}-${Math.random().toString(36).slice(2)}`;
+const newRequestId = () =>
+  crypto.randomUUID?.() ?? `${Date.now()}-${Math.random().toString(36).slice(2)}`;
 
 /** Freezes the draft as the next version, once the server holds all of it. */
 export function SaveVersion({ open, onClose, layoutId, number, sync }: Props) {
@@ -33,15 +34,24 @@ export function SaveVersion({ open, onClose, layoutId, number, sync }: Props) {
     mutationFn: async () => {
       const baseRevision = await sync.flush();
       if (baseRevision === null)
-        throw new ApiError(0, null, 'The draft has not reached the server yet, so there is nothing to freeze. It is kept on this device.');
+        throw new ApiError(
+          0,
+          null,
+          'The draft has not reached the server yet, so there is nothing to freeze. It is kept on this device.',
+        );
       const body: SaveVersionBody = { baseRevision, label: label.trim(), note, requestId };
       return api<VersionDetail>('POST', `/api/layouts/${layoutId}/versions`, body);
     },
     onSuccess: async (version) => {
       const { report } = version;
-      const gap = report.leastGap === null ? '' : `, ${formatLength(report.leastGap, version.document.display)} least gap`;
+      const gap =
+        report.leastGap === null
+          ? ''
+          : `, ${formatLength(report.leastGap, version.document.display)} least gap`;
       table.getState().goTo('versions');
-      table.getState().set({ said: `Version ${version.number} saved. ${report.wholeUnits} whole units${gap}.` });
+      table
+        .getState()
+        .set({ said: `Version ${version.number} saved. ${report.wholeUnits} whole units${gap}.` });
       setLabel('');
       setNote('');
       setRequestId(newRequestId());
@@ -63,7 +73,8 @@ export function SaveVersion({ open, onClose, layoutId, number, sync }: Props) {
           }}
         >
           <p className="text-slate">
-            A version is frozen as it stands: drawing, figures and date. It can’t be altered or deleted afterwards.
+            A version is frozen as it stands: drawing, figures and date. It can’t be altered or
+            deleted afterwards.
           </p>
           <div>
             <label className="field-label" htmlFor="version-label">
@@ -97,7 +108,11 @@ export function SaveVersion({ open, onClose, layoutId, number, sync }: Props) {
               {save.error.message}
             </p>
           )}
-          <button type="submit" className="button button-primary w-full" disabled={save.isPending || label.trim() === ''}>
+          <button
+            type="submit"
+            className="button button-primary w-full"
+            disabled={save.isPending || label.trim() === ''}
+          >
             {save.isPending ? 'Saving …' : `Save version ${number}`}
           </button>
         </form>

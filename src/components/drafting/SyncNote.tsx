@@ -29,16 +29,26 @@ export function SyncBanner({ sync }: { sync: DraftSync }) {
   const { status, stale, message, keeps } = useStore(sync.state);
   if (status === 'stale' && stale)
     return (
-      <div role="alert" className="flex flex-wrap items-center gap-x-4 gap-y-2 border-b border-amber bg-amber-wash px-4 py-2">
+      <div
+        role="alert"
+        className="flex flex-wrap items-center gap-x-4 gap-y-2 border-b border-amber bg-amber-wash px-4 py-2"
+      >
         <p className="min-w-60 flex-1">
-          <b>{stale.current.savedBy.name} saved this layout at {wallTime(stale.current.savedAt)}, while you worked on it.</b>{' '}
-          Nothing is lost: yours is here, and theirs is on the server. Choose one to go on with; the other is set aside
-          under Versions.
+          <b>
+            {stale.current.savedBy.name} saved this layout at {wallTime(stale.current.savedAt)},
+            while you worked on it.
+          </b>{' '}
+          Nothing is lost: yours is here, and theirs is on the server. Choose one to go on with; the
+          other is set aside under Versions.
         </p>
         <button type="button" className="button" onClick={() => void sync.goOnWith('theirs')}>
           Go on with theirs
         </button>
-        <button type="button" className="button button-primary" onClick={() => void sync.goOnWith('mine')}>
+        <button
+          type="button"
+          className="button button-primary"
+          onClick={() => void sync.goOnWith('mine')}
+        >
           Go on with mine
         </button>
       </div>
@@ -47,7 +57,10 @@ export function SyncBanner({ sync }: { sync: DraftSync }) {
     return (
       <p role="alert" className="border-b border-amber bg-amber-wash px-4 py-2">
         You are signed out. Your work is kept on this device;{' '}
-        <a className="link font-semibold" href={`/sign-in?next=${encodeURIComponent(location.pathname)}`}>
+        <a
+          className="link font-semibold"
+          href={`/sign-in?next=${encodeURIComponent(location.pathname)}`}
+        >
           sign in
         </a>{' '}
         to send it.

@@ -55,16 +55,20 @@ export function cameraZoomed(camera: Camera, size: ScreenSize, at: Point, factor
   };
 }
 
-/** Camera that shows the whole box, with a border of `border` pixels for figures round it. */
-export function cameraFitted(box: Box, size: ScreenSize, border: number): Camera {
+/**
+ * Camera that shows the whole box, with a border of `border` pixels for figures round it and `foot`
+ * more below, where the buttons stand.
+ */
+export function cameraFitted(box: Box, size: ScreenSize, border: number, foot = 0): Camera {
   const across = Math.max(box.maxX - box.minX, 1);
   const up = Math.max(box.maxY - box.minY, 1);
   const scale = Math.min(
     Math.max(size.width - 2 * border, 40) / across,
-    Math.max(size.height - 2 * border, 40) / up,
+    Math.max(size.height - 2 * border - foot, 40) / up,
   );
+  const kept = Math.min(GREATEST_SCALE, Math.max(LEAST_SCALE, scale));
   return {
-    centre: [(box.minX + box.maxX) / 2, (box.minY + box.maxY) / 2],
-    scale: Math.min(GREATEST_SCALE, Math.max(LEAST_SCALE, scale)),
+    centre: [(box.minX + box.maxX) / 2, (box.minY + box.maxY) / 2 - foot / 2 / kept],
+    scale: kept,
   };
 }

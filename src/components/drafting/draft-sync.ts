@@ -37,7 +37,8 @@ const REST_MS = 700;
 /** Waits between tries while the server cannot be reached, ms. */
 const RETRY_MS = [2_000, 4_000, 8_000, 15_000, 30_000];
 
-const newTabId = (): string => crypto.randomUUID?.() ?? `${Date.now()}-${Math.random().toString(36).slice(2)}`;
+const newTabId = (): string =>
+  crypto.randomUUID?.() ?? `${Date.now()}-${Math.random().toString(36).slice(2)}`;
 
 export function createDraftSync(
   table: TableStore,
@@ -117,7 +118,12 @@ export function createDraftSync(
       });
       tries = 0;
       sentDocument = document;
-      state.setState({ status: 'saved', revision: saved.revision, savedAt: saved.savedAt, stale: null });
+      state.setState({
+        status: 'saved',
+        revision: saved.revision,
+        savedAt: saved.savedAt,
+        stale: null,
+      });
       keep();
       return saved.revision;
     } catch (error) {
@@ -157,12 +163,18 @@ export function createDraftSync(
         try {
           if (work.unsent) {
             const { baseRevision, document, tab: itsTab } = work;
-            const saved = await send({ baseRevision, document, tab: { ...itsTab, save: itsTab.save + 1 } });
-            if (work.baseRevision === state.getState().revision) adopt(saved.revision, saved.savedAt, document);
+            const saved = await send({
+              baseRevision,
+              document,
+              tab: { ...itsTab, save: itsTab.save + 1 },
+            });
+            if (work.baseRevision === state.getState().revision)
+              adopt(saved.revision, saved.savedAt, document);
           }
           forgetWork(personId, layoutId, work.tab.id);
         } catch (error) {
-          if (error instanceof ApiError && error.status === 409) forgetWork(personId, layoutId, work.tab.id);
+          if (error instanceof ApiError && error.status === 409)
+            forgetWork(personId, layoutId, work.tab.id);
         }
       }
       if (last) {
@@ -172,7 +184,11 @@ export function createDraftSync(
           state.setState({ revision: last.baseRevision, status: 'saving' });
         }
         if (last.drawing)
-          table.setState({ drawing: { ...last.drawing, next: null }, step: 'ground', tool: 'draw' });
+          table.setState({
+            drawing: { ...last.drawing, next: null },
+            step: 'ground',
+            tool: 'draw',
+          });
       }
       table.temporal.getState().clear();
     },
@@ -203,7 +219,8 @@ export function createDraftSync(
     start() {
       claimTab(tab.id);
       const unsubscribe = table.subscribe((now, before) => {
-        if (now.document !== before.document || now.drawing?.corners !== before.drawing?.corners) keep();
+        if (now.document !== before.document || now.drawing?.corners !== before.drawing?.corners)
+          keep();
         if (now.document !== before.document && !state.getState().stale) {
           if (state.getState().status === 'saved' || state.getState().status === 'refused')
             state.setState({ status: 'saving', message: null });
@@ -220,7 +237,11 @@ export function createDraftSync(
         // The page is going: the request outlives it where the browser allows; the kept work is there anyway.
         if (unsent() && status !== 'stale' && status !== 'offline' && !inFlight) {
           const { document } = table.getState();
-          const body = JSON.stringify({ baseRevision: revision, document, tab: { ...tab, save: tab.save + 1 } });
+          const body = JSON.stringify({
+            baseRevision: revision,
+            document,
+            tab: { ...tab, save: tab.save + 1 },
+          });
           if (body.length < 60_000)
             void fetch(`/api/layouts/${layoutId}/draft`, {
               method: 'PUT',

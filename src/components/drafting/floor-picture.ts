@@ -26,7 +26,8 @@ const OUTLINE_FROM_PX = 5;
 const batches = new WeakMap<Laying, readonly ColourBatch[]>();
 
 const shadeOf = (i: number, j: number, k: number): number =>
-  ((Math.imul(i, 73856093) ^ Math.imul(j, 19349663) ^ Math.imul(k + 1, 83492791)) >>> 4) % SHADES.length;
+  ((Math.imul(i, 73856093) ^ Math.imul(j, 19349663) ^ Math.imul(k + 1, 83492791)) >>> 4) %
+  SHADES.length;
 
 function colourBatches(laying: Laying): readonly ColourBatch[] {
   const known = batches.get(laying);
@@ -50,7 +51,12 @@ function colourBatches(laying: Laying): readonly ColourBatch[] {
   return made;
 }
 
-function traceRings(ctx: CanvasRenderingContext2D, document: LayoutDocument, camera: Camera, size: ScreenSize) {
+function traceRings(
+  ctx: CanvasRenderingContext2D,
+  document: LayoutDocument,
+  camera: Camera,
+  size: ScreenSize,
+) {
   ctx.beginPath();
   for (let ring = 0; ring < documentRingCount(document); ring++) {
     ringOutline(documentRing(document, ring)).forEach((point, n) => {
@@ -110,7 +116,12 @@ function grainTile(colour: string): HTMLCanvasElement {
   let state = 12345;
   const next = () => (state = (Math.imul(state, 1664525) + 1013904223) >>> 0) / 2 ** 32;
   for (let n = 0; n < 210; n++) {
-    const [x, y, radius, kind] = [next() * GRAIN_TILE, next() * GRAIN_TILE, 0.5 + next() * 1.1, next()];
+    const [x, y, radius, kind] = [
+      next() * GRAIN_TILE,
+      next() * GRAIN_TILE,
+      0.5 + next() * 1.1,
+      next(),
+    ];
     ctx.fillStyle = colourShaded(colour, kind < 0.5 ? -0.22 : kind < 0.8 ? 0.35 : -0.38);
     for (const dx of [0, -GRAIN_TILE, GRAIN_TILE])
       for (const dy of [0, -GRAIN_TILE, GRAIN_TILE]) {
@@ -124,7 +135,12 @@ function grainTile(colour: string): HTMLCanvasElement {
 }
 
 /** Grain that stays on the ground while panning; its size steps by powers of two with the zoom. */
-function grainPattern(ctx: CanvasRenderingContext2D, colour: string, camera: Camera, size: ScreenSize) {
+function grainPattern(
+  ctx: CanvasRenderingContext2D,
+  colour: string,
+  camera: Camera,
+  size: ScreenSize,
+) {
   const pattern = ctx.createPattern(grainTile(colour), 'repeat');
   if (!pattern) return colour;
   const base = 0.12;
@@ -159,7 +175,9 @@ export function paintFloor(
 
   const dark = colourShaded(aggregate, -0.45);
   const across = Math.min(
-    ...laying.motif.map((entry) => 2 * Math.min(Math.hypot(...entry.halfLength), Math.hypot(...entry.halfWidth))),
+    ...laying.motif.map(
+      (entry) => 2 * Math.min(Math.hypot(...entry.halfLength), Math.hypot(...entry.halfWidth)),
+    ),
   );
   const outlined = across * camera.scale >= OUTLINE_FROM_PX;
 
@@ -197,7 +215,12 @@ export function paintFloor(
 }
 
 /** A cross through each lifted unit, corner to corner. */
-function traceCrosses(ctx: CanvasRenderingContext2D, laying: Laying, camera: Camera, size: ScreenSize) {
+function traceCrosses(
+  ctx: CanvasRenderingContext2D,
+  laying: Laying,
+  camera: Camera,
+  size: ScreenSize,
+) {
   const { lifted, motif } = laying;
   for (let n = 0; n < lifted.count; n++) {
     const { halfLength: a, halfWidth: b } = motif[lifted.k[n]];

@@ -40,7 +40,11 @@ export function pickStepped(table: TableStore, by: 1 | -1): void {
     documentRing(document, ring).forEach((_, n) => {
       all.push({ kind: 'vertex', ring, vertex: n }, { kind: 'edge', ring, edge: n });
     });
-  const at = pick ? all.findIndex((other) => JSON.stringify(other) === JSON.stringify(pick)) : by === 1 ? -1 : 0;
+  const at = pick
+    ? all.findIndex((other) => JSON.stringify(other) === JSON.stringify(pick))
+    : by === 1
+      ? -1
+      : 0;
   set({ pick: all[(at + by + all.length) % all.length] });
 }
 
@@ -49,9 +53,14 @@ export function pickNudged(table: TableStore, by: Point): void {
   if (!pick) return;
   nudge(table, (document) => {
     const ring = documentRing(document, pick.ring);
-    if (pick.kind === 'edge') return ringReplaced(document, pick.ring, edgeMoved(ring, pick.edge, by));
+    if (pick.kind === 'edge')
+      return ringReplaced(document, pick.ring, edgeMoved(ring, pick.edge, by));
     const [x, y] = vertexPoint(ring[pick.vertex]);
-    return ringReplaced(document, pick.ring, vertexMoved(ring, pick.vertex, [x + by[0], y + by[1]]));
+    return ringReplaced(
+      document,
+      pick.ring,
+      vertexMoved(ring, pick.vertex, [x + by[0], y + by[1]]),
+    );
   });
 }
 
@@ -61,7 +70,11 @@ export function cornerAdded(table: TableStore): void {
   if (pick?.kind !== 'edge') return;
   edit((document) => {
     const ring = documentRing(document, pick.ring);
-    return ringReplaced(document, pick.ring, vertexInserted(ring, pick.edge, edgeMiddle(ring, pick.edge)));
+    return ringReplaced(
+      document,
+      pick.ring,
+      vertexInserted(ring, pick.edge, edgeMiddle(ring, pick.edge)),
+    );
   });
   set({ pick: { kind: 'vertex', ring: pick.ring, vertex: pick.edge + 1 } });
 }

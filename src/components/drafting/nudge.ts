@@ -7,7 +7,10 @@ const GESTURE_REST_MS = 500;
 const timers = new WeakMap<TableStore, ReturnType<typeof setTimeout>>();
 
 /** Shows a small change at once; a run of them settles as one undo step when the keys rest. */
-export function nudge(table: TableStore, change: (document: LayoutDocument) => LayoutDocument): void {
+export function nudge(
+  table: TableStore,
+  change: (document: LayoutDocument) => LayoutDocument,
+): void {
   clearTimeout(timers.get(table));
   table.getState().show(change(shownDocument(table.getState())));
   timers.set(

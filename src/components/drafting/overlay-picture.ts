@@ -50,7 +50,13 @@ function segment(ctx: CanvasRenderingContext2D, a: Point, b: Point) {
   ctx.stroke();
 }
 
-function dot(ctx: CanvasRenderingContext2D, [x, y]: Point, radius: number, fill: string, stroke?: string) {
+function dot(
+  ctx: CanvasRenderingContext2D,
+  [x, y]: Point,
+  radius: number,
+  fill: string,
+  stroke?: string,
+) {
   ctx.beginPath();
   ctx.arc(x, y, radius, 0, 2 * Math.PI);
   ctx.fillStyle = fill;
@@ -100,7 +106,12 @@ function paintKeepOutName(ink: Ink, ring: number) {
   const outline = ringOutline(documentRing(document, ring));
   const xs = outline.map((p) => screen(ink, p)[0]);
   const ys = outline.map((p) => screen(ink, p)[1]);
-  const [left, right, top, bottom] = [Math.min(...xs), Math.max(...xs), Math.min(...ys), Math.max(...ys)];
+  const [left, right, top, bottom] = [
+    Math.min(...xs),
+    Math.max(...xs),
+    Math.min(...ys),
+    Math.max(...ys),
+  ];
   const name = document.ground.keepOuts[ring - 1].name;
   ctx.font = `400 12px ${FONT}`;
   ctx.save();
@@ -138,10 +149,27 @@ function paintDimensions(ink: Ink, ring: number, picked: Pick | null) {
       for (const end of [line.from, line.to])
         segment(ctx, [end[0] - 4, end[1] + 4], [end[0] + 4, end[1] - 4]);
     }
-    if (ring === 0 || live)
-      boxedText(ink, text, line.middle, arc ? 0 : line.angle, live ? colours.line : colours.graphite, live ? 600 : 400);
+    if (ring === 0 || live) {
+      const at = arc
+        ? clearOf(line.edgeMiddle, line.out, ctx.measureText(text).width / 2 + 8)
+        : line.middle;
+      boxedText(
+        ink,
+        text,
+        at,
+        arc ? 0 : line.angle,
+        live ? colours.line : colours.graphite,
+        live ? 600 : 400,
+      );
+    }
   }
 }
+
+/** Middle of a level label of that half width, moved out from `at` until it is clear of it. */
+const clearOf = (at: Point, out: Point, half: number): Point => [
+  at[0] + out[0] * (16 + half * Math.abs(out[0])),
+  at[1] + out[1] * (16 + half * Math.abs(out[0])),
+];
 
 const overshoot = (from: Point, to: Point): Point => {
   const length = Math.hypot(to[0] - from[0], to[1] - from[1]) || 1;
@@ -156,7 +184,14 @@ function paintLetters(ink: Ink) {
     return [(to[0] - from[0]) / length, (to[1] - from[1]) / length];
   };
   const at = ring.map((v) => screen(ink, vertexPoint(v)));
-  if (ring.length > 12 && at.some((p, n) => Math.hypot(p[0] - at[(n + 1) % at.length][0], p[1] - at[(n + 1) % at.length][1]) < 26)) return;
+  if (
+    ring.length > 12 &&
+    at.some(
+      (p, n) =>
+        Math.hypot(p[0] - at[(n + 1) % at.length][0], p[1] - at[(n + 1) % at.length][1]) < 26,
+    )
+  )
+    return;
   at.forEach((p, n) => {
     const u = unit(at[(n + at.length - 1) % at.length], p);
     const v = unit(p, at[(n + 1) % at.length]);
@@ -200,7 +235,13 @@ function paintPick(ink: Ink, pick: Pick, strong: boolean) {
       ctx.stroke();
     }
   } else if (pick.vertex < ring.length)
-    dot(ctx, screen(ink, vertexPoint(ring[pick.vertex])), strong ? 7 : 6, strong ? colours.line : colours.stone50, colours.line);
+    dot(
+      ctx,
+      screen(ink, vertexPoint(ring[pick.vertex])),
+      strong ? 7 : 6,
+      strong ? colours.line : colours.stone50,
+      colours.line,
+    );
 }
 
 function paintHandles(ink: Ink, state: TableState) {
@@ -229,7 +270,13 @@ function paintDrawing(ink: Ink, state: TableState) {
     ctx.setLineDash([]);
   }
   drawing.corners.forEach((corner, n) =>
-    dot(ctx, screen(ink, corner), n === 0 ? 6 : 4, n === 0 ? colours.line : colours.stone50, colours.line),
+    dot(
+      ctx,
+      screen(ink, corner),
+      n === 0 ? 6 : 4,
+      n === 0 ? colours.line : colours.stone50,
+      colours.line,
+    ),
   );
   if (drawing.next) dot(ctx, screen(ink, drawing.next), 5, colours.stone50, colours.line);
   const last = drawing.corners.at(-1);
@@ -238,7 +285,14 @@ function paintDrawing(ink: Ink, state: TableState) {
     const a = screen(ink, last);
     const b = screen(ink, drawing.next);
     if (length > 0)
-      boxedText(ink, formatLength(length, ink.document.display), [(a[0] + b[0]) / 2, (a[1] + b[1]) / 2 - 16], 0, colours.line, 600);
+      boxedText(
+        ink,
+        formatLength(length, ink.document.display),
+        [(a[0] + b[0]) / 2, (a[1] + b[1]) / 2 - 16],
+        0,
+        colours.line,
+        600,
+      );
   }
 }
 
@@ -282,8 +336,26 @@ function paintLeastGap(ink: Ink, floor: Floor) {
   ctx.lineWidth = 1.8;
   ctx.stroke();
   const edgePoint = screen(ink, leastGap.edgePoint);
-  segment(ctx, screen(ink, leastGap.unitPoint), edgePoint);
+  const unitPoint = screen(ink, leastGap.unitPoint);
+  segment(ctx, unitPoint, edgePoint);
   dot(ctx, edgePoint, 4, colours.line);
+
+  const text = `goes first: ${formatLength(leastGap.gap, ink.document.display)}`;
+  ctx.font = `600 12.5px ${FONT}`;
+  const width = ctx.measureText(text).width + 16;
+  // The label stands outside the edge, where it hides no unit, and inside the window.
+  const away: Point = [edgePoint[0] - unitPoint[0], edgePoint[1] - unitPoint[1]];
+  const length = Math.hypot(...away) || 1;
+  const x = edgePoint[0] + (away[0] / length) * (width / 2 + 14);
+  const y = edgePoint[1] + (away[1] / length) * 26 - (Math.abs(away[1]) < 0.4 * length ? 22 : 0);
+  const left = Math.min(Math.max(x - width / 2, 4), ink.size.width - width - 4);
+  const top = Math.min(Math.max(y - 11, 4), ink.size.height - 26);
+  ctx.fillStyle = colours.line;
+  ctx.fillRect(left, top, width, 22);
+  ctx.fillStyle = colours.onLine;
+  ctx.textAlign = 'left';
+  ctx.textBaseline = 'middle';
+  ctx.fillText(text, left + 8, top + 11.5);
 }
 
 /** A spot of the edge and the gap there, lit from the floor or from the ribbon. */
@@ -312,7 +384,14 @@ function paintLit(ink: Ink, state: TableState, floor: Floor) {
     dot(ink.ctx, screen(ink, at), 4.5, ink.colours.line);
     if (gap !== null) {
       const [x, y] = screen(ink, to);
-      boxedText(ink, formatLength(gap, ink.document.display), [x + 4, y - 16], 0, ink.colours.line, 600);
+      boxedText(
+        ink,
+        formatLength(gap, ink.document.display),
+        [x + 4, y - 16],
+        0,
+        ink.colours.line,
+        600,
+      );
     }
     return;
   }
@@ -345,7 +424,14 @@ function paintTurnHandle(ink: Ink, state: TableState) {
   dot(ctx, handle.handle, 8, colours.stone50, colours.line);
   dot(ctx, handle.handle, 2.5, colours.line);
   if (state.preview)
-    boxedText(ink, `${Number(ink.document.placement.turn.toFixed(2))}°`, [handle.handle[0], handle.handle[1] - 20], 0, colours.line, 600);
+    boxedText(
+      ink,
+      `${Number(ink.document.placement.turn.toFixed(2))}°`,
+      [handle.handle[0], handle.handle[1] - 20],
+      0,
+      colours.line,
+      600,
+    );
 }
 
 /** Everything over the floor: edge, dimensions, handles, guides, what is live and what is wrong. */
@@ -356,7 +442,13 @@ export function paintOverlay(
   colours: DrawingColours,
 ) {
   if (!state.camera) return;
-  const ink: Ink = { ctx, colours, camera: state.camera, size: state.size, document: shownDocument(state) };
+  const ink: Ink = {
+    ctx,
+    colours,
+    camera: state.camera,
+    size: state.size,
+    document: shownDocument(state),
+  };
   const editing = state.step === 'ground';
   const replacing = state.drawing?.target === 'perimeter';
   ctx.save();

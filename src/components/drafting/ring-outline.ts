@@ -10,7 +10,10 @@ export function edgeOutline(ring: Ring, edge: number): readonly Point[] {
   const end = ring[(edge + 1) % ring.length];
   const halve = (from: Point, to: Point, bulge: number, depth: number): Point[] => {
     if (bulge === 0 || depth === 0) return [from];
-    const arc: Ring = [[from[0], from[1], bulge], [to[0], to[1]]];
+    const arc: Ring = [
+      [from[0], from[1], bulge],
+      [to[0], to[1]],
+    ];
     const middle = edgeMiddle(arc, 0);
     const half = Math.tan(Math.atan(bulge) / 2);
     return [...halve(from, middle, half, depth - 1), ...halve(middle, to, half, depth - 1)];

@@ -15,7 +15,13 @@ export interface Snapped {
 
 const METRIC_STEPS = [1, 5, 10, 50, 100, 500, 1000, 5000];
 const IMPERIAL_STEPS = [
-  MM_PER_INCH / 4, MM_PER_INCH, 3 * MM_PER_INCH, 6 * MM_PER_INCH, MM_PER_FOOT, 5 * MM_PER_FOOT, 10 * MM_PER_FOOT,
+  MM_PER_INCH / 4,
+  MM_PER_INCH,
+  3 * MM_PER_INCH,
+  6 * MM_PER_INCH,
+  MM_PER_FOOT,
+  5 * MM_PER_FOOT,
+  10 * MM_PER_FOOT,
 ];
 /** The grid is never finer than this on the screen, px. */
 const LEAST_GRID_PX = 7;
@@ -36,7 +42,10 @@ export const gridLength = onGrid;
 
 /** The axes, and along and square to a direction, as unit vectors. */
 export function squareDirections(...directions: readonly Point[]): readonly Point[] {
-  const found: Point[] = [[1, 0], [0, 1]];
+  const found: Point[] = [
+    [1, 0],
+    [0, 1],
+  ];
   for (const [x, y] of directions) {
     const length = Math.hypot(x, y);
     if (length === 0) continue;
@@ -71,7 +80,12 @@ function crossing(a: SnapLine, b: SnapLine): Point | null {
  */
 export function snapPoint(
   raw: Point,
-  { vertices, lines, grid, reachMm }: {
+  {
+    vertices,
+    lines,
+    grid,
+    reachMm,
+  }: {
     readonly vertices: readonly Point[];
     readonly lines: readonly SnapLine[];
     readonly grid: number;

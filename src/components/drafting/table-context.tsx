@@ -15,7 +15,8 @@ export function useTableStore(): TableStore {
   return store;
 }
 
-export const useTable = <T,>(select: (state: TableState) => T): T => useStore(useTableStore(), select);
+export const useTable = <T,>(select: (state: TableState) => T): T =>
+  useStore(useTableStore(), select);
 
 /** The floor as shown: with the gesture in hand applied. */
 export const useShownFloor = (): Floor => floorOf(useTable(shownDocument));

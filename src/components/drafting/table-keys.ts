@@ -17,40 +17,55 @@ import { STEPS, type TableStore } from './table-store';
 import { cornerPlaced, cornerTakenBack, ringClosed, typedCorner } from './tools/draw-ring';
 
 /** What the list of keys shows; `table-keys.ts` is where each is acted on. */
-export const KEY_LIST: readonly (readonly [group: string, keys: readonly (readonly [string, string])[]])[] = [
-  ['Anywhere', [
-    ['1 – 5', 'Go to a step'],
-    ['Ctrl Z', 'Undo'],
-    ['Ctrl Shift Z', 'Redo'],
-    ['Ctrl S', 'Save a version'],
-    ['+  −', 'Zoom in, zoom out'],
-    ['F', 'Zoom to fit'],
-    ['M', 'Metric or imperial'],
-    ['Esc', 'Leave the tool'],
-    ['?', 'This list'],
-  ]],
-  ['Ground', [
-    ['D', 'Draw the ground anew'],
-    ['K', 'Draw a keep-out'],
-    [',  .', 'Pick the corner or edge before, after'],
-    ['Arrows', 'Move what is picked 1 mm; with Shift 10 mm'],
-    ['I', 'Put a corner into the picked edge'],
-    ['Delete', 'Take the picked corner away'],
-    ['S', 'Snapping on or off; hold Alt to suspend it'],
-  ]],
-  ['While drawing', [
-    ['0 – 9', 'Type the length'],
-    ['Arrows', 'Draw right, up, left or down'],
-    ['Enter', 'Put the corner down'],
-    ['Backspace', 'Take the last corner back'],
-    ['C', 'Close the ring'],
-  ]],
-  ['Unit, bond and place', [
-    ['Arrows', 'Slide the pattern 1 mm; with Shift 10 mm'],
-    ['[  ]', 'Turn 1°; with Shift 15°'],
-    ['L', 'Lift units, or slide the pattern'],
-    ['A', 'Start a row along an edge'],
-  ]],
+export const KEY_LIST: readonly (readonly [
+  group: string,
+  keys: readonly (readonly [string, string])[],
+])[] = [
+  [
+    'Anywhere',
+    [
+      ['1 – 5', 'Go to a step'],
+      ['Ctrl Z', 'Undo'],
+      ['Ctrl Shift Z', 'Redo'],
+      ['Ctrl S', 'Save a version'],
+      ['+  −', 'Zoom in, zoom out'],
+      ['F', 'Zoom to fit'],
+      ['M', 'Metric or imperial'],
+      ['Esc', 'Leave the tool'],
+      ['?', 'This list'],
+    ],
+  ],
+  [
+    'Ground',
+    [
+      ['D', 'Draw the ground anew'],
+      ['K', 'Draw a keep-out'],
+      [',  .', 'Pick the corner or edge before, after'],
+      ['Arrows', 'Move what is picked 1 mm; with Shift 10 mm'],
+      ['I', 'Put a corner into the picked edge'],
+      ['Delete', 'Take the picked corner away'],
+      ['S', 'Snapping on or off; hold Alt to suspend it'],
+    ],
+  ],
+  [
+    'While drawing',
+    [
+      ['0 – 9', 'Type the length'],
+      ['Arrows', 'Draw right, up, left or down'],
+      ['Enter', 'Put the corner down'],
+      ['Backspace', 'Take the last corner back'],
+      ['C', 'Close the ring'],
+    ],
+  ],
+  [
+    'Unit, bond and place',
+    [
+      ['Arrows', 'Slide the pattern 1 mm; with Shift 10 mm'],
+      ['[  ]', 'Turn 1°; with Shift 15°'],
+      ['L', 'Lift units, or slide the pattern'],
+      ['A', 'Start a row along an edge'],
+    ],
+  ],
 ];
 
 const ARROWS: Record<string, Point> = {
@@ -87,7 +102,8 @@ export function redo(table: TableStore): void {
 
 export function zoomBy(table: TableStore, factor: number): void {
   const { camera, size, set } = table.getState();
-  if (camera) set({ camera: cameraZoomed(camera, size, [size.width / 2, size.height / 2], factor) });
+  if (camera)
+    set({ camera: cameraZoomed(camera, size, [size.width / 2, size.height / 2], factor) });
 }
 
 export function displaySwitched(table: TableStore): void {
@@ -101,7 +117,11 @@ export function displaySwitched(table: TableStore): void {
 export function turnNudged(table: TableStore, byDeg: number): void {
   nudge(table, (document) => ({
     ...document,
-    placement: placementTurned(document.placement, document.placement.turn + byDeg, groundMiddle(document)),
+    placement: placementTurned(
+      document.placement,
+      document.placement.turn + byDeg,
+      groundMiddle(document),
+    ),
   }));
 }
 
@@ -131,10 +151,15 @@ export function keyActed(table: TableStore, event: KeyboardEvent, actions: KeyAc
   if (state.drawing) {
     if (key in ARROW_DIRECTION) {
       const drawing = { ...state.drawing, directionDeg: ARROW_DIRECTION[key] };
-      state.set({ drawing: { ...drawing, next: typedCorner(drawing, drawing.next) ?? drawing.next } });
+      state.set({
+        drawing: { ...drawing, next: typedCorner(drawing, drawing.next) ?? drawing.next },
+      });
     } else if (key === 'Enter') {
       const { drawing } = state;
-      const next = typedCorner(drawing, drawing.next) ?? drawing.next ?? (drawing.corners.length === 0 ? ([0, 0] as const) : null);
+      const next =
+        typedCorner(drawing, drawing.next) ??
+        drawing.next ??
+        (drawing.corners.length === 0 ? ([0, 0] as const) : null);
       if (next) cornerPlaced(table, next);
     } else if (key === 'Backspace') cornerTakenBack(table);
     else if (key.toLowerCase() === 'c') ringClosed(table);
@@ -148,11 +173,20 @@ export function keyActed(table: TableStore, event: KeyboardEvent, actions: KeyAc
 
   if (key in ARROWS) {
     const imperial = state.document.display === 'imperial';
-    const step = imperial ? (event.shiftKey ? MM_PER_INCH / 2 : MM_PER_INCH / 16) : event.shiftKey ? 10 : 1;
+    const step = imperial
+      ? event.shiftKey
+        ? MM_PER_INCH / 2
+        : MM_PER_INCH / 16
+      : event.shiftKey
+        ? 10
+        : 1;
     const by: Point = [ARROWS[key][0] * step, ARROWS[key][1] * step];
     if (state.step === 'ground') pickNudged(table, by);
     else
-      nudge(table, (document) => ({ ...document, placement: placementSlid(document.placement, by) }));
+      nudge(table, (document) => ({
+        ...document,
+        placement: placementSlid(document.placement, by),
+      }));
     return true;
   }
 

@@ -111,7 +111,15 @@ export function createTableStore(document: LayoutDocument) {
         set: (change) => set(change),
         goTo: (step) => {
           get().settleShown();
-          set({ step, tool: FIRST_TOOL[step], pick: null, hover: null, drawing: null, guides: [], lit: null });
+          set({
+            step,
+            tool: FIRST_TOOL[step],
+            pick: null,
+            hover: null,
+            drawing: null,
+            guides: [],
+            lit: null,
+          });
         },
       }),
       {

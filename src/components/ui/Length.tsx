@@ -1,7 +1,15 @@
 import { lengthParts, type Display } from '@/paving/length';
 
 /** A length as it is read: thin-spaced units, fractions of an inch set as fractions. */
-export function Length({ mm, display, decimals = 0 }: { mm: number; display: Display; decimals?: number }) {
+export function Length({
+  mm,
+  display,
+  decimals = 0,
+}: {
+  mm: number;
+  display: Display;
+  decimals?: number;
+}) {
   const parts = lengthParts(mm, display, decimals);
   return (
     <span className="whitespace-nowrap">

@@ -17,7 +17,17 @@ interface Props {
 
 /** A field for a length typed the way the trade types it, echoed back in the display system. */
 export function LengthField(props: Props) {
-  const { label, mm, display, onLength, refuse, decimals = 1, hideLabel, disabled, inputRef } = props;
+  const {
+    label,
+    mm,
+    display,
+    onLength,
+    refuse,
+    decimals = 1,
+    hideLabel,
+    disabled,
+    inputRef,
+  } = props;
   const id = useId();
   const [typed, setTyped] = useState<string | null>(null);
   const [wrong, setWrong] = useState<string | null>(null);

@@ -7,7 +7,13 @@ interface Props<T extends string> {
 }
 
 /** One of a few, side by side: radio buttons drawn as a row. */
-export function Segmented<T extends string>({ label, value, options, onChange, hideLabel }: Props<T>) {
+export function Segmented<T extends string>({
+  label,
+  value,
+  options,
+  onChange,
+  hideLabel,
+}: Props<T>) {
   return (
     <fieldset>
       <legend className={hideLabel ? 'sr-only' : 'field-label'}>{label}</legend>

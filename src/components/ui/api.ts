@@ -18,7 +18,12 @@ export class ApiError extends Error {
 }
 
 /** Sends JSON and reads JSON; throws `ApiError` for any answer but success. */
-export async function api<T>(method: string, path: string, body?: unknown, init: RequestInit = {}): Promise<T> {
+export async function api<T>(
+  method: string,
+  path: string,
+  body?: unknown,
+  init: RequestInit = {},
+): Promise<T> {
   let response: Response;
   try {
     response = await fetch(path, {
@@ -28,7 +33,11 @@ export async function api<T>(method: string, path: string, body?: unknown, init:
       ...init,
     });
   } catch {
-    throw new ApiError(0, null, 'The server could not be reached. Check the connection and try again.');
+    throw new ApiError(
+      0,
+      null,
+      'The server could not be reached. Check the connection and try again.',
+    );
   }
   const answer = await response.json().catch(() => null);
   if (!response.ok)

@@ -33,7 +33,12 @@ export function BondPanel() {
   const settled = useTable((state) => state.document);
   return (
     <div className="space-y-5">
-      <div role="radiogroup" aria-label="Bond" className="grid grid-cols-4 gap-x-2 gap-y-3 max-md:grid-cols-4">
+      <FloorFigures brief />
+      <div
+        role="radiogroup"
+        aria-label="Bond"
+        className="grid grid-cols-4 gap-x-2 gap-y-3 max-md:grid-cols-4"
+      >
         {BOND_KINDS.map((kind) => {
           const choice = bondChosen(settled, kind);
           const chosen = settled.bond.kind === kind;
@@ -53,14 +58,18 @@ export function BondPanel() {
                 });
               }}
             >
-              <span className={`block ${chosen ? 'outline-3 outline-line' : 'outline-1 outline-stone-300'}`}>
+              <span
+                className={`block ${chosen ? 'outline-3 outline-line' : 'outline-1 outline-stone-300'}`}
+              >
                 {problems.length > 0 && chosen ? (
-                  <span className="flex aspect-square items-center justify-center bg-brick-wash text-xs">does not fit</span>
+                  <span className="flex aspect-square items-center justify-center bg-brick-wash text-xs">
+                    does not fit
+                  </span>
                 ) : (
                   <BondPicture document={pictured(chosen ? document : settled, kind)} />
                 )}
               </span>
-              <span className="mt-1 block truncate">{BOND_NAMES[kind]}</span>
+              <span className="mt-1 block text-[0.8rem] tracking-tight">{BOND_NAMES[kind]}</span>
             </button>
           );
         })}
@@ -69,7 +78,6 @@ export function BondPanel() {
       <BondFields />
       <TonesFields />
       <AggregateFields />
-      <FloorFigures />
     </div>
   );
 }
@@ -95,7 +103,9 @@ function BondFields() {
   const { document } = useShownFloor();
   const { bond, display } = document;
   const edit = (part: object) =>
-    table.getState().edit((now) => ({ ...now, bond: { ...now.bond, ...part } as LayoutDocument['bond'] }));
+    table
+      .getState()
+      .edit((now) => ({ ...now, bond: { ...now.bond, ...part } as LayoutDocument['bond'] }));
   const jointRefused = (mm: number) => (mm < 0 || mm > 10_000 ? 'Between nothing and 10 m.' : null);
 
   if (bond.kind === 'custom') return <CustomBond bond={bond} />;
@@ -113,10 +123,16 @@ function BondFields() {
                 mm={bond.pitch[axis] - side}
                 display={display}
                 refuse={(mm) =>
-                  mm <= 0 ? 'Stepping units must not touch.' : side + mm > 10_000 ? 'That is over 10 m.' : null
+                  mm <= 0
+                    ? 'Stepping units must not touch.'
+                    : side + mm > 10_000
+                      ? 'That is over 10 m.'
+                      : null
                 }
                 onLength={(mm) =>
-                  edit({ pitch: axis === 0 ? [side + mm, bond.pitch[1]] : [bond.pitch[0], side + mm] })
+                  edit({
+                    pitch: axis === 0 ? [side + mm, bond.pitch[1]] : [bond.pitch[0], side + mm],
+                  })
                 }
               />
             );
@@ -152,7 +168,7 @@ function BondFields() {
 const RULES: readonly (readonly [Tones['rule'], string])[] = [
   ['single', 'One'],
   ['alternate', 'In turn'],
-  ['course', 'By course'],
+  ['course', 'Courses'],
   ['random', 'Mixed'],
 ];
 
@@ -164,7 +180,12 @@ function TonesFields() {
     table.getState().edit((now) => ({ ...now, tones: { ...tones, ...part } }));
   return (
     <section aria-label="Tones" className="space-y-2">
-      <Segmented label="Tones" value={tones.rule} options={RULES} onChange={(rule) => edit({ rule })} />
+      <Segmented
+        label="Tones"
+        value={tones.rule}
+        options={RULES}
+        onChange={(rule) => edit({ rule })}
+      />
       {tones.rule !== 'single' && (
         <div className="flex items-center justify-between">
           <label className="field-label mb-0" htmlFor="second-tone">
@@ -176,7 +197,9 @@ function TonesFields() {
             className="h-11 w-16 border border-slate"
             key={tones.second}
             defaultValue={tones.second}
-            onBlur={(event) => event.target.value !== tones.second && edit({ second: event.target.value })}
+            onBlur={(event) =>
+              event.target.value !== tones.second && edit({ second: event.target.value })
+            }
           />
         </div>
       )}
@@ -226,7 +249,10 @@ function AggregateFields() {
             className="button min-h-11 gap-2 px-2 text-sm font-normal"
             onClick={() => table.getState().edit((d) => ({ ...d, aggregate: { name, colour } }))}
           >
-            <span className="inline-block size-5 border border-slate" style={{ background: colour }} />
+            <span
+              className="inline-block size-5 border border-slate"
+              style={{ background: colour }}
+            />
             {name}
           </button>
         ))}

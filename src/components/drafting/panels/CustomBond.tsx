@@ -19,7 +19,9 @@ export function CustomBond({ bond }: { bond: Custom }) {
     <section aria-label="Own bond" className="space-y-3">
       {(['a', 'b'] as const).map((name) => (
         <div key={name}>
-          <p className="field-label">Repeats {name === 'a' ? 'along the course' : 'from course to course'}</p>
+          <p className="field-label">
+            Repeats {name === 'a' ? 'along the course' : 'from course to course'}
+          </p>
           <div className="grid grid-cols-2 gap-2">
             {([0, 1] as const).map((axis) => (
               <LengthField
@@ -29,7 +31,9 @@ export function CustomBond({ bond }: { bond: Custom }) {
                 mm={bond[name][axis]}
                 display={display}
                 onLength={(mm) =>
-                  edit({ [name]: axis === 0 ? [mm, bond[name][1]] : [bond[name][0], mm] } as Partial<Custom>)
+                  edit({
+                    [name]: axis === 0 ? [mm, bond[name][1]] : [bond[name][0], mm],
+                  } as Partial<Custom>)
                 }
               />
             ))}
@@ -54,9 +58,28 @@ export function CustomBond({ bond }: { bond: Custom }) {
                 ))}
               </select>
             )}
-            <LengthField label={`Unit ${index + 1} across`} hideLabel mm={m.at[0]} display={display} onLength={(mm) => entry(index, { at: [mm, m.at[1]] })} />
-            <LengthField label={`Unit ${index + 1} up`} hideLabel mm={m.at[1]} display={display} onLength={(mm) => entry(index, { at: [m.at[0], mm] })} />
-            <NumberField label={`Unit ${index + 1} turn`} hideLabel value={m.turn} suffix="°" refuse={(v) => (Math.abs(v) > 360 ? 'Up to 360°.' : null)} onNumber={(turn) => entry(index, { turn })} />
+            <LengthField
+              label={`Unit ${index + 1} across`}
+              hideLabel
+              mm={m.at[0]}
+              display={display}
+              onLength={(mm) => entry(index, { at: [mm, m.at[1]] })}
+            />
+            <LengthField
+              label={`Unit ${index + 1} up`}
+              hideLabel
+              mm={m.at[1]}
+              display={display}
+              onLength={(mm) => entry(index, { at: [m.at[0], mm] })}
+            />
+            <NumberField
+              label={`Unit ${index + 1} turn`}
+              hideLabel
+              value={m.turn}
+              suffix="°"
+              refuse={(v) => (Math.abs(v) > 360 ? 'Up to 360°.' : null)}
+              onNumber={(turn) => entry(index, { turn })}
+            />
             <button
               type="button"
               className="button button-quiet"

@@ -22,7 +22,14 @@ import { LengthField } from '../../ui/LengthField';
 import { NumberField } from '../../ui/NumberField';
 import { Segmented } from '../../ui/Segmented';
 import { FloorProblems } from '../FloorFigures';
-import { cornerAdded, cornerRemoved, drawGround, drawKeepOut, drawingLeft, keepOutRemoved } from '../ground-actions';
+import {
+  cornerAdded,
+  cornerRemoved,
+  drawGround,
+  drawKeepOut,
+  drawingLeft,
+  keepOutRemoved,
+} from '../ground-actions';
 import { ringOutline } from '../ring-outline';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 import type { Pick } from '../table-store';
@@ -32,7 +39,11 @@ import { cornerTakenBack, ringClosed } from '../tools/draw-ring';
 const GREATEST_EDGE_MM = 1_000_000;
 
 const refuseLength = (mm: number) =>
-  mm <= 0 ? 'A side must be longer than nothing.' : mm > GREATEST_EDGE_MM ? 'That is over a kilometre.' : null;
+  mm <= 0
+    ? 'A side must be longer than nothing.'
+    : mm > GREATEST_EDGE_MM
+      ? 'That is over a kilometre.'
+      : null;
 
 function EdgeRow({ ring, edge }: { ring: number; edge: number }) {
   const table = useTableStore();
@@ -65,9 +76,11 @@ function EdgeRow({ ring, edge }: { ring: number; edge: number }) {
             display={document.display}
             refuse={refuseLength}
             onLength={(mm) =>
-              table.getState().edit((now) =>
-                ringReplaced(now, ring, edgeLengthSet(documentRing(now, ring), edge, mm)),
-              )
+              table
+                .getState()
+                .edit((now) =>
+                  ringReplaced(now, ring, edgeLengthSet(documentRing(now, ring), edge, mm)),
+                )
             }
           />
         </div>
@@ -89,9 +102,14 @@ function PickedEdge({ ring, edge }: { ring: number; edge: number }) {
       <Segmented
         label="Shape"
         value={bulge === 0 ? 'straight' : 'arc'}
-        options={[['straight', 'Straight'], ['arc', 'Arc']]}
+        options={[
+          ['straight', 'Straight'],
+          ['arc', 'Arc'],
+        ]}
         onChange={(shape) =>
-          change((now) => edgeRiseSet(now, edge, shape === 'straight' ? 0 : chordLength(now, edge) / 6))
+          change((now) =>
+            edgeRiseSet(now, edge, shape === 'straight' ? 0 : chordLength(now, edge) / 6),
+          )
         }
       />
       {bulge !== 0 && (
@@ -101,7 +119,9 @@ function PickedEdge({ ring, edge }: { ring: number; edge: number }) {
             mm={arcRise(vertices, edge)}
             display={document.display}
             refuse={(mm) =>
-              Math.abs(mm) > 40 * chordLength(vertices, edge) ? 'That rise is too great for this side.' : null
+              Math.abs(mm) > 40 * chordLength(vertices, edge)
+                ? 'That rise is too great for this side.'
+                : null
             }
             onLength={(mm) => change((now) => edgeRiseSet(now, edge, mm))}
           />
@@ -135,7 +155,11 @@ function PickedVertex({ pick }: { pick: Extract<Pick, { kind: 'vertex' }> }) {
     table.getState().edit((now) => {
       const vertices = documentRing(now, pick.ring);
       const [x, y] = vertices[pick.vertex];
-      return ringReplaced(now, pick.ring, vertexMoved(vertices, pick.vertex, axis === 0 ? [mm, y] : [x, mm]));
+      return ringReplaced(
+        now,
+        pick.ring,
+        vertexMoved(vertices, pick.vertex, axis === 0 ? [mm, y] : [x, mm]),
+      );
     });
   const name =
     pick.ring === 0
@@ -217,7 +241,8 @@ export function GroundPanel() {
     <div className="space-y-5">
       {floor.problems.length > 0 && <FloorProblems />}
       <p className="text-slate">
-        Drag corners and sides, or type a side’s length. A double click on a side puts a corner there.
+        Drag corners and sides, or type a side’s length. A double click on a side puts a corner
+        there.
       </p>
       <div className="grid grid-cols-2 gap-2">
         <button type="button" className="button" onClick={() => drawGround(table)}>
@@ -256,7 +281,9 @@ export function GroundPanel() {
                     ...now,
                     ground: {
                       ...now.ground,
-                      keepOuts: now.ground.keepOuts.map((k, n) => (n === index ? { ...k, name } : k)),
+                      keepOuts: now.ground.keepOuts.map((k, n) =>
+                        n === index ? { ...k, name } : k,
+                      ),
                     },
                   }));
               }}

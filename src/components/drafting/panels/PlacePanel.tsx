@@ -17,7 +17,8 @@ const TOOLS: readonly (readonly [ToolName, string, typeof Hand])[] = [
 ];
 
 const HINTS: Partial<Record<ToolName, string>> = {
-  slide: 'Drag the floor to slide the pattern; drag the round handle to turn it. Arrows nudge 1 mm.',
+  slide:
+    'Drag the floor to slide the pattern; drag the round handle to turn it. Arrows nudge 1 mm.',
   lift: 'Click a unit to lift it out, and again to lay it back.',
   align: 'Click the edge along which a row is to start.',
 };
@@ -59,7 +60,11 @@ export function PlacePanel() {
             {document.ground.perimeter.map((vertex, edge) =>
               vertexBulge(vertex) === 0 ? (
                 <li key={edge}>
-                  <button type="button" className="button" onClick={() => alignTableToEdge(table, 0, edge)}>
+                  <button
+                    type="button"
+                    className="button"
+                    onClick={() => alignTableToEdge(table, 0, edge)}
+                  >
                     {edgeName(document, 0, edge)}
                   </button>
                 </li>
@@ -78,7 +83,12 @@ export function PlacePanel() {
         )}
       </section>
       <section aria-label="Turn" className="grid grid-cols-[auto_1fr_auto] items-end gap-2">
-        <button type="button" className="button px-3" aria-label="Turn 1° anticlockwise" onClick={() => turnNudged(table, 1)}>
+        <button
+          type="button"
+          className="button px-3"
+          aria-label="Turn 1° anticlockwise"
+          onClick={() => turnNudged(table, 1)}
+        >
           <RotateCcw size={17} aria-hidden />
         </button>
         <NumberField
@@ -93,13 +103,28 @@ export function PlacePanel() {
             }))
           }
         />
-        <button type="button" className="button px-3" aria-label="Turn 1° clockwise" onClick={() => turnNudged(table, -1)}>
+        <button
+          type="button"
+          className="button px-3"
+          aria-label="Turn 1° clockwise"
+          onClick={() => turnNudged(table, -1)}
+        >
           <RotateCw size={17} aria-hidden />
         </button>
       </section>
       <section aria-label="Start" className="grid grid-cols-2 gap-2">
-        <LengthField label="Start across" mm={placement.origin[0]} display={display} onLength={origin(0)} />
-        <LengthField label="Start up" mm={placement.origin[1]} display={display} onLength={origin(1)} />
+        <LengthField
+          label="Start across"
+          mm={placement.origin[0]}
+          display={display}
+          onLength={origin(0)}
+        />
+        <LengthField
+          label="Start up"
+          mm={placement.origin[1]}
+          display={display}
+          onLength={origin(1)}
+        />
       </section>
       <EdgeGaps />
     </div>
@@ -122,11 +147,21 @@ function EdgeGaps() {
         </caption>
         <thead className="text-sm text-slate">
           <tr>
-            <th scope="col" className="py-1 text-left font-normal">Edge</th>
-            <th scope="col" className="font-normal">facing</th>
-            <th scope="col" className="font-normal">least</th>
-            <th scope="col" className="font-normal">greatest</th>
-            <th scope="col" className="font-normal">mean</th>
+            <th scope="col" className="py-1 text-left font-normal">
+              Edge
+            </th>
+            <th scope="col" className="font-normal">
+              facing
+            </th>
+            <th scope="col" className="font-normal">
+              least
+            </th>
+            <th scope="col" className="font-normal">
+              greatest
+            </th>
+            <th scope="col" className="font-normal">
+              mean
+            </th>
           </tr>
         </thead>
         <tbody className="hairlines">
@@ -135,7 +170,11 @@ function EdgeGaps() {
               key={`${edge.ring}.${edge.edge}`}
               className="hover:text-line"
               onPointerEnter={() =>
-                table.getState().set({ lit: { ring: edge.ring, edge: edge.edge, s: edge.length / 2, from: 'ribbon' } })
+                table
+                  .getState()
+                  .set({
+                    lit: { ring: edge.ring, edge: edge.edge, s: edge.length / 2, from: 'ribbon' },
+                  })
               }
               onPointerLeave={() => table.getState().set({ lit: null })}
             >

@@ -10,16 +10,16 @@ import { FloorFigures } from '../FloorFigures';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 
 /** The longest side that a catalogue picture shows at full size, mm. */
-const PICTURE_MM = 920;
+const PICTURE_MM = 900;
 
 function UnitPicture({ unit }: { unit: Pick<Unit, 'length' | 'width' | 'colour'> }) {
-  const scale = 40 / PICTURE_MM;
+  const scale = 54 / PICTURE_MM;
   const [width, height] = [Math.max(5, unit.length * scale), Math.max(4, unit.width * scale)];
   return (
-    <svg width="44" height="32" viewBox="0 0 44 32" aria-hidden="true" className="shrink-0">
+    <svg width="56" height="38" viewBox="0 0 56 38" aria-hidden="true" className="shrink-0">
       <rect
-        x={22 - width / 2}
-        y={16 - height / 2}
+        x={28 - width / 2}
+        y={19 - height / 2}
         width={width}
         height={height}
         fill={unit.colour ?? PLAIN_UNIT}
@@ -52,15 +52,21 @@ export function UnitPanel() {
   };
   const unit = document.units.find((candidate) => candidate.id === id)!;
   const chosen = (item: CatalogueUnit) =>
-    (['length', 'width', 'thickness'] as const).every((side) => Math.abs(item[side] - unit[side]) < 0.01);
+    (['length', 'width', 'thickness'] as const).every(
+      (side) => Math.abs(item[side] - unit[side]) < 0.01,
+    );
 
   return (
     <div className="space-y-5">
+      <FloorFigures brief />
       <section aria-label="Catalogue">
         <Segmented
           label="Sizes in the trade"
           value={system}
-          options={[['metric', 'Metric'], ['imperial', 'Inches']]}
+          options={[
+            ['metric', 'Metric'],
+            ['imperial', 'Inches'],
+          ]}
           onChange={setSystem}
         />
         <ul className="mt-2 max-h-80 overflow-y-auto border-y border-stone-300 hairlines">
@@ -73,7 +79,7 @@ export function UnitPanel() {
                   chosen(item) ? 'bg-line-wash font-semibold text-line' : ''
                 }`}
                 onClick={() => {
-                  const { system: _, ...sizes } = item;
+                  const { system: _system, ...sizes } = item;
                   change(id, sizes);
                 }}
               >
@@ -89,9 +95,13 @@ export function UnitPanel() {
       </section>
       <UnitFields key={id} unit={unit} heading="This unit" change={(part) => change(id, part)} />
       {others.map((other) => (
-        <UnitFields key={other.id} unit={other} heading="Second unit" change={(part) => change(other.id, part)} />
+        <UnitFields
+          key={other.id}
+          unit={other}
+          heading="Second unit"
+          change={(part) => change(other.id, part)}
+        />
       ))}
-      <FloorFigures />
     </div>
   );
 }
@@ -159,7 +169,9 @@ function UnitFields({
           className="h-11 w-16 border border-slate"
           key={unit.colour}
           defaultValue={unit.colour ?? PLAIN_UNIT}
-          onBlur={(event) => event.target.value !== unit.colour && change({ colour: event.target.value })}
+          onBlur={(event) =>
+            event.target.value !== unit.colour && change({ colour: event.target.value })
+          }
         />
       </div>
     </section>

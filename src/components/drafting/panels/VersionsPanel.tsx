@@ -1,6 +1,11 @@
 import { useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
-import type { DraftFromVersion, DraftState, SetAsideDetail, SetAsideSummary } from '@/api-types/layouts';
+import type {
+  DraftFromVersion,
+  DraftState,
+  SetAsideDetail,
+  SetAsideSummary,
+} from '@/api-types/layouts';
 import type { VersionWithDrawing } from '@/api-types/versions';
 import { formatLength } from '@/paving/length';
 import { floorThumbnailSvg } from '@/sheets/floor-thumbnail';
@@ -14,10 +19,20 @@ export const useVersions = (layoutId: string) =>
   useQuery({
     queryKey: ['versions', layoutId],
     queryFn: () =>
-      api<{ versions: VersionWithDrawing[] }>('GET', `/api/layouts/${layoutId}/versions`).then((a) => a.versions),
+      api<{ versions: VersionWithDrawing[] }>('GET', `/api/layouts/${layoutId}/versions`).then(
+        (a) => a.versions,
+      ),
   });
 
-export function VersionsPanel({ layoutId, sync, onSave }: { layoutId: string; sync: DraftSync; onSave: () => void }) {
+export function VersionsPanel({
+  layoutId,
+  sync,
+  onSave,
+}: {
+  layoutId: string;
+  sync: DraftSync;
+  onSave: () => void;
+}) {
   const versions = useVersions(layoutId);
   return (
     <div className="space-y-5">
@@ -35,8 +50,8 @@ export function VersionsPanel({ layoutId, sync, onSave }: { layoutId: string; sy
       )}
       {versions.data?.length === 0 && (
         <p className="text-slate">
-          No version yet. A version freezes the floor with its figures, so that you can share it, compare it and
-          print its plan.
+          No version yet. A version freezes the floor with its figures, so that you can share it,
+          compare it and print its plan.
         </p>
       )}
       {versions.data && versions.data.length > 0 && (
@@ -51,7 +66,15 @@ export function VersionsPanel({ layoutId, sync, onSave }: { layoutId: string; sy
   );
 }
 
-function Version({ version, layoutId, sync }: { version: VersionWithDrawing; layoutId: string; sync: DraftSync }) {
+function Version({
+  version,
+  layoutId,
+  sync,
+}: {
+  version: VersionWithDrawing;
+  layoutId: string;
+  sync: DraftSync;
+}) {
   const table = useTableStore();
   const queries = useQueryClient();
   const [asking, setAsking] = useState(false);
@@ -59,14 +82,19 @@ function Version({ version, layoutId, sync }: { version: VersionWithDrawing; lay
     networkMode: 'always',
     mutationFn: async () => {
       const baseRevision = await sync.flush();
-      if (baseRevision === null) throw new Error('The draft has not reached the server yet. Try again when it has.');
+      if (baseRevision === null)
+        throw new Error('The draft has not reached the server yet. Try again when it has.');
       const body: DraftFromVersion = { versionId: version.id, baseRevision };
       return api<DraftState>('POST', `/api/layouts/${layoutId}/draft/from-version`, body);
     },
     onSuccess: async (draft) => {
       sync.replaced(draft);
       setAsking(false);
-      table.getState().set({ said: `The draft now starts from version ${version.number}. What it held is set aside.` });
+      table
+        .getState()
+        .set({
+          said: `The draft now starts from version ${version.number}. What it held is set aside.`,
+        });
       await queries.invalidateQueries({ queryKey: ['set-aside', layoutId] });
     },
   });
@@ -78,8 +106,15 @@ function Version({ version, layoutId, sync }: { version: VersionWithDrawing; lay
   return (
     <li className="py-3">
       <div className="flex gap-3">
-        <a href={`/versions/${version.id}`} className="block w-20 shrink-0" aria-label={`Open version ${version.number}`}>
-          <span className="block" dangerouslySetInnerHTML={{ __html: floorThumbnailSvg(document, 80, 64) }} />
+        <a
+          href={`/versions/${version.id}`}
+          className="block w-20 shrink-0"
+          aria-label={`Open version ${version.number}`}
+        >
+          <span
+            className="block"
+            dangerouslySetInnerHTML={{ __html: floorThumbnailSvg(document, 80, 64) }}
+          />
         </a>
         <div className="min-w-0 flex-1">
           <a href={`/versions/${version.id}`} className="font-bold hover:text-line">
@@ -101,13 +136,21 @@ function Version({ version, layoutId, sync }: { version: VersionWithDrawing; lay
         <a className="button button-quiet" href={`/versions/${version.id}/plan`}>
           Plan
         </a>
-        <button type="button" className="button button-quiet" onClick={() => setAsking(!asking)} aria-expanded={asking}>
+        <button
+          type="button"
+          className="button button-quiet"
+          onClick={() => setAsking(!asking)}
+          aria-expanded={asking}
+        >
           Start the draft from it
         </button>
       </div>
       {asking && (
         <div className="border-l-2 border-line pl-3">
-          <p>The draft takes version {version.number}’s floor. What the draft holds now is set aside, not lost.</p>
+          <p>
+            The draft takes version {version.number}’s floor. What the draft holds now is set aside,
+            not lost.
+          </p>
           <button
             type="button"
             className="button button-primary mt-2"
@@ -134,7 +177,9 @@ function SetAside({ layoutId }: { layoutId: string }) {
   const list = useQuery({
     queryKey: ['set-aside', layoutId, said],
     queryFn: () =>
-      api<{ setAside: SetAsideSummary[] }>('GET', `/api/layouts/${layoutId}/set-aside`).then((a) => a.setAside),
+      api<{ setAside: SetAsideSummary[] }>('GET', `/api/layouts/${layoutId}/set-aside`).then(
+        (a) => a.setAside,
+      ),
   });
   const open = useMutation({
     networkMode: 'always',
@@ -154,7 +199,11 @@ function SetAside({ layoutId }: { layoutId: string }) {
             <span>
               {dayAndTime(aside.at)}, {aside.person.name}
             </span>
-            <button type="button" className="button button-quiet" onClick={() => open.mutate(aside.id)}>
+            <button
+              type="button"
+              className="button button-quiet"
+              onClick={() => open.mutate(aside.id)}
+            >
               Take up again
             </button>
           </li>

@@ -1,6 +1,12 @@
 import { layFloor } from '@/paving/laying';
 import { edgeName } from '@/paving/ground-edits';
-import { groundMiddle, placementSlid, placementTurned, slideToEdge, turnAlongEdge } from '@/paving/placement-edits';
+import {
+  groundMiddle,
+  placementSlid,
+  placementTurned,
+  slideToEdge,
+  turnAlongEdge,
+} from '@/paving/placement-edits';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { floorOf } from '../floor';
 import type { TableStore } from '../table-store';
@@ -8,7 +14,11 @@ import { edgeNearest } from './edit-ring';
 import { reachPx, type Tool } from './tool';
 
 /** The document with the pattern turned along an edge, and a row started along it; null for an arc. */
-export function alignedToEdge(document: LayoutDocument, ring: number, edge: number): LayoutDocument | null {
+export function alignedToEdge(
+  document: LayoutDocument,
+  ring: number,
+  edge: number,
+): LayoutDocument | null {
   const turn = turnAlongEdge(document, ring, edge);
   if (turn === null) return null;
   const turned = {

@@ -37,7 +37,9 @@ function nextCorner(state: TableState, pointer: TablePointer) {
   const others = [...existingVertices(document, drawing.target), ...drawing.corners.slice(0, -1)];
   const lines: SnapLine[] = [];
   if (last)
-    for (const along of squareDirections(before ? [last[0] - before[0], last[1] - before[1]] : [1, 0]))
+    for (const along of squareDirections(
+      before ? [last[0] - before[0], last[1] - before[1]] : [1, 0],
+    ))
       lines.push({ anchor: last, along });
   for (const anchor of others) lines.push({ anchor, along: [1, 0] }, { anchor, along: [0, 1] });
   const snapped = snapPoint(pointer.ground, {
@@ -134,12 +136,16 @@ export function createDrawRing(): Tool {
     const { next, guides } = nextCorner(state, pointer);
     const first = state.drawing.corners[0];
     const closing =
-      first && next && state.drawing.corners.length >= 3 && state.camera &&
-      screenDistance(
-        screenFromGround(state.camera, state.size, first),
-        pointer.screen,
-      ) <= reachPx(pointer);
-    state.set({ drawing: { ...state.drawing, next: closing ? first : next }, guides: closing ? [] : guides });
+      first &&
+      next &&
+      state.drawing.corners.length >= 3 &&
+      state.camera &&
+      screenDistance(screenFromGround(state.camera, state.size, first), pointer.screen) <=
+        reachPx(pointer);
+    state.set({
+      drawing: { ...state.drawing, next: closing ? first : next },
+      guides: closing ? [] : guides,
+    });
   };
 
   return {

@@ -16,7 +16,7 @@ import {
 import { screenFromGround } from '../camera';
 import { edgeOutline, ringOutline } from '../ring-outline';
 import { gridLength, gridStep, snapPoint, squareDirections, type SnapLine } from '../snapping';
-import type { Pick, TableState, TableStore } from '../table-store';
+import type { Pick, TableState } from '../table-store';
 import { CLICK_SLACK_PX, reachPx, screenDistance, type TablePointer, type Tool } from './tool';
 
 type Held =
@@ -35,7 +35,10 @@ const rings = (document: LayoutDocument) =>
 function segmentNearest(p: Point, a: Point, b: Point): { distance: number; at: Point } {
   const [dx, dy] = [b[0] - a[0], b[1] - a[1]];
   const length2 = dx * dx + dy * dy;
-  const t = length2 === 0 ? 0 : Math.min(1, Math.max(0, ((p[0] - a[0]) * dx + (p[1] - a[1]) * dy) / length2));
+  const t =
+    length2 === 0
+      ? 0
+      : Math.min(1, Math.max(0, ((p[0] - a[0]) * dx + (p[1] - a[1]) * dy) / length2));
   const at: Point = [a[0] + t * dx, a[1] + t * dy];
   return { distance: Math.hypot(p[0] - at[0], p[1] - at[1]), at };
 }
@@ -89,8 +92,11 @@ function heldAt(state: TableState, pointer: TablePointer): Held | null {
     if (away(middle) <= reach) return { kind: 'arc', ring: pick.ring, edge: pick.edge };
   }
   const edge = edgeNearest(document, pointer.ground);
-  if (edge.distance * camera.scale <= reach) return { kind: 'edge', ring: edge.ring, edge: edge.edge };
-  const keepOut = document.ground.keepOuts.findIndex((k) => insideRing(pointer.ground, ringOutline(k.ring)));
+  if (edge.distance * camera.scale <= reach)
+    return { kind: 'edge', ring: edge.ring, edge: edge.edge };
+  const keepOut = document.ground.keepOuts.findIndex((k) =>
+    insideRing(pointer.ground, ringOutline(k.ring)),
+  );
   return keepOut < 0 ? null : { kind: 'ring', ring: keepOut + 1 };
 }
 
@@ -108,7 +114,10 @@ function linesFor(document: LayoutDocument, ringIndex: number, vertex: number): 
   rings(document).forEach((other, index) =>
     other.forEach((v, n) => {
       if (index === ringIndex && n === vertex) return;
-      lines.push({ anchor: vertexPoint(v), along: [1, 0] }, { anchor: vertexPoint(v), along: [0, 1] });
+      lines.push(
+        { anchor: vertexPoint(v), along: [1, 0] },
+        { anchor: vertexPoint(v), along: [0, 1] },
+      );
     }),
   );
   return lines;
@@ -126,15 +135,19 @@ function dragged(state: TableState, held: Held, from: TablePointer, pointer: Tab
     const start = vertexPoint(ring[held.vertex]);
     const raw: Point = [start[0] + by[0], start[1] + by[1]];
     if (!snapping) return { document: replaced(vertexMoved(ring, held.vertex, raw)), guides: [] };
-    const others = rings(document)
-      .flatMap((r, index) => (index === held.ring ? [] : r.map(vertexPoint)));
+    const others = rings(document).flatMap((r, index) =>
+      index === held.ring ? [] : r.map(vertexPoint),
+    );
     const snapped = snapPoint(raw, {
       vertices: others,
       lines: linesFor(document, held.ring, held.vertex),
       grid,
       reachMm: reachPx(pointer) / camera!.scale,
     });
-    return { document: replaced(vertexMoved(ring, held.vertex, snapped.point)), guides: snapped.guides };
+    return {
+      document: replaced(vertexMoved(ring, held.vertex, snapped.point)),
+      guides: snapped.guides,
+    };
   }
 
   if (held.kind === 'ring') {
@@ -161,11 +174,17 @@ function dragged(state: TableState, held: Held, from: TablePointer, pointer: Tab
     const line = a[0] * out[0] + a[1] * out[1];
     const level = rings(document)
       .flatMap((r) => r.map((v) => v[0] * out[0] + v[1] * out[1] - line))
-      .filter((other) => Math.abs(other) > 1e-6 && Math.abs(other - off) * camera!.scale <= reachPx(pointer))
+      .filter(
+        (other) =>
+          Math.abs(other) > 1e-6 && Math.abs(other - off) * camera!.scale <= reachPx(pointer),
+      )
       .sort((p, q) => Math.abs(p - off) - Math.abs(q - off))[0];
     off = level ?? gridLength(off, grid);
   }
-  return { document: replaced(edgeMoved(ring, held.edge, [out[0] * off, out[1] * off])), guides: [] };
+  return {
+    document: replaced(edgeMoved(ring, held.edge, [out[0] * off, out[1] * off])),
+    guides: [],
+  };
 }
 
 const asPick = (held: Held | null): Pick | null =>

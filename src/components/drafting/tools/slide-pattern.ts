@@ -1,6 +1,11 @@
 import type { Point } from '@/geometry/point';
 import { groundMiddle, placementSlid, placementTurned, turnNormal } from '@/paving/placement-edits';
-import { documentRing, documentRingCount, edgeDirectionDeg, vertexBulge } from '@/paving/ground-edits';
+import {
+  documentRing,
+  documentRingCount,
+  edgeDirectionDeg,
+  vertexBulge,
+} from '@/paving/ground-edits';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { screenFromGround } from '../camera';
 import type { TableState, TableStore } from '../table-store';
@@ -17,13 +22,19 @@ type State =
   | { readonly kind: 'dragging'; readonly what: 'slide' | 'turn'; readonly from: TablePointer };
 
 /** Where the turn handle stands on the screen. */
-export function turnHandle(state: TableState, document: LayoutDocument): { pivot: Point; handle: Point } | null {
+export function turnHandle(
+  state: TableState,
+  document: LayoutDocument,
+): { pivot: Point; handle: Point } | null {
   if (!state.camera) return null;
   const pivot = screenFromGround(state.camera, state.size, groundMiddle(document));
   const angle = (document.placement.turn * Math.PI) / 180;
   return {
     pivot,
-    handle: [pivot[0] + TURN_HANDLE_PX * Math.cos(angle), pivot[1] - TURN_HANDLE_PX * Math.sin(angle)],
+    handle: [
+      pivot[0] + TURN_HANDLE_PX * Math.cos(angle),
+      pivot[1] - TURN_HANDLE_PX * Math.sin(angle),
+    ],
   };
 }
 
@@ -54,7 +65,11 @@ export function createSlidePattern(): Tool {
 
   return {
     down(table, pointer) {
-      state = { kind: 'pointing', what: onHandle(table, pointer) ? 'turn' : 'slide', from: pointer };
+      state = {
+        kind: 'pointing',
+        what: onHandle(table, pointer) ? 'turn' : 'slide',
+        from: pointer,
+      };
       return true;
     },
     move(table, pointer) {
@@ -71,14 +86,20 @@ export function createSlidePattern(): Tool {
           pointer.ground[1] - state.from.ground[1],
         ];
         const by: Point = pointer.shift
-          ? Math.abs(raw[0]) > Math.abs(raw[1]) ? [raw[0], 0] : [0, raw[1]]
+          ? Math.abs(raw[0]) > Math.abs(raw[1])
+            ? [raw[0], 0]
+            : [0, raw[1]]
           : raw;
         show({ ...document, placement: placementSlid(placement, by) });
         return;
       }
       const pivot = groundMiddle(document);
-      const angle = (Math.atan2(pointer.ground[1] - pivot[1], pointer.ground[0] - pivot[0]) * 180) / Math.PI;
-      const turn = snap && !pointer.free ? snappedTurn(document, turnNormal(angle)) : Math.round(angle * 10) / 10;
+      const angle =
+        (Math.atan2(pointer.ground[1] - pivot[1], pointer.ground[0] - pivot[0]) * 180) / Math.PI;
+      const turn =
+        snap && !pointer.free
+          ? snappedTurn(document, turnNormal(angle))
+          : Math.round(angle * 10) / 10;
       show({ ...document, placement: placementTurned(placement, turn, pivot) });
     },
     up(table) {
