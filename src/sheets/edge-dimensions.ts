@@ -140,7 +140,7 @@ function dimensionPlaced(
     for (const { middle, centre, reach } of textPlaces(line, u, outward, length, width)) {
       const at = baselineCentred(middle, height, turnDeg);
       const corners = lineCorners({ at, height, anchor: 'middle', turnDeg }, width);
-      const others = { ...space, lines: [...space.lines, ...ring.segments] };
+      const others = { ...space, lines: [...space.lines, ...ring.segments, ...extensionLines] };
       if (!isFree(others, corners)) continue;
       const stretches = lineStretches(line, u, centre, width / 2 + TEXT_GAP, reach);
       if (!stretches.every(({ from, to }) => lineAvoidsTexts({ from, to }, space))) continue;
@@ -294,7 +294,7 @@ function textPlaces(
   const past = TEXT_GAP + 1 + width / 2;
   return [
     ...broken,
-    { middle: at(length / 2, 2.4), centre: null, reach: 0 },
+    { middle: at(length / 2, 3.4), centre: null, reach: 0 },
     { middle: at(length + past, 0), centre: null, reach: TEXT_GAP + 0.4 },
     { middle: at(-past, 0), centre: null, reach: -TEXT_GAP - 0.4 },
   ];

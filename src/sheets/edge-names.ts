@@ -1,15 +1,14 @@
-/** Corners of the perimeter are A, B, C … Z, then A2, B2 …; those of keep-outs a, b, c …. */
-export function cornerName(ring: number, corner: number): string {
-  const letter = String.fromCharCode((ring === 0 ? 65 : 97) + (corner % 26));
-  const round = Math.floor(corner / 26);
-  return round === 0 ? letter : `${letter}${round + 1}`;
-}
+import { vertexLetter } from '@/paving/ground-edits';
+
+/** Corners of the perimeter are A, B, C … Z, then A1, B1 …, as on the table; those of keep-outs a, b, c …. */
+export const cornerName = (ring: number, corner: number): string =>
+  ring === 0 ? vertexLetter(corner) : vertexLetter(corner).toLowerCase();
 
 /** Keep-outs are named by their order: K1, K2 …. */
 export const keepOutName = (ring: number): string => `K${ring}`;
 
 /**
- * An edge by its two corners: `AB` on the perimeter, `K1 ab` on a keep-out; `Z–A2` once corners
+ * An edge by its two corners: `AB` on the perimeter, `K1 ab` on a keep-out; `Z–A1` once corners
  * take more than a letter.
  */
 export function edgeName(ring: number, edge: number, corners: number): string {

@@ -10,7 +10,7 @@ import type { FloorDrawing } from './floor-drawing';
 import { floorDrawing } from './floor-drawing';
 import { INK, inkMix } from './inks';
 import type { KeepOutPlace } from './keep-out-place';
-import type { LabelSpace } from './label-space';
+import type { LabelSpace, Segment } from './label-space';
 import { isInside, withLabels } from './label-space';
 import type { LabelPlace, PlacedLabels, WantedLabel } from './plan-labels';
 import { cornerLetters, labelPlaced, labelsPlaced, placesAlong, placesOff } from './plan-labels';
@@ -41,7 +41,7 @@ export function planDrawing(facts: PlanFacts, view: PlanView, frame: PaperBox): 
     keepOutStroke: { width: PENS.medium, colour: INK },
     unitStroke: { width: PENS.fine, colour: inkMix('#ffffff', INK, 0.75) },
     markTone: true,
-    grain: { spacing: 2.3, size: 0.24 },
+    grain: { spacing: 1.8, size: 0.3 },
   });
   const [perimeter, ...keepOuts] = laying.ground.rings;
   const lines = floor.rings.flatMap((ring) => ring.segments);
@@ -89,7 +89,7 @@ export function planDrawing(facts: PlanFacts, view: PlanView, frame: PaperBox): 
     ),
   );
   take(keepOutLabels(facts, view, floor, space));
-  take(startMark(facts, view, space));
+  take(startMark(facts, view, space, lines));
   take(
     labelsPlaced(
       report.edges
@@ -369,6 +369,7 @@ function startMark(
   { input, start }: PlanFacts,
   view: PlanView,
   space: LabelSpace,
+  rings: readonly Segment[],
 ): PlacedLabels | null {
   if (!start) return null;
   const { laid, motif } = input.laying;
@@ -391,6 +392,7 @@ function startMark(
       placesOff(middle, outward as unknown as PaperPoint, 2.4, [5, 8, 12]).map((place) => ({
         ...place,
         plate: true,
+        clearOf: rings,
       })),
     ),
   ];

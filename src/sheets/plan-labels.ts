@@ -25,6 +25,8 @@ export interface LabelPlace {
   readonly turnDeg: number;
   /** On a white plate over units and lines. */
   readonly plate?: boolean;
+  /** Lines that even a text on a plate keeps clear of. */
+  readonly clearOf?: readonly Segment[];
   /** A line from the text to what it names. */
   readonly leader?: Segment;
 }
@@ -46,11 +48,12 @@ export function labelPlaced(label: WantedLabel, space: LabelSpace): PlacedLabels
   const height = LETTERING.small;
   const weight = label.weight ?? 400;
   const width = textWidth(label.text, height, weight);
-  for (const { middle, turnDeg, plate, leader } of label.places) {
+  for (const { middle, turnDeg, plate, leader, clearOf = [] } of label.places) {
     const at = baselineCentred(middle, height, turnDeg);
     const line = { at, height, anchor: 'middle' as const, turnDeg };
     const corners = lineCorners(line, width);
     if (!isFree(space, corners, { overLines: plate })) continue;
+    if (!isFree({ ...space, outlines: [], lines: clearOf }, corners)) continue;
     if (leader && !lineAvoidsTexts(leader, space)) continue;
     const commands: DrawCommand[] = [];
     if (leader)

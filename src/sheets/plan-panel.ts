@@ -255,8 +255,8 @@ function edgeRows({ laying, report }: PlanInput, width: number): readonly PanelR
     if (bulge === 0) return [row];
     const chord = Math.hypot(end[0] - start[0], end[1] - start[1]);
     const radius = (chord * (1 + bulge * bulge)) / (4 * Math.abs(bulge));
-    const arc = `arc of radius ${lengthText(radius, display)}, chord ${lengthText(chord, display)}`;
-    return [{ ...row, keepsNext: true }, ...textRows(arc, width)];
+    const arc = `arc R ${figureText(radius, display)}, chord ${figureText(chord, display)}`;
+    return keptTogether([row, ...textRows(arc, width)]);
   });
   const unit = display === 'metric' ? ', in mm' : '';
   return [

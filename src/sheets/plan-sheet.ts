@@ -17,6 +17,7 @@ import { pointsBounds, viewCentred } from './plan-view';
 import { scaleFitting, scaleName } from './scales';
 import { startPoint } from './start-point';
 import { sheetText } from './text-measure';
+import { layingTinted } from './unit-drawing';
 import { TITLE_STRIP_HEIGHT, titleFrames, titleStrip } from './title-strip';
 
 /** One sheet of paper: a drawing, and the frames that its texts stay inside. */
@@ -53,8 +54,9 @@ interface Arrangement {
  * Letter and Tabloid for imperial) that shows units well. The first sheet has the plan; more
  * follow when the figures of its edges and notes need them.
  */
-export function planSheets(input: PlanInput): readonly Sheet[] {
-  const { laying } = input;
+export function planSheets(given: PlanInput): readonly Sheet[] {
+  const laying = layingTinted(given.laying);
+  const input = { ...given, laying };
   const facts: PlanFacts = {
     input,
     start: startPoint(laying),

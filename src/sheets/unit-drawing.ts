@@ -4,7 +4,7 @@ import { unitCorners } from '@/paving/laying';
 import type { Unit } from '@/paving/layout-document';
 import { unitTone } from '@/paving/tones';
 import type { DrawCommand, PaperPoint, PathRing, Stroke } from './drawing';
-import { AGGREGATE_COLOUR, UNIT_COLOUR, inkMix } from './inks';
+import { AGGREGATE_COLOUR, PAPER, UNIT_COLOUR, inkMix } from './inks';
 import type { PlanView } from './plan-view';
 import { paperFromGround } from './plan-view';
 
@@ -18,6 +18,30 @@ export const aggregateColour = (laying: Laying): string =>
   laying.document.aggregate?.colour ?? AGGREGATE_COLOUR;
 
 export const firstTone = (unit: Unit): string => unit.colour ?? UNIT_COLOUR;
+
+/** How far the screen's colours are lightened for paper; units more, so that they part from aggregate in grey. */
+const UNIT_TINT = 0.52;
+const AGGREGATE_TINT = 0.35;
+
+/** The same floor in lighter colours, for paper: figures and grain stay readable over it, in black and white too. */
+export function layingTinted(laying: Laying): Laying {
+  const lighter = (colour: string) => inkMix(colour, PAPER, UNIT_TINT);
+  const unitTinted = (unit: Unit): Unit => ({ ...unit, colour: lighter(firstTone(unit)) });
+  const { document } = laying;
+  return {
+    ...laying,
+    motif: laying.motif.map((entry) => ({ ...entry, unit: unitTinted(entry.unit) })),
+    document: {
+      ...document,
+      units: document.units.map(unitTinted),
+      tones: document.tones && { ...document.tones, second: lighter(document.tones.second) },
+      aggregate: {
+        name: document.aggregate?.name ?? 'Fill',
+        colour: inkMix(aggregateColour(laying), PAPER, AGGREGATE_TINT),
+      },
+    },
+  };
+}
 
 /** Every laid unit, one path for each unit and tone. */
 export function unitCommands(

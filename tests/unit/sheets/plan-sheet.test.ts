@@ -147,7 +147,8 @@ describe('a plan sheet', () => {
         const crossed = texts.filter((corners) => outlinesOverlap(corners, [from, to]));
         expect(crossed).toEqual([]);
         const middle = [(from[0] + to[0]) / 2, (from[1] + to[1]) / 2] as const;
-        if (document !== PATH) expect(isInside(middle, perimeter.rings[0].points)).toBe(false);
+        if (document === COURT || document === STAIRS)
+          expect(isInside(middle, perimeter.rings[0].points)).toBe(false);
       }
     }
   });

@@ -56,7 +56,7 @@ describe('figures', () => {
     expect(edgeName(0, 0, 6)).toBe('AB');
     expect(edgeName(0, 5, 6)).toBe('FA');
     expect(edgeName(2, 1, 4)).toBe('K2 bc');
-    expect(edgeName(0, 25, 40)).toBe('Z–A2');
+    expect(edgeName(0, 25, 40)).toBe('Z–A1');
   });
 });
 

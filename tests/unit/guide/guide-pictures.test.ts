@@ -1,0 +1,26 @@
+import { describe, expect, it } from 'vitest';
+import { floorPicture, sheetPicture, wholeUnits } from '@/components/guide/guide-pictures';
+import { BARE_GROUND, BOND_PATCHES, COURT, startedAt } from '@/components/guide/sample-floors';
+import { parseLayoutDocument } from '@/paving/layout-validation';
+
+describe('the guide’s pictures', () => {
+  it('are of floors that can be laid, one for each kind of bond but one’s own', () => {
+    const kinds = BOND_PATCHES.map(([, document]) => document.bond.kind);
+    expect(new Set(kinds).size).toBe(7);
+    for (const [name, document] of BOND_PATCHES) {
+      expect(parseLayoutDocument(document), name).toMatchObject({ ok: true });
+      expect(wholeUnits(document), name).toBeGreaterThan(8);
+    }
+  });
+
+  it('show bare ground without a unit, and a better start with more units than the first', () => {
+    expect(wholeUnits(BARE_GROUND)).toBe(0);
+    expect(wholeUnits(startedAt(234, 234))).toBeGreaterThan(wholeUnits(startedAt(0, 0)));
+  });
+
+  it('figure the ground and give gaps where the text speaks of them', () => {
+    expect(floorPicture(BARE_GROUND, 'ground')).not.toContain('gap ');
+    expect(floorPicture(COURT, 'gaps')).toContain('gap ');
+    expect(sheetPicture(COURT)).toContain('Issued for set-out');
+  });
+});
