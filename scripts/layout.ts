@@ -36,7 +36,7 @@ const usage = () =>
   ].join('\n');
 
 /** `ground.perimeter[2]: message` */
-export function problemLine({ path, message }: DocumentProblem): string {
+function problemLine({ path, message }: DocumentProblem): string {
   const field = path.reduce<string>(
     (before, step) =>
       typeof step === 'number' ? `${before}[${step}]` : before ? `${before}.${step}` : step,

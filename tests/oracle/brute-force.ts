@@ -219,19 +219,25 @@ export function oracleFloor(document: LayoutDocument): OracleFloor {
         const true_ = rectangle(0);
         const polygon = polygonOf(true_);
         const cover = SnapIfNeededOverlayOp.intersection(ground, polygon).getArea();
-        if (cover === 0 && !arcs) continue;
         const distance = Math.min(...boundary.map((ring) => DistanceOp.distance(ring, polygon)));
+        if (cover === 0) {
+          // Outside; where arcs are flattened otherwise, one that all but touches may be in.
+          if (arcs && distance < doubt) undecided.add(address);
+          continue;
+        }
         const slack = document.clearance - tolerance;
         let whole: boolean;
         if (slack > 0) {
           whole = cover > (length * width) / 2 && distance >= slack;
           if (Math.abs(distance - slack) < doubt) undecided.add(address);
         } else {
-          const core = (more: number) => polygonOf(rectangle(slack - more));
-          const outside = (more: number) =>
-            SnapIfNeededOverlayOp.difference(core(more), ground).getArea() > 1e-6;
-          whole = !outside(0);
-          if (outside(doubt) !== outside(-doubt)) undecided.add(address);
+          // It may reach over by the rest of the tolerance: shrunk by that, it meets no edge.
+          const meets = (more: number) => {
+            const core = polygonOf(rectangle(slack - more));
+            return boundary.some((ring) => DistanceOp.distance(ring, core) === 0);
+          };
+          whole = cover > (length * width) / 2 && !meets(0);
+          if (meets(doubt) !== meets(-doubt)) undecided.add(address);
         }
         if (whole && liftedByHand.has(address)) lifted.add(address);
         else if (whole) {

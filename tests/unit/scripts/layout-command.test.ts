@@ -1,0 +1,63 @@
+import { spawnSync } from 'node:child_process';
+import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { afterAll, expect, test } from 'vitest';
+import { layFloor } from '@/paving/laying';
+import { floorReport } from '@/paving/report';
+import { documentOf, parsed } from '../../oracle/documents';
+
+const root = fileURLToPath(new URL('../../../', import.meta.url));
+const folder = mkdtempSync(join(tmpdir(), 'layout-command-'));
+afterAll(() => rmSync(folder, { recursive: true }));
+
+function layout(args: string[], input = '') {
+  const { status, stdout, stderr } = spawnSync(
+    process.execPath,
+    ['--import', 'tsx', 'scripts/layout.ts', ...args],
+    { cwd: root, input, encoding: 'utf8' },
+  );
+  return { status, stdout, stderr };
+}
+
+function fileOf(name: string, text: string): string {
+  const file = join(folder, name);
+  writeFileSync(file, text);
+  return file;
+}
+
+const good = JSON.stringify(documentOf({}));
+const report = floorReport(layFloor(parsed(documentOf({}))));
+
+test('report prints the report as JSON and nothing else, from a file or standard input', () => {
+  const fromFile = layout(['report', fileOf('good.json', good)]);
+  expect(fromFile).toMatchObject({ status: 0, stderr: '' });
+  expect(JSON.parse(fromFile.stdout)).toEqual(report);
+  const fromInput = layout(['report', '-'], good);
+  expect(fromInput).toMatchObject({ status: 0, stderr: '', stdout: fromFile.stdout });
+});
+
+test('a document that is not valid prints each error with its path and exits with 2', () => {
+  const bad = { ...documentOf({}), clearance: -1, display: 'cubits' };
+  const { status, stdout, stderr } = layout(['report', '-'], JSON.stringify(bad));
+  expect({ status, stdout }).toEqual({ status: 2, stdout: '' });
+  const lines = stderr.trim().split('\n');
+  expect(lines).toHaveLength(2);
+  expect(lines[0]).toMatch(/^display: /);
+  expect(lines[1]).toMatch(/^clearance: /);
+});
+
+test.each([
+  ['a file that is not there', ['report', join(folder, 'none.json')], '', 'there is no file'],
+  ['what is not JSON', ['report', '-'], '{"schema": ', 'is not JSON'],
+  ['nothing at all on standard input', ['report', '-'], '', 'is not JSON'],
+  ['a folder', ['report', folder], '', 'cannot read'],
+  ['no arguments', [], '', 'report FILE|-'],
+  ['a task that there is not', ['polish', '-'], '', 'there is no task "polish"'],
+  ['an option that there is not', ['report', '-', '--loud'], good, '--loud'],
+])('%s exits with 2 and says so', (_, args, input, words) => {
+  const { status, stdout, stderr } = layout(args, input);
+  expect({ status, stdout }).toEqual({ status: 2, stdout: '' });
+  expect(stderr).toContain(words);
+});
