@@ -10,7 +10,7 @@ export interface Ratio {
 
 export interface Bench {
   readonly name: string;
-  readonly run: () => Ratio[];
+  readonly run: () => Ratio[] | Promise<Ratio[]>;
 }
 
 /** Median wall time of `runs` calls after `warm` calls that are not counted, ms. */

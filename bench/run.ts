@@ -2,6 +2,7 @@ import { readFile, writeFile } from 'node:fs/promises';
 import { growth } from './growth';
 import { layingAgainstClipping } from './laying-against-clipping';
 import type { Bench, Ratio } from './ratio';
+import { panFrames } from './pan-frames';
 import { usualFloor } from './usual-floor';
 
 /**
@@ -9,7 +10,7 @@ import { usualFloor } from './usual-floor';
  * asked of it and what it was when `--save` last kept it. Exits with 1 when a ratio falls short.
  */
 
-const benches: readonly Bench[] = [usualFloor, layingAgainstClipping, growth];
+const benches: readonly Bench[] = [usualFloor, layingAgainstClipping, growth, panFrames];
 const baselineFile = new URL('./baseline.json', import.meta.url);
 
 function holds({ value, least, greatest }: Ratio): boolean {
@@ -41,7 +42,7 @@ const baseline: Record<string, Record<string, number>> = JSON.parse(
 let failed = false;
 for (const bench of benches.filter(({ name }) => names.length === 0 || names.includes(name))) {
   console.log(`\n${bench.name}`);
-  const ratios = bench.run();
+  const ratios = await bench.run();
   const before = Object.values(baseline[bench.name] ?? {});
   ratios.forEach((ratio, n) => {
     const good = holds(ratio);
