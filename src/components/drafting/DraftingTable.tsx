@@ -5,6 +5,7 @@ import { useStore } from 'zustand';
 import type { DraftSaved, DraftState, SaveDraft } from '@/api-types/layouts';
 import { BOND_NAMES } from '@/paving/bond-edits';
 import { api } from '../ui/api';
+import { Mark } from '../ui/Mark';
 import { Segmented } from '../ui/Segmented';
 import { createDraftSync, type DraftSync } from './draft-sync';
 import { DrawEntry, type DrawEntryHandle } from './DrawEntry';
@@ -206,7 +207,7 @@ function Strip({
         className="flex items-center gap-2 px-4 text-lg font-bold md:pr-8"
         aria-label="Evenlay, your projects"
       >
-        <img src="/favicon.svg" alt="" width="26" height="26" className="mark" />
+        <Mark />
         <span className="hidden lg:inline">Evenlay</span>
       </a>
       <dl className="flex min-w-0 flex-1 items-stretch overflow-hidden">

@@ -67,7 +67,7 @@ export const DrawEntry = forwardRef<DrawEntryHandle>(function DrawEntry(_, ref) 
   };
   return (
     <form
-      className="absolute top-3 left-3 z-10 flex max-w-[calc(100%-1.5rem)] flex-wrap items-end gap-2 border border-line bg-stone-50 p-2"
+      className="absolute top-2 left-2 z-10 flex max-w-[calc(100%-1rem)] flex-wrap md:top-3 md:left-3 items-end gap-2 border border-line bg-stone-50 p-2"
       aria-label="The side being drawn"
       onSubmit={(event) => {
         event.preventDefault();
@@ -77,7 +77,7 @@ export const DrawEntry = forwardRef<DrawEntryHandle>(function DrawEntry(_, ref) 
         if (event.key === 'Escape') (event.target as HTMLElement).blur();
       }}
     >
-      <label className="block w-32">
+      <label className="block w-28 md:w-32">
         <span className="field-label">Length</span>
         <input
           ref={field}
@@ -92,7 +92,7 @@ export const DrawEntry = forwardRef<DrawEntryHandle>(function DrawEntry(_, ref) 
           }}
         />
       </label>
-      <label className="block w-24">
+      <label className="block w-20 md:w-24">
         <span className="field-label">Direction</span>
         <input
           className="field text-right"
@@ -112,7 +112,7 @@ export const DrawEntry = forwardRef<DrawEntryHandle>(function DrawEntry(_, ref) 
       </button>
       <button
         type="button"
-        className="button button-primary"
+        className="button button-primary max-md:hidden"
         disabled={drawing.corners.length < 3}
         onClick={() => ringClosed(table)}
       >

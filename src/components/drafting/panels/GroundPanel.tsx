@@ -1,3 +1,4 @@
+import { useEffect, useRef } from 'react';
 import { MapPin, Minus, Plus, Trash2 } from 'lucide-react';
 import {
   arcRise,
@@ -15,7 +16,6 @@ import {
   vertexMoved,
   type Ring,
 } from '@/paving/ground-edits';
-import { ringArea } from '@/geometry/ring';
 import { formatArea } from '@/paving/area';
 import { formatLength } from '@/paving/length';
 import { LengthField } from '../../ui/LengthField';
@@ -30,7 +30,6 @@ import {
   drawingLeft,
   keepOutRemoved,
 } from '../ground-actions';
-import { ringOutline } from '../ring-outline';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 import type { Pick } from '../table-store';
 import { cornerTakenBack, ringClosed } from '../tools/draw-ring';
@@ -51,11 +50,15 @@ function EdgeRow({ ring, edge }: { ring: number; edge: number }) {
   const picked = useTable(
     (state) => state.pick?.kind === 'edge' && state.pick.ring === ring && state.pick.edge === edge,
   );
+  const row = useRef<HTMLLIElement>(null);
+  useEffect(() => {
+    if (picked) row.current?.scrollIntoView({ block: 'nearest' });
+  }, [picked]);
   const vertices = documentRing(document, ring);
   const name = edgeName(document, ring, edge);
   const arc = vertexBulge(vertices[edge]) !== 0;
   return (
-    <li className="py-1">
+    <li ref={row} className="py-1">
       <div className="flex items-center gap-2">
         <button
           type="button"
@@ -235,7 +238,7 @@ export function GroundPanel() {
   const { document } = floor;
   if (drawing) return <DrawingPanel />;
   const { perimeter, keepOuts } = document.ground;
-  const area = floor.report?.groundArea ?? Math.abs(ringArea(ringOutline(perimeter))) / 1e6;
+  const area = floor.report?.groundArea;
 
   return (
     <div className="space-y-5">
@@ -256,7 +259,9 @@ export function GroundPanel() {
       <section aria-label="Perimeter">
         <div className="flex items-baseline justify-between border-b border-graphite pb-1">
           <h3>Perimeter</h3>
-          <span className="text-slate">{formatArea(area, document.display)}</span>
+          <span className="text-slate">
+            {area === undefined ? '–' : formatArea(area, document.display)}
+          </span>
         </div>
         <ul className="hairlines">
           {perimeter.map((_, edge) => (

@@ -170,11 +170,9 @@ function EdgeGaps() {
               key={`${edge.ring}.${edge.edge}`}
               className="hover:text-line"
               onPointerEnter={() =>
-                table
-                  .getState()
-                  .set({
-                    lit: { ring: edge.ring, edge: edge.edge, s: edge.length / 2, from: 'ribbon' },
-                  })
+                table.getState().set({
+                  lit: { ring: edge.ring, edge: edge.edge, s: edge.length / 2, from: 'ribbon' },
+                })
               }
               onPointerLeave={() => table.getState().set({ lit: null })}
             >

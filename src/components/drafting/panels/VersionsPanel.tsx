@@ -90,11 +90,9 @@ function Version({
     onSuccess: async (draft) => {
       sync.replaced(draft);
       setAsking(false);
-      table
-        .getState()
-        .set({
-          said: `The draft now starts from version ${version.number}. What it held is set aside.`,
-        });
+      table.getState().set({
+        said: `The draft now starts from version ${version.number}. What it held is set aside.`,
+      });
       await queries.invalidateQueries({ queryKey: ['set-aside', layoutId] });
     },
   });
