@@ -4,6 +4,8 @@ import { sheetText } from './text-measure';
 
 const OVER = '⁰¹²³⁴⁵⁶⁷⁸⁹';
 const UNDER = '₀₁₂₃₄₅₆₇₈₉';
+/** Between feet and inches: a line must not break there. */
+const FEET_SPACE = '\u00a0';
 const raised = (value: number, digits: string): string =>
   [...String(value)].map((digit) => digits[Number(digit)]).join('');
 
@@ -16,10 +18,10 @@ export function figureText(mm: number, display: Display, decimals = 0): string {
   const fraction = parts.fraction
     ? `${raised(parts.fraction[0], OVER)}⁄${raised(parts.fraction[1], UNDER)}`
     : '';
-  const between = /\d$/.test(parts.figures) ? '' : parts.figures === '' ? '' : ' ';
+  const between = /\d$/.test(parts.figures) ? '' : parts.figures === '' ? '' : FEET_SPACE;
   const unit = display === 'imperial' ? parts.unit : '';
   return sheetText(
-    `${parts.negative ? '−' : ''}${parts.figures}${fraction ? between + fraction : ''}${unit}`,
+    `${parts.negative ? '−' : ''}${parts.figures.replace(' ', FEET_SPACE)}${fraction ? between + fraction : ''}${unit}`,
   );
 }
 

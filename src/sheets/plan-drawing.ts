@@ -8,7 +8,7 @@ import { cornerName, keepOutName } from './edge-names';
 import { figureText, rangeText } from './figures';
 import type { FloorDrawing } from './floor-drawing';
 import { floorDrawing } from './floor-drawing';
-import { INK, inkMix } from './inks';
+import { INK, PAPER, inkMix } from './inks';
 import type { KeepOutPlace } from './keep-out-place';
 import type { LabelSpace, Segment } from './label-space';
 import { isInside, withLabels } from './label-space';
@@ -24,6 +24,8 @@ const MOST_FIGURED_EDGES = 80;
 /** Above this many laid units, or below this side on paper, courses are drawn. */
 const MOST_UNITS = 30_000;
 const LEAST_SIDE = 0.7;
+/** Smaller units on paper than this are outlined lighter, mm, or their lines would darken the whole floor. */
+const SMALL_SIDE = 2;
 
 export interface PlanDrawing {
   readonly layers: readonly Layer[];
@@ -34,12 +36,14 @@ export interface PlanDrawing {
 export function planDrawing(facts: PlanFacts, view: PlanView, frame: PaperBox): PlanDrawing {
   const { laying, report } = facts.input;
   const { display } = laying.document;
+  const side = Math.min(...laying.motif.map(({ unit }) => Math.min(unit.length, unit.width)));
+  const unitInk = side / view.scale < SMALL_SIDE ? 0.4 : 0.75;
   const floor = floorDrawing(laying, view, {
     mostUnits: MOST_UNITS,
     leastSide: LEAST_SIDE,
     outline: { width: PENS.thick, colour: INK },
     keepOutStroke: { width: PENS.medium, colour: INK },
-    unitStroke: { width: PENS.fine, colour: inkMix('#ffffff', INK, 0.75) },
+    unitStroke: { width: PENS.fine, colour: inkMix(PAPER, INK, unitInk) },
     markTone: true,
     grain: { spacing: 1.8, size: 0.3 },
   });
@@ -151,7 +155,7 @@ function crossCommands(edges: readonly GroundEdge[], view: PlanView): readonly D
     kind: 'line',
     from: corners[n],
     to: corners[n + 2],
-    stroke: { width: PENS.fine, colour: inkMix('#ffffff', INK, 0.4) },
+    stroke: { width: PENS.fine, colour: inkMix(PAPER, INK, 0.4) },
   }));
 }
 

@@ -30,6 +30,8 @@ export interface Sheet extends Drawing {
 
 /** White space round the ground for a line of dimensions and the corners' letters, mm. */
 const DIMENSION_MARGIN = 15;
+/** Characters. */
+const LONG_NOTES = 400;
 const COLUMN_WIDTH = 66;
 const COLUMN_INSET = 3;
 /** A portrait sheet's band of columns may take at most this share of the frame. */
@@ -64,12 +66,20 @@ export function planSheets(given: PlanInput): readonly Sheet[] {
     asCourses: false,
   };
   const bounds = pointsBounds(laying.ground.rings[0].edges.flatMap((edge) => edge.chords));
-  const arrangement = arrangementChosen(facts, bounds);
+  const arrangement = arrangementChosen(factsDeciding(facts), bounds);
   return sheetsDrawn(facts, bounds, arrangement);
 }
 
 /** The first sheet: the plan itself. */
 export const planSheet = (input: PlanInput): Sheet => planSheets(input)[0];
+
+/** Long notes go where there is room, on a further sheet if need be; they do not decide the paper. */
+function factsDeciding(facts: PlanFacts): PlanFacts {
+  const { laying } = facts.input;
+  if ((laying.document.notes ?? '').length <= LONG_NOTES) return facts;
+  const document = { ...laying.document, notes: undefined };
+  return { ...facts, input: { ...facts.input, laying: { ...laying, document } } };
+}
 
 function arrangementChosen(facts: PlanFacts, bounds: GroundBounds): Arrangement {
   const { paper } = facts.input;

@@ -1,3 +1,4 @@
+import './sheet-fonts.css';
 import { useEffect, useMemo, useRef, useState } from 'react';
 import type { VersionDetail } from '@/api-types/versions';
 import type { Drawing } from '@/sheets/drawing';
@@ -15,7 +16,7 @@ const PIXELS_PER_MM = 3.7;
 /** Room round the floor for its dimensions, mm of the drawing. */
 const MARGIN = 15;
 const FOOT = 13;
-const GREATEST_ZOOM = 24;
+const GREATEST_ZOOM = 12;
 const ZOOM_STEP = 1.25;
 
 interface Look {

@@ -1,3 +1,4 @@
+import './sheet-fonts.css';
 import { useMemo, useState } from 'react';
 import type { VersionDetail } from '@/api-types/versions';
 import type { PaperName } from '@/sheets/paper';

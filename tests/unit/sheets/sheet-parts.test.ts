@@ -46,8 +46,8 @@ describe('figures', () => {
   it('part thousands, and set sixteenths as fractions', () => {
     expect(figureText(7200, 'metric')).toBe('7\u2009200');
     // 23 ft 7 7/16 in = 283.4375 in of 25.4 mm (NIST SP 811).
-    expect(figureText(283.4375 * 25.4, 'imperial')).toBe('23\' 7⁷⁄₁₆"');
-    expect(figureText(12.5 * 25.4, 'imperial')).toBe('1\' ¹⁄₂"');
+    expect(figureText(283.4375 * 25.4, 'imperial')).toBe('23\'\u00a07⁷⁄₁₆"');
+    expect(figureText(12.5 * 25.4, 'imperial')).toBe('1\'\u00a0¹⁄₂"');
     expect(rangeText(11.2, 26.4, 'metric')).toBe('11–26');
     expect(rangeText(11.2, 11.4, 'metric')).toBe('11');
   });
