@@ -8,6 +8,10 @@ export const displaySchema = z.enum(['metric', 'imperial'], {
 });
 export type Display = z.infer<typeof displaySchema>;
 
+/** How often comments not yet read are gathered into one letter. */
+export const mailDigests = ['hourly', 'daily', 'never'] as const;
+export type MailDigest = (typeof mailDigests)[number];
+
 const name = (of: string) =>
   z
     .string({ error: `Give ${of}` })

@@ -50,10 +50,37 @@ test('every row that belongs to a firm says which', async () => {
       where c.table_name = t.table_name and c.column_name = 'firm_id')`)) as unknown as {
     rows: { name: string }[];
   };
-  // A person may be of several firms, and an attempt to sign in is counted before anybody is known.
+  // A person may be of several firms, a new password is theirs in all of them, and an attempt to sign in is
+  // counted before anybody is known.
   expect(result.rows.map(({ name }) => name).sort()).toEqual([
     'firms',
+    'password_resets',
     'people',
     'sign_in_attempts',
   ]);
+});
+
+test('what is on record is never altered or deleted, by the database itself', async () => {
+  const statements = ['acceptances', 'audit_events'].flatMap((table) => [
+    `truncate ${table} cascade`,
+    `update ${table} set at = now()`,
+    `delete from ${table}`,
+  ]);
+  const database = await db();
+  await database.execute(sql`insert into firms (id, name) values ('f', 'Firm')`);
+  await database.execute(
+    sql`insert into people (id, email, name, password_hash) values ('p', 'p@firm.example', 'P', '')`,
+  );
+  await database.execute(
+    sql`insert into audit_events (id, firm_id, person_id, what, subject_type, subject_id, detail)
+      values ('a', 'f', 'p', 'x', 'x', 'x', '{}')`,
+  );
+  // Rows of acceptances hang on a version; the statements on all rows are tried where there is one.
+  for (const statement of statements.filter(
+    (text) => !/^(update|delete).*acceptances/.test(text),
+  )) {
+    await expect(database.execute(sql.raw(statement)), statement).rejects.toMatchObject({
+      cause: { message: expect.stringMatching(/never altered or deleted/) },
+    });
+  }
 });

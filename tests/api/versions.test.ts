@@ -190,7 +190,7 @@ test.each([
   ['update version_events set note = $$altered$$'],
   ['delete from versions'],
   ['truncate versions cascade'],
-  ['truncate version_events'],
+  ['truncate version_events cascade'],
 ])('the database itself refuses: %s', async (statement) => {
   const { visitor, layoutId } = await start();
   await newVersion(visitor, layoutId);
