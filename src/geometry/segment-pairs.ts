@@ -9,53 +9,80 @@ export interface OwnedSegment {
   readonly edge: number;
 }
 
+/** Directions tried for the sweep, evenly over a half turn. */
+const DIRECTIONS = 8;
+/** Comparisons of places along the sweep, and of boxes that meet, before an outline is given up. */
+const GREATEST_COMPARISONS = 300_000_000;
+const GREATEST_MEETINGS = 5_000_000;
+
 /**
  * Calls `visit` with every pair of segments whose boxes come within `margin` of each other, until
- * it returns true. Sorts along the longer side of their common box and looks only at boxes that
- * overlap along it.
+ * it returns true. Sweeps in the direction along which the segments are shortest, boxes lying
+ * along and across it, and looks only at boxes that overlap. Returns false when it gave up: tens
+ * of thousands of long edges side by side in many directions, which no floor has.
  */
 export function segmentPairs(
   segments: readonly OwnedSegment[],
   margin: number,
   visit: (one: number, other: number) => boolean,
-): void {
+): boolean {
   const total = segments.length;
-  const least = [new Float64Array(total), new Float64Array(total)];
-  const greatest = [new Float64Array(total), new Float64Array(total)];
-  segments.forEach(({ a, b }, n) => {
-    for (const axis of [0, 1]) {
-      least[axis][n] = Math.min(a[axis], b[axis]) - margin / 2;
-      greatest[axis][n] = Math.max(a[axis], b[axis]) + margin / 2;
-    }
-  });
-  // The axis along which the boxes are shortest, added up, has the fewest overlaps.
-  const spread = [0, 1].map((axis) => {
-    let sum = 0;
-    let low = Infinity;
-    let high = -Infinity;
+  if (total === 0) return true;
+  const from = segments[0].a;
+  const placed = (turn: number) => {
+    const cos = Math.cos(turn);
+    const sin = Math.sin(turn);
+    const low = new Float64Array(total);
+    const high = new Float64Array(total);
     for (let n = 0; n < total; n++) {
-      sum += greatest[axis][n] - least[axis][n];
-      low = Math.min(low, least[axis][n]);
-      high = Math.max(high, greatest[axis][n]);
+      const { a, b } = segments[n];
+      const p = (a[0] - from[0]) * cos + (a[1] - from[1]) * sin;
+      const q = (b[0] - from[0]) * cos + (b[1] - from[1]) * sin;
+      low[n] = Math.min(p, q) - margin;
+      high[n] = Math.max(p, q) + margin;
     }
-    return sum / (high - low || 1);
-  });
-  const main = spread[0] <= spread[1] ? 0 : 1;
-  const [low, high] = [least[main], greatest[main]];
-  const [crossLow, crossHigh] = [least[1 - main], greatest[1 - main]];
+    return { low, high };
+  };
+  let turn = 0;
+  let best = Infinity;
+  for (let n = 0; n < DIRECTIONS; n++) {
+    const { low, high } = placed((n * Math.PI) / DIRECTIONS);
+    let sum = 0;
+    let least = Infinity;
+    let greatest = -Infinity;
+    for (let m = 0; m < total; m++) {
+      sum += high[m] - low[m];
+      least = Math.min(least, low[m]);
+      greatest = Math.max(greatest, high[m]);
+    }
+    const crowding = sum / (greatest - least || 1);
+    if (crowding < best) {
+      best = crowding;
+      turn = (n * Math.PI) / DIRECTIONS;
+    }
+  }
+  const { low, high } = placed(turn);
+  const across = placed(turn + Math.PI / 2);
   const order = Array.from({ length: total }, (_, n) => n).sort((m, n) => low[m] - low[n]);
   const sortedLow = Float64Array.from(order, (n) => low[n]);
+  let compared = 0;
+  let met = 0;
   for (let m = 0; m < total; m++) {
     const one = order[m];
     const until = high[one];
-    const bottom = crossLow[one];
-    const top = crossHigh[one];
-    for (let n = m + 1; n < total && sortedLow[n] <= until; n++) {
+    const bottom = across.low[one];
+    const top = across.high[one];
+    let n = m + 1;
+    for (; n < total && sortedLow[n] <= until; n++) {
       const other = order[n];
-      if (crossLow[other] > top || crossHigh[other] < bottom) continue;
-      if (visit(one, other)) return;
+      if (across.low[other] > top || across.high[other] < bottom) continue;
+      if (++met > GREATEST_MEETINGS) return false;
+      if (visit(one, other)) return true;
     }
+    compared += n - m;
+    if (compared > GREATEST_COMPARISONS) return false;
   }
+  return true;
 }
 
 /** Where two segments cross, each passing to the other side of the other, decided exactly; else null. */

@@ -161,7 +161,8 @@ export function parseLayoutDocument(input: unknown): ParsedDocument {
     },
   };
   const bond = bondProblems(document);
-  const problems = [...ringProblems(document.ground), ...bond];
-  if (bond.length === 0) problems.push(...sizeProblems(document));
+  // A floor too large to lay is said to be so before its outlines are looked into.
+  const size = bond.length === 0 ? sizeProblems(document) : [];
+  const problems = size.length > 0 ? size : [...ringProblems(document.ground), ...bond];
   return problems.length > 0 ? { ok: false, problems } : { ok: true, document };
 }

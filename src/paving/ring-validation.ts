@@ -1,4 +1,4 @@
-import { arcSegmentArea, arcSteps } from '@/geometry/arc';
+import { arcIsStraight, arcSegmentArea, arcSteps } from '@/geometry/arc';
 import { regionClip } from '@/geometry/clipping';
 import type { Point } from '@/geometry/point';
 import { ringArea, ringHolds } from '@/geometry/ring';
@@ -15,7 +15,7 @@ import { groundRing, ringEdges, type GroundRing } from './ground';
 import type { LayoutDocument, Vertex } from './layout-document';
 
 /** The ground of one document may come to this many chords, arcs flattened. */
-export const GREATEST_CHORDS = 20_000;
+export const GREATEST_CHORDS = 50_000;
 
 /** Area inside a ring with its arcs, mm², positive when it runs anticlockwise. */
 export function vertexRingArea(ring: readonly Vertex[]): number {
@@ -68,10 +68,7 @@ function cornerProblems(ground: LayoutDocument['ground']): DocumentProblem[] {
           at: start,
         });
       } else {
-        chords += Math.max(
-          arcSteps(start, end, bulge, 'inscribed'),
-          arcSteps(start, end, bulge, 'tangent') + 1,
-        );
+        chords += arcIsStraight(start, end, bulge) ? 1 : arcSteps(start, end, bulge, 'tangent') + 1;
       }
     });
   }
@@ -100,6 +97,14 @@ function foldsBack(a: Point, b: Point, c: Point): boolean {
   );
 }
 
+function tooIntricate(path: (string | number)[]): DocumentProblem {
+  return {
+    path,
+    message:
+      'has too many long edges side by side to be checked for crossings; leave out corners, or split the floor',
+  };
+}
+
 /** Where one ring crosses, touches or folds back on itself: the first such place, or null. */
 function ringProblem(ring: GroundRing, path: (string | number)[]): DocumentProblem | null {
   const segments = ringSegments(ring);
@@ -116,7 +121,7 @@ function ringProblem(ring: GroundRing, path: (string | number)[]): DocumentProbl
       };
     }
   }
-  segmentPairs(segments, LENGTH_TOLERANCE_MM, (m, n) => {
+  const checked = segmentPairs(segments, LENGTH_TOLERANCE_MM, (m, n) => {
     const one = segments[m];
     const other = segments[n];
     const apart = Math.abs(m - n);
@@ -151,7 +156,7 @@ function ringProblem(ring: GroundRing, path: (string | number)[]): DocumentProbl
     }
     return false;
   });
-  return crossing ?? touching;
+  return crossing ?? touching ?? (checked ? null : tooIntricate(path));
 }
 
 /** Keep-outs that cross or leave the perimeter, or overlap each other, by more than 1 mm². */
@@ -163,7 +168,7 @@ function keepOutProblems(
   const meets = new Map<string, Point>();
   const crossed = new Set<string>();
   const segments = rings.flatMap(ringSegments);
-  segmentPairs(segments, LENGTH_TOLERANCE_MM, (m, n) => {
+  const checked = segmentPairs(segments, LENGTH_TOLERANCE_MM, (m, n) => {
     const one = segments[m];
     const other = segments[n];
     if (one.ring === other.ring) return false;
@@ -177,6 +182,7 @@ function keepOutProblems(
     if (at) meets.set(key, at);
     return false;
   });
+  if (!checked) return [tooIntricate(['ground'])];
   // Two arcs drawn along each other part by a sagitta either side once they are flattened.
   const allowance = (ring: GroundRing) =>
     ring.edges.reduce(

@@ -190,6 +190,68 @@ export function anyDocument({ arcs = false, clearance }: DocumentChoices = {}) {
     );
 }
 
+/**
+ * Floors on a grid of 50 mm: units touch edges, corners and each other exactly, run through
+ * the middle by keep-outs that share sides with each other and with the perimeter.
+ */
+export const gridDocument = fc
+  .record({
+    columns: fc.integer({ min: 30, max: 70 }),
+    rows: fc.integer({ min: 20, max: 50 }),
+    notch: fc.tuple(fc.integer({ min: 0, max: 20 }), fc.integer({ min: 0, max: 15 })),
+    beds: fc.uniqueArray(fc.nat(8), { maxLength: 5 }),
+    bed: fc.tuple(fc.integer({ min: 2, max: 6 }), fc.integer({ min: 2, max: 6 })),
+    at: fc.tuple(fc.integer({ min: 0, max: 12 }), fc.integer({ min: 0, max: 2 })),
+    length: fc.integer({ min: 4, max: 12 }),
+    width: fc.integer({ min: 4, max: 10 }),
+    kind: fc.constantFrom('stack', 'running', 'chequer', 'stepping', 'herringbone'),
+    origin: fc.tuple(fc.integer({ min: -10, max: 10 }), fc.integer({ min: -10, max: 10 })),
+    turn: fc.constantFrom(0, 90, 180, 270),
+    clearance: fc.constantFrom(0, 0, 50, 100),
+  })
+  .map((parts) => {
+    const step = 50;
+    const { kind, notch, bed, at } = parts;
+    const [right, top] = [parts.columns * step, parts.rows * step];
+    const corner: Vertex[] =
+      notch[0] > 0 && notch[1] > 0
+        ? [
+            [right, top - notch[1] * step],
+            [right - notch[0] * step, top - notch[1] * step],
+            [right - notch[0] * step, top],
+          ]
+        : [[right, top]];
+    const keepOuts = parts.beds.map((place) => {
+      const x = (at[0] + (place % 3) * bed[0]) * step;
+      const y = (at[1] + Math.floor(place / 3) * bed[1]) * step;
+      const ring: Vertex[] = [
+        [x, y],
+        [x + bed[0] * step, y],
+        [x + bed[0] * step, y + bed[1] * step],
+        [x, y + bed[1] * step],
+      ];
+      return { name: `Bed ${place}`, ring };
+    });
+    const [length, width] = [parts.length * step, parts.width * step];
+    const bonds: Record<typeof kind, Bond> = {
+      stack: { kind: 'stack', unit: 'a', joint: 0 },
+      running: { kind: 'running', unit: 'a', joint: 50, shift: 0.5 },
+      chequer: { kind: 'chequer', unit: 'a', joint: 0 },
+      stepping: { kind: 'stepping', unit: 'a', pitch: [length + 50, width + 100], shift: 0 },
+      herringbone: { kind: 'herringbone', unit: 'a', joint: 0 },
+    };
+    return documentOf({
+      ground: { perimeter: [[0, 0], [right, 0], ...corner, [0, top]], keepOuts },
+      units: [unitOf('a', kind === 'herringbone' ? 2 * width : length, width)],
+      bond: bonds[kind],
+      placement: {
+        origin: [parts.origin[0] * step, parts.origin[1] * step],
+        turn: parts.turn,
+      },
+      clearance: parts.clearance,
+    });
+  });
+
 /** The document with its bond written out as a custom one: the same floor, addresses and joint. */
 export function asCustom(document: LayoutDocument): LayoutDocument {
   const { a, b, motif, joint } = bondPattern(document);

@@ -218,11 +218,11 @@ describe('rings', () => {
   });
 
   test('outlines of too many pieces are refused before anything is worked out', () => {
-    const ring = Array.from({ length: 25_000 }, (_, n): Vertex => {
-      const angle = (n / 25_000) * 2 * Math.PI;
-      return [40_000 * Math.cos(angle), 40_000 * Math.sin(angle)];
+    const ring = Array.from({ length: 60_000 }, (_, n): Vertex => {
+      const angle = (n / 60_000) * 2 * Math.PI;
+      return [200_000 * Math.cos(angle), 200_000 * Math.sin(angle)];
     });
-    expect(firstProblem(withPerimeter(ring)).message).toContain('20000');
+    expect(firstProblem(withPerimeter(ring)).message).toContain('50000');
   });
 });
 
