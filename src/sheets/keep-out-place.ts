@@ -33,6 +33,8 @@ const FOOT_TOLERANCE = 0.5;
 const MOST_TAPES = 12;
 /** Edges nearer to parallel than this do not fix a point, radians. */
 const LEAST_ANGLE = Math.PI / 6;
+/** Two edges square to each other within 10° are taken before others: their tapes are easiest to hold. */
+const NEARLY_SQUARE = (80 * Math.PI) / 180;
 
 export function keepOutPlace(ground: Ground, ring: GroundRing): KeepOutPlace {
   const circle = circleOf(ring);
@@ -71,9 +73,9 @@ function nearestPair(ground: Ground, point: Point): readonly Offset[] {
     .sort((p, q) => p.distance - q.distance);
   const [first] = candidates;
   if (!first) return [];
-  const second = candidates.find(
-    ({ angle }) => Math.abs(Math.sin(angle - first.angle)) > Math.sin(LEAST_ANGLE),
-  );
+  const angled = (least: number) =>
+    candidates.find(({ angle }) => Math.abs(Math.sin(angle - first.angle)) > Math.sin(least));
+  const second = angled(NEARLY_SQUARE) ?? angled(LEAST_ANGLE);
   return second ? [first, second] : [first];
 }
 

@@ -274,7 +274,7 @@ function keepOutLabels(
         );
     } else {
       take(labelsPlaced(sizeLabels(ring.edges, view, display, outline), space));
-      take(labelsPlaced(cornerNames(ring.edges, place.ring, view, outline), space));
+      take(labelsPlaced(cornerNames(ring.edges, place, view, outline), space));
     }
     for (const offset of place.offsets) take(placingDimension(offset, view, display, space));
   }
@@ -319,14 +319,15 @@ function sizeLabels(
     });
 }
 
-/** Small letters of a keep-out's corners, just inside them. */
+/** Small letters of a keep-out's corners, just inside them; the one that is measured to first. */
 function cornerNames(
   edges: readonly GroundEdge[],
-  ring: number,
+  { ring, corner }: KeepOutPlace,
   view: PlanView,
   outline: readonly PaperPoint[],
 ): readonly WantedLabel[] {
-  return edges.map((_, n) => {
+  const order = edges.map((_, n) => n).sort((p, q) => Number(q === corner) - Number(p === corner));
+  return order.map((n) => {
     const { at, outward } = letteredCorner(edges, n, view);
     const places = [3.4, 4.4]
       .map((distance): PaperPoint => [at[0] - outward[0] * distance, at[1] - outward[1] * distance])

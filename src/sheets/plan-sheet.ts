@@ -96,7 +96,7 @@ function arrangementChosen(facts: PlanFacts, bounds: GroundBounds): Arrangement 
 const leastUnitSide = (laying: Laying): number =>
   Math.min(...laying.motif.map(({ unit }) => Math.min(unit.length, unit.width)));
 
-/** Of a paper's arrangements: none that spills where another does not; then the largest scale; then the roomiest. */
+/** Of a paper's arrangements: none that spills where another does not; then the largest scale; then lying as the ground does; then the roomiest. */
 function bestArrangement(facts: PlanFacts, bounds: GroundBounds, name: PaperName): Arrangement {
   const orientations: readonly Orientation[] = ['landscape', 'portrait'];
   const candidates = orientations.flatMap((orientation) => {
@@ -109,8 +109,15 @@ function bestArrangement(facts: PlanFacts, bounds: GroundBounds, name: PaperName
     const size = boundsSize(bounds);
     return Math.min(boxWidth(drawing) / size[0], boxHeight(drawing) / size[1]);
   };
+  const [across, up] = boundsSize(bounds);
+  const lying = across > up * 1.15 ? 'landscape' : across * 1.15 < up ? 'portrait' : null;
+  const against = ({ paper }: Arrangement) => Number(lying !== null && paper.orientation !== lying);
   return [...candidates].sort(
-    (p, q) => Number(p.spills) - Number(q.spills) || p.scale - q.scale || room(q) - room(p),
+    (p, q) =>
+      Number(p.spills) - Number(q.spills) ||
+      p.scale - q.scale ||
+      against(p) - against(q) ||
+      room(q) - room(p),
   )[0];
 }
 
