@@ -17,15 +17,32 @@ export const newLayoutSchema = z.object({
 });
 export type NewLayout = z.input<typeof newLayoutSchema>;
 
-/** PATCH /api/layouts/{id}. 200 → `LayoutSummary`. */
-export const layoutChangeSchema = z.object({ name: layoutName });
+/**
+ * PATCH /api/layouts/{id}: renames it, moves it to another project of the firm, archives or restores it. A layout
+ * of which a version was shared moves only to a project with the same people on it: 422 `invalid`. 200 → `LayoutSummary`.
+ */
+export const layoutChangeSchema = z
+  .object({ name: layoutName, projectId: z.string().min(1), archived: z.boolean() })
+  .partial();
 export type LayoutChange = z.input<typeof layoutChangeSchema>;
+
+/**
+ * POST /api/layouts/{id}/duplicate: a new layout from the draft, or from a version of the layout, in the
+ * same project or another. Versions and comments stay with the first. 201 → `LayoutSummary`.
+ */
+export const duplicateLayoutSchema = z.object({
+  name: layoutName.optional(),
+  projectId: z.string().min(1).optional(),
+  versionId: z.string().min(1).optional(),
+});
+export type DuplicateLayout = z.input<typeof duplicateLayoutSchema>;
 
 export interface LayoutSummary {
   readonly id: string;
   readonly projectId: string;
   readonly name: string;
   readonly createdAt: string;
+  readonly archivedAt: string | null;
   /** When its draft was last saved; null for those who may not see drafts. */
   readonly draftedAt: string | null;
   readonly draftRevision: number | null;

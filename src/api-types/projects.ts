@@ -25,7 +25,41 @@ export type NewProject = z.input<typeof newProjectSchema>;
 export const projectChangeSchema = projectFields.extend({ archived: z.boolean() }).partial();
 export type ProjectChange = z.input<typeof projectChangeSchema>;
 
-/** GET /api/projects → `{ projects: ProjectSummary[] }`, last touched first, archived ones included. */
+export const projectSorts = ['updated', 'name', 'client', 'stage'] as const;
+export type ProjectSort = (typeof projectSorts)[number];
+
+export const projectStages = [
+  'draft',
+  'superseded',
+  'saved',
+  'shared',
+  'change_asked',
+  'accepted',
+  'issued',
+] as const satisfies readonly (VersionState | 'draft')[];
+
+/**
+ * GET /api/projects?search=…&stage=…&archived=…&sort=…&size=…&after=… → `ProjectPage`. Asked for nothing it
+ * gives the first page of all, last touched first, archived ones included. `search` finds the beginnings of words of
+ * name and client, all of them. `updated` and `stage` sort the newest and furthest first.
+ */
+export const projectQuerySchema = z.object({
+  search: z.string().trim().max(120).optional(),
+  stage: z.enum(projectStages).optional(),
+  archived: z.enum(['no', 'only', 'all']).default('all'),
+  sort: z.enum(projectSorts).default('updated'),
+  size: z.coerce.number().int().min(1).max(100).default(50),
+  after: z.string().max(600).optional(),
+});
+export type ProjectQuery = z.input<typeof projectQuerySchema>;
+
+export interface ProjectPage {
+  readonly projects: readonly ProjectSummary[];
+  /** Ask for the next page `after` this; null at the end. */
+  readonly next: string | null;
+}
+
+/** A project in a list. */
 export interface ProjectSummary {
   readonly id: string;
   readonly name: string;

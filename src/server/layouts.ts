@@ -80,6 +80,7 @@ const summaries = async (
       projectId: layout.projectId,
       name: layout.name,
       createdAt: layout.createdAt.toISOString(),
+      archivedAt: layout.archivedAt?.toISOString() ?? null,
       draftedAt: seesDrafts ? draft.updatedAt.toISOString() : null,
       draftRevision: seesDrafts ? draft.revision : null,
       versions: counts.get(layout.id) ?? 0,
