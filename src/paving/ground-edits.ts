@@ -151,16 +151,3 @@ export function edgeMiddle(ring: Ring, edge: number): Point {
     (start[1] + end[1]) / 2 - (end[0] - start[0]) * half,
   ];
 }
-
-/** The name of a vertex as the drawing letters it: A … Z, then A1 … Z1 and so on. */
-export function vertexLetter(vertex: number): string {
-  const round = Math.floor(vertex / 26);
-  return String.fromCharCode(65 + (vertex % 26)) + (round > 0 ? String(round) : '');
-}
-
-/** The name of an edge: `AB` on the perimeter, `Tree pit 1` on a keep-out. */
-export function edgeName(document: LayoutDocument, ring: number, edge: number): string {
-  if (ring > 0) return `${document.ground.keepOuts[ring - 1].name} ${edge + 1}`;
-  const count = document.ground.perimeter.length;
-  return vertexLetter(edge) + vertexLetter((edge + 1) % count);
-}

@@ -1,3 +1,4 @@
+import { edgeName } from './edge-names';
 import { arcIsStraight, arcSegmentArea, arcSteps } from '@/geometry/arc';
 import { regionClip } from '@/geometry/clipping';
 import type { Point } from '@/geometry/point';
@@ -131,7 +132,7 @@ function ringProblem(ring: GroundRing, path: (string | number)[]): DocumentProbl
       const [first, second] = [one.edge, other.edge].sort((p, q) => p - q);
       crossing = {
         path,
-        message: `crosses itself at ${shownPlace(at)}, where edge ${first + 1} meets edge ${second + 1}; move a corner so that they part`,
+        message: `crosses itself at ${shownPlace(at)}, where edge ${edgeName(ring.ring, first, edgeCount)} meets edge ${edgeName(ring.ring, second, edgeCount)}; move a corner so that they part`,
         at,
       };
       return true;

@@ -4,7 +4,7 @@ import type { DrawCommand, Layer, PaperBox, PaperPoint } from './drawing';
 import { PENS } from './drawing';
 import type { DimensionedEdge, Outline } from './edge-dimensions';
 import { edgeDimensions, readingTurn, tick } from './edge-dimensions';
-import { cornerName, keepOutName } from './edge-names';
+import { cornerName, keepOutName } from '@/paving/edge-names';
 import { figureText, rangeText } from './figures';
 import type { FloorDrawing } from './floor-drawing';
 import { floorDrawing } from './floor-drawing';

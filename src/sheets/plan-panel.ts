@@ -4,7 +4,7 @@ import { MM_PER_FOOT, MM_PER_INCH } from '@/paving/length';
 import { floorCautions } from './cautions';
 import type { DrawCommand, PaperBox } from './drawing';
 import { PENS, boxRing } from './drawing';
-import { cornerName, edgeName, keepOutName } from './edge-names';
+import { cornerName, edgeName, keepOutName } from '@/paving/edge-names';
 import { countText, figureText, lengthText, rangeText } from './figures';
 import { INK, KEEP_OUT_COLOUR, inkMix } from './inks';
 import type { KeepOutPlace } from './keep-out-place';

@@ -1,5 +1,6 @@
 import { useMemo, useRef, useState, type PointerEvent } from 'react';
-import { documentRing, documentRingCount, edgeLength, edgeName } from '@/paving/ground-edits';
+import { documentRing, documentRingCount, edgeLength } from '@/paving/ground-edits';
+import { documentEdgeName } from '@/paving/edge-names';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { formatLength } from '@/paving/length';
 import { PLAIN_AGGREGATE } from '../ui/drawing-colours';
@@ -110,7 +111,7 @@ export function GapRibbon() {
     <section aria-label="Gap ribbon" className="px-4 py-2">
       <div className="relative h-5 overflow-hidden text-[0.8rem]" aria-hidden="true">
         {spans.map((span) => {
-          const name = edgeName(document, span.ring, span.edge);
+          const name = documentEdgeName(document, span.ring, span.edge);
           const room = (((span.to - span.from) / WIDTH) * widthPx - 6) / CHARACTER_PX;
           return room < name.length ? null : (
             <span
@@ -134,7 +135,7 @@ export function GapRibbon() {
         aria-valuenow={focused}
         aria-valuetext={
           spans[focused]
-            ? `Edge ${edgeName(document, spans[focused].ring, spans[focused].edge)}, gap ${label(spans[focused])}`
+            ? `Edge ${documentEdgeName(document, spans[focused].ring, spans[focused].edge)}, gap ${label(spans[focused])}`
             : undefined
         }
         data-testid="gap-ribbon"
@@ -192,7 +193,7 @@ export function GapRibbon() {
             className="pointer-events-none absolute bottom-1 bg-line px-1.5 text-sm font-semibold whitespace-nowrap text-on-line"
             style={litX > 850 ? { right: `${100 - litX / 10}%` } : { left: `${litX / 10}%` }}
           >
-            {edgeName(document, lit!.ring, lit!.edge)}{' '}
+            {documentEdgeName(document, lit!.ring, lit!.edge)}{' '}
             {litGap === null ? 'no unit within reach' : formatLength(litGap, display)}
           </span>
         )}

@@ -6,9 +6,9 @@ import {
   edgeMiddle,
   vertexBulge,
   arcRadius,
-  vertexLetter,
   vertexPoint,
 } from '@/paving/ground-edits';
+import { cornerName, keepOutName } from '@/paving/edge-names';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { formatLength } from '@/paving/length';
 import { unitCorners } from '@/paving/laying';
@@ -112,7 +112,7 @@ function paintKeepOutName(ink: Ink, ring: number) {
     Math.min(...ys),
     Math.max(...ys),
   ];
-  const name = document.ground.keepOuts[ring - 1].name;
+  const name = `${keepOutName(ring)} ${document.ground.keepOuts[ring - 1].name}`;
   ctx.font = `400 12px ${FONT}`;
   ctx.save();
   path(ink, outline, true);
@@ -207,7 +207,7 @@ function paintLetters(ink: Ink) {
     ctx.font = `600 10.5px ${FONT}`;
     ctx.textAlign = 'center';
     ctx.textBaseline = 'middle';
-    ctx.fillText(vertexLetter(n), centre[0], centre[1] + 0.5);
+    ctx.fillText(cornerName(0, n), centre[0], centre[1] + 0.5);
   });
 }
 

@@ -3,7 +3,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { layFloor } from '@/paving/laying';
 import type { PathRing } from '@/sheets/drawing';
-import { edgeName } from '@/sheets/edge-names';
+import { edgeName } from '@/paving/edge-names';
 import { figureText, rangeText } from '@/sheets/figures';
 import { keepOutPlace } from '@/sheets/keep-out-place';
 import { paperChords } from '@/sheets/plan-view';

@@ -8,14 +8,13 @@ import {
   edgeDirectionSet,
   edgeLength,
   edgeLengthSet,
-  edgeName,
   edgeRiseSet,
   ringReplaced,
   vertexBulge,
-  vertexLetter,
   vertexMoved,
   type Ring,
 } from '@/paving/ground-edits';
+import { cornerName, documentEdgeName, keepOutName } from '@/paving/edge-names';
 import { formatArea } from '@/paving/area';
 import { formatLength } from '@/paving/length';
 import { LengthField } from '../../ui/LengthField';
@@ -55,7 +54,7 @@ function EdgeRow({ ring, edge }: { ring: number; edge: number }) {
     if (picked) row.current?.scrollIntoView({ block: 'nearest' });
   }, [picked]);
   const vertices = documentRing(document, ring);
-  const name = edgeName(document, ring, edge);
+  const name = documentEdgeName(document, ring, edge);
   const arc = vertexBulge(vertices[edge]) !== 0;
   return (
     <li ref={row} className="py-1">
@@ -68,7 +67,7 @@ function EdgeRow({ ring, edge }: { ring: number; edge: number }) {
             table.getState().set({ pick: picked ? null : { kind: 'edge', ring, edge } })
           }
         >
-          {ring === 0 ? name : edge + 1}
+          {ring === 0 ? name : name.replace(/^\S+ /, '')}
           <span className="sr-only">, pick this edge</span>
         </button>
         <div className="flex-1">
@@ -166,8 +165,8 @@ function PickedVertex({ pick }: { pick: Extract<Pick, { kind: 'vertex' }> }) {
     });
   const name =
     pick.ring === 0
-      ? `Corner ${vertexLetter(pick.vertex)}`
-      : `${document.ground.keepOuts[pick.ring - 1].name}, corner ${pick.vertex + 1}`;
+      ? `Corner ${cornerName(0, pick.vertex)}`
+      : `${document.ground.keepOuts[pick.ring - 1].name}, corner ${cornerName(pick.ring, pick.vertex)}`;
   return (
     <section className="border-2 border-line p-3" aria-label={name}>
       <h3 className="mb-2 flex items-center gap-2">
@@ -272,6 +271,7 @@ export function GroundPanel() {
       {keepOuts.map((keepOut, index) => (
         <section key={index} aria-label={keepOut.name}>
           <div className="flex items-center gap-2 border-b border-graphite pb-1">
+            <b>{keepOutName(index + 1)}</b>
             <input
               className="min-w-0 flex-1 bg-transparent py-1 font-bold"
               aria-label="Name of the keep-out"

@@ -1,5 +1,6 @@
 import { Hand, RotateCcw, RotateCw, Spline, SquareDashed } from 'lucide-react';
-import { edgeName, vertexBulge } from '@/paving/ground-edits';
+import { vertexBulge } from '@/paving/ground-edits';
+import { documentEdgeName } from '@/paving/edge-names';
 import { formatLength } from '@/paving/length';
 import { groundMiddle, placementTurned, turnNormal } from '@/paving/placement-edits';
 import { LengthField } from '../../ui/LengthField';
@@ -65,7 +66,7 @@ export function PlacePanel() {
                     className="button"
                     onClick={() => alignTableToEdge(table, 0, edge)}
                   >
-                    {edgeName(document, 0, edge)}
+                    {documentEdgeName(document, 0, edge)}
                   </button>
                 </li>
               ) : null,
@@ -177,7 +178,7 @@ function EdgeGaps() {
               onPointerLeave={() => table.getState().set({ lit: null })}
             >
               <th scope="row" className="max-w-24 truncate py-1 text-left font-semibold">
-                {edgeName(document, edge.ring, edge.edge)}
+                {documentEdgeName(document, edge.ring, edge.edge)}
               </th>
               <td>{edge.facing}</td>
               <td>{text(edge.least)}</td>

@@ -1,5 +1,5 @@
+import { documentEdgeName } from '@/paving/edge-names';
 import { layFloor } from '@/paving/laying';
-import { edgeName } from '@/paving/ground-edits';
 import {
   groundMiddle,
   placementSlid,
@@ -33,7 +33,7 @@ export function alignedToEdge(
 export function alignTableToEdge(table: TableStore, ring: number, edge: number): void {
   const { document, settle, set } = table.getState();
   const aligned = alignedToEdge(document, ring, edge);
-  const name = edgeName(document, ring, edge);
+  const name = documentEdgeName(document, ring, edge);
   if (!aligned) {
     set({ said: `${name} is an arc: choose a straight edge.` });
     return;

@@ -1,4 +1,11 @@
-import { vertexLetter } from '@/paving/ground-edits';
+import { documentRing } from './ground-edits';
+import type { LayoutDocument } from './layout-document';
+
+/** The name of a corner of the perimeter as the drawings letter it: A … Z, then A1 … Z1 and so on. */
+function vertexLetter(vertex: number): string {
+  const round = Math.floor(vertex / 26);
+  return String.fromCharCode(65 + (vertex % 26)) + (round > 0 ? String(round) : '');
+}
 
 /** Corners of the perimeter are A, B, C … Z, then A1, B1 …, as on the table; those of keep-outs a, b, c …. */
 export const cornerName = (ring: number, corner: number): string =>
@@ -16,3 +23,6 @@ export function edgeName(ring: number, edge: number, corners: number): string {
   const pair = from.length + to.length > 2 ? `${from}–${to}` : from + to;
   return ring === 0 ? pair : `${keepOutName(ring)} ${pair}`;
 }
+
+export const documentEdgeName = (document: LayoutDocument, ring: number, edge: number): string =>
+  edgeName(ring, edge, documentRing(document, ring).length);
