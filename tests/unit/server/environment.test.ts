@@ -10,6 +10,8 @@ test('with nothing set everything has a value that works', () => {
     publicOrigin: undefined,
     trustProxy: false,
     secureCookies: 'auto',
+    smtpUrl: undefined,
+    mailFrom: 'Evenlay <evenlay@localhost>',
   });
 });
 
@@ -24,6 +26,8 @@ test('every bad key is named, with what it is and what would do', () => {
     PUBLIC_ORIGIN: 'floors',
     TRUST_PROXY: 'perhaps',
     SECURE_COOKIES: 'sometimes',
+    SMTP_URL: 'http://mail.firm.example',
+    MAIL_FROM: 'floors at firm',
   };
   const message = (() => {
     try {
