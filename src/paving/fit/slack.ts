@@ -1,0 +1,169 @@
+import type { CellPieces } from './cell-pieces';
+
+/** Where a point stands to a piece: how far off, whether on the side that has its units, and the way towards it there. */
+export interface PieceGaps {
+  /** Distances, mm. */
+  readonly distance: Float64Array;
+  /** 1 where the point has the piece's units as far as the piece tells, −1 where not. */
+  readonly side: Int8Array;
+  /** Unit vector from the nearest point of the piece to the point. */
+  readonly awayX: Float64Array;
+  readonly awayY: Float64Array;
+  /** Distances with ties broken, where two pieces meet, for the one that tells the side. */
+  readonly key: Float64Array;
+}
+
+export function pieceGapsRoom(size: number): PieceGaps {
+  return {
+    distance: new Float64Array(size),
+    side: new Int8Array(size),
+    awayX: new Float64Array(size),
+    awayY: new Float64Array(size),
+    key: new Float64Array(size),
+  };
+}
+
+/** Where two pieces meet, a point is equally far from both; the one it is more squarely off tells its side. */
+const TIE_MM = 1e-7;
+
+/** Writes how the point (u, v) stands to piece n at `at`. */
+export function pieceGap(
+  pieces: CellPieces,
+  n: number,
+  u: number,
+  v: number,
+  room: PieceGaps,
+  at: number,
+): void {
+  const { x0, y0, x1, y1, cx, cy, radius } = pieces;
+  const ax = x0[n];
+  const ay = y0[n];
+  const bx = x1[n];
+  const by = y1[n];
+  let d: number;
+  let off: number;
+  let nearX: number;
+  let nearY: number;
+  if (radius[n] === 0) {
+    const ex = bx - ax;
+    const ey = by - ay;
+    const size = Math.sqrt(ex * ex + ey * ey);
+    const px = u - ax;
+    const py = v - ay;
+    off = (ex * py - ey * px) / size;
+    let along = (px * ex + py * ey) / size;
+    if (along < 0) along = 0;
+    else if (along > size) along = size;
+    nearX = ax + (along / size) * ex;
+    nearY = ay + (along / size) * ey;
+  } else {
+    const px = u - cx[n];
+    const py = v - cy[n];
+    const d0 = Math.sqrt(px * px + py * py);
+    off = d0 - radius[n];
+    // Within the quarter's angle, or nearer to one of its ends. It runs clockwise.
+    const inside =
+      d0 > 0 &&
+      (ax - cx[n]) * py - (ay - cy[n]) * px <= 0 &&
+      (bx - cx[n]) * py - (by - cy[n]) * px >= 0 &&
+      px * (ax + bx - 2 * cx[n]) + py * (ay + by - 2 * cy[n]) > 0;
+    if (inside) {
+      nearX = cx[n] + (px / d0) * radius[n];
+      nearY = cy[n] + (py / d0) * radius[n];
+    } else {
+      const first = (u - ax) ** 2 + (v - ay) ** 2 < (u - bx) ** 2 + (v - by) ** 2;
+      nearX = first ? ax : bx;
+      nearY = first ? ay : by;
+    }
+  }
+  const dx = u - nearX;
+  const dy = v - nearY;
+  d = Math.sqrt(dx * dx + dy * dy);
+  room.distance[at] = d;
+  room.side[at] = off >= 0 ? 1 : -1;
+  room.awayX[at] = d > 0 ? dx / d : 0;
+  room.awayY[at] = d > 0 ? dy / d : 0;
+  room.key[at] = d > 0 ? d - TIE_MM * Math.min(1, Math.abs(off) / d) : 0;
+}
+
+/** True when the piece belongs to that unit. */
+export function pieceHasUnit({ unitStart, units }: CellPieces, n: number, unit: number): boolean {
+  let low = unitStart[n];
+  let high = unitStart[n + 1];
+  if (high - low === 1) return units[low] === unit;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (units[middle] < unit) low = middle + 1;
+    else high = middle;
+  }
+  return low < unitStart[n + 1] && units[low] === unit;
+}
+
+/** How many of piece n's units none of the pieces list[order[0 … count − 1]] has; at most `enough` are looked for. */
+export function unitsApart(
+  pieces: CellPieces,
+  n: number,
+  list: Int32Array,
+  order: Int32Array,
+  count: number,
+  enough: number,
+): number {
+  const { unitStart, units } = pieces;
+  const from = unitStart[n];
+  const to = unitStart[n + 1];
+  const total = to - from;
+  if (count === 0) return total;
+  let apart = 0;
+  // From the middle of the run outward: units at its ends are those that share corners.
+  for (let step = 0; step < total; step++) {
+    const half = (step + 1) >> 1;
+    const at = from + (total >> 1) + (step % 2 === 0 ? half : -half);
+    if (at < from || at >= to) continue;
+    const unit = units[at];
+    let shared = false;
+    for (let m = 0; m < count && !shared; m++) shared = pieceHasUnit(pieces, list[order[m]], unit);
+    if (!shared && ++apart >= enough) return apart;
+  }
+  return apart;
+}
+
+/** Origins are kept this far, mm, from gaining a unit, so that rounding does not give it to them. */
+export const KEEP_OFF_MM = 0.0005;
+
+/**
+ * The slack at (u, v): the distance to the nearest boundary of the region of a unit that is whole
+ * there, mm, or `reach` when there is none within it; −1 when the point is so near to gaining a unit that its
+ * count is in doubt. `list[from … to − 1]` must have every piece within `reach`.
+ */
+export function pointSlack(
+  pieces: CellPieces,
+  list: Int32Array,
+  from: number,
+  to: number,
+  u: number,
+  v: number,
+  reach: number,
+  room: PieceGaps,
+  order: Int32Array,
+): number {
+  let count = 0;
+  for (let a = from; a < to; a++) {
+    pieceGap(pieces, list[a], u, v, room, a - from);
+    if (room.distance[a - from] >= reach) continue;
+    let place = count++;
+    for (; place > 0 && room.key[order[place - 1]] > room.key[a - from]; place--) {
+      order[place] = order[place - 1];
+    }
+    order[place] = a - from;
+  }
+  const local = list.subarray(from, to);
+  for (let m = 0; m < count; m++) {
+    if (room.side[order[m]] < 0) {
+      if (room.distance[order[m]] < KEEP_OFF_MM) return -1;
+      continue;
+    }
+    // A unit whose nearer piece has the point on its far side is not whole there.
+    if (unitsApart(pieces, local[order[m]], local, order, m, 1) > 0) return room.distance[order[m]];
+  }
+  return reach;
+}
