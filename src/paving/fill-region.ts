@@ -2,7 +2,7 @@ import { regionClip, type ClipResult, type Region } from '@/geometry/clipping';
 import type { Laying } from './laying';
 import { unitCorners } from './laying';
 
-/** Units united at a time: the clipping library slows and recurses deeply on many at once. */
+/** Units taken away at a time when the clipping library fails on all of them at once. */
 const BATCH = 64;
 
 /**
@@ -12,15 +12,28 @@ const BATCH = 64;
  */
 export function fillRegion({ ground, laid, motif }: Laying): ClipResult {
   const [perimeter, ...keepOuts] = ground.rings;
-  const units: Region[] = [];
+  const cuts = keepOuts.map(({ outline }): Region => [[outline]]);
+  let covered = 0;
   for (let n = 0; n < laid.count; n++) {
-    units.push([[unitCorners(motif[laid.k[n]], laid.x[n], laid.y[n])]]);
+    const entry = motif[laid.k[n]];
+    cuts.push([[unitCorners(entry, laid.x[n], laid.y[n])]]);
+    covered += entry.unit.length * entry.unit.width;
   }
   const whole: Region = [[perimeter.outline]];
+  // Keep-outs along an arc part from it by a sagitta, so their areas do not add up to the micrometre.
+  const curved = keepOuts.some(({ edges }) => edges.some(({ bulge }) => bulge !== 0));
+  const expected = curved ? undefined : ground.area - covered;
+  const atOnce = regionClip('difference', whole, cuts, expected);
+  if (atOnce.ok) return atOnce;
   let left: ClipResult = { ok: true, region: whole, area: perimeter.area };
-  const cuts = [...keepOuts.map(({ outline }): Region => [[outline]]), ...units];
   for (let n = 0; n < cuts.length && left.ok; n += BATCH) {
-    left = regionClip('difference', left.region, cuts.slice(n, n + BATCH));
+    const last = n + BATCH >= cuts.length;
+    left = regionClip(
+      'difference',
+      left.region,
+      cuts.slice(n, n + BATCH),
+      last ? expected : undefined,
+    );
   }
   return left;
 }

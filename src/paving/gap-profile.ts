@@ -157,6 +157,9 @@ function lowerSide(
   out.highT = t + rt + lt;
 }
 
+/** A unit at just the reach is met, whatever rounding says, mm. */
+const REACH_ROUNDING_MM = 1e-6;
+
 /** Units level with one that screens a chord must still be weighed against it, mm. */
 const SCREEN_MARGIN_MM = 1e-3;
 
@@ -308,24 +311,33 @@ function edgeProfile(laying: Laying, edge: GroundEdge, reach: number): EdgeProfi
     };
     envelopeClear(pieces);
     // A unit that screens the whole chord hides all that begin behind it.
-    let screen = reach;
-    unitsBefore(laying, start, along, inward, length, reach, joint / 2, (unit) => {
-      place(unit, joint / 2);
-      addUnit(pieces, unit, side, length, screen);
-      if (side.leftS <= 0 && side.rightS >= length && side.leftT >= 0 && side.rightT >= 0) {
-        const high = Math.max(lowerHeight(side, 0), lowerHeight(side, length));
-        screen = Math.min(screen, high + SCREEN_MARGIN_MM);
-      }
-      // The gap is that of the true unit, wherever along the edge it stands before it.
-      place(unit, 0);
-      const from = Math.max(0, side.leftS);
-      const to = Math.min(length, side.rightS);
-      if (from > to || upperGreatest(side, from, to) <= 0) return;
-      const gap = Math.max(0, lowerHeight(side, Math.max(from, Math.min(to, side.lowS))));
-      const known = faced.get(unit);
-      if (known) known.gap = Math.min(known.gap, gap);
-      else faced.set(unit, { stretch: 0, gap });
-    });
+    let screen = reach + REACH_ROUNDING_MM;
+    unitsBefore(
+      laying,
+      start,
+      along,
+      inward,
+      length,
+      reach + REACH_ROUNDING_MM,
+      joint / 2,
+      (unit) => {
+        place(unit, joint / 2);
+        addUnit(pieces, unit, side, length, screen);
+        if (side.leftS <= 0 && side.rightS >= length && side.leftT >= 0 && side.rightT >= 0) {
+          const high = Math.max(lowerHeight(side, 0), lowerHeight(side, length));
+          screen = Math.min(screen, high + SCREEN_MARGIN_MM);
+        }
+        // The gap is that of the true unit, wherever along the edge it stands before it.
+        place(unit, 0);
+        const from = Math.max(0, side.leftS);
+        const to = Math.min(length, side.rightS);
+        if (!(to - from > LENGTH_TOLERANCE_MM) || upperGreatest(side, from, to) <= 0) return;
+        const gap = Math.max(0, lowerHeight(side, Math.max(from, Math.min(to, side.lowS))));
+        const known = faced.get(unit);
+        if (known) known.gap = Math.min(known.gap, gap);
+        else faced.set(unit, { stretch: 0, gap });
+      },
+    );
     let open = -1;
     let openFrom = 0;
     let openTo = 0;
@@ -385,7 +397,8 @@ function edgeProfile(laying: Laying, edge: GroundEdge, reach: number): EdgeProfi
  * measure them with a tape square to the edge. A unit faces an edge when rays from more than
  * 0.01 mm of it meet that unit first, units being grown by half the joint for this test alone;
  * its gap is the least distance to the part of the true unit in front of the edge. A unit that
- * only its joint puts in front of the edge has no gap and does not face it. Rays are not stopped
+ * only its joint puts in front of the edge (no more than 0.01 mm of the unit itself) has no gap
+ * and does not face it. Rays are not stopped
  * by other edges of the ground.
  */
 export function gapProfile(laying: Laying): EdgeProfile[] {

@@ -227,13 +227,14 @@ export function layFloor(
   const lifts = liftedPlaces(document, rows);
   const cell = Math.abs(lattice.a[0] * lattice.b[1] - lattice.a[1] * lattice.b[0]);
   const likely = Math.ceil((ground.area / cell) * motif.length * 1.02) + 64;
-  const laid = unitSetRoom(Math.max(64, Math.min(likely, 1 << 22)));
-  const leftOut = unitSetRoom(256);
-  const lifted = unitSetRoom(document.lifted.length > 0 ? 64 : 0);
+  const { basis } = rows;
+  const alongIsI = basis.i.a === 1 && basis.i.b === 0;
+  const laid = unitSetRoom(Math.max(64, Math.min(likely, 1 << 22)), alongIsI);
+  const leftOut = unitSetRoom(256, alongIsI);
+  const lifted = unitSetRoom(document.lifted.length > 0 ? 64 : 0, alongIsI);
   const laidStart = new Int32Array(rows.total + 1);
   const leftOutStart = new Int32Array(rows.total + 1);
   const liftedStart = new Int32Array(rows.total + 1);
-  const { basis } = rows;
   const inside: Runs = [];
   const blocked: Runs = [];
   const free: Runs = [];
@@ -257,15 +258,19 @@ export function layFloor(
       const rowY = origin[1] + (n * basis.b[1] + centres[k][1]);
       const put = (room: UnitSetRoom, from: number, to: number) => {
         unitSetReserve(room, to - from + 1);
+        const { i, j, x, y, along } = room;
+        const [ax, ay] = basis.a;
+        const { a: stepI } = basis.i;
+        const { a: stepJ } = basis.j;
         let { count } = room;
         for (let place = from; place <= to; place++, count++) {
-          room.i[count] = rowI + place * basis.i.a;
-          room.j[count] = rowJ + place * basis.j.a;
-          room.k[count] = k;
-          room.x[count] = rowX + place * basis.a[0];
-          room.y[count] = rowY + place * basis.a[1];
-          room.along[count] = place;
+          along[count] = place;
+          i[count] = rowI + place * stepI;
+          j[count] = rowJ + place * stepJ;
+          x[count] = rowX + place * ax;
+          y[count] = rowY + place * ay;
         }
+        room.k.fill(k, room.count, count);
         room.count = count;
       };
       const touchFrom = touch.start[row];

@@ -1,6 +1,9 @@
 import type { UnitSet } from './laying';
 
-/** A unit set while it is being filled; `along` is each unit's place along its row. */
+/**
+ * A unit set while it is being filled; `along` is each unit's place along its row, and is `i`
+ * itself where rows run along the lattice's own `a`.
+ */
 export interface UnitSetRoom {
   count: number;
   i: Int32Array;
@@ -11,22 +14,23 @@ export interface UnitSetRoom {
   along: Int32Array;
 }
 
-export function unitSetRoom(capacity: number): UnitSetRoom {
+export function unitSetRoom(capacity: number, alongIsI: boolean): UnitSetRoom {
+  const i = new Int32Array(capacity);
   return {
     count: 0,
-    i: new Int32Array(capacity),
+    i,
     j: new Int32Array(capacity),
     k: new Uint8Array(capacity),
     x: new Float64Array(capacity),
     y: new Float64Array(capacity),
-    along: new Int32Array(capacity),
+    along: alongIsI ? i : new Int32Array(capacity),
   };
 }
 
 /** Makes room for `more` units beyond those there are. */
 export function unitSetReserve(room: UnitSetRoom, more: number): void {
   if (room.count + more <= room.i.length) return;
-  const larger = unitSetRoom(Math.max(room.count + more, 2 * room.i.length));
+  const larger = unitSetRoom(Math.max(room.count + more, 2 * room.i.length), room.along === room.i);
   larger.i.set(room.i.subarray(0, room.count));
   larger.j.set(room.j.subarray(0, room.count));
   larger.k.set(room.k.subarray(0, room.count));
@@ -41,18 +45,25 @@ export function unitSetReserve(room: UnitSetRoom, more: number): void {
   room.along = larger.along;
 }
 
+/** Arrays at least this full are handed over as they are, as views of their used part. */
+const FULL_ENOUGH = 0.9;
+
 /** The units so far as a set of their own, and their places along their rows. */
 export function unitSetClosed(room: UnitSetRoom): { set: UnitSet; along: Int32Array } {
   const { count } = room;
+  const full = count >= FULL_ENOUGH * room.i.length;
+  const closed = <T extends Int32Array | Uint8Array | Float64Array>(array: T): T =>
+    (full ? array.subarray(0, count) : array.slice(0, count)) as T;
+  const i = closed(room.i);
   return {
     set: {
       count,
-      i: room.i.slice(0, count),
-      j: room.j.slice(0, count),
-      k: room.k.slice(0, count),
-      x: room.x.slice(0, count),
-      y: room.y.slice(0, count),
+      i,
+      j: closed(room.j),
+      k: closed(room.k),
+      x: closed(room.x),
+      y: closed(room.y),
     },
-    along: room.along.slice(0, count),
+    along: room.along === room.i ? i : closed(room.along),
   };
 }

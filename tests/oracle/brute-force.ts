@@ -317,7 +317,10 @@ function gapBefore(
     });
     shape = next;
   }
-  return shape.length === 0 ? null : Math.min(...shape.map(([, t]) => t));
+  const places = shape.map(([s]) => s);
+  // Less than the tolerance of the unit is not in front of the edge.
+  if (!(Math.max(...places) - Math.min(...places) > 0.01)) return null;
+  return Math.min(...shape.map(([, t]) => t));
 }
 
 /**
@@ -346,7 +349,7 @@ export function oracleFacing(
       ];
       const met = [...laid.values()]
         .map(({ address, grown }) => ({ address, t: rayMeets(from, inward, grown) }))
-        .filter(({ t }) => t <= reach);
+        .filter(({ t }) => t <= reach + 1e-6);
       const least = Math.min(...met.map(({ t }) => t));
       const first = met.filter(({ t }) => t <= least + 1e-6);
       for (const { address } of first) {
