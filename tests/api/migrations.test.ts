@@ -2,7 +2,7 @@ import { readFileSync, readdirSync } from 'node:fs';
 import { getTableColumns, getTableName, sql } from 'drizzle-orm';
 import { expect, test } from 'vitest';
 import * as schema from '@/db/schema';
-import { db, useEmptyDatabase } from './site';
+import { db, rowsOf, useEmptyDatabase } from './site';
 
 useEmptyDatabase();
 
@@ -33,26 +33,28 @@ test('the migrations make the columns of the schema, so that none waits to be ge
   const expected = Object.values(schema).flatMap((table) =>
     Object.values(getTableColumns(table)).map((column) => `${getTableName(table)}.${column.name}`),
   );
-  const result = (await (
-    await db()
-  ).execute(
-    sql`select table_name || '.' || column_name as name from information_schema.columns where table_schema = 'public'`,
-  )) as unknown as { rows: { name: string }[] };
-  expect(result.rows.map(({ name }) => name).sort()).toEqual(expected.sort());
+  const rows = rowsOf<{ name: string }>(
+    await (
+      await db()
+    ).execute(
+      sql`select table_name || '.' || column_name as name from information_schema.columns where table_schema = 'public'`,
+    ),
+  );
+  expect(rows.map(({ name }) => name).sort()).toEqual(expected.sort());
 });
 
 test('every row that belongs to a firm says which', async () => {
-  const result = (await (
-    await db()
-  ).execute(sql`
+  const rows = rowsOf<{ name: string }>(
+    await (
+      await db()
+    ).execute(sql`
     select table_name as name from information_schema.tables t where table_schema = 'public'
     and not exists (select 1 from information_schema.columns c
-      where c.table_name = t.table_name and c.column_name = 'firm_id')`)) as unknown as {
-    rows: { name: string }[];
-  };
+      where c.table_name = t.table_name and c.column_name = 'firm_id')`),
+  );
   // A person may be of several firms, a new password is theirs in all of them, and an attempt to sign in is
   // counted before anybody is known.
-  expect(result.rows.map(({ name }) => name).sort()).toEqual([
+  expect(rows.map(({ name }) => name).sort()).toEqual([
     'firms',
     'password_resets',
     'people',

@@ -5,10 +5,12 @@ import path from 'node:path';
 import { PGlite } from '@electric-sql/pglite';
 import type { APIContext, APIRoute } from 'astro';
 import { createContext } from 'astro/middleware';
-import { afterAll, beforeAll } from 'vitest';
-import { openPglite, type Db, type OpenDatabase } from '@/db/client';
+import postgres from 'postgres';
+import { afterAll, beforeAll, inject } from 'vitest';
+import { openDatabase, openPglite, type Db, type OpenDatabase } from '@/db/client';
 import { onRequest } from '@/middleware';
 import { database, useDatabase } from '@/server/database';
+import { TEMPLATE } from '../postgres/template';
 
 type Endpoint = Partial<Record<string, APIRoute>>;
 
@@ -146,16 +148,41 @@ const template = async (): Promise<Blob> => {
   return new Blob([readFileSync(file)]);
 };
 
-/** An empty database of its own for a test file, in memory. */
+const onServer = async <T>(run: (client: postgres.Sql) => Promise<T>): Promise<T> => {
+  const client = postgres(`${inject('postgres')}/postgres`, { max: 1, onnotice: () => {} });
+  try {
+    return await run(client);
+  } finally {
+    await client.end();
+  }
+};
+
+/** A new, migrated database on the PostgreSQL server of these tests; its address. */
+export const newPostgresDatabase = async (): Promise<string> => {
+  const name = `test_${process.pid}_${Math.random().toString(36).slice(2)}`;
+  await onServer((client) => client.unsafe(`create database ${name} template ${TEMPLATE}`));
+  return `${inject('postgres')}/${name}`;
+};
+
+const openEmpty = async (): Promise<OpenDatabase> =>
+  inject('postgres')
+    ? openDatabase({ databaseUrl: await newPostgresDatabase(), dataDir: '' })
+    : openPglite(await PGlite.create({ loadDataDir: await template() }));
+
+/** An empty database of its own for a test file: PGlite in memory, or one on a PostgreSQL server. */
 export const useEmptyDatabase = (): void => {
   let opened: OpenDatabase | undefined;
   beforeAll(async () => {
-    opened = await openPglite(await PGlite.create({ loadDataDir: await template() }));
+    opened = await openEmpty();
     useDatabase(opened);
   });
   afterAll(async () => {
     await opened?.close();
   });
 };
+
+/** The rows of a raw statement, which the two drivers give in different shapes. */
+export const rowsOf = <T>(result: unknown): T[] =>
+  Array.isArray(result) ? [...(result as T[])] : (result as { rows: T[] }).rows;
 
 export const db = (): Promise<Db> => database();
