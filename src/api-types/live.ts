@@ -50,7 +50,8 @@ export interface LiveLayout {
  * GET /api/projects/{id}/live/stream: the same as server-sent events (`event: state`, `data: LiveState`), the
  * first at once and then whenever it has changed, seen within `LIVE_POLL_S` seconds whichever server process it
  * was changed through. `event: gone` when the person may no longer see the project: close, and do not come again.
- * The stream ends by itself after a few minutes; EventSource comes again by itself.
+ * The stream ends by itself after a few minutes, or after `?for=` so many seconds (0: after the first state); EventSource
+ * comes again by itself.
  */
 export interface LiveState {
   readonly projectId: string;
@@ -60,3 +61,7 @@ export interface LiveState {
 }
 
 export const LIVE_POLL_S = 2;
+
+export const liveStreamQuerySchema = z.object({
+  for: z.coerce.number().min(0).max(300).default(300),
+});

@@ -1,7 +1,7 @@
 import { eq, sql } from 'drizzle-orm';
-import type { VersionEventKind } from '@/api-types/versions';
-import { firms } from '@/db/schema';
+import { firms, outbox } from '@/db/schema';
 import type { LayoutDocument } from '@/paving/layout-document';
+import { acceptVersion, issueVersion, openAgreement, shareVersion } from './agreement';
 import type { Db } from './database';
 import {
   COURT_CHEQUER,
@@ -10,7 +10,7 @@ import {
   ROUND_TERRACE,
   SIDE_YARD,
 } from './demo-layouts';
-import { DEMO_FIRM, DEMO_PASSWORD, DEMO_PEOPLE } from './demo-people';
+import { DEMO_FIRM, DEMO_PASSWORD, DEMO_PEOPLE, DEMO_TERMS } from './demo-people';
 import { openDraft, saveDraft } from './drafts';
 import { newId } from './ids';
 import { createLayout } from './layouts';
@@ -18,7 +18,8 @@ import type { Outcome } from './outcomes';
 import { addPerson } from './people';
 import type { Actor } from './permissions';
 import { createProject, putOnProject } from './projects';
-import { recordVersionEvent, saveVersion } from './versions';
+import { comment, reply } from './threads';
+import { saveVersion } from './versions';
 
 /** Any number that nothing else in the database uses as an advisory lock. */
 const SEED_LOCK = 5_170_222;
@@ -32,7 +33,7 @@ interface DemoVersion {
   readonly label: string;
   readonly note: string;
   readonly document: LayoutDocument;
-  readonly events?: readonly [Actor, Exclude<VersionEventKind, 'saved'>, string][];
+  readonly then?: (versionId: string) => Promise<void>;
 }
 
 /** Drafts and saves each version in turn, the way a designer does; the draft is left at the last. */
@@ -42,7 +43,7 @@ const addVersions = async (
   layoutId: string,
   all: readonly DemoVersion[],
 ): Promise<void> => {
-  for (const { label, note, document, events = [] } of all) {
+  for (const { label, note, document, then } of all) {
     const { revision } = sure(await openDraft(db, designer, layoutId));
     const saved = sure(
       await saveDraft(db, designer, layoutId, { baseRevision: revision, document }),
@@ -50,15 +51,13 @@ const addVersions = async (
     const version = sure(
       await saveVersion(db, designer, layoutId, { baseRevision: saved.revision, label, note }),
     );
-    for (const [actor, kind, said] of events) {
-      sure(await recordVersionEvent(db, actor, version.id, kind, said));
-    }
+    await then?.(version.id);
   }
 };
 
 const seed = async (db: Db): Promise<void> => {
   const firmId = newId();
-  await db.insert(firms).values({ id: firmId, name: DEMO_FIRM, demo: true });
+  await db.insert(firms).values({ id: firmId, name: DEMO_FIRM, demo: true, terms: DEMO_TERMS });
   const actors = new Map<string, Actor>();
   for (const { role, name, email } of DEMO_PEOPLE) {
     const person = { name, email, password: DEMO_PASSWORD, display: 'metric' } as const;
@@ -95,11 +94,14 @@ const seed = async (db: Db): Promise<void> => {
       label: 'Herringbone about the fire bowl',
       note: 'Set at 45° to the house, started where no block comes near the strip.',
       document: ROUND_TERRACE,
-      events: [
-        [designer, 'shared', 'As we drew it together.'],
-        [client, 'accepted', 'Lovely. Go ahead.'],
-        [actor('owner'), 'issued', 'For setting out from Monday.'],
-      ],
+      then: async (id) => {
+        sure(await shareVersion(db, designer, id, { note: 'As we drew it together.' }));
+        const { fingerprint, terms } = sure(await openAgreement(db, client, id));
+        const typedName = 'Nerys Quillamore';
+        const note = 'Lovely. Go ahead.';
+        sure(await acceptVersion(db, client, id, { typedName, fingerprint, terms, note }));
+        sure(await issueVersion(db, actor('owner'), id, { note: 'For setting out from Monday.' }));
+      },
     },
   ]);
 
@@ -124,11 +126,19 @@ const seed = async (db: Db): Promise<void> => {
       label: 'Chequer, well started',
       note: 'The same floor, started where the most slabs stay whole.',
       document: COURT_CHEQUER,
-      events: [
-        [designer, 'shared', 'Far more slabs than the first start, and margins that forgive.'],
-      ],
+      then: async (id) => {
+        const note = 'Far more slabs than the first start, and margins that forgive.';
+        sure(await shareVersion(db, designer, id, { note }));
+        const body = 'Will the roots have room enough on this side?';
+        const thread = sure(await comment(db, client, id, { body, pin: [2000, 3300] }));
+        const answer =
+          '@Nerys Quillamore Yes: the pit keeps its metre, and the voids around it drain.';
+        sure(await reply(db, designer, thread.id, { body: answer }));
+      },
     },
   ]);
+  // All of this is past: nobody is written to about it.
+  await db.delete(outbox).where(eq(outbox.firmId, firmId));
 };
 
 /** Puts the demo firm into a database that holds no firm at all; whether it did. All of it or nothing. */

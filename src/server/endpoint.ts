@@ -4,7 +4,7 @@ import { database, type Db } from './database';
 import type { Outcome } from './outcomes';
 import type { Actor } from './permissions';
 import { problemResponse, refusalResponse } from './problem-response';
-import { readBody } from './request-body';
+import { parsedWith, readBody } from './request-body';
 
 /** What an endpoint hands to a service. */
 export interface Call {
@@ -37,12 +37,52 @@ const callOf = async (context: APIContext): Promise<Call | null> => {
 
 const signIn = () => problemResponse('signed-out', 'Sign in to go on.');
 
-/** A GET endpoint: one service call, its outcome as JSON. */
+/** An endpoint that takes no body (GET, DELETE): one service call, its outcome as JSON. */
 export const reading =
   (run: (call: Call) => Promise<Outcome<unknown>>): APIRoute =>
   async (context) => {
     const call = await callOf(context);
     return call ? answer(await run(call)) : signIn();
+  };
+
+/** A GET endpoint with a query: parsed with the schema, then one service call. An empty field counts as left out. */
+export const asking =
+  <S extends z.ZodType>(
+    schema: S,
+    run: (call: Call, query: z.output<S>) => Promise<Outcome<unknown>>,
+  ): APIRoute =>
+  async (context) => {
+    const call = await callOf(context);
+    if (!call) return signIn();
+    const fields = [...context.url.searchParams].filter(([, value]) => value !== '');
+    const query = parsedWith(schema, Object.fromEntries(fields));
+    return query.ok ? answer(await run(call, query.value)) : query.response;
+  };
+
+/** A GET endpoint with a query that answers with a stream of bytes, such as events or an archive. */
+export const streaming =
+  <S extends z.ZodType>(
+    schema: S,
+    type: string,
+    run: (call: Call, query: z.output<S>) => Promise<Outcome<ReadableStream<Uint8Array>>>,
+    headers: Readonly<Record<string, string>> = {},
+  ): APIRoute =>
+  async (context) => {
+    const call = await callOf(context);
+    if (!call) return signIn();
+    const query = parsedWith(schema, Object.fromEntries(context.url.searchParams));
+    if (!query.ok) return query.response;
+    const outcome = await run(call, query.value);
+    if (!outcome.ok) return refusalResponse(outcome);
+    return new Response(outcome.value, {
+      headers: {
+        'content-type': type,
+        'cache-control': 'no-store',
+        // Proxies must pass each part on as it comes.
+        'x-accel-buffering': 'no',
+        ...headers,
+      },
+    });
   };
 
 /** An endpoint that takes a JSON body: parsed with the schema, then one service call. */

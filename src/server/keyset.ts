@@ -29,7 +29,7 @@ export const keyRead = (after: string | undefined): Key | null => {
 };
 
 /** A moment as PostgreSQL writes one: what is not one is not asked for. */
-const MOMENT = /^\d{4,6}-\d\d-\d\d \d\d:\d\d:\d\d(\.\d{1,6})?[+-]\d\d(:\d\d){0,2}$/;
+export const MOMENT = /^\d{4,6}-\d\d-\d\d \d\d:\d\d:\d\d(\.\d{1,6})?[+-]\d\d(:\d\d){0,2}$/;
 
 export const momentKeyRead = (after: string | undefined): Key | null => {
   const key = keyRead(after);

@@ -1,9 +1,10 @@
 import { and, asc, count, desc, eq, inArray } from 'drizzle-orm';
 import type { z } from 'zod';
-import type { layoutChangeSchema, LayoutSummary, newLayoutSchema } from '@/api-types/layouts';
+import type { LayoutSummary, newLayoutSchema } from '@/api-types/layouts';
 import type { VersionSummary } from '@/api-types/versions';
 import { drafts, layouts, people, projects, versions } from '@/db/schema';
 import type { LayoutDocument } from '@/paving/layout-document';
+import { recordAudit } from './audit';
 import type { Db } from './database';
 import { newId } from './ids';
 import { done, notFound, type Outcome } from './outcomes';
@@ -152,23 +153,8 @@ export const createLayout = async (
       .update(projects)
       .set({ updatedAt: new Date() })
       .where(and(eq(projects.firmId, firmId), eq(projects.id, projectId)));
+    const { name } = input;
+    await recordAudit(tx, actor, 'layout.made', { type: 'layout', id }, { projectId, name });
   });
-  return openLayout(db, actor, id);
-};
-
-export const changeLayout = async (
-  db: Db,
-  actor: Actor,
-  id: string,
-  change: z.output<typeof layoutChangeSchema>,
-): Promise<Outcome<LayoutSummary>> => {
-  const layout = await seenLayout(db, actor, id);
-  if (!layout) return notFound('layout');
-  const refusal = refuseUnlessDrafting(actor);
-  if (refusal) return refusal;
-  await db
-    .update(layouts)
-    .set({ name: change.name })
-    .where(and(eq(layouts.firmId, actor.firmId), eq(layouts.id, id)));
   return openLayout(db, actor, id);
 };

@@ -1,62 +1,53 @@
-import { and, asc, desc, eq, inArray, sql } from 'drizzle-orm';
+import { and, asc, eq, inArray, sql, type SQL } from 'drizzle-orm';
 import type { z } from 'zod';
-import type {
-  newProjectSchema,
-  projectChangeSchema,
-  ProjectDetail,
-  ProjectSummary,
+import type { LayoutSummary } from '@/api-types/layouts';
+import {
+  projectStages,
+  type newProjectSchema,
+  type projectChangeSchema,
+  type ProjectDetail,
+  type ProjectSummary,
 } from '@/api-types/projects';
-import type { VersionState } from '@/api-types/versions';
-import { layouts, memberships, people, projectPeople, projects, versions } from '@/db/schema';
+import {
+  drafts,
+  firms,
+  layouts,
+  memberships,
+  people,
+  projectPeople,
+  projects,
+  versions,
+} from '@/db/schema';
+import type { LayoutDocument } from '@/paving/layout-document';
+import { recordAudit, type Subject } from './audit';
 import type { Db } from './database';
 import { newId } from './ids';
 import { layoutSummaries } from './layouts';
 import { done, notFound, type Outcome } from './outcomes';
-import { refuseUnlessDrafting, type Actor } from './permissions';
+import { mayDraft, permissions, refuseUnlessDrafting, type Actor } from './permissions';
 import { projectSeen, versionSeen } from './visibility';
 import { versionState } from './version-rows';
 
+export { listProjects } from './project-list';
+
 type ProjectRow = typeof projects.$inferSelect;
+type Stage = ProjectSummary['stage'];
 
-/** From least to furthest; a superseded version always has an issued one after it. */
-const STAGES: readonly (VersionState | 'draft')[] = [
-  'draft',
-  'superseded',
-  'saved',
-  'shared',
-  'change_asked',
-  'accepted',
-  'issued',
-];
-
-const furthest = (states: readonly VersionState[]): VersionState | 'draft' =>
-  states.reduce<VersionState | 'draft'>(
-    (best, state) => (STAGES.indexOf(state) > STAGES.indexOf(best) ? state : best),
-    'draft',
-  );
-
-const stagesOf = async (
-  db: Db,
-  actor: Actor,
-  ids: readonly string[],
-): Promise<Map<string, VersionState[]>> => {
-  const rows =
-    ids.length === 0
-      ? []
-      : await db
-          .select({ projectId: layouts.projectId, state: versionState })
-          .from(versions)
-          .innerJoin(
-            layouts,
-            and(eq(layouts.firmId, versions.firmId), eq(layouts.id, versions.layoutId)),
-          )
-          .where(and(versionSeen(actor), inArray(layouts.projectId, [...ids])));
-  const states = new Map<string, VersionState[]>();
-  for (const row of rows) {
-    states.set(row.projectId, [...(states.get(row.projectId) ?? []), row.state]);
-  }
-  return states;
-};
+/**
+ * The furthest stage of a project's current layouts that the actor sees, for use in a query over `projects`. For those who see
+ * every version the database keeps it beside the project; others have few projects, and it is worked out.
+ */
+export const seenStage = (actor: Actor): SQL<Stage> =>
+  permissions['see a version'][actor.role] === 'any'
+    ? sql<Stage>`${projects.stage}`
+    : sql<Stage>`coalesce((
+        select seen.state from (
+          select (${versionState}) as state from ${versions}
+          inner join ${layouts} on ${layouts.firmId} = ${versions.firmId} and ${layouts.id} = ${versions.layoutId}
+          where ${layouts.firmId} = ${actor.firmId} and ${layouts.projectId} = ${projects.id}
+          and ${layouts.archivedAt} is null and ${versionSeen(actor)}
+        ) seen order by array_position(${sql.raw(`array['${projectStages.join("','")}']`)}, seen.state) desc limit 1
+      ), 'draft')`;
 
 const baseOf = (row: ProjectRow) => ({
   id: row.id,
@@ -68,43 +59,82 @@ const baseOf = (row: ProjectRow) => ({
   updatedAt: row.updatedAt.toISOString(),
 });
 
-const summariesOf = async (
+/**
+ * Joined for its being there: in a query over one table alone Drizzle names columns without their table,
+ * and within a look-up in another table `id` would be that one's.
+ */
+const ofItsFirm = eq(firms.id, projects.firmId);
+
+/** What a list shows of each project besides its own row. */
+interface Beside {
+  readonly layouts: number;
+  readonly stage: Stage;
+  readonly document: LayoutDocument | null;
+}
+
+/** For those who see drafts: the draft last saved stands for the project. One look-up of an index a project. */
+const besideForDrafters = async (
+  db: Db,
+  actor: Actor,
+  ids: readonly string[],
+): Promise<Map<string, Beside>> => {
+  const current = sql`${layouts.firmId} = ${actor.firmId} and ${layouts.projectId} = ${projects.id}
+    and ${layouts.archivedAt} is null`;
+  const rows = await db
+    .select({
+      id: projects.id,
+      stage: projects.stage,
+      layouts: sql<number>`(select count(*) from ${layouts} where ${current})`.mapWith(Number),
+      document: sql<LayoutDocument | null>`(select ${drafts.document} from ${layouts}
+        inner join ${drafts} on ${drafts.firmId} = ${layouts.firmId} and ${drafts.layoutId} = ${layouts.id}
+        where ${current} order by ${drafts.updatedAt} desc limit 1)`.mapWith(drafts.document),
+    })
+    .from(projects)
+    .innerJoin(firms, ofItsFirm)
+    .where(and(eq(projects.firmId, actor.firmId), inArray(projects.id, [...ids])));
+  return new Map(rows.map(({ id, ...beside }) => [id, beside]));
+};
+
+/** For those who see versions only: the newest they see stands for the project. */
+const besideForOthers = async (
+  db: Db,
+  actor: Actor,
+  ids: readonly string[],
+): Promise<Map<string, Beside>> => {
+  const own = (await layoutSummaries(db, actor, ids)).filter((layout) => !layout.archivedAt);
+  const stages = await db
+    .select({ id: projects.id, stage: seenStage(actor) })
+    .from(projects)
+    .innerJoin(firms, ofItsFirm)
+    .where(and(eq(projects.firmId, actor.firmId), inArray(projects.id, [...ids])));
+  return new Map(
+    stages.map(({ id, stage }) => {
+      const inProject = own.filter(({ projectId }) => projectId === id);
+      const newest = inProject.reduce<LayoutSummary | undefined>(
+        (best, layout) => (!best || lastWorked(layout) > lastWorked(best) ? layout : best),
+        undefined,
+      );
+      return [id, { layouts: inProject.length, stage, document: newest?.document ?? null }];
+    }),
+  );
+};
+
+const lastWorked = (layout: LayoutSummary): string => layout.latest?.createdAt ?? layout.createdAt;
+
+/** Projects as lists show them, in the order given. */
+export const projectSummaries = async (
   db: Db,
   actor: Actor,
   rows: readonly ProjectRow[],
 ): Promise<ProjectSummary[]> => {
+  if (rows.length === 0) return [];
   const ids = rows.map((row) => row.id);
-  const inEach = await layoutSummaries(db, actor, ids);
-  const states = await stagesOf(db, actor, ids);
-  return rows.map((row) => {
-    const own = inEach.filter((layout) => layout.projectId === row.id);
-    const last = own.reduce<(typeof own)[number] | undefined>(
-      (best, layout) => (!best || lastWorked(layout) > lastWorked(best) ? layout : best),
-      undefined,
-    );
-    return {
-      ...baseOf(row),
-      layouts: own.length,
-      stage: furthest(states.get(row.id) ?? []),
-      document: last?.document ?? null,
-    };
-  });
+  const beside = await (mayDraft(actor.role) ? besideForDrafters : besideForOthers)(db, actor, ids);
+  return rows.map((row) => ({
+    ...baseOf(row),
+    ...(beside.get(row.id) ?? { layouts: 0, stage: 'draft', document: null }),
+  }));
 };
-
-const lastWorked = (layout: Awaited<ReturnType<typeof layoutSummaries>>[number]): string =>
-  layout.draftedAt ?? layout.latest?.createdAt ?? layout.createdAt;
-
-/** The projects that the actor sees, last touched first. */
-export const listProjects = async (db: Db, actor: Actor): Promise<ProjectSummary[]> =>
-  summariesOf(
-    db,
-    actor,
-    await db
-      .select()
-      .from(projects)
-      .where(projectSeen(actor))
-      .orderBy(desc(projects.updatedAt), asc(projects.id)),
-  );
 
 const seenProject = async (db: Db, actor: Actor, id: string): Promise<ProjectRow | undefined> =>
   (
@@ -122,7 +152,7 @@ export const openProject = async (
   const row = await seenProject(db, actor, id);
   if (!row) return notFound('project');
   const own = await layoutSummaries(db, actor, [id]);
-  const [summary] = await summariesOf(db, actor, [row]);
+  const [summary] = await projectSummaries(db, actor, [row]);
   const put = await db
     .select({ id: people.id, name: people.name, role: memberships.role })
     .from(projectPeople)
@@ -146,10 +176,14 @@ export const createProject = async (
 ): Promise<Outcome<ProjectSummary>> => {
   const refusal = refuseUnlessDrafting(actor);
   if (refusal) return refusal;
-  const [row] = await db
-    .insert(projects)
-    .values({ id: newId(), firmId: actor.firmId, ...input })
-    .returning();
+  const row = await db.transaction(async (tx) => {
+    const [made] = await tx
+      .insert(projects)
+      .values({ id: newId(), firmId: actor.firmId, ...input })
+      .returning();
+    await recordAudit(tx, actor, 'project.made', { type: 'project', id: made.id }, input);
+    return made;
+  });
   return done({ ...baseOf(row), layouts: 0, stage: 'draft', document: null });
 };
 
@@ -164,18 +198,28 @@ export const changeProject = async (
   const refusal = refuseUnlessDrafting(actor);
   if (refusal) return refusal;
   const { archived, ...fields } = change;
-  const [row] = await db
-    .update(projects)
-    .set({
-      ...fields,
-      ...(archived === undefined
-        ? {}
-        : { archivedAt: archived ? (before.archivedAt ?? new Date()) : null }),
-      updatedAt: new Date(),
-    })
-    .where(and(eq(projects.firmId, actor.firmId), eq(projects.id, id)))
-    .returning();
-  return done((await summariesOf(db, actor, [row]))[0]);
+  const row = await db.transaction(async (tx) => {
+    const [changed] = await tx
+      .update(projects)
+      .set({
+        ...fields,
+        ...(archived === undefined
+          ? {}
+          : { archivedAt: archived ? (before.archivedAt ?? new Date()) : null }),
+        updatedAt: new Date(),
+      })
+      .where(and(eq(projects.firmId, actor.firmId), eq(projects.id, id)))
+      .returning();
+    const subject: Subject = { type: 'project', id };
+    if (archived !== undefined && archived !== (before.archivedAt !== null)) {
+      await recordAudit(tx, actor, archived ? 'project.archived' : 'project.restored', subject);
+    }
+    if (Object.keys(fields).length > 0) {
+      await recordAudit(tx, actor, 'project.changed', subject, fields);
+    }
+    return changed;
+  });
+  return done((await projectSummaries(db, actor, [row]))[0]);
 };
 
 /** Lets an installer or client of the firm see a project. */

@@ -78,8 +78,13 @@ export const readBody = async <S extends z.ZodType>(
       }),
     );
   }
-  const faults = textFaults(json);
-  const parsed = schema.safeParse(json);
+  return parsedWith(schema, json);
+};
+
+/** Parses what was sent with a schema, or answers with all that is wrong with it. */
+export const parsedWith = <S extends z.ZodType>(schema: S, sent: unknown): Read<z.output<S>> => {
+  const faults = textFaults(sent);
+  const parsed = schema.safeParse(sent);
   const errors = [...faults, ...(parsed.success ? [] : fieldProblems(parsed.error))];
   if (!parsed.success || errors.length > 0) {
     return refuse(problemResponse('invalid', 'Some of what was sent is not right.', { errors }));

@@ -7,6 +7,7 @@ import type {
   VersionWithDrawing,
 } from '@/api-types/versions';
 import { drafts, firms, layouts, people, projects, versionEvents, versions } from '@/db/schema';
+import { recordAudit } from './audit';
 import type { Db } from './database';
 import { draftingLayout, lockDraft, ofDraft } from './drafts';
 import { fingerprintOf } from './fingerprint';
@@ -160,7 +161,8 @@ export const saveVersion = async (
       requestId: input.requestId ?? null,
       createdBy: actor.personId,
     });
-    await addEvent(tx, actor, id, 'saved', '');
+    await addVersionEvent(tx, actor, id, 'saved', '');
+    await recordAudit(tx, actor, 'version.saved', { type: 'version', id }, { layoutId });
     await tx.update(drafts).set({ basedOnVersion: id }).where(ofDraft(actor, layoutId));
     await touchProject(tx, actor.firmId, layoutId);
     return done(id);
@@ -168,45 +170,29 @@ export const saveVersion = async (
   return saved.ok ? openVersion(db, actor, saved.value) : saved;
 };
 
-const addEvent = async (
+/** Adds to what happened to a version, under the lock of its layout's draft; the event's id. */
+export const addVersionEvent = async (
   tx: Db,
   actor: Actor,
   versionId: string,
   kind: VersionEventKind,
   note: string,
-): Promise<void> => {
+): Promise<string> => {
   const [{ last }] = await tx
     .select({ last: max(versionEvents.place) })
     .from(versionEvents)
     .where(and(eq(versionEvents.firmId, actor.firmId), eq(versionEvents.versionId, versionId)));
+  const id = newId();
   await tx.insert(versionEvents).values({
-    id: newId(),
+    id,
     firmId: actor.firmId,
     versionId,
     place: (last ?? 0) + 1,
     kind,
     personId: actor.personId,
+    // The clock, not the transaction's start: it may have waited for the lock while others went before.
+    at: new Date(),
     note,
   });
-};
-
-/** Adds to what happened to a version. Which step may follow which is for the caller to know. */
-export const recordVersionEvent = async (
-  db: Db,
-  actor: Actor,
-  versionId: string,
-  kind: Exclude<VersionEventKind, 'saved'>,
-  note = '',
-): Promise<Outcome<VersionDetail>> => {
-  const seen = await openVersion(db, actor, versionId);
-  if (!seen.ok) return seen;
-  await db.transaction(async (tx) => {
-    await tx
-      .select({ id: versions.id })
-      .from(versions)
-      .where(and(eq(versions.firmId, actor.firmId), eq(versions.id, versionId)))
-      .for('update');
-    await addEvent(tx, actor, versionId, kind, note);
-  });
-  return openVersion(db, actor, versionId);
+  return id;
 };

@@ -3,6 +3,8 @@ import type { LayoutDocument } from '@/paving/layout-document';
 import { COURT_CHEQUER } from '@/server/demo-layouts';
 import { addPerson } from '@/server/people';
 import type { Actor } from '@/server/permissions';
+import type { VersionEventKind } from '@/api-types/versions';
+import { addVersionEvent } from '@/server/versions';
 import { db, Visitor } from './site';
 
 export const PASSWORD = 'a long enough password';
@@ -95,4 +97,14 @@ export const newVersion = async (visitor: Visitor, layoutId: string, label = 'On
   });
   if (version.status !== 201) throw new Error(JSON.stringify(version.body));
   return version.body as { id: string; number: number };
+};
+
+/** Puts an event on a version, whether or not it may follow there. */
+export const putEvent = async (
+  actor: Actor,
+  versionId: string,
+  kind: VersionEventKind,
+  note = '',
+): Promise<void> => {
+  await (await db()).transaction((tx) => addVersionEvent(tx, actor, versionId, kind, note));
 };

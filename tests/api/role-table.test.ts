@@ -1,6 +1,5 @@
 import { beforeAll, describe, expect, test } from 'vitest';
 import { putOnProject } from '@/server/projects';
-import { recordVersionEvent } from '@/server/versions';
 import {
   court,
   moved,
@@ -9,6 +8,7 @@ import {
   newProject,
   newVersion,
   PASSWORD,
+  putEvent,
   type Signed,
 } from './firm';
 import { db, endpoints, useEmptyDatabase, Visitor } from './site';
@@ -39,6 +39,13 @@ interface World {
   readonly shared: string;
   readonly issued: string;
   readonly aside: string;
+  /** Of another project with the same people on it: versions to take steps with. */
+  readonly stepsProject: string;
+  readonly stepsLayout: string;
+  /** Shared, accepted and issued: everybody on the project sees it. */
+  readonly seenByAll: string;
+  /** The owner's own, on `seenByAll`. */
+  readonly thread: string;
 }
 
 let world: World;
@@ -61,11 +68,18 @@ beforeAll(async () => {
     await newVersion(owner.visitor, layout, 'Issued'),
   ];
   const database = await db();
-  await recordVersionEvent(database, owner.actor, shared.id, 'shared');
-  await recordVersionEvent(database, owner.actor, issued.id, 'issued');
+  await putEvent(owner.actor, shared.id, 'shared');
+  await putEvent(owner.actor, issued.id, 'issued');
+  const steps = await newProject(owner.visitor);
   for (const { actor } of [installer, client]) {
     await putOnProject(database, firmId, project, actor.personId);
+    await putOnProject(database, firmId, steps.projectId, actor.personId);
   }
+  const seenByAll = await newVersion(owner.visitor, steps.layoutId, 'Seen by all');
+  for (const kind of ['shared', 'accepted', 'issued'] as const) {
+    await putEvent(owner.actor, seenByAll.id, kind);
+  }
+  const thread = await owner.visitor.post(`/api/versions/${seenByAll.id}/comments`, { body: 'So' });
   for (const { actor } of [installerElsewhere, clientElsewhere]) {
     await putOnProject(database, firmId, other.projectId, actor.personId);
   }
@@ -91,6 +105,10 @@ beforeAll(async () => {
     shared: shared.id,
     issued: issued.id,
     aside: stale.body.setAside.id,
+    stepsProject: steps.projectId,
+    stepsLayout: steps.layoutId,
+    seenByAll: seenByAll.id,
+    thread: thread.body.id,
   };
 });
 
@@ -106,13 +124,30 @@ interface Row {
   /** The row of the table, or why there is none. */
   readonly row: string;
   readonly endpoint: string;
-  readonly id?: (world: World) => string;
-  readonly body?: (world: World, asker: Asker) => unknown;
+  readonly id?: (world: World) => string | Promise<string>;
+  readonly query?: (world: World) => string;
+  readonly body?: (world: World, asker: Asker, id: string) => unknown;
   readonly expected: Statuses;
 }
 
 const revision = async (layout: string): Promise<number> =>
   (await world.people.owner.visitor.get(`/api/layouts/${layout}/draft`)).body.revision;
+
+/** A new version of the layout for steps, brought to where it stands through the endpoints. */
+const versionThatIs = async (state: 'saved' | 'shared' | 'accepted'): Promise<string> => {
+  const { owner, client } = world.people;
+  const { id } = await newVersion(owner.visitor, world.stepsLayout, state);
+  if (state !== 'saved') await owner.visitor.post(`/api/versions/${id}/share`);
+  if (state === 'accepted') {
+    await client.visitor.post(`/api/versions/${id}/accept`, await acceptanceOf(id));
+  }
+  return id;
+};
+
+const acceptanceOf = async (version: string) => {
+  const { fingerprint } = (await world.people.owner.visitor.get(`/api/versions/${version}`)).body;
+  return { typedName: 'A. Client', fingerprint, terms: '' };
+};
 
 const DRAFTS = 'projects, drafts, saving and sharing versions';
 const SEE_PROJECT = 'see a project';
@@ -297,16 +332,197 @@ const rows: readonly Row[] = [
     id: ({ issued }) => issued,
     expected: statuses([200, 200, 200, 404, 404, 404, 404, 401]),
   },
+  {
+    row: `${DRAFTS}: one not shared yet`,
+    endpoint: 'POST /api/versions/[id]/share',
+    id: () => versionThatIs('saved'),
+    body: () => ({ note: 'Have a look' }),
+    expected: statuses([200, 200, 404, 404, 404, 404, 404, 401]),
+  },
+  {
+    row: `${DRAFTS}: one shared already, refused with a reason`,
+    endpoint: 'POST /api/versions/[id]/share',
+    id: ({ seenByAll }) => seenByAll,
+    body: () => ({ note: 'Have a look' }),
+    expected: statuses([409, 409, 403, 403, 404, 404, 404, 401]),
+  },
+  {
+    row: 'accept, ask for a change, pay',
+    endpoint: 'POST /api/versions/[id]/accept',
+    id: () => versionThatIs('shared'),
+    body: (_world, _asker, id) => acceptanceOf(id),
+    expected: statuses([403, 403, 404, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: 'accept, ask for a change, pay: one that is issued already',
+    endpoint: 'POST /api/versions/[id]/accept',
+    id: ({ seenByAll }) => seenByAll,
+    body: (_world, _asker, id) => acceptanceOf(id),
+    expected: statuses([403, 403, 403, 409, 404, 404, 404, 401]),
+  },
+  {
+    row: 'accept, ask for a change, pay',
+    endpoint: 'POST /api/versions/[id]/ask-change',
+    id: () => versionThatIs('shared'),
+    body: () => ({ note: 'Turn it' }),
+    expected: statuses([403, 403, 404, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: 'issue an accepted version for set-out',
+    endpoint: 'POST /api/versions/[id]/issue',
+    id: () => versionThatIs('accepted'),
+    body: () => ({ note: '' }),
+    expected: statuses([200, 200, 404, 403, 404, 404, 404, 401]),
+  },
+  {
+    row: 'issue an accepted version for set-out: one not accepted yet',
+    endpoint: 'POST /api/versions/[id]/issue',
+    id: () => versionThatIs('shared'),
+    body: () => ({ note: '' }),
+    expected: statuses([409, 409, 404, 403, 404, 404, 404, 401]),
+  },
+  {
+    row: `${SEE_VERSION}: where it stands`,
+    endpoint: 'GET /api/versions/[id]/agreement',
+    id: ({ shared }) => shared,
+    expected: statuses([200, 200, 404, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: `${SEE_VERSION}: the record of its acceptance`,
+    endpoint: 'GET /api/versions/[id]/acceptance',
+    id: () => versionThatIs('accepted'),
+    expected: statuses([200, 200, 404, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: `${SEE_VERSION}: comments on a shared one`,
+    endpoint: 'GET /api/versions/[id]/comments',
+    id: ({ shared }) => shared,
+    expected: statuses([200, 200, 404, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: 'comment on a version: a shared one',
+    endpoint: 'POST /api/versions/[id]/comments',
+    id: ({ shared }) => shared,
+    body: () => ({ body: 'Here', pin: [100, 200] }),
+    expected: statuses([201, 201, 404, 201, 404, 404, 404, 401]),
+  },
+  {
+    row: 'comment on a version: an issued one',
+    endpoint: 'POST /api/versions/[id]/comments',
+    id: ({ issued }) => issued,
+    body: () => ({ body: 'Here', pin: [100, 200] }),
+    expected: statuses([201, 201, 201, 404, 404, 404, 404, 401]),
+  },
+  {
+    row: 'comment on a version: whom to mention',
+    endpoint: 'GET /api/versions/[id]/mentionable',
+    id: ({ issued }) => issued,
+    expected: statuses([200, 200, 200, 404, 404, 404, 404, 401]),
+  },
+  {
+    row: SEE_VERSION,
+    endpoint: 'GET /api/layouts/[id]/comments',
+    id: ({ layout }) => layout,
+    expected: statuses([200, 200, 200, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: 'comment on a version',
+    endpoint: 'POST /api/threads/[id]/replies',
+    id: ({ thread }) => thread,
+    body: () => ({ body: 'Yes' }),
+    expected: statuses([201, 201, 201, 201, 404, 404, 404, 401]),
+  },
+  {
+    row: 'comment on a version: somebody else’s is resolved by the firm’s drafters',
+    endpoint: 'PATCH /api/threads/[id]',
+    id: ({ thread }) => thread,
+    body: () => ({ resolved: true }),
+    expected: statuses([200, 200, 403, 403, 404, 404, 404, 401]),
+  },
+  {
+    row: `${SEE_VERSION}: one’s own mark of what was read`,
+    endpoint: 'PUT /api/threads/[id]/read',
+    id: ({ thread }) => thread,
+    body: ({ thread }) => ({ upTo: thread }),
+    expected: statuses([200, 200, 200, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: `${SEE_VERSION}: one’s own unread comments`,
+    endpoint: 'GET /api/unread',
+    expected: statuses([200, 200, 200, 200, 200, 200, 200, 401]),
+  },
+  {
+    row: SEE_PROJECT,
+    endpoint: 'GET /api/projects/[id]/timeline',
+    id: ({ project }) => project,
+    expected: statuses([200, 200, 200, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: SEE_PROJECT,
+    endpoint: 'GET /api/layouts/[id]/timeline',
+    id: ({ layout }) => layout,
+    expected: statuses([200, 200, 200, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: SEE_PROJECT,
+    endpoint: 'GET /api/projects/[id]/live',
+    id: ({ project }) => project,
+    expected: statuses([200, 200, 200, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: SEE_PROJECT,
+    endpoint: 'GET /api/projects/[id]/live/stream',
+    id: ({ project }) => project,
+    query: () => '?for=0',
+    expected: statuses([200, 200, 200, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'PUT /api/layouts/[id]/presence',
+    id: ({ layout }) => layout,
+    body: () => ({ state: 'editing' }),
+    expected: drafting(200),
+  },
+  {
+    row: DRAFTS,
+    endpoint: 'POST /api/layouts/[id]/duplicate',
+    id: ({ layout }) => layout,
+    body: () => ({}),
+    expected: drafting(201),
+  },
+  {
+    row: `${SEE_VERSION}: both`,
+    endpoint: 'GET /api/comparison',
+    query: ({ shared }) => `?a=${shared}&b=${shared}`,
+    expected: statuses([200, 200, 404, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: `${SEE_VERSION}: one of the two not`,
+    endpoint: 'GET /api/comparison',
+    query: ({ shared, saved }) => `?a=${shared}&b=${saved}`,
+    expected: statuses([200, 200, 404, 404, 404, 404, 404, 401]),
+  },
+  {
+    row: 'people, roles, firm settings: who did what',
+    endpoint: 'GET /api/audit',
+    expected: statuses([200, 403, 403, 403, 403, 403, 200, 401]),
+  },
+  {
+    row: 'people, roles, firm settings: all that the firm has',
+    endpoint: 'GET /api/firm/export',
+    expected: statuses([200, 403, 403, 403, 403, 403, 200, 401]),
+  },
 ];
 
 /** Signing in, up and out change who asks; each of those is asked by a browser of its own. */
 const ENTERING = /sign-(in|up|out)$/;
 
-describe.each(rows)('$endpoint ($row)', ({ endpoint, id, body, expected }) => {
+describe.each(rows)('$endpoint ($row)', ({ endpoint, id, query, body, expected }) => {
   test.each(askers)('asked by %s', async (asker) => {
     const [method, address] = endpoint.split(' ');
-    const url = address.replace('[id]', id?.(world) ?? '');
-    const sent = await body?.(world, asker);
+    const own = (await id?.(world)) ?? '';
+    const url = `${address.replace('[id]', own)}${query?.(world) ?? ''}`;
+    const sent = await body?.(world, asker, own);
     const visitor = ENTERING.test(address) ? new Visitor() : world.people[asker].visitor;
     const answer = await visitor.call(method, url, sent);
     expect(answer.status, JSON.stringify(answer.body)).toBe(expected[asker]);
@@ -330,8 +546,9 @@ test('an id that exists nowhere is answered like one that may not be seen', asyn
   const { visitor } = world.people.stranger;
   for (const { endpoint, id, body } of rows.filter((row) => row.id)) {
     const [method, address] = endpoint.split(' ');
-    const sent = await body?.(world, 'stranger');
-    const unseen = await visitor.call(method, address.replace('[id]', id?.(world) ?? ''), sent);
+    const own = (await id?.(world)) ?? '';
+    const sent = await body?.(world, 'stranger', own);
+    const unseen = await visitor.call(method, address.replace('[id]', own), sent);
     const nowhere = await visitor.call(method, address.replace('[id]', 'nowhere'), sent);
     expect(unseen.body, endpoint).toEqual(nowhere.body);
   }
@@ -345,8 +562,9 @@ const names = async (asker: Asker, url: string, list: string, name: string): Pro
 test('the list of projects holds those that the person sees', async () => {
   const ids = (asker: Asker) => names(asker, '/api/projects', 'projects', 'id');
   expect(await ids('owner')).toContain(world.project);
-  expect(await ids('installer')).toEqual([world.project]);
-  expect(await ids('client')).toEqual([world.project]);
+  const own = new Set([world.project, world.stepsProject]);
+  expect(new Set(await ids('installer'))).toEqual(own);
+  expect(new Set(await ids('client'))).toEqual(own);
   expect(await ids('installer elsewhere')).not.toContain(world.project);
   expect(await ids('stranger')).not.toContain(world.project);
 });

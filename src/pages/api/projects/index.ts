@@ -1,10 +1,11 @@
-import { newProjectSchema } from '@/api-types/projects';
-import { onlyMethods, reading, writing } from '@/server/endpoint';
+import { newProjectSchema, projectQuerySchema } from '@/api-types/projects';
+import { asking, onlyMethods, writing } from '@/server/endpoint';
 import { done } from '@/server/outcomes';
-import { createProject, listProjects } from '@/server/projects';
+import { projectPage } from '@/server/project-list';
+import { createProject } from '@/server/projects';
 
-export const GET = reading(async ({ db, actor }) =>
-  done({ projects: await listProjects(db, actor) }),
+export const GET = asking(projectQuerySchema, async ({ db, actor }, query) =>
+  done(await projectPage(db, actor, query)),
 );
 export const POST = writing(
   newProjectSchema,
