@@ -12,9 +12,10 @@ import { DrawEntry, type DrawEntryHandle } from './DrawEntry';
 import FloorStage, { zoomToFit } from './FloorStage';
 import { GapRibbon } from './GapRibbon';
 import { KeyList } from './KeyList';
+import { createFitService } from './fit/fit-service';
 import { BondPanel } from './panels/BondPanel';
 import { GroundPanel } from './panels/GroundPanel';
-import { PlacePanel } from './panels/PlacePanel';
+import { FitPanel } from './panels/FitPanel';
 import { UnitPanel } from './panels/UnitPanel';
 import { useVersions, VersionsPanel } from './panels/VersionsPanel';
 import { PegString, STEP_NAMES } from './PegString';
@@ -89,6 +90,9 @@ function Board({ draft, sync, ready }: { draft: DraftState; sync: DraftSync; rea
   const versions = useVersions(draft.layoutId);
   const number = (versions.data?.[0]?.number ?? 0) + 1;
   const open = keys || saving;
+  const [fit] = useState(() => createFitService(table));
+  // The fit is worked out only while somebody looks at it.
+  useEffect(() => (step === 'fit' ? fit.start() : undefined), [fit, step]);
 
   useEffect(() => {
     const onKey = (event: KeyboardEvent) => {
@@ -155,7 +159,7 @@ function Board({ draft, sync, ready }: { draft: DraftState; sync: DraftSync; rea
           {step === 'ground' && <GroundPanel />}
           {step === 'unit' && <UnitPanel />}
           {step === 'bond' && <BondPanel />}
-          {step === 'place' && <PlacePanel />}
+          {step === 'fit' && <FitPanel fit={fit} />}
           {step === 'versions' && (
             <VersionsPanel layoutId={draft.layoutId} sync={sync} onSave={() => setSaving(true)} />
           )}

@@ -14,6 +14,7 @@ import { shownDocument, type TableStore, type ToolName } from './table-store';
 import { createAlignToEdge } from './tools/align-to-edge';
 import { createDrawRing } from './tools/draw-ring';
 import { createEditRing, edgeNearest } from './tools/edit-ring';
+import { createHoldEdge } from './tools/hold-edge';
 import { createLiftUnit } from './tools/lift-unit';
 import { createSlidePattern } from './tools/slide-pattern';
 import { CLICK_SLACK_PX, screenDistance, type TablePointer, type Tool } from './tools/tool';
@@ -24,6 +25,7 @@ const createTools = (): Record<ToolName, Tool> => ({
   slide: createSlidePattern(),
   lift: createLiftUnit(),
   align: createAlignToEdge(),
+  hold: createHoldEdge(),
 });
 
 /** Below this width the buttons take room from the drawing, px. */

@@ -5,7 +5,7 @@ export const STEP_NAMES: Record<Step, string> = {
   ground: 'Ground',
   unit: 'Unit',
   bond: 'Bond',
-  place: 'Place',
+  fit: 'Fit',
   versions: 'Versions',
 };
 

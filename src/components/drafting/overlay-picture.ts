@@ -458,10 +458,12 @@ export function paintOverlay(
     paintDimensions(ink, ring, editing ? state.pick : null);
   paintLetters(ink);
   ctx.globalAlpha = 1;
-  if (state.step === 'place' && !state.preview && state.tool !== 'align') paintLeastGap(ink, floor);
+  if (state.step === 'fit' && !state.preview && state.tool !== 'align' && state.tool !== 'hold')
+    paintLeastGap(ink, floor);
   if (editing && !state.drawing) paintHandles(ink, state);
-  if (state.tool === 'align' && state.hover) paintPick(ink, state.hover, false);
-  if (state.step === 'place' && state.tool === 'slide') paintTurnHandle(ink, state);
+  if ((state.tool === 'align' || state.tool === 'hold') && state.hover)
+    paintPick(ink, state.hover, false);
+  if (state.step === 'fit' && state.tool === 'slide') paintTurnHandle(ink, state);
   paintGuides(ink, state);
   paintDrawing(ink, state);
   if (!state.drawing) paintProblems(ink, floor);

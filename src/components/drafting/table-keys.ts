@@ -58,7 +58,7 @@ export const KEY_LIST: readonly (readonly [
     ],
   ],
   [
-    'Unit, bond and place',
+    'Unit, bond and fit',
     [
       ['Arrows', 'Slide the pattern 1 mm; with Shift 10 mm'],
       ['[  ]', 'Turn 1°; with Shift 15°'],
@@ -129,7 +129,8 @@ function escaped(table: TableStore): void {
   const { drawing, tool, preview, show, set, step } = table.getState();
   if (preview) show(null);
   else if (drawing) drawingLeft(table);
-  else if (step !== 'ground' && tool !== 'slide') set({ tool: 'slide', hover: null });
+  else if (step !== 'ground' && tool !== 'slide')
+    set({ tool: 'slide', holding: null, hover: null });
   else set({ pick: null, hover: null });
 }
 

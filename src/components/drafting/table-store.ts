@@ -1,13 +1,14 @@
 import { temporal } from 'zundo';
 import { createStore } from 'zustand/vanilla';
 import type { Point } from '@/geometry/point';
+import type { FitHold } from '@/paving/fit/fit';
 import type { LayoutDocument } from '@/paving/layout-document';
 import type { Camera, ScreenSize } from './camera';
 
-export const STEPS = ['ground', 'unit', 'bond', 'place', 'versions'] as const;
+export const STEPS = ['ground', 'unit', 'bond', 'fit', 'versions'] as const;
 export type Step = (typeof STEPS)[number];
 
-export type ToolName = 'edit' | 'draw' | 'slide' | 'lift' | 'align';
+export type ToolName = 'edit' | 'draw' | 'slide' | 'lift' | 'align' | 'hold';
 
 /** What of the ground is picked: a vertex or an edge of a ring. */
 export type Pick =
@@ -51,6 +52,13 @@ export interface TableState {
   readonly guides: readonly Guide[];
   readonly lit: Lit | null;
   readonly snap: boolean;
+  /** What the fit holds the pattern to: asked of it, not part of the document. */
+  readonly hold: readonly FitHold[];
+  /** The hold being pointed at: a row along one edge, or the middle between two. */
+  readonly holding: {
+    readonly kind: 'edge' | 'between';
+    readonly first: readonly [number, number] | null;
+  } | null;
   readonly camera: Camera | null;
   readonly size: ScreenSize;
   /** Said to the person, and read aloud by a screen reader. */
@@ -75,7 +83,7 @@ const FIRST_TOOL: Record<Step, ToolName> = {
   ground: 'edit',
   unit: 'slide',
   bond: 'slide',
-  place: 'slide',
+  fit: 'slide',
   versions: 'slide',
 };
 
@@ -93,6 +101,8 @@ export function createTableStore(document: LayoutDocument) {
         guides: [],
         lit: null,
         snap: true,
+        hold: [],
+        holding: null,
         camera: null,
         size: { width: 0, height: 0 },
         said: '',
@@ -117,6 +127,7 @@ export function createTableStore(document: LayoutDocument) {
             pick: null,
             hover: null,
             drawing: null,
+            holding: null,
             guides: [],
             lit: null,
           });

@@ -5,6 +5,11 @@ import { formatLength } from '@/paving/length';
 import { groundMiddle, placementTurned, turnNormal } from '@/paving/placement-edits';
 import { LengthField } from '../../ui/LengthField';
 import { NumberField } from '../../ui/NumberField';
+import { BestStart } from '../fit/BestStart';
+import { FitPictures } from '../fit/FitPictures';
+import type { FitService } from '../fit/fit-service';
+import { HoldFields } from '../fit/HoldFields';
+import { JointRange } from '../fit/JointRange';
 import { FloorFigures } from '../FloorFigures';
 import { turnNudged } from '../table-keys';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
@@ -24,7 +29,8 @@ const HINTS: Partial<Record<ToolName, string>> = {
   align: 'Click the edge along which a row is to start.',
 };
 
-export function PlacePanel() {
+/** Where the pattern stands: the best start and its pictures, and the pattern by hand. */
+export function FitPanel({ fit }: { fit: FitService }) {
   const table = useTableStore();
   const floor = useShownFloor();
   const tool = useTable((state) => state.tool);
@@ -40,8 +46,13 @@ export function PlacePanel() {
     }));
   return (
     <div className="space-y-5">
+      <BestStart fit={fit} />
       <FloorFigures />
-      <section aria-label="Tools">
+      <FitPictures fit={fit} />
+      <HoldFields fit={fit} />
+      <JointRange />
+      <section aria-label="By hand">
+        <h3 className="mb-2 border-b border-graphite pb-1">By hand</h3>
         <div className="grid grid-cols-3 gap-2">
           {TOOLS.map(([name, label, Icon]) => (
             <button

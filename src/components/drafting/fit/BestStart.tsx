@@ -1,0 +1,68 @@
+import { documentEdgeName } from '@/paving/edge-names';
+import type { FitChoice } from '@/paving/fit/fit';
+import { useShownFloor, useTable, useTableStore } from '../table-context';
+import type { TableStore } from '../table-store';
+import { holdWords } from '../tools/hold-edge';
+import type { FitService } from './fit-service';
+import { useFit } from './use-fit';
+
+/** Takes a found placement: one undo step. */
+export function placementTaken(
+  table: TableStore,
+  choice: Pick<FitChoice, 'placement' | 'wholeUnits'>,
+): void {
+  table.getState().edit((now) => ({ ...now, placement: choice.placement }));
+  table.getState().set({ said: `${choice.wholeUnits} whole units from this start.` });
+}
+
+/** Says what is proven of this floor, and takes the best start. */
+export function BestStart({ fit }: { fit: FitService }) {
+  const table = useTableStore();
+  const { document, report } = useShownFloor();
+  const hold = useTable((state) => state.hold);
+  const { result, current, failure } = useFit(fit);
+  if (failure && current)
+    return (
+      <p role="alert" className="text-brick">
+        {failure}
+      </p>
+    );
+  if (!result || !current)
+    return <p className="min-h-12 text-slate">Looking for the best start …</p>;
+
+  const turn = `${Number(document.placement.turn.toFixed(2))}°`;
+  const held = hold.map((h) =>
+    holdWords(h, (ring, edge) => documentEdgeName(document, ring, edge)),
+  );
+  const under = held.length > 0 ? `${turn}, with ${held.join(' and ')}` : turn;
+  if (result.wholeUnits === 0)
+    return <p>No start lays a whole unit at {under}. Try another turn, or a smaller unit.</p>;
+
+  const laid = (report?.wholeUnits ?? 0) + (report?.lifted ?? 0);
+  const reached =
+    laid === result.wholeUnits && (report?.play ?? 0) > (result.play ?? 0) - PLAY_REACHED_MM;
+  return (
+    <div className="space-y-2" data-testid="best-start">
+      <p>
+        No start lays more than <b>{result.wholeUnits}</b> whole units at {under}.
+        {reached && ' This is it, with the most play that they can have.'}
+        {!reached && laid === result.wholeUnits && ' This start lays as many, with less play.'}
+        {laid < result.wholeUnits && ` This start lays ${laid}.`}
+      </p>
+      {!reached && (
+        <button
+          type="button"
+          className="button button-primary w-full"
+          onClick={() =>
+            placementTaken(table, { placement: result.placement, wholeUnits: result.wholeUnits })
+          }
+        >
+          Take the best start
+        </button>
+      )}
+    </div>
+  );
+}
+
+/** Play this near to the most counts as the most: half of what a figure shows, mm. */
+const PLAY_REACHED_MM = 0.05;

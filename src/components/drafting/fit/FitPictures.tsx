@@ -1,0 +1,130 @@
+import type { Point } from '@/geometry/point';
+import { formatLength } from '@/paving/length';
+import { placementSlid } from '@/paving/placement-edits';
+import { useShownFloor, useTable, useTableStore } from '../table-context';
+import { placementTaken } from './BestStart';
+import { Choices } from './Choices';
+import type { FitService } from './fit-service';
+import { ShiftMapPicture } from './ShiftMapPicture';
+import { TurnCurve } from './TurnCurve';
+import { useFit } from './use-fit';
+
+function Heading({ title, note }: { title: string; note: string }) {
+  return (
+    <div className="mb-2 flex items-baseline justify-between gap-3 border-b border-graphite pb-1">
+      <h3>{title}</h3>
+      <span className="text-right text-sm text-slate">{note}</span>
+    </div>
+  );
+}
+
+/** Shift map, turn curve and choices, each with its figures as text. */
+export function FitPictures({ fit }: { fit: FitService }) {
+  const table = useTableStore();
+  const floor = useShownFloor();
+  const hold = useTable((state) => state.hold);
+  const { result, map, current, turns, sweeping, swept } = useFit(fit);
+  const { document, report } = floor;
+  const { placement, display } = document;
+  const length = (mm: number) => formatLength(mm, display, { decimals: mm < 10 ? 1 : 0 });
+  const count = report ? report.wholeUnits + report.lifted : null;
+  const most = result?.choices[0] ?? null;
+  const chosen =
+    result?.choices.find(
+      (choice) =>
+        choice.wholeUnits === count &&
+        report?.play != null &&
+        Math.abs(choice.play - report.play) < 0.05,
+    ) ?? null;
+
+  const shifted = (by: Point, settled: boolean) => {
+    const { show, edit, document: now, preview } = table.getState();
+    const from = preview ?? now;
+    const next = { ...from, placement: placementSlid(from.placement, by) };
+    if (settled) edit(() => next);
+    else show(next);
+  };
+
+  return (
+    <>
+      <section aria-label="Shift map" aria-busy={!current}>
+        <Heading
+          title="Shift map"
+          note={
+            map
+              ? `every start in one ${formatLength(map.pitch, display, { unit: false })} × ${length(map.rise)} cell`
+              : ''
+          }
+        />
+        {map && (
+          <>
+            <ShiftMapPicture
+              map={map}
+              origin={placement.origin}
+              best={most && current ? { origin: most.placement.origin, play: most.play } : null}
+              countHere={count}
+              onShift={shifted}
+              onSettle={() => table.getState().settleShown()}
+            />
+            <div className="mt-1.5 flex items-center gap-2 text-sm text-slate">
+              <span>{map.least}</span>
+              <span
+                aria-hidden="true"
+                className="h-2.5 flex-1 border border-slate"
+                style={{ background: 'linear-gradient(to right, rgb(240 240 237), rgb(60 60 57))' }}
+              />
+              <span>{map.most} whole</span>
+            </div>
+            <p className="mt-1 text-sm text-slate">
+              Drag the dot: the floor follows. Outlined is where the most lie whole
+              {most && <>; the dashed circle is their play, ±{length(most.play)}</>}.
+            </p>
+          </>
+        )}
+      </section>
+
+      <section aria-label="Turn curve">
+        <Heading title="Turn curve" note="whole units at each turn" />
+        {turns.length > 1 ? (
+          <TurnCurve
+            turns={turns}
+            turn={placement.turn}
+            display={display}
+            onTurn={(turn) => void fit.takeTurn(turn)}
+          />
+        ) : (
+          <p className="text-sm text-slate">
+            {sweeping ? 'Sweeping the turns …' : 'The turns are swept when the floor rests.'}
+          </p>
+        )}
+        <div className="mt-1 flex items-center justify-between text-sm text-slate">
+          <span aria-live="polite">
+            {sweeping && `Sweeping the turns: ${Math.round(swept * 100)} %`}
+          </span>
+          <button
+            type="button"
+            className="link"
+            onClick={() => (sweeping ? fit.stopSweep() : fit.sweep())}
+          >
+            {sweeping ? 'Stop' : 'Sweep again'}
+          </button>
+        </div>
+      </section>
+
+      {result && result.choices.length > 0 && (
+        <section aria-label="Choices">
+          <Heading
+            title="Choices"
+            note={hold.length > 0 ? 'as held' : 'most units, or most play'}
+          />
+          <Choices
+            choices={result.choices}
+            document={document}
+            chosen={chosen}
+            onChoice={(choice) => placementTaken(table, choice)}
+          />
+        </section>
+      )}
+    </>
+  );
+}

@@ -1,0 +1,117 @@
+import { proxy } from 'comlink';
+import { useEffect, useRef, useState } from 'react';
+import type { JointFit } from '@/paving/fit/joint-range';
+import { formatLength } from '@/paving/length';
+import { LengthField } from '../../ui/LengthField';
+import { useTable, useTableStore } from '../table-context';
+import { newHand, dismissed, type Hand } from './fit-hand';
+
+/** Joints that the trade allows for blocks: 2 to 5 mm (construction tolerances for interlocking pavements, ICPI). */
+const FIRST_RANGE = { from: 2, to: 5, step: 0.25 };
+
+/** Seeks the joint, within a range, at which one more row closes or the field ends evenly. */
+export function JointRange() {
+  const table = useTableStore();
+  const document = useTable((state) => state.document);
+  const { display, bond } = document;
+  const [range, setRange] = useState(FIRST_RANGE);
+  const [found, setFound] = useState<readonly JointFit[] | null>(null);
+  const [failure, setFailure] = useState<string | null>(null);
+  const [share, setShare] = useState<number | null>(null);
+  const hand = useRef<Hand | null>(null);
+  const stop = () => {
+    hand.current = dismissed(hand.current);
+    setShare(null);
+  };
+  useEffect(() => stop, []);
+  useEffect(() => {
+    setFound(null);
+    setFailure(null);
+  }, [document.ground, document.units, bond.kind, document.placement.turn, document.clearance]);
+
+  const seek = async () => {
+    stop();
+    setFailure(null);
+    setShare(0);
+    const mine = newHand();
+    hand.current = mine;
+    try {
+      const answer = await mine.remote.joints(
+        document,
+        range,
+        proxy((done: number) => hand.current === mine && setShare(done)),
+      );
+      if (hand.current !== mine) return;
+      if (answer.ok) setFound(answer.joints);
+      else setFailure(answer.message);
+    } catch (error) {
+      if (hand.current === mine) setFailure(error instanceof Error ? error.message : String(error));
+    }
+    if (hand.current === mine) stop();
+  };
+
+  const length = (mm: number) => formatLength(mm, display, { decimals: 2 });
+  const most = found ? Math.max(...found.map((joint) => joint.wholeUnits)) : 0;
+  return (
+    <section aria-label="Joint range">
+      <h3 className="mb-2 border-b border-graphite pb-1">Joint within a range</h3>
+      <div className="grid grid-cols-3 gap-2">
+        {(['from', 'to', 'step'] as const).map((part) => (
+          <LengthField
+            key={part}
+            label={{ from: 'From', to: 'To', step: 'By' }[part]}
+            mm={range[part]}
+            display={display}
+            decimals={2}
+            refuse={(mm) =>
+              mm < 0 || mm > 500 || (part === 'step' && mm < 0.01) ? 'Not a joint.' : null
+            }
+            onLength={(mm) => setRange({ ...range, [part]: mm })}
+          />
+        ))}
+      </div>
+      <button
+        type="button"
+        className="button mt-2 w-full"
+        onClick={() => (share === null ? void seek() : stop())}
+      >
+        {share === null ? 'Try these joints' : `Stop (${Math.round(share * 100)} %)`}
+      </button>
+      {failure && (
+        <p role="alert" className="mt-2 text-sm text-brick">
+          {failure}
+        </p>
+      )}
+      {found && (
+        <ul className="mt-2 hairlines">
+          {found.map((joint) => (
+            <li key={joint.joint}>
+              <button
+                type="button"
+                className={`flex min-h-11 w-full items-center justify-between gap-2 px-1 text-left hover:bg-stone-100 ${joint.wholeUnits === most ? 'font-semibold' : ''}`}
+                onClick={() => {
+                  table.getState().edit((now) => ({
+                    ...now,
+                    bond: { ...now.bond, joint: joint.joint } as typeof now.bond,
+                    placement: joint.placement,
+                  }));
+                  table
+                    .getState()
+                    .set({ said: `${joint.wholeUnits} whole units with this joint.` });
+                }}
+              >
+                <span>{length(joint.joint)}</span>
+                <span>
+                  {joint.wholeUnits} whole{joint.closes && ', just closes'}
+                </span>
+                <span className="text-slate">
+                  {joint.play === null ? '–' : `±${length(joint.play)}`}
+                </span>
+              </button>
+            </li>
+          ))}
+        </ul>
+      )}
+    </section>
+  );
+}

@@ -1,0 +1,143 @@
+import { useEffect, useRef, type KeyboardEvent, type PointerEvent } from 'react';
+import type { Point } from '@/geometry/point';
+import type { ShiftMap } from '@/paving/fit/shift-map';
+import { shiftMapPlace, shiftMapShift } from '@/paving/fit/shift-map';
+
+interface Props {
+  readonly map: ShiftMap;
+  readonly origin: Point;
+  /** The placement with the most play, and its play: drawn as a circle of that radius. */
+  readonly best: { readonly origin: Point; readonly play: number } | null;
+  readonly countHere: number | null;
+  /** The dot is dragged: the origin moves by this much on the ground, mm. */
+  readonly onShift: (by: Point, settled: boolean) => void;
+  readonly onSettle: () => void;
+}
+
+/** The page's ink for the fewest and the most units, as grey levels: light is few, dark is many. */
+const LIGHT = 240;
+const DARK = 60;
+
+function greyImage(map: ShiftMap): ImageData {
+  const image = new ImageData(map.width, map.height);
+  const span = Math.max(1, map.most - map.least);
+  for (let row = 0; row < map.height; row++)
+    for (let column = 0; column < map.width; column++) {
+      // Rows of the map run upward, those of a picture downward.
+      const count = map.counts[(map.height - 1 - row) * map.width + column];
+      const grey = LIGHT - ((count - map.least) / span) * (LIGHT - DARK);
+      const at = (row * map.width + column) * 4;
+      image.data[at] = image.data[at + 1] = grey;
+      image.data[at + 2] = grey - 3;
+      image.data[at + 3] = 255;
+    }
+  return image;
+}
+
+/** Every start in one lattice cell as a picture: drag the dot, and the floor follows. */
+export function ShiftMapPicture({ map, origin, best, countHere, onShift, onSettle }: Props) {
+  const canvas = useRef<HTMLCanvasElement>(null);
+  const frame = useRef<HTMLDivElement>(null);
+  const last = useRef<Point | null>(null);
+
+  useEffect(() => {
+    const ctx = canvas.current!.getContext('2d')!;
+    ctx.putImageData(greyImage(map), 0, 0);
+  }, [map]);
+
+  const share = (point: Point): Point => {
+    const [u, v] = shiftMapPlace(map, point);
+    return [u / map.pitch, 1 - v / map.rise];
+  };
+  const [x, y] = share(origin);
+  const bestAt = best ? share(best.origin) : null;
+
+  const drag = (event: PointerEvent, first: boolean) => {
+    const box = frame.current!.getBoundingClientRect();
+    const now: Point = [
+      ((event.clientX - box.left) / box.width) * map.pitch,
+      (1 - (event.clientY - box.top) / box.height) * map.rise,
+    ];
+    const from = first ? shiftMapPlace(map, origin) : last.current;
+    last.current = now;
+    if (from) onShift(shiftMapShift(map, [now[0] - from[0], now[1] - from[1]]), false);
+  };
+  const key = (event: KeyboardEvent) => {
+    const step = event.shiftKey ? 10 : 1;
+    const by: Record<string, Point> = {
+      ArrowRight: [step, 0],
+      ArrowLeft: [-step, 0],
+      ArrowUp: [0, step],
+      ArrowDown: [0, -step],
+    };
+    const shift = by[event.key];
+    if (!shift) return;
+    event.preventDefault();
+    event.stopPropagation();
+    onShift(shiftMapShift(map, shift), true);
+  };
+
+  return (
+    <div
+      ref={frame}
+      role="slider"
+      tabIndex={0}
+      aria-label="Shift map: where the pattern starts"
+      aria-valuemin={map.least}
+      aria-valuemax={map.most}
+      aria-valuenow={countHere ?? 0}
+      aria-valuetext={`${countHere ?? 0} whole units from this start; the most is ${map.most}. Arrows move the start.`}
+      data-testid="shift-map"
+      className="relative cursor-crosshair touch-none overflow-hidden border border-graphite"
+      style={{ aspectRatio: `${map.pitch} / ${map.rise}` }}
+      onPointerDown={(event) => {
+        event.currentTarget.setPointerCapture(event.pointerId);
+        drag(event, true);
+      }}
+      onPointerMove={(event) => event.buttons > 0 && last.current && drag(event, false)}
+      onPointerUp={() => {
+        last.current = null;
+        onSettle();
+      }}
+      onPointerCancel={() => {
+        last.current = null;
+        onSettle();
+      }}
+      onKeyDown={key}
+    >
+      <canvas
+        ref={canvas}
+        width={map.width}
+        height={map.height}
+        className="absolute inset-0 size-full [image-rendering:pixelated]"
+      />
+      <svg
+        viewBox={`0 0 ${map.pitch} ${map.rise}`}
+        preserveAspectRatio="none"
+        className="absolute inset-0 size-full overflow-visible"
+        aria-hidden="true"
+      >
+        <g fill="none" stroke="var(--graphite)" strokeWidth="1.6">
+          <path d={outlinePath(map)} vectorEffect="non-scaling-stroke" />
+          {best && bestAt && (
+            <circle
+              cx={bestAt[0] * map.pitch}
+              cy={bestAt[1] * map.rise}
+              r={best.play}
+              strokeDasharray="3 2"
+              vectorEffect="non-scaling-stroke"
+            />
+          )}
+        </g>
+      </svg>
+      <span
+        aria-hidden="true"
+        className="absolute size-3.5 -translate-1/2 rounded-full border-2 border-on-line bg-line outline-1 outline-line"
+        style={{ left: `${x * 100}%`, top: `${y * 100}%`, borderRadius: '50%' }}
+      />
+    </div>
+  );
+}
+
+const outlinePath = ({ outline, rise }: ShiftMap): string =>
+  outline.map(([a, b]) => `M${a[0]} ${rise - a[1]}L${b[0]} ${rise - b[1]}`).join('');

@@ -1,0 +1,102 @@
+import { useRef, type KeyboardEvent, type PointerEvent } from 'react';
+import type { FitTurn } from '@/paving/fit/fit';
+import { formatLength, type Display } from '@/paving/length';
+
+interface Props {
+  readonly turns: readonly FitTurn[];
+  readonly turn: number;
+  readonly display: Display;
+  readonly onTurn: (turn: number) => void;
+}
+
+const WIDTH = 288;
+const HEIGHT = 92;
+/** The curve repeats after this turn for every unit with square corners and a bond of half-turn symmetry, degrees. */
+const SPAN_DEG = 90;
+
+const nearestTurn = (turns: readonly FitTurn[], turn: number): FitTurn | undefined =>
+  turns.reduce<FitTurn | undefined>(
+    (best, t) => (!best || Math.abs(t.turn - turn) < Math.abs(best.turn - turn) ? t : best),
+    undefined,
+  );
+
+/** Whole units against turn: click or press arrows to take one. */
+export function TurnCurve({ turns, turn, display, onTurn }: Props) {
+  const frame = useRef<SVGSVGElement>(null);
+  const from = turns[0]?.turn ?? 0;
+  const to = Math.max(turns.at(-1)?.turn ?? SPAN_DEG, from + 1);
+  const counts = turns.map((t) => t.wholeUnits);
+  const least = Math.min(...counts);
+  const most = Math.max(...counts);
+  const x = (deg: number) => ((deg - from) / (to - from)) * WIDTH;
+  const y = (count: number) => 8 + ((most - count) / Math.max(most - least, 1)) * (HEIGHT - 16);
+  const shown = from + ((((turn - from) % (to - from)) + (to - from)) % (to - from));
+  const here = nearestTurn(turns, shown);
+
+  const take = (event: PointerEvent) => {
+    const box = frame.current!.getBoundingClientRect();
+    const near = nearestTurn(turns, from + ((event.clientX - box.left) / box.width) * (to - from));
+    if (near) onTurn(near.turn);
+  };
+  const key = (event: KeyboardEvent) => {
+    const by = event.key === 'ArrowRight' ? 1 : event.key === 'ArrowLeft' ? -1 : 0;
+    if (!by || !here) return;
+    event.preventDefault();
+    event.stopPropagation();
+    const next = turns[(turns.indexOf(here) + by + turns.length) % turns.length];
+    onTurn(next.turn);
+  };
+  return (
+    <div>
+      <svg
+        ref={frame}
+        viewBox={`0 0 ${WIDTH} ${HEIGHT}`}
+        className="block w-full cursor-crosshair touch-none overflow-visible"
+        role="slider"
+        tabIndex={0}
+        aria-label="Turn curve"
+        aria-valuemin={from}
+        aria-valuemax={to}
+        aria-valuenow={Number(shown.toFixed(2))}
+        aria-valuetext={
+          here
+            ? `${here.turn}°, ${here.wholeUnits} whole units, play ${here.play === null ? 'none' : formatLength(here.play, display)}`
+            : undefined
+        }
+        data-testid="turn-curve"
+        onPointerDown={take}
+        onKeyDown={key}
+      >
+        <path d={`M0 ${HEIGHT}H${WIDTH}`} stroke="var(--stone-300)" />
+        <polyline
+          points={turns.map((t) => `${x(t.turn)},${y(t.wholeUnits)}`).join(' ')}
+          fill="none"
+          stroke="var(--graphite)"
+          strokeWidth="1.6"
+          strokeLinejoin="round"
+        />
+        <path d={`M${x(shown)} 0V${HEIGHT}`} stroke="var(--line)" strokeWidth="1.6" />
+        {here && <circle cx={x(shown)} cy={y(here.wholeUnits)} r="4" fill="var(--line)" />}
+      </svg>
+      <div className="flex justify-between text-xs text-slate" aria-hidden="true">
+        {[0, 1, 2, 3, 4, 5, 6].map((n) => (
+          <span key={n}>{Math.round(from + ((to - from) * n) / 6)}°</span>
+        ))}
+      </div>
+      {turns.length > 1 && (
+        <p className="mt-1 text-sm text-slate">
+          From {least} to {most} whole units.{' '}
+          {most > (here?.wholeUnits ?? most) && (
+            <button
+              type="button"
+              className="link"
+              onClick={() => onTurn(turns.find((t) => t.wholeUnits === most)!.turn)}
+            >
+              Take the turn with {most}
+            </button>
+          )}
+        </p>
+      )}
+    </div>
+  );
+}

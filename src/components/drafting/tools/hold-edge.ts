@@ -1,0 +1,68 @@
+import type { FitHold } from '@/paving/fit/fit';
+import { documentEdgeName } from '@/paving/edge-names';
+import type { TableStore } from '../table-store';
+import { edgeNearest } from './edit-ring';
+import { reachPx, type Tool } from './tool';
+
+const sameEdge = (a: readonly [number, number], b: readonly [number, number]) =>
+  a[0] === b[0] && a[1] === b[1];
+
+/** Begins pointing at the edge (or the two edges) that a hold is for. */
+export function holdStarted(table: TableStore, kind: 'edge' | 'between'): void {
+  table.getState().set({ tool: 'hold', holding: { kind, first: null }, hover: null });
+}
+
+export function holdLeft(table: TableStore): void {
+  table.getState().set({ tool: 'slide', holding: null, hover: null });
+}
+
+/** Points at an edge for the hold in hand; the second edge of `between` completes it. */
+export function holdPointed(table: TableStore, ring: number, edge: number): void {
+  const { holding, hold, document, set } = table.getState();
+  if (!holding) return;
+  if (holding.kind === 'between' && !holding.first) {
+    set({
+      holding: { ...holding, first: [ring, edge] },
+      said: `From ${documentEdgeName(document, ring, edge)} to …: point at the other edge.`,
+    });
+    return;
+  }
+  if (holding.first && sameEdge(holding.first, [ring, edge])) return;
+  const made: FitHold = holding.first
+    ? { between: [[...holding.first], [ring, edge]] }
+    : { edge: [ring, edge] };
+  // Two freedoms at most: the oldest hold gives way to a third.
+  set({ hold: [...hold, made].slice(-2), tool: 'slide', holding: null, hover: null });
+}
+
+/** The hold in words: `a row along AB`, `centred between BC and FA`. */
+export function holdWords(hold: FitHold, name: (ring: number, edge: number) => string): string {
+  return 'edge' in hold
+    ? `a row along ${name(...hold.edge)}`
+    : `centred between ${name(...hold.between[0])} and ${name(...hold.between[1])}`;
+}
+
+/** Points at the edges that the pattern is held to. */
+export function createHoldEdge(): Tool {
+  const near = (table: TableStore, pointer: Parameters<Tool['down']>[1]) => {
+    const { document, camera } = table.getState();
+    const found = edgeNearest(document, pointer.ground);
+    return camera && found.distance * camera.scale <= 2 * reachPx(pointer) ? found : null;
+  };
+  return {
+    down: (table, pointer) => near(table, pointer) !== null,
+    move() {},
+    up(table, pointer) {
+      const found = near(table, pointer);
+      if (found) holdPointed(table, found.ring, found.edge);
+    },
+    hover(table, pointer) {
+      const found = pointer && near(table, pointer);
+      table
+        .getState()
+        .set({ hover: found ? { kind: 'edge', ring: found.ring, edge: found.edge } : null });
+    },
+    cancel: holdLeft,
+    cursor: (table) => (table.getState().hover ? 'pointer' : 'grab'),
+  };
+}
