@@ -14,3 +14,20 @@ export function dayAndTime(iso: string): string {
     minute: '2-digit',
   }).format(new Date(iso));
 }
+
+export function dayOf(iso: string): string {
+  return new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'short' }).format(new Date(iso));
+}
+
+/** With its year and the name of the time it is in: for what is kept on paper. */
+export function fullMoment(iso: string, timeZone?: string): string {
+  return new Intl.DateTimeFormat('en-GB', {
+    day: 'numeric',
+    month: 'long',
+    year: 'numeric',
+    hour: '2-digit',
+    minute: '2-digit',
+    timeZone,
+    timeZoneName: 'short',
+  }).format(new Date(iso));
+}

@@ -1,0 +1,227 @@
+import { UNIT_FATE, type UnitMatching } from '@/paving/comparison';
+import type { Laying } from '@/paving/laying';
+import { paintFloor } from '../drafting/floor-picture';
+import type { Picture } from '../floor-window/FloorWindow';
+import { paintGroundLines } from '../floor-window/ground-lines';
+import { PLAIN_UNIT, type DrawingColours } from '../ui/drawing-colours';
+
+/** What became of a unit, as it is drawn: by hatching and sign, not by colour alone. */
+export type Fate = 'kept' | 'moved' | 'gone' | 'new';
+
+/** Below this many pixels across, a unit has no outline of its own. */
+const OUTLINE_FROM_PX = 4;
+/** A shift shorter than this on the screen has no arrow. */
+const ARROW_FROM_PX = 7;
+const TILE = 8;
+
+const tiles = new Map<string, HTMLCanvasElement>();
+
+/** Hatching of a fate: strokes for gone, plus signs for new, level lines for moved. */
+function hatching(ctx: CanvasRenderingContext2D, fate: Fate, colour: string, ratio: number) {
+  const key = `${fate} ${colour} ${ratio}`;
+  let tile = tiles.get(key);
+  if (!tile) {
+    tile = document.createElement('canvas');
+    tile.width = tile.height = TILE * ratio;
+    const into = tile.getContext('2d')!;
+    into.scale(ratio, ratio);
+    into.strokeStyle = colour;
+    into.lineWidth = 1.2;
+    into.beginPath();
+    if (fate === 'gone')
+      for (const from of [-TILE, 0, TILE]) {
+        into.moveTo(from - 1, TILE + 1);
+        into.lineTo(from + TILE + 1, -1);
+      }
+    else if (fate === 'new') {
+      into.moveTo(1.5, 4);
+      into.lineTo(6.5, 4);
+      into.moveTo(4, 1.5);
+      into.lineTo(4, 6.5);
+    } else {
+      into.moveTo(0, 4);
+      into.lineTo(TILE, 4);
+    }
+    into.stroke();
+    tiles.set(key, tile);
+  }
+  const pattern = ctx.createPattern(tile, 'repeat');
+  pattern?.setTransform(new DOMMatrix([1 / ratio, 0, 0, 1 / ratio, 0, 0]));
+  return pattern ?? colour;
+}
+
+export const fateColour = (fate: Fate, colours: DrawingColours): string =>
+  fate === 'gone'
+    ? colours.brick
+    : fate === 'new'
+      ? colours.vial
+      : fate === 'moved'
+        ? colours.amber
+        : colours.graphite;
+
+interface Halves {
+  readonly ax: number;
+  readonly ay: number;
+  readonly bx: number;
+  readonly by: number;
+  readonly reach: number;
+}
+
+const halvesOf = (laying: Laying, scale: number): Halves[] =>
+  laying.motif.map(({ halfLength: [lx, ly], halfWidth: [wx, wy] }) => ({
+    ax: lx * scale,
+    ay: -ly * scale,
+    bx: wx * scale,
+    by: -wy * scale,
+    reach: (Math.hypot(lx, ly) + Math.hypot(wx, wy)) * scale,
+  }));
+
+const leastAcross = (laying: Laying) =>
+  2 *
+  Math.min(
+    ...laying.motif.map(({ halfLength, halfWidth }) =>
+      Math.min(Math.hypot(...halfLength), Math.hypot(...halfWidth)),
+    ),
+  );
+
+/** Whether any unit of this fate was traced; those outside the window are left out. */
+function traceFate(
+  { ctx, camera, size }: Picture,
+  laying: Laying,
+  fates: Uint8Array,
+  fate: number,
+  towards?: { laying: Laying; partner: Int32Array; share: number },
+): boolean {
+  const { scale, centre } = camera;
+  const halves = halvesOf(laying, scale);
+  const { laid } = laying;
+  let any = false;
+  ctx.beginPath();
+  for (let n = 0; n < laid.count; n++) {
+    if (fates[n] !== fate) continue;
+    let [gx, gy] = [laid.x[n], laid.y[n]];
+    const half = halves[laid.k[n]];
+    if (towards) {
+      const m = towards.partner[n];
+      gx += (towards.laying.laid.x[m] - gx) * towards.share;
+      gy += (towards.laying.laid.y[m] - gy) * towards.share;
+    }
+    const x = size.width / 2 + (gx - centre[0]) * scale;
+    const y = size.height / 2 - (gy - centre[1]) * scale;
+    if (x + half.reach < 0 || x - half.reach > size.width) continue;
+    if (y + half.reach < 0 || y - half.reach > size.height) continue;
+    any = true;
+    ctx.moveTo(x + half.ax + half.bx, y + half.ay + half.by);
+    ctx.lineTo(x - half.ax + half.bx, y - half.ay + half.by);
+    ctx.lineTo(x - half.ax - half.bx, y - half.ay - half.by);
+    ctx.lineTo(x + half.ax - half.bx, y + half.ay - half.by);
+    ctx.closePath();
+  }
+  return any;
+}
+
+function marked(picture: Picture, fate: Fate, outlined: boolean, ground: string | null) {
+  const { ctx, colours, pixelRatio } = picture;
+  if (ground) {
+    ctx.fillStyle = ground;
+    ctx.fill();
+  }
+  const colour = fateColour(fate, colours);
+  if (fate !== 'kept') {
+    ctx.fillStyle = hatching(ctx, fate, colour, pixelRatio);
+    ctx.fill();
+  }
+  if (outlined || fate !== 'kept') {
+    ctx.strokeStyle = colour;
+    ctx.lineWidth = fate === 'kept' ? 0.6 : outlined ? 1.6 : 0.7;
+    ctx.stroke();
+  }
+}
+
+/** Marks on one side's own picture what has no like on the other, and what lies elsewhere there. */
+export function paintSideMarks(
+  picture: Picture,
+  laying: Laying,
+  fates: Uint8Array,
+  alone: 'gone' | 'new',
+) {
+  const outlined = leastAcross(laying) * picture.camera.scale >= OUTLINE_FROM_PX;
+  picture.ctx.save();
+  if (traceFate(picture, laying, fates, UNIT_FATE.single)) marked(picture, alone, outlined, null);
+  if (traceFate(picture, laying, fates, UNIT_FATE.moved)) marked(picture, 'moved', outlined, null);
+  picture.ctx.restore();
+}
+
+function traceArrows({ ctx, camera, size }: Picture, a: Laying, b: Laying, matching: UnitMatching) {
+  const { scale, centre } = camera;
+  ctx.beginPath();
+  for (let n = 0; n < a.laid.count; n++) {
+    if (matching.fateOfA[n] !== UNIT_FATE.moved) continue;
+    const m = matching.partnerOfA[n];
+    const x = size.width / 2 + (a.laid.x[n] - centre[0]) * scale;
+    const y = size.height / 2 - (a.laid.y[n] - centre[1]) * scale;
+    const dx = (b.laid.x[m] - a.laid.x[n]) * scale;
+    const dy = -(b.laid.y[m] - a.laid.y[n]) * scale;
+    const length = Math.hypot(dx, dy);
+    if (length < ARROW_FROM_PX) continue;
+    if (x < -length || y < -length || x > size.width + length || y > size.height + length) continue;
+    const [ux, uy] = [dx / length, dy / length];
+    const head = Math.min(5, length / 2.5);
+    ctx.moveTo(x, y);
+    ctx.lineTo(x + dx, y + dy);
+    ctx.moveTo(x + dx - head * (ux + uy * 0.6), y + dy - head * (uy - ux * 0.6));
+    ctx.lineTo(x + dx, y + dy);
+    ctx.lineTo(x + dx - head * (ux - uy * 0.6), y + dy - head * (uy + ux * 0.6));
+  }
+}
+
+/**
+ * Two floors laid over each other. `share` runs from 0, floor A alone, to 1, floor B alone; units that moved
+ * are on their way between, and in the middle all that is gone and new is seen at once.
+ */
+export function paintOverlaid(
+  picture: Picture,
+  a: Laying,
+  b: Laying,
+  matching: UnitMatching,
+  share: number,
+) {
+  const { ctx, camera, size, colours } = picture;
+  const nearer = share < 0.5 ? a.document : b.document;
+  const outlined = Math.min(leastAcross(a), leastAcross(b)) * camera.scale >= OUTLINE_FROM_PX;
+  const unitColour = (laying: Laying) => laying.motif[0]?.unit.colour ?? PLAIN_UNIT;
+  ctx.save();
+  paintFloor(ctx, nearer, null, camera, size, colours);
+
+  if (traceFate(picture, a, matching.fateOfA, UNIT_FATE.kept))
+    marked(picture, 'kept', outlined, unitColour(share < 0.5 ? a : b));
+
+  ctx.globalAlpha = Math.min(1, 2 * (1 - share));
+  if (ctx.globalAlpha > 0 && traceFate(picture, a, matching.fateOfA, UNIT_FATE.single))
+    marked(picture, 'gone', outlined, unitColour(a));
+  ctx.globalAlpha = Math.min(1, 2 * share);
+  if (ctx.globalAlpha > 0 && traceFate(picture, b, matching.fateOfB, UNIT_FATE.single))
+    marked(picture, 'new', outlined, unitColour(b));
+  ctx.globalAlpha = 1;
+
+  // A unit that was turned where it stands is shown as it lies on the nearer floor.
+  const [own, partner, fates, other] =
+    share < 0.5
+      ? [a, matching.partnerOfA, matching.fateOfA, b]
+      : [b, matching.partnerOfB, matching.fateOfB, a];
+  const way = { laying: other, partner, share: share < 0.5 ? share : 1 - share };
+  if (traceFate(picture, own, fates, UNIT_FATE.moved, way))
+    marked(picture, 'moved', outlined, unitColour(own));
+  if (outlined && matching.moved > 0) {
+    traceArrows(picture, a, b, matching);
+    ctx.strokeStyle = colours.graphite;
+    ctx.lineWidth = 1.2;
+    ctx.stroke();
+  }
+  ctx.restore();
+  if (!sameGround(a, b)) paintGroundLines(picture, (share < 0.5 ? b : a).document, [5, 4]);
+  paintGroundLines(picture, nearer);
+}
+
+export const sameGround = (a: Laying, b: Laying): boolean =>
+  JSON.stringify(a.document.ground) === JSON.stringify(b.document.ground);

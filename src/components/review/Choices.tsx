@@ -1,0 +1,89 @@
+import { useQueries } from '@tanstack/react-query';
+import type { Agreement } from '@/api-types/agreement';
+import type { VersionDetail, VersionWithDrawing } from '@/api-types/versions';
+import { formatLength } from '@/paving/length';
+import { countText } from '@/sheets/figures';
+import { compareLink } from '../compare/compare-link';
+import { api } from '../ui/api';
+import { FloorDrawing } from '../ui/FloorDrawing';
+import { STATE_WORDS } from '../ui/version-words';
+
+export interface LayoutName {
+  readonly id: string;
+  readonly name: string;
+}
+
+/** The other floors that this person may choose from, with the way to compare each with this one. */
+export function Choices({
+  version,
+  layouts,
+  client,
+  agreement,
+}: {
+  version: VersionDetail;
+  layouts: readonly LayoutName[];
+  client: boolean;
+  agreement: Agreement | undefined;
+}) {
+  const lists = useQueries({
+    queries: layouts.map(({ id }) => ({
+      queryKey: ['versions', id],
+      queryFn: () =>
+        api<{ versions: VersionWithDrawing[] }>('GET', `/api/layouts/${id}/versions`).then(
+          (answer) => answer.versions,
+        ),
+    })),
+  });
+  const others = layouts.flatMap((layout, n) =>
+    (lists[n].data ?? [])
+      .filter(({ id, state }) => id !== version.id && (!client || state !== 'superseded'))
+      .map((other) => ({ ...other, layoutName: layout.name })),
+  );
+  if (others.length === 0) return null;
+  const shown = client ? others : others.filter(({ layoutId }) => layoutId === version.layoutId);
+  if (shown.length === 0) return null;
+  return (
+    <section aria-label={client ? 'Your choices' : 'Other versions'}>
+      <h2 className="border-b border-graphite pb-1 text-base">
+        {client ? 'Your other choices' : 'Other versions'}
+      </h2>
+      <ul className="hairlines border-b border-stone-300">
+        {shown.map((other) => (
+          <li key={other.id} className="flex gap-3 py-3">
+            <a href={`/versions/${other.id}`} className="block w-24 shrink-0" tabIndex={-1}>
+              <FloorDrawing document={other.document} width={96} height={72} />
+            </a>
+            <div className="min-w-0">
+              <a href={`/versions/${other.id}`} className="font-semibold hover:text-line">
+                {other.number}. {other.label}
+              </a>
+              {other.layoutId !== version.layoutId && (
+                <p className="text-sm text-slate">{other.layoutName}</p>
+              )}
+              <p className="text-sm">
+                {countText(other.figures.wholeUnits)} {client ? 'pieces' : 'whole units'}
+                {other.figures.leastGap !== null &&
+                  `, ${formatLength(other.figures.leastGap, other.document.display)} ${client ? 'from the edge' : 'least gap'}`}
+                <span className="text-slate">
+                  {' · '}
+                  {STATE_WORDS[other.state]}
+                  {agreement?.issued?.id === other.id && ', the one that is built'}
+                </span>
+              </p>
+              <a
+                className="link text-sm"
+                href={
+                  other.layoutId !== version.layoutId || other.number < version.number
+                    ? compareLink(other.id, version.id)
+                    : compareLink(version.id, other.id)
+                }
+              >
+                Compare with this
+              </a>
+            </div>
+          </li>
+        ))}
+      </ul>
+    </section>
+  );
+}
