@@ -1,4 +1,5 @@
 import { endBeforeClosing, type Db } from '../database';
+import { startDigests } from '../digest-posting';
 import type { Environment } from '../environment';
 import { localMailFolder } from './local-letters';
 import { startLocalMailServer } from './local-server';
@@ -16,6 +17,7 @@ const begin = async (db: Db, settings: Environment): Promise<Sender> => {
   const url = settings.smtpUrl ?? local!.url;
   const sender = letterSender(db, smtpPost({ url, from: settings.mailFrom, ...SMTP_PATIENCE }));
   sender.start();
+  startDigests(db);
   endBeforeClosing(async () => {
     await Promise.race([
       sender.stop(),
