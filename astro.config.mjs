@@ -1,3 +1,4 @@
+import { fileURLToPath } from 'node:url';
 import { defineConfig } from 'astro/config';
 import node from '@astrojs/node';
 import react from '@astrojs/react';
@@ -27,6 +28,8 @@ export default defineConfig({
         'svg2pdf.js',
       ],
     },
+    // Said here as well as in tsconfig.json: the build of workers does not read that.
+    resolve: { alias: { '@': fileURLToPath(new URL('./src', import.meta.url)) } },
     worker: { format: 'es' },
     // Scripts stay files: the content security policy lets no inline script run but Astro's own.
     build: { assetsInlineLimit: 0 },
