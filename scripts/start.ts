@@ -5,9 +5,11 @@ import { pathToFileURL } from 'node:url';
 import { closeDatabase, endBeforeClosing, theDatabase } from '@/server/database';
 import { demoIsThere, seedIfEmpty } from '@/server/demo';
 import { environment } from '@/server/environment';
+import { startPosting } from '@/server/mail/posting';
+import { noteOrigin } from '@/server/site-origin';
 import { buildIfStale } from './build';
 import { endWithNpm } from './parent';
-import { demoSignIns, endWith } from './welcome';
+import { demoSignIns, endWith, whereLettersGo } from './welcome';
 
 /** How long answers under way may take to end when the server is told to stop, ms. */
 const PATIENCE = 5000;
@@ -42,7 +44,11 @@ const start = async (): Promise<void> => {
 
   const { address, port: bound } = server.address() as AddressInfo;
   const shown = ['0.0.0.0', '::', '127.0.0.1', '::1'].includes(address) ? 'localhost' : address;
-  console.log(`\n  Evenlay is at http://${shown}:${bound}\n`);
+  const origin = `http://${shown}:${bound}`;
+  noteOrigin(origin);
+  await startPosting(db, environment());
+  console.log(`\n  Evenlay is at ${origin}\n`);
+  console.log(`  ${whereLettersGo(environment(), origin)}\n`);
   if (await demoIsThere(db)) console.log(`${demoSignIns()}\n`);
 };
 

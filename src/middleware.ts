@@ -4,7 +4,8 @@ import { guardForwardedFor } from '@/server/client-address';
 import { database } from '@/server/database';
 import { environment } from '@/server/environment';
 import { logError } from '@/server/log';
-import { OPEN_ENDPOINTS, isOpenPage } from '@/server/next-page';
+import { startPosting } from '@/server/mail/posting';
+import { isOpenEndpoint, isOpenPage } from '@/server/next-page';
 import { problemResponse } from '@/server/problem-response';
 import { cameOverTls, isFromThisSite } from '@/server/request-origin';
 import { addSecurityHeaders } from '@/server/security-headers';
@@ -12,6 +13,11 @@ import { forgetSession, sendSession, sessionIdOf } from '@/server/session-cookie
 import { signedInBy } from '@/server/sessions';
 
 guardForwardedFor(environment().trustProxy);
+
+// The start script does this for the built server.
+if (import.meta.env.MODE === 'development') {
+  void database().then((db) => startPosting(db, environment()));
+}
 
 const identify = async (context: APIContext): Promise<void> => {
   Object.assign(context.locals, { person: null, firm: null, role: null, session: null });
@@ -33,7 +39,7 @@ const guarded = async (context: APIContext, next: MiddlewareNext): Promise<Respo
   try {
     await identify(context);
     if (!context.locals.person) {
-      if (isApi && !OPEN_ENDPOINTS.has(path)) {
+      if (isApi && !isOpenEndpoint(path)) {
         return problemResponse('signed-out', 'Sign in to go on.');
       }
       if (!isApi && !isOpenPage(path)) {

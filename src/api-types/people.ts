@@ -19,22 +19,27 @@ const name = (of: string) =>
     .min(1, `Give ${of}`)
     .max(120, 'Keep it to 120 characters');
 
-const email = z
+export const personName = name('your name');
+
+export const email = z
   .string({ error: 'Give an e-mail address' })
   .trim()
   .toLowerCase()
   .max(254, 'That is too long for an e-mail address')
   .pipe(z.email('That does not look like an e-mail address'));
 
+/** Length alone is asked for, as NIST SP 800-63B-4 (3.1.1.2) advises. */
+export const newPassword = z
+  .string({ error: 'Choose a password' })
+  .min(10, 'Use at least 10 characters')
+  .max(200, 'Keep it to 200 characters');
+
 /** POST /api/sign-up: makes a firm and its owner. 201 → `Account`, signed in. */
 export const signUpSchema = z.object({
   firmName: name('the firm’s name'),
-  name: name('your name'),
+  name: personName,
   email,
-  password: z
-    .string({ error: 'Choose a password' })
-    .min(10, 'Use at least 10 characters')
-    .max(200, 'Keep it to 200 characters'),
+  password: newPassword,
   display: displaySchema.default('metric'),
 });
 export type SignUp = z.input<typeof signUpSchema>;
@@ -47,9 +52,7 @@ export const signInSchema = z.object({
 export type SignIn = z.input<typeof signInSchema>;
 
 /** PATCH /api/account. 200 → `Account`. */
-export const accountChangeSchema = z
-  .object({ name: name('your name'), display: displaySchema })
-  .partial();
+export const accountChangeSchema = z.object({ name: personName, display: displaySchema }).partial();
 export type AccountChange = z.input<typeof accountChangeSchema>;
 
 /** GET /api/account: who is signed in, in which firm and role. */

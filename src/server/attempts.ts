@@ -19,7 +19,17 @@ export const SIGN_IN_ADDRESS: Limit = { attempts: 100, windowMinutes: 15 };
 /** Firms made from one address. */
 export const SIGN_UP_ADDRESS: Limit = { attempts: 30, windowMinutes: 60 };
 
-type Kind = 'sign-in' | 'sign-up';
+/** Letters for a new password asked for one person, and for anybody, from one address. */
+export const RESET_PAIR: Limit = { attempts: 4, windowMinutes: 60 };
+export const RESET_ADDRESS: Limit = { attempts: 30, windowMinutes: 60 };
+
+type Kind = 'sign-in' | 'sign-up' | 'reset';
+
+const LIMITS: Readonly<Record<Kind, { readonly pair?: Limit; readonly address: Limit }>> = {
+  'sign-in': { pair: SIGN_IN_PAIR, address: SIGN_IN_ADDRESS },
+  'sign-up': { address: SIGN_UP_ADDRESS },
+  reset: { pair: RESET_PAIR, address: RESET_ADDRESS },
+};
 
 export interface Attempt {
   readonly kind: Kind;
@@ -66,13 +76,11 @@ export const countAttempt = async (
 ): Promise<Outcome<string>> => {
   const id = newId();
   await db.insert(signInAttempts).values({ id, ...attempt, at: now });
-  const waitMs =
-    attempt.kind === 'sign-in'
-      ? Math.max(
-          await wait(db, attempt, SIGN_IN_PAIR, true, now),
-          await wait(db, attempt, SIGN_IN_ADDRESS, false, now),
-        )
-      : await wait(db, attempt, SIGN_UP_ADDRESS, false, now);
+  const { pair, address } = LIMITS[attempt.kind];
+  const waitMs = Math.max(
+    pair ? await wait(db, attempt, pair, true, now) : 0,
+    await wait(db, attempt, address, false, now),
+  );
   if (waitMs <= 0) return done(id);
   await db.delete(signInAttempts).where(eq(signInAttempts.id, id));
   const minutes = Math.ceil(waitMs / MINUTE);

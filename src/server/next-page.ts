@@ -7,16 +7,33 @@ export const nextPage = (asked: string | null | undefined, otherwise = '/project
   return url.origin === here.origin && !path.startsWith('//') ? path : otherwise;
 };
 
-const OPEN_PAGES: ReadonlySet<string> = new Set(['/', '/sign-in', '/sign-up', '/404', '/500']);
+const OPEN_PAGES: ReadonlySet<string> = new Set([
+  '/',
+  '/sign-in',
+  '/sign-up',
+  '/accept-invitation',
+  '/forgotten-password',
+  '/reset-password',
+  '/dev/mail',
+  '/404',
+  '/500',
+]);
 
 /** Pages that anybody may open. Every other page sends those who are not signed in to `/sign-in`. */
 export const isOpenPage = (path: string): boolean =>
   OPEN_PAGES.has(path) || path === '/guide' || path.startsWith('/guide/');
 
-/** Endpoints that answer without a session. */
-export const OPEN_ENDPOINTS: ReadonlySet<string> = new Set([
+const OPEN_ENDPOINTS: ReadonlySet<string> = new Set([
   '/api/health',
   '/api/sign-up',
   '/api/sign-in',
   '/api/sign-out',
+  '/api/accept-invitation',
+  '/api/forgotten-password',
+  '/api/reset-password',
+  '/api/dev/mail',
 ]);
+
+/** Endpoints that answer without a session. Letters kept on this machine are guarded by `local-mail.ts`. */
+export const isOpenEndpoint = (path: string): boolean =>
+  OPEN_ENDPOINTS.has(path) || path.startsWith('/api/dev/mail/');

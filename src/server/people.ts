@@ -14,7 +14,7 @@ import { newId } from './ids';
 import { done, invalid, signedOut, type Outcome } from './outcomes';
 import { passwordFits, passwordHash } from './passwords';
 import { isUniqueViolation } from './postgres-errors';
-import { startSession, type SignedIn } from './sessions';
+import { startSession, type SignedIn, type Visit } from './sessions';
 
 export interface NewPerson {
   readonly name: string;
@@ -54,10 +54,13 @@ const taken = () =>
 export const signUp = async (
   db: Db,
   input: z.output<typeof signUpSchema>,
-  address: string,
-  before: string | undefined,
+  visit: Visit,
 ): Promise<Outcome<SignedIn>> => {
-  const counted = await countAttempt(db, { kind: 'sign-up', email: input.email, address });
+  const counted = await countAttempt(db, {
+    kind: 'sign-up',
+    email: input.email,
+    address: visit.address,
+  });
   if (!counted.ok) return counted;
   try {
     const made = await db.transaction(async (tx) => {
@@ -65,21 +68,24 @@ export const signUp = async (
       await tx.insert(firms).values({ id: firmId, name: input.firmName });
       return { firmId, personId: await addPerson(tx, firmId, 'owner', input) };
     });
-    return done(await startSession(db, made.personId, made.firmId, before));
+    return done(await startSession(db, made.personId, made.firmId, visit));
   } catch (error) {
     if (isUniqueViolation(error, 'people_email_unique')) return taken();
     throw error;
   }
 };
 
+/** Said only to who has given the right password. */
+export const OF_NO_FIRM =
+  'This account is no longer of any firm. Ask to be invited again; the invitation brings you back in.';
+
 /** The same answer, after the same time, whether the address is unknown or the password wrong. */
 export const signIn = async (
   db: Db,
   input: z.output<typeof signInSchema>,
-  address: string,
-  before: string | undefined,
+  visit: Visit,
 ): Promise<Outcome<SignedIn>> => {
-  const attempt = { kind: 'sign-in' as const, email: input.email, address };
+  const attempt = { kind: 'sign-in' as const, email: input.email, address: visit.address };
   const counted = await countAttempt(db, attempt);
   if (!counted.ok) return counted;
   const [person] = await db
@@ -89,7 +95,7 @@ export const signIn = async (
       firmId: memberships.firmId,
     })
     .from(people)
-    .innerJoin(memberships, eq(memberships.personId, people.id))
+    .leftJoin(memberships, eq(memberships.personId, people.id))
     .where(eq(people.email, input.email))
     .orderBy(asc(memberships.createdAt))
     .limit(1);
@@ -98,7 +104,8 @@ export const signIn = async (
     return signedOut('This e-mail address and password do not belong together.');
   }
   await forgetAttempts(db, attempt);
-  return done(await startSession(db, person.id, person.firmId, before));
+  if (!person.firmId) return signedOut(OF_NO_FIRM);
+  return done(await startSession(db, person.id, person.firmId, visit));
 };
 
 export const changeAccount = async (

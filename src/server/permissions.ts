@@ -52,3 +52,13 @@ export const refuseUnlessDrafting = (actor: Actor): Refusal | null =>
   mayDraft(actor.role)
     ? null
     : notAllowed('Only the firm’s owner and designers draw up projects, drafts and versions.');
+
+/** People, roles and the firm's settings are its owners' alone. */
+export const refuseUnlessManaging = (actor: Actor): Refusal | null =>
+  permissions['people, roles, firm settings'][actor.role]
+    ? null
+    : notAllowed('Only an owner of the firm manages its people and settings.');
+
+/** Whether somebody in this role sees only the projects that they are put on. */
+export const isPutOnProjects = (role: Role): boolean =>
+  permissions['see a project'][role] === 'put on';

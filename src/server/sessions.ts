@@ -10,13 +10,14 @@ import type { Db } from './database';
 declare module 'lucia' {
   interface Register {
     Lucia: ReturnType<typeof luciaOn>;
-    DatabaseSessionAttributes: { firmId: string };
+    DatabaseSessionAttributes: { firmId: string; userAgent: string; lastSeenAt: Date };
   }
 }
 
 export const SESSION_COOKIE = 'evenlay_session';
 
-const storedId = (id: string): string => createHash('sha256').update(id).digest('hex');
+/** What stands for a session where its id must not be shown: its hash, which signs nobody in. */
+export const storedId = (id: string): string => createHash('sha256').update(id).digest('hex');
 
 /** Keeps only the hash of a session's id, so that a copy of the database signs nobody in. */
 const hashing = (inner: Adapter): Adapter => ({
@@ -36,7 +37,7 @@ const hashing = (inner: Adapter): Adapter => ({
 const luciaOn = (db: Db) =>
   new Lucia(hashing(new DrizzlePostgreSQLAdapter(db, sessions, people)), {
     sessionCookie: { name: SESSION_COOKIE },
-    getSessionAttributes: ({ firmId }) => ({ firmId }),
+    getSessionAttributes: ({ firmId, lastSeenAt }) => ({ firmId, lastSeenAt }),
   });
 
 export interface SignedIn {
@@ -63,17 +64,37 @@ const accountOf = async (db: Db, personId: string, firmId: string): Promise<Acco
   return row ?? null;
 };
 
+/** Who comes in, from where and with what. */
+export interface Visit {
+  readonly address: string;
+  readonly userAgent: string;
+  /** The id of the session that the browser has already. */
+  readonly before: string | undefined;
+  /** Whose that session is, if it still is one. */
+  readonly personId: string | null;
+}
+
+/** Longest that is kept of what a browser calls itself. */
+const USER_AGENT_LIMIT = 300;
+
+/** How old the note of a session's last use may grow before it is written anew, ms. */
+const SEEN_EVERY = 5 * 60_000;
+
 /** Starts a session of a person in a firm of theirs. The one they had, if any, ends: its id is not used again. */
 export const startSession = async (
   db: Db,
   personId: string,
   firmId: string,
-  before: string | undefined,
+  { before, userAgent }: Pick<Visit, 'before' | 'userAgent'>,
 ): Promise<SignedIn> => {
   const lucia = luciaOn(db);
   if (before) await lucia.invalidateSession(before);
   await lucia.deleteExpiredSessions();
-  const session = await lucia.createSession(personId, { firmId });
+  const session = await lucia.createSession(personId, {
+    firmId,
+    userAgent: userAgent.slice(0, USER_AGENT_LIMIT),
+    lastSeenAt: new Date(),
+  });
   const account = await accountOf(db, personId, firmId);
   if (!account) throw new Error(`Person ${personId} is not of firm ${firmId}`);
   return { account, session, prolonged: true };
@@ -84,6 +105,12 @@ export const signedInBy = async (db: Db, sessionId: string): Promise<SignedIn | 
   const { session } = await luciaOn(db).validateSession(sessionId);
   if (!session) return null;
   const account = await accountOf(db, session.userId, session.firmId);
+  if (Date.now() - session.lastSeenAt.getTime() > SEEN_EVERY) {
+    await db
+      .update(sessions)
+      .set({ lastSeenAt: new Date() })
+      .where(eq(sessions.id, storedId(sessionId)));
+  }
   return account && { account, session, prolonged: session.fresh };
 };
 

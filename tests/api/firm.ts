@@ -60,7 +60,7 @@ let members = 0;
 /** Adds somebody to a firm and signs them in through the endpoint. */
 export const newMember = async (firmId: string, role: Role): Promise<Signed> => {
   members += 1;
-  const email = `${role}${members}@firm.example`;
+  const email = `${role}-${members}@firm.example`;
   const personId = await addPerson(await db(), firmId, role, {
     name: `${role} ${members}`,
     email,

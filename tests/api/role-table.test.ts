@@ -11,42 +11,11 @@ import {
   putEvent,
   type Signed,
 } from './firm';
+import { askers, statuses, type Asker, type Row, type World } from './role-rows';
+import { peopleRows } from './role-rows-people';
 import { db, endpoints, useEmptyDatabase, Visitor } from './site';
 
 useEmptyDatabase();
-
-/** Who asks: the four roles on the project, two who are not on it, another firm's owner, and nobody. */
-const askers = [
-  'owner',
-  'designer',
-  'installer',
-  'client',
-  'installer elsewhere',
-  'client elsewhere',
-  'stranger',
-  'nobody',
-] as const;
-type Asker = (typeof askers)[number];
-
-interface World {
-  readonly people: Record<Asker, { readonly visitor: Visitor; readonly email: string }>;
-  readonly project: string;
-  /** With three versions: one only saved, one shared, one issued. */
-  readonly layout: string;
-  /** Of the same project, with a draft only. */
-  readonly unshown: string;
-  readonly saved: string;
-  readonly shared: string;
-  readonly issued: string;
-  readonly aside: string;
-  /** Of another project with the same people on it: versions to take steps with. */
-  readonly stepsProject: string;
-  readonly stepsLayout: string;
-  /** Shared, accepted and issued: everybody on the project sees it. */
-  readonly seenByAll: string;
-  /** The owner's own, on `seenByAll`. */
-  readonly thread: string;
-}
 
 let world: World;
 
@@ -98,6 +67,8 @@ beforeAll(async () => {
   };
   world = {
     people,
+    firmId,
+    installerId: installer.actor.personId,
     project,
     layout,
     unshown: unshown.body.id,
@@ -111,24 +82,6 @@ beforeAll(async () => {
     thread: thread.body.id,
   };
 });
-
-type Statuses = Readonly<Record<Asker, number>>;
-
-const statuses = (
-  inOrder: readonly [number, number, number, number, number, number, number, number],
-): Statuses =>
-  Object.fromEntries(askers.map((asker, n) => [asker, inOrder[n]])) as Record<Asker, number>;
-
-/** Read against product.md's table: [owner, designer, installer, client | elsewhere: installer, client | stranger, nobody]. */
-interface Row {
-  /** The row of the table, or why there is none. */
-  readonly row: string;
-  readonly endpoint: string;
-  readonly id?: (world: World) => string | Promise<string>;
-  readonly query?: (world: World) => string;
-  readonly body?: (world: World, asker: Asker, id: string) => unknown;
-  readonly expected: Statuses;
-}
 
 const revision = async (layout: string): Promise<number> =>
   (await world.people.owner.visitor.get(`/api/layouts/${layout}/draft`)).body.revision;
@@ -155,6 +108,7 @@ const SEE_VERSION = 'see a version';
 const drafting = (success: number) => statuses([success, success, 403, 403, 404, 404, 404, 401]);
 
 const rows: readonly Row[] = [
+  ...peopleRows,
   {
     row: 'open to all',
     endpoint: 'GET /api/health',
@@ -517,13 +471,16 @@ const rows: readonly Row[] = [
 /** Signing in, up and out change who asks; each of those is asked by a browser of its own. */
 const ENTERING = /sign-(in|up|out)$/;
 
-describe.each(rows)('$endpoint ($row)', ({ endpoint, id, query, body, expected }) => {
+describe.each(rows)('$endpoint ($row)', (row) => {
+  const { endpoint, id, query, body, expected } = row;
   test.each(askers)('asked by %s', async (asker) => {
     const [method, address] = endpoint.split(' ');
     const own = (await id?.(world)) ?? '';
     const url = `${address.replace('[id]', own)}${query?.(world) ?? ''}`;
     const sent = await body?.(world, asker, own);
-    const visitor = ENTERING.test(address) ? new Visitor() : world.people[asker].visitor;
+    const visitor = ENTERING.test(address)
+      ? new Visitor()
+      : ((await row.visitor?.(world, asker)) ?? world.people[asker].visitor);
     const answer = await visitor.call(method, url, sent);
     expect(answer.status, JSON.stringify(answer.body)).toBe(expected[asker]);
     if (answer.status >= 400) {

@@ -27,6 +27,8 @@ export const endpoints: ReadonlyMap<string, Endpoint> = new Map(
 const routeOf = (
   pathname: string,
 ): { endpoint: Endpoint; params: Record<string, string> } | null => {
+  const exact = endpoints.get(pathname);
+  if (exact) return { endpoint: exact, params: {} };
   for (const [address, endpoint] of endpoints) {
     const pattern = address.replace('[id]', '(?<id>[^/]+)');
     const match = new RegExp(`^${pattern}$`).exec(pathname);
