@@ -96,7 +96,7 @@ it('takes a newcomer from an empty firm to a saved version and its plan', async 
   await page.getByRole('radio', { name: 'Chequer' }).click();
   await page.getByLabel('Joint', { exact: true }).fill('3');
   await page.keyboard.press('Enter');
-  await goToStep(page, 'Place');
+  await goToStep(page, 'Fit');
   await page.getByLabel('Turn, anticlockwise').fill('45');
   await page.keyboard.press('Enter');
 

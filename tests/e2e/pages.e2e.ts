@@ -51,7 +51,7 @@ it('has no serious accessibility fault and no console error on any page, day and
   await check('/versions/[id]/plan');
   await page.goto(table);
   await tableReady(page);
-  for (const step of ['Ground', 'Unit', 'Bond', 'Place', 'Versions']) {
+  for (const step of ['Ground', 'Unit', 'Bond', 'Fit', 'Versions']) {
     await goToStep(page, step);
     await check(`table, ${step}`);
   }

@@ -32,7 +32,7 @@ async function openCourt(page: Page, name: string) {
   );
   await page.goto(`/layouts/${layout}`);
   await tableReady(page);
-  await goToStep(page, 'Place');
+  await goToStep(page, 'Fit');
 }
 
 const field = async (page: Page, label: string) =>

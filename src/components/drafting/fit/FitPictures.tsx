@@ -52,28 +52,41 @@ export function FitPictures({ fit }: { fit: FitService }) {
           title="Shift map"
           note={
             map
-              ? `every start in one ${formatLength(map.pitch, display, { unit: false })} × ${length(map.rise)} cell`
+              ? `one ${formatLength(map.pitch, display, { unit: false })} × ${length(map.rise)} cell`
               : ''
           }
         />
         {map && (
           <>
-            <ShiftMapPicture
-              map={map}
-              origin={placement.origin}
-              best={most && current ? { origin: most.placement.origin, play: most.play } : null}
-              countHere={count}
-              onShift={shifted}
-              onSettle={() => table.getState().settleShown()}
-            />
-            <div className="mt-1.5 flex items-center gap-2 text-sm text-slate">
-              <span>{map.least}</span>
-              <span
-                aria-hidden="true"
-                className="h-2.5 flex-1 border border-slate"
-                style={{ background: 'linear-gradient(to right, rgb(240 240 237), rgb(60 60 57))' }}
-              />
-              <span>{map.most} whole</span>
+            <div className="grid grid-cols-[1fr_auto] gap-3">
+              <div className={map.rise > map.pitch * 0.7 ? 'max-w-48' : ''}>
+                <ShiftMapPicture
+                  map={map}
+                  origin={placement.origin}
+                  best={most && current ? { origin: most.placement.origin, play: most.play } : null}
+                  countHere={count}
+                  onShift={shifted}
+                  onSettle={() => table.getState().settleShown()}
+                />
+              </div>
+              <div className="flex min-h-20 gap-2 text-sm text-slate">
+                <span
+                  aria-hidden="true"
+                  className="w-2.5 border border-slate"
+                  style={{ background: 'linear-gradient(to top, rgb(240 240 237), rgb(60 60 57))' }}
+                />
+                <span className="flex flex-col justify-between">
+                  <span>
+                    <b className="text-graphite">{map.most}</b> whole
+                  </span>
+                  <span>
+                    <b className="text-line">{count ?? '–'}</b> here
+                  </span>
+                  <span>
+                    <b className="text-graphite">{map.least}</b> whole
+                  </span>
+                </span>
+              </div>
             </div>
             <p className="mt-1 text-sm text-slate">
               Drag the dot: the floor follows. Outlined is where the most lie whole
