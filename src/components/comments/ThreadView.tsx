@@ -1,6 +1,6 @@
 import { useEffect, useRef, useState } from 'react';
 import type { Comment, Mentionable, Thread } from '@/api-types/comments';
-import { dayAndTime } from '../ui/times';
+import { Moment } from '../ui/Moment';
 import { Composer } from './Composer';
 import { bodyParts } from './mention-text';
 import type { useThreadActions } from './threads';
@@ -75,7 +75,7 @@ export function ThreadView({ thread, number, people, actions, picked, onPick }: 
       </ul>
       {thread.resolved && (
         <p className="mt-2 text-sm text-slate">
-          Resolved by {thread.resolved.by.name}, {dayAndTime(thread.resolved.at)}
+          Resolved by {thread.resolved.by.name}, <Moment iso={thread.resolved.at} />
         </p>
       )}
       {replying ? (
@@ -124,7 +124,8 @@ function CommentView({ comment }: { comment: Comment }) {
   return (
     <li>
       <p className="text-sm text-slate">
-        <strong className="text-graphite">{comment.person.name}</strong>, {dayAndTime(comment.at)}
+        <strong className="text-graphite">{comment.person.name}</strong>,{' '}
+        <Moment iso={comment.at} />
         {comment.unread && <span className="sr-only">, not read yet</span>}
       </p>
       <p className="break-words whitespace-pre-line">

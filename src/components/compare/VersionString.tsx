@@ -1,6 +1,6 @@
 import type { VersionState } from '@/api-types/versions';
 import { Peg, statePeg } from '../ui/Peg';
-import { dayOf } from '../ui/times';
+import { Moment } from '../ui/Moment';
 import { STATE_WORDS } from '../ui/version-words';
 
 /** A version on the string: what a peg shows. */
@@ -63,7 +63,7 @@ function OneString({ layout, from, to, onPick }: Omit<Props, 'layouts'> & { layo
             </p>
             <p className="leading-snug">{version.label}</p>
             <p className="text-sm text-slate">
-              {dayOf(version.createdAt)}, {STATE_WORDS[version.state].toLowerCase()}
+              <Moment iso={version.createdAt} day />, {STATE_WORDS[version.state].toLowerCase()}
             </p>
             <div className="mt-2 flex">
               <Side side="from" version={version} picked={from} onPick={onPick} />

@@ -4,6 +4,7 @@ import { useEffect, useMemo, useRef, useState } from 'react';
 import { useStore } from 'zustand';
 import type { DraftSaved, DraftState, SaveDraft } from '@/api-types/layouts';
 import { BOND_NAMES } from '@/paving/bond-edits';
+import { DraftPresence } from '../live/DraftPresence';
 import { api } from '../ui/api';
 import { Mark } from '../ui/Mark';
 import { Segmented } from '../ui/Segmented';
@@ -75,15 +76,26 @@ function Table({ draft, personId }: Props) {
 
   return (
     <TableProvider store={table}>
-      <Board draft={draft} sync={sync} ready={ready} />
+      <Board draft={draft} personId={personId} sync={sync} ready={ready} />
     </TableProvider>
   );
 }
 
-function Board({ draft, sync, ready }: { draft: DraftState; sync: DraftSync; ready: boolean }) {
+function Board({
+  draft,
+  personId,
+  sync,
+  ready,
+}: {
+  draft: DraftState;
+  personId: string;
+  sync: DraftSync;
+  ready: boolean;
+}) {
   const table = useTableStore();
   const step = useTable((state) => state.step);
   const display = useTable((state) => state.document.display);
+  const edited = useTable((state) => state.document);
   const [keys, setKeys] = useState(false);
   const [saving, setSaving] = useState(false);
   const entry = useRef<DrawEntryHandle>(null);
@@ -122,7 +134,14 @@ function Board({ draft, sync, ready }: { draft: DraftState; sync: DraftSync; rea
   return (
     <div className="flex min-h-0 flex-1 flex-col" data-testid="table" data-ready={ready}>
       <Strip draft={draft} sync={sync} number={number} onSave={() => setSaving(true)} />
-      <SyncBanner sync={sync} />
+      <SyncBanner sync={sync} personId={personId} />
+      <DraftPresence
+        projectId={draft.projectId}
+        layoutId={draft.layoutId}
+        document={edited}
+        newestVersion={versions.data?.[0]?.number ?? 0}
+        onNewVersion={versions.refetch}
+      />
       <div className="flex min-h-0 flex-1 flex-col md:flex-row">
         <div className="order-3 border-t border-stone-300 md:order-1 md:border-t-0 md:border-r">
           <PegString />
@@ -138,6 +157,7 @@ function Board({ draft, sync, ready }: { draft: DraftState; sync: DraftSync; rea
           </div>
         </div>
         <aside
+          key={step}
           aria-label={STEP_NAMES[step]}
           className="order-4 min-h-0 flex-[1_1_40%] overflow-y-auto border-t border-graphite px-5 pt-3 pb-8 md:order-3 md:w-[21.5rem] md:flex-none md:border-t-0 md:border-l md:pt-5"
         >

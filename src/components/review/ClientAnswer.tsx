@@ -1,7 +1,7 @@
 import { useEffect, useState } from 'react';
 import type { VersionDetail } from '@/api-types/versions';
 import { Peg, statePeg } from '../ui/Peg';
-import { dayAndTime } from '../ui/times';
+import { Moment } from '../ui/Moment';
 import { STATE_WORDS } from '../ui/version-words';
 import { Wrong } from '../ui/Wrong';
 import { AcceptForm } from './AcceptForm';
@@ -42,7 +42,7 @@ export function ClientAnswer(props: Props) {
       <p className="mt-1">{CLIENT_STATES[version.state]}</p>
       {data?.acceptance && (
         <p className="mt-1">
-          Accepted by {data.acceptance.typedName}, {dayAndTime(data.acceptance.at)}.{' '}
+          Accepted by {data.acceptance.typedName}, <Moment iso={data.acceptance.at} />.{' '}
           <a className="link" href={`/versions/${version.id}/acceptance`}>
             Record of acceptance
           </a>

@@ -1,6 +1,6 @@
 import type { VersionEvent } from '@/api-types/versions';
 import { Peg, statePeg } from '../ui/Peg';
-import { dayAndTime } from '../ui/times';
+import { Moment } from '../ui/Moment';
 import { STATE_WORDS } from '../ui/version-words';
 
 /** What became of a version, each step a peg on the string. */
@@ -22,7 +22,9 @@ export function VersionEvents({ events }: { events: readonly VersionEvent[] }) {
               <p>
                 <strong>{STATE_WORDS[event.kind]}</strong> by {event.person.name}
               </p>
-              <p className="text-sm text-slate">{dayAndTime(event.at)}</p>
+              <p className="text-sm text-slate">
+                <Moment iso={event.at} />
+              </p>
               {event.note && (
                 <p className="mt-1 text-sm break-words whitespace-pre-line">{event.note}</p>
               )}

@@ -6,8 +6,9 @@ export function wallTime(iso: string): string {
   );
 }
 
-export function dayAndTime(iso: string): string {
+export function dayAndTime(iso: string, timeZone?: string): string {
   return new Intl.DateTimeFormat('en-GB', {
+    timeZone,
     day: 'numeric',
     month: 'short',
     hour: '2-digit',
@@ -15,8 +16,10 @@ export function dayAndTime(iso: string): string {
   }).format(new Date(iso));
 }
 
-export function dayOf(iso: string): string {
-  return new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'short' }).format(new Date(iso));
+export function dayOf(iso: string, timeZone?: string): string {
+  return new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'short', timeZone }).format(
+    new Date(iso),
+  );
 }
 
 /** With its year and the name of the time it is in: for what is kept on paper. */
