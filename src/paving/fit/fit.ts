@@ -1,16 +1,34 @@
 import { documentGround } from '../ground';
 import type { LayoutDocument, Placement } from '../layout-document';
 import { frameChoices, frameMost } from './cell-fit';
-import { fitFrame } from './fit-frame';
+import { fitFrame, type FitFrame } from './fit-frame';
+import { holdRefusal, type FitHold, type HoldRefusal } from './hold';
+import { heldChoices } from './line-fit';
+import { rangeTurns, turnBest, turnSweep, type FitTurn, type TurnRange } from './turn-sweep';
 import { choiceVerified, type FitChoice } from './verified';
 
+export type { EdgeAddress, FitHold, HoldRefusal } from './hold';
+export type { FitTurn, TurnRange } from './turn-sweep';
 export type { FitChoice } from './verified';
 
 export interface FitOptions {
+  /** `fixed`, the document's own turn, unless a range of turns is given. */
+  readonly turn?: 'fixed' | TurnRange;
+  /** None, one or two. In a range of turns, only those at which they can be kept are looked at. */
+  readonly hold?: readonly FitHold[];
   /** False to leave the trade-off out and give the most units alone. */
   readonly choices?: boolean;
-  /** Asked now and then; when it answers true the fit ends with `null`. */
+  /** Called as a range of turns is gone through. */
+  readonly progress?: (progress: FitProgress) => void;
+  /** Asked now and then, at least once a turn; when it answers true the fit ends. */
   readonly shouldStop?: () => boolean;
+}
+
+export interface FitProgress {
+  /** The turn just found; null where a hold cannot be kept. */
+  readonly turn: FitTurn | null;
+  /** How much of the range is done, 0 to 1; turns about the best come after it. */
+  readonly share: number;
 }
 
 /** Where the pattern must start. Lengths in mm. */
@@ -24,32 +42,88 @@ export interface FitResult {
   readonly play: number | null;
   /** Most units first; every entry has more play, by more than 0.01 mm, than all before it. */
   readonly choices: readonly FitChoice[];
+  /** Every turn that was looked at, in order, when a range was given. */
+  readonly turns?: readonly FitTurn[];
 }
 
-/** Finds where a valid document's pattern must start; null when it was stopped. */
-export function fit(document: LayoutDocument, options: FitOptions = {}): FitResult | null {
-  const { shouldStop } = options;
-  const frame = fitFrame(document, document.placement.turn, documentGround(document));
+/** Why the holds cannot be kept at the document's turn, and the turns that would do; null when they can. */
+export function fitRefusal(document: LayoutDocument, hold: readonly FitHold[]): HoldRefusal | null {
+  return hold.length === 0 ? null : holdRefusal(fitFrame(document), hold);
+}
+
+function resultOf(frame: FitFrame, choices: readonly FitChoice[]): FitResult {
+  if (choices.length === 0) {
+    const { document, turn } = frame;
+    const placement = { ...document.placement, turn };
+    return { wholeUnits: 0, placement, leastGap: null, play: null, choices: [] };
+  }
+  const [{ wholeUnits, placement, leastGap, play }] = choices;
+  return { wholeUnits, placement, leastGap, play, choices };
+}
+
+function fixedFit(document: LayoutDocument, turn: number, options: FitOptions): FitResult | null {
+  const { hold = [], choices = true, shouldStop } = options;
+  const frame = fitFrame(document, turn, documentGround(document));
+  if (hold.length > 0) {
+    const held = heldChoices(frame, hold, choices);
+    if (shouldStop?.()) return null;
+    return resultOf(
+      frame,
+      held.map((choice) => choiceVerified(frame, choice, true)),
+    );
+  }
   const { pieces, most } = frameMost(frame, shouldStop);
   if (shouldStop?.()) return null;
-  if (most.count === 0) {
-    return {
-      wholeUnits: 0,
-      placement: document.placement,
-      leastGap: null,
-      play: null,
-      choices: [],
-    };
-  }
-  const found = frameChoices(frame, pieces, most, options.choices ?? true, shouldStop);
+  if (most.count === 0) return resultOf(frame, []);
+  const found = frameChoices(frame, pieces, most, choices, shouldStop);
   if (shouldStop?.()) return null;
-  const choices = found.map((choice) => choiceVerified(frame, choice));
-  const [best] = choices;
-  return {
-    wholeUnits: best.wholeUnits,
-    placement: best.placement,
-    leastGap: best.leastGap,
-    play: best.play,
-    choices,
-  };
+  return resultOf(
+    frame,
+    found.map((choice) => choiceVerified(frame, choice)),
+  );
+}
+
+/**
+ * The fit, turn by turn: yields each turn of a range as it is found (null where a hold cannot be
+ * kept), so that a caller can draw it, wait, or leave off; returns the result, null when it was
+ * stopped. With a fixed turn it yields nothing.
+ */
+export function* fitSteps(
+  document: LayoutDocument,
+  options: FitOptions = {},
+): Generator<FitTurn | null, FitResult | null> {
+  const { turn = 'fixed', hold = [], shouldStop } = options;
+  if (turn === 'fixed') {
+    const refusal = fitRefusal(document, hold);
+    if (refusal) throw new Error(refusal.message);
+    return fixedFit(document, document.placement.turn, options);
+  }
+  const turns: FitTurn[] = [];
+  for (const found of turnSweep(document, turn, hold)) {
+    if (found) turns.push(found);
+    yield found;
+    if (shouldStop?.()) return null;
+  }
+  if (turns.length === 0) {
+    const refusal = fitRefusal(document, hold);
+    throw new Error(refusal?.message ?? 'the hold cannot be kept at any turn of the range');
+  }
+  const best = fixedFit(document, turnBest(turns).turn, options);
+  return best && { ...best, turns: turns.sort((one, other) => one.turn - other.turn) };
+}
+
+/**
+ * Where a valid document's pattern must start; null when `shouldStop` answered true. Deterministic.
+ * Throws what `fitRefusal` says when a hold cannot be kept, and, with the place, when the laying
+ * does not bear out what was found.
+ */
+export function fit(document: LayoutDocument, options: FitOptions = {}): FitResult | null {
+  const { turn = 'fixed', progress } = options;
+  const total = turn === 'fixed' ? 1 : rangeTurns(turn).length;
+  const steps = fitSteps(document, options);
+  for (let done = 1; ; done++) {
+    const step = steps.next();
+    if (step.done) return step.value;
+    progress?.({ turn: step.value, share: Math.min(1, done / total) });
+  }
 }

@@ -72,8 +72,7 @@ export function depthMoved(
 }
 
 /**
- * The most units that any origin of the cell gives, and one that gives them: branch and bound over
- * boxes. A box's bound is the count at a point of it and what could be gained on the way to any
+ * The most units that any origin of the cell gives, and one that gives them: branch and bound over boxes. A box's bound is the count at a point of it and what could be gained on the way to any
  * other: for each family of parallel pieces that cross all of the box the best height among them,
  * and for each other piece its units if the point has not got them. Boxes with the best bound go
  * first; those that few pieces cross are solved outright. `start` is a count that is known.
@@ -85,7 +84,7 @@ export function cellMost(
   start: CellBest,
   stop?: () => boolean,
 ): CellBest {
-  const { x0, y0, x1, y1, radius, family, height, step, families } = pieces;
+  const { x0, y0, x1, y1, family, height, step, families } = pieces;
   let best = start.count;
   let bestU = start.u;
   let bestV = start.v;
@@ -252,10 +251,10 @@ export function cellMost(
       }
       if (cu > ax && cu < bx && cv > ay && cv < by) {
         offer(depthMoved(pieces, arena, own, top, u, v, cu, cv, depth), cu, cv);
-      }
-      if (bound <= best) {
-        top = own;
-        return;
+        if (bound <= best) {
+          top = own;
+          return;
+        }
       }
     }
     if (top - own <= LEAF_PIECES) {

@@ -32,15 +32,18 @@ export function slackPolished(
   let trust = Math.max(slack, 0.05);
   const scope = 2.5 * trust + 2 * slack;
   // Pieces that can matter while the origin stays within `scope` of where it started.
-  const room = pieceGapsRoom(list.length);
+  const one = pieceGapsRoom(1);
   const nearest: number[] = [];
   for (let a = 0; a < list.length; a++) {
     const n = list[a];
     if (Math.min(pieces.x0[n], pieces.x1[n]) > u + 2 * scope) continue;
     if (Math.max(pieces.x0[n], pieces.x1[n]) < u - 2 * scope) continue;
-    pieceGap(pieces, n, u, v, room, a);
-    if (room.distance[a] < 2 * scope) nearest.push(n);
+    if (Math.min(pieces.y0[n], pieces.y1[n]) > v + 2 * scope) continue;
+    if (Math.max(pieces.y0[n], pieces.y1[n]) < v - 2 * scope) continue;
+    pieceGap(pieces, n, u, v, one, 0);
+    if (one.distance[0] < 2 * scope) nearest.push(n);
   }
+  const room = pieceGapsRoom(nearest.length);
   const local = Int32Array.from(nearest);
   const order = new Int32Array(local.length);
   const slackAt = (x: number, y: number) =>

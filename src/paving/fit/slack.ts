@@ -40,7 +40,6 @@ export function pieceGap(
   const ay = y0[n];
   const bx = x1[n];
   const by = y1[n];
-  let d: number;
   let off: number;
   let nearX: number;
   let nearY: number;
@@ -78,7 +77,7 @@ export function pieceGap(
   }
   const dx = u - nearX;
   const dy = v - nearY;
-  d = Math.sqrt(dx * dx + dy * dy);
+  const d = Math.sqrt(dx * dx + dy * dy);
   room.distance[at] = d;
   room.side[at] = off >= 0 ? 1 : -1;
   room.awayX[at] = d > 0 ? dx / d : 0;

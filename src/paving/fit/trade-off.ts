@@ -1,6 +1,6 @@
 import { LENGTH_TOLERANCE_MM } from '@/geometry/tolerance';
 import type { CellPieces } from './cell-pieces';
-import { arcMeetsBox, arcOnlyTakes, depthMoved } from './most';
+import { arcMeetsBox, arcOnlyTakes, depthMoved, type CellBest } from './most';
 import { KEEP_OFF_MM, pieceGap, pieceGapsRoom, pointSlack, unitsApart } from './slack';
 import { slackPolished } from './slack-polish';
 
@@ -18,6 +18,12 @@ const SPLIT = 0.48713;
 const TOUCH_MM = 1e-8;
 /** Up to this many pieces through a box, each is held against each to see which tell a unit's whole edge there. */
 const FEW_THROUGH = 32;
+/** While boxes are so many times larger than the most slack known, they are halved without a look at each piece. */
+const COARSE_TIMES = 3;
+/** One in so many of those is looked into for slack, so that there is some to compare with. */
+const COARSE_SAMPLE = 8;
+/** So many of the nearest pieces are looked at one by one. */
+const NEAREST = 28;
 /** Up to this many pieces that no origin of a box loses are set against each other. */
 const GREATEST_HELD = 8;
 /** Below this, mm, a box is left. */
@@ -53,7 +59,7 @@ export interface TradeOffOptions {
   /** Counts below this are of no interest. */
   readonly least: number;
   /** The most there is, with an origin that has it. */
-  readonly most: { readonly count: number; readonly u: number; readonly v: number };
+  readonly most: CellBest;
   readonly stop?: () => boolean;
 }
 
@@ -70,10 +76,12 @@ export function cellTradeOff(
   pitch: number,
   rise: number,
   reach: number,
-  { least, most, stop }: TradeOffOptions,
+  { least: lowest, most, stop }: TradeOffOptions,
 ): CellChoice[] {
   const { x0, y0, x1, y1, radius, family, height, step, families } = near;
-  const span = most.count - least + 1;
+  const span = most.count - lowest + 1;
+  // Counts below this are, for now, of no interest.
+  let least = lowest;
   const bestSlack = new Float64Array(span).fill(-1);
   const bestU = new Float64Array(span);
   const bestV = new Float64Array(span);
@@ -82,7 +90,7 @@ export function cellTradeOff(
   const fresh = new Set<number>();
 
   const offer = (count: number, slack: number, u: number, v: number) => {
-    const at = count - least;
+    const at = count - lowest;
     if (at < 0 || at >= span || slack <= bestSlack[at]) return;
     bestSlack[at] = slack;
     bestU[at] = u;
@@ -93,17 +101,17 @@ export function cellTradeOff(
   };
   /** Nothing with up to `count` units and `slack` would be news. */
   const beaten = (count: number, slack: number) =>
-    count < least || slack <= known[Math.min(count - least, span - 1)] + SLACK_TOLERANCE_MM;
+    count < least || slack <= known[Math.min(count - lowest, span - 1)] + SLACK_TOLERANCE_MM;
 
   const every = new Int32Array(near.count);
   for (let n = 0; n < near.count; n++) every[n] = n;
-  let room = pieceGapsRoom(Math.max(64, near.count));
-  let order = new Int32Array(Math.max(64, near.count));
+  const room = pieceGapsRoom(Math.max(64, near.count));
+  const order = new Int32Array(Math.max(64, near.count));
   const polish = () => {
     for (const at of [...fresh]) {
       if (bestSlack[at] < known[at]) continue;
       const found = slackPolished(near, every, bestU[at], bestV[at], bestSlack[at]);
-      for (const { u, v, gained, slack } of found) offer(at + least + gained, slack, u, v);
+      for (const { u, v, gained, slack } of found) offer(at + lowest + gained, slack, u, v);
     }
     fresh.clear();
   };
@@ -119,7 +127,18 @@ export function cellTradeOff(
   const through = new Uint8Array(near.count);
   const holds = new Uint8Array(near.count);
   const others = new Int32Array(near.count);
-  let level = levelOf(near.count);
+  const gainAt = new Float64Array(near.count);
+  const gainWeight = new Float64Array(near.count);
+  const putGain = (count: number, distance: number, weight: number): number => {
+    let place = count;
+    for (; place > 0 && gainAt[place - 1] > distance; place--) {
+      gainAt[place] = gainAt[place - 1];
+      gainWeight[place] = gainWeight[place - 1];
+    }
+    gainAt[place] = distance;
+    gainWeight[place] = weight;
+    return count + 1;
+  };
 
   const look = (
     source: Int32Array,
@@ -151,8 +170,18 @@ export function cellTradeOff(
     const own = out.top;
     let { top } = out;
     const { list } = out;
+    if (least < most.count && h > COARSE_TIMES * known[0] && h > reach) {
+      for (let a = from; a < to; a++) {
+        const n = source[a];
+        if (pieceWithin(n, ax, ay, bx, by, mx, my, hx, hy, within)) list[top++] = n;
+      }
+      if (out.x0.length % COARSE_SAMPLE === 0) {
+        offer(depth, pointSlack(near, list, own, top, u, v, within, room, order), u, v);
+      }
+      keep(out, ax, ay, bx, by, depth, within, own, top);
+      return;
+    }
     let gain = 0;
-    let plainGain = 0;
     let current = -1;
     let half = 0;
     let middle = 0;
@@ -162,7 +191,7 @@ export function cellTradeOff(
     let before = 0;
     let crossing = 0;
     let count = 0;
-    let gainedFarthest = 0;
+    let gains = 0;
     for (let a = from; a < to; a++) {
       const n = source[a];
       const px = x0[n];
@@ -193,11 +222,15 @@ export function cellTradeOff(
       if (room.distance[at] > within + h) continue;
       list[top++] = n;
       if (room.distance[at] < within) {
-        let place = count++;
-        for (; place > 0 && room.key[order[place - 1]] > room.key[at]; place--) {
-          order[place] = order[place - 1];
+        // The nearest few are kept in order; what is farther off bounds nothing that they do not.
+        const full = count === NEAREST;
+        if (!full || room.key[at] < room.key[order[count - 1]]) {
+          let place = full ? count - 1 : count++;
+          for (; place > 0 && room.key[order[place - 1]] > room.key[at]; place--) {
+            order[place] = order[place - 1];
+          }
+          order[place] = at;
         }
-        order[place] = at;
       }
       // What it may add to the count over the box.
       through[at] = 0;
@@ -221,8 +254,7 @@ export function cellTradeOff(
         through[at] = 1;
         if (!arcOnlyTakes(near, n, u, v)) {
           gain += weight;
-          plainGain += weight;
-          gainedFarthest = Math.max(gainedFarthest, room.distance[at]);
+          gains = putGain(gains, room.distance[at], weight);
         }
         continue;
       }
@@ -231,8 +263,7 @@ export function cellTradeOff(
       through[at] = 1;
       const bad = step[n] > 0 ? ref < t : ref > t;
       if (bad) {
-        plainGain += weight;
-        gainedFarthest = Math.max(gainedFarthest, room.distance[at]);
+        gains = putGain(gains, room.distance[at], weight);
       }
       const whole =
         !(px > ax + TOUCH_MM && px < bx - TOUCH_MM && py > ay + TOUCH_MM && py < by - TOUCH_MM) &&
@@ -259,7 +290,15 @@ export function cellTradeOff(
     let lost = 0;
     let all = within;
     let held = -1;
-    if (plainGain > 0 && !beaten(bound, gainedFarthest + h)) open = true;
+    // Units that the box's origins may gain. The way to one that does enters the unit through a piece
+    // at least `d` off, so it is at most h − d beyond it; so far off, only nearer units can be gained.
+    if (gains > 0) {
+      let gained = 0;
+      for (let m = 0; m < gains && !open; m++) {
+        gained += gainWeight[m];
+        open = !beaten(Math.min(bound, depth + gained), h - gainAt[m]);
+      }
+    }
     for (let m = 0; m < count; m++) {
       const at = order[m];
       if (room.side[at] < 0) {
@@ -309,18 +348,54 @@ export function cellTradeOff(
     if (crossing <= FEW_THROUGH && stripsBeaten(local, depth, gain, all, u, v, ax, ay, bx, by))
       return;
     if (hx * 2 < SMALLEST_BOX_MM && hy * 2 < SMALLEST_BOX_MM) return;
+    // Over the box no origin has more slack than this: what is farther off does not matter there.
+    const farthest = lost > 0 || gains > 0 ? Math.max(all, 2 * h) : all;
+    keep(out, ax, ay, bx, by, depth, Math.min(within, farthest), own, top);
+  };
+
+  const keep = (
+    out: Level,
+    ax: number,
+    ay: number,
+    bx: number,
+    by: number,
+    depth: number,
+    within: number,
+    from: number,
+    to: number,
+  ) => {
     out.x0.push(ax);
     out.y0.push(ay);
     out.x1.push(bx);
     out.y1.push(by);
     out.depth.push(depth);
-    // Over the box no origin has more slack than this: what is farther off does not matter there.
-    let farthest = all;
-    if (lost > 0 || plainGain > 0) farthest = Math.max(farthest, 2 * h);
-    out.reach.push(Math.min(within, farthest));
-    out.from.push(own);
-    out.to.push(top);
-    out.top = top;
+    out.reach.push(within);
+    out.from.push(from);
+    out.to.push(to);
+    out.top = to;
+  };
+
+  /** False when the piece is farther than `within` from the whole box; it may be, too, where true. */
+  const pieceWithin = (
+    n: number,
+    ax: number,
+    ay: number,
+    bx: number,
+    by: number,
+    mx: number,
+    my: number,
+    hx: number,
+    hy: number,
+    within: number,
+  ): boolean => {
+    if (Math.min(x0[n], x1[n]) > bx + within || Math.max(x0[n], x1[n]) < ax - within) return false;
+    if (Math.min(y0[n], y1[n]) > by + within || Math.max(y0[n], y1[n]) < ay - within) return false;
+    const f = family[n];
+    if (f < 0) return true;
+    const nx = families.nx[f];
+    const ny = families.ny[f];
+    const half = Math.abs(nx) * hx + Math.abs(ny) * hy;
+    return Math.abs(height[n] - nx * mx - ny * my) <= half + within;
   };
 
   /** True when every point within h of (u, v) has its foot on the straight piece. */
@@ -448,46 +523,55 @@ export function cellTradeOff(
     return unitsApart(near, local[m], local, others, count, 1) > 0;
   };
 
-  look(every, 0, near.count, most.u, most.v, most.count, reach, 0, 0, pitch, rise, level);
-  polish();
-  while (level.x0.length > 0) {
-    if (stop?.()) break;
-    const next = levelOf(Math.max(1 << 12, level.top));
-    for (let box = 0; box < level.x0.length; box++) {
-      const ax = level.x0[box];
-      const ay = level.y0[box];
-      const bx = level.x1[box];
-      const by = level.y1[box];
-      const u = ax + (bx - ax) * SPLIT;
-      const v = ay + (by - ay) * SPLIT;
-      const wide = bx - ax >= by - ay;
-      const cut = wide ? u : v;
-      for (let part = 0; part < 2; part++) {
-        look(
-          level.list,
-          level.from[box],
-          level.to[box],
-          u,
-          v,
-          level.depth[box],
-          level.reach[box],
-          wide && part === 1 ? cut : ax,
-          !wide && part === 1 ? cut : ay,
-          wide && part === 0 ? cut : bx,
-          !wide && part === 0 ? cut : by,
-          next,
-        );
-      }
-    }
-    level = next;
+  const search = () => {
+    let level = levelOf(near.count);
+    look(every, 0, near.count, most.u, most.v, most.count, reach, 0, 0, pitch, rise, level);
     polish();
+    while (level.x0.length > 0 && !stop?.()) {
+      const next = levelOf(Math.max(1 << 12, level.top));
+      for (let box = 0; box < level.x0.length; box++) {
+        const ax = level.x0[box];
+        const ay = level.y0[box];
+        const bx = level.x1[box];
+        const by = level.y1[box];
+        const u = ax + (bx - ax) * SPLIT;
+        const v = ay + (by - ay) * SPLIT;
+        const wide = bx - ax >= by - ay;
+        const cut = wide ? u : v;
+        for (let part = 0; part < 2; part++) {
+          look(
+            level.list,
+            level.from[box],
+            level.to[box],
+            u,
+            v,
+            level.depth[box],
+            level.reach[box],
+            wide && part === 1 ? cut : ax,
+            !wide && part === 1 ? cut : ay,
+            wide && part === 0 ? cut : bx,
+            !wide && part === 0 ? cut : by,
+            next,
+          );
+        }
+      }
+      level = next;
+      polish();
+    }
+  };
+  // First for the most units, which few boxes can have, then for fewer.
+  least = most.count;
+  search();
+  if (lowest < most.count) {
+    least = lowest;
+    search();
   }
   const choices: CellChoice[] = [];
   let above = -Infinity;
   for (let at = span - 1; at >= 0; at--) {
     if (bestSlack[at] <= above + LENGTH_TOLERANCE_MM) continue;
     above = bestSlack[at];
-    choices.push({ count: at + least, slack: bestSlack[at], u: bestU[at], v: bestV[at] });
+    choices.push({ count: at + lowest, slack: bestSlack[at], u: bestU[at], v: bestV[at] });
   }
   return choices;
 }

@@ -44,10 +44,12 @@ function originNear({ basis }: FitFrame, [x, y]: Point, near: Point): Point {
 /**
  * The start that the search found at (u, v), laid and measured. The laying has the last word: a
  * count or a play other than the search's own is a fault of the program, and throws with the place.
+ * `held` origins are on a line and stay on it, not on the grid.
  */
 export function choiceVerified(
   frame: FitFrame,
   found: { readonly count: number; readonly slack: number; readonly u: number; readonly v: number },
+  held = false,
 ): FitChoice {
   const { document, ground, turn } = frame;
   const exact = originNear(
@@ -59,7 +61,8 @@ export function choiceVerified(
   const round = (value: number) => Number(onGrid(value).toFixed(4));
   const expected = found.slack - LENGTH_TOLERANCE_MM;
   let last = '';
-  for (const origin of [[round(exact[0]), round(exact[1])], exact] as const) {
+  const origins: Point[] = held ? [exact] : [[round(exact[0]), round(exact[1])], exact];
+  for (const origin of origins) {
     const placement: Placement = { origin: [origin[0], origin[1]], turn };
     const laying = layFloor({ ...document, placement, lifted: [] }, ground);
     const least = leastGapAt(laying);
