@@ -1,40 +1,39 @@
 import { and, desc, eq, isNull, ne, or, sql } from 'drizzle-orm';
 import type { Unread } from '@/api-types/comments';
-import { commentReads, comments, layouts, people, projects, versions } from '@/db/schema';
+import {
+  commentReads,
+  comments,
+  layouts,
+  people,
+  projectPeople,
+  projects,
+  versions,
+} from '@/db/schema';
 import type { Db } from './database';
-import type { Actor } from './permissions';
+import { isPutOnProjects, type Actor } from './permissions';
 import { projectSeen, versionSeen } from './visibility';
 
 const THREADS = 50;
 /** Comments looked through, newest first: who has more than this unread has not been here for a long while. */
 const LOOKED_THROUGH = 500;
 
-/** Comments that the actor sees, by others, and has not read; newest first. */
-export const unreadComments = (db: Db, actor: Actor) =>
-  db
+/**
+ * Comments that the actor sees, by others, and has not read; newest first. The newest are taken first, from the actor's
+ * projects, and then looked at closely: the work does not grow with what a firm has ever said.
+ */
+export const unreadComments = (db: Db, actor: Actor) => {
+  const newest = db
     .select({
       id: comments.id,
       threadId: comments.threadId,
       versionId: comments.versionId,
-      versionNumber: versions.number,
-      layoutName: layouts.name,
-      projectId: projects.id,
-      projectName: projects.name,
-      person: { id: people.id, name: people.name },
+      layoutId: comments.layoutId,
+      projectId: comments.projectId,
+      personId: comments.personId,
       body: comments.body,
       at: comments.at,
     })
     .from(comments)
-    .innerJoin(
-      versions,
-      and(eq(versions.firmId, comments.firmId), eq(versions.id, comments.versionId)),
-    )
-    .innerJoin(layouts, and(eq(layouts.firmId, comments.firmId), eq(layouts.id, comments.layoutId)))
-    .innerJoin(
-      projects,
-      and(eq(projects.firmId, comments.firmId), eq(projects.id, comments.projectId)),
-    )
-    .innerJoin(people, eq(people.id, comments.personId))
     .leftJoin(
       commentReads,
       and(
@@ -48,13 +47,36 @@ export const unreadComments = (db: Db, actor: Actor) =>
         eq(comments.firmId, actor.firmId),
         ne(comments.personId, actor.personId),
         or(isNull(commentReads.readAt), sql`${comments.at} > ${commentReads.readAt}`),
-        versionSeen(actor),
-        projectSeen(actor),
+        isPutOnProjects(actor.role)
+          ? sql`${comments.projectId} in (select ${projectPeople.projectId} from ${projectPeople}
+              where ${projectPeople.firmId} = ${actor.firmId} and ${projectPeople.personId} = ${actor.personId})`
+          : undefined,
       ),
     )
     .orderBy(desc(comments.at), desc(comments.id))
     .limit(LOOKED_THROUGH)
-    .$dynamic();
+    .as('newest');
+  return db
+    .select({
+      id: newest.id,
+      threadId: newest.threadId,
+      versionId: newest.versionId,
+      versionNumber: versions.number,
+      layoutName: layouts.name,
+      projectId: projects.id,
+      projectName: projects.name,
+      person: { id: people.id, name: people.name },
+      body: newest.body,
+      at: newest.at,
+    })
+    .from(newest)
+    .innerJoin(versions, and(eq(versions.firmId, actor.firmId), eq(versions.id, newest.versionId)))
+    .innerJoin(layouts, and(eq(layouts.firmId, actor.firmId), eq(layouts.id, newest.layoutId)))
+    .innerJoin(projects, and(eq(projects.firmId, actor.firmId), eq(projects.id, newest.projectId)))
+    .innerJoin(people, eq(people.id, newest.personId))
+    .where(and(versionSeen(actor), projectSeen(actor)))
+    .orderBy(desc(newest.at), desc(newest.id));
+};
 
 export const unreadThreads = async (db: Db, actor: Actor): Promise<Unread> => {
   const threads = new Map<string, Unread['threads'][number]>();
