@@ -66,6 +66,16 @@ export function groundFromFrame({ from, direction }: FitFrame, [u, v]: Point): P
   ];
 }
 
+/** The same origin in the cell, 0 ≤ u < pitch and 0 ≤ v < rise. */
+export function cellPoint(
+  { pitch, rise, shift }: Pick<FitFrame, 'pitch' | 'rise' | 'shift'>,
+  [u, v]: Point,
+): [number, number] {
+  const j = Math.floor(v / rise);
+  const x = u - j * shift;
+  return [x - Math.floor(x / pitch) * pitch, v - j * rise];
+}
+
 /** Makes a valid document's floor ready for the fit at `turn`. */
 export function fitFrame(
   document: LayoutDocument,

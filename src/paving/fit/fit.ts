@@ -18,17 +18,10 @@ export interface FitOptions {
   readonly hold?: readonly FitHold[];
   /** False to leave the trade-off out and give the most units alone. */
   readonly choices?: boolean;
-  /** Called as a range of turns is gone through. */
-  readonly progress?: (progress: FitProgress) => void;
+  /** Called with each turn as it is found, and how much of the range is done, 0 to 1; turns about the best come after it. */
+  readonly progress?: (turn: FitTurn, share: number) => void;
   /** Asked now and then, at least once a turn; when it answers true the fit ends. */
   readonly shouldStop?: () => boolean;
-}
-
-export interface FitProgress {
-  /** The turn just found; null where a hold cannot be kept. */
-  readonly turn: FitTurn | null;
-  /** How much of the range is done, 0 to 1; turns about the best come after it. */
-  readonly share: number;
 }
 
 /** Where the pattern must start. Lengths in mm. */
@@ -46,6 +39,9 @@ export interface FitResult {
   readonly turns?: readonly FitTurn[];
 }
 
+/** Message of the error that `fit` throws when `shouldStop` has answered true. */
+export const FIT_STOPPED = 'the fit was stopped';
+
 /** Why the holds cannot be kept at the document's turn, and the turns that would do; null when they can. */
 export function fitRefusal(document: LayoutDocument, hold: readonly FitHold[]): HoldRefusal | null {
   return hold.length === 0 ? null : holdRefusal(fitFrame(document), hold);
@@ -61,22 +57,25 @@ function resultOf(frame: FitFrame, choices: readonly FitChoice[]): FitResult {
   return { wholeUnits, placement, leastGap, play, choices };
 }
 
-function fixedFit(document: LayoutDocument, turn: number, options: FitOptions): FitResult | null {
+function fixedFit(document: LayoutDocument, turn: number, options: FitOptions): FitResult {
   const { hold = [], choices = true, shouldStop } = options;
   const frame = fitFrame(document, turn, documentGround(document));
+  const check = () => {
+    if (shouldStop?.()) throw new Error(FIT_STOPPED);
+  };
   if (hold.length > 0) {
     const held = heldChoices(frame, hold, choices);
-    if (shouldStop?.()) return null;
+    check();
     return resultOf(
       frame,
       held.map((choice) => choiceVerified(frame, choice, true)),
     );
   }
   const { pieces, most } = frameMost(frame, shouldStop);
-  if (shouldStop?.()) return null;
+  check();
   if (most.count === 0) return resultOf(frame, []);
   const found = frameChoices(frame, pieces, most, choices, shouldStop);
-  if (shouldStop?.()) return null;
+  check();
   return resultOf(
     frame,
     found.map((choice) => choiceVerified(frame, choice)),
@@ -85,13 +84,12 @@ function fixedFit(document: LayoutDocument, turn: number, options: FitOptions): 
 
 /**
  * The fit, turn by turn: yields each turn of a range as it is found (null where a hold cannot be
- * kept), so that a caller can draw it, wait, or leave off; returns the result, null when it was
- * stopped. With a fixed turn it yields nothing.
+ * kept), so that a caller can draw it, wait, or leave off; returns the result. With a fixed turn it yields nothing.
  */
 export function* fitSteps(
   document: LayoutDocument,
   options: FitOptions = {},
-): Generator<FitTurn | null, FitResult | null> {
+): Generator<FitTurn | null, FitResult> {
   const { turn = 'fixed', hold = [], shouldStop } = options;
   if (turn === 'fixed') {
     const refusal = fitRefusal(document, hold);
@@ -102,28 +100,28 @@ export function* fitSteps(
   for (const found of turnSweep(document, turn, hold)) {
     if (found) turns.push(found);
     yield found;
-    if (shouldStop?.()) return null;
+    if (shouldStop?.()) throw new Error(FIT_STOPPED);
   }
   if (turns.length === 0) {
     const refusal = fitRefusal(document, hold);
     throw new Error(refusal?.message ?? 'the hold cannot be kept at any turn of the range');
   }
   const best = fixedFit(document, turnBest(turns).turn, options);
-  return best && { ...best, turns: turns.sort((one, other) => one.turn - other.turn) };
+  return { ...best, turns: turns.sort((one, other) => one.turn - other.turn) };
 }
 
 /**
- * Where a valid document's pattern must start; null when `shouldStop` answered true. Deterministic.
- * Throws what `fitRefusal` says when a hold cannot be kept, and, with the place, when the laying
- * does not bear out what was found.
+ * Where a valid document's pattern must start. Deterministic. Throws `FIT_STOPPED` when `shouldStop`
+ * answered true, what `fitRefusal` says when a hold cannot be kept, and, with the place, when the
+ * laying does not bear out what was found.
  */
-export function fit(document: LayoutDocument, options: FitOptions = {}): FitResult | null {
+export function fit(document: LayoutDocument, options: FitOptions = {}): FitResult {
   const { turn = 'fixed', progress } = options;
   const total = turn === 'fixed' ? 1 : rangeTurns(turn).length;
   const steps = fitSteps(document, options);
   for (let done = 1; ; done++) {
     const step = steps.next();
     if (step.done) return step.value;
-    progress?.({ turn: step.value, share: Math.min(1, done / total) });
+    if (step.value) progress?.(step.value, Math.min(1, done / total));
   }
 }

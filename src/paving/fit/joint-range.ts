@@ -1,89 +1,107 @@
-import { documentUnit } from '../bond';
-import { bondProblems } from '../bond-validation';
-import type { LayoutDocument } from '../layout-document';
+import type { LayoutDocument, Placement } from '../layout-document';
+import { parseLayoutDocument } from '../layout-validation';
 import { fit } from './fit';
 
-/** Joints to look at: from, from + step … up to `to`, mm. */
+/** What a joint gives. Lengths in mm. */
+export interface JointFit {
+  readonly joint: number;
+  readonly wholeUnits: number;
+  readonly play: number | null;
+  readonly leastGap: number | null;
+  readonly placement: Placement;
+  /** The widest joint with this many units: any wider and a row falls out, so here the field just closes. */
+  readonly closes: boolean;
+}
+
 export interface JointRange {
   readonly from: number;
   readonly to: number;
   readonly step: number;
 }
 
-/** What a joint gives, at the document's turn. Lengths in mm. */
-export interface JointFit {
-  readonly joint: number;
-  readonly wholeUnits: number;
-  readonly play: number | null;
-  readonly leastGap: number | null;
-  readonly placement: LayoutDocument['placement'];
+export type JointFits =
+  | { readonly ok: true; readonly joints: readonly JointFit[] }
+  | { readonly ok: false; readonly message: string };
+
+/** No more joints than this are tried in one go. */
+const MOST_JOINTS = 400;
+/** The widest joint that keeps a count is sought to this, mm: finer than a spacer can be had. */
+const JOINT_FINENESS_MM = 0.01;
+
+function jointRefused(document: LayoutDocument, { from, to, step }: JointRange): string | null {
+  const { bond } = document;
+  if (bond.kind === 'basket' || bond.kind === 'herringbone')
+    return `The joint of a ${bond.kind} is fixed by its unit, which must be twice as long as wide with it; change the unit instead.`;
+  if (bond.kind === 'stepping')
+    return 'Stepping units have gaps, not a joint; change the gaps instead.';
+  if (bond.kind === 'custom')
+    return 'The joint of a bond of one’s own lies in its steps; change the steps instead.';
+  if (!(from >= 0) || !(to >= from) || !(step > 0))
+    return 'The range runs from the narrower to the wider joint.';
+  if ((to - from) / step > MOST_JOINTS)
+    return `That is more than ${MOST_JOINTS} joints; take a wider step or a shorter range.`;
+  return null;
 }
 
-export type JointFits =
-  | {
-      readonly ok: true;
-      /** In order of joint. */
-      readonly joints: readonly JointFit[];
-      /** Joints after which units are lost: each is the widest, of those looked at, that has its count. */
-      readonly closing: readonly JointFit[];
-      /** Of those with the most units, the one with the most play: where the field ends most evenly. */
-      readonly best: JointFit;
-    }
-  | { readonly ok: false; readonly reason: string };
-
-/** More joints than this are refused. */
-const GREATEST_JOINTS = 500;
-
-/** The bond with another joint, or why it has none of its own. */
-function withJoint(document: LayoutDocument, joint: number): LayoutDocument | string {
-  const { bond } = document;
-  switch (bond.kind) {
-    case 'stepping':
-      return 'stepping stones have a pitch, not a joint; change the pitch instead';
-    case 'custom':
-      return 'a custom pattern has its units set down one by one; its joint cannot be changed alone';
-    case 'basket':
-    case 'herringbone': {
-      const { length, width } = documentUnit(document, bond.unit);
-      const own = Math.round((length - 2 * width) * 1000) / 1000;
-      return `a ${bond.kind} of ${length} × ${width} mm units closes with a ${own} mm joint and no other; change the unit to change the joint`;
-    }
-    default:
-      return { ...document, bond: { ...bond, joint } };
-  }
+function withJoint(document: LayoutDocument, joint: number): LayoutDocument | null {
+  const parsed = parseLayoutDocument({
+    ...document,
+    bond: { ...document.bond, joint },
+    lifted: [],
+  });
+  return parsed.ok ? parsed.document : null;
 }
 
 /**
- * The fit for each joint of a range: which closes an extra row, which lets the field end evenly.
- * Refused, with the reason, for bonds whose joint the unit decides. Throws like `fit`.
+ * The most units and their play for each joint of the range, and, between neighbours of which the
+ * wider lays fewer, the widest joint that still lays as many: where an extra row just closes.
+ * Narrowest first. Refused for bonds whose joint is not free.
  */
-export function fitJoints(document: LayoutDocument, { from, to, step }: JointRange): JointFits {
-  const count = Math.floor((to - from) / step + 1e-9) + 1;
-  if (!(step > 0) || !(count >= 1) || !(from >= 0)) {
-    return { ok: false, reason: `joints from ${from} to ${to} mm by ${step} mm are not a range` };
+export function fitJoints(
+  document: LayoutDocument,
+  range: JointRange,
+  progress: (share: number) => void = () => {},
+): JointFits {
+  const message = jointRefused(document, range);
+  if (message) return { ok: false, message };
+  const at = (joint: number, closes = false): JointFit | null => {
+    const jointed = withJoint(document, Math.round(joint * 1e4) / 1e4);
+    if (!jointed) return null;
+    const { wholeUnits, play, leastGap, placement } = fit(jointed, { choices: false });
+    return { joint: Math.round(joint * 1e4) / 1e4, wholeUnits, play, leastGap, placement, closes };
+  };
+
+  const steps = Math.floor((range.to - range.from) / range.step + 1e-9);
+  const found: JointFit[] = [];
+  for (let n = 0; n <= steps; n++) {
+    const here = at(range.from + n * range.step);
+    progress((n + 1) / (steps + 1));
+    const before = found.at(-1);
+    if (before && here && here.wholeUnits < before.wholeUnits) {
+      const widest = widestWith(before, here.joint, at);
+      if (widest) found.push(widest);
+    }
+    if (here) found.push(here);
   }
-  if (count > GREATEST_JOINTS) {
-    return { ok: false, reason: `${count} joints are too many; use a wider step` };
+  return { ok: true, joints: found };
+}
+
+/** Between a joint and a wider one that lays fewer: the widest that lays as many as the first. */
+function widestWith(
+  narrow: JointFit,
+  wide: number,
+  at: (joint: number, closes: boolean) => JointFit | null,
+): JointFit | null {
+  let low = narrow.joint;
+  let high = wide;
+  let best: JointFit | null = null;
+  while (high - low > JOINT_FINENESS_MM) {
+    const middle = (low + high) / 2;
+    const here = at(middle, true);
+    if (here && here.wholeUnits >= narrow.wholeUnits) {
+      best = here;
+      low = middle;
+    } else high = middle;
   }
-  const joints: JointFit[] = [];
-  for (let n = 0; n < count; n++) {
-    const joint = Number((from + n * step).toFixed(6));
-    const changed = withJoint(document, joint);
-    if (typeof changed === 'string') return { ok: false, reason: changed };
-    const [problem] = bondProblems(changed);
-    if (problem) return { ok: false, reason: problem.message };
-    const found = fit(changed, { choices: false })!;
-    const { wholeUnits, play, leastGap, placement } = found;
-    joints.push({ joint, wholeUnits, play, leastGap, placement });
-  }
-  const closing = joints.filter(
-    ({ wholeUnits }, n) => n + 1 < joints.length && joints[n + 1].wholeUnits < wholeUnits,
-  );
-  const best = joints.reduce((one, other) =>
-    other.wholeUnits > one.wholeUnits ||
-    (other.wholeUnits === one.wholeUnits && (other.play ?? -1) > (one.play ?? -1))
-      ? other
-      : one,
-  );
-  return { ok: true, joints, closing, best };
+  return best;
 }

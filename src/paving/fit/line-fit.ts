@@ -4,7 +4,7 @@ import { layFloor } from '../laying';
 import { CHOICES_SHARE } from './cell-fit';
 import { cellPieces, type CellPieces } from './cell-pieces';
 import { unitCount } from './count';
-import { groundFromFrame, type FitFrame } from './fit-frame';
+import { cellPoint, groundFromFrame, type FitFrame } from './fit-frame';
 import { holdLines, type EdgeAddress, type FitHold, type HoldLine } from './hold';
 import { nearPieces } from './near-pieces';
 import { pieceGap, pieceGapsRoom, pointSlack, unitsApart } from './slack';
@@ -160,24 +160,13 @@ function crossings(frame: FitFrame, one: HoldLine, other: HoldLine): Stretch[] {
     const ov = (height * one.nx - one.height * other.nx) / cross;
     const at = -one.ny * ou + one.nx * ov;
     if (at < one.from - LEAST_STRETCH_MM || at > one.to + LEAST_STRETCH_MM) return;
-    const [cu, cv] = cellPoint(frame, ou, ov);
+    const [cu, cv] = cellPoint(frame, [ou, ov]);
     const key = `${Math.round(cu / SAME_ORIGIN_MM / 10)},${Math.round(cv / SAME_ORIGIN_MM / 10)}`;
     if (seen.has(key)) return;
     seen.add(key);
     found.push({ line: one, from: at, to: at, count: unitCount(frame, ou, ov) });
   });
   return found;
-}
-
-/** The same origin in the cell, 0 ≤ u < pitch and 0 ≤ v < rise. */
-export function cellPoint(
-  { pitch, rise, shift }: FitFrame,
-  u: number,
-  v: number,
-): [number, number] {
-  const j = Math.floor(v / rise);
-  const x = u - j * shift;
-  return [x - Math.floor(x / pitch) * pitch, v - j * rise];
 }
 
 /** So many of the nearest pieces of units that are whole are followed along a stretch. */
@@ -199,7 +188,7 @@ function stretchSearch(frame: FitFrame, pieces: CellPieces) {
   const ends = pieceGapsRoom(2);
   return ({ line, from, to }: Stretch): { s: number; slack: number } => {
     const middle = (from + to) / 2;
-    const [u, v] = cellPoint(frame, ...pointOn(line, middle));
+    const [u, v] = cellPoint(frame, pointOn(line, middle));
     const at = (s: number): [number, number] => [
       u - line.ny * (s - middle),
       v + line.nx * (s - middle),
