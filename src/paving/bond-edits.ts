@@ -129,6 +129,29 @@ export function bondChosen(document: LayoutDocument, kind: BondKind): BondChoice
   }
 }
 
+/**
+ * A side typed alone, with the other side where the bond ties the two: squares stay square in a pinwheel, and a
+ * unit stays twice as long as wide, with the joint, in basket and herringbone.
+ */
+function sidesTogether(
+  { bond }: LayoutDocument,
+  id: string,
+  change: Partial<Omit<Unit, 'id'>>,
+): Partial<Omit<Unit, 'id'>> {
+  const { length, width } = change;
+  if ((length === undefined) === (width === undefined)) return change;
+  if (bond.kind === 'pinwheel' && (bond.unit === id || bond.small === id)) {
+    const side = (length ?? width)!;
+    return { ...change, length: side, width: side };
+  }
+  if ((bond.kind === 'basket' || bond.kind === 'herringbone') && bond.unit === id) {
+    const { joint } = bond;
+    if (length === undefined) return { ...change, length: 2 * width! + joint };
+    return length > joint ? { ...change, width: (length - joint) / 2 } : change;
+  }
+  return change;
+}
+
 export interface UnitChange {
   readonly document: LayoutDocument;
   /** What else had to change with the unit, said to the person; null when nothing had to. */
@@ -136,7 +159,7 @@ export interface UnitChange {
 }
 
 /**
- * The document with unit `id` changed. Stepping keeps its gaps; a bond that needs 2 : 1 takes the joint
+ * The document with unit `id` changed. Sides that the bond ties change together. Stepping keeps its gaps; a bond that needs 2 : 1 takes the joint
  * that fits, or gives way to running bond; a pinwheel whose unit is no longer square gives way to stack.
  */
 export function unitChanged(
@@ -145,7 +168,7 @@ export function unitChanged(
   change: Partial<Omit<Unit, 'id'>>,
 ): UnitChange {
   const before = documentUnit(document, id);
-  const unit = { ...before, ...change };
+  const unit = { ...before, ...sidesTogether(document, id, change) };
   const next: LayoutDocument = {
     ...document,
     units: document.units.map((other) => (other.id === id ? unit : other)),
@@ -206,4 +229,56 @@ export function unitChanged(
     }
   }
   return { document: next, said: null };
+}
+
+/** Ids for units that the table adds, in the order in which they are given. */
+const UNIT_IDS = ['a', 'b', 'c', 'd', 'e', 'f', 'g', 'h'] as const;
+
+/** The document with one more unit of half the main one's size, for a second size in a bond of one's own. */
+export function unitAdded(document: LayoutDocument): LayoutDocument {
+  const main = mainUnit(document);
+  const taken = new Set(document.units.map((unit) => unit.id));
+  const id =
+    UNIT_IDS.find((candidate) => !taken.has(candidate)) ?? `unit-${document.units.length + 1}`;
+  const [length, width] = [Math.round(main.length / 2), Math.round(main.width / 2)];
+  return {
+    ...document,
+    units: [...document.units, { ...main, id, name: `Own ${length} × ${width} mm`, length, width }],
+  };
+}
+
+/**
+ * A bond of one's own with one more unit in its repeat: beside the last along the course, the course's step
+ * drawn out by the unit and its joint so that there is room for it.
+ */
+export function motifExtended(document: LayoutDocument): LayoutDocument {
+  const { bond } = document;
+  if (bond.kind !== 'custom') return document;
+  const last = bond.motif[bond.motif.length - 1];
+  const unit = documentUnit(document, last.unit);
+  const radians = (last.turn * Math.PI) / 180;
+  const joint = bond.joint ?? 0;
+  const stride = Math.hypot(bond.a[0], bond.a[1]) || 1;
+  const along: [number, number] = [bond.a[0] / stride, bond.a[1] / stride];
+  // How far the unit, turned as the last one, reaches along the course.
+  const reach =
+    Math.abs(along[0] * Math.cos(radians) + along[1] * Math.sin(radians)) * unit.length +
+    Math.abs(-along[0] * Math.sin(radians) + along[1] * Math.cos(radians)) * unit.width +
+    joint;
+  const micron = (value: number) => Math.round(value * 1000) / 1000;
+  return {
+    ...document,
+    lifted: [],
+    bond: {
+      ...bond,
+      a: [micron(bond.a[0] + along[0] * reach), micron(bond.a[1] + along[1] * reach)],
+      motif: [
+        ...bond.motif,
+        {
+          ...last,
+          at: [micron(last.at[0] + along[0] * reach), micron(last.at[1] + along[1] * reach)],
+        },
+      ],
+    },
+  };
 }

@@ -61,11 +61,16 @@ function numberOf(text: string): number {
   return under === 0 ? NaN : Number(whole) + over / under;
 }
 
-/** A comma before exactly three digits parts thousands (`3,200`); any other is a decimal comma (`3,2`). */
+/**
+ * A comma before exactly three digits parts thousands (`3,200`), unless what follows are metres, centimetres or
+ * feet or the number begins with nought (`0,450 m`, `3,250 m`); any other is a decimal comma (`3,2`).
+ */
 function withoutCommas(text: string): string {
-  return text.replace(/(\d),(\d+)/g, (_, before: string, after: string) =>
-    after.length === 3 ? before + after : `${before}.${after}`,
-  );
+  return text
+    .replace(/(?<!\d)[1-9]\d{0,2}(,\d{3})+(?![\d,])(?!\s*(m(?!m)|cm|f|'))/g, (grouped) =>
+      grouped.replace(/,/g, ''),
+    )
+    .replace(/(\d),(?=\d)/g, '$1.');
 }
 
 /**

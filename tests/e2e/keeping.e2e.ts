@@ -97,7 +97,7 @@ it('refuses a stale save, keeps both sides, and lets the person choose', async (
   await expect.poll(() => second.getByText('Nothing is lost').count()).toBe(1);
   expect(await value(second)).toBe('42 mm');
 
-  await second.getByRole('button', { name: 'Go on with theirs' }).click();
+  await second.getByRole('button', { name: 'Go on with the other' }).click();
   await expect.poll(() => value(second)).toBe('41 mm');
   await second.getByTestId('floor').focus();
   await second.keyboard.press('Control+z');
@@ -111,7 +111,7 @@ it('refuses a stale save, keeps both sides, and lets the person choose', async (
   // The first page has now gone stale itself; it goes on with its own, and the other is set aside.
   await setClearance(page, '43');
   await status(page, 'stale');
-  await page.getByRole('button', { name: 'Go on with mine' }).click();
+  await page.getByRole('button', { name: 'Go on with this one' }).click();
   await saved(page);
   await page.reload();
   await tableReady(page);

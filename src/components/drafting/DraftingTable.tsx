@@ -238,7 +238,7 @@ function Strip({
         {cells.map(([label, value], n) => (
           <div
             key={label}
-            className={`min-w-0 flex-col justify-center border-l border-stone-300 px-3 py-1.5 md:px-5 ${n === 1 || n === 3 ? 'hidden md:flex' : 'flex'}`}
+            className={`${n === 2 ? 'shrink-0' : 'min-w-0'} flex-col justify-center border-l border-stone-300 px-3 py-1.5 md:px-5 ${n === 1 || n === 3 ? 'hidden md:flex' : 'flex'}`}
           >
             <dt className="truncate text-[0.72rem] text-slate">{label}</dt>
             <dd className="truncate font-semibold">{value}</dd>
@@ -313,7 +313,7 @@ function Said() {
       {shown && (
         <p
           aria-hidden="true"
-          className="pointer-events-none fixed bottom-24 left-1/2 z-30 max-w-[90vw] -translate-x-1/2 bg-graphite px-4 py-2 font-semibold text-stone-50"
+          className="pointer-events-none fixed top-[3.4rem] left-1/2 z-30 max-w-[90vw] -translate-x-1/2 bg-graphite px-4 py-1.5 font-semibold text-stone-50"
         >
           {shown}
         </p>

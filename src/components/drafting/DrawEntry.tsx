@@ -1,5 +1,6 @@
 import { forwardRef, useImperativeHandle, useRef, useState } from 'react';
 import { formatLength, parseLength } from '@/paving/length';
+import { edgeRefused } from './field-limits';
 import { useTable, useTableStore } from './table-context';
 import { cornerPlaced, ringClosed, typedCorner } from './tools/draw-ring';
 
@@ -21,20 +22,20 @@ export const DrawEntry = forwardRef<DrawEntryHandle>(function DrawEntry(_, ref) 
     const now = table.getState().drawing;
     if (!now) return;
     const parsed = lengthText.trim() === '' ? null : parseLength(lengthText, display);
-    const angle =
-      directionText.trim() === ''
-        ? null
-        : Number(directionText.replace(/[°\s]/g, '').replace(',', '.').replace('−', '-'));
-    setWrong(parsed && !parsed.ok ? parsed.message : null);
+    const bare = directionText.replace(/[°\s]/g, '').replace(',', '.').replace('−', '-');
+    const angle = bare === '' ? null : Number(bare);
+    const fault =
+      (parsed && (parsed.ok ? edgeRefused(parsed.mm) : parsed.message)) ??
+      (angle !== null && !Number.isFinite(angle)
+        ? 'Type the direction in degrees, such as 90.'
+        : null);
+    setWrong(fault);
+    // A direction given with an arrow key holds while the field for it is empty.
+    const kept = directionText === '' ? now.directionDeg : null;
     const next = {
       ...now,
-      lengthMm: parsed?.ok && parsed.mm > 0 ? parsed.mm : null,
-      directionDeg:
-        angle !== null && Number.isFinite(angle)
-          ? angle
-          : now.directionDeg !== null && directionText === ''
-            ? now.directionDeg
-            : null,
+      lengthMm: !fault && parsed?.ok ? parsed.mm : null,
+      directionDeg: angle !== null && Number.isFinite(angle) ? angle : kept,
     };
     table.getState().set({ drawing: { ...next, next: typedCorner(next, now.next) ?? now.next } });
   };
@@ -60,7 +61,7 @@ export const DrawEntry = forwardRef<DrawEntryHandle>(function DrawEntry(_, ref) 
       typedCorner(now, now.next) ??
       now.next ??
       (now.corners.length === 0 ? ([0, 0] as const) : null);
-    if (!next || wrong) return;
+    if (wrong || !next) return;
     setLength('');
     setDirection('');
     cornerPlaced(table, next);

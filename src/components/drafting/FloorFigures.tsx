@@ -1,5 +1,8 @@
 import type { ReactNode } from 'react';
 import { formatArea } from '@/paving/area';
+import { formatCount } from '@/paving/count';
+import type { LayoutDocument } from '@/paving/layout-document';
+import type { DocumentProblem } from '@/paving/layout-validation';
 import type { Report } from '@/paving/report';
 import { Length } from '../ui/Length';
 import { useSettledFloor, useShownFloor } from './table-context';
@@ -61,7 +64,6 @@ export function FloorFigures({ brief = false }: { brief?: boolean }) {
     mm === null ? '–' : <Length mm={mm} display={display} decimals={Math.abs(mm) < 10 ? 1 : 0} />;
   const tenth = (mm: number | null) => (mm === null ? '–' : mm.toFixed(1));
   const area = (m2: number) => formatArea(m2, display);
-  const count = (n: number) => n.toLocaleString('en-GB').replace(/,/g, '\u202f');
 
   return (
     <section aria-label="Figures of the floor">
@@ -71,8 +73,8 @@ export function FloorFigures({ brief = false }: { brief?: boolean }) {
       >
         <Figure
           name="whole units"
-          now={<span data-testid="whole-units">{count(report.wholeUnits)}</span>}
-          before={before((r) => r.wholeUnits, count, String)}
+          now={<span data-testid="whole-units">{formatCount(report.wholeUnits)}</span>}
+          before={before((r) => r.wholeUnits, formatCount, String)}
         />
         <Figure
           name="least gap"
@@ -97,14 +99,14 @@ export function FloorFigures({ brief = false }: { brief?: boolean }) {
           <dl className="mt-3 hairlines text-[0.95rem]">
             <Row
               name="Left out at the edge"
-              now={count(report.leftOut)}
-              before={before((r) => r.leftOut, count, String)}
+              now={formatCount(report.leftOut)}
+              before={before((r) => r.leftOut, formatCount, String)}
             />
             {(report.lifted > 0 || (was?.lifted ?? 0) > 0) && (
               <Row
                 name="Lifted"
-                now={count(report.lifted)}
-                before={before((r) => r.lifted, count, String)}
+                now={formatCount(report.lifted)}
+                before={before((r) => r.lifted, formatCount, String)}
               />
             )}
             {Object.keys(report.byUnit).length > 1 &&
@@ -114,8 +116,8 @@ export function FloorFigures({ brief = false }: { brief?: boolean }) {
                   <Row
                     key={unit.id}
                     name={unit.name}
-                    now={count(report.byUnit[unit.id])}
-                    before={before((r) => r.byUnit[unit.id] ?? 0, count, String)}
+                    now={formatCount(report.byUnit[unit.id])}
+                    before={before((r) => r.byUnit[unit.id] ?? 0, formatCount, String)}
                   />
                 ))}
             <Row
@@ -140,17 +142,33 @@ export function FloorFigures({ brief = false }: { brief?: boolean }) {
   );
 }
 
+/** What a problem is about, in the words of the table. */
+function problemSubject({ ground, units }: LayoutDocument, path: DocumentProblem['path']): string {
+  const [part, second, index] = path;
+  if (part === 'ground' && second === 'perimeter') return 'The perimeter';
+  if (part === 'ground' && second === 'keepOuts' && typeof index === 'number')
+    return `The keep-out “${ground.keepOuts[index]?.name ?? ''}”`;
+  if (part === 'units' && typeof second === 'number')
+    return `The unit “${units[second]?.name ?? ''}”`;
+  if (part === 'bond')
+    return second === 'motif' && typeof index === 'number'
+      ? `In the bond, unit ${index + 1}`
+      : 'The bond';
+  if (part === 'clearance') return 'The clearance';
+  if (part === 'placement') return 'The start';
+  return 'The floor';
+}
+
 /** Why the floor cannot be laid, and that nothing is lost. */
 export function FloorProblems() {
-  const { problems } = useShownFloor();
+  const { problems, document } = useShownFloor();
   return (
     <section role="alert" className="border-t-2 border-brick bg-brick-wash px-3 py-3">
       <h3>This floor cannot be laid yet</h3>
       <ul className="mt-1 list-disc pl-5">
         {problems.slice(0, 6).map((problem, n) => (
           <li key={n}>
-            {problem.message}
-            <span className="block text-xs text-slate">{problem.path.join('.')}</span>
+            {problemSubject(document, problem.path)} {problem.message}.
           </li>
         ))}
       </ul>

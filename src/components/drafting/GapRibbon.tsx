@@ -78,7 +78,7 @@ export function GapRibbon() {
 
   if (!laying)
     return (
-      <div className="px-4 py-3 text-sm text-slate">
+      <div className="flex h-[5.1rem] items-center px-4 text-sm text-slate md:h-[6.6rem]">
         The gap ribbon is drawn once the floor can be laid.
       </div>
     );

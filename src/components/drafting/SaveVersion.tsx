@@ -108,11 +108,7 @@ export function SaveVersion({ open, onClose, layoutId, number, sync }: Props) {
               {save.error.message}
             </p>
           )}
-          <button
-            type="submit"
-            className="button button-primary w-full"
-            disabled={save.isPending || label.trim() === ''}
-          >
+          <button type="submit" className="button button-primary w-full" disabled={save.isPending}>
             {save.isPending ? 'Saving …' : `Save version ${number}`}
           </button>
         </form>

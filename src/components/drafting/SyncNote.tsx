@@ -25,7 +25,7 @@ export function SyncNote({ sync }: { sync: DraftSync }) {
 }
 
 /** What stands between the work and the server, and what to do about it. */
-export function SyncBanner({ sync }: { sync: DraftSync }) {
+export function SyncBanner({ sync, personId }: { sync: DraftSync; personId: string }) {
   const { status, stale, message, keeps } = useStore(sync.state);
   if (status === 'stale' && stale)
     return (
@@ -35,21 +35,22 @@ export function SyncBanner({ sync }: { sync: DraftSync }) {
       >
         <p className="min-w-60 flex-1">
           <b>
-            {stale.current.savedBy.name} saved this layout at {wallTime(stale.current.savedAt)},
-            while you worked on it.
+            {stale.current.savedBy.id === personId
+              ? `You saved this layout in another window at ${wallTime(stale.current.savedAt)}.`
+              : `${stale.current.savedBy.name} saved this layout at ${wallTime(stale.current.savedAt)}, while you worked on it.`}
           </b>{' '}
-          Nothing is lost: yours is here, and theirs is on the server. Choose one to go on with; the
-          other is set aside under Versions.
+          Nothing is lost: this side is here, and the other is on the server. Choose one to go on
+          with; the other is set aside under Versions.
         </p>
         <button type="button" className="button" onClick={() => void sync.goOnWith('theirs')}>
-          Go on with theirs
+          Go on with the other
         </button>
         <button
           type="button"
           className="button button-primary"
           onClick={() => void sync.goOnWith('mine')}
         >
-          Go on with mine
+          Go on with this one
         </button>
       </div>
     );

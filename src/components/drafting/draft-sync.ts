@@ -60,6 +60,8 @@ export function createDraftSync(
   let inFlight: Promise<number | null> | null = null;
   let timer: ReturnType<typeof setTimeout> | undefined;
   let tries = 0;
+  // Stays until the server has answered: a choice made while it was away holds when it is back.
+  let setCurrentAside = false;
 
   const unsent = () => table.getState().document !== sentDocument;
 
@@ -72,6 +74,7 @@ export function createDraftSync(
       tab,
       at: new Date().toISOString(),
       unsent: unsent(),
+      setCurrentAside,
       drawing,
     });
     if (keeps !== state.getState().keeps) state.setState({ keeps });
@@ -104,7 +107,7 @@ export function createDraftSync(
     return null;
   };
 
-  const sendOnce = async (setCurrentAside: boolean): Promise<number | null> => {
+  const sendOnce = async (): Promise<number | null> => {
     const { document } = table.getState();
     tab = { ...tab, save: tab.save + 1 };
     keep();
@@ -117,6 +120,7 @@ export function createDraftSync(
         ...(setCurrentAside ? { setCurrentAside } : {}),
       });
       tries = 0;
+      setCurrentAside = false;
       sentDocument = document;
       state.setState({
         status: 'saved',
@@ -140,7 +144,7 @@ export function createDraftSync(
       if (state.getState().status !== 'saved') state.setState({ status: 'saved', message: null });
       return state.getState().revision;
     }
-    inFlight = sendOnce(false);
+    inFlight = sendOnce();
     const revision = await inFlight;
     inFlight = null;
     return revision !== null && unsent() ? flush() : revision;
@@ -179,6 +183,7 @@ export function createDraftSync(
       }
       if (last) {
         tab = { ...last.tab };
+        setCurrentAside = last.setCurrentAside ?? false;
         if (last.unsent && JSON.stringify(last.document) !== JSON.stringify(draft.document)) {
           table.setState({ document: last.document });
           state.setState({ revision: last.baseRevision, status: 'saving' });
@@ -204,8 +209,9 @@ export function createDraftSync(
         keep();
         return;
       }
+      setCurrentAside = true;
       state.setState({ revision: current.revision, stale: null });
-      inFlight = sendOnce(true);
+      inFlight = sendOnce();
       await inFlight;
       inFlight = null;
     },
@@ -241,6 +247,7 @@ export function createDraftSync(
             baseRevision: revision,
             document,
             tab: { ...tab, save: tab.save + 1 },
+            ...(setCurrentAside ? { setCurrentAside } : {}),
           });
           if (body.length < 60_000)
             void fetch(`/api/layouts/${layoutId}/draft`, {

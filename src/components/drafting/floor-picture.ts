@@ -18,7 +18,10 @@ interface ColourBatch {
 }
 
 /** Slight differences between units of one tone, as a delivered pallet has them. */
-const SHADES = [0, -0.035, 0.22] as const;
+const SHADES = [0, -0.03, 0.06] as const;
+
+/** A path is painted after so many units: a browser fills one path of thousands in more than square time. */
+const UNITS_A_PATH = 400;
 
 /** Below this many pixels across, a unit has no outline of its own. */
 const OUTLINE_FROM_PX = 5;
@@ -68,14 +71,15 @@ function traceRings(
   }
 }
 
-/** Adds the outlines of units to the path in hand, those outside the window left out. */
-function traceUnits(
+/** Traces the outlines of units, those outside the window left out, and paints them with `paint`, path by path. */
+function paintUnits(
   ctx: CanvasRenderingContext2D,
   laying: Laying,
   set: UnitSet,
   indices: Uint32Array | null,
   camera: Camera,
   size: ScreenSize,
+  paint: () => void,
 ) {
   const { scale, centre } = camera;
   const halves = laying.motif.map((entry) => ({
@@ -86,6 +90,8 @@ function traceUnits(
     reach: (Math.hypot(...entry.halfLength) + Math.hypot(...entry.halfWidth)) * scale,
   }));
   const count = indices ? indices.length : set.count;
+  let traced = 0;
+  ctx.beginPath();
   for (let m = 0; m < count; m++) {
     const n = indices ? indices[m] : m;
     const half = halves[set.k[n]];
@@ -98,7 +104,13 @@ function traceUnits(
     ctx.lineTo(x - half.ax - half.bx, y - half.ay - half.by);
     ctx.lineTo(x + half.ax - half.bx, y + half.ay - half.by);
     ctx.closePath();
+    traced += 1;
+    if (traced % UNITS_A_PATH === 0) {
+      paint();
+      ctx.beginPath();
+    }
   }
+  if (traced % UNITS_A_PATH !== 0) paint();
 }
 
 const GRAIN_TILE = 192;
@@ -182,15 +194,13 @@ export function paintFloor(
   const outlined = across * camera.scale >= OUTLINE_FROM_PX;
 
   for (const batch of colourBatches(laying)) {
-    ctx.beginPath();
-    traceUnits(ctx, laying, laying.laid, batch.indices, camera, size);
     ctx.fillStyle = batch.colour;
-    ctx.fill();
-    if (outlined) {
-      ctx.strokeStyle = dark;
-      ctx.lineWidth = 0.6;
-      ctx.stroke();
-    }
+    ctx.strokeStyle = dark;
+    ctx.lineWidth = 0.6;
+    paintUnits(ctx, laying, laying.laid, batch.indices, camera, size, () => {
+      ctx.fill();
+      if (outlined) ctx.stroke();
+    });
   }
 
   if (outlined) {
@@ -199,15 +209,13 @@ export function paintFloor(
     ctx.strokeStyle = dark;
     ctx.lineWidth = 0.9;
     ctx.setLineDash([3, 4]);
-    ctx.beginPath();
-    traceUnits(ctx, laying, laying.leftOut, null, camera, size);
-    ctx.stroke();
+    paintUnits(ctx, laying, laying.leftOut, null, camera, size, () => ctx.stroke());
 
     ctx.strokeStyle = colours.graphite;
     ctx.lineWidth = 1.2;
     ctx.setLineDash([6, 3]);
+    paintUnits(ctx, laying, laying.lifted, null, camera, size, () => ctx.stroke());
     ctx.beginPath();
-    traceUnits(ctx, laying, laying.lifted, null, camera, size);
     traceCrosses(ctx, laying, camera, size);
     ctx.stroke();
   }

@@ -126,10 +126,15 @@ function paintKeepOutName(ink: Ink, ring: number) {
   boxedText(ink, name, [(left + right) / 2, (top + bottom) / 2], 0, colours.slate);
 }
 
-function paintDimensions(ink: Ink, ring: number, picked: Pick | null) {
+/** Boxes that labels have taken: one that would lie over another is left away. */
+type Taken = { readonly x: number; readonly y: number; readonly half: number }[];
+
+function paintDimensions(ink: Ink, ring: number, picked: Pick | null, taken: Taken) {
   const { ctx, document, colours, camera, size } = ink;
   const vertices = documentRing(document, ring);
-  for (const line of dimensionLines(vertices, camera, size, ring === 0 ? 1 : -1)) {
+  const lines = dimensionLines(vertices, camera, size, ring === 0 ? 1 : -1);
+  // The longest first: where there is no room for all, those are the ones that matter.
+  for (const line of [...lines].sort((p, q) => q.lengthPx - p.lengthPx)) {
     const arc = vertexBulge(vertices[line.edge]) !== 0;
     const length = formatLength(edgeLength(vertices, line.edge), document.display, { unit: false });
     const text = arc
@@ -139,6 +144,12 @@ function paintDimensions(ink: Ink, ring: number, picked: Pick | null) {
     const room = arc ? Infinity : line.lengthPx;
     if (ctx.measureText(text).width + 12 > room) continue;
     const live = picked?.kind === 'edge' && picked.ring === ring && picked.edge === line.edge;
+    const half = ctx.measureText(text).width / 2 + 6;
+    const [lx, ly] = line.middle;
+    const reach = Math.max(10, arc ? half : half * Math.abs(Math.cos(line.angle)));
+    if (!live && taken.some((t) => Math.abs(t.x - lx) < t.half + reach && Math.abs(t.y - ly) < 20))
+      continue;
+    if (ring === 0 || live) taken.push({ x: lx, y: ly, half: reach });
     const colour = live ? colours.line : colours.slate;
     ctx.strokeStyle = colour;
     ctx.lineWidth = 0.8;
@@ -340,7 +351,7 @@ function paintLeastGap(ink: Ink, floor: Floor) {
   segment(ctx, unitPoint, edgePoint);
   dot(ctx, edgePoint, 4, colours.line);
 
-  const text = `goes first: ${formatLength(leastGap.gap, ink.document.display)}`;
+  const text = `goes first: ${formatLength(leastGap.gap, ink.document.display, { decimals: leastGap.gap < 10 ? 1 : 0 })}`;
   ctx.font = `600 12.5px ${FONT}`;
   const width = ctx.measureText(text).width + 16;
   // The label stands outside the edge, where it hides no unit, and inside the window.
@@ -413,6 +424,24 @@ export function gapAt(floor: Floor, ring: number, edge: number, s: number): numb
   return line[0]?.[1] ?? null;
 }
 
+/** The unit chosen with the keys while lifting. */
+function paintChosenUnit(ink: Ink, state: TableState, floor: Floor) {
+  const { laying } = floor;
+  if (!laying || !state.unit || state.tool !== 'lift') return;
+  const [i, j, k] = state.unit;
+  const entry = laying.motif[k];
+  if (!entry) return;
+  const radians = (ink.document.placement.turn * Math.PI) / 180;
+  const [cos, sin] = [Math.cos(radians), Math.sin(radians)];
+  const { a, b } = laying.lattice;
+  const x = laying.origin[0] + i * a[0] + j * b[0] + entry.at[0] * cos - entry.at[1] * sin;
+  const y = laying.origin[1] + i * a[1] + j * b[1] + entry.at[0] * sin + entry.at[1] * cos;
+  path(ink, unitCorners(entry, x, y), true);
+  ink.ctx.strokeStyle = ink.colours.line;
+  ink.ctx.lineWidth = 2.6;
+  ink.ctx.stroke();
+}
+
 function paintTurnHandle(ink: Ink, state: TableState) {
   const handle = turnHandle(state, ink.document);
   if (!handle) return;
@@ -454,8 +483,9 @@ export function paintOverlay(
   ctx.save();
   ctx.globalAlpha = replacing ? 0.25 : 1;
   paintRings(ink);
+  const taken: Taken = [];
   for (let ring = 0; ring < documentRingCount(ink.document); ring++)
-    paintDimensions(ink, ring, editing ? state.pick : null);
+    paintDimensions(ink, ring, editing ? state.pick : null, taken);
   paintLetters(ink);
   ctx.globalAlpha = 1;
   if (state.step === 'fit' && !state.preview && state.tool !== 'align' && state.tool !== 'hold')
@@ -464,6 +494,7 @@ export function paintOverlay(
   if ((state.tool === 'align' || state.tool === 'hold') && state.hover)
     paintPick(ink, state.hover, false);
   if (state.step === 'fit' && state.tool === 'slide') paintTurnHandle(ink, state);
+  paintChosenUnit(ink, state, floor);
   paintGuides(ink, state);
   paintDrawing(ink, state);
   if (!state.drawing) paintProblems(ink, floor);

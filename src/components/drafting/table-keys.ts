@@ -14,6 +14,7 @@ import {
 } from './ground-actions';
 import { nudge } from './nudge';
 import { STEPS, type TableStore } from './table-store';
+import { chosenUnitToggled, unitChosen } from './tools/lift-unit';
 import { cornerPlaced, cornerTakenBack, ringClosed, typedCorner } from './tools/draw-ring';
 
 /** What the list of keys shows; `table-keys.ts` is where each is acted on. */
@@ -41,7 +42,7 @@ export const KEY_LIST: readonly (readonly [
       ['D', 'Draw the ground anew'],
       ['K', 'Draw a keep-out'],
       [',  .', 'Pick the corner or edge before, after'],
-      ['Arrows', 'Move what is picked 1 mm; with Shift 10 mm'],
+      ['Arrows', 'Move what is picked 1 mm (1/16″); with Shift 10 mm (1/2″)'],
       ['I', 'Put a corner into the picked edge'],
       ['Delete', 'Take the picked corner away'],
       ['S', 'Snapping on or off; hold Alt to suspend it'],
@@ -60,9 +61,9 @@ export const KEY_LIST: readonly (readonly [
   [
     'Unit, bond and fit',
     [
-      ['Arrows', 'Slide the pattern 1 mm; with Shift 10 mm'],
+      ['Arrows', 'Slide the pattern 1 mm (1/16″); with Shift 10 mm (1/2″)'],
       ['[  ]', 'Turn 1°; with Shift 15°'],
-      ['L', 'Lift units, or slide the pattern'],
+      ['L', 'Lift units, or slide the pattern; arrows choose one, Enter lifts it'],
       ['A', 'Start a row along an edge'],
     ],
   ],
@@ -169,6 +170,12 @@ export function keyActed(table: TableStore, event: KeyboardEvent, actions: KeyAc
     else if (key === '?') actions.showKeys();
     else if (key.toLowerCase() === 's') state.set({ snap: !state.snap });
     else return false;
+    return true;
+  }
+
+  if (state.tool === 'lift' && (key in ARROWS || key === 'Enter' || key === ' ')) {
+    if (key in ARROWS) unitChosen(table, ARROWS[key]);
+    else chosenUnitToggled(table);
     return true;
   }
 

@@ -2,7 +2,7 @@ import { temporal } from 'zundo';
 import { createStore } from 'zustand/vanilla';
 import type { Point } from '@/geometry/point';
 import type { FitHold } from '@/paving/fit/fit';
-import type { LayoutDocument } from '@/paving/layout-document';
+import type { Address, LayoutDocument } from '@/paving/layout-document';
 import type { Camera, ScreenSize } from './camera';
 
 export const STEPS = ['ground', 'unit', 'bond', 'fit', 'versions'] as const;
@@ -51,6 +51,8 @@ export interface TableState {
   readonly drawing: Drawing | null;
   readonly guides: readonly Guide[];
   readonly lit: Lit | null;
+  /** The unit chosen with the keys while lifting. */
+  readonly unit: Address | null;
   readonly snap: boolean;
   /** What the fit holds the pattern to: asked of it, not part of the document. */
   readonly hold: readonly FitHold[];
@@ -100,6 +102,7 @@ export function createTableStore(document: LayoutDocument) {
         drawing: null,
         guides: [],
         lit: null,
+        unit: null,
         snap: true,
         hold: [],
         holding: null,

@@ -5,10 +5,12 @@ export function Length({
   mm,
   display,
   decimals = 0,
+  unit = true,
 }: {
   mm: number;
   display: Display;
   decimals?: number;
+  unit?: boolean;
 }) {
   const parts = lengthParts(mm, display, decimals);
   return (
@@ -23,7 +25,7 @@ export function Length({
           </span>
         </>
       )}
-      {parts.unit === 'mm' ? '\u202fmm' : parts.unit}
+      {parts.unit === 'mm' ? unit && '\u202fmm' : parts.unit}
     </span>
   );
 }

@@ -1,7 +1,10 @@
 import { Plus, Trash2 } from 'lucide-react';
+import { motifExtended, unitAdded } from '@/paving/bond-edits';
 import type { Bond, MotifEntry } from '@/paving/layout-document';
 import { LengthField } from '../../ui/LengthField';
 import { NumberField } from '../../ui/NumberField';
+import { BondCanvas } from '../BondCanvas';
+import { lengthRefused } from '../field-limits';
 import { useShownFloor, useTableStore } from '../table-context';
 
 type Custom = Extract<Bond, { kind: 'custom' }>;
@@ -17,17 +20,21 @@ export function CustomBond({ bond }: { bond: Custom }) {
     edit({ motif: bond.motif.map((m, n) => (n === index ? { ...m, ...part } : m)) });
   return (
     <section aria-label="Own bond" className="space-y-3">
+      <BondCanvas bond={bond} />
+      <p className="text-sm text-slate">
+        Drag the units, and the ends a and b of the two steps by which they repeat.
+      </p>
       {(['a', 'b'] as const).map((name) => (
         <div key={name}>
           <p className="field-label">
-            Repeats {name === 'a' ? 'along the course' : 'from course to course'}
+            Repeats {name === 'a' ? 'along the course (a)' : 'from course to course (b)'}
           </p>
           <div className="grid grid-cols-2 gap-2">
             {([0, 1] as const).map((axis) => (
               <LengthField
                 key={axis}
                 label={`Step ${name}, ${axis === 0 ? 'across' : 'up'}`}
-                hideLabel
+                refuse={lengthRefused}
                 mm={bond[name][axis]}
                 display={display}
                 onLength={(mm) =>
@@ -61,6 +68,7 @@ export function CustomBond({ bond }: { bond: Custom }) {
             <LengthField
               label={`Unit ${index + 1} across`}
               hideLabel
+              refuse={lengthRefused}
               mm={m.at[0]}
               display={display}
               onLength={(mm) => entry(index, { at: [mm, m.at[1]] })}
@@ -68,6 +76,7 @@ export function CustomBond({ bond }: { bond: Custom }) {
             <LengthField
               label={`Unit ${index + 1} up`}
               hideLabel
+              refuse={lengthRefused}
               mm={m.at[1]}
               display={display}
               onLength={(mm) => entry(index, { at: [m.at[0], mm] })}
@@ -95,10 +104,20 @@ export function CustomBond({ bond }: { bond: Custom }) {
       <button
         type="button"
         className="button w-full"
-        onClick={() => edit({ motif: [...bond.motif, { ...bond.motif[bond.motif.length - 1] }] })}
+        disabled={bond.motif.length >= 64}
+        onClick={() => table.getState().edit(motifExtended)}
       >
         <Plus size={16} aria-hidden /> One more unit
       </button>
+      {document.units.length === 1 && (
+        <button
+          type="button"
+          className="button w-full"
+          onClick={() => table.getState().edit(unitAdded)}
+        >
+          <Plus size={16} aria-hidden /> A second size
+        </button>
+      )}
       <LengthField
         label="Joint, for reading the gaps"
         mm={bond.joint ?? 0}

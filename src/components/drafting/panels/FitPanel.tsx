@@ -1,8 +1,8 @@
 import { Hand, RotateCcw, RotateCw, Spline, SquareDashed } from 'lucide-react';
 import { vertexBulge } from '@/paving/ground-edits';
 import { documentEdgeName } from '@/paving/edge-names';
-import { formatLength } from '@/paving/length';
 import { groundMiddle, placementTurned, turnNormal } from '@/paving/placement-edits';
+import { Length } from '../../ui/Length';
 import { LengthField } from '../../ui/LengthField';
 import { NumberField } from '../../ui/NumberField';
 import { BestStart } from '../fit/BestStart';
@@ -10,6 +10,7 @@ import { FitPictures } from '../fit/FitPictures';
 import type { FitService } from '../fit/fit-service';
 import { HoldFields } from '../fit/HoldFields';
 import { JointRange } from '../fit/JointRange';
+import { coordinateRefused } from '../field-limits';
 import { FloorFigures } from '../FloorFigures';
 import { turnNudged } from '../table-keys';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
@@ -23,10 +24,9 @@ const TOOLS: readonly (readonly [ToolName, string, typeof Hand])[] = [
 ];
 
 const HINTS: Partial<Record<ToolName, string>> = {
-  slide:
-    'Drag the floor to slide the pattern; drag the round handle to turn it. Arrows nudge 1 mm.',
-  lift: 'Click a unit to lift it out, and again to lay it back.',
-  align: 'Click the edge along which a row is to start.',
+  slide: 'Drag the floor to slide the pattern, and the round handle to turn it.',
+  lift: 'Tap or click a unit to lift it out, and again to lay it back. With keys: arrows choose, Enter lifts.',
+  align: 'Tap or click the edge along which a row is to start.',
 };
 
 /** Where the pattern stands: the best start and its pictures, and the pattern by hand. */
@@ -128,12 +128,14 @@ export function FitPanel({ fit }: { fit: FitService }) {
         <LengthField
           label="Start across"
           mm={placement.origin[0]}
+          refuse={coordinateRefused}
           display={display}
           onLength={origin(0)}
         />
         <LengthField
           label="Start up"
           mm={placement.origin[1]}
+          refuse={coordinateRefused}
           display={display}
           onLength={origin(1)}
         />
@@ -150,7 +152,11 @@ function EdgeGaps() {
   const { document, report } = floor;
   if (!report) return null;
   const text = (mm: number | null) =>
-    mm === null ? '–' : formatLength(mm, document.display, { unit: false });
+    mm === null ? (
+      '–'
+    ) : (
+      <Length mm={mm} display={document.display} unit={document.display === 'imperial'} />
+    );
   return (
     <section aria-label="Gaps by edge">
       <table className="w-full text-right text-[0.93rem]">

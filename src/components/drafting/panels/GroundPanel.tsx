@@ -20,6 +20,7 @@ import { formatLength } from '@/paving/length';
 import { LengthField } from '../../ui/LengthField';
 import { NumberField } from '../../ui/NumberField';
 import { Segmented } from '../../ui/Segmented';
+import { coordinateRefused, edgeRefused } from '../field-limits';
 import { FloorProblems } from '../FloorFigures';
 import {
   cornerAdded,
@@ -32,16 +33,6 @@ import {
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 import type { Pick } from '../table-store';
 import { cornerTakenBack, ringClosed } from '../tools/draw-ring';
-
-/** An edge may be as long as the ground may be wide, mm. */
-const GREATEST_EDGE_MM = 1_000_000;
-
-const refuseLength = (mm: number) =>
-  mm <= 0
-    ? 'A side must be longer than nothing.'
-    : mm > GREATEST_EDGE_MM
-      ? 'That is over a kilometre.'
-      : null;
 
 function EdgeRow({ ring, edge }: { ring: number; edge: number }) {
   const table = useTableStore();
@@ -76,7 +67,7 @@ function EdgeRow({ ring, edge }: { ring: number; edge: number }) {
             hideLabel
             mm={chordLength(vertices, edge)}
             display={document.display}
-            refuse={refuseLength}
+            refuse={edgeRefused}
             onLength={(mm) =>
               table
                 .getState()
@@ -173,8 +164,20 @@ function PickedVertex({ pick }: { pick: Extract<Pick, { kind: 'vertex' }> }) {
         <MapPin size={16} aria-hidden /> {name}
       </h3>
       <div className="grid grid-cols-2 gap-2">
-        <LengthField label="Across" mm={vertex[0]} display={document.display} onLength={move(0)} />
-        <LengthField label="Up" mm={vertex[1]} display={document.display} onLength={move(1)} />
+        <LengthField
+          label="Across"
+          mm={vertex[0]}
+          refuse={coordinateRefused}
+          display={document.display}
+          onLength={move(0)}
+        />
+        <LengthField
+          label="Up"
+          mm={vertex[1]}
+          refuse={coordinateRefused}
+          display={document.display}
+          onLength={move(1)}
+        />
       </div>
       <button
         type="button"
@@ -196,8 +199,8 @@ function DrawingPanel() {
     <div className="space-y-4">
       <p>
         {drawing.corners.length === 0
-          ? 'Click where the first corner lies.'
-          : 'Click the next corner, or type the length and press Enter. Click the first corner to close the ring.'}
+          ? 'Tap or click where the first corner lies.'
+          : 'Tap or click the next corner, or type the length and press Enter. The first corner again closes the ring.'}
       </p>
       <p className="text-slate">
         {drawing.corners.length} {drawing.corners.length === 1 ? 'corner' : 'corners'} down.
@@ -243,8 +246,7 @@ export function GroundPanel() {
     <div className="space-y-5">
       {floor.problems.length > 0 && <FloorProblems />}
       <p className="text-slate">
-        Drag corners and sides, or type a side’s length. A double click on a side puts a corner
-        there.
+        Drag corners and sides, or type a side’s length. A double tap on a side puts a corner there.
       </p>
       <div className="grid grid-cols-2 gap-2">
         <button type="button" className="button" onClick={() => drawGround(table)}>
@@ -273,7 +275,7 @@ export function GroundPanel() {
           <div className="flex items-center gap-2 border-b border-graphite pb-1">
             <b>{keepOutName(index + 1)}</b>
             <input
-              className="min-w-0 flex-1 bg-transparent py-1 font-bold"
+              className="min-h-11 min-w-0 flex-1 bg-transparent py-1 font-bold"
               aria-label="Name of the keep-out"
               defaultValue={keepOut.name}
               key={keepOut.name}

@@ -106,6 +106,12 @@ export function UnitPanel() {
   );
 }
 
+/** Names that say no more than the size: the catalogue's, and those made from it. */
+const sizeNamed = (name: string): boolean =>
+  name.startsWith('Own ') ||
+  name.startsWith('Square ') ||
+  STARTER_CATALOGUE.some((item) => item.name === name);
+
 function usedIds({ bond }: LayoutDocument): Set<string> {
   if (bond.kind === 'custom') return new Set(bond.motif.map((entry) => entry.unit));
   return new Set(bond.kind === 'pinwheel' ? [bond.unit, bond.small] : [bond.unit]);
@@ -120,7 +126,8 @@ function UnitFields({
   heading: string;
   change: (part: Partial<Omit<Unit, 'id'>>) => void;
 }) {
-  const { display } = useShownFloor().document;
+  const { document } = useShownFloor();
+  const { display } = document;
   return (
     <section aria-label={heading} className="space-y-2">
       <h3 className="border-b border-graphite pb-1">{heading}</h3>
@@ -151,10 +158,13 @@ function UnitFields({
             display={display}
             refuse={sizeRefused}
             onLength={(mm) => {
-              const sized: Unit = { ...unit };
-              sized[side] = mm;
-              const name = `Own ${formatSize(sized.length, sized.width, display)}`;
-              change(side === 'thickness' ? { thickness: mm } : { [side]: mm, name });
+              const next = unitChanged(document, unit.id, { [side]: mm }).document.units.find(
+                (other) => other.id === unit.id,
+              )!;
+              const name = `Own ${formatSize(next.length, next.width, display)}`;
+              // A name that somebody gave stays; one that only said the size says the new one.
+              const renamed = side !== 'thickness' && sizeNamed(unit.name) ? { name } : {};
+              change({ [side]: mm, ...renamed });
             }}
           />
         ))}

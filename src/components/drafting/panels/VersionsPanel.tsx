@@ -7,6 +7,7 @@ import type {
   SetAsideSummary,
 } from '@/api-types/layouts';
 import type { VersionWithDrawing } from '@/api-types/versions';
+import { formatCount } from '@/paving/count';
 import { formatLength } from '@/paving/length';
 import { floorThumbnailSvg } from '@/sheets/floor-thumbnail';
 import { api } from '../../ui/api';
@@ -115,16 +116,16 @@ function Version({
           />
         </a>
         <div className="min-w-0 flex-1">
-          <a href={`/versions/${version.id}`} className="font-bold hover:text-line">
+          <a href={`/versions/${version.id}`} className="font-bold wrap-anywhere hover:text-line">
             {version.number}. {version.label}
           </a>
           <p>
-            {figures.wholeUnits} whole units, {gap}
+            {formatCount(figures.wholeUnits)} whole units, {gap}
           </p>
           <p className="text-sm text-slate">
             {STATE_WORDS[version.state]} · {version.createdBy.name}, {dayAndTime(version.createdAt)}
           </p>
-          {version.note && <p className="mt-1 text-sm">{version.note}</p>}
+          {version.note && <p className="mt-1 text-sm wrap-anywhere">{version.note}</p>}
         </div>
       </div>
       <div className="mt-1 flex flex-wrap gap-x-2">

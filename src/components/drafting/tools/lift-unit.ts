@@ -1,10 +1,70 @@
-import type { Address } from '@/paving/layout-document';
-import { unitAt } from '@/paving/laying';
+import type { Address, LayoutDocument } from '@/paving/layout-document';
+import type { Point } from '@/geometry/point';
+import { unitAt, type Laying, type UnitSet } from '@/paving/laying';
 import { floorOf } from '../floor';
 import type { TableStore } from '../table-store';
 import { CLICK_SLACK_PX, screenDistance, type TablePointer, type Tool } from './tool';
 
 const same = (a: Address, b: Address) => a.every((part, n) => part === b[n]);
+
+interface Standing {
+  readonly address: Address;
+  readonly at: Point;
+}
+
+/** The units that can be lifted or laid back, with their places. */
+function standing({ laid, lifted }: Laying): Standing[] {
+  const of = (set: UnitSet): Standing[] =>
+    Array.from({ length: set.count }, (_, n) => ({
+      address: [set.i[n], set.j[n], set.k[n]],
+      at: [set.x[n], set.y[n]],
+    }));
+  return [...of(laid), ...of(lifted)];
+}
+
+/** Chooses the nearest unit in a direction from the one chosen; the first time, the one nearest the floor's middle. */
+export function unitChosen(table: TableStore, towards: Point): void {
+  const { document, unit, camera, set } = table.getState();
+  const { laying } = floorOf(document);
+  if (!laying || !camera) return;
+  const units = standing(laying);
+  const now = unit && units.find((other) => same(other.address, unit));
+  const from = now?.at ?? camera.centre;
+  let best: { unit: Standing; cost: number } | null = null;
+  for (const other of units) {
+    const [dx, dy] = [other.at[0] - from[0], other.at[1] - from[1]];
+    const along = dx * towards[0] + dy * towards[1];
+    const across = Math.abs(dx * towards[1]) + Math.abs(dy * towards[0]);
+    if (now && along <= 1e-6) continue;
+    // Straight on before aside: a unit off the line counts as twice as far off it.
+    const cost = now ? along + 2 * across : Math.hypot(dx, dy);
+    if (!best || cost < best.cost) best = { unit: other, cost };
+  }
+  if (best) set({ unit: best.unit.address });
+}
+
+/** Lifts the unit chosen with the keys, or lays it back. */
+export function chosenUnitToggled(table: TableStore): void {
+  const { unit, document } = table.getState();
+  if (!unit) return unitChosen(table, [0, 0]);
+  toggled(table, unit, document.lifted.some((a) => same(a, unit)) ? 'lifted' : 'laid');
+}
+
+function toggled(table: TableStore, address: Address, status: 'laid' | 'lifted'): void {
+  const { edit, set } = table.getState();
+  const change = (now: LayoutDocument): LayoutDocument => ({
+    ...now,
+    lifted:
+      status === 'laid'
+        ? [...now.lifted, address]
+        : now.lifted.filter((other) => !same(other, address)),
+  });
+  edit(change);
+  set({
+    said:
+      status === 'laid' ? 'Unit lifted: its place is filled with aggregate.' : 'Unit laid back.',
+  });
+}
 
 /** Takes a laid unit out, or lays a lifted one back, by a click. */
 export function createLiftUnit(): Tool {
@@ -28,15 +88,12 @@ export function createLiftUnit(): Tool {
       from = null;
       if (!start || screenDistance(start.screen, pointer.screen) >= CLICK_SLACK_PX) return;
       const unit = unitUnder(table, pointer);
-      const { document, settle, set } = table.getState();
       if (!unit) return;
-      if (unit.status === 'laid') {
-        settle({ ...document, lifted: [...document.lifted, unit.address] });
-        set({ said: 'Unit lifted: its place is filled with aggregate.' });
-      } else if (unit.status === 'lifted') {
-        settle({ ...document, lifted: document.lifted.filter((a) => !same(a, unit.address)) });
-        set({ said: 'Unit laid back.' });
-      } else set({ said: 'That unit is left out: it would not lie whole inside the edge.' });
+      if (unit.status === 'leftOut')
+        table
+          .getState()
+          .set({ said: 'That unit is left out: it would not lie whole inside the edge.' });
+      else toggled(table, unit.address, unit.status);
     },
     hover(table, pointer) {
       over = pointer ? (unitUnder(table, pointer)?.status ?? null) : null;
