@@ -1,4 +1,4 @@
-import { and, asc, eq } from 'drizzle-orm';
+import { and, asc, desc, eq, isNull } from 'drizzle-orm';
 import type { PersonName, Role } from '@/api-types/people';
 import { firms, memberships, people, projectPeople, projects } from '@/db/schema';
 import { recordDeed } from './audit-record';
@@ -138,4 +138,21 @@ export const removeFromProject = async (
     });
   });
   return done({ people: await onProject(db, firmId, projectId) });
+};
+
+/** How many projects a form offers to choose from: those last worked on. */
+const OFFERED = 200;
+
+/** Current projects by name, for inviting somebody to one. */
+export const projectsToInviteTo = async (
+  db: Db,
+  actor: Actor,
+): Promise<readonly { readonly id: string; readonly name: string }[]> => {
+  const rows = await db
+    .select({ id: projects.id, name: projects.name })
+    .from(projects)
+    .where(and(projectSeen(actor), isNull(projects.archivedAt)))
+    .orderBy(desc(projects.updatedAt), desc(projects.id))
+    .limit(OFFERED);
+  return rows.sort((a, b) => a.name.localeCompare(b.name, 'en-GB'));
 };
