@@ -8,8 +8,10 @@ const guide = defineCollection({
     title: z.string(),
     summary: z.string(),
     order: z.number(),
+    /** Which piece of work it belongs to. */
+    part: z.enum(['draft', 'agree']).default('draft'),
     /** Which of the program's own drawings goes with it; see components/guide. */
-    picture: z.enum(['ground', 'bonds', 'places', 'gaps', 'versions', 'sheet']),
+    picture: z.enum(['ground', 'bonds', 'places', 'gaps', 'versions', 'sheet', 'overlay']),
   }),
 });
 

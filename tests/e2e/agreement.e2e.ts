@@ -2,7 +2,7 @@ import { createHash } from 'node:crypto';
 import AxeBuilder from '@axe-core/playwright';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, expect, it } from 'vitest';
-import { launch, openPage, signIn } from './browser';
+import { goToStep, launch, openPage, signIn } from './browser';
 
 let browser: Browser;
 beforeAll(async () => {
@@ -249,6 +249,7 @@ it('shows at the table who else is changing the draft', async () => {
   }
   await designer.page.getByTestId('presence').filter({ hasText: 'Tamsin Okelby' }).waitFor();
   await owner.page.getByTestId('presence').filter({ hasText: 'has this draft open' }).waitFor();
+  await goToStep(designer.page, 'Fit');
   await designer.page.getByTestId('floor').focus();
   await designer.page.keyboard.press('ArrowRight');
   await owner.page

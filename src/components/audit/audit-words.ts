@@ -35,7 +35,7 @@ const ID = /^[a-z0-9]{24}$/;
 export function detailText(detail: AuditEntry['detail']): string {
   return Object.entries(detail)
     .filter(
-      ([name, value]) =>
+      ([, value]) =>
         !ID.test(String(value)) && value !== '' && value !== null && typeof value !== 'object',
     )
     .map(([name, value]) => `${name.replace(/([A-Z])/g, ' $1').toLowerCase()} ${String(value)}`)

@@ -66,9 +66,9 @@ export function differenceSentence(
     return `Every unit of ${b.name} lies where it lies in ${a.name}.`;
   const parts: string[] = [];
   if (unitsUsed(a.document) !== unitsUsed(b.document))
-    parts.push(`takes ${unitsUsed(b.document)} instead of ${unitsUsed(a.document)} units`);
+    parts.push(`takes units of ${unitsUsed(b.document)} instead of ${unitsUsed(a.document)}`);
   if (a.document.bond.kind !== b.document.bond.kind)
-    parts.push(`lays them in ${bondWords(b.document)} instead of ${bondWords(a.document)}`);
+    parts.push(`changes the bond from ${bondWords(a.document)} to ${bondWords(b.document)}`);
   const more = figures.wholeUnits.change ?? 0;
   parts.push(
     more === 0

@@ -39,17 +39,15 @@ function Threads({ threads }: { threads: Unread['threads'] }) {
       {threads.map((thread) => (
         <li key={thread.threadId} className="py-1">
           <a
-            className="block hover:text-line"
+            className="line-clamp-1 hover:text-line"
             href={`/versions/${thread.versionId}?thread=${thread.threadId}`}
           >
-            <span className="line-clamp-1">
-              <strong>{thread.latest.person.name}</strong>: {thread.latest.body}
-            </span>
-            <span className="text-sm text-slate">
-              {thread.projectName}, version {thread.versionNumber} of {thread.layoutName},{' '}
-              <Moment iso={thread.latest.at} />
-            </span>
+            <strong>{thread.latest.person.name}</strong>: {thread.latest.body}
           </a>
+          <p className="text-sm text-slate">
+            {thread.projectName}, version {thread.versionNumber} of {thread.layoutName},{' '}
+            <Moment iso={thread.latest.at} />
+          </p>
         </li>
       ))}
     </ul>
