@@ -1,3 +1,4 @@
+import { formatCount } from '@/paving/count';
 import { documentEdgeName } from '@/paving/edge-names';
 import type { FitChoice } from '@/paving/fit/fit';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
@@ -12,7 +13,7 @@ export function placementTaken(
   choice: Pick<FitChoice, 'placement' | 'wholeUnits'>,
 ): void {
   table.getState().edit((now) => ({ ...now, placement: choice.placement }));
-  table.getState().set({ said: `${choice.wholeUnits} whole units from this start.` });
+  table.getState().set({ said: `${formatCount(choice.wholeUnits)} whole units from this start.` });
 }
 
 /** Says what is proven of this floor, and takes the best start. */
@@ -44,10 +45,10 @@ export function BestStart({ fit }: { fit: FitService }) {
   return (
     <div className="space-y-2" data-testid="best-start">
       <p>
-        No start lays more than <b>{result.wholeUnits}</b> whole units at {under}.
+        No start lays more than <b>{formatCount(result.wholeUnits)}</b> whole units at {under}.
         {reached && ' This is it, with the most play that they can have.'}
         {!reached && laid === result.wholeUnits && ' This start lays as many, with less play.'}
-        {laid < result.wholeUnits && ` This start lays ${laid}.`}
+        {laid < result.wholeUnits && ` This start lays ${formatCount(laid)}.`}
       </p>
       {!reached && (
         <button

@@ -1,4 +1,5 @@
 import type { FitChoice } from '@/paving/fit/fit';
+import { formatCount } from '@/paving/count';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { formatLength } from '@/paving/length';
 import { floorThumbnailSvg } from '@/sheets/floor-thumbnail';
@@ -39,7 +40,7 @@ export function Choices({ choices, document, chosen, onChoice }: Props) {
               }}
             />
             <span className="flex-1">
-              <b>{choice.wholeUnits}</b> whole
+              <b>{formatCount(choice.wholeUnits)}</b> whole
             </span>
             <span className="text-slate">
               play ±

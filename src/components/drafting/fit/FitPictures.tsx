@@ -1,4 +1,5 @@
 import type { Point } from '@/geometry/point';
+import { formatCount } from '@/paving/count';
 import { formatLength } from '@/paving/length';
 import { placementSlid } from '@/paving/placement-edits';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
@@ -77,13 +78,13 @@ export function FitPictures({ fit }: { fit: FitService }) {
                 />
                 <span className="flex flex-col justify-between">
                   <span>
-                    <b className="text-graphite">{map.most}</b> whole
+                    <b className="text-graphite">{formatCount(map.most)}</b> whole
                   </span>
                   <span>
-                    <b className="text-line">{count ?? '–'}</b> here
+                    <b className="text-line">{count === null ? '–' : formatCount(count)}</b> here
                   </span>
                   <span>
-                    <b className="text-graphite">{map.least}</b> whole
+                    <b className="text-graphite">{formatCount(map.least)}</b> whole
                   </span>
                 </span>
               </div>
