@@ -16,7 +16,9 @@ guardForwardedFor(environment().trustProxy);
 
 // The start script does this for the built server.
 if (import.meta.env.MODE === 'development') {
-  void database().then((db) => startPosting(db, environment()));
+  database()
+    .then((db) => startPosting(db, environment()))
+    .catch((error: unknown) => logError('letters are not sent', error));
 }
 
 const identify = async (context: APIContext): Promise<void> => {
