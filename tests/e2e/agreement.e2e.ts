@@ -80,10 +80,14 @@ const canonical = (value: unknown): string =>
 const state = (page: Page, words: string) =>
   page.getByTestId('state').filter({ hasText: words }).waitFor();
 
+/** The page's scripts have taken over: a press before that does nothing. */
+const floorPainted = (page: Page) =>
+  page.locator('[data-testid=version-floor] canvas[data-painted=true]').waitFor();
+
 /** Presses the floor at a share of its width and height. */
 async function pressFloor(page: Page, across: number, down: number) {
   const floor = page.getByTestId('version-floor');
-  await floor.locator('canvas[data-painted=true]').waitFor();
+  await floorPainted(page);
   const box = (await floor.boundingBox())!;
   await floor.click({ position: { x: box.width * across, y: box.height * down } });
 }
@@ -120,6 +124,7 @@ it('takes designer and client from sharing to acceptance and issue, each seeing 
   await client.page.waitForURL(`**/versions/${first.id}`);
 
   // A comment pinned to a spot, with a mention taken from the list.
+  await floorPainted(client.page);
   await client.page.getByRole('button', { name: 'Pin a comment to a spot' }).click();
   await pressFloor(client.page, 0.4, 0.45);
   const writing = client.page.getByRole('combobox', { name: 'Comment' });

@@ -12,19 +12,31 @@ export type Fate = 'kept' | 'moved' | 'gone' | 'new';
 const OUTLINE_FROM_PX = 4;
 /** A shift shorter than this on the screen has no arrow. */
 const ARROW_FROM_PX = 7;
+/** Units in one path: what a browser takes to fill a path grows faster than what is in it. */
+const PATH_UNITS = 200;
 const TILE = 8;
 
 const tiles = new Map<string, HTMLCanvasElement>();
 
 /** Hatching of a fate: strokes for gone, plus signs for new, level lines for moved. */
-function hatching(ctx: CanvasRenderingContext2D, fate: Fate, colour: string, ratio: number) {
-  const key = `${fate} ${colour} ${ratio}`;
+function hatching(
+  ctx: CanvasRenderingContext2D,
+  fate: Fate,
+  colour: string,
+  ground: string | null,
+  ratio: number,
+) {
+  const key = `${fate} ${colour} ${ground} ${ratio}`;
   let tile = tiles.get(key);
   if (!tile) {
     tile = document.createElement('canvas');
     tile.width = tile.height = TILE * ratio;
     const into = tile.getContext('2d')!;
     into.scale(ratio, ratio);
+    if (ground) {
+      into.fillStyle = ground;
+      into.fillRect(0, 0, TILE, TILE);
+    }
     into.strokeStyle = colour;
     into.lineWidth = 1.2;
     into.beginPath();
@@ -84,18 +96,19 @@ const leastAcross = (laying: Laying) =>
     ),
   );
 
-/** Whether any unit of this fate was traced; those outside the window are left out. */
-function traceFate(
+/** Draws every unit of a fate, some at a time; those outside the window are left out. */
+function drawFate(
   { ctx, camera, size }: Picture,
   laying: Laying,
   fates: Uint8Array,
   fate: number,
+  draw: () => void,
   towards?: { laying: Laying; partner: Int32Array; share: number },
-): boolean {
+) {
   const { scale, centre } = camera;
   const halves = halvesOf(laying, scale);
   const { laid } = laying;
-  let any = false;
+  let inPath = 0;
   ctx.beginPath();
   for (let n = 0; n < laid.count; n++) {
     if (fates[n] !== fate) continue;
@@ -110,32 +123,38 @@ function traceFate(
     const y = size.height / 2 - (gy - centre[1]) * scale;
     if (x + half.reach < 0 || x - half.reach > size.width) continue;
     if (y + half.reach < 0 || y - half.reach > size.height) continue;
-    any = true;
     ctx.moveTo(x + half.ax + half.bx, y + half.ay + half.by);
     ctx.lineTo(x - half.ax + half.bx, y - half.ay + half.by);
     ctx.lineTo(x - half.ax - half.bx, y - half.ay - half.by);
     ctx.lineTo(x + half.ax - half.bx, y + half.ay - half.by);
     ctx.closePath();
+    if (++inPath < PATH_UNITS) continue;
+    draw();
+    ctx.beginPath();
+    inPath = 0;
   }
-  return any;
+  if (inPath > 0) draw();
 }
 
-function marked(picture: Picture, fate: Fate, outlined: boolean, ground: string | null) {
-  const { ctx, colours, pixelRatio } = picture;
-  if (ground) {
-    ctx.fillStyle = ground;
-    ctx.fill();
-  }
+/** Fills and strokes the units in the path by what became of them; `ground` is the units' own colour. */
+function fateBrush(
+  { ctx, colours, pixelRatio }: Picture,
+  fate: Fate,
+  outlined: boolean,
+  ground: string | null,
+): () => void {
   const colour = fateColour(fate, colours);
-  if (fate !== 'kept') {
-    ctx.fillStyle = hatching(ctx, fate, colour, pixelRatio);
+  const fill =
+    fate === 'kept' ? (ground ?? colour) : hatching(ctx, fate, colour, ground, pixelRatio);
+  const width = fate === 'kept' ? 0.6 : 1.6;
+  return () => {
+    ctx.fillStyle = fill;
     ctx.fill();
-  }
-  if (outlined || fate !== 'kept') {
+    if (!outlined) return;
     ctx.strokeStyle = colour;
-    ctx.lineWidth = fate === 'kept' ? 0.6 : outlined ? 1.6 : 0.7;
+    ctx.lineWidth = width;
     ctx.stroke();
-  }
+  };
 }
 
 /** Marks on one side's own picture what has no like on the other, and what lies elsewhere there. */
@@ -147,14 +166,24 @@ export function paintSideMarks(
 ) {
   const outlined = leastAcross(laying) * picture.camera.scale >= OUTLINE_FROM_PX;
   picture.ctx.save();
-  if (traceFate(picture, laying, fates, UNIT_FATE.single)) marked(picture, alone, outlined, null);
-  if (traceFate(picture, laying, fates, UNIT_FATE.moved)) marked(picture, 'moved', outlined, null);
+  const drawn = (fate: Fate, code: number) =>
+    drawFate(picture, laying, fates, code, fateBrush(picture, fate, outlined, null));
+  drawn(alone, UNIT_FATE.single);
+  drawn('moved', UNIT_FATE.moved);
   picture.ctx.restore();
 }
 
-function traceArrows({ ctx, camera, size }: Picture, a: Laying, b: Laying, matching: UnitMatching) {
+function drawArrows(
+  { ctx, camera, size, colours }: Picture,
+  a: Laying,
+  b: Laying,
+  matching: UnitMatching,
+) {
   const { scale, centre } = camera;
+  ctx.strokeStyle = colours.graphite;
+  ctx.lineWidth = 1.2;
   ctx.beginPath();
+  let inPath = 0;
   for (let n = 0; n < a.laid.count; n++) {
     if (matching.fateOfA[n] !== UNIT_FATE.moved) continue;
     const m = matching.partnerOfA[n];
@@ -172,7 +201,12 @@ function traceArrows({ ctx, camera, size }: Picture, a: Laying, b: Laying, match
     ctx.moveTo(x + dx - head * (ux + uy * 0.6), y + dy - head * (uy - ux * 0.6));
     ctx.lineTo(x + dx, y + dy);
     ctx.lineTo(x + dx - head * (ux - uy * 0.6), y + dy - head * (uy + ux * 0.6));
+    if (++inPath < PATH_UNITS) continue;
+    ctx.stroke();
+    ctx.beginPath();
+    inPath = 0;
   }
+  ctx.stroke();
 }
 
 /**
@@ -193,15 +227,22 @@ export function paintOverlaid(
   ctx.save();
   paintFloor(ctx, nearer, null, camera, size, colours);
 
-  if (traceFate(picture, a, matching.fateOfA, UNIT_FATE.kept))
-    marked(picture, 'kept', outlined, unitColour(share < 0.5 ? a : b));
-
+  const drawn = (
+    laying: Laying,
+    fates: Uint8Array,
+    fate: Fate,
+    code: number,
+    way?: { laying: Laying; partner: Int32Array; share: number },
+  ) => {
+    const brush = fateBrush(picture, fate, outlined, unitColour(laying));
+    if (ctx.globalAlpha > 0) drawFate(picture, laying, fates, code, brush, way);
+  };
+  if (share < 0.5) drawn(a, matching.fateOfA, 'kept', UNIT_FATE.kept);
+  else drawn(b, matching.fateOfB, 'kept', UNIT_FATE.kept);
   ctx.globalAlpha = Math.min(1, 2 * (1 - share));
-  if (ctx.globalAlpha > 0 && traceFate(picture, a, matching.fateOfA, UNIT_FATE.single))
-    marked(picture, 'gone', outlined, unitColour(a));
+  drawn(a, matching.fateOfA, 'gone', UNIT_FATE.single);
   ctx.globalAlpha = Math.min(1, 2 * share);
-  if (ctx.globalAlpha > 0 && traceFate(picture, b, matching.fateOfB, UNIT_FATE.single))
-    marked(picture, 'new', outlined, unitColour(b));
+  drawn(b, matching.fateOfB, 'new', UNIT_FATE.single);
   ctx.globalAlpha = 1;
 
   // A unit that was turned where it stands is shown as it lies on the nearer floor.
@@ -210,14 +251,8 @@ export function paintOverlaid(
       ? [a, matching.partnerOfA, matching.fateOfA, b]
       : [b, matching.partnerOfB, matching.fateOfB, a];
   const way = { laying: other, partner, share: share < 0.5 ? share : 1 - share };
-  if (traceFate(picture, own, fates, UNIT_FATE.moved, way))
-    marked(picture, 'moved', outlined, unitColour(own));
-  if (outlined && matching.moved > 0) {
-    traceArrows(picture, a, b, matching);
-    ctx.strokeStyle = colours.graphite;
-    ctx.lineWidth = 1.2;
-    ctx.stroke();
-  }
+  drawn(own, fates, 'moved', UNIT_FATE.moved, way);
+  if (outlined && matching.moved > 0) drawArrows(picture, a, b, matching);
   ctx.restore();
   if (!sameGround(a, b)) paintGroundLines(picture, (share < 0.5 ? b : a).document, [5, 4]);
   paintGroundLines(picture, nearer);

@@ -50,7 +50,7 @@ export function LayoutSection({ layout, versions: first, live, drafting, onSaid 
       <div className="grid gap-x-8 gap-y-4 md:grid-cols-[17rem_minmax(0,1fr)]">
         <a
           href={open}
-          className="flex min-h-44 items-center justify-center border border-stone-300 p-4 hover:border-line"
+          className="flex min-h-44 items-center self-start justify-center border border-stone-300 p-4 hover:border-line"
           aria-label={`Open ${layout.name}`}
         >
           <FloorDrawing document={layout.document} width={300} height={200} className="w-full" />

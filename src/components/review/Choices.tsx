@@ -50,9 +50,9 @@ export function Choices({
       <ul className="hairlines border-b border-stone-300">
         {shown.map((other) => (
           <li key={other.id} className="flex gap-3 py-3">
-            <a href={`/versions/${other.id}`} className="block w-24 shrink-0" tabIndex={-1}>
+            <span className="block w-24 shrink-0">
               <FloorDrawing document={other.document} width={96} height={72} />
-            </a>
+            </span>
             <div className="min-w-0">
               <a href={`/versions/${other.id}`} className="font-semibold hover:text-line">
                 {other.number}. {other.label}
