@@ -19,6 +19,17 @@ async function seriousFaults(page: Page) {
 const firstOf = async (page: Page, start: string) =>
   (await page.locator(`a[href^="${start}"]`).first().getAttribute('href'))!;
 
+/** Pages that anybody may open. */
+const OPEN = [
+  '/',
+  '/sign-in',
+  '/sign-up',
+  '/forgotten-password',
+  '/guide',
+  '/guide/best-start',
+  '/guide/keys',
+];
+
 it('has no serious accessibility fault and no console error on any page, day and dusk', async () => {
   const { page, complaints, context } = await openPage(browser);
   const found: Record<string, string[]> = {};
@@ -32,12 +43,16 @@ it('has no serious accessibility fault and no console error on any page, day and
       (window as never as { evenlayTheme: { set(t: string): void } }).evenlayTheme.set('day'),
     );
   };
-  for (const path of ['/', '/sign-in', '/sign-up', '/guide']) {
+  for (const path of OPEN) {
     await page.goto(path);
     await check(path);
   }
-  await signIn(page, 'designer@larkmoss.example');
+  await signIn(page, 'owner@larkmoss.example');
   await check('/projects');
+  for (const path of ['/people', '/audit', '/dev/mail']) {
+    await page.goto(path);
+    await check(path);
+  }
   const project = await page.getByRole('link', { name: /court/i }).first().getAttribute('href');
   await page.goto(project!);
   await check('/projects/[id]');
@@ -97,7 +112,7 @@ it.each([
     const wide = await page.evaluate(() => document.documentElement.scrollWidth);
     if (wide > width) over.push(`${name}: ${wide}`);
   };
-  for (const path of ['/', '/sign-in', '/sign-up', '/guide']) {
+  for (const path of OPEN) {
     await page.goto(path);
     await check(path);
   }
