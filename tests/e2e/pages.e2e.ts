@@ -62,7 +62,7 @@ it('has no serious accessibility fault and no console error on any page, day and
   await page.goto(version);
   await check('/versions/[id]');
   await page.goto(`${version.replace(/\/plan$/, '')}/plan`);
-  await page.waitForLoadState('networkidle');
+  await page.waitForTimeout(700);
   await check('/versions/[id]/plan');
   await page.goto(table);
   await tableReady(page);
@@ -127,7 +127,7 @@ it.each([
   const [table, version] = [await firstOf(page, '/layouts/'), await firstOf(page, '/versions/')];
   for (const path of [version, `${version.replace(/\/plan$/, '')}/plan`, '/account', table]) {
     await page.goto(path);
-    await page.waitForLoadState('networkidle');
+    await page.waitForTimeout(700);
     await check(path);
   }
   expect(over).toEqual([]);
