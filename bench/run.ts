@@ -3,6 +3,7 @@ import { comparison } from './comparison';
 import { growth } from './growth';
 import { layingAgainstClipping } from './laying-against-clipping';
 import type { Bench, Ratio } from './ratio';
+import { manyProjects } from './many-projects';
 import { panFrames } from './pan-frames';
 import { usualFloor } from './usual-floor';
 
@@ -17,6 +18,7 @@ const benches: readonly Bench[] = [
   growth,
   comparison,
   panFrames,
+  manyProjects,
 ];
 const baselineFile = new URL('./baseline.json', import.meta.url);
 

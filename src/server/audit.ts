@@ -1,4 +1,4 @@
-import { and, desc, eq, like } from 'drizzle-orm';
+import { and, desc, eq, inArray, like } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { AuditPage, auditQuerySchema } from '@/api-types/audit';
 import { auditEvents, people } from '@/db/schema';
@@ -14,9 +14,19 @@ export interface Doer {
   readonly personId: string | null;
 }
 
+const SUBJECT_TYPES = [
+  'firm',
+  'person',
+  'invitation',
+  'project',
+  'layout',
+  'version',
+  'thread',
+  'choice',
+] as const;
+
 export interface Subject {
-  readonly type:
-    'firm' | 'person' | 'invitation' | 'project' | 'layout' | 'version' | 'thread' | 'choice';
+  readonly type: (typeof SUBJECT_TYPES)[number];
   readonly id: string;
 }
 
@@ -72,7 +82,13 @@ export const readAudit = async (
       and(
         eq(auditEvents.firmId, actor.firmId),
         person === undefined ? undefined : eq(auditEvents.personId, person),
-        subject === undefined ? undefined : eq(auditEvents.subjectId, subject),
+        // An id is of one type only; all are named because the index begins with the type.
+        subject === undefined
+          ? undefined
+          : and(
+              inArray(auditEvents.subjectType, [...SUBJECT_TYPES]),
+              eq(auditEvents.subjectId, subject),
+            ),
         what === undefined
           ? undefined
           : what.includes('.')

@@ -15,7 +15,7 @@ import { projectSeen, versionSeen } from './visibility';
 
 const THREADS = 50;
 /** Comments looked through, newest first: who has more than this unread has not been here for a long while. */
-const LOOKED_THROUGH = 500;
+const LOOKED_THROUGH = 200;
 
 /**
  * Comments that the actor sees, by others, and has not read; newest first. The newest are taken first, from the actor's

@@ -166,7 +166,7 @@ export const newPostgresDatabase = async (): Promise<string> => {
   return `${inject('postgres')}/${name}`;
 };
 
-const openEmpty = async (): Promise<OpenDatabase> =>
+export const openEmpty = async (): Promise<OpenDatabase> =>
   inject('postgres')
     ? openDatabase({ databaseUrl: await newPostgresDatabase(), dataDir: '' })
     : openPglite(await PGlite.create({ loadDataDir: await template() }));
