@@ -17,6 +17,8 @@ export interface UnitCounts {
   readonly moved: number;
   readonly gone: number;
   readonly added: number;
+  /** How far the corner that moved furthest came, mm. */
+  readonly furthest: number;
 }
 
 const same = (p: unknown, q: unknown) => JSON.stringify(p) === JSON.stringify(q);
@@ -85,6 +87,8 @@ export function differenceSentence(
     parts.push(
       `keeps its nearest unit ${formatLength(Math.abs(gap), display)} ${gap > 0 ? 'further from' : 'closer to'} the edge`,
     );
+  if (parts.length === 1 && units.moved > 0)
+    parts.push(`has units lying up to ${formatLength(units.furthest, display)} elsewhere`);
   const start = same(a.document.ground, b.document.ground) ? '' : 'The ground is not the same. ';
   const than = more === 0 ? ` as ${a.name}` : ` than ${a.name}`;
   const said = parts.map((part) => (part.includes(' whole ') ? part + than : part));

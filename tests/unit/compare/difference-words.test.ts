@@ -59,6 +59,14 @@ describe('what is said of two floors', () => {
     expect(rows).toContainEqual(['Ground', '9.00 m²', '9.00 m²', '']);
   });
 
+  it('says how far a floor moved when nothing else is to be told', () => {
+    const roomy = { ...TEN_BY_TEN, ground: { perimeter: [[0, 0], [3100, 0], [3100, 3000], [0, 3000]], keepOuts: [] } }; // prettier-ignore
+    const moved = { ...roomy, placement: { origin: [190, 150], turn: 0 } };
+    expect(compared(roomy as never, moved as never).sentence).toBe(
+      'Version 2 has as many whole units as version 1 and has units lying up to 40 mm elsewhere.',
+    );
+  });
+
   it('names another unit and another bond, and another ground', () => {
     const halves: LayoutDocument = {
       ...TEN_BY_TEN,
