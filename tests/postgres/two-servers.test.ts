@@ -2,7 +2,15 @@ import { spawn, type ChildProcess } from 'node:child_process';
 import { asc } from 'drizzle-orm';
 import { afterEach, expect, inject, test } from 'vitest';
 import { openDatabase } from '@/db/client';
-import { drafts, layouts, outbox, setAsideDrafts, versions } from '@/db/schema';
+import {
+  drafts,
+  layouts,
+  outbox,
+  projectPeople,
+  setAsideDrafts,
+  versionEvents,
+  versions,
+} from '@/db/schema';
 import { useDatabase } from '@/server/database';
 import { newFirm, newMember, newProject } from '../api/firm';
 import { mailServer } from '../api/mail-servers';
@@ -15,7 +23,13 @@ afterEach(() => {
   for (const child of children.splice(0)) child.kill('SIGKILL');
 });
 
-type Line = { kind: string; origin?: [number, number]; subject?: string; number?: number };
+type Line = {
+  kind: string;
+  origin?: [number, number];
+  subject?: string;
+  number?: number;
+  version?: string;
+};
 
 const startServer = (databaseUrl: string, ...args: string[]) => {
   const child = spawn(
@@ -57,7 +71,7 @@ const startServer = (databaseUrl: string, ...args: string[]) => {
 const SAVES = 40;
 
 test(
-  'two servers on one database lose no save, give no number twice and send no letter twice',
+  'two servers on one database lose no save, give no number twice, accept once and send no letter twice',
   { timeout: 120_000 },
   async () => {
     expect(inject('postgres')).not.toBeNull();
@@ -66,13 +80,18 @@ test(
     useDatabase(opened);
     const owner = await newFirm();
     const designer = await newMember(owner.actor.firmId, 'designer');
-    const { layoutId } = await newProject(owner.visitor);
+    const client = await newMember(owner.actor.firmId, 'client');
+    const { layoutId, projectId } = await newProject(owner.visitor);
+    await opened.db
+      .insert(projectPeople)
+      .values({ firmId: owner.actor.firmId, projectId, personId: client.actor.personId });
     const server = await mailServer();
     const pair = [owner, designer].map(({ actor }, n) =>
       startServer(
         databaseUrl,
         layoutId,
         JSON.stringify(actor),
+        JSON.stringify(client.actor),
         String(n + 1),
         String(SAVES),
         server.url,
@@ -101,10 +120,27 @@ test(
     expect(kept.map(({ document }) => String(document.placement.origin)).sort()).toEqual(
       origins('version').sort(),
     );
+    // Every shared version was accepted once, though both servers were at it.
+    const events = await opened.db.select().from(versionEvents);
+    const acceptedIds = events.filter(({ kind }) => kind === 'accepted').map((e) => e.versionId);
+    expect(new Set(acceptedIds).size).toBe(acceptedIds.length);
+    expect([...acceptedIds].sort()).toEqual(
+      of('accepted')
+        .map(({ version }) => version)
+        .sort(),
+    );
+    expect(acceptedIds).toHaveLength(kept.length);
+    expect(of('accept refused').length).toBeGreaterThan(0);
     // Each letter came once, though both servers were sending.
     const posted = of('posted').map(({ subject }) => subject);
     expect(posted).toHaveLength(2 * SAVES);
-    expect(server.taken.map(({ subject }) => subject).sort()).toEqual(posted.sort());
+    const ofTest = server.taken
+      .map(({ subject }) => subject)
+      .filter((s) => s?.startsWith('Letter '));
+    expect(ofTest.sort()).toEqual(posted.sort());
+    const ids = server.taken.map(({ messageId }) => messageId);
+    expect(new Set(ids).size).toBe(ids.length);
+    expect(ids).toHaveLength((await opened.db.select().from(outbox)).length);
     expect((await opened.db.select().from(outbox)).every(({ sentAt }) => sentAt !== null)).toBe(
       true,
     );
