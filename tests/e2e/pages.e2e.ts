@@ -49,11 +49,11 @@ it('has no serious accessibility fault and no console error on any page, day and
   }
   await signIn(page, 'owner@larkmoss.example');
   await check('/projects');
+  const project = await page.getByRole('link', { name: /court/i }).first().getAttribute('href');
   for (const path of ['/people', '/audit', '/dev/mail']) {
     await page.goto(path);
     await check(path);
   }
-  const project = await page.getByRole('link', { name: /court/i }).first().getAttribute('href');
   await page.goto(project!);
   await check('/projects/[id]');
   const [table, version] = [await firstOf(page, '/layouts/'), await firstOf(page, '/versions/')];
