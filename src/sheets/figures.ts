@@ -31,9 +31,8 @@ export function lengthText(mm: number, display: Display, decimals = 0): string {
   return display === 'metric' ? `${figure}\u2009mm` : figure;
 }
 
-/** A count, its thousands parted: `65 721`. */
-export const countText = (count: number): string =>
-  String(count).replace(/\B(?=(\d{3})+$)/g, '\u2009');
+/** One way of printing counts, for screen and sheet. */
+export { formatCount as countText } from '@/paving/count';
 
 /** Least to greatest, as `11–26`, or one figure when they print alike. */
 export function rangeText(least: number, greatest: number, display: Display): string {

@@ -1,19 +1,24 @@
 import type { DrawCommand, FontWeight, PaperBox, PaperPoint, TextAnchor } from './drawing';
 import { PENS } from './drawing';
 import { INK } from './inks';
-import { LETTERING, textFitted, textLines, textWidth } from './text-measure';
+import { LETTERING, sheetText, textFitted, textLines, textWidth } from './text-measure';
 
 /** One row of the panel beside the plan: a height, and how to draw it with its top left corner at a point. */
 export interface PanelRow {
   readonly height: number;
-  /** The next row must stand in the same column. */
-  readonly keepsNext?: boolean;
+  /** The next row must stand in the same column, or should where that costs no further sheet. */
+  readonly keepsNext?: 'needed' | 'wished';
   readonly draw: (at: PaperPoint, width: number, frame: string) => readonly DrawCommand[];
 }
 
-/** Rows that no column's end may part. */
-export const keptTogether = (rows: readonly PanelRow[]): readonly PanelRow[] =>
-  rows.map((row, n) => (n < rows.length - 1 ? { ...row, keepsNext: true } : row));
+/** Rows that no column's end may part, or should not. */
+export const keptTogether = (
+  rows: readonly PanelRow[],
+  keepsNext: 'needed' | 'wished' = 'needed',
+): readonly PanelRow[] =>
+  rows.map((row, n) =>
+    n < rows.length - 1 ? { ...row, keepsNext: row.keepsNext ?? keepsNext } : row,
+  );
 
 export interface PanelColumn {
   readonly box: PaperBox;
@@ -30,24 +35,45 @@ export interface FlowedPanel {
 export const LINE_PITCH = 4.1;
 const HEADING_SPACE = 2.6;
 
-/** Fills columns from the top, one after another; rows that keep their next are not parted from it. */
+/**
+ * Fills columns from the top, one after another; rows that keep their next are not parted from it.
+ * Rows that only wish to are parted where all then finds room, and where a column is too low for them together.
+ */
 export function panelFlowed(
   rows: readonly PanelRow[],
   columns: readonly PanelColumn[],
 ): FlowedPanel {
+  const wished = columnsFilled(rows, columns, true);
+  if (wished.rest.length === 0) return wished;
+  const parted = columnsFilled(rows, columns, false);
+  return parted.rest.length === 0 ? parted : wished;
+}
+
+function columnsFilled(
+  rows: readonly PanelRow[],
+  columns: readonly PanelColumn[],
+  wishes: boolean,
+): FlowedPanel {
+  const highest = Math.max(...columns.map(({ box }) => box.bottom - box.top));
+  /** Index after the last row that stays with the row at `first`, and their height. */
+  const group = (first: number, wished: boolean): { end: number; height: number } => {
+    let end = first + 1;
+    let height = rows[first].height;
+    for (; end < rows.length; end += 1) {
+      const keeps = rows[end - 1].keepsNext;
+      if (!keeps || (keeps === 'wished' && !wished)) break;
+      height += rows[end].height;
+    }
+    return wished && height > highest ? group(first, false) : { end, height };
+  };
   const commands: DrawCommand[] = [];
   let next = 0;
   for (const { box, frame } of columns) {
     let y = box.top;
     while (next < rows.length) {
-      let last = next;
-      let height = rows[next].height;
-      while (rows[last].keepsNext && last + 1 < rows.length) {
-        last += 1;
-        height += rows[last].height;
-      }
+      const { end, height } = group(next, wishes);
       if (y + height > box.bottom) break;
-      for (; next <= last; next += 1) {
+      for (; next < end; next += 1) {
         commands.push(...rows[next].draw([box.left, y], box.right - box.left, frame));
         y += rows[next].height;
       }
@@ -74,7 +100,7 @@ export function headingRow(text: string, width: number): PanelRow {
   const fitted = textFitted(text, width, LETTERING.small, 700);
   return {
     height: LINE_PITCH + HEADING_SPACE + 0.3,
-    keepsNext: true,
+    keepsNext: 'needed',
     draw: ([x, y], rowWidth, frame) => [
       panelText([x, y + HEADING_SPACE + LETTERING.small], fitted, frame, { weight: 700 }),
       {
@@ -112,10 +138,11 @@ export function itemRow(text: string, width: number): PanelRow {
 /** A name at the left and its figure at the right; the name takes more lines when it must. */
 export function pairRow(
   name: string,
-  value: string,
+  figure: string,
   width: number,
   weight: FontWeight = 600,
 ): PanelRow {
+  const value = sheetText(figure);
   const valueWidth = textWidth(value, LETTERING.small, weight);
   const together = valueWidth <= width * 0.72;
   const names = textLines(name, together ? width - valueWidth - 2 : width, LETTERING.small);

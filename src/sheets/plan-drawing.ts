@@ -14,6 +14,7 @@ import type { LabelSpace, Segment } from './label-space';
 import { isInside, withLabels } from './label-space';
 import type { LabelPlace, PlacedLabels, WantedLabel } from './plan-labels';
 import { cornerLetters, labelPlaced, labelsPlaced, placesAlong, placesOff } from './plan-labels';
+import { liftedCommands } from './lifted-marks';
 import type { PlanFacts } from './plan-panel';
 import type { PlanView } from './plan-view';
 import { paperChords, paperFromGround } from './plan-view';
@@ -117,6 +118,7 @@ export function planDrawing(facts: PlanFacts, view: PlanView, frame: PaperBox): 
     layers: [
       { name: 'fill', commands: floor.fill },
       { name: 'units', commands: floor.units },
+      { name: 'lifted', commands: liftedCommands(laying, view) },
       { name: 'ground', commands: floor.outline },
       { name: 'keep-outs', commands: keepOuts.flatMap((ring) => crossCommands(ring.edges, view)) },
       { name: 'figures', commands: figures },

@@ -1,11 +1,13 @@
 import { formatArea } from '@/paving/area';
+import { formatCount } from '@/paving/count';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { MM_PER_FOOT, MM_PER_INCH } from '@/paving/length';
+import { smallFigure } from '@/paving/small-figure';
 import { floorCautions } from './cautions';
 import type { DrawCommand, PaperBox } from './drawing';
 import { PENS, boxRing } from './drawing';
 import { cornerName, edgeName, keepOutName } from '@/paving/edge-names';
-import { countText, figureText, lengthText, rangeText } from './figures';
+import { figureText, lengthText, rangeText } from './figures';
 import { INK, KEEP_OUT_COLOUR, inkMix } from './inks';
 import type { KeepOutPlace } from './keep-out-place';
 import type { PanelRow } from './panel';
@@ -24,7 +26,8 @@ import { setOutMark } from './plan-input';
 import { scaleBarRow } from './scale-bar';
 import { scaleName } from './scales';
 import type { StartPoint } from './start-point';
-import { LETTERING, sheetText, textFitted, textWidth } from './text-measure';
+import { liftedMarks } from './lifted-marks';
+import { LETTERING, textFitted, textWidth } from './text-measure';
 import { aggregateColour, firstTone, toneMark } from './unit-drawing';
 
 /** What the panel says, worked out once for every arrangement. */
@@ -62,8 +65,13 @@ export function planPanelRows(facts: PlanFacts, scale: number, width: number): r
     scaleBarRow(scale, display, width),
     ...edgeRows(input, width),
     ...keepOutRows(facts, width),
-    headingRow('Take care', width),
-    ...floorCautions(input.laying.document, input.report).map((text) => itemRow(text, width)),
+    ...keptTogether(
+      [
+        headingRow('Take care', width),
+        ...floorCautions(input.laying.document, input.report).map((text) => itemRow(text, width)),
+      ],
+      'wished',
+    ),
     ...noteRows(input.laying.document, width),
   ];
 }
@@ -95,7 +103,7 @@ function quantityRows({ laying, report }: PlanInput, width: number): readonly Pa
   const units = document.units.filter((unit) => (report.byUnit[unit.id] ?? 0) > 0);
   const thickness = units.length > 0 ? Math.min(...units.map((unit) => unit.thickness)) : 0;
   const deep = units.every((unit) => unit.thickness === thickness) && thickness > 0;
-  const pair = (name: string, value: string) => pairRow(name, sheetText(value), width);
+  const pair = (name: string, value: string) => pairRow(name, value, width);
   return [
     headingRow('Units and fill', width),
     ...units.map((unit) => {
@@ -112,13 +120,13 @@ function quantityRows({ laying, report }: PlanInput, width: number): readonly Pa
       const name = stated
         ? `${unit.name}, ${lengthText(unit.thickness, display, 1)} thick`
         : `${unit.name}, ${size}`;
-      return pairRow(name, countText(report.byUnit[unit.id]), width, 700);
+      return pairRow(name, formatCount(report.byUnit[unit.id]), width, 700);
     }),
     ...(units.length !== 1
-      ? [pairRow('Whole units in all', countText(report.wholeUnits), width, 700)]
+      ? [pairRow('Whole units in all', formatCount(report.wholeUnits), width, 700)]
       : []),
-    ...(report.lifted > 0 ? [pair('Lifted out by hand', countText(report.lifted))] : []),
-    pair('Left out, not drawn', countText(report.leftOut)),
+    ...(report.lifted > 0 ? [pair('Lifted out by hand', formatCount(report.lifted))] : []),
+    pair('Left out, not drawn', formatCount(report.leftOut)),
     pair('Bond', BOND_NAMES[document.bond.kind]),
     pair('Joint', lengthText(joint, display, 1)),
     pair('Ground', formatArea(report.groundArea, display)),
@@ -141,11 +149,14 @@ function quantityRows({ laying, report }: PlanInput, width: number): readonly Pa
   ];
 }
 
+/** A smaller volume keeps three significant figures, m³. */
+const SMALL_VOLUME = 0.1;
+
 function volumeText(cubicMetres: number, display: 'metric' | 'imperial'): string {
   const CUBIC_FEET = (1000 / MM_PER_FOOT) ** 3;
   return display === 'metric'
-    ? `${cubicMetres.toFixed(2)}\u2009m³`
-    : `${(cubicMetres * CUBIC_FEET).toFixed(1)}\u2009ft³`;
+    ? `${smallFigure(cubicMetres, 2, SMALL_VOLUME)}\u2009m³`
+    : `${smallFigure(cubicMetres * CUBIC_FEET, 1, SMALL_VOLUME * CUBIC_FEET)}\u2009ft³`;
 }
 
 function startRows({ input, start }: PlanFacts, width: number): readonly PanelRow[] {
@@ -165,8 +176,8 @@ function startRows({ input, start }: PlanFacts, width: number): readonly PanelRo
   const turn =
     angle === 0
       ? `Rows run along ${edge}.`
-      : angle === 180
-        ? `Rows run along ${edge}, turned right round.`
+      : angle === 90
+        ? `Rows run square to ${edge}.`
         : `Rows turn ${angle}° ${start.turnDeg > 0 ? 'anticlockwise' : 'clockwise'} from ${edge}.`;
   return [
     headingRow('Start', width),
@@ -229,6 +240,9 @@ function keyRows({ input, asCourses }: PlanFacts, width: number): readonly Panel
     ...(laying.ground.rings.length > 1
       ? [sampleRow(swatch(KEEP_OUT_COLOUR, crossed), 'Keep-out', width)]
       : []),
+    ...(laying.lifted.count > 0
+      ? [sampleRow(liftedSample(colour), 'Lifted out by hand: leave open', width)]
+      : []),
   ];
 }
 
@@ -240,6 +254,13 @@ function crossed(box: PaperBox): readonly DrawCommand[] {
     { kind: 'line', from: [box.left, box.bottom], to: [box.right, box.top], stroke },
   ];
 }
+
+const liftedSample =
+  (fill: string) =>
+  (box: PaperBox): readonly DrawCommand[] => [
+    { kind: 'path', rings: [boxRing(box)], fill },
+    ...liftedMarks([boxRing(box).points]),
+  ];
 
 function edgeRows({ laying, report }: PlanInput, width: number): readonly PanelRow[] {
   const { display } = laying.document;
@@ -261,7 +282,7 @@ function edgeRows({ laying, report }: PlanInput, width: number): readonly PanelR
   const unit = display === 'metric' ? ', in mm' : '';
   return [
     headingRow(`Edges${unit}`, width),
-    { ...tableRow(['Edge', 'Length', 'Gap to units'], width), keepsNext: true },
+    { ...tableRow(['Edge', 'Length', 'Gap to units'], width), keepsNext: 'needed' },
     ...rows,
   ];
 }

@@ -3,7 +3,7 @@ import type { DrawCommand, Drawing, PaperBox } from './drawing';
 import { PENS, boxHeight, boxInset, boxRing, boxWidth } from './drawing';
 import { INK, PAPER } from './inks';
 import { keepOutPlace } from './keep-out-place';
-import type { PanelColumn } from './panel';
+import type { FlowedPanel, PanelColumn, PanelRow } from './panel';
 import { panelFlowed } from './panel';
 import type { Orientation, Paper, PaperName } from './paper';
 import { paperOf } from './paper';
@@ -34,8 +34,12 @@ const DIMENSION_MARGIN = 15;
 const LONG_NOTES = 400;
 const COLUMN_WIDTH = 66;
 const COLUMN_INSET = 3;
-/** A portrait sheet's band of columns may take at most this share of the frame. */
+/** A portrait sheet's band of columns may take at most this share of the frame where it holds all. */
 const GREATEST_BAND = 0.55;
+/** The lowest band of columns, mm. */
+const LEAST_BAND = 40;
+/** A plan that fills less of its paper than this, along both sides, is worth a further sheet for its tables if that enlarges it. */
+const WELL_FILLED = 0.5;
 /** A smaller unit on paper than this, mm, asks for a larger sheet where one would be to a larger scale. */
 const READABLE_UNIT = 3;
 
@@ -47,8 +51,8 @@ interface Arrangement {
   readonly columns: readonly PanelColumn[];
   /** Lines between the parts. */
   readonly rules: readonly DrawCommand[];
-  /** The panel spills to a second sheet. */
-  readonly spills: boolean;
+  /** All in all, with those that the panel goes on to. */
+  readonly sheets: number;
 }
 
 /**
@@ -89,20 +93,24 @@ function arrangementChosen(facts: PlanFacts, bounds: GroundBounds): Arrangement 
   if (paper !== 'auto') return best(paper);
   const [small, large] = family.map(best);
   const readable = leastUnitSide(facts.input.laying) / small.scale >= READABLE_UNIT;
-  const enough = !small.spills && (readable || large.scale >= small.scale);
+  // Tables on a second small sheet are better than a large sheet that shows the plan no larger.
+  const enough = large.scale >= small.scale || (readable && small.sheets === 1);
   return enough ? small : large;
 }
 
 const leastUnitSide = (laying: Laying): number =>
   Math.min(...laying.motif.map(({ unit }) => Math.min(unit.length, unit.width)));
 
-/** Of a paper's arrangements: none that spills where another does not; then the largest scale; then lying as the ground does; then the roomiest. */
+/**
+ * Of a paper's arrangements: the fewest sheets, or one more where the plan would be small and gains by it; then the
+ * largest scale; then lying as the ground does; then the roomiest.
+ */
 function bestArrangement(facts: PlanFacts, bounds: GroundBounds, name: PaperName): Arrangement {
   const orientations: readonly Orientation[] = ['landscape', 'portrait'];
   const candidates = orientations.flatMap((orientation) => {
     const paper = paperOf(name, orientation);
     return orientation === 'portrait'
-      ? [portraitArrangement(facts, bounds, paper)]
+      ? portraitArrangements(facts, bounds, paper)
       : [1, 2].flatMap((columns) => landscapeArrangement(facts, bounds, paper, columns));
   });
   const room = ({ drawing }: Arrangement) => {
@@ -112,13 +120,17 @@ function bestArrangement(facts: PlanFacts, bounds: GroundBounds, name: PaperName
   const [across, up] = boundsSize(bounds);
   const lying = across > up * 1.15 ? 'landscape' : across * 1.15 < up ? 'portrait' : null;
   const against = ({ paper }: Arrangement) => Number(lying !== null && paper.orientation !== lying);
-  return [...candidates].sort(
-    (p, q) =>
-      Number(p.spills) - Number(q.spills) ||
-      p.scale - q.scale ||
-      against(p) - against(q) ||
-      room(q) - room(p),
-  )[0];
+  const ordered = [...candidates].sort(
+    (p, q) => p.scale - q.scale || against(p) - against(q) || room(q) - room(p),
+  );
+  const within = (most: number) => ordered.filter(({ sheets }) => sheets <= most);
+  const fewest = Math.min(...ordered.map(({ sheets }) => sheets));
+  const [chosen] = within(fewest);
+  const { frame } = chosen.paper;
+  const filled = Math.max(across / boxWidth(frame), up / boxHeight(frame)) / chosen.scale;
+  if (filled >= WELL_FILLED) return chosen;
+  const [larger] = within(fewest + 1);
+  return larger.scale < chosen.scale ? larger : chosen;
 }
 
 const boundsSize = ({ least, greatest }: GroundBounds): readonly [number, number] => [
@@ -180,13 +192,17 @@ function landscapeArrangement(
         rule([split, frame.top], [split, frame.bottom]),
         rule([frame.left, titleTop], [split, titleTop]),
       ],
-      spills: panelFlowed(rows, columns).rest.length > 0,
+      sheets: panelsFlowed(rows, columns, paper).length,
     },
   ];
 }
 
-/** A band of columns over a title strip across the foot. */
-function portraitArrangement(facts: PlanFacts, bounds: GroundBounds, paper: Paper): Arrangement {
+/** A band of columns over a title strip across the foot: high enough for all, and as high as the largest plan leaves. */
+function portraitArrangements(
+  facts: PlanFacts,
+  bounds: GroundBounds,
+  paper: Paper,
+): readonly Arrangement[] {
   const { frame } = paper;
   const count = Math.floor(boxWidth(frame) / 58);
   const width = boxWidth(frame) / count;
@@ -208,23 +224,47 @@ function portraitArrangement(facts: PlanFacts, bounds: GroundBounds, paper: Pape
   // The rows are as high at one scale as at another.
   const rows = rowsAt(100);
   const greatest = boxHeight(frame) * GREATEST_BAND;
-  let band = 40;
-  while (band < greatest && panelFlowed(rows, columnsFrom(titleTop - band)).rest.length > 0)
-    band += 2;
-  const columns = columnsFrom(titleTop - band);
-  const drawing = { ...frame, bottom: titleTop - band };
-  return {
-    paper,
-    scale: scaleIn(bounds, drawing),
-    drawing,
-    title: { ...frame, top: titleTop },
-    columns,
-    rules: [
-      rule([frame.left, titleTop - band], [frame.right, titleTop - band]),
-      rule([frame.left, titleTop], [frame.right, titleTop]),
-    ],
-    spills: panelFlowed(rows, columns).rest.length > 0,
-  };
+  let holding = LEAST_BAND;
+  while (holding < greatest && panelFlowed(rows, columnsFrom(titleTop - holding)).rest.length > 0)
+    holding += 2;
+  const drawingOver = (band: number): PaperBox => ({ ...frame, bottom: titleTop - band });
+  const largest = scaleIn(bounds, drawingOver(LEAST_BAND));
+  const needed = boundsSize(bounds)[1] / largest + 2 * DIMENSION_MARGIN;
+  const leaving = Math.max(LEAST_BAND, Math.floor(titleTop - frame.top - needed));
+  return [holding, leaving].map((band) => {
+    const columns = columnsFrom(titleTop - band);
+    const drawing = drawingOver(band);
+    return {
+      paper,
+      scale: scaleIn(bounds, drawing),
+      drawing,
+      title: { ...frame, top: titleTop },
+      columns,
+      rules: [
+        rule([frame.left, titleTop - band], [frame.right, titleTop - band]),
+        rule([frame.left, titleTop], [frame.right, titleTop]),
+      ],
+      sheets: panelsFlowed(rows, columns, paper).length,
+    };
+  });
+}
+
+/** The panel on the first sheet's columns, and on as many further sheets as it takes. */
+function panelsFlowed(
+  rows: readonly PanelRow[],
+  columns: readonly PanelColumn[],
+  paper: Paper,
+): readonly FlowedPanel[] {
+  const further = furtherColumns(paper, boxWidth(columns[0].box));
+  const panels = [panelFlowed(rows, columns)];
+  for (let { rest } = panels[0]; rest.length > 0;) {
+    const next = panelFlowed(rest, further);
+    if (next.rest.length === rest.length)
+      throw new Error('A row of the panel is higher than a whole sheet.');
+    panels.push(next);
+    rest = next.rest;
+  }
+  return panels;
 }
 
 function sheetsDrawn(
@@ -237,14 +277,8 @@ function sheetsDrawn(
   const plan = planDrawing(facts, viewCentred(bounds, scale, drawing), inside);
   const columnWidth = boxWidth(columns[0].box);
   const rows = planPanelRows({ ...facts, asCourses: plan.asCourses }, scale, columnWidth);
-  const panels = [panelFlowed(rows, columns)];
+  const panels = panelsFlowed(rows, columns, paper);
   const further = furtherColumns(paper, columnWidth);
-  while (panels[panels.length - 1].rest.length > 0) {
-    const next = panelFlowed(panels[panels.length - 1].rest, further);
-    if (next.rest.length === panels[panels.length - 1].rest.length)
-      throw new Error('A row of the panel is higher than a whole sheet.');
-    panels.push(next);
-  }
   return panels.map((panel, n): Sheet => {
     const title =
       n === 0

@@ -1,3 +1,5 @@
+import { formatCount } from '@/paving/count';
+
 /** Reduction scales recommended by ISO 5455, as denominators: 1:1, 1:2, 1:5, 1:10 … */
 export const PREFERRED_SCALES: readonly number[] = [1, 10, 100, 1000, 10_000].flatMap((power) =>
   [1, 2, 5].map((step) => step * power),
@@ -14,5 +16,4 @@ export function scaleFitting(
   return PREFERRED_SCALES.find(fits) ?? PREFERRED_SCALES[PREFERRED_SCALES.length - 1];
 }
 
-export const scaleName = (denominator: number): string =>
-  `1:${String(denominator).replace(/\B(?=(\d{3})+$)/g, '\u2009')}`;
+export const scaleName = (denominator: number): string => `1:${formatCount(denominator)}`;

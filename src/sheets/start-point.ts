@@ -12,7 +12,7 @@ export interface StartPoint {
   readonly along: number;
   /** Square to AB, to the inside, mm. */
   readonly square: number;
-  /** Turn of the pattern from AB, degrees anticlockwise, more than −180 and at most 180. */
+  /** Turn of the rows from AB, degrees anticlockwise, more than −90 and at most 90: a row runs both ways. */
   readonly turnDeg: number;
   readonly chord: boolean;
 }
@@ -51,7 +51,7 @@ export function startPoint(laying: Laying): StartPoint | null {
     corner: best.corner,
     along: dx * u[0] + dy * u[1],
     square: dy * u[0] - dx * u[1],
-    turnDeg: 180 - ((((180 - turn) % 360) + 360) % 360),
+    turnDeg: 90 - ((((90 - turn) % 180) + 180) % 180),
     chord: first.bulge !== 0,
   };
 }

@@ -37,21 +37,35 @@ const STANDS_FOR: Readonly<Record<string, string>> = {
   '✓': 'yes',
 };
 
+const LACKED = '?';
+
+/** What is drawn for a character: itself, what stands for it, or its letter without the accent; null where the font has none of these. */
+function drawnFor(character: string): string | null {
+  const has = (text: string) =>
+    text !== '' && [...text].every((part) => ADVANCES[400].has(part.codePointAt(0)!));
+  const drawn = STANDS_FOR[character] ?? character;
+  if (has(drawn)) return drawn;
+  const base = character.normalize('NFD').replace(/\p{M}/gu, '');
+  return has(base) ? base : null;
+}
+
+const sheetCharacters = (text: string): readonly string[] => [
+  ...text.normalize('NFC').replace(/\s*[\r\n\t]+\s*/g, ' '),
+];
+
 /**
  * Text with characters of the font only: accents it lacks are dropped, anything else it lacks
  * becomes `?`, for a PDF would leave such characters out without a word.
  */
-export function sheetText(text: string): string {
-  const set = ADVANCES[400];
-  return [...text.normalize('NFC').replace(/\s*[\r\n\t]+\s*/g, ' ')]
-    .map((character) => {
-      const drawn = STANDS_FOR[character] ?? character;
-      if ([...drawn].every((part) => set.has(part.codePointAt(0)!))) return drawn;
-      const base = character.normalize('NFD').replace(/\p{M}/gu, '');
-      return base !== '' && [...base].every((part) => set.has(part.codePointAt(0)!)) ? base : '?';
-    })
+export const sheetText = (text: string): string =>
+  sheetCharacters(text)
+    .map((character) => drawnFor(character) ?? LACKED)
     .join('');
-}
+
+/** The characters of a text that print as `?`, each once. */
+export const charactersLacked = (text: string): readonly string[] => [
+  ...new Set(sheetCharacters(text).filter((character) => drawnFor(character) === null)),
+];
 
 /** Width of a line of text, mm, by the font's own advance widths; `height` is that of a capital. */
 export function textWidth(text: string, height: number, weight: FontWeight = 400): number {

@@ -1,6 +1,7 @@
 import './sheet-fonts.css';
 import { useEffect, useMemo, useRef, useState } from 'react';
 import type { VersionDetail } from '@/api-types/versions';
+import { formatCount } from '@/paving/count';
 import type { Drawing } from '@/sheets/drawing';
 import { boxRing } from '@/sheets/drawing';
 import { PAPER } from '@/sheets/inks';
@@ -160,7 +161,7 @@ function Floor({
       <div
         ref={box}
         role="img"
-        aria-label={`Version ${version.number}, ${version.label}: ${version.report.wholeUnits} whole units on the ground, figured. Arrow keys pan; plus, minus and 0 zoom.`}
+        aria-label={`Version ${version.number}, ${version.label}: ${formatCount(version.report.wholeUnits)} whole units on the ground, figured. Arrow keys pan; plus, minus and 0 zoom.`}
         tabIndex={0}
         className="h-full w-full cursor-grab touch-none select-none active:cursor-grabbing"
         onPointerDown={(event) => {
@@ -174,6 +175,7 @@ function Floor({
         onKeyDown={onKey}
         dangerouslySetInnerHTML={{ __html: svg }}
       />
+      {version.report.lifted > 0 && <LiftedKey />}
       <div className="absolute right-2 bottom-2 flex border border-graphite bg-stone-50">
         <ZoomButton
           name="Zoom out"
@@ -187,13 +189,30 @@ function Floor({
   );
 }
 
+function LiftedKey() {
+  return (
+    <p className="pointer-events-none absolute top-2 left-2 flex items-center gap-2 bg-stone-50 px-2 py-1 text-sm">
+      <svg viewBox="0 0 18 18" className="size-4.5 shrink-0" aria-hidden="true">
+        <path d="M1 1L17 17M17 1L1 17" className="fill-none stroke-graphite" strokeWidth="0.8" />
+        <path
+          d="M1 1H17V17H1Z"
+          className="fill-none stroke-graphite"
+          strokeWidth="1.2"
+          strokeDasharray="4 2.4"
+        />
+      </svg>
+      Lifted out by hand: leave open
+    </p>
+  );
+}
+
 function ZoomButton({ name, sign, act }: { name: string; sign: string; act: () => void }) {
   return (
     <button
       type="button"
       aria-label={name}
       onClick={act}
-      className="min-h-11 min-w-11 px-2 font-semibold not-first:border-l not-first:border-stone-300 hover:bg-stone-100"
+      className="min-h-[44px] min-w-[44px] px-2 font-semibold not-first:border-l not-first:border-stone-300 hover:bg-stone-100"
     >
       {sign}
     </button>

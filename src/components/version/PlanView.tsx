@@ -1,13 +1,17 @@
 import './sheet-fonts.css';
 import { useMemo, useState } from 'react';
 import type { VersionDetail } from '@/api-types/versions';
+import { letteringGaps } from '@/sheets/lettering-gaps';
 import type { PaperName } from '@/sheets/paper';
 import { PAPER_NAMES } from '@/sheets/paper';
 import type { Sheet } from '@/sheets/plan-sheet';
 import { planSheets } from '@/sheets/plan-sheet';
 import { scaleName } from '@/sheets/scales';
 import { drawingSvg } from '@/sheets/svg-sink';
-import { planFileName, versionPlanInput } from './version-plan';
+import { Moment } from '../ui/Moment';
+import { LetteringNote } from './LetteringNote';
+import { planFileName } from './plan-file-name';
+import { versionPlanInput } from './version-plan';
 
 type PaperChoice = PaperName | 'auto';
 type Making =
@@ -19,7 +23,8 @@ export default function PlanView({ version }: { version: VersionDetail }) {
   const [trueSize, setTrueSize] = useState(false);
   const [making, setMaking] = useState<Making>({ kind: 'idle' });
   const [said, setSaid] = useState('');
-  const sheets = useMemo(() => planSheets(versionPlanInput(version, choice)), [version, choice]);
+  const input = useMemo(() => versionPlanInput(version, choice), [version, choice]);
+  const sheets = useMemo(() => planSheets(input), [input]);
   const [{ paper, scale }] = sheets;
   const title = `${version.projectName}, ${version.layoutName}, version ${version.number}`;
 
@@ -54,7 +59,7 @@ export default function PlanView({ version }: { version: VersionDetail }) {
           </label>
           <select
             id="paper"
-            className="field w-60"
+            className="field w-60 max-md:min-h-[44px]"
             value={choice}
             onChange={(event) => setChoice(event.target.value as PaperChoice)}
           >
@@ -69,31 +74,38 @@ export default function PlanView({ version }: { version: VersionDetail }) {
         <p className="py-2 text-slate">
           <strong className="text-graphite">{scaleName(scale)}</strong> on {paper.name}{' '}
           {paper.orientation}, {sheetCount(sheets)}
+          <br />
+          Saved <Moment iso={version.createdAt} />; the sheet says it in UTC
         </p>
         <div className="flex flex-wrap gap-2 md:ml-auto">
           <button
             type="button"
-            className="button"
+            className="button max-md:min-h-[44px]"
             aria-pressed={trueSize}
             onClick={() => setTrueSize(!trueSize)}
           >
             True size
           </button>
-          <button type="button" className="button" onClick={takeSvg}>
+          <button type="button" className="button max-md:min-h-[44px]" onClick={takeSvg}>
             Download SVG
           </button>
-          <button type="button" className="button" onClick={() => window.print()}>
+          <button
+            type="button"
+            className="button max-md:min-h-[44px]"
+            onClick={() => window.print()}
+          >
             Print
           </button>
           <button
             type="button"
-            className="button button-primary"
+            className="button button-primary max-md:min-h-[44px]"
             disabled={making.kind === 'making'}
             onClick={() => void takePdf()}
           >
             {making.kind === 'making' ? 'Making the PDF …' : 'Download PDF'}
           </button>
         </div>
+        <LetteringNote gaps={letteringGaps(input)} />
         {making.kind === 'failed' && (
           <p role="alert" className="w-full text-brick">
             {making.message}

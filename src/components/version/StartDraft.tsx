@@ -37,7 +37,7 @@ export default function StartDraft({
     <div>
       <button
         type="button"
-        className="button"
+        className="button max-md:min-h-[44px]"
         aria-expanded={asking}
         onClick={() => setAsking(!asking)}
       >
@@ -51,7 +51,7 @@ export default function StartDraft({
           </p>
           <button
             type="button"
-            className="button button-primary mt-2"
+            className="button button-primary mt-2 max-md:min-h-[44px]"
             disabled={busy}
             onClick={() => void start()}
           >
@@ -63,7 +63,11 @@ export default function StartDraft({
         <p role="alert" className="mt-2 text-brick">
           {wrong.message}{' '}
           {wrong.stale && (
-            <button type="button" className="link" onClick={() => window.location.reload()}>
+            <button
+              type="button"
+              className="link max-md:min-h-[44px]"
+              onClick={() => window.location.reload()}
+            >
               Look again
             </button>
           )}

@@ -22,23 +22,13 @@ export function versionPlanInput(version: VersionDetail, paper: PaperName | 'aut
   };
 }
 
-/** The layout's own short number and the version's: the same on every sheet of that version. */
-export function documentNumber(version: Pick<VersionDetail, 'layoutId' | 'number'>): string {
-  const short = version.layoutId
+/** The last six letters and digits of the layout's id: short, and its own. */
+export const layoutShortNumber = (layoutId: string): string =>
+  layoutId
     .replace(/[^0-9a-z]/gi, '')
     .slice(-6)
     .toUpperCase();
-  return `${short}-${version.number}`;
-}
 
-/** A name for a downloaded file: `back-court-diamond-chequer-v3`. */
-export function planFileName(version: VersionDetail): string {
-  const words = `${version.projectName} ${version.layoutName}`
-    .normalize('NFD')
-    .replace(/\p{M}/gu, '')
-    .toLowerCase()
-    .replace(/[^a-z0-9]+/g, '-')
-    .replace(/^-+|-+$/g, '')
-    .slice(0, 60);
-  return `${words || 'plan'}-v${version.number}`;
-}
+/** The layout's own short number and the version's: the same on every sheet of that version. */
+export const documentNumber = (version: Pick<VersionDetail, 'layoutId' | 'number'>): string =>
+  `${layoutShortNumber(version.layoutId)}-${version.number}`;

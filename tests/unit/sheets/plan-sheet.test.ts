@@ -173,6 +173,89 @@ describe('a plan sheet', () => {
     expect(outlinesOverlap(rings[0].points, rings[1].points)).toBe(false);
   });
 
+  it('marks each place of a lifted unit by a dashed outline and two diagonals, and says so in the key', () => {
+    const whole = layFloor(COURT).laid;
+    const lifted = [5, 12, 30].map((n): [number, number, number] => [
+      whole.i[n],
+      whole.j[n],
+      whole.k[n],
+    ]);
+    const [sheet] = planSheets(planInput({ ...COURT, lifted }));
+    const marks = sheet.layers.find(({ name }) => name === 'lifted')!.commands;
+    const rings = (dashed: boolean) =>
+      marks.flatMap((command) =>
+        command.kind === 'path' && (command.stroke?.dash !== undefined) === dashed
+          ? command.rings
+          : [],
+      );
+    expect(rings(true)).toHaveLength(3);
+    expect(rings(false)).toHaveLength(6);
+    // A 450 mm slab, and its diagonal of 450 √2, to the sheet’s scale.
+    for (const { points } of rings(true))
+      points.forEach(([x, y], n) => {
+        const [toX, toY] = points[(n + 1) % 4];
+        expect(Math.hypot(toX - x, toY - y) * sheet.scale).toBeCloseTo(450, 6);
+      });
+    for (const { points } of rings(false))
+      expect(
+        Math.hypot(points[1][0] - points[0][0], points[1][1] - points[0][1]) * sheet.scale,
+      ).toBeCloseTo(450 * Math.SQRT2, 6);
+    const texts = planSheets(planInput({ ...COURT, lifted })).flatMap(sheetTexts);
+    expect(texts.map(outlineText).join(' ')).toContain('Lifted out by hand: leave open');
+    expect(planSheets(planInput(COURT)).flatMap(sheetTexts).map(outlineText).join()).not.toContain(
+      'leave open',
+    );
+  });
+
+  it('says of a pattern turned right round that its rows run along AB', () => {
+    const said = (turn: number) =>
+      sheetTexts(
+        planSheets(
+          planInput(
+            floor(rectangle(0, 0, 4000, 3000), { placement: { origin: [240, 240], turn } }),
+          ),
+        )[0],
+      )
+        .map(outlineText)
+        .join(' ');
+    expect(said(180)).toContain('Rows run along AB.');
+    expect(said(-90)).toContain('Rows run square to AB.');
+    expect(said(-153.02)).toMatch(/Rows turn 26\.98° anticlockwise from AB/);
+  });
+
+  it('takes Letter and a sheet of tables for an imperial court of 7 × 5 m, rather than Tabloid at the same scale', () => {
+    const perimeter = rectangle(0, 0, 7000, 5000);
+    const court = floor(perimeter, {
+      display: 'imperial',
+      ground: {
+        perimeter,
+        keepOuts: [
+          { name: 'Tree pit', ring: rectangle(1500, 3000, 1000, 1000) },
+          { name: 'Drain cover', ring: rectangle(4500, 1000, 600, 450) },
+        ],
+      },
+      units: [{ id: 'a', name: 'Brick', length: 200, width: 100, thickness: 65 }],
+    });
+    const sheets = planSheets(planInput(court));
+    const tabloid = planSheets(planInput(court, { paper: 'Tabloid' }));
+    expect(sheets[0].paper.name).toBe('Letter');
+    expect(sheets[0].scale).toBe(tabloid[0].scale);
+    expect(sheets).toHaveLength(2);
+  });
+
+  it('keeps the list of what to take care of in one column where a sheet has the room', () => {
+    for (const document of [COURT, BAY, COURT_CHEQUER, COURT_SQUARE]) {
+      const sheets = planSheets(planInput(document));
+      const places = sheets.flatMap((sheet, n) =>
+        sheetTexts(sheet)
+          .filter(({ text }) => /^(Take care|Call before|Not for vehicles|Figures are)/.test(text))
+          .map(({ frame }) => `${n} ${frame}`),
+      );
+      expect(places).toHaveLength(4);
+      expect(new Set(places).size).toBe(1);
+    }
+  });
+
   it('continues on a second sheet what the first has no room for, and numbers both', () => {
     const sheets = planSheets(planInput(NAMED['names of every length'], { paper: 'A4' }));
     expect(sheets.length).toBeGreaterThan(1);

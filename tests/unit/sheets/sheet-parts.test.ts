@@ -3,6 +3,8 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { layFloor } from '@/paving/laying';
 import type { PathRing } from '@/sheets/drawing';
+import type { PanelColumn, PanelRow } from '@/sheets/panel';
+import { keptTogether, panelFlowed } from '@/sheets/panel';
 import { edgeName } from '@/paving/edge-names';
 import { figureText, rangeText } from '@/sheets/figures';
 import { keepOutPlace } from '@/sheets/keep-out-place';
@@ -10,7 +12,7 @@ import { paperChords } from '@/sheets/plan-view';
 import { PREFERRED_SCALES, scaleFitting } from '@/sheets/scales';
 import { startPoint } from '@/sheets/start-point';
 import { drawingSvg } from '@/sheets/svg-sink';
-import { sheetText, textLines, textWidth } from '@/sheets/text-measure';
+import { charactersLacked, sheetText, textLines, textWidth } from '@/sheets/text-measure';
 import { faceFile, faceMetrics } from '../../../scripts/font-metrics';
 import { COURT, TERRACE, floor, rectangle } from './sample-floors';
 
@@ -39,6 +41,51 @@ describe('lettering', () => {
         },
       ),
     );
+  });
+});
+
+describe('characters that the typeface lacks', () => {
+  it('are those that print as a question mark, each once, and no others', () => {
+    expect(charactersLacked('庭 and 庭, Ł → "ß"\n石')).toEqual(['庭', '石']);
+    fc.assert(
+      fc.property(fc.string({ unit: 'grapheme' }), (text) => {
+        const asked = sheetText(text.replaceAll('?', '')).includes('?');
+        expect(charactersLacked(text).length > 0).toBe(asked);
+      }),
+    );
+  });
+});
+
+describe('a panel', () => {
+  const row = (height: number): PanelRow => ({
+    height,
+    draw: ([x, y], width) => [
+      {
+        kind: 'line',
+        from: [x, y],
+        to: [x + width, y],
+        stroke: { width: 0.25, colour: '#000000' },
+      },
+    ],
+  });
+  const columns = (heights: readonly number[]): PanelColumn[] =>
+    heights.map((bottom, n) => ({
+      frame: `column ${n}`,
+      box: { left: n * 100, top: 0, right: n * 100 + 60, bottom },
+    }));
+  const columnsOf = (rows: readonly PanelRow[], heights: readonly number[]) =>
+    panelFlowed(rows, columns(heights)).commands.map((command) =>
+      command.kind === 'line' ? Math.floor(command.from[0] / 100) : -1,
+    );
+  const list = keptTogether([row(10), row(10), row(10)], 'wished');
+
+  it('moves a list on whole where there is room for it', () => {
+    expect(columnsOf([row(10), ...list], [30, 30])).toEqual([0, 1, 1, 1]);
+  });
+
+  it('parts it rather than begin a sheet, or where no column could hold it', () => {
+    expect(columnsOf([row(10), ...list, row(10)], [30, 30])).toEqual([0, 0, 0, 1, 1]);
+    expect(columnsOf([row(10), ...list], [25, 25])).toEqual([0, 0, 1, 1]);
   });
 });
 
@@ -114,6 +161,23 @@ describe('set-out', () => {
       ),
       { numRuns: 25 },
     );
+  });
+
+  it('states the turn of rows as the lesser of the two ways round, for a row runs both ways', () => {
+    const turnOf = (turn: number) =>
+      startPoint(
+        layFloor(floor(rectangle(0, 0, 3000, 2000), { placement: { origin: [240, 240], turn } })),
+      )!.turnDeg;
+    const stated = [
+      [26.98, 26.98],
+      [-153.02, 26.98],
+      [180, 0],
+      [90, 90],
+      [-90, 90],
+      [135, -45],
+      [359, -1],
+    ];
+    for (const [turn, expected] of stated) expect(turnOf(turn)).toBeCloseTo(expected, 9);
   });
 
   it('places the tree pit of the court by its corner nearest to two edges', () => {

@@ -3,7 +3,8 @@ import { describe, expect, it, vi } from 'vitest';
 import type { VersionDetail } from '@/api-types/versions';
 import PlanView from '@/components/version/PlanView';
 import StartDraft from '@/components/version/StartDraft';
-import { documentNumber, planFileName } from '@/components/version/version-plan';
+import { planFileName } from '@/components/version/plan-file-name';
+import { documentNumber } from '@/components/version/version-plan';
 import { layFloor } from '@/paving/laying';
 import { floorReport } from '@/paving/report';
 import { COURT } from '../sheets/sample-floors';
@@ -55,6 +56,38 @@ describe('the plan on screen', () => {
   });
 });
 
+describe('what the plan’s typeface lacks', () => {
+  it('is said on screen, with the texts and letters in question, and not on the sheet', () => {
+    const named = {
+      ...VERSION,
+      projectName: '庭 at the mill',
+      document: { ...COURT, notes: '石' },
+    };
+    const { container } = render(<PlanView version={named} />);
+    const note = screen.getByRole('note').textContent;
+    expect(note).toContain('Some letters of the project’s name and the notes');
+    expect(note).toContain('庭 石');
+    expect(container.querySelector('[data-sheet]')!.textContent).toContain('? at the mill');
+  });
+
+  it('goes without saying where every letter is there', () => {
+    // Polish and Cyrillic letters are in the typeface.
+    render(<PlanView version={{ ...VERSION, projectName: 'Łódź, двор' }} />);
+    expect(screen.queryByRole('note')).toBeNull();
+  });
+});
+
+describe('the time of a version', () => {
+  it('is the reader’s own on screen, and UTC by name on the sheet', () => {
+    // Asia/Kolkata keeps UTC+5:30 all the year (IANA time zone database).
+    vi.stubEnv('TZ', 'Asia/Kolkata');
+    const { container } = render(<PlanView version={VERSION} />);
+    expect(container.querySelector('time')!.textContent).toContain('15:00');
+    expect(container.querySelector('[data-sheet]')!.textContent).toContain('2026-10-14 09:30 UTC');
+    vi.unstubAllEnvs();
+  });
+});
+
 describe('starting a draft from a version', () => {
   it('says what happens first, and keeps the person here when the draft has moved on', async () => {
     const sent: unknown[] = [];
@@ -78,10 +111,38 @@ describe('starting a draft from a version', () => {
   });
 });
 
+describe('a plan’s file name', () => {
+  const named = (projectName: string, layoutName: string, layoutId = VERSION.layoutId) =>
+    planFileName({ projectName, layoutName, layoutId, number: 3 });
+
+  it('tells apart the same version of two layouts, however long or foreign their names', () => {
+    const long = 'The courtyard behind the old dairy by the mill race at the end of the lane';
+    const names = [
+      named(long, 'Diamond'),
+      named(long, 'Square'),
+      named(long, `${long}, one`, 'lay0aaaaaa'),
+      named(long, `${long}, two`, 'lay0bbbbbb'),
+      named('庭', '一', 'lay0aaaaaa'),
+      named('庭', '二', 'lay0bbbbbb'),
+    ];
+    expect(new Set(names).size).toBe(names.length);
+    for (const name of names) expect(name).toMatch(/^[a-z0-9]+(-[a-z0-9]+)*-v3$/);
+  });
+
+  it('writes Latin letters of other languages without their marks', () => {
+    // Ł, Þ, Æ, ß as in the machine-readable zone of passports (ICAO Doc 9303-3, section 6, from memory);
+    // Ø as O and umlauts without their dots: common practice in file names.
+    expect(named('Łąka', 'Größe Ørsted')).toBe('laka-grosse-orsted-v3');
+    expect(named('Æsir Þing', 'Café')).toBe('aesir-thing-cafe-v3');
+  });
+});
+
 describe('a plan’s names', () => {
   it('are the same on every sheet of a version, and safe as file names', () => {
     expect(documentNumber(VERSION)).toBe('ABC123-3');
     expect(planFileName(VERSION)).toBe('court-behind-the-dairy-diamond-chequer-v3');
-    expect(planFileName({ ...VERSION, projectName: '庭', layoutName: '../..' })).toBe('plan-v3');
+    expect(planFileName({ ...VERSION, projectName: '庭', layoutName: '../..' })).toBe(
+      'plan-abc123-v3',
+    );
   });
 });
