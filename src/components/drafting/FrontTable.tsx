@@ -41,7 +41,7 @@ function Sample() {
   const table = useTableStore();
   const [fit] = useState(() => createFitService(table, { sweeps: false }));
   useEffect(() => fit.start(), [fit]);
-  const { map, result, current } = useFit(fit);
+  const { map, face, result, current } = useFit(fit);
   const { document, report, leastGap } = useShownFloor();
   const best = result?.choices[0];
   const shifted = (by: Point) => {
@@ -76,6 +76,7 @@ function Sample() {
           {map && (
             <ShiftMapPicture
               map={map}
+              face={current ? face : null}
               origin={document.placement.origin}
               best={best && current ? { origin: best.placement.origin, play: best.play } : null}
               countHere={report?.wholeUnits ?? null}

@@ -24,7 +24,7 @@ export function FitPictures({ fit }: { fit: FitService }) {
   const table = useTableStore();
   const floor = useShownFloor();
   const hold = useTable((state) => state.hold);
-  const { result, map, current, turns, sweeping, swept } = useFit(fit);
+  const { result, map, face, current, turns, sweeping, swept } = useFit(fit);
   const { document, report } = floor;
   const { placement, display } = document;
   const length = (mm: number) => formatLength(mm, display, { decimals: mm < 10 ? 1 : 0 });
@@ -63,6 +63,7 @@ export function FitPictures({ fit }: { fit: FitService }) {
               <div className={map.rise > map.pitch * 0.7 ? 'max-w-48' : ''}>
                 <ShiftMapPicture
                   map={map}
+                  face={current ? face : null}
                   origin={placement.origin}
                   best={most && current ? { origin: most.placement.origin, play: most.play } : null}
                   countHere={count}

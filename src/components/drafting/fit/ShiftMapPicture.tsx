@@ -1,10 +1,12 @@
 import { useEffect, useRef, type KeyboardEvent, type PointerEvent } from 'react';
 import type { Point } from '@/geometry/point';
+import type { BestFace } from '@/paving/fit/best-face';
 import type { ShiftMap } from '@/paving/fit/shift-map';
 import { shiftMapPlace, shiftMapShift } from '@/paving/fit/shift-map';
 
 interface Props {
   readonly map: ShiftMap;
+  readonly face: BestFace | null;
   readonly origin: Point;
   /** The placement with the most play, and its play: drawn as a circle of that radius. */
   readonly best: { readonly origin: Point; readonly play: number } | null;
@@ -35,7 +37,7 @@ function greyImage(map: ShiftMap): ImageData {
 }
 
 /** Every start in one lattice cell as a picture: drag the dot, and the floor follows. */
-export function ShiftMapPicture({ map, origin, best, countHere, onShift, onSettle }: Props) {
+export function ShiftMapPicture({ map, face, origin, best, countHere, onShift, onSettle }: Props) {
   const canvas = useRef<HTMLCanvasElement>(null);
   const frame = useRef<HTMLDivElement>(null);
   const last = useRef<Point | null>(null);
@@ -118,7 +120,7 @@ export function ShiftMapPicture({ map, origin, best, countHere, onShift, onSettl
         aria-hidden="true"
       >
         <g fill="none" stroke="var(--graphite)" strokeWidth="1.6">
-          <path d={outlinePath(map)} vectorEffect="non-scaling-stroke" />
+          <path d={facePath(map, face)} vectorEffect="non-scaling-stroke" />
           {best && bestAt && (
             <circle
               cx={bestAt[0] * map.pitch}
@@ -139,5 +141,17 @@ export function ShiftMapPicture({ map, origin, best, countHere, onShift, onSettl
   );
 }
 
-const outlinePath = ({ outline, rise }: ShiftMap): string =>
-  outline.map(([a, b]) => `M${a[0]} ${rise - a[1]}L${b[0]} ${rise - b[1]}`).join('');
+/** The best face to its true edge, drawn again a lattice step over where it runs out of the map; else at the map's grain. */
+function facePath({ outline, pitch, rise, shift }: ShiftMap, face: BestFace | null): string {
+  if (!face?.outline)
+    return outline.map(([a, b]) => `M${a[0]} ${rise - a[1]}L${b[0]} ${rise - b[1]}`).join('');
+  const ring = face.outline;
+  return [-1, 0, 1]
+    .flatMap((row) =>
+      [-1, 0, 1].map((step) => {
+        const [du, dv] = [step * pitch + row * shift, row * rise];
+        return `M${ring.map(([u, v]) => `${u + du} ${rise - v - dv}`).join('L')}Z`;
+      }),
+    )
+    .join('');
+}

@@ -1,6 +1,7 @@
 import { proxy } from 'comlink';
 import { createStore, type StoreApi } from 'zustand/vanilla';
 import type { FitHold, FitResult, FitTurn } from '@/paving/fit/fit';
+import type { BestFace } from '@/paving/fit/best-face';
 import type { ShiftMap } from '@/paving/fit/shift-map';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { groundMiddle, placementTurned } from '@/paving/placement-edits';
@@ -14,6 +15,8 @@ export interface FitState {
   readonly key: string | null;
   readonly result: FitResult | null;
   readonly map: ShiftMap | null;
+  /** The best face of the map; with holds the best start lies elsewhere, and there is none to outline. */
+  readonly face: BestFace | null;
   readonly working: boolean;
   readonly failure: string | null;
   /** The turn curve: the turns found so far for `turnsKey`. */
@@ -63,6 +66,7 @@ export function createFitService(
     key: null,
     result: null,
     map: null,
+    face: null,
     working: false,
     failure: null,
     turns: [],
@@ -87,18 +91,19 @@ export function createFitService(
     const key = fitKey(document, now.hold);
     if (state.getState().key === key) return;
     if (floorOf(document).problems.length > 0) {
-      state.setState({ key, result: null, map: null, failure: null, working: false });
+      state.setState({ key, result: null, map: null, face: null, failure: null, working: false });
       return;
     }
     busy = true;
     state.setState({ working: true });
     try {
       hand ??= newHand();
-      const [result, map] = await Promise.all([
+      const [result, map, face] = await Promise.all([
         hand.remote.fit(document, { hold: now.hold }),
         hand.remote.map(document, MAP_ACROSS),
+        now.hold.length === 0 ? hand.remote.face(document) : null,
       ]);
-      state.setState({ key, result, map, failure: null });
+      state.setState({ key, result, map, face, failure: null });
     } catch (error) {
       state.setState({
         key,

@@ -15,6 +15,9 @@ const fitWorker = {
   fit: (document: LayoutDocument, options: Pick<FitOptions, 'hold' | 'choices'>): FitResult =>
     fit(document, options),
 
+  /** Outline of the starts with the most units, to its true edge. */
+  face: (document: LayoutDocument): BestFace => bestFace(document),
+
   /** The shift map, about `across` counts wide. */
   map: (document: LayoutDocument, across: number): ShiftMap => {
     const map = shiftMap(document, across);
