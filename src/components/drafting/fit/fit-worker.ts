@@ -1,4 +1,5 @@
 import { expose, transfer } from 'comlink';
+import { bestFace, type BestFace } from '@/paving/fit/best-face';
 import {
   fit,
   type FitOptions,
