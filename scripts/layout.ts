@@ -1,5 +1,7 @@
 import { readFile } from 'node:fs/promises';
 import { text } from 'node:stream/consumers';
+import { fit, fitRefusal, type EdgeAddress, type FitHold, type FitOptions } from '@/paving/fit/fit';
+import { rangeTurns } from '@/paving/fit/turn-sweep';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { layFloor } from '@/paving/laying';
 import { parseLayoutDocument, type DocumentProblem } from '@/paving/layout-validation';
@@ -19,12 +21,64 @@ interface Task {
 
 class Refusal extends Error {}
 
+const number = (text: string | undefined): number => (text?.trim() ? Number(text) : NaN);
+
+function edgeAddress(text: string): EdgeAddress {
+  const [ring, edge, ...rest] = text.split(':').map(number);
+  if (rest.length > 0 || !Number.isInteger(ring) || !Number.isInteger(edge)) {
+    throw new Refusal(`"${text}" is not an edge; write RING:EDGE, such as 0:2`);
+  }
+  return [ring, edge];
+}
+
+/** Turns that one fit may go through from the command line. */
+const GREATEST_TURNS = 10_000;
+
+function fitOptions(options: readonly string[]): FitOptions {
+  const hold: FitHold[] = [];
+  let turn: FitOptions['turn'] = 'fixed';
+  for (let n = 0; n < options.length; n += 2) {
+    const [option, value = ''] = [options[n], options[n + 1]];
+    if (option === '--turn') {
+      const [from, to, step, ...rest] = value.split(':').map(number);
+      const turns = (to - from) / step;
+      if (rest.length > 0 || !(step > 0) || !(turns >= 0 && turns <= GREATEST_TURNS)) {
+        throw new Refusal(
+          `"${value}" is not a range of turns; write FROM:TO:STEP, such as 0:90:0.5`,
+        );
+      }
+      turn = { from, to, step };
+      rangeTurns(turn);
+    } else if (option === '--hold') {
+      hold.push({ edge: edgeAddress(value) });
+    } else if (option === '--between') {
+      const edges = value.split(',').map(edgeAddress);
+      if (edges.length !== 2) {
+        throw new Refusal(`"${value}" is not two edges; write RING:EDGE,RING:EDGE`);
+      }
+      hold.push({ between: [edges[0], edges[1]] });
+    } else {
+      throw new Refusal(`fit takes no option "${option}"`);
+    }
+  }
+  return { turn, hold };
+}
+
 const tasks: Readonly<Record<string, Task>> = {
   report: {
     usage: 'report FILE|-',
     run: (document, options) => {
       if (options.length > 0) throw new Refusal(`report takes no option "${options[0]}"`);
       return floorReport(layFloor(document));
+    },
+  },
+  fit: {
+    usage: 'fit FILE|- [--turn FROM:TO:STEP] [--hold RING:EDGE] [--between RING:EDGE,RING:EDGE]',
+    run: (document, options) => {
+      const asked = fitOptions(options);
+      const refusal = fitRefusal(document, asked);
+      if (refusal) throw new Refusal(refusal.message);
+      return fit(document, asked);
     },
   },
 };

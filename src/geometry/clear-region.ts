@@ -299,6 +299,7 @@ export function clearBoundary(
   near.forEach((others, n) => others.sort((p, q) => Math.abs(p - n) - Math.abs(q - n)));
   const room: Room = { x0: [], y0: [], x1: [], y1: [], cx: [], cy: [], radius: [] };
   for (let n = 0; n < count; n++) sweepPieces(chords, sweeps, n, near[n], room);
+  joinEnds(room);
   return {
     count: room.x0.length,
     x0: Float64Array.from(room.x0),
@@ -309,6 +310,36 @@ export function clearBoundary(
     cy: Float64Array.from(room.cy),
     radius: Float64Array.from(room.radius),
   };
+}
+
+/** Ends nearer than this to a start, mm, are where the boundary goes on: each was worked out on its own side. */
+const SAME_END_MM = 1e-6;
+
+/** Makes each piece end exactly where the next begins, so that no line slips between them or counts both. */
+function joinEnds({ x0, y0, x1, y1 }: Room): void {
+  const order = x0.map((_, n) => n).sort((m, n) => x0[m] - x0[n]);
+  const sorted = Float64Array.from(order, (n) => x0[n]);
+  for (let n = 0; n < x1.length; n++) {
+    let low = 0;
+    let high = sorted.length;
+    while (low < high) {
+      const middle = (low + high) >> 1;
+      if (sorted[middle] < x1[n] - SAME_END_MM) low = middle + 1;
+      else high = middle;
+    }
+    let next = -1;
+    let least = SAME_END_MM;
+    for (let at = low; at < sorted.length && sorted[at] <= x1[n] + SAME_END_MM; at++) {
+      const m = order[at];
+      const apart = Math.hypot(x0[m] - x1[n], y0[m] - y1[n]);
+      if (m === n || apart > least) continue;
+      least = apart;
+      next = m;
+    }
+    if (next < 0) continue;
+    x1[n] = x0[next];
+    y1[n] = y0[next];
+  }
 }
 
 /** Adds the parts of one sweep's boundary that no other sweep covers and that lie in the ground. */

@@ -52,7 +52,10 @@ function chordShare(n: number): number {
 }
 
 /** Point of the frame for a point on the ground. */
-export function frameFromGround({ from, direction }: FitFrame, [x, y]: Point): Point {
+export function frameFromGround(
+  { from, direction }: Pick<FitFrame, 'from' | 'direction'>,
+  [x, y]: Point,
+): Point {
   const dx = x - from[0];
   const dy = y - from[1];
   return [dx * direction[0] + dy * direction[1], dy * direction[0] - dx * direction[1]];
@@ -76,12 +79,12 @@ export function cellPoint(
   return [x - Math.floor(x / pitch) * pitch, v - j * rise];
 }
 
-/** Makes a valid document's floor ready for the fit at `turn`. */
-export function fitFrame(
+/** The frame without its regions, which cost the most: enough to tell which way units and edges lie. */
+export function holdFrame(
   document: LayoutDocument,
-  turn: number = document.placement.turn,
-  ground: Ground = documentGround(document),
-): FitFrame {
+  turn: number,
+  ground: Ground,
+): Omit<FitFrame, 'clear'> {
   const pattern = bondPattern(document);
   const turned = rotation(turn);
   const basis = latticeReduced({
@@ -112,11 +115,6 @@ export function fitFrame(
       ground.chords.by[n] - from[1],
     ]);
   }
-  const least = document.clearance - LENGTH_TOLERANCE_MM;
-  const margin = (n: number) => FIT_MARGIN_MM * (1 + chordShare(n));
-  const reach = (n: number) => Math.max(0, least + margin(n));
-  const grow = (n: number) => Math.min(0, least + margin(n));
-  const shapes = new Map<string, ClearBoundary>();
   const entries = pattern.motif.map((entry) => {
     const unit = documentUnit(document, entry.unit);
     // The frame is turned with the pattern; a right angle stays exact.
@@ -125,15 +123,6 @@ export function fitFrame(
     const [wx, wy] = into(pointTurned([0, unit.width / 2], own));
     const [atU, atV] = into(pointTurned(entry.at, turned));
     return { lx, ly, wx, wy, atU, atV };
-  });
-  const clear = entries.map((entry) => {
-    const key = [entry.lx, entry.ly, entry.wx, entry.wy].map((half) => half.toFixed(9)).join();
-    let shape = shapes.get(key);
-    if (!shape) {
-      shape = clearBoundary(chords, entry, reach, grow);
-      shapes.set(key, shape);
-    }
-    return boundaryMoved(shape, -entry.atU, -entry.atV);
   });
   const [shift, rise] = into(basis.b);
   return {
@@ -148,8 +137,32 @@ export function fitFrame(
     shift,
     chords,
     entries,
-    clear,
   };
+}
+
+/** Makes a valid document's floor ready for the fit at `turn`. */
+export function fitFrame(
+  document: LayoutDocument,
+  turn: number = document.placement.turn,
+  ground: Ground = documentGround(document),
+): FitFrame {
+  const frame = holdFrame(document, turn, ground);
+  const { chords, entries } = frame;
+  const least = document.clearance - LENGTH_TOLERANCE_MM;
+  const margin = (n: number) => FIT_MARGIN_MM * (1 + chordShare(n));
+  const reach = (n: number) => Math.max(0, least + margin(n));
+  const grow = (n: number) => Math.min(0, least + margin(n));
+  const shapes = new Map<string, ClearBoundary>();
+  const clear = entries.map((entry) => {
+    const key = [entry.lx, entry.ly, entry.wx, entry.wy].map((half) => half.toFixed(9)).join();
+    let shape = shapes.get(key);
+    if (!shape) {
+      shape = clearBoundary(chords, entry, reach, grow);
+      shapes.set(key, shape);
+    }
+    return boundaryMoved(shape, -entry.atU, -entry.atV);
+  });
+  return { ...frame, clear };
 }
 
 function boundaryMoved(boundary: ClearBoundary, du: number, dv: number): ClearBoundary {

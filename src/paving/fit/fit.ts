@@ -1,7 +1,7 @@
 import { documentGround } from '../ground';
 import type { LayoutDocument, Placement } from '../layout-document';
 import { frameChoices, frameMost } from './cell-fit';
-import { fitFrame, type FitFrame } from './fit-frame';
+import { fitFrame, holdFrame, type FitFrame } from './fit-frame';
 import { holdRefusal, type FitHold, type HoldRefusal } from './hold';
 import { heldChoices } from './line-fit';
 import { rangeTurns, turnBest, turnSweep, type FitTurn, type TurnRange } from './turn-sweep';
@@ -42,9 +42,24 @@ export interface FitResult {
 /** Message of the error that `fit` throws when `shouldStop` has answered true. */
 export const FIT_STOPPED = 'the fit was stopped';
 
-/** Why the holds cannot be kept at the document's turn, and the turns that would do; null when they can. */
-export function fitRefusal(document: LayoutDocument, hold: readonly FitHold[]): HoldRefusal | null {
-  return hold.length === 0 ? null : holdRefusal(fitFrame(document), hold);
+/**
+ * Why the holds cannot be kept, and the turns that would do; null when they can. At the document's
+ * turn, or, for a range of turns, at every turn of it: then what stands in the way at the first.
+ */
+export function fitRefusal(
+  document: LayoutDocument,
+  { hold = [], turn = 'fixed' }: Pick<FitOptions, 'hold' | 'turn'>,
+): HoldRefusal | null {
+  if (hold.length === 0) return null;
+  const ground = documentGround(document);
+  const turns = turn === 'fixed' ? [document.placement.turn] : rangeTurns(turn);
+  let first: HoldRefusal | null = null;
+  for (const at of turns) {
+    const refusal = holdRefusal(holdFrame(document, at, ground), hold);
+    if (!refusal) return null;
+    first ??= refusal;
+  }
+  return first;
 }
 
 function resultOf(frame: FitFrame, choices: readonly FitChoice[]): FitResult {
@@ -91,20 +106,14 @@ export function* fitSteps(
   options: FitOptions = {},
 ): Generator<FitTurn | null, FitResult> {
   const { turn = 'fixed', hold = [], shouldStop } = options;
-  if (turn === 'fixed') {
-    const refusal = fitRefusal(document, hold);
-    if (refusal) throw new Error(refusal.message);
-    return fixedFit(document, document.placement.turn, options);
-  }
+  const refusal = fitRefusal(document, { hold, turn });
+  if (refusal) throw new Error(refusal.message);
+  if (turn === 'fixed') return fixedFit(document, document.placement.turn, options);
   const turns: FitTurn[] = [];
   for (const found of turnSweep(document, turn, hold)) {
     if (found) turns.push(found);
     yield found;
     if (shouldStop?.()) throw new Error(FIT_STOPPED);
-  }
-  if (turns.length === 0) {
-    const refusal = fitRefusal(document, hold);
-    throw new Error(refusal?.message ?? 'the hold cannot be kept at any turn of the range');
   }
   const best = fixedFit(document, turnBest(turns).turn, options);
   return { ...best, turns: turns.sort((one, other) => one.turn - other.turn) };

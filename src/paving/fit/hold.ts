@@ -2,6 +2,9 @@ import type { Point } from '@/geometry/point';
 import type { GroundEdge } from '../ground';
 import { frameFromGround, type FitFrame } from './fit-frame';
 
+/** A frame need not have its regions for this. */
+type Frame = Omit<FitFrame, 'clear'>;
+
 /** Which edge of the ground: ring (0 the perimeter, 1 the first keep-out …) and edge of that ring. */
 export type EdgeAddress = readonly [ring: number, edge: number];
 
@@ -38,7 +41,7 @@ const GREATEST_STEPS = 40;
 
 const degrees = (radians: number) => (radians * 180) / Math.PI;
 
-function edgeAt(frame: FitFrame, [ring, edge]: EdgeAddress): GroundEdge | undefined {
+function edgeAt(frame: Frame, [ring, edge]: EdgeAddress): GroundEdge | undefined {
   return frame.ground.rings[ring]?.edges[edge];
 }
 
@@ -53,7 +56,7 @@ function lineAngle(one: Point, other: Point): number {
 }
 
 /** An edge in the frame: its ends, and the way into the ground square to it. */
-function edgeInFrame(frame: FitFrame, edge: GroundEdge) {
+function edgeInFrame(frame: Frame, edge: GroundEdge) {
   const a = frameFromGround(frame, edge.start);
   const b = frameFromGround(frame, edge.end);
   const size = Math.hypot(b[0] - a[0], b[1] - a[1]);
@@ -63,7 +66,7 @@ function edgeInFrame(frame: FitFrame, edge: GroundEdge) {
 }
 
 /** Turns next to the present one, either way, at which some unit's sides would be parallel to the edge. */
-function parallelTurns(frame: FitFrame, edge: GroundEdge): number[] {
+function parallelTurns(frame: Frame, edge: GroundEdge): number[] {
   const angle = degrees(Math.atan2(edge.end[1] - edge.start[1], edge.end[0] - edge.start[0]));
   const { a } = frame.basis;
   const row = degrees(Math.atan2(a[1], a[0]));
@@ -77,7 +80,7 @@ function parallelTurns(frame: FitFrame, edge: GroundEdge): number[] {
 }
 
 /** Why these holds cannot be kept at the frame's turn; null when they can. */
-export function holdRefusal(frame: FitFrame, holds: readonly FitHold[]): HoldRefusal | null {
+export function holdRefusal(frame: Frame, holds: readonly FitHold[]): HoldRefusal | null {
   const normals: Point[] = [];
   if (holds.length > 2) {
     return { hold: 2, message: 'two holds leave no freedom; take one of them off', turns: [] };
@@ -137,7 +140,7 @@ export function holdRefusal(frame: FitFrame, holds: readonly FitHold[]): HoldRef
 }
 
 /** The shortest lattice vector along a direction, mm, or Infinity when none is near enough. */
-function periodAlong({ pitch, rise, shift }: FitFrame, [nx, ny]: Point): number {
+function periodAlong({ pitch, rise, shift }: Frame, [nx, ny]: Point): number {
   let least = Infinity;
   for (let j = 0; j <= GREATEST_STEPS; j++) {
     for (let i = -GREATEST_STEPS; i <= GREATEST_STEPS; i++) {
@@ -152,7 +155,7 @@ function periodAlong({ pitch, rise, shift }: FitFrame, [nx, ny]: Point): number 
 }
 
 /** The lines of origins that keep a hold which `holdRefusal` has not refused. */
-export function holdLines(frame: FitFrame, hold: FitHold): HoldLine[] {
+export function holdLines(frame: Frame, hold: FitHold): HoldLine[] {
   const lines: HoldLine[] = [];
   const put = (nx: number, ny: number, height: number, from: number, to: number) => {
     const period = periodAlong(frame, [nx, ny]);

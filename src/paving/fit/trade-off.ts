@@ -190,7 +190,6 @@ export function cellTradeOff(
     let highest = 0;
     let before = 0;
     let crossing = 0;
-    let count = 0;
     let gains = 0;
     for (let a = from; a < to; a++) {
       const n = source[a];
@@ -221,17 +220,7 @@ export function cellTradeOff(
       pieceGap(near, n, u, v, room, at);
       if (room.distance[at] > within + h) continue;
       list[top++] = n;
-      if (room.distance[at] < within) {
-        // The nearest few are kept in order; what is farther off bounds nothing that they do not.
-        const full = count === NEAREST;
-        if (!full || room.key[at] < room.key[order[count - 1]]) {
-          let place = full ? count - 1 : count++;
-          for (; place > 0 && room.key[order[place - 1]] > room.key[at]; place--) {
-            order[place] = order[place - 1];
-          }
-          order[place] = at;
-        }
-      }
+      holds[at] = 0;
       // What it may add to the count over the box.
       through[at] = 0;
       if (room.distance[at] > h) continue;
@@ -299,7 +288,14 @@ export function cellTradeOff(
         open = !beaten(Math.min(bound, depth + gained), h - gainAt[m]);
       }
     }
-    for (let m = 0; m < count; m++) {
+    // The nearest few tell nearly always; where they do not, all are gone through.
+    let count = inOrder(top - own, within, NEAREST);
+    for (let m = 0; ; m++) {
+      if (m === count) {
+        if (count < NEAREST || count > NEAREST) break;
+        count = inOrder(top - own, within, Infinity);
+        if (m === count) break;
+      }
       const at = order[m];
       if (room.side[at] < 0) {
         if (room.distance[at] < KEEP_OFF_MM) doubtful = true;
@@ -317,10 +313,10 @@ export function cellTradeOff(
       if (!open && !beaten(Math.min(bound, depth - lost), d + h)) open = true;
       lost += apart;
     }
-    if (slackHere < 0) slackHere = count > 0 || within < reach ? -1 : within;
+    // With nothing within the whole reach the slack is that at least.
+    if (slackHere < 0 && within === reach) slackHere = within;
     if (slackHere >= 0 && !doubtful) offer(depth, slackHere, u, v);
     // Two pieces that face each other across the box bound the slack by half their distance apart.
-    for (let m = 0; m < count; m++) holds[order[m]] = 0;
     if (held >= 0) {
       const first = order[held];
       const d0 = room.distance[first];
@@ -351,6 +347,22 @@ export function cellTradeOff(
     // Over the box no origin has more slack than this: what is farther off does not matter there.
     const farthest = lost > 0 || gains > 0 ? Math.max(all, 2 * h) : all;
     keep(out, ax, ay, bx, by, depth, Math.min(within, farthest), own, top);
+  };
+
+  /** Puts the listed pieces nearer than `within` in `order`, nearest first, `most` of them at most. */
+  const inOrder = (listed: number, within: number, most: number): number => {
+    let count = 0;
+    for (let at = 0; at < listed; at++) {
+      if (room.distance[at] >= within) continue;
+      const key = room.key[at];
+      const full = count === most;
+      if (full && key >= room.key[order[count - 1]]) continue;
+      let place = full ? count - 1 : count++;
+      for (; place > 0 && room.key[order[place - 1]] > key; place--)
+        order[place] = order[place - 1];
+      order[place] = at;
+    }
+    return count;
   };
 
   const keep = (
