@@ -4,7 +4,7 @@ import { frameMost } from '@/paving/fit/cell-fit';
 import { cellPieces } from '@/paving/fit/cell-pieces';
 import { unitCount } from '@/paving/fit/count';
 import { fit, type FitResult } from '@/paving/fit/fit';
-import { fitFrame, frameFromGround } from '@/paving/fit/fit-frame';
+import { cellPoint, fitFrame, frameFromGround } from '@/paving/fit/fit-frame';
 import { depthMoved } from '@/paving/fit/most';
 import { startCounter } from '@/paving/fit/start-counter';
 import { documentGround, type Ground } from '@/paving/ground';
@@ -163,9 +163,7 @@ test('at a thousand starts the count is the same by the laying, by the rows and 
           expect(count(origin)).toBe(here);
           const [u, v] = frameFromGround(frame, origin);
           expect(unitCount(frame, u, v)).toBe(here);
-          const row = Math.floor(v / frame.rise);
-          const along = (u - row * frame.shift) / frame.pitch;
-          const cell = [(along - Math.floor(along)) * frame.pitch, v - row * frame.rise] as const;
+          const cell = cellPoint(frame, [u, v]);
           expect(
             depthMoved(pieces, all, 0, all.length, most.u, most.v, cell[0], cell[1], most.count),
           ).toBe(here);

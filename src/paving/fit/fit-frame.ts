@@ -76,7 +76,10 @@ export function cellPoint(
 ): [number, number] {
   const j = Math.floor(v / rise);
   const x = u - j * shift;
-  return [x - Math.floor(x / pitch) * pitch, v - j * rise];
+  const inU = x - Math.floor(x / pitch) * pitch;
+  const inV = v - j * rise;
+  // A hair below 0 rounds to the far side, which is outside the cell and the same as 0.
+  return [inU < pitch ? inU : 0, inV < rise ? inV : 0];
 }
 
 /** The frame without its regions, which cost the most: enough to tell which way units and edges lie. */
