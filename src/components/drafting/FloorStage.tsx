@@ -4,7 +4,13 @@ import { Layer, Shape, Stage } from 'react-konva';
 import type { Point } from '@/geometry/point';
 import { documentRing } from '@/paving/ground-edits';
 import { drawingColours, type DrawingColours } from '../ui/drawing-colours';
-import { cameraFitted, cameraPanned, cameraZoomed, groundFromScreen } from './camera';
+import {
+  cameraFitted,
+  cameraPanned,
+  cameraZoomed,
+  groundFromScreen,
+  screenFromGround,
+} from './camera';
 import { createFloorCache, type FloorCache } from './floor-cache';
 import { floorOf } from './floor';
 import { paintOverlay } from './overlay-picture';
@@ -44,6 +50,17 @@ export function zoomToFit(table: TableStore): void {
   };
   const narrow = size.width < NARROW_PX;
   set({ camera: cameraFitted(box, size, narrow ? 44 : 76, narrow ? 34 : 0) });
+}
+
+/** Zooms to fit when a typed length has taken part of the ground out of the window. */
+export function groundKeptInView(table: TableStore): void {
+  const { document, camera, size } = table.getState();
+  if (!camera) return;
+  const out = ringOutline(documentRing(document, 0)).some((point) => {
+    const [x, y] = screenFromGround(camera, size, point);
+    return x < 0 || y < 0 || x > size.width || y > size.height;
+  });
+  if (out) zoomToFit(table);
 }
 
 /** One step of a wheel's zoom. */

@@ -22,6 +22,7 @@ import { NumberField } from '../../ui/NumberField';
 import { Segmented } from '../../ui/Segmented';
 import { coordinateRefused, edgeRefused } from '../field-limits';
 import { FloorProblems } from '../FloorFigures';
+import { groundKeptInView } from '../FloorStage';
 import {
   cornerAdded,
   cornerRemoved,
@@ -68,13 +69,14 @@ function EdgeRow({ ring, edge }: { ring: number; edge: number }) {
             mm={chordLength(vertices, edge)}
             display={document.display}
             refuse={edgeRefused}
-            onLength={(mm) =>
+            onLength={(mm) => {
               table
                 .getState()
                 .edit((now) =>
                   ringReplaced(now, ring, edgeLengthSet(documentRing(now, ring), edge, mm)),
-                )
-            }
+                );
+              groundKeptInView(table);
+            }}
           />
         </div>
       </div>
@@ -88,8 +90,10 @@ function PickedEdge({ ring, edge }: { ring: number; edge: number }) {
   const { document } = useShownFloor();
   const vertices = documentRing(document, ring);
   const bulge = vertexBulge(vertices[edge]);
-  const change = (make: (ring: Ring) => Ring) =>
+  const change = (make: (ring: Ring) => Ring) => {
     table.getState().edit((now) => ringReplaced(now, ring, make(documentRing(now, ring))));
+    groundKeptInView(table);
+  };
   return (
     <div className="mb-2 ml-14 space-y-3 border-l-2 border-line py-1 pl-3">
       <Segmented
