@@ -1,5 +1,6 @@
 import { readFile, writeFile } from 'node:fs/promises';
 import { comparison } from './comparison';
+import { fitAgainstSearch, fitGrowth, fitOnTable } from './fit';
 import { growth } from './growth';
 import { layingAgainstClipping } from './laying-against-clipping';
 import type { Bench, Ratio } from './ratio';
@@ -19,6 +20,9 @@ const benches: readonly Bench[] = [
   comparison,
   panFrames,
   manyProjects,
+  fitAgainstSearch,
+  fitOnTable,
+  fitGrowth,
 ];
 const baselineFile = new URL('./baseline.json', import.meta.url);
 

@@ -1,0 +1,112 @@
+import { fit } from '@/paving/fit/fit';
+import { frameMost } from '@/paving/fit/cell-fit';
+import { unitCount } from '@/paving/fit/count';
+import { fitFrame } from '@/paving/fit/fit-frame';
+import type { LayoutDocument } from '@/paving/layout-document';
+import { COURT_CHEQUER, COURT_SQUARE, ROUND_TERRACE, SIDE_YARD } from '@/server/demo-layouts';
+import { fitFloors, squareFloor } from './fit-floors';
+import { medianMs, type Bench, type Ratio } from './ratio';
+
+/** Starts that the search tries each way. */
+const SEARCH = 64;
+const RUNS = 5;
+
+/** The most units of a grid of starts, by the project's own fastest count. */
+function searchMost(document: LayoutDocument): number {
+  const frame = fitFrame(document);
+  let most = 0;
+  for (let j = 0; j < SEARCH; j++) {
+    const v = ((j + 0.5) / SEARCH) * frame.rise;
+    for (let i = 0; i < SEARCH; i++) {
+      most = Math.max(most, unitCount(frame, ((i + 0.5) / SEARCH) * frame.pitch, v));
+    }
+  }
+  return most;
+}
+
+/**
+ * The fit against a search of 64 × 64 starts. Both find the most units; the search guesses it, the
+ * fit proves it and finds the start with the most play as well. The trade-off, which a search gives
+ * nothing like, is timed apart.
+ */
+export const fitAgainstSearch: Bench = {
+  name: 'fit-against-search',
+  run: () =>
+    Object.entries(fitFloors).flatMap(([name, document]): Ratio[] => {
+      const found = searchMost(document);
+      const { wholeUnits } = fit(document, { choices: false });
+      if (wholeUnits < found) throw new Error(`${name}: fit ${wholeUnits}, search ${found}`);
+      const search = medianMs(() => searchMost(document), RUNS);
+      const proof = medianMs(() => frameMost(fitFrame(document)), RUNS);
+      const best = medianMs(() => fit(document, { choices: false }), RUNS);
+      const units = `fit ${wholeUnits} units, search ${found}`;
+      return [
+        {
+          name: `${name}: search ÷ the most units, proven`,
+          value: search / proof,
+          least: 1,
+          detail: `${units}; ${proof.toFixed(2)} ms against ${search.toFixed(1)} ms`,
+        },
+        {
+          name: `${name}: search ÷ the same with the most play, laid and measured`,
+          value: search / best,
+          detail: `${best.toFixed(2)} ms against ${search.toFixed(1)} ms`,
+        },
+      ];
+    }),
+};
+
+const demo = { COURT_SQUARE, COURT_CHEQUER, ROUND_TERRACE, SIDE_YARD };
+/** The fit, trade-off and all, is to keep up with a hand that lets go, ms. */
+const PROMPT_MS = 100;
+
+/** The whole fit on the demo's floors, and a sweep of turns against it. */
+export const fitOnTable: Bench = {
+  name: 'fit-on-table',
+  run: () => {
+    const prompt = Object.entries(demo).map(([name, document]): Ratio => {
+      const ms = medianMs(() => fit(document), RUNS, 4);
+      return {
+        name: `${name}: the whole fit ÷ ${PROMPT_MS} ms`,
+        value: ms / PROMPT_MS,
+        greatest: 1,
+        detail: `${ms.toFixed(1)} ms with the trade-off`,
+      };
+    });
+    const single = medianMs(() => fit(COURT_CHEQUER), RUNS, 4);
+    const range = { from: 0, to: 90, step: 0.5 };
+    const sweep = medianMs(() => fit(COURT_CHEQUER, { turn: range }), 3, 1);
+    return [
+      ...prompt,
+      {
+        name: 'a sweep of 0–90° by 0.5° ÷ one fit',
+        value: sweep / single,
+        greatest: 180,
+        detail: `${sweep.toFixed(0)} ms against ${single.toFixed(1)} ms`,
+      },
+    ];
+  },
+};
+
+const PITCHES = [10, 100, 1_000, 5_000];
+
+/** How the proof's time grows with perimeter ÷ pitch. */
+export const fitGrowth: Bench = {
+  name: 'fit-growth',
+  run: () => {
+    const costs = PITCHES.map((pitches) => {
+      const document = squareFloor(pitches);
+      return { pitches, ms: medianMs(() => frameMost(fitFrame(document)), RUNS, 3) };
+    });
+    return costs.slice(1).map(({ pitches, ms }, n): Ratio => {
+      const before = costs[n];
+      const times = pitches / before.pitches;
+      return {
+        name: `time over that of ${before.pitches} ÷ (${pitches} ÷ ${before.pitches}) to the power 1.5`,
+        value: ms / before.ms / times ** 1.5,
+        greatest: 1,
+        detail: `${pitches} pitches of perimeter: ${ms.toFixed(2)} ms, against ${before.ms.toFixed(2)} ms`,
+      };
+    });
+  },
+};
