@@ -1,3 +1,4 @@
+import { bundleAdd, bundlesEmptied, bundlesGain, bundlesOf } from './bundle-bound';
 import type { CellPieces } from './cell-pieces';
 import { pieceCrossing } from './count';
 import { leafFaces } from './leaf';
@@ -10,7 +11,9 @@ export interface CellBest {
 }
 
 /** A box that this few pieces cross is solved outright. */
-const LEAF_PIECES = 8;
+const LEAF_PIECES = 6;
+/** In boxes that more pieces cross than this, bundles of nearly parallel ones are too many to bound much. */
+const BUNDLED_PIECES = 400;
 /** Boxes smaller than this, mm, are left: no start holds its count for less than `FIT_MARGIN_MM` about it. */
 const SMALLEST_BOX_MM = 2e-7;
 /** What comes no further into a box than this, mm, only touches it. */
@@ -85,6 +88,9 @@ export function cellMost(
   stop?: () => boolean,
 ): CellBest {
   const { x0, y0, x1, y1, family, height, step, families } = pieces;
+  const bundles = bundlesOf(pieces);
+  const familyX = families.nx;
+  const familyY = families.ny;
   let best = start.count;
   let bestU = start.u;
   let bestV = start.v;
@@ -138,19 +144,13 @@ export function cellMost(
     const inBx = bx - TOUCH_MM;
     const inBy = by - TOUCH_MM;
     const own = top;
+    const list = arena;
+    let end = top;
+    // What may be gained but by the families, and by them.
     let gain = 0;
-    let current = -1;
-    let nx = 0;
-    let ny = 0;
-    let middle = 0;
-    let half = 0;
-    let ref = 0;
-    let sum = 0;
-    let most = 0;
-    let mostFrom = 0;
-    let mostTo = 0;
-    let open = false;
-    let before = 0;
+    let familyGain = 0;
+    const bundled = to - from <= BUNDLED_PIECES;
+    if (bundled) bundlesEmptied(bundles);
     // The two families that promise most, to look where both do best.
     let oneGain = 0;
     let one = -1;
@@ -158,84 +158,98 @@ export function cellMost(
     let otherGain = 0;
     let other = -1;
     let otherAt = 0;
-    const close = () => {
-      if (open) mostTo = middle + half;
+    for (let a = from; a < to;) {
+      const f = family[list[a]];
+      if (f < 0) {
+        const n = list[a++];
+        const px = x0[n];
+        const py = y0[n];
+        const qx = x1[n];
+        const qy = y1[n];
+        if (px < qx ? px > inBx || qx < inAx : qx > inBx || px < inAx) continue;
+        if (py < qy ? py > inBy || qy < inAy : qy > inBy || py < inAy) continue;
+        if (!arcMeetsBox(pieces, n, ax, ay, bx, by)) continue;
+        list[end++] = n;
+        if (!arcOnlyTakes(pieces, n, u, v)) gain += step[n] > 0 ? step[n] : -step[n];
+        continue;
+      }
+      // One family: its pieces come by height, and the count rises or falls by each in turn.
+      const nx = familyX[f];
+      const ny = familyY[f];
+      const middle = nx * mx + ny * my;
+      const half = (nx < 0 ? -nx : nx) * hx + (ny < 0 ? -ny : ny) * hy;
+      const low = middle - half + TOUCH_MM;
+      const high = middle + half - TOUCH_MM;
+      const ref = nx * u + ny * v;
+      let sum = 0;
+      let most = 0;
+      let before = 0;
+      let mostFrom = low;
+      let mostTo = high;
+      let open = true;
+      for (; a < to; a++) {
+        const n = list[a];
+        if (family[n] !== f) break;
+        const t = height[n];
+        if (t < low || t > high) continue;
+        const px = x0[n];
+        const py = y0[n];
+        const qx = x1[n];
+        const qy = y1[n];
+        if (px < qx ? px > inBx || qx < inAx : qx > inBx || px < inAx) continue;
+        if (py < qy ? py > inBy || qy < inAy : qy > inBy || py < inAy) continue;
+        list[end++] = n;
+        const through =
+          !(px > inAx && px < inBx && py > inAy && py < inBy) &&
+          !(qx > inAx && qx < inBx && qy > inAy && qy < inBy);
+        const change = step[n];
+        if (!through) {
+          if (change > 0) {
+            if (ref < t) gain += change;
+          } else if (ref > t) gain -= change;
+          continue;
+        }
+        if (open) {
+          open = false;
+          mostTo = t;
+        }
+        if (bundled) bundleAdd(bundles, f, t - middle, hx, hy, change, t < ref);
+        sum += change;
+        if (t < ref) before = sum;
+        if (sum > most) {
+          most = sum;
+          mostFrom = t;
+          mostTo = high;
+          open = true;
+        }
+      }
       const more = most - before;
-      gain += more;
-      if (more <= 0) return;
-      const at = (Math.max(mostFrom, middle - half) + mostTo) / 2;
+      if (more <= 0) continue;
+      familyGain += more;
+      if (bundled) bundles.gain[bundles.of[f]] += more;
+      const at = (mostFrom + mostTo) / 2;
       if (more > oneGain) {
         other = one;
         otherGain = oneGain;
         otherAt = oneAt;
-        one = current;
+        one = f;
         oneGain = more;
         oneAt = at;
       } else if (more > otherGain) {
-        other = current;
+        other = f;
         otherGain = more;
         otherAt = at;
       }
-    };
-    for (let a = from; a < to; a++) {
-      const n = arena[a];
-      const px = x0[n];
-      const py = y0[n];
-      const qx = x1[n];
-      const qy = y1[n];
-      if (px < qx ? px > inBx || qx < inAx : qx > inBx || px < inAx) continue;
-      if (py < qy ? py > inBy || qy < inAy : qy > inBy || py < inAy) continue;
-      const f = family[n];
-      if (f < 0) {
-        if (!arcMeetsBox(pieces, n, ax, ay, bx, by)) continue;
-        arena[top++] = n;
-        if (!arcOnlyTakes(pieces, n, u, v)) gain += Math.abs(step[n]);
-        continue;
-      }
-      if (f !== current) {
-        if (current >= 0) close();
-        current = f;
-        nx = families.nx[f];
-        ny = families.ny[f];
-        middle = nx * mx + ny * my;
-        half = Math.abs(nx) * hx + Math.abs(ny) * hy;
-        ref = nx * u + ny * v;
-        sum = 0;
-        most = 0;
-        before = 0;
-        mostFrom = -Infinity;
-        open = true;
-      }
-      const t = height[n];
-      if (t - middle > half - TOUCH_MM || middle - t > half - TOUCH_MM) continue;
-      arena[top++] = n;
-      const through =
-        !(px > inAx && px < inBx && py > inAy && py < inBy) &&
-        !(qx > inAx && qx < inBx && qy > inAy && qy < inBy);
-      if (!through) {
-        if (step[n] > 0 ? ref < t : ref > t) gain += Math.abs(step[n]);
-        continue;
-      }
-      if (open) {
-        open = false;
-        mostTo = t;
-      }
-      sum += step[n];
-      if (t < ref) before = sum;
-      if (sum > most) {
-        most = sum;
-        mostFrom = t;
-        open = true;
-      }
     }
-    if (current >= 0) close();
-    const bound = depth + gain;
+    top = end;
+    const bound =
+      depth + gain + (bundled ? Math.min(familyGain, bundlesGain(bundles)) : familyGain);
     if (bound <= best) {
       top = own;
       return;
     }
-    if (one >= 0) {
-      // Where the best heights of the two families meet, or as near as one alone can be had.
+    if (2 * (oneGain + otherGain) >= bound - depth && one >= 0) {
+      // Two families promise most of it: where their best heights meet, or as near as one alone can be had.
       let cu = u;
       let cv = v;
       const px = families.nx[one];

@@ -446,7 +446,8 @@ export function cellTradeOff(
       const f = family[local[a]];
       let b = a;
       while (b < local.length && family[local[b]] === f) b++;
-      if (f < 0) {
+      // One line alone shows nothing that its distance does not.
+      if (f < 0 || b - a < 2) {
         a = b;
         continue;
       }
@@ -478,7 +479,10 @@ export function cellTradeOff(
         if (height[local[m]] < ref) before = sum;
         if (sum > highest) highest = sum;
       }
-      if (lines.length > 0) {
+      if (
+        lines.length > 1 ||
+        (lines.length === 1 && (farBelow > -Infinity || farAbove < Infinity))
+      ) {
         const rest = depth + gain - (highest - before);
         const tells = lines.map((m) => {
           const n = local[m];
