@@ -1,7 +1,7 @@
 import type { APIContext, MiddlewareNext } from 'astro';
 import { defineMiddleware } from 'astro:middleware';
 import { guardForwardedFor } from '@/server/client-address';
-import { database } from '@/server/database';
+import { database, theDatabase } from '@/server/database';
 import { environment } from '@/server/environment';
 import { logError } from '@/server/log';
 import { startPosting } from '@/server/mail/posting';
@@ -32,6 +32,9 @@ const identify = async (context: APIContext): Promise<void> => {
   if (signedIn.prolonged) sendSession(context, signedIn);
 };
 
+/** What it did must be on the disk before it is answered for. */
+const changes = ({ method }: Request): boolean => method !== 'GET' && method !== 'HEAD';
+
 const guarded = async (context: APIContext, next: MiddlewareNext): Promise<Response> => {
   const path = context.url.pathname.replace(/(.)\/+$/, '$1');
   const isApi = path === '/api' || path.startsWith('/api/');
@@ -50,6 +53,7 @@ const guarded = async (context: APIContext, next: MiddlewareNext): Promise<Respo
       }
     }
     const response = await next();
+    if (isApi && changes(context.request)) await (await theDatabase()).settled();
     return isApi && response.status === 404 && !response.headers.has('content-type')
       ? problemResponse('not-found', 'There is nothing at this address.')
       : response;

@@ -7,6 +7,7 @@ import { drizzle as drizzlePostgres } from 'drizzle-orm/postgres-js';
 import { migrate as migratePostgres } from 'drizzle-orm/postgres-js/migrator';
 import postgres from 'postgres';
 import { holdFolder } from './folder-lock';
+import { folderSynced, logSynced } from './folder-sync';
 import { migrationsFolder } from './migrations-folder';
 import * as schema from './schema';
 
@@ -16,6 +17,8 @@ export type Db = PgDatabase<PgQueryResultHKT, typeof schema>;
 export interface OpenDatabase {
   readonly db: Db;
   readonly kind: 'pglite' | 'postgres';
+  /** Resolves once everything committed so far is on the disk; asked before a change is answered for. */
+  readonly settled: () => Promise<void>;
   /** Finishes what is running, writes everything out and lets go of the folder or the connections. */
   readonly close: () => Promise<void>;
 }
@@ -40,19 +43,21 @@ const openPostgres = async (url: string): Promise<OpenDatabase> => {
   }
   const client = postgres(url, { onnotice: () => {} });
   const db = drizzlePostgres(client, { schema }) as unknown as Db;
-  return { db, kind: 'postgres', close: () => client.end({ timeout: 5 }) };
+  // PostgreSQL has a commit on its disk before it answers.
+  return { db, kind: 'postgres', settled: async () => {}, close: () => client.end({ timeout: 5 }) };
 };
 
 /** Migrates a PGlite that is already open, such as one in memory for a test. */
 export const openPglite = async (
   client: PGlite,
   letGo: () => Promise<void> = async () => {},
+  settled: () => Promise<void> = async () => {},
 ): Promise<OpenDatabase> => {
   const db = drizzlePglite(client, { schema });
   await migratePglite(db, { migrationsFolder: migrationsFolder() });
   let closing: Promise<void> | null = null;
   const close = () => (closing ??= client.close().finally(letGo));
-  return { db: db as unknown as Db, kind: 'pglite', close };
+  return { db: db as unknown as Db, kind: 'pglite', settled, close };
 };
 
 const openFolder = async (dataDir: string): Promise<OpenDatabase> => {
@@ -61,7 +66,13 @@ const openFolder = async (dataDir: string): Promise<OpenDatabase> => {
   try {
     // Never relaxed: an answer leaves only after PGlite has handed the commit to the file system.
     const client = await PGlite.create(folder, { relaxedDurability: false });
-    return await openPglite(client, letGo);
+    const opened = await openPglite(
+      client,
+      () => folderSynced(folder).finally(letGo),
+      () => logSynced(folder),
+    );
+    await folderSynced(folder);
+    return opened;
   } catch (error) {
     await letGo();
     throw error;

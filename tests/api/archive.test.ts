@@ -84,7 +84,7 @@ test('read into an empty instance, an archive gives the very same archive again,
     expect((await visitor.get('/api/projects')).body).toEqual(projects);
     expect(await importFirm(other.db, archive)).toMatchObject({ ok: false, kind: 'invalid' });
   } finally {
-    useDatabase({ db: before, kind: 'pglite', close: async () => {} });
+    useDatabase({ db: before, kind: 'pglite', settled: async () => {}, close: async () => {} });
     await other.close();
   }
 });
