@@ -209,7 +209,7 @@ function circleCrossings(
     const ay = y[m] + ny[m] * radius - cy;
     const ex = x[o] - x[m];
     const ey = y[o] - y[m];
-    const size = Math.hypot(ex, ey);
+    const size = Math.sqrt(ex * ex + ey * ey);
     const away = nx[m] * ax + ny[m] * ay;
     if (Math.abs(away) < r) {
       const reach = Math.sqrt(r * r - away * away);
@@ -222,7 +222,7 @@ function circleCrossings(
     if (radius <= 0) continue;
     const qx = x[m] - cx;
     const qy = y[m] - cy;
-    const d = Math.hypot(qx, qy);
+    const d = Math.sqrt(qx * qx + qy * qy);
     if (d === 0 || d > r + radius || d < Math.abs(r - radius)) continue;
     const along = (d * d + r * r - radius * radius) / (2 * d);
     const turn = Math.acos(Math.max(-1, Math.min(1, along / r)));
@@ -232,15 +232,60 @@ function circleCrossings(
   }
 }
 
-/** How often the boundary winds round the point, keep-outs counted against the perimeter. */
-function groundHolds(chords: BoundaryChords, px: number, py: number): boolean {
-  const { count, ax, ay, bx, by, side } = chords;
-  let depth = 0;
+/** Chords by the bands of y that they reach into, for telling whether a point is in the ground. */
+interface GroundBands {
+  readonly chords: BoundaryChords;
+  readonly low: number;
+  readonly perMm: number;
+  /** Chords of band n: `of[start[n] … start[n + 1] − 1]`. */
+  readonly start: Int32Array;
+  readonly of: Int32Array;
+}
+
+function groundBands(chords: BoundaryChords): GroundBands {
+  const { count, ay, by } = chords;
+  let low = Infinity;
+  let high = -Infinity;
   for (let n = 0; n < count; n++) {
-    const low = ay[n] > py;
-    if (low === by[n] > py) continue;
+    low = Math.min(low, ay[n], by[n]);
+    high = Math.max(high, ay[n], by[n]);
+  }
+  const bands = Math.max(1, count >> 1);
+  const perMm = bands / (high - low);
+  const bandOf = (y: number) => Math.max(0, Math.min(bands - 1, Math.floor((y - low) * perMm)));
+  const start = new Int32Array(bands + 1);
+  const each = (visit: (band: number, chord: number) => void) => {
+    for (let n = 0; n < count; n++) {
+      const last = bandOf(Math.max(ay[n], by[n]));
+      for (let band = bandOf(Math.min(ay[n], by[n])); band <= last; band++) visit(band, n);
+    }
+  };
+  each((band) => start[band + 1]++);
+  for (let band = 0; band < bands; band++) start[band + 1] += start[band];
+  const next = start.slice();
+  const of = new Int32Array(start[bands]);
+  each((band, chord) => {
+    of[next[band]++] = chord;
+  });
+  return { chords, low, perMm, start, of };
+}
+
+/** True when the boundary winds round the point, keep-outs counted against the perimeter. */
+function groundHolds(
+  { chords, low, perMm, start, of }: GroundBands,
+  px: number,
+  py: number,
+): boolean {
+  const { ax, ay, bx, by, side } = chords;
+  const band = Math.floor((py - low) * perMm);
+  if (!(band >= 0 && band + 1 < start.length)) return false;
+  let depth = 0;
+  for (let at = start[band]; at < start[band + 1]; at++) {
+    const n = of[at];
+    const above = ay[n] > py;
+    if (above === by[n] > py) continue;
     if (px < ax[n] + ((py - ay[n]) / (by[n] - ay[n])) * (bx[n] - ax[n])) {
-      depth += (low ? -1 : 1) * side[n];
+      depth += (above ? -1 : 1) * side[n];
     }
   }
   return depth > 0;
@@ -298,7 +343,8 @@ export function clearBoundary(
   // Those along the same edge first: they cover the most.
   near.forEach((others, n) => others.sort((p, q) => Math.abs(p - n) - Math.abs(q - n)));
   const room: Room = { x0: [], y0: [], x1: [], y1: [], cx: [], cy: [], radius: [] };
-  for (let n = 0; n < count; n++) sweepPieces(chords, sweeps, n, near[n], room);
+  const ground = groundBands(chords);
+  for (let n = 0; n < count; n++) sweepPieces(ground, sweeps, n, near[n], room);
   joinEnds(room);
   return {
     count: room.x0.length,
@@ -344,7 +390,7 @@ function joinEnds({ x0, y0, x1, y1 }: Room): void {
 
 /** Adds the parts of one sweep's boundary that no other sweep covers and that lie in the ground. */
 function sweepPieces(
-  chords: BoundaryChords,
+  ground: GroundBands,
   sweeps: readonly Sweep[],
   own: number,
   near: readonly number[],
@@ -396,7 +442,7 @@ function sweepPieces(
     }
     // Corners go with the sides: each is looked at after the side that leads to it.
     if (radius > 0 && !cornerCovered(sweeps, near, x[o], y[o])) {
-      cornerPieces(chords, sweeps, sweep, o, m, near, put);
+      cornerPieces(ground, sweeps, sweep, o, m, near, put);
     }
     if (whole) continue;
     covered.sort((one, other) => one[0] - other[0]);
@@ -406,7 +452,7 @@ function sweepPieces(
       const to = Math.min(low, length);
       if (to - from > LEAST_PIECE_MM) {
         const middle = (from + to) / 2;
-        if (groundHolds(chords, px + dx * middle, py + dy * middle)) {
+        if (groundHolds(ground, px + dx * middle, py + dy * middle)) {
           // The sweep is left of its own sides, the clear region right: so turned round.
           put(px + dx * to, py + dy * to, px + dx * from, py + dy * from, 0, 0, 0);
         }
@@ -438,13 +484,13 @@ function cornerCovered(
 
 /** True when the disc at a sweep's corner lies outside the ground; `near` has every chord that could meet it. */
 function discOutside(
-  chords: BoundaryChords,
+  ground: GroundBands,
   near: readonly number[],
   cx: number,
   cy: number,
   radius: number,
 ): boolean {
-  const { ax, ay, bx, by } = chords;
+  const { ax, ay, bx, by } = ground.chords;
   for (const n of near) {
     const ex = bx[n] - ax[n];
     const ey = by[n] - ay[n];
@@ -455,12 +501,12 @@ function discOutside(
     const dy = py - at * ey;
     if (dx * dx + dy * dy <= radius * radius) return false;
   }
-  return !groundHolds(chords, cx, cy);
+  return !groundHolds(ground, cx, cy);
 }
 
 /** The same for the arc at corner `at`, between side `before` and the next. */
 function cornerPieces(
-  chords: BoundaryChords,
+  ground: GroundBands,
   sweeps: readonly Sweep[],
   { x, y, nx, ny, radius }: Sweep,
   at: number,
@@ -485,7 +531,7 @@ function cornerPieces(
   const short = (low: number, high: number) => (high - low) * radius < LEAST_PIECE_MM;
   for (let at = 0; at < near.length; at++) {
     // Most corners are gone after the neighbours; of the rest most lie outside the ground.
-    if (at === 4 && discOutside(chords, near, cx, cy, radius)) return;
+    if (at === 4 && discOutside(ground, near, cx, cy, radius)) return;
     const s = sweeps[near[at]];
     if (cx - radius > s.maxX || cx + radius < s.minX) continue;
     if (cy - radius > s.maxY || cy + radius < s.minY) continue;
@@ -514,7 +560,7 @@ function cornerPieces(
   for (let n = 0; n < left.length; n += 2) {
     const middle = from + (left[n] + left[n + 1]) / 2;
     const inGround = groundHolds(
-      chords,
+      ground,
       cx + radius * Math.cos(middle),
       cy + radius * Math.sin(middle),
     );
