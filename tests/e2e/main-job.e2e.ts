@@ -137,7 +137,7 @@ it('keeps a ring that crosses itself as drawn, shows where, and lays again after
   await page.keyboard.press('Enter');
   await expect.poll(() => page.getByText('cannot be laid yet').count()).toBe(1);
   await expect
-    .poll(() => page.getByText(/crosses itself at .* edge AB meets edge/).count())
+    .poll(() => page.getByText(/crosses itself at .* edge BC meets edge DA/).count())
     .toBe(1);
   await page.getByTestId('floor').focus();
   await page.keyboard.press('Control+z');
