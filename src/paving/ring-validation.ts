@@ -106,12 +106,15 @@ function tooIntricate(path: (string | number)[]): DocumentProblem {
   };
 }
 
-/** Where one ring crosses, touches or folds back on itself: the first such place, or null. */
-function ringProblem(ring: GroundRing, path: (string | number)[]): DocumentProblem | null {
+/** So many crossings of a ring are told at most. */
+const MOST_CROSSINGS = 8;
+
+/** Where one ring crosses itself; else the first place where it touches or folds back on itself. */
+function ringFaults(ring: GroundRing, path: (string | number)[]): DocumentProblem[] {
   const segments = ringSegments(ring);
   const edgeCount = ring.edges.length;
   let touching: DocumentProblem | null = null;
-  let crossing: DocumentProblem | null = null;
+  const crossings: DocumentProblem[] = [];
   for (let n = 0; n < segments.length && !touching; n++) {
     const next = segments[n + 1 === segments.length ? 0 : n + 1];
     if (foldsBack(segments[n].a, segments[n].b, next.b)) {
@@ -130,12 +133,12 @@ function ringProblem(ring: GroundRing, path: (string | number)[]): DocumentProbl
     const at = segmentsCross(one.a, one.b, other.a, other.b);
     if (at) {
       const [first, second] = [one.edge, other.edge].sort((p, q) => p - q);
-      crossing = {
+      crossings.push({
         path,
         message: `crosses itself at ${shownPlace(at)}, where edge ${edgeName(ring.ring, first, edgeCount)} meets edge ${edgeName(ring.ring, second, edgeCount)}; move a corner so that they part`,
         at,
-      };
-      return true;
+      });
+      return crossings.length >= MOST_CROSSINGS;
     }
     // Chords of one edge or of neighbours come near each other where they join; only those of
     // edges apart can touch by mistake.
@@ -157,7 +160,9 @@ function ringProblem(ring: GroundRing, path: (string | number)[]): DocumentProbl
     }
     return false;
   });
-  return crossing ?? touching ?? (checked ? null : tooIntricate(path));
+  if (crossings.length > 0) return crossings;
+  if (touching) return [touching];
+  return checked ? [] : [tooIntricate(path)];
 }
 
 /** Keep-outs that cross or leave the perimeter, or overlap each other, by more than 1 mm². */
@@ -262,9 +267,10 @@ export function ringProblems(ground: LayoutDocument['ground']): DocumentProblem[
   const problems: DocumentProblem[] = [];
   const rings = pathedRings(ground).map(({ vertices, path }, n) => {
     const ring = groundRing(vertices, n, null);
-    const problem = ringProblem(ring, path);
-    if (problem) problems.push(problem);
-    else if (!(ring.area > AREA_TOLERANCE_MM2)) {
+    const found = ringFaults(ring, path);
+    problems.push(...found);
+    if (found.length > 0) return ring;
+    if (!(ring.area > AREA_TOLERANCE_MM2)) {
       problems.push({
         path,
         message: 'has no area; place its corners so that they enclose some ground',

@@ -400,3 +400,23 @@ describe('floors too large', () => {
     expect(problem.path).toEqual(['placement', 'origin']);
   });
 });
+
+test('a ring that crosses itself twice is told of both places', () => {
+  const problems = problemsOf(
+    withPerimeter([
+      [0, 0],
+      [3000, 0],
+      [3000, 1000],
+      [2000, 1000],
+      [2000, -500],
+      [1000, -500],
+      [1000, 1000],
+      [0, 1000],
+    ]),
+  );
+  expect(problems.map(({ at }) => at?.map(Math.round)).sort()).toEqual([
+    [1000, 0],
+    [2000, 0],
+  ]);
+  expect(problems.map(({ message }) => message).join()).toMatch(/edge AB meets edge (DE|FG)/);
+});
