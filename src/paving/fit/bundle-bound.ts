@@ -3,7 +3,7 @@ import type { CellPieces } from './cell-pieces';
 /** Directions are gathered into this many bundles. */
 const BUNDLES = 12;
 /** Bundles of more lines than this are left alone: putting them in order would cost more than it saves. */
-const GREATEST_BUNDLE = 64;
+const GREATEST_BUNDLE = 128;
 
 /**
  * A bound for boxes through which pieces of many directions pass. Pieces of nearly one direction are

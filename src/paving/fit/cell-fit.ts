@@ -1,7 +1,7 @@
 import { cellPieces, type CellPieces } from './cell-pieces';
 import { unitCount } from './count';
 import type { FitFrame } from './fit-frame';
-import { cellMost, type CellBest } from './most';
+import { cellMost, type CellMost } from './most';
 import { nearPieces } from './near-pieces';
 import { cellTradeOff, type CellChoice } from './trade-off';
 
@@ -33,7 +33,7 @@ export function frameMost(frame: FitFrame, stop?: () => boolean) {
 export function frameChoices(
   frame: FitFrame,
   pieces: CellPieces,
-  most: CellBest,
+  most: CellMost,
   all: boolean,
   stop?: () => boolean,
 ): CellChoice[] {

@@ -26,6 +26,8 @@ export interface CellPieces {
   /** Units of piece n: `units[unitStart[n] … unitStart[n + 1] − 1]`, in order. */
   readonly unitStart: Int32Array;
   readonly units: Float64Array;
+  /** What each of a piece's units adds to the one before; 0 where that differs or there is but one. */
+  readonly stride: Float64Array;
   readonly families: { readonly nx: Float64Array; readonly ny: Float64Array };
   /** What one step along the row, and one row up, add to a unit's number. */
   readonly unitStep: { readonly along: number; readonly up: number };
@@ -88,6 +90,10 @@ function yAtX(x: number, b: ClearBoundary, n: number): number {
   return (b.y0[n] + b.y1[n]) / 2 >= b.cy[n] ? b.cy[n] + reach : b.cy[n] - reach;
 }
 
+function yInRow(x: number, b: ClearBoundary, n: number, j: number, rise: number): number {
+  return Math.max(0, Math.min(rise, yAtX(x, b, n) - j * rise));
+}
+
 /** Cuts one boundary piece at the cell's rows and columns; what is put is in the cell. */
 function cutPiece(
   b: ClearBoundary,
@@ -111,10 +117,10 @@ function cutPiece(
     const yb = last ? y1 - j * rise : up ? rise : 0;
     const yAtA = (up ? j : j + 1) * rise;
     const yAtB = (up ? j + 1 : j) * rise;
-    const across = (y: number) =>
-      pieceCrossing(y, x0, y0, x1, y1, b.cx[n], b.cy[n], b.radius[n]) - j * shift;
-    const xa = first ? x0 - j * shift : across(yAtA);
-    const xb = last ? x1 - j * shift : across(yAtB);
+    const xa =
+      (first ? x0 : pieceCrossing(yAtA, x0, y0, x1, y1, b.cx[n], b.cy[n], b.radius[n])) - j * shift;
+    const xb =
+      (last ? x1 : pieceCrossing(yAtB, x0, y0, x1, y1, b.cx[n], b.cy[n], b.radius[n])) - j * shift;
     const right = xb >= xa;
     const west = Math.floor(Math.min(xa, xb) / pitch);
     const east = Math.floor(Math.max(xa, xb) / pitch);
@@ -124,13 +130,32 @@ function cutPiece(
       const end = column === east - west;
       const xFrom = begin ? xa - i * pitch : right ? 0 : pitch;
       const xTo = end ? xb - i * pitch : right ? pitch : 0;
-      const at = (x: number) => yAtX(x + i * pitch + j * shift, b, n) - j * rise;
-      const yFrom = begin ? ya : Math.max(0, Math.min(rise, at(right ? 0 : pitch)));
-      const yTo = end ? yb : Math.max(0, Math.min(rise, at(right ? pitch : 0)));
+      const x = i * pitch + j * shift;
+      const yFrom = begin ? ya : yInRow(x + (right ? 0 : pitch), b, n, j, rise);
+      const yTo = end ? yb : yInRow(x + (right ? pitch : 0), b, n, j, rise);
       if (xFrom === xTo && yFrom === yTo) continue;
       put(xFrom, yFrom, xTo, yTo, i, j);
     }
   }
+}
+
+/** Numbers of the pieces, arcs first, then family by family, each in the order that `before` tells. */
+export function familyOrder(
+  family: ArrayLike<number>,
+  families: number,
+  before: (m: number, n: number) => number,
+): Int32Array {
+  const start = new Int32Array(families + 2);
+  for (let n = 0; n < family.length; n++) start[family[n] + 2]++;
+  for (let f = 0; f <= families; f++) start[f + 1] += start[f];
+  const order = new Int32Array(family.length);
+  for (let n = 0; n < family.length; n++) order[start[family[n] + 1]++] = n;
+  // Filling moved each start on to the next.
+  for (let f = 0; f <= families; f++) {
+    const from = f === 0 ? 0 : start[f - 1];
+    if (start[f] - from > 1) order.subarray(from, start[f]).sort(before);
+  }
+  return order;
 }
 
 /** The boundaries of a frame's regions in one cell. */
@@ -143,13 +168,11 @@ export function cellPieces(frame: FitFrame): CellPieces {
   let high = -Infinity;
   for (const b of clear) {
     for (let n = 0; n < b.count; n++) {
-      for (const [x, y] of [
-        [b.x0[n], b.y0[n]],
-        [b.x1[n], b.y1[n]],
-      ]) {
-        const j = Math.floor(y / rise);
-        left = Math.min(left, (x - j * shift) / pitch);
-        right = Math.max(right, (x - j * shift) / pitch);
+      for (let end = 0; end < 2; end++) {
+        const j = Math.floor((end === 0 ? b.y0[n] : b.y1[n]) / rise);
+        const along = ((end === 0 ? b.x0[n] : b.x1[n]) - j * shift) / pitch;
+        left = Math.min(left, along);
+        right = Math.max(right, along);
         low = Math.min(low, j);
         high = Math.max(high, j);
       }
@@ -167,42 +190,39 @@ export function cellPieces(frame: FitFrame): CellPieces {
   const family: number[] = [];
   const height: number[] = [];
   const sign: number[] = [];
-  clear.forEach((b, k) => {
-    for (let n = 0; n < b.count; n++) {
-      const f = families.of[k][n];
-      const nx = f < 0 ? 0 : families.nx[f];
-      const ny = f < 0 ? 0 : families.ny[f];
-      const rises = (b.x1[n] - b.x0[n]) * -ny + (b.y1[n] - b.y0[n]) * nx < 0;
-      cutPiece(b, n, frame, (x0, y0, x1, y1, i, j) => {
-        cut.x0.push(x0);
-        cut.y0.push(y0);
-        cut.x1.push(x1);
-        cut.y1.push(y1);
-        cut.unit.push((k * rows + (j - firstJ)) * columns + (i - firstI));
-        radius.push(b.radius[n]);
-        cx.push(b.cx[n] - i * pitch - j * shift);
-        cy.push(b.cy[n] - j * rise);
-        family.push(f);
-        height.push(((x0 + x1) / 2) * nx + ((y0 + y1) / 2) * ny);
-        sign.push(rises ? 1 : -1);
-      });
+  let b = clear[0];
+  let k = 0;
+  let n = 0;
+  let f = -1;
+  let nx = 0;
+  let ny = 0;
+  let rises = 1;
+  const put = (x0: number, y0: number, x1: number, y1: number, i: number, j: number) => {
+    cut.x0.push(x0);
+    cut.y0.push(y0);
+    cut.x1.push(x1);
+    cut.y1.push(y1);
+    cut.unit.push((k * rows + (j - firstJ)) * columns + (i - firstI));
+    radius.push(b.radius[n]);
+    cx.push(b.cx[n] - i * pitch - j * shift);
+    cy.push(b.cy[n] - j * rise);
+    family.push(f);
+    height.push(((x0 + x1) / 2) * nx + ((y0 + y1) / 2) * ny);
+    sign.push(rises);
+  };
+  for (k = 0; k < clear.length; k++) {
+    b = clear[k];
+    for (n = 0; n < b.count; n++) {
+      f = families.of[k][n];
+      nx = f < 0 ? 0 : families.nx[f];
+      ny = f < 0 ? 0 : families.ny[f];
+      rises = (b.x1[n] - b.x0[n]) * -ny + (b.y1[n] - b.y0[n]) * nx < 0 ? 1 : -1;
+      cutPiece(b, n, frame, put);
     }
-  });
-  const order = Array.from({ length: radius.length }, (_, n) => n).sort(
-    (m, n) =>
-      family[m] - family[n] ||
-      height[m] - height[n] ||
-      cut.x0[m] - cut.x0[n] ||
-      cut.y0[m] - cut.y0[n],
-  );
-  const same = (m: number, n: number) =>
-    family[m] === family[n] &&
-    sign[m] === sign[n] &&
-    radius[m] === radius[n] &&
-    Math.abs(cut.x0[m] - cut.x0[n]) < SAME_PLACE_MM &&
-    Math.abs(cut.y0[m] - cut.y0[n]) < SAME_PLACE_MM &&
-    Math.abs(cut.x1[m] - cut.x1[n]) < SAME_PLACE_MM &&
-    Math.abs(cut.y1[m] - cut.y1[n]) < SAME_PLACE_MM;
+  }
+  const before = (m: number, n: number) =>
+    height[m] - height[n] || cut.x0[m] - cut.x0[n] || cut.y0[m] - cut.y0[n];
+  const order = familyOrder(family, families.nx.length, before);
   // Among those at nearly the same height, pieces that lie on one another are one.
   const kept: number[] = [];
   const owners: number[][] = [];
@@ -212,7 +232,14 @@ export function cellPieces(frame: FitFrame): CellPieces {
       const other = kept[m];
       if (family[other] !== family[n]) break;
       if (family[n] >= 0 && height[n] - height[other] > SAME_PLACE_MM) break;
-      if (same(other, n)) {
+      if (
+        sign[other] === sign[n] &&
+        radius[other] === radius[n] &&
+        Math.abs(cut.x0[other] - cut.x0[n]) < SAME_PLACE_MM &&
+        Math.abs(cut.y0[other] - cut.y0[n]) < SAME_PLACE_MM &&
+        Math.abs(cut.x1[other] - cut.x1[n]) < SAME_PLACE_MM &&
+        Math.abs(cut.y1[other] - cut.y1[n]) < SAME_PLACE_MM
+      ) {
         twin = m;
         break;
       }
@@ -226,26 +253,51 @@ export function cellPieces(frame: FitFrame): CellPieces {
   }
   const count = kept.length;
   const unitStart = new Int32Array(count + 1);
-  const units: number[] = [];
-  owners.forEach((own, n) => {
-    own.sort((p, q) => p - q);
-    units.push(...own);
-    unitStart[n + 1] = units.length;
-  });
-  return {
+  const units = new Float64Array(cut.unit.length);
+  const stride = new Float64Array(count);
+  for (let n = 0; n < count; n++) {
+    const own = owners[n];
+    const from = unitStart[n];
+    for (let at = 0; at < own.length; at++) units[from + at] = own[at];
+    unitStart[n + 1] = from + own.length;
+    if (own.length < 2) continue;
+    units.subarray(from, from + own.length).sort();
+    const by = units[from + 1] - units[from];
+    let at = from + 2;
+    while (at < from + own.length && units[at] - units[at - 1] === by) at++;
+    if (at === from + own.length) stride[n] = by;
+  }
+  const pieces = {
     count,
-    x0: Float64Array.from(kept, (n) => cut.x0[n]),
-    y0: Float64Array.from(kept, (n) => cut.y0[n]),
-    x1: Float64Array.from(kept, (n) => cut.x1[n]),
-    y1: Float64Array.from(kept, (n) => cut.y1[n]),
-    cx: Float64Array.from(kept, (n) => cx[n]),
-    cy: Float64Array.from(kept, (n) => cy[n]),
-    radius: Float64Array.from(kept, (n) => radius[n]),
-    family: Int32Array.from(kept, (n) => family[n]),
-    height: Float64Array.from(kept, (n) => height[n]),
-    step: Int32Array.from(kept, (n, m) => sign[n] * owners[m].length),
+    x0: new Float64Array(count),
+    y0: new Float64Array(count),
+    x1: new Float64Array(count),
+    y1: new Float64Array(count),
+    cx: new Float64Array(count),
+    cy: new Float64Array(count),
+    radius: new Float64Array(count),
+    family: new Int32Array(count),
+    height: new Float64Array(count),
+    step: new Int32Array(count),
+  };
+  for (let m = 0; m < count; m++) {
+    const n = kept[m];
+    pieces.x0[m] = cut.x0[n];
+    pieces.y0[m] = cut.y0[n];
+    pieces.x1[m] = cut.x1[n];
+    pieces.y1[m] = cut.y1[n];
+    pieces.cx[m] = cx[n];
+    pieces.cy[m] = cy[n];
+    pieces.radius[m] = radius[n];
+    pieces.family[m] = family[n];
+    pieces.height[m] = height[n];
+    pieces.step[m] = sign[n] * owners[m].length;
+  }
+  return {
+    ...pieces,
     unitStart,
-    units: Float64Array.from(units),
+    units,
+    stride,
     families: { nx: families.nx, ny: families.ny },
     unitStep: { along: 1, up: columns },
   };

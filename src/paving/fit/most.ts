@@ -2,6 +2,7 @@ import { bundleAdd, bundlesEmptied, bundlesGain, bundlesOf } from './bundle-boun
 import type { CellPieces } from './cell-pieces';
 import { pieceCrossing } from './count';
 import { leafFaces } from './leaf';
+import { pieceGrid } from './piece-grid';
 
 /** An origin in the cell and how many units are whole there. */
 export interface CellBest {
@@ -12,6 +13,10 @@ export interface CellBest {
 
 /** A box that this few pieces cross is solved outright. */
 const LEAF_PIECES = 6;
+/** Cells with more pieces and directions than these are looked into square by square from the start. */
+const MANY_PIECES = 500;
+const MANY_FAMILIES = 24;
+const GRID_SQUARES = 512;
 /** In boxes that more pieces cross than this, bundles of nearly parallel ones are too many to bound much. */
 const BUNDLED_PIECES = 400;
 /** Boxes smaller than this, mm, are left: no start holds its count for less than `FIT_MARGIN_MM` about it. */
@@ -19,7 +24,7 @@ const SMALLEST_BOX_MM = 2e-7;
 /** What comes no further into a box than this, mm, only touches it. */
 const TOUCH_MM = 1e-8;
 /** Where boxes are halved and looked into: off the middle, so as not to fall on what lies symmetrically. */
-const SPLIT = 0.48713;
+export const SPLIT = 0.48713;
 
 /** Count at (u1, v1) from that at (u0, v0) by the pieces that the way along u, then along v, crosses. */
 export function depthMoved(
@@ -74,6 +79,20 @@ export function depthMoved(
   return sum;
 }
 
+/** Boxes of the cell, and the count at the point of each that `SPLIT` tells. */
+export interface CellBoxes {
+  readonly x0: number[];
+  readonly y0: number[];
+  readonly x1: number[];
+  readonly y1: number[];
+  readonly depth: number[];
+}
+
+/** The most units, with boxes that hold every origin that has them. */
+export interface CellMost extends CellBest {
+  readonly boxes: CellBoxes;
+}
+
 /**
  * The most units that any origin of the cell gives, and one that gives them: branch and bound over boxes. A box's bound is the count at a point of it and what could be gained on the way to any
  * other: for each family of parallel pieces that cross all of the box the best height among them,
@@ -86,8 +105,8 @@ export function cellMost(
   rise: number,
   start: CellBest,
   stop?: () => boolean,
-): CellBest {
-  const { x0, y0, x1, y1, family, height, step, families } = pieces;
+): CellMost {
+  const { families } = pieces;
   const bundles = bundlesOf(pieces);
   const familyX = families.nx;
   const familyY = families.ny;
@@ -96,6 +115,15 @@ export function cellMost(
   let bestV = start.v;
   let arena = new Int32Array(Math.max(1 << 14, 8 * pieces.count));
   let top = 0;
+  // West, east, south, north of each piece.
+  const sides = new Float64Array(4 * pieces.count);
+  for (let n = 0; n < pieces.count; n++) {
+    const { x0, y0, x1, y1 } = pieces;
+    sides[4 * n] = Math.min(x0[n], x1[n]);
+    sides[4 * n + 1] = Math.max(x0[n], x1[n]);
+    sides[4 * n + 2] = Math.min(y0[n], y1[n]);
+    sides[4 * n + 3] = Math.max(y0[n], y1[n]);
+  }
   // Boxes waiting, by bound; within a bound the last in is the first out.
   const waiting: number[][] = [];
   const boxX0: number[] = [];
@@ -106,6 +134,9 @@ export function cellMost(
   const boxFrom: number[] = [];
   const boxTo: number[] = [];
   let highest = 0;
+  // Boxes that hold no more than the best known, but may hold as many.
+  const tied: CellBoxes = { x0: [], y0: [], x1: [], y1: [], depth: [] };
+  let tiedAt = best;
 
   const offer = (count: number, u: number, v: number) => {
     if (count <= best) return;
@@ -114,7 +145,23 @@ export function cellMost(
     bestV = v;
   };
 
-  /** Looks into a box with the pieces list[from … to − 1] of a box about it; keeps it if it may hold more. */
+  const tie = (bound: number, ax: number, ay: number, bx: number, by: number, depth: number) => {
+    if (bound < best) return;
+    if (tiedAt < best) {
+      for (const values of [tied.x0, tied.y0, tied.x1, tied.y1, tied.depth]) values.length = 0;
+      tiedAt = best;
+    }
+    tied.x0.push(ax);
+    tied.y0.push(ay);
+    tied.x1.push(bx);
+    tied.y1.push(by);
+    tied.depth.push(depth);
+  };
+
+  /**
+   * Looks into a box with the pieces list[from … to − 1] of a box about it; keeps it if it may hold
+   * more. The count is known at a point of the box, its edge included. Returns that at the box's own point.
+   */
   const look = (
     from: number,
     to: number,
@@ -125,11 +172,10 @@ export function cellMost(
     ay: number,
     bx: number,
     by: number,
-  ) => {
+  ): number => {
+    const { x0, y0, x1, y1, cx, cy, radius, family, height, step } = pieces;
     const u = ax + (bx - ax) * SPLIT;
     const v = ay + (by - ay) * SPLIT;
-    const depth = depthMoved(pieces, arena, from, to, refU, refV, u, v, refDepth);
-    offer(depth, u, v);
     const mx = (ax + bx) / 2;
     const my = (ay + by) / 2;
     const hx = (bx - ax) / 2;
@@ -143,6 +189,18 @@ export function cellMost(
     const inAy = ay + TOUCH_MM;
     const inBx = bx - TOUCH_MM;
     const inBy = by - TOUCH_MM;
+    const outAx = ax - TOUCH_MM;
+    const outAy = ay - TOUCH_MM;
+    const outBx = bx + TOUCH_MM;
+    const outBy = by + TOUCH_MM;
+    // The way to (u, v): along u first, then along v.
+    const right = u > refU;
+    const west = right ? refU : u;
+    const east = right ? u : refU;
+    const up = v > refV;
+    const south = up ? refV : v;
+    const north = up ? v : refV;
+    let depth = refDepth;
     const own = top;
     const list = arena;
     let end = top;
@@ -158,95 +216,136 @@ export function cellMost(
     let otherGain = 0;
     let other = -1;
     let otherAt = 0;
-    for (let a = from; a < to;) {
-      const f = family[list[a]];
-      if (f < 0) {
-        const n = list[a++];
-        const px = x0[n];
-        const py = y0[n];
-        const qx = x1[n];
-        const qy = y1[n];
-        if (px < qx ? px > inBx || qx < inAx : qx > inBx || px < inAx) continue;
-        if (py < qy ? py > inBy || qy < inAy : qy > inBy || py < inAy) continue;
-        if (!arcMeetsBox(pieces, n, ax, ay, bx, by)) continue;
-        list[end++] = n;
-        if (!arcOnlyTakes(pieces, n, u, v)) gain += step[n] > 0 ? step[n] : -step[n];
-        continue;
-      }
-      // One family: its pieces come by height, and the count rises or falls by each in turn.
-      const nx = familyX[f];
-      const ny = familyY[f];
-      const middle = nx * mx + ny * my;
-      const half = (nx < 0 ? -nx : nx) * hx + (ny < 0 ? -ny : ny) * hy;
-      const low = middle - half + TOUCH_MM;
-      const high = middle + half - TOUCH_MM;
-      const ref = nx * u + ny * v;
-      let sum = 0;
-      let most = 0;
-      let before = 0;
-      let mostFrom = low;
-      let mostTo = high;
-      let open = true;
-      for (; a < to; a++) {
-        const n = list[a];
-        if (family[n] !== f) break;
-        const t = height[n];
-        if (t < low || t > high) continue;
-        const px = x0[n];
-        const py = y0[n];
-        const qx = x1[n];
-        const qy = y1[n];
-        if (px < qx ? px > inBx || qx < inAx : qx > inBx || px < inAx) continue;
-        if (py < qy ? py > inBy || qy < inAy : qy > inBy || py < inAy) continue;
-        list[end++] = n;
-        const through =
-          !(px > inAx && px < inBx && py > inAy && py < inBy) &&
-          !(qx > inAx && qx < inBx && qy > inAy && qy < inBy);
-        const change = step[n];
-        if (!through) {
-          if (change > 0) {
-            if (ref < t) gain += change;
-          } else if (ref > t) gain -= change;
+    // One family: its pieces come by height, and the count rises or falls by each in turn.
+    let current = -1;
+    let middle = 0;
+    let low = 0;
+    let high = 0;
+    let ref = 0;
+    let sum = 0;
+    let most = 0;
+    let before = 0;
+    let mostFrom = 0;
+    let mostTo = 0;
+    let open = true;
+    for (let a = from; a <= to; a++) {
+      const n = a < to ? list[a] : -1;
+      const f = a < to ? family[n] : -1;
+      if (a < to) {
+        const s = 4 * n;
+        if (
+          sides[s] > outBx ||
+          sides[s + 1] < outAx ||
+          sides[s + 2] > outBy ||
+          sides[s + 3] < outAy
+        )
           continue;
+      }
+      if (f !== current) {
+        if (current >= 0 && most > before) {
+          const more = most - before;
+          familyGain += more;
+          if (bundled) bundles.gain[bundles.of[current]] += more;
+          const at = (mostFrom + mostTo) / 2;
+          if (more > oneGain) {
+            other = one;
+            otherGain = oneGain;
+            otherAt = oneAt;
+            one = current;
+            oneGain = more;
+            oneAt = at;
+          } else if (more > otherGain) {
+            other = current;
+            otherGain = more;
+            otherAt = at;
+          }
         }
-        if (open) {
-          open = false;
-          mostTo = t;
-        }
-        if (bundled) bundleAdd(bundles, f, t - middle, hx, hy, change, t < ref);
-        sum += change;
-        if (t < ref) before = sum;
-        if (sum > most) {
-          most = sum;
-          mostFrom = t;
+        current = f;
+        if (f >= 0) {
+          const nx = familyX[f];
+          const ny = familyY[f];
+          middle = nx * mx + ny * my;
+          const half = (nx < 0 ? -nx : nx) * hx + (ny < 0 ? -ny : ny) * hy;
+          low = middle - half + TOUCH_MM;
+          high = middle + half - TOUCH_MM;
+          ref = nx * u + ny * v;
+          sum = 0;
+          most = 0;
+          before = 0;
+          mostFrom = low;
           mostTo = high;
           open = true;
         }
       }
-      const more = most - before;
-      if (more <= 0) continue;
-      familyGain += more;
-      if (bundled) bundles.gain[bundles.of[f]] += more;
-      const at = (mostFrom + mostTo) / 2;
-      if (more > oneGain) {
-        other = one;
-        otherGain = oneGain;
-        otherAt = oneAt;
-        one = f;
-        oneGain = more;
-        oneAt = at;
-      } else if (more > otherGain) {
-        other = f;
-        otherGain = more;
-        otherAt = at;
+      if (a === to) break;
+      const t = height[n];
+      if (f >= 0 && (t < low - 2 * TOUCH_MM || t > high + 2 * TOUCH_MM)) continue;
+      const px = x0[n];
+      const py = y0[n];
+      const qx = x1[n];
+      const qy = y1[n];
+      const change = step[n];
+      if (west !== east && py > refV !== qy > refV) {
+        const x =
+          f >= 0
+            ? px + ((refV - py) / (qy - py)) * (qx - px)
+            : pieceCrossing(refV, px, py, qx, qy, cx[n], cy[n], radius[n]);
+        if (x > west && x <= east) {
+          const weight = change > 0 ? change : -change;
+          depth += qy > py === right ? -weight : weight;
+        }
+      }
+      if (south !== north && px > u !== qx > u) {
+        const y =
+          f >= 0
+            ? py + ((u - px) / (qx - px)) * (qy - py)
+            : pieceCrossing(u, py, px, qy, qx, cy[n], cx[n], radius[n]);
+        if (y > south && y <= north) {
+          const weight = change > 0 ? change : -change;
+          depth += qx > px === up ? weight : -weight;
+        }
+      }
+      if (px < qx ? px > inBx || qx < inAx : qx > inBx || px < inAx) continue;
+      if (py < qy ? py > inBy || qy < inAy : qy > inBy || py < inAy) continue;
+      if (f < 0) {
+        if (!arcMeetsBox(pieces, n, ax, ay, bx, by)) continue;
+        list[end++] = n;
+        if (!arcOnlyTakes(pieces, n, u, v)) gain += change > 0 ? change : -change;
+        continue;
+      }
+      if (t < low || t > high) continue;
+      list[end++] = n;
+      const through =
+        !(px > inAx && px < inBx && py > inAy && py < inBy) &&
+        !(qx > inAx && qx < inBx && qy > inAy && qy < inBy);
+      if (!through) {
+        if (change > 0) {
+          if (ref < t) gain += change;
+        } else if (ref > t) gain -= change;
+        continue;
+      }
+      if (open) {
+        open = false;
+        mostTo = t;
+      }
+      if (bundled) bundleAdd(bundles, f, t - middle, hx, hy, change, t < ref);
+      sum += change;
+      if (t < ref) before = sum;
+      if (sum > most) {
+        most = sum;
+        mostFrom = t;
+        mostTo = high;
+        open = true;
       }
     }
+    offer(depth, u, v);
     top = end;
     const bound =
       depth + gain + (bundled ? Math.min(familyGain, bundlesGain(bundles)) : familyGain);
     if (bound <= best) {
+      tie(bound, ax, ay, bx, by, depth);
       top = own;
-      return;
+      return depth;
     }
     if (2 * (oneGain + otherGain) >= bound - depth && one >= 0) {
       // Two families promise most of it: where their best heights meet, or as near as one alone can be had.
@@ -266,20 +365,23 @@ export function cellMost(
       if (cu > ax && cu < bx && cv > ay && cv < by) {
         offer(depthMoved(pieces, arena, own, top, u, v, cu, cv, depth), cu, cv);
         if (bound <= best) {
+          tie(bound, ax, ay, bx, by, depth);
           top = own;
-          return;
+          return depth;
         }
       }
     }
     if (top - own <= LEAF_PIECES) {
       const box = { x0: ax, y0: ay, x1: bx, y1: by };
       leafFaces(pieces, arena, own, top, box, u, v, depth, () => best + 1, offer);
+      tie(bound, ax, ay, bx, by, depth);
       top = own;
-      return;
+      return depth;
     }
     if (hx * 2 < SMALLEST_BOX_MM && hy * 2 < SMALLEST_BOX_MM) {
+      tie(bound, ax, ay, bx, by, depth);
       top = own;
-      return;
+      return depth;
     }
     const id = boxX0.length;
     boxX0.push(ax);
@@ -289,15 +391,54 @@ export function cellMost(
     boxDepth.push(depth);
     boxFrom.push(own);
     boxTo.push(top);
-    (waiting[bound] ??= []).push(id);
+    (waiting[bound - start.count] ??= []).push(id);
     if (bound > highest) highest = bound;
+    return depth;
   };
 
   for (let n = 0; n < pieces.count; n++) arena[top++] = n;
-  look(0, top, start.u, start.v, start.count, 0, 0, pitch, rise);
+  if (pieces.count < MANY_PIECES || familyX.length < MANY_FAMILIES) {
+    look(0, top, start.u, start.v, start.count, 0, 0, pitch, rise);
+  } else {
+    // Boxes larger than a grid's squares have no bound that tells: begin with these.
+    const across = Math.sqrt((GRID_SQUARES * pitch) / rise);
+    const columns = Math.max(1, Math.round(across));
+    const rows = Math.max(1, Math.round(GRID_SQUARES / across));
+    const { x, y, start: first, of } = pieceGrid(pieces, 0, 0, pitch, rise, columns, rows);
+    let rowU = 0;
+    let rowV = 0;
+    let rowDepth = depthMoved(pieces, arena, 0, top, start.u, start.v, 0, 0, start.count);
+    for (let row = 0; row < rows; row++) {
+      let u = rowU;
+      let v = rowV;
+      let depth = rowDepth;
+      for (let column = 0; column < columns; column++) {
+        const square = row * columns + column;
+        const from = top;
+        const to = top + first[square + 1] - first[square];
+        if (to > arena.length) {
+          const larger = new Int32Array(2 * to);
+          larger.set(arena);
+          arena = larger;
+        }
+        arena.set(of.subarray(first[square], first[square + 1]), from);
+        top = to;
+        depth = look(from, to, u, v, depth, x[column], y[row], x[column + 1], y[row + 1]);
+        u = x[column] + (x[column + 1] - x[column]) * SPLIT;
+        v = y[row] + (y[row + 1] - y[row]) * SPLIT;
+        if (column === 0) {
+          rowU = u;
+          rowV = y[row + 1];
+          rowDepth = depthMoved(pieces, arena, from, to, u, v, rowU, rowV, depth);
+        }
+        depth = depthMoved(pieces, arena, from, to, u, v, x[column + 1], v, depth);
+        u = x[column + 1];
+      }
+    }
+  }
   let rounds = 0;
   while (highest > best) {
-    const stack = waiting[highest];
+    const stack = waiting[highest - start.count];
     if (!stack || stack.length === 0) {
       highest--;
       continue;
@@ -314,16 +455,17 @@ export function cellMost(
     const to = boxTo[id];
     const depth = boxDepth[id];
     if (bx - ax >= by - ay) {
-      const cut = ax + (bx - ax) * SPLIT;
-      look(from, to, u, v, depth, ax, ay, cut, by);
-      look(from, to, u, v, depth, cut, ay, bx, by);
+      look(from, to, u, v, depth, ax, ay, u, by);
+      look(from, to, u, v, depth, u, ay, bx, by);
     } else {
-      const cut = ay + (by - ay) * SPLIT;
-      look(from, to, u, v, depth, ax, ay, bx, cut);
-      look(from, to, u, v, depth, ax, cut, bx, by);
+      look(from, to, u, v, depth, ax, ay, bx, v);
+      look(from, to, u, v, depth, ax, v, bx, by);
     }
   }
-  return { count: best, u: bestU, v: bestV };
+  for (const id of waiting[best - start.count] ?? [])
+    tie(best, boxX0[id], boxY0[id], boxX1[id], boxY1[id], boxDepth[id]);
+  if (tiedAt < best) throw new Error(`no box holds the ${best} units at [${bestU}, ${bestV}]`);
+  return { count: best, u: bestU, v: bestV, boxes: tied };
 }
 
 /** False when the arc's circle passes the box by, or runs all round it. */

@@ -1,4 +1,4 @@
-import type { CellPieces } from './cell-pieces';
+import { familyOrder, type CellPieces } from './cell-pieces';
 
 /**
  * The pieces of a cell and their repeats as far as `reach` beyond it on every side, in the same
@@ -35,43 +35,60 @@ export function nearPieces(
       }
     }
   }
-  const height = from.map((n, m) =>
-    family[n] < 0
-      ? 0
-      : pieces.height[n] + du[m] * families.nx[family[n]] + dv[m] * families.ny[family[n]],
+  const size = from.length;
+  const pieceHeight = new Float64Array(size);
+  const pieceFamily = new Int32Array(size);
+  for (let m = 0; m < size; m++) {
+    const f = family[from[m]];
+    pieceFamily[m] = f;
+    if (f >= 0)
+      pieceHeight[m] = pieces.height[from[m]] + du[m] * families.nx[f] + dv[m] * families.ny[f];
+  }
+  const order = familyOrder(
+    pieceFamily,
+    families.nx.length,
+    (m, n) => pieceHeight[m] - pieceHeight[n],
   );
-  const order = from.map((_, m) => m);
-  order.sort((m, n) => family[from[m]] - family[from[n]] || height[m] - height[n]);
-  const moved = (values: Float64Array, by: readonly number[]) =>
-    Float64Array.from(order, (m) => values[from[m]] + by[m]);
-  const unitStart = new Int32Array(order.length + 1);
-  let total = 0;
-  order.forEach((m, n) => {
-    total += pieces.unitStart[from[m] + 1] - pieces.unitStart[from[m]];
-    unitStart[n + 1] = total;
-  });
-  const units = new Float64Array(total);
-  order.forEach((m, n) => {
-    const start = pieces.unitStart[from[m]];
-    for (let at = unitStart[n]; at < unitStart[n + 1]; at++) {
-      units[at] = pieces.units[start + at - unitStart[n]] + offset[m];
-    }
-  });
-  return {
-    count: order.length,
-    x0: moved(x0, du),
-    y0: moved(y0, dv),
-    x1: moved(x1, du),
-    y1: moved(y1, dv),
-    cx: moved(pieces.cx, du),
-    cy: moved(pieces.cy, dv),
-    radius: Float64Array.from(order, (m) => pieces.radius[from[m]]),
-    family: Int32Array.from(order, (m) => family[from[m]]),
-    height: Float64Array.from(order, (m) => height[m]),
-    step: Int32Array.from(order, (m) => pieces.step[from[m]]),
-    unitStart,
-    units,
-    families,
-    unitStep,
+  const near = {
+    count: size,
+    x0: new Float64Array(size),
+    y0: new Float64Array(size),
+    x1: new Float64Array(size),
+    y1: new Float64Array(size),
+    cx: new Float64Array(size),
+    cy: new Float64Array(size),
+    radius: new Float64Array(size),
+    family: new Int32Array(size),
+    height: new Float64Array(size),
+    step: new Int32Array(size),
+    stride: new Float64Array(size),
+    unitStart: new Int32Array(size + 1),
   };
+  let total = 0;
+  for (let m = 0; m < size; m++) {
+    const at = order[m];
+    const n = from[at];
+    near.x0[m] = x0[n] + du[at];
+    near.y0[m] = y0[n] + dv[at];
+    near.x1[m] = x1[n] + du[at];
+    near.y1[m] = y1[n] + dv[at];
+    near.cx[m] = pieces.cx[n] + du[at];
+    near.cy[m] = pieces.cy[n] + dv[at];
+    near.radius[m] = pieces.radius[n];
+    near.family[m] = pieceFamily[at];
+    near.height[m] = pieceHeight[at];
+    near.step[m] = pieces.step[n];
+    near.stride[m] = pieces.stride[n];
+    total += pieces.unitStart[n + 1] - pieces.unitStart[n];
+    near.unitStart[m + 1] = total;
+  }
+  const units = new Float64Array(total);
+  for (let m = 0; m < size; m++) {
+    const at = order[m];
+    let unit = pieces.unitStart[from[at]];
+    for (let to = near.unitStart[m]; to < near.unitStart[m + 1]; to++) {
+      units[to] = pieces.units[unit++] + offset[at];
+    }
+  }
+  return { ...near, units, families, unitStep };
 }

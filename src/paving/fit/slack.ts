@@ -98,6 +98,60 @@ export function pieceHasUnit({ unitStart, units }: CellPieces, n: number, unit: 
   return low < unitStart[n + 1] && units[low] === unit;
 }
 
+/** Runs of more units than this are held against each other as runs. */
+const LONG_RUN = 4;
+
+/** The same for a piece whose units follow one another by one stride. */
+function runApart(
+  pieces: CellPieces,
+  n: number,
+  list: Int32Array,
+  order: Int32Array,
+  count: number,
+  enough: number,
+): number {
+  const { unitStart, units, stride } = pieces;
+  const from = unitStart[n];
+  const total = unitStart[n + 1] - from;
+  const by = stride[n];
+  // Stretches of the run that others have, and others that go by another stride.
+  const low: number[] = [];
+  const high: number[] = [];
+  const odd: number[] = [];
+  for (let m = 0; m < count; m++) {
+    const other = list[order[m]];
+    const size = unitStart[other + 1] - unitStart[other];
+    if (size > 1 && stride[other] !== by) {
+      odd.push(other);
+      continue;
+    }
+    const at = (units[unitStart[other]] - units[from]) / by;
+    if (at !== Math.floor(at) || at >= total || at + size <= 0) continue;
+    let place = low.length;
+    for (; place > 0 && low[place - 1] > at; place--) {
+      low[place] = low[place - 1];
+      high[place] = high[place - 1];
+    }
+    low[place] = at;
+    high[place] = at + size;
+  }
+  let apart = 0;
+  let next = 0;
+  for (let m = 0; m <= low.length; m++) {
+    const end = m < low.length ? Math.min(total, low[m]) : total;
+    if (odd.length === 0) apart += Math.max(0, end - next);
+    else {
+      for (let at = next; at < end && apart < enough; at++) {
+        const unit = units[from + at];
+        if (!odd.some((other) => pieceHasUnit(pieces, other, unit))) apart++;
+      }
+    }
+    if (apart >= enough) return Math.min(apart, enough);
+    if (m < low.length && high[m] > next) next = high[m];
+  }
+  return apart;
+}
+
 /** How many of piece n's units none of the pieces list[order[0 … count − 1]] has; at most `enough` are looked for. */
 export function unitsApart(
   pieces: CellPieces,
@@ -112,6 +166,9 @@ export function unitsApart(
   const to = unitStart[n + 1];
   const total = to - from;
   if (count === 0) return total;
+  if (total > LONG_RUN && pieces.stride[n] > 0) {
+    return runApart(pieces, n, list, order, count, enough);
+  }
   let apart = 0;
   // From the middle of the run outward: units at its ends are those that share corners.
   for (let step = 0; step < total; step++) {

@@ -1,6 +1,7 @@
 import { LENGTH_TOLERANCE_MM } from '@/geometry/tolerance';
 import type { CellPieces } from './cell-pieces';
-import { arcMeetsBox, arcOnlyTakes, depthMoved, type CellBest } from './most';
+import { arcMeetsBox, arcOnlyTakes, depthMoved, SPLIT, type CellMost } from './most';
+import { pieceGrid } from './piece-grid';
 import { KEEP_OFF_MM, pieceGap, pieceGapsRoom, pointSlack, unitsApart } from './slack';
 import { slackPolished } from './slack-polish';
 
@@ -14,7 +15,6 @@ export interface CellChoice {
 
 /** No origin of the same count has this much more slack than the one that is given, mm. */
 export const SLACK_TOLERANCE_MM = 0.004;
-const SPLIT = 0.48713;
 const TOUCH_MM = 1e-8;
 /** Up to this many pieces through a box, each is held against each to see which tell a unit's whole edge there. */
 const FEW_THROUGH = 32;
@@ -26,6 +26,10 @@ const COARSE_SAMPLE = 8;
 const NEAREST = 28;
 /** Up to this many pieces that no origin of a box loses are set against each other. */
 const GREATEST_HELD = 8;
+/** The grid by which the pieces near a box are found has no more squares each way. */
+const GRID_LINES = 32;
+/** Places that a level of boxes has for pieces at first. */
+const FIRST_ROOM = 256;
 /** Below this, mm, a box is left. */
 const SMALLEST_BOX_MM = 1e-5;
 
@@ -58,8 +62,8 @@ const levelOf = (size: number): Level => ({
 export interface TradeOffOptions {
   /** Counts below this are of no interest. */
   readonly least: number;
-  /** The most there is, with an origin that has it. */
-  readonly most: CellBest;
+  /** The most there is, with an origin that has it and boxes that hold all that have. */
+  readonly most: CellMost;
   readonly stop?: () => boolean;
 }
 
@@ -302,7 +306,9 @@ export function cellTradeOff(
         continue;
       }
       const d = room.distance[at];
-      const apart = unitsApart(near, local[at], local, order, m, d < h ? Infinity : 1);
+      // Once so many are lost that the rest is of no interest, how many more does not matter.
+      const enough = d < h ? Math.max(1, Math.min(bound, depth - lost) - least + 1) : 1;
+      const apart = unitsApart(near, local[at], local, order, m, enough);
       if (apart === 0) continue;
       if (slackHere < 0) slackHere = d;
       if (d >= h) {
@@ -539,12 +545,57 @@ export function cellTradeOff(
     return unitsApart(near, local[m], local, others, count, 1) > 0;
   };
 
-  const search = () => {
-    let level = levelOf(near.count);
+  const wholeCell = (): Level => {
+    const level = levelOf(near.count);
     look(every, 0, near.count, most.u, most.v, most.count, reach, 0, 0, pitch, rise, level);
+    return level;
+  };
+
+  /** The boxes outside which no origin has the most units, each with the pieces near it. */
+  const mostBoxes = (): Level => {
+    const { boxes } = most;
+    const level = levelOf(near.count);
+    const squares = Math.max(1, Math.min(GRID_LINES, Math.floor(boxes.x0.length / 2)));
+    const grid = pieceGrid(near, -reach, -reach, pitch + reach, rise + reach, squares, squares);
+    const perU = squares / (pitch + 2 * reach);
+    const perV = squares / (rise + 2 * reach);
+    const seen = new Int32Array(near.count).fill(-1);
+    const gathered = new Int32Array(near.count);
+    const square = (at: number, per: number) =>
+      Math.max(0, Math.min(squares - 1, Math.floor(at * per)));
+    for (let box = 0; box < boxes.x0.length && !stop?.(); box++) {
+      const ax = boxes.x0[box];
+      const ay = boxes.y0[box];
+      const bx = boxes.x1[box];
+      const by = boxes.y1[box];
+      const left = square(ax, perU);
+      const right = square(bx + 2 * reach, perU);
+      const low = square(ay, perV);
+      const high = square(by + 2 * reach, perV);
+      let count = 0;
+      for (let row = low; row <= high; row++) {
+        const first = grid.start[row * squares + left];
+        const last = grid.start[row * squares + right + 1];
+        for (let at = first; at < last; at++) {
+          const n = grid.of[at];
+          if (seen[n] === box) continue;
+          seen[n] = box;
+          gathered[count++] = n;
+        }
+      }
+      if (left !== right || low !== high) gathered.subarray(0, count).sort();
+      const u = ax + (bx - ax) * SPLIT;
+      const v = ay + (by - ay) * SPLIT;
+      look(gathered, 0, count, u, v, boxes.depth[box], reach, ax, ay, bx, by, level);
+    }
+    return level;
+  };
+
+  const search = (first: Level) => {
+    let level = first;
     polish();
     while (level.x0.length > 0 && !stop?.()) {
-      const next = levelOf(Math.max(1 << 12, level.top));
+      const next = levelOf(Math.max(FIRST_ROOM, 2 * level.top));
       for (let box = 0; box < level.x0.length; box++) {
         const ax = level.x0[box];
         const ay = level.y0[box];
@@ -575,12 +626,12 @@ export function cellTradeOff(
       polish();
     }
   };
-  // First for the most units, which few boxes can have, then for fewer.
+  // First for the most units, in the boxes that can have them, then for fewer.
   least = most.count;
-  search();
+  search(mostBoxes());
   if (lowest < most.count) {
     least = lowest;
-    search();
+    search(wholeCell());
   }
   const choices: CellChoice[] = [];
   let above = -Infinity;
