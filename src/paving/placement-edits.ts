@@ -84,3 +84,15 @@ export function slideToEdge(laying: Laying, ring: number, edge: number): Point {
   }
   return [normal[0] * best, normal[1] * best];
 }
+
+/** Starts nearer than this, mm, are one: half of what a figure shows. */
+const SAME_START_MM = 0.05;
+
+/** True when two origins, on the ground, start the same floor: they are a lattice step apart, or none. */
+export function sameStart({ a, b }: Laying['lattice'], p: Point, q: Point): boolean {
+  const cell = a[0] * b[1] - a[1] * b[0];
+  const [dx, dy] = [p[0] - q[0], p[1] - q[1]];
+  const i = Math.round((dx * b[1] - dy * b[0]) / cell);
+  const j = Math.round((dy * a[0] - dx * a[1]) / cell);
+  return Math.hypot(dx - i * a[0] - j * b[0], dy - i * a[1] - j * b[1]) <= SAME_START_MM;
+}

@@ -97,6 +97,12 @@ it('drags the dot of the shift map with the floor following, takes choices, hold
   await expect
     .poll(() => best(page).innerText(), { timeout: 20_000 })
     .toContain('with a row along AB');
+  // A start that keeps to no hold is not called the best that does.
+  await expect.poll(() => best(page).innerText()).toContain('does not stand there yet');
+  await page.getByRole('button', { name: 'Take the best start' }).click();
+  await expect.poll(() => best(page).innerText()).toContain('This is it');
+  const clearance = page.getByRole('row', { name: /^AB / });
+  await expect.poll(async () => Number((await clearance.innerText()).split(/\s+/)[2])).toBe(6);
   await page.getByRole('button', { name: /^Let go/ }).click();
   await expect.poll(() => best(page).innerText(), { timeout: 20_000 }).not.toContain('with a row');
   expect(complaints).toEqual([]);

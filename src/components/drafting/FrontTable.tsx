@@ -80,6 +80,7 @@ function Sample() {
               origin={document.placement.origin}
               best={best && current ? { origin: best.placement.origin, play: best.play } : null}
               countHere={report?.wholeUnits ?? null}
+              most={Math.max(map.most, current ? (face?.most ?? 0) : 0)}
               onShift={shifted}
               onSettle={() => table.getState().settleShown()}
             />

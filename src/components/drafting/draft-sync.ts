@@ -135,9 +135,9 @@ export function createDraftSync(
     }
   };
 
+  /** Sends what is settled; a gesture in hand is not: it goes on, and is sent when it is let go. */
   const flush = async (): Promise<number | null> => {
     clearTimeout(timer);
-    table.getState().settleShown();
     if (inFlight) await inFlight;
     if (state.getState().stale) return null;
     if (!unsent()) {
@@ -157,7 +157,10 @@ export function createDraftSync(
 
   return {
     state,
-    flush,
+    flush() {
+      table.getState().settleShown();
+      return flush();
+    },
 
     async restore() {
       const works = await abandonedWork(personId, layoutId);

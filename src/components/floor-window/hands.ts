@@ -18,6 +18,19 @@ interface Hand {
 
 const WHEEL_FACTOR = 0.0016;
 
+/** How long after a tap its click may come, ms. */
+const CLICK_COMES_MS = 500;
+
+/** A picked spot changes the page; the click of the same tap must not press what has come under the finger. */
+function swallowClick(): void {
+  const swallow = (event: Event) => {
+    event.preventDefault();
+    event.stopPropagation();
+  };
+  window.addEventListener('click', swallow, { capture: true, once: true });
+  setTimeout(() => window.removeEventListener('click', swallow, { capture: true }), CLICK_COMES_MS);
+}
+
 /**
  * Binds pointers and wheel of a window: one drags, two pinch, a press that does not move picks a spot. `hand` gives what is so now:
  * several moves may come before the next drawing, so the camera in hand is kept here until then.
@@ -77,8 +90,10 @@ export function handsBound(element: HTMLElement, hand: () => Hand): () => void {
   const onUp = (event: PointerEvent) => {
     if (!down.delete(event.pointerId)) return;
     const { camera, size, onSpot } = hand();
-    if (event.type === 'pointerup' && pressed && !pressed.moved && onSpot)
+    if (event.type === 'pointerup' && pressed && !pressed.moved && onSpot) {
+      swallowClick();
       onSpot(groundFromScreen(camera, size, pressed.at));
+    }
     pressed = null;
   };
   const onLeave = () => hand().onPoint?.(null);

@@ -1,3 +1,4 @@
+import { STATE_WORDS } from '../ui/version-words';
 import { useQuery } from '@tanstack/react-query';
 import { useEffect, useRef, useState, type ReactNode } from 'react';
 import type { Role } from '@/api-types/people';
@@ -61,6 +62,11 @@ function Room({ version: first, role, layouts, thread, children, tools }: Props)
   useEffect(() => {
     if (picking) floor.current?.scrollIntoView({ block: 'nearest' });
   }, [picking]);
+  // The strip over the page is the page's own; where the version stands must be right there too.
+  useEffect(() => {
+    const cell = document.querySelector('[data-cell=state]');
+    if (cell) cell.textContent = STATE_WORDS[version.state];
+  }, [version.state]);
   const onSpot = (at: Point) => {
     if (picking === 'comment') setSpot(at);
     else setPins((now) => [...now, { at, body: '' }]);

@@ -1,3 +1,4 @@
+import { edgeName } from '../edge-names';
 import type { Point } from '@/geometry/point';
 import type { GroundEdge } from '../ground';
 import { frameFromGround, type FitFrame } from './fit-frame';
@@ -45,8 +46,12 @@ function edgeAt(frame: Frame, [ring, edge]: EdgeAddress): GroundEdge | undefined
   return frame.ground.rings[ring]?.edges[edge];
 }
 
-const edgeWords = ([ring, edge]: EdgeAddress) =>
-  ring === 0 ? `edge ${edge} of the perimeter` : `edge ${edge} of keep-out ${ring}`;
+/** An edge by its corners, as the drawings name it; one that is not there, by its number. */
+const edgeWords = (frame: Frame, [ring, edge]: EdgeAddress) => {
+  const corners = frame.ground.rings[ring]?.edges.length ?? 0;
+  if (edge < corners) return edgeName(ring, edge, corners);
+  return ring === 0 ? `edge ${edge} of the perimeter` : `edge ${edge} of keep-out ${ring}`;
+};
 
 /** Angle between two directions as lines, degrees, 0 to 90. */
 function lineAngle(one: Point, other: Point): number {
@@ -96,9 +101,9 @@ export function holdRefusal(frame: Frame, holds: readonly FitHold[]): HoldRefusa
     const edges: GroundEdge[] = [];
     for (const address of addresses) {
       const edge = edgeAt(frame, address);
-      if (!edge) return refuse(`there is no ${edgeWords(address)}`);
+      if (!edge) return refuse(`there is no ${edgeWords(frame, address)}`);
       if (edge.chords.length > 2) {
-        return refuse(`${edgeWords(address)} is an arc; hold to a straight edge`);
+        return refuse(`${edgeWords(frame, address)} is an arc; hold to a straight edge`);
       }
       edges.push(edge);
     }
@@ -113,13 +118,13 @@ export function holdRefusal(frame: Frame, holds: readonly FitHold[]): HoldRefusa
       if (!fits) {
         const turns = parallelTurns(frame, edges[0]);
         return refuse(
-          `no side of the units is parallel to ${edgeWords(hold.edge)} at a turn of ${frame.turn}°; a turn of ${turns.map((turn) => `${turn}°`).join(' or ')} would do`,
+          `no side of the units is parallel to ${edgeWords(frame, hold.edge)} at a turn of ${frame.turn}°; a turn of ${turns.map((turn) => `${turn}°`).join(' or ')} would do`,
           turns,
         );
       }
       continue;
     }
-    const words = `${edgeWords(hold.between[0])} and ${edgeWords(hold.between[1])}`;
+    const words = `${edgeWords(frame, hold.between[0])} and ${edgeWords(frame, hold.between[1])}`;
     if (lineAngle(first.along, second.along) > PARALLEL_DEG) {
       return refuse(`${words} are not parallel, so no pattern is centred between them`);
     }

@@ -1,6 +1,6 @@
 import type { LayoutDocument, Placement } from '../layout-document';
 import { parseLayoutDocument } from '../layout-validation';
-import { fit } from './fit';
+import { fit, type FitHold } from './fit';
 
 /** What a joint gives. Lengths in mm. */
 export interface JointFit {
@@ -55,11 +55,12 @@ function withJoint(document: LayoutDocument, joint: number): LayoutDocument | nu
 /**
  * The most units and their play for each joint of the range, and, between neighbours of which the
  * wider lays fewer, the widest joint that still lays as many: where an extra row just closes.
- * Narrowest first. Refused for bonds whose joint is not free.
+ * Narrowest first, with the pattern held as given. Refused for bonds whose joint is not free.
  */
 export function fitJoints(
   document: LayoutDocument,
   range: JointRange,
+  hold: readonly FitHold[] = [],
   progress: (share: number) => void = () => {},
 ): JointFits {
   const message = jointRefused(document, range);
@@ -67,7 +68,7 @@ export function fitJoints(
   const at = (joint: number, closes = false): JointFit | null => {
     const jointed = withJoint(document, Math.round(joint * 1e4) / 1e4);
     if (!jointed) return null;
-    const { wholeUnits, play, leastGap, placement } = fit(jointed, { choices: false });
+    const { wholeUnits, play, leastGap, placement } = fit(jointed, { choices: false, hold });
     return { joint: Math.round(joint * 1e4) / 1e4, wholeUnits, play, leastGap, placement, closes };
   };
 

@@ -1,6 +1,7 @@
 import { formatCount } from '@/paving/count';
 import { documentEdgeName } from '@/paving/edge-names';
 import type { FitChoice } from '@/paving/fit/fit';
+import { sameStart } from '@/paving/placement-edits';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 import type { TableStore } from '../table-store';
 import { holdWords } from '../tools/hold-edge';
@@ -19,7 +20,7 @@ export function placementTaken(
 /** Says what is proven of this floor, and takes the best start. */
 export function BestStart({ fit }: { fit: FitService }) {
   const table = useTableStore();
-  const { document, report } = useShownFloor();
+  const { document, report, laying } = useShownFloor();
   const hold = useTable((state) => state.hold);
   const { result, current, failure } = useFit(fit);
   if (failure && current)
@@ -28,6 +29,7 @@ export function BestStart({ fit }: { fit: FitService }) {
         {failure}
       </p>
     );
+  if (!laying) return null;
   if (!result || !current)
     return <p className="min-h-12 text-slate">Looking for the best start …</p>;
 
@@ -40,15 +42,22 @@ export function BestStart({ fit }: { fit: FitService }) {
     return <p>No start lays a whole unit at {under}. Try another turn, or a smaller unit.</p>;
 
   const laid = (report?.wholeUnits ?? 0) + (report?.lifted ?? 0);
+  // A start that keeps to no hold may have more play than the best that does.
   const reached =
-    laid === result.wholeUnits && (report?.play ?? 0) > (result.play ?? 0) - PLAY_REACHED_MM;
+    hold.length > 0
+      ? sameStart(laying.lattice, document.placement.origin, result.placement.origin)
+      : laid === result.wholeUnits && (report?.play ?? 0) > (result.play ?? 0) - PLAY_REACHED_MM;
   return (
     <div className="space-y-2" data-testid="best-start">
       <p>
         No start lays more than <b>{formatCount(result.wholeUnits)}</b> whole units at {under}.
         {reached && ' This is it, with the most play that they can have.'}
-        {!reached && laid === result.wholeUnits && ' This start lays as many, with less play.'}
-        {laid < result.wholeUnits && ` This start lays ${formatCount(laid)}.`}
+        {!reached && hold.length > 0 && ' The floor does not stand there yet.'}
+        {!reached &&
+          hold.length === 0 &&
+          laid === result.wholeUnits &&
+          ' This start lays as many, with less play.'}
+        {hold.length === 0 && laid < result.wholeUnits && ` This start lays ${formatCount(laid)}.`}
       </p>
       {!reached && (
         <button

@@ -38,6 +38,8 @@ export function FitPictures({ fit }: { fit: FitService }) {
         Math.abs(choice.play - report.play) < 0.05,
     ) ?? null;
 
+  const top = Math.max(map?.most ?? 0, current ? (face?.most ?? 0) : 0);
+
   const shifted = (by: Point, settled: boolean) => {
     const { show, edit, document: now, preview } = table.getState();
     const from = preview ?? now;
@@ -67,6 +69,7 @@ export function FitPictures({ fit }: { fit: FitService }) {
                   origin={placement.origin}
                   best={most && current ? { origin: most.placement.origin, play: most.play } : null}
                   countHere={count}
+                  most={top}
                   onShift={shifted}
                   onSettle={() => table.getState().settleShown()}
                 />
@@ -79,7 +82,7 @@ export function FitPictures({ fit }: { fit: FitService }) {
                 />
                 <span className="flex flex-col justify-between">
                   <span>
-                    <b className="text-graphite">{formatCount(map.most)}</b> whole
+                    <b className="text-graphite">{formatCount(top)}</b> whole
                   </span>
                   <span>
                     <b className="text-line">{count === null ? '–' : formatCount(count)}</b> here

@@ -32,6 +32,7 @@ export function JointRange() {
   const seek = async () => {
     stop();
     setFailure(null);
+    setFound(null);
     setShare(0);
     const mine = newHand();
     hand.current = mine;
@@ -39,6 +40,7 @@ export function JointRange() {
       const answer = await mine.remote.joints(
         document,
         range,
+        table.getState().hold,
         proxy((done: number) => hand.current === mine && setShare(done)),
       );
       if (hand.current !== mine) return;

@@ -11,6 +11,8 @@ interface Props {
   /** The placement with the most play, and its play: drawn as a circle of that radius. */
   readonly best: { readonly origin: Point; readonly play: number } | null;
   readonly countHere: number | null;
+  /** The most that any start gives, proven; a face too thin for the map's grain is not lost. */
+  readonly most: number;
   /** The dot is dragged: the origin moves by this much on the ground, mm. */
   readonly onShift: (by: Point, settled: boolean) => void;
   readonly onSettle: () => void;
@@ -37,7 +39,16 @@ function greyImage(map: ShiftMap): ImageData {
 }
 
 /** Every start in one lattice cell as a picture: drag the dot, and the floor follows. */
-export function ShiftMapPicture({ map, face, origin, best, countHere, onShift, onSettle }: Props) {
+export function ShiftMapPicture({
+  map,
+  face,
+  origin,
+  best,
+  countHere,
+  onShift,
+  onSettle,
+  most,
+}: Props) {
   const canvas = useRef<HTMLCanvasElement>(null);
   const frame = useRef<HTMLDivElement>(null);
   const last = useRef<Point | null>(null);
@@ -86,9 +97,9 @@ export function ShiftMapPicture({ map, face, origin, best, countHere, onShift, o
       tabIndex={0}
       aria-label="Shift map: where the pattern starts"
       aria-valuemin={map.least}
-      aria-valuemax={map.most}
+      aria-valuemax={most}
       aria-valuenow={countHere ?? 0}
-      aria-valuetext={`${countHere ?? 0} whole units from this start; the most is ${map.most}. Arrows move the start.`}
+      aria-valuetext={`${countHere ?? 0} whole units from this start; the most is ${most}. Arrows move the start.`}
       data-testid="shift-map"
       className="relative cursor-crosshair touch-none overflow-hidden border border-graphite"
       style={{ aspectRatio: `${map.pitch} / ${map.rise}` }}
@@ -132,6 +143,13 @@ export function ShiftMapPicture({ map, face, origin, best, countHere, onShift, o
           )}
         </g>
       </svg>
+      {bestAt && (
+        <span
+          aria-hidden="true"
+          className="absolute size-5 -translate-1/2 border border-graphite outline-1 outline-on-line"
+          style={{ left: `${bestAt[0] * 100}%`, top: `${bestAt[1] * 100}%`, borderRadius: '50%' }}
+        />
+      )}
       <span
         aria-hidden="true"
         className="absolute size-3.5 -translate-1/2 rounded-full border-2 border-on-line bg-line outline-1 outline-line"

@@ -13,6 +13,8 @@ const WIDTH = 288;
 const HEIGHT = 92;
 /** The curve repeats after this turn for every unit with square corners and a bond of half-turn symmetry, degrees. */
 const SPAN_DEG = 90;
+/** A press of an arrow goes this much at least, degrees. */
+const KEY_STEP_DEG = 0.5;
 
 const nearestTurn = (turns: readonly FitTurn[], turn: number): FitTurn | undefined =>
   turns.reduce<FitTurn | undefined>(
@@ -43,7 +45,9 @@ export function TurnCurve({ turns, turn, display, onTurn }: Props) {
     if (!by || !here) return;
     event.preventDefault();
     event.stopPropagation();
-    const next = turns[(turns.indexOf(here) + by + turns.length) % turns.length];
+    // The sweep looks closer about its best turns; the keys go by whole steps all the same.
+    const beyond = turns.filter((t) => (t.turn - here.turn) * by >= KEY_STEP_DEG - 1e-6);
+    const next = by > 0 ? (beyond[0] ?? turns[0]) : (beyond.at(-1) ?? turns[turns.length - 1]);
     onTurn(next.turn);
   };
   return (

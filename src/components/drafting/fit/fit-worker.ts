@@ -2,6 +2,7 @@ import { expose, transfer } from 'comlink';
 import { bestFace, type BestFace } from '@/paving/fit/best-face';
 import {
   fit,
+  type FitHold,
   type FitOptions,
   type FitResult,
   type FitTurn,
@@ -33,8 +34,12 @@ const fitWorker = {
   ): FitResult => fit(document, { turn, choices: false, progress: (at, share) => told(at, share) }),
 
   /** Tries each joint of a range. */
-  joints: (document: LayoutDocument, range: JointRange, told: (share: number) => void): JointFits =>
-    fitJoints(document, range, told),
+  joints: (
+    document: LayoutDocument,
+    range: JointRange,
+    hold: readonly FitHold[],
+    told: (share: number) => void,
+  ): JointFits => fitJoints(document, range, hold, told),
 };
 
 export type FitWorker = typeof fitWorker;

@@ -23,7 +23,7 @@ export function holdPointed(table: TableStore, ring: number, edge: number): void
   if (holding.kind === 'between' && !holding.first) {
     set({
       holding: { ...holding, first: [ring, edge] },
-      said: `From ${documentEdgeName(document, ring, edge)} to …: point at the other edge.`,
+      said: `Between ${documentEdgeName(document, ring, edge)} and …: point at the other edge.`,
     });
     return;
   }
@@ -35,11 +35,11 @@ export function holdPointed(table: TableStore, ring: number, edge: number): void
   set({ hold: [...hold, made].slice(-2), tool: 'slide', holding: null, hover: null });
 }
 
-/** The hold in words: `a row along AB`, `centred between BC and FA`. */
+/** The hold in words: `a row along AB`, `the pattern centred between BC and FA`. */
 export function holdWords(hold: FitHold, name: (ring: number, edge: number) => string): string {
   return 'edge' in hold
     ? `a row along ${name(...hold.edge)}`
-    : `centred between ${name(...hold.between[0])} and ${name(...hold.between[1])}`;
+    : `the pattern centred between ${name(...hold.between[0])} and ${name(...hold.between[1])}`;
 }
 
 /** Points at the edges that the pattern is held to. */
