@@ -9,7 +9,7 @@ import { medianMs, type Bench, type Ratio } from './ratio';
 
 /** Starts that the search tries each way. */
 const SEARCH = 64;
-const RUNS = 5;
+const RUNS = 9;
 
 /** The most units of a grid of starts, by the project's own fastest count. */
 function searchMost(document: LayoutDocument): number {
@@ -24,10 +24,26 @@ function searchMost(document: LayoutDocument): number {
   return most;
 }
 
+/** Floors on which finding, laying and measuring the most play as well is faster than the search each time. */
+const WHOLE_FASTER: ReadonlySet<string> = new Set([
+  'round terrace, herringbone',
+  'side yard, running',
+  '60 corners and five keep-outs',
+]);
+/** Work is repeated for so long before it is timed, the fit as the search, so that all of it runs compiled, ms. */
+const WARM_MS = 300;
+
+function warmMs(work: () => unknown): number {
+  const end = performance.now() + WARM_MS;
+  while (performance.now() < end) work();
+  return medianMs(work, RUNS);
+}
+
 /**
- * The fit against a search of 64 × 64 starts. Both find the most units; the search guesses it, the
- * fit proves it and finds the start with the most play as well. The trade-off, which a search gives
- * nothing like, is timed apart.
+ * The fit against a search of 64 × 64 starts. Two lines a floor: the proof of the most units, which
+ * is what a search guesses at; and the whole fit, which finds the start with the most play as well,
+ * lays it and measures it. The search knows nothing of play and lays nothing, so the second line asks
+ * more of the fit than of the search. The trade-off, which a search gives nothing like, is timed apart.
  */
 export const fitAgainstSearch: Bench = {
   name: 'fit-against-search',
@@ -36,9 +52,9 @@ export const fitAgainstSearch: Bench = {
       const found = searchMost(document);
       const { wholeUnits } = fit(document, { choices: false });
       if (wholeUnits < found) throw new Error(`${name}: fit ${wholeUnits}, search ${found}`);
-      const search = medianMs(() => searchMost(document), RUNS);
-      const proof = medianMs(() => frameMost(fitFrame(document)), RUNS);
-      const best = medianMs(() => fit(document, { choices: false }), RUNS);
+      const search = warmMs(() => searchMost(document));
+      const proof = warmMs(() => frameMost(fitFrame(document)));
+      const best = warmMs(() => fit(document, { choices: false }));
       const units = `fit ${wholeUnits} units, search ${found}`;
       return [
         {
@@ -50,7 +66,8 @@ export const fitAgainstSearch: Bench = {
         {
           name: `${name}: search ÷ the same with the most play, laid and measured`,
           value: search / best,
-          detail: `${best.toFixed(2)} ms against ${search.toFixed(1)} ms`,
+          least: WHOLE_FASTER.has(name) ? 1 : undefined,
+          detail: `${best.toFixed(2)} ms against ${search.toFixed(1)} ms, which finds no play`,
         },
       ];
     }),

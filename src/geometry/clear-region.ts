@@ -195,13 +195,13 @@ function sweepHolds({ n, x, y, nx, ny, radius }: Sweep, px: number, py: number):
   return least < radius * radius;
 }
 
-/** Angles at which the circle crosses the sweep's boundary. */
+/** Adds the angles at which the circle crosses the sweep's boundary. */
 function circleCrossings(
   { n, x, y, nx, ny, radius }: Sweep,
   cx: number,
   cy: number,
   r: number,
-  visit: (angle: number) => void,
+  angles: number[],
 ): void {
   for (let m = 0; m < n; m++) {
     const o = m + 1 === n ? 0 : m + 1;
@@ -214,9 +214,10 @@ function circleCrossings(
     if (Math.abs(away) < r) {
       const reach = Math.sqrt(r * r - away * away);
       const foot = -(ax * ex + ay * ey) / size;
-      for (const at of [foot - reach, foot + reach]) {
+      for (let end = -1; end <= 1; end += 2) {
+        const at = foot + end * reach;
         if (at < -1e-9 || at > size + 1e-9) continue;
-        visit(Math.atan2(ay + (at * ey) / size, ax + (at * ex) / size));
+        angles.push(Math.atan2(ay + (at * ey) / size, ax + (at * ex) / size));
       }
     }
     if (radius <= 0) continue;
@@ -227,8 +228,7 @@ function circleCrossings(
     const along = (d * d + r * r - radius * radius) / (2 * d);
     const turn = Math.acos(Math.max(-1, Math.min(1, along / r)));
     const base = Math.atan2(qy, qx);
-    visit(base + turn);
-    visit(base - turn);
+    angles.push(base + turn, base - turn);
   }
 }
 
@@ -299,6 +299,27 @@ interface Room {
   cx: number[];
   cy: number[];
   radius: number[];
+}
+
+const ascending = (one: number, other: number) => one - other;
+
+function roomPut(
+  room: Room,
+  x0: number,
+  y0: number,
+  x1: number,
+  y1: number,
+  cx: number,
+  cy: number,
+  r: number,
+): void {
+  room.x0.push(x0);
+  room.y0.push(y0);
+  room.x1.push(x1);
+  room.y1.push(y1);
+  room.cx.push(cx);
+  room.cy.push(cy);
+  room.radius.push(r);
 }
 
 /**
@@ -400,23 +421,6 @@ function sweepPieces(
   const { n, x, y, nx, ny, radius } = sweep;
   const cut = new Float64Array(2);
   const covered: [number, number][] = [];
-  const put = (
-    x0: number,
-    y0: number,
-    x1: number,
-    y1: number,
-    cx: number,
-    cy: number,
-    r: number,
-  ) => {
-    room.x0.push(x0);
-    room.y0.push(y0);
-    room.x1.push(x1);
-    room.y1.push(y1);
-    room.cx.push(cx);
-    room.cy.push(cy);
-    room.radius.push(r);
-  };
   for (let m = 0; m < n; m++) {
     const o = m + 1 === n ? 0 : m + 1;
     const px = x[m] + nx[m] * radius;
@@ -442,7 +446,7 @@ function sweepPieces(
     }
     // Corners go with the sides: each is looked at after the side that leads to it.
     if (radius > 0 && !cornerCovered(sweeps, near, x[o], y[o])) {
-      cornerPieces(ground, sweeps, sweep, o, m, near, put);
+      cornerPieces(ground, sweeps, sweep, o, m, near, room);
     }
     if (whole) continue;
     covered.sort((one, other) => one[0] - other[0]);
@@ -454,7 +458,7 @@ function sweepPieces(
         const middle = (from + to) / 2;
         if (groundHolds(ground, px + dx * middle, py + dy * middle)) {
           // The sweep is left of its own sides, the clear region right: so turned round.
-          put(px + dx * to, py + dy * to, px + dx * from, py + dy * from, 0, 0, 0);
+          roomPut(room, px + dx * to, py + dy * to, px + dx * from, py + dy * from, 0, 0, 0);
         }
       }
       if (high > from) from = high;
@@ -512,7 +516,7 @@ function cornerPieces(
   at: number,
   before: number,
   near: readonly number[],
-  put: (x0: number, y0: number, x1: number, y1: number, cx: number, cy: number, r: number) => void,
+  room: Room,
 ): void {
   const cx = x[at];
   const cy = y[at];
@@ -523,12 +527,6 @@ function cornerPieces(
   // What is left of the arc after each other sweep, as angles from `from`.
   let left = [0, sweep];
   const cuts: number[] = [];
-  const add = (angle: number) => {
-    let away = (angle - from) % (2 * Math.PI);
-    if (away < 0) away += 2 * Math.PI;
-    cuts.push(away);
-  };
-  const short = (low: number, high: number) => (high - low) * radius < LEAST_PIECE_MM;
   for (let at = 0; at < near.length; at++) {
     // Most corners are gone after the neighbours; of the rest most lie outside the ground.
     if (at === 4 && discOutside(ground, near, cx, cy, radius)) return;
@@ -536,14 +534,18 @@ function cornerPieces(
     if (cx - radius > s.maxX || cx + radius < s.minX) continue;
     if (cy - radius > s.maxY || cy + radius < s.minY) continue;
     cuts.length = 0;
-    circleCrossings(s, cx, cy, radius, add);
-    cuts.sort((one, next) => one - next);
+    circleCrossings(s, cx, cy, radius, cuts);
+    for (let n = 0; n < cuts.length; n++) {
+      const away = (cuts[n] - from) % (2 * Math.PI);
+      cuts[n] = away < 0 ? away + 2 * Math.PI : away;
+    }
+    cuts.sort(ascending);
     const rest: number[] = [];
     for (let n = 0; n < left.length; n += 2) {
       let low = left[n];
       for (let m = 0; m <= cuts.length; m++) {
         const high = m < cuts.length ? Math.min(cuts[m], left[n + 1]) : left[n + 1];
-        if (high <= low || short(low, high)) continue;
+        if (high <= low || (high - low) * radius < LEAST_PIECE_MM) continue;
         const middle = from + (low + high) / 2;
         const px = cx + radius * Math.cos(middle);
         const py = cy + radius * Math.sin(middle);
@@ -570,8 +572,9 @@ function cornerPieces(
     for (let quarter = 8; quarter >= -5; quarter--) {
       const low = Math.max(left[n], (quarter * Math.PI) / 2 - from);
       if (low >= high) continue;
-      if (!short(low, high)) {
-        put(
+      if ((high - low) * radius >= LEAST_PIECE_MM) {
+        roomPut(
+          room,
           cx + radius * Math.cos(from + high),
           cy + radius * Math.sin(from + high),
           cx + radius * Math.cos(from + low),

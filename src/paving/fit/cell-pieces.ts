@@ -17,6 +17,10 @@ export interface CellPieces {
   readonly cx: Float64Array;
   readonly cy: Float64Array;
   readonly radius: Float64Array;
+  /** Unit vector along a straight piece, and its length, mm; 0 for an arc. */
+  readonly ux: Float64Array;
+  readonly uy: Float64Array;
+  readonly length: Float64Array;
   /** Straight pieces of one direction are a family; −1 for arcs. */
   readonly family: Int32Array;
   /** Height of a straight piece along its family's normal, mm. */
@@ -276,6 +280,9 @@ export function cellPieces(frame: FitFrame): CellPieces {
     cx: new Float64Array(count),
     cy: new Float64Array(count),
     radius: new Float64Array(count),
+    ux: new Float64Array(count),
+    uy: new Float64Array(count),
+    length: new Float64Array(count),
     family: new Int32Array(count),
     height: new Float64Array(count),
     step: new Int32Array(count),
@@ -289,6 +296,14 @@ export function cellPieces(frame: FitFrame): CellPieces {
     pieces.cx[m] = cx[n];
     pieces.cy[m] = cy[n];
     pieces.radius[m] = radius[n];
+    if (radius[n] === 0) {
+      const ex = cut.x1[n] - cut.x0[n];
+      const ey = cut.y1[n] - cut.y0[n];
+      const length = Math.sqrt(ex * ex + ey * ey);
+      pieces.ux[m] = ex / length;
+      pieces.uy[m] = ey / length;
+      pieces.length[m] = length;
+    }
     pieces.family[m] = family[n];
     pieces.height[m] = height[n];
     pieces.step[m] = sign[n] * owners[m].length;

@@ -58,6 +58,9 @@ export function nearPieces(
     cx: new Float64Array(size),
     cy: new Float64Array(size),
     radius: new Float64Array(size),
+    ux: new Float64Array(size),
+    uy: new Float64Array(size),
+    length: new Float64Array(size),
     family: new Int32Array(size),
     height: new Float64Array(size),
     step: new Int32Array(size),
@@ -75,6 +78,9 @@ export function nearPieces(
     near.cx[m] = pieces.cx[n] + du[at];
     near.cy[m] = pieces.cy[n] + dv[at];
     near.radius[m] = pieces.radius[n];
+    near.ux[m] = pieces.ux[n];
+    near.uy[m] = pieces.uy[n];
+    near.length[m] = pieces.length[n];
     near.family[m] = pieceFamily[at];
     near.height[m] = pieceHeight[at];
     near.step[m] = pieces.step[n];

@@ -35,27 +35,33 @@ export function pieceGap(
   room: PieceGaps,
   at: number,
 ): void {
-  const { x0, y0, x1, y1, cx, cy, radius } = pieces;
+  const { x0, y0, x1, y1, cx, cy, radius, ux, uy, length } = pieces;
   const ax = x0[n];
   const ay = y0[n];
-  const bx = x1[n];
-  const by = y1[n];
   let off: number;
   let nearX: number;
   let nearY: number;
   if (radius[n] === 0) {
-    const ex = bx - ax;
-    const ey = by - ay;
-    const size = Math.sqrt(ex * ex + ey * ey);
     const px = u - ax;
     const py = v - ay;
-    off = (ex * py - ey * px) / size;
-    let along = (px * ex + py * ey) / size;
-    if (along < 0) along = 0;
-    else if (along > size) along = size;
-    nearX = ax + (along / size) * ex;
-    nearY = ay + (along / size) * ey;
+    off = ux[n] * py - uy[n] * px;
+    const along = px * ux[n] + py * uy[n];
+    if (along > 0 && along < length[n]) {
+      // The nearest point is the foot.
+      const left = off >= 0;
+      const d = left ? off : -off;
+      room.distance[at] = d;
+      room.side[at] = left ? 1 : -1;
+      room.awayX[at] = d === 0 ? 0 : left ? -uy[n] : uy[n];
+      room.awayY[at] = d === 0 ? 0 : left ? ux[n] : -ux[n];
+      room.key[at] = d > 0 ? d - TIE_MM : 0;
+      return;
+    }
+    nearX = along <= 0 ? ax : x1[n];
+    nearY = along <= 0 ? ay : y1[n];
   } else {
+    const bx = x1[n];
+    const by = y1[n];
     const px = u - cx[n];
     const py = v - cy[n];
     const d0 = Math.sqrt(px * px + py * py);

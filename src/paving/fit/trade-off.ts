@@ -419,11 +419,8 @@ export function cellTradeOff(
   /** True when every point within h of (u, v) has its foot on the straight piece. */
   const straightBefore = (n: number, u: number, v: number, h: number): boolean => {
     if (radius[n] > 0) return false;
-    const ex = x1[n] - x0[n];
-    const ey = y1[n] - y0[n];
-    const size = Math.hypot(ex, ey);
-    const along = ((u - x0[n]) * ex + (v - y0[n]) * ey) / size;
-    return along >= h && along <= size - h;
+    const along = (u - x0[n]) * near.ux[n] + (v - y0[n]) * near.uy[n];
+    return along >= h && along <= near.length[n] - h;
   };
 
   /**
