@@ -99,11 +99,13 @@ export function createFitService(
     try {
       hand ??= newHand();
       const [result, map, face] = await Promise.all([
-        hand.remote.fit(document, { hold: now.hold }),
+        hand.remote.fit(document, { hold: now.hold, choices: false }),
         hand.remote.map(document, MAP_ACROSS),
         now.hold.length === 0 ? hand.remote.face(document) : null,
       ]);
       state.setState({ key, result, map, face, failure: null });
+      // The most and the start that gives it come first; the trade-off takes longer and follows.
+      if (!due) state.setState({ result: await hand.remote.fit(document, { hold: now.hold }) });
     } catch (error) {
       state.setState({
         key,
