@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { buildUpSchema } from './build-up';
 
 /**
  * The layout document: all that is needed to lay a floor. It is what the table edits, what a
@@ -74,6 +75,12 @@ export const unitSchema = z.object({
   thickness: size,
   /** The face's colour on the drawing. */
   colour: colour.optional(),
+  /** How far a side may be from its nominal length, either way, mm; as its maker or standard states. */
+  tolerance: gap.optional(),
+  /** Of one unit, kg; worked out from its size where it is not given. */
+  mass: z.number({ error: 'must be a number of kilograms' }).positive().max(20_000).optional(),
+  /** The entry of the firm's catalogue that it was taken from. */
+  catalogueId: z.string().max(80).optional(),
 });
 
 const unitId = z.string().min(1, 'names a unit of the document');
@@ -119,7 +126,12 @@ export const tonesSchema = z.object({
   seed: z.number().int().min(0).max(999_999).default(1),
 });
 
-export const aggregateSchema = z.object({ name: z.string().trim().min(1).max(80), colour });
+export const aggregateSchema = z.object({
+  name: z.string().trim().min(1).max(80),
+  colour,
+  /** The entry of the firm's catalogue that it was taken from. */
+  catalogueId: z.string().max(80).optional(),
+});
 
 const address = z.tuple([z.number().int(), z.number().int(), z.number().int().min(0)]);
 
@@ -139,6 +151,8 @@ export const layoutDocumentSchema = z.object({
   tones: tonesSchema.optional(),
   /** What fills joints, voids and margin. */
   aggregate: aggregateSchema.optional(),
+  /** The layers under the units; without it nothing is known of them yet. */
+  buildUp: buildUpSchema.optional(),
   notes: z.string().max(10_000).optional(),
 });
 

@@ -17,6 +17,9 @@ import { createFitService } from './fit/fit-service';
 import { BondPanel } from './panels/BondPanel';
 import { GroundPanel } from './panels/GroundPanel';
 import { FitPanel } from './panels/FitPanel';
+import { LevelsPanel } from './panels/LevelsPanel';
+import { SetOutPanel } from './panels/SetOutPanel';
+import { TakeOffPanel } from './panels/TakeOffPanel';
 import { UnitPanel } from './panels/UnitPanel';
 import { useVersions, VersionsPanel } from './panels/VersionsPanel';
 import { PegString, STEP_NAMES } from './PegString';
@@ -180,6 +183,9 @@ function Board({
           {step === 'unit' && <UnitPanel />}
           {step === 'bond' && <BondPanel />}
           {step === 'fit' && <FitPanel fit={fit} />}
+          {step === 'levels' && <LevelsPanel />}
+          {step === 'takeOff' && <TakeOffPanel />}
+          {step === 'setOut' && <SetOutPanel />}
           {step === 'versions' && (
             <VersionsPanel layoutId={draft.layoutId} sync={sync} onSave={() => setSaving(true)} />
           )}

@@ -6,6 +6,9 @@ export const STEP_NAMES: Record<Step, string> = {
   unit: 'Unit',
   bond: 'Bond',
   fit: 'Fit',
+  levels: 'Levels',
+  takeOff: 'Take-off',
+  setOut: 'Set-out',
   versions: 'Versions',
 };
 
@@ -27,7 +30,7 @@ export function PegString() {
   const step = useTable((state) => state.step);
   const at = STEPS.indexOf(step);
   return (
-    <nav aria-label="Steps" className="relative flex md:w-[6.2rem] md:flex-col md:py-6">
+    <nav aria-label="Steps" className="relative flex overflow-x-auto md:w-[6.6rem] md:flex-col md:overflow-x-visible md:py-6">
       <span
         aria-hidden="true"
         className="absolute top-[1.35rem] right-0 left-0 h-px bg-stone-300 md:top-0 md:right-auto md:bottom-0 md:left-[1.35rem] md:h-auto md:w-px"
@@ -38,7 +41,7 @@ export function PegString() {
           type="button"
           aria-current={name === step ? 'step' : undefined}
           onClick={() => table.getState().goTo(name)}
-          className={`relative flex min-h-[3.3rem] flex-1 flex-col items-center justify-start gap-0.5 pt-2 text-sm md:min-h-[4.4rem] md:flex-none md:flex-row md:items-center md:justify-start md:gap-2 md:px-2.5 md:pt-0 ${
+          className={`relative flex min-h-[3.3rem] min-w-[4.1rem] flex-1 flex-col items-center justify-start gap-0.5 pt-2 text-sm md:min-h-[4rem] md:min-w-0 md:flex-none md:flex-row md:items-center md:justify-start md:gap-2 md:px-2.5 md:pt-0 ${
             name === step ? 'font-bold text-line' : n < at ? 'font-semibold' : 'text-slate'
           }`}
         >

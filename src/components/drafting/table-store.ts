@@ -5,7 +5,16 @@ import type { FitHold } from '@/paving/fit/fit';
 import type { Address, LayoutDocument } from '@/paving/layout-document';
 import type { Camera, ScreenSize } from './camera';
 
-export const STEPS = ['ground', 'unit', 'bond', 'fit', 'versions'] as const;
+export const STEPS = [
+  'ground',
+  'unit',
+  'bond',
+  'fit',
+  'levels',
+  'takeOff',
+  'setOut',
+  'versions',
+] as const;
 export type Step = (typeof STEPS)[number];
 
 export type ToolName = 'edit' | 'draw' | 'slide' | 'lift' | 'align' | 'hold';
@@ -86,6 +95,9 @@ const FIRST_TOOL: Record<Step, ToolName> = {
   unit: 'slide',
   bond: 'slide',
   fit: 'slide',
+  levels: 'slide',
+  takeOff: 'slide',
+  setOut: 'slide',
   versions: 'slide',
 };
 

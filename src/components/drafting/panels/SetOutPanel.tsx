@@ -1,0 +1,3 @@
+export function SetOutPanel() {
+  return null;
+}

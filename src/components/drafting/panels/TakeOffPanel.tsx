@@ -1,0 +1,3 @@
+export function TakeOffPanel() {
+  return null;
+}

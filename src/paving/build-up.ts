@@ -1,0 +1,31 @@
+import { z } from 'zod';
+
+/**
+ * The layers that a floor is laid on, as the document keeps them: from the top the unit, the bedding
+ * and the base. Thicknesses are compacted and in millimetres.
+ */
+
+/** No layer of a dry floor is thicker than this, mm. */
+export const GREATEST_LAYER_MM = 2000;
+
+const layer = z
+  .number({ error: 'must be a number of millimetres' })
+  .min(0, 'must be 0 mm or more')
+  .max(GREATEST_LAYER_MM, 'is over 2 m; thicknesses are in millimetres');
+
+export const buildUpSchema = z.object({
+  /** What goes over the floor: decides the least thicknesses that are advised. */
+  use: z.enum(['foot', 'driveway']).default('foot'),
+  /** Whether the ground freezes to below the base in winter. */
+  frost: z.boolean().default(false),
+  /** Under the thickest unit, screeded, mm. */
+  bedding: layer.default(25),
+  /** Compacted, mm. */
+  base: layer.default(100),
+  /** A geotextile between base and ground. */
+  geotextile: z.boolean().default(false),
+  /** How far the excavation and the base go beyond the perimeter, mm. */
+  overdig: layer.default(0),
+});
+
+export type BuildUp = z.infer<typeof buildUpSchema>;

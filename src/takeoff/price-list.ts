@@ -1,0 +1,43 @@
+/**
+ * What the firm's catalogue asks for the things that floors take, as of one day. A saved version
+ * freezes the list that it was priced with. Money is whole minor units of the currency (cents,
+ * pence); no float stands for money anywhere.
+ */
+
+/** What a pack holds so much of. */
+export type PackMeasure = 'each' | 'm' | 'm2' | 'm3' | 't' | 'kg';
+
+export type PriceKind = 'unit' | 'aggregate' | 'sundry';
+
+export interface PriceItem {
+  /** The catalogue's id; `catalogueId` of a document's unit or material. */
+  readonly id: string;
+  readonly kind: PriceKind;
+  readonly name: string;
+  readonly supplier: string;
+  /** What is bought at once: so many of a measure. A pack may have to be bought whole. */
+  readonly pack: {
+    readonly name: string;
+    readonly holds: number;
+    readonly measure: PackMeasure;
+    readonly whole: boolean;
+  };
+  /** For one pack, without tax, in minor units. */
+  readonly costMinor: number;
+  /** The day from which the price holds, `2026-03-01`. */
+  readonly from: string;
+  /** One unit's, kg; null where it is not known. */
+  readonly massKg: number | null;
+  /** As delivered, loose, kg/m³; null where it is not known. */
+  readonly looseDensity: number | null;
+  /** Smallest and largest stone, mm; null for what is no aggregate. */
+  readonly stone: readonly [number, number] | null;
+}
+
+export interface PriceList {
+  /** ISO 4217. */
+  readonly currency: string;
+  /** The day that it was drawn up for, `2026-03-01`. */
+  readonly on: string;
+  readonly items: readonly PriceItem[];
+}
