@@ -30,7 +30,10 @@ export function PegString() {
   const step = useTable((state) => state.step);
   const at = STEPS.indexOf(step);
   return (
-    <nav aria-label="Steps" className="relative flex overflow-x-auto md:w-[6.6rem] md:flex-col md:overflow-x-visible md:py-6">
+    <nav
+      aria-label="Steps"
+      className="relative flex overflow-x-auto md:w-[6.6rem] md:flex-col md:overflow-x-visible md:py-6"
+    >
       <span
         aria-hidden="true"
         className="absolute top-[1.35rem] right-0 left-0 h-px bg-stone-300 md:top-0 md:right-auto md:bottom-0 md:left-[1.35rem] md:h-auto md:w-px"
