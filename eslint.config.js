@@ -2,7 +2,7 @@ import tseslint from 'typescript-eslint';
 import astro from 'eslint-plugin-astro';
 
 /**
- * Imports point one way: geometry ← paving ← takeoff ← sheets ← server, components ← pages.
+ * Imports point one way: geometry ← paving ← takeoff ← sheets ← pdf ← server, components ← pages.
  * Each layer lists what it may not import; the core also takes no web, database or Node API.
  */
 const web = [
@@ -25,7 +25,7 @@ const web = [
   'jspdf',
   'svg2pdf.js',
 ];
-const layers = ['geometry', 'paving', 'takeoff', 'sheets', 'server', 'components', 'pages'];
+const layers = ['geometry', 'paving', 'takeoff', 'sheets', 'pdf', 'server', 'components', 'pages'];
 const folders = (names) => names.flatMap((name) => [`@/${name}`, `@/${name}/*`, `**/${name}/**`]);
 const forbid = (groups) => ({
   'no-restricted-imports': [
@@ -37,7 +37,7 @@ const forbid = (groups) => ({
 });
 const above = (layer) => layers.slice(layers.indexOf(layer) + 1);
 const oneWay =
-  'Imports point one way: geometry ← paving ← takeoff ← sheets ← server, components ← pages.';
+  'Imports point one way: geometry ← paving ← takeoff ← sheets ← pdf ← server, components ← pages.';
 const core = (layer) => ({
   files: [`src/${layer}/**`],
   rules: {
@@ -67,6 +67,19 @@ export default tseslint.config(
   core('paving'),
   core('takeoff'),
   core('sheets'),
+  {
+    files: ['src/pdf/**'],
+    rules: {
+      ...forbid([
+        [
+          web.filter((name) => !['jspdf', 'svg2pdf.js'].includes(name)),
+          'The PDF is made in browsers and in Node alike.',
+        ],
+        [folders([...above('pdf'), 'db']), oneWay],
+      ]),
+      'no-restricted-globals': ['error', 'window', 'document', 'process', 'DOMParser', 'fetch'],
+    },
+  },
   {
     files: ['src/components/**'],
     rules: forbid([

@@ -1,5 +1,5 @@
 import type { Laying } from '@/paving/laying';
-import type { DrawCommand, Drawing, PaperBox } from './drawing';
+import type { DrawCommand, PaperBox } from './drawing';
 import { PENS, boxHeight, boxInset, boxRing, boxWidth } from './drawing';
 import { INK, PAPER } from './inks';
 import { keepOutPlace } from './keep-out-place';
@@ -15,18 +15,11 @@ import { planPanelRows } from './plan-panel';
 import type { GroundBounds } from './plan-view';
 import { pointsBounds, viewCentred } from './plan-view';
 import { scaleFitting, scaleName } from './scales';
+import type { Sheet } from './sheet';
 import { startPoint } from './start-point';
 import { sheetText } from './text-measure';
 import { layingTinted } from './unit-drawing';
 import { TITLE_STRIP_HEIGHT, titleFrames, titleStrip } from './title-strip';
-
-/** One sheet of paper: a drawing, and the frames that its texts stay inside. */
-export interface Sheet extends Drawing {
-  readonly paper: Paper;
-  /** Denominator of the scale of the plan. */
-  readonly scale: number;
-  readonly frames: Readonly<Record<string, PaperBox>>;
-}
 
 /** White space round the ground for a line of dimensions and the corners' letters, mm. */
 const DIMENSION_MARGIN = 15;

@@ -4,7 +4,7 @@ import type { VersionDetail } from '@/api-types/versions';
 import { letteringGaps } from '@/sheets/lettering-gaps';
 import type { PaperName } from '@/sheets/paper';
 import { PAPER_NAMES } from '@/sheets/paper';
-import type { Sheet } from '@/sheets/plan-sheet';
+import type { Sheet } from '@/sheets/sheet';
 import { planSheets } from '@/sheets/plan-sheet';
 import { scaleName } from '@/sheets/scales';
 import { drawingSvg } from '@/sheets/svg-sink';
@@ -31,8 +31,9 @@ export default function PlanView({ version }: { version: VersionDetail }) {
   const takePdf = async () => {
     setMaking({ kind: 'making' });
     try {
-      const { sheetFonts, sheetsPdf } = await import('./plan-pdf');
-      const file = await sheetsPdf(sheets, { title, author: version.firmName }, await sheetFonts());
+      const { browserPdfMeans, sheetsPdf } = await import('./browser-pdf');
+      const about = { title, author: version.firmName };
+      const file = await sheetsPdf(sheets, about, await browserPdfMeans());
       download(new Blob([file], { type: 'application/pdf' }), `${planFileName(version)}.pdf`);
       setMaking({ kind: 'idle' });
       setSaid(`The PDF is made: ${sheetCount(sheets)} of ${paper.name} at ${scaleName(scale)}.`);

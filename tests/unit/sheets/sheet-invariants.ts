@@ -1,6 +1,6 @@
 import type { PaperPoint, TextCommand } from '@/sheets/drawing';
 import { drawingCommands } from '@/sheets/drawing';
-import type { Sheet } from '@/sheets/plan-sheet';
+import type { Sheet } from '@/sheets/sheet';
 import { textCorners } from '@/sheets/text-measure';
 
 export const sheetTexts = (sheet: Sheet): readonly TextCommand[] =>

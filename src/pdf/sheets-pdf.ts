@@ -1,39 +1,40 @@
-import type { jsPDF } from 'jspdf';
-import boldUrl from '@expo-google-fonts/nunito-sans/700Bold/NunitoSans_700Bold.ttf?url';
-import regularUrl from '@expo-google-fonts/nunito-sans/400Regular/NunitoSans_400Regular.ttf?url';
-import semiboldUrl from '@expo-google-fonts/nunito-sans/600SemiBold/NunitoSans_600SemiBold.ttf?url';
+import { jsPDF } from 'jspdf';
+import type { svg2pdf } from 'svg2pdf.js';
 import type { Layer } from '@/sheets/drawing';
-import type { Sheet } from '@/sheets/plan-sheet';
+import type { Sheet } from '@/sheets/sheet';
 import { drawingSvg } from '@/sheets/svg-sink';
 import { textStarted } from '@/sheets/text-measure';
 
-export type FontFile = { readonly weight: 400 | 600 | 700; readonly data: ArrayBuffer };
+export const FONT_WEIGHTS = [400, 600, 700] as const;
+/** Nunito Sans as a TrueType file. */
+export interface FontFile {
+  readonly weight: (typeof FONT_WEIGHTS)[number];
+  readonly data: ArrayBuffer;
+}
+
+/** What a browser has and Node has not; each side brings its own. */
+export interface PdfMeans {
+  readonly fonts: readonly FontFile[];
+  /** The root element of an SVG text. */
+  readonly svgElement: (svg: string) => Element;
+  readonly svg2pdf: typeof svg2pdf;
+}
+
 export interface PdfAbout {
   readonly title: string;
   readonly author: string;
 }
 
-const FONT_URLS = { 400: regularUrl, 600: semiboldUrl, 700: boldUrl } as const;
-
-/** The fonts that sheets are lettered in, as TrueType files. */
-export async function sheetFonts(): Promise<readonly FontFile[]> {
-  const weights = [400, 600, 700] as const;
-  return Promise.all(
-    weights.map(async (weight) => {
-      const answer = await fetch(FONT_URLS[weight]);
-      if (!answer.ok) throw new Error('The lettering for the PDF could not be fetched.');
-      return { weight, data: await answer.arrayBuffer() };
-    }),
-  );
-}
-
-/** The sheets as one PDF, a page each at its true size, in real text with its font embedded. */
+/**
+ * The sheets as one PDF, a page each at its true size, in real text with its font embedded. `onSheet` hears how many
+ * are done; throwing there stops the rest.
+ */
 export async function sheetsPdf(
   sheets: readonly Sheet[],
   about: PdfAbout,
-  fonts: readonly FontFile[],
+  means: PdfMeans,
+  onSheet: (done: number) => void | Promise<void> = () => {},
 ): Promise<ArrayBuffer> {
-  const [{ jsPDF }, { svg2pdf }] = await Promise.all([import('jspdf'), import('svg2pdf.js')]);
   const [first] = sheets;
   const pdf = new jsPDF({
     unit: 'mm',
@@ -43,16 +44,14 @@ export async function sheetsPdf(
     putOnlyUsedFonts: true,
   });
   pdf.setDocumentProperties({ title: about.title, author: about.author, creator: 'Evenlay' });
-  addFonts(pdf, fonts);
+  addFonts(pdf, means.fonts);
   for (const [n, sheet] of sheets.entries()) {
     if (n > 0) pdf.addPage([sheet.width, sheet.height], sheet.paper.orientation);
-    // Texts start where the sheet's own metrics put them, whatever font the browser would measure by.
+    // Texts start where the sheet's own metrics put them, whatever font the reader of the SVG would measure by.
     const started = { ...sheet, layers: sheet.layers.map(layerStarted) };
-    const svg = new DOMParser().parseFromString(
-      drawingSvg(started),
-      'image/svg+xml',
-    ).documentElement;
-    await svg2pdf(svg, pdf, { x: 0, y: 0, width: sheet.width, height: sheet.height });
+    const svg = means.svgElement(drawingSvg(started));
+    await means.svg2pdf(svg, pdf, { x: 0, y: 0, width: sheet.width, height: sheet.height });
+    await onSheet(n + 1);
   }
   const file = pdf.output('arraybuffer');
   assertEmbedded(new TextDecoder('latin1').decode(file));

@@ -1,134 +1,22 @@
-import { readFileSync } from 'node:fs';
-import { JSDOM } from 'jsdom';
-import { getDocument, OPS } from 'pdfjs-dist/legacy/build/pdf.mjs';
-import { beforeAll, describe, expect, it, vi } from 'vitest';
-import type { FontFile } from '@/components/version/plan-pdf';
-import { sheetsPdf } from '@/components/version/plan-pdf';
+import { getDocument } from 'pdfjs-dist/legacy/build/pdf.mjs';
+import { describe, expect, it } from 'vitest';
 import type { LayoutDocument } from '@/paving/layout-document';
+import { sheetsPdf } from '@/pdf/sheets-pdf';
 import { COURT_CHEQUER, ROUND_TERRACE, SIDE_YARD } from '@/server/demo-layouts';
+import { nodePdf, nodePdfMeans } from '@/server/pdf/node-pdf';
 import type { PaperName } from '@/sheets/paper';
-import type { Sheet } from '@/sheets/plan-sheet';
+import type { Sheet } from '@/sheets/sheet';
 import { planSheets } from '@/sheets/plan-sheet';
 import { LETTERING, textWidth } from '@/sheets/text-measure';
-import { faceFile } from '../../../scripts/font-metrics';
-import { BAY, COURT, PATH, STAR, planInput } from './sample-floors';
-import { sheetTexts } from './sheet-invariants';
-
-/** A point of PostScript and PDF: 1/72 inch (ISO 32000-1, 8.3.2.3). */
-const MM_PER_POINT = 25.4 / 72;
-
-const fonts: readonly FontFile[] = ([400, 600, 700] as const).map((weight) => {
-  const bytes = readFileSync(faceFile(weight));
-  return {
-    weight,
-    data: bytes.buffer.slice(bytes.byteOffset, bytes.byteOffset + bytes.byteLength) as ArrayBuffer,
-  };
-});
-
-/** svg2pdf.js wants a browser: jsdom with text boxes, which it lacks, from the font's own widths. */
-beforeAll(() => {
-  const { window } = new JSDOM('');
-  const box = function (this: Element) {
-    const size = Number.parseFloat(this.getAttribute('font-size') ?? '0');
-    const width = textWidth(this.textContent ?? '', size * 0.705);
-    return { x: 0, y: -size, width, height: size };
-  };
-  for (const name of ['SVGElement', 'SVGGraphicsElement'] as const)
-    Object.defineProperty(window[name].prototype, 'getBBox', { value: box, configurable: true });
-  window.HTMLCanvasElement.prototype.getContext = (() => null) as never;
-  for (const name of ['window', 'document', 'DOMParser', 'CSSStyleSheet', 'CSSStyleRule'] as const)
-    vi.stubGlobal(name, name === 'window' ? window : window[name as 'document']);
-  return () => vi.unstubAllGlobals();
-});
+import { BAY, COURT, PATH, STAR, planInput } from '../sheets/sample-floors';
+import { sheetTexts } from '../sheets/sheet-invariants';
+import { MM_PER_POINT, strokedPaths } from './pdf-reading';
 
 async function pdfOf(document: LayoutDocument, paper: PaperName | 'auto' = 'auto') {
   const sheets = planSheets(planInput(document, { paper }));
-  const file = await sheetsPdf(
-    sheets,
-    { title: 'Court, version 3', author: 'Hollin & Sedge' },
-    fonts,
-  );
-  const pdf = await getDocument({ data: new Uint8Array(file.slice(0)), verbosity: 0 }).promise;
+  const file = await nodePdf(sheets, { title: 'Court, version 3', author: 'Hollin & Sedge' });
+  const pdf = await getDocument({ data: file.slice(), verbosity: 0 }).promise;
   return { sheets, pdf, file };
-}
-
-type Matrix = readonly [number, number, number, number, number, number];
-const times = (m: Matrix, n: Matrix): Matrix => [
-  m[0] * n[0] + m[2] * n[1],
-  m[1] * n[0] + m[3] * n[1],
-  m[0] * n[2] + m[2] * n[3],
-  m[1] * n[2] + m[3] * n[3],
-  m[0] * n[4] + m[2] * n[5] + m[4],
-  m[1] * n[4] + m[3] * n[5] + m[5],
-];
-
-interface Stroked {
-  readonly width: number;
-  /** Flattened subpaths in millimetres of the paper. */
-  readonly lines: readonly (readonly (readonly [number, number])[])[];
-}
-
-/** Every path that the page strokes, by the operators of its content. */
-async function strokedPaths(page: {
-  getOperatorList(): Promise<{ fnArray: number[]; argsArray: unknown[][] }>;
-}): Promise<readonly Stroked[]> {
-  const { fnArray, argsArray } = await page.getOperatorList();
-  const found: Stroked[] = [];
-  let matrix: Matrix = [1, 0, 0, 1, 0, 0];
-  let width = 1;
-  const stack: { matrix: Matrix; width: number }[] = [];
-  fnArray.forEach((op, n) => {
-    const args = argsArray[n];
-    if (op === OPS.save) stack.push({ matrix, width });
-    else if (op === OPS.restore) ({ matrix, width } = stack.pop()!);
-    else if (op === OPS.transform) matrix = times(matrix, args as unknown as Matrix);
-    else if (op === OPS.setLineWidth) width = args[0] as number;
-    else if (op === OPS.constructPath) {
-      const [paint, data] = args as [number, [Float32Array | null]];
-      const strokes: number[] = [OPS.stroke, OPS.closeStroke, OPS.fillStroke, OPS.eoFillStroke];
-      if (!strokes.includes(paint) || !data[0]) return;
-      const scale = Math.sqrt(Math.abs(matrix[0] * matrix[3] - matrix[1] * matrix[2]));
-      found.push({
-        width: width * scale * MM_PER_POINT,
-        lines: flattened(data[0], matrix),
-      });
-    }
-  });
-  return found;
-}
-
-/** pdf.js' own path buffer: 0 move, 1 line, 2 cubic, 3 quadratic, 4 close. */
-function flattened(data: Float32Array, m: Matrix) {
-  const lines: [number, number][][] = [];
-  const point = (x: number, y: number): [number, number] => [
-    (m[0] * x + m[2] * y + m[4]) * MM_PER_POINT,
-    (m[1] * x + m[3] * y + m[5]) * MM_PER_POINT,
-  ];
-  for (let at = 0; at < data.length;) {
-    const op = data[at];
-    const line = lines[lines.length - 1];
-    if (op === 0) lines.push([point(data[at + 1], data[at + 2])]);
-    else if (op === 1) line.push(point(data[at + 1], data[at + 2]));
-    else if (op === 2) {
-      const start = line[line.length - 1];
-      const [p, q, r] = [1, 3, 5].map((step) => point(data[at + step], data[at + step + 1]));
-      for (let n = 1; n <= 64; n += 1) {
-        const [t, s] = [n / 64, 1 - n / 64];
-        line.push(
-          [0, 1].map(
-            (axis) =>
-              s ** 3 * start[axis] +
-              3 * s * s * t * p[axis] +
-              3 * s * t * t * q[axis] +
-              t ** 3 * r[axis],
-          ) as [number, number],
-        );
-      }
-    } else if (op === 4) line.push(line[0]);
-    else throw new Error(`Path operator ${op} was not expected.`);
-    at += [3, 3, 7, 5, 1][op];
-  }
-  return lines;
 }
 
 /** Lengths between the corners of the stroked outline nearest to the perimeter drawn, mm of paper. */
@@ -244,7 +132,13 @@ describe('the plan as PDF', () => {
 
   it('refuses to make a PDF without its font', async () => {
     const sheets = planSheets(planInput(COURT));
-    await expect(sheetsPdf(sheets, { title: '', author: '' }, [])).rejects.toThrow(/lettering/);
+    const means = { ...(await nodePdfMeans()), fonts: [] };
+    await expect(sheetsPdf(sheets, { title: '', author: '' }, means)).rejects.toThrow(/lettering/);
+  });
+
+  it('is made without a browser’s globals, and leaves none', async () => {
+    await pdfOf(COURT);
+    for (const name of ['window', 'document', 'DOMParser']) expect(name in globalThis).toBe(false);
   });
 
   it('carries the title block and the document’s title', async () => {
