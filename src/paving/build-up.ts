@@ -29,3 +29,9 @@ export const buildUpSchema = z.object({
 });
 
 export type BuildUp = z.infer<typeof buildUpSchema>;
+
+/** What a document without a build-up is reckoned with: a foot-traffic floor. */
+export const PLAIN_BUILD_UP: BuildUp = buildUpSchema.parse({});
+
+export const documentBuildUp = (document: { readonly buildUp?: BuildUp }): BuildUp =>
+  document.buildUp ?? PLAIN_BUILD_UP;

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { buildUpSchema } from './build-up';
+import { levelsSchema } from './levels';
 
 /**
  * The layout document: all that is needed to lay a floor. It is what the table edits, what a
@@ -153,6 +154,8 @@ export const layoutDocumentSchema = z.object({
   aggregate: aggregateSchema.optional(),
   /** The layers under the units; without it nothing is known of them yet. */
   buildUp: buildUpSchema.optional(),
+  /** Finish, falls and spot levels; without it the floor is flat and flush with the edge. */
+  levels: levelsSchema.optional(),
   notes: z.string().max(10_000).optional(),
 });
 

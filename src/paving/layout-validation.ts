@@ -5,6 +5,7 @@ import { bondPattern, documentUnit } from './bond';
 import { bondProblems } from './bond-validation';
 import type { DocumentProblem } from './document-problem';
 import { ringEdges } from './ground';
+import { levelProblems } from './levels';
 import { layoutDocumentSchema, type LayoutDocument } from './layout-document';
 import { ringAnticlockwise, ringProblems, vertexRingArea } from './ring-validation';
 
@@ -163,6 +164,6 @@ export function parseLayoutDocument(input: unknown): ParsedDocument {
   const bond = bondProblems(document);
   // A floor too large to lay is said to be so before its outlines are looked into.
   const size = bond.length === 0 ? sizeProblems(document) : [];
-  const problems = size.length > 0 ? size : [...ringProblems(document.ground), ...bond];
+  const problems = size.length > 0 ? size : [...ringProblems(document.ground), ...bond, ...levelProblems(document)];
   return problems.length > 0 ? { ok: false, problems } : { ok: true, document };
 }
