@@ -13,4 +13,5 @@ export * from './schema/layouts';
 export * from './schema/outbox';
 export * from './schema/projects';
 export * from './schema/sessions';
+export * from './schema/site';
 export * from './schema/versions';

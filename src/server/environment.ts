@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import type { S3Settings } from './files/s3-store';
 
 const port = z.coerce
   .number({ error: 'must be a port number such as 4321' })
@@ -48,7 +49,50 @@ const environmentSchema = z.object({
       'must look like Evenlay <floors@firm.example>',
     )
     .default('Evenlay <evenlay@localhost>'),
+  /** The bucket that photos are kept in; without one they are kept in DATA_DIR/files. */
+  S3_BUCKET: z
+    .string()
+    .regex(/^[a-z0-9][a-z0-9.-]{1,61}[a-z0-9]$/, 'must be the name of a bucket')
+    .optional(),
+  /** The service that holds the bucket, when it is not Amazon's own. */
+  S3_ENDPOINT: z
+    .url({ protocol: /^https?$/, error: 'must look like https://files.example' })
+    .optional(),
+  S3_REGION: z
+    .string()
+    .regex(/^[a-z0-9-]+$/, 'must look like eu-west-1')
+    .default('us-east-1'),
+  /** Both or neither: with neither, the SDK's usual places are looked in. */
+  S3_ACCESS_KEY_ID: z.string().optional(),
+  S3_SECRET_ACCESS_KEY: z.string().optional(),
 });
+
+type Parsed = z.output<typeof environmentSchema>;
+
+/** What several keys must satisfy together: each as the key and what is wrong with it. */
+const disagreements = (value: Parsed): (readonly [key: string, message: string])[] => {
+  const wrong: (readonly [string, string])[] = [];
+  if (value.S3_ENDPOINT && !value.S3_BUCKET)
+    wrong.push(['S3_BUCKET', 'is needed with S3_ENDPOINT']);
+  if (Boolean(value.S3_ACCESS_KEY_ID) !== Boolean(value.S3_SECRET_ACCESS_KEY)) {
+    const missing = value.S3_ACCESS_KEY_ID ? 'S3_SECRET_ACCESS_KEY' : 'S3_ACCESS_KEY_ID';
+    wrong.push([missing, 'is needed with the other half of the key']);
+  }
+  return wrong;
+};
+
+const s3Of = (value: Parsed): S3Settings | undefined =>
+  value.S3_BUCKET
+    ? {
+        endpoint: value.S3_ENDPOINT,
+        region: value.S3_REGION,
+        bucket: value.S3_BUCKET,
+        keys:
+          value.S3_ACCESS_KEY_ID && value.S3_SECRET_ACCESS_KEY
+            ? { accessKeyId: value.S3_ACCESS_KEY_ID, secretAccessKey: value.S3_SECRET_ACCESS_KEY }
+            : undefined,
+      }
+    : undefined;
 
 export interface Environment {
   readonly host: string;
@@ -60,6 +104,8 @@ export interface Environment {
   readonly secureCookies: 'auto' | 'always' | 'never';
   readonly smtpUrl: string | undefined;
   readonly mailFrom: string;
+  /** Undefined: files are kept in DATA_DIR. */
+  readonly s3: S3Settings | undefined;
 }
 
 /**
@@ -85,6 +131,11 @@ export const parseEnvironment = (
     throw new Error(`These settings are wrong:\n${lines.join('\n')}`);
   }
   const value = parsed.data;
+  const wrong = disagreements(value);
+  if (wrong.length > 0) {
+    const lines = wrong.map(([key, message]) => `  ${key} ${message}`);
+    throw new Error(`These settings are wrong:\n${lines.join('\n')}`);
+  }
   return {
     host: value.HOST,
     port: value.PORT,
@@ -95,6 +146,7 @@ export const parseEnvironment = (
     secureCookies: value.SECURE_COOKIES,
     smtpUrl: value.SMTP_URL,
     mailFrom: value.MAIL_FROM,
+    s3: s3Of(value),
   };
 };
 

@@ -32,6 +32,8 @@ export const ARCHIVED_TABLES: readonly ArchivedTable[] = [
   { name: 'comments', table: schema.comments },
   { name: 'mentions', table: schema.mentions },
   { name: 'comment-reads', table: schema.commentReads },
+  { name: 'site-entries', table: schema.siteEntries, fileBy: 'id' },
+  { name: 'site-photos', table: schema.sitePhotos },
   { name: 'audit-events', table: schema.auditEvents },
 ];
 
@@ -42,6 +44,10 @@ export const NOT_ARCHIVED: readonly { readonly table: PgTable; readonly why: str
   { table: schema.signInAttempts, why: 'belongs to no firm' },
   { table: schema.outbox, why: 'letters hold links that let people in, and are not sent twice' },
   { table: schema.draftPresence, why: 'is over in a minute' },
+  {
+    table: schema.siteKeys,
+    why: 'unlocks what waits on phones; each is made anew when it is missing',
+  },
 ];
 
 /** The archived columns of a table, by the names that the archive gives them. */

@@ -1,0 +1,83 @@
+import { formatLength, type Display } from '../length';
+import type { Check } from '../set-out/set-out-types';
+
+/** Readings are compared with limits to this, mm: a limit that prints as 3.2 mm is met by a tape that reads 3.2 mm. */
+export const READING_TOLERANCE_MM = 0.05;
+
+/** What a reading says about its check. */
+export interface Verdict {
+  readonly within: boolean;
+  /** Reading less expected, mm. */
+  readonly off: number;
+  /** By how much it is past the limit, mm; nought within. */
+  readonly past: number;
+}
+
+export const readingVerdict = (
+  { expected, least, greatest }: Pick<Check, 'expected' | 'least' | 'greatest'>,
+  measured: number,
+): Verdict => {
+  const under = least === null ? 0 : least - measured;
+  const over = greatest === null ? 0 : measured - greatest;
+  const past = Math.max(0, under, over);
+  const within = past <= READING_TOLERANCE_MM;
+  return { within, off: measured - expected, past: within ? 0 : past };
+};
+
+/** What to do about a reading that will not do, by what was measured and which way it is off. */
+const REMEDIES: Readonly<Record<Check['kind'], (long: boolean) => string>> = {
+  edge: (long) =>
+    `Tape it again, pulled tight and level. If it stays ${long ? 'long' : 'short'}, the edge is not as drawn: do not lay yet, and send the reading to the designer, who can fit the floor anew.`,
+  diagonal: (long) =>
+    `Tape both diagonals again. If this one stays ${long ? 'long' : 'short'}, the corners are not as drawn: move the pegs if they are yours to move, else send the reading before laying.`,
+  square: () =>
+    'Swing the string about its first peg until it reads right, then tape the other side again before laying on.',
+  gap: (long) =>
+    long
+      ? 'The field stands too far off here. Check the string and the side across from it; nothing is lost while the gap opposite keeps its least.'
+      : 'The field has come too near to the edge here. Stop, close the joints of the next courses a little, and look at “Sizes” before laying on.',
+  rows: (long) =>
+    long
+      ? 'The courses are running large. Close the joints of the next ones a little, and measure ten units laid tight under “Sizes”.'
+      : 'The courses are running small. Open the joints of the next ones a little, and measure ten units laid tight under “Sizes”.',
+  run: (long) =>
+    long
+      ? 'The units along this course run large. Close the joints along it a little, and look at “Sizes”.'
+      : 'The units along this course run small. Open the joints along it a little, and look at “Sizes”.',
+  joint: (long) =>
+    long
+      ? 'The joint is too wide. Close up the units from the string before the next course.'
+      : 'The joint is too tight. Ease the units apart to the spacer before the next course.',
+  flatness: () =>
+    'Lift the units under the straightedge and bed them again before the joints are filled.',
+  layer: (long) =>
+    long
+      ? 'Too thick here. Take some off and compact again, so that the floor ends at its height.'
+      : 'Too thin here. Add material, compact again and measure again.',
+};
+
+export const readingRemedy = (check: Pick<Check, 'kind'>, verdict: Verdict): string | null =>
+  verdict.within ? null : REMEDIES[check.kind](verdict.off > 0);
+
+/** The verdict in words: "Within: 2 mm over what is drawn." */
+export const verdictWords = (verdict: Verdict, display: Display): string => {
+  const off = formatLength(Math.abs(verdict.off), display, { decimals: 1 });
+  const how =
+    Math.abs(verdict.off) <= READING_TOLERANCE_MM
+      ? 'just as drawn'
+      : `${off} ${verdict.off > 0 ? 'over' : 'under'} what is drawn`;
+  return verdict.within
+    ? `Within: ${how}.`
+    : `Not within: ${how}, ${formatLength(verdict.past, display, { decimals: 1 })} past what will do.`;
+};
+
+/** What will do, in words: "2 995 mm to 3 005 mm". */
+export const allowedWords = (
+  { least, greatest }: Pick<Check, 'least' | 'greatest'>,
+  display: Display,
+): string | null => {
+  const said = (mm: number) => formatLength(mm, display, { decimals: 1 });
+  if (least !== null && greatest !== null) return `${said(least)} to ${said(greatest)}`;
+  if (least !== null) return `at least ${said(least)}`;
+  return greatest === null ? null : `at most ${said(greatest)}`;
+};
