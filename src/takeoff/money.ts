@@ -127,14 +127,16 @@ export function parseMoney(text: string, currency: string): ParsedMoney {
     ok: false,
     message,
   });
-  const bare = text
+  const plain = text
     .replace(currencySymbol(currency), '')
     .replace(new RegExp(currency, 'i'), '')
     .replace(/[\s\u00a0\u2009\u202f']/g, '')
-    .replace('−', '-')
-    // A comma before three digits parts thousands where a currency has not three decimals; any other is a decimal comma.
-    .replace(/,(?=\d{3}(?:[,.]|$))/g, exponent === 3 ? ',' : '')
-    .replace(',', '.');
+    .replace('−', '-');
+  // Beside a point, commas part thousands. Alone, one before three digits does too, but not where the
+  // currency itself has three figures after its point; any other is a decimal comma.
+  const bare = plain.includes('.')
+    ? plain.replace(/,/g, '')
+    : plain.replace(/,(?=\d{3}(?:,|$))/g, exponent === 3 ? ',' : '').replace(',', '.');
   const match = /^(-?)(\d*)(?:\.(\d*))?$/.exec(bare);
   if (!match || (match[2] === '' && !match[3])) return fail();
   const part = match[3] ?? '';
