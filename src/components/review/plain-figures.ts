@@ -29,7 +29,7 @@ export function plainFigures({ document, report }: Shown): readonly PlainFigure[
     {
       name: 'Floor',
       value: formatArea(report.groundArea, display),
-      meaning: `Paving covers ${formatArea(report.coveredArea, display)} of it, about ${share} parts in a hundred.`,
+      meaning: `Paving covers ${formatArea(report.coveredArea, display)} of it, about ${share} per cent.`,
     },
     ...(report.fillArea > 0
       ? [
