@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { buildUpSchema } from './build-up';
 import { levelsSchema } from './levels';
+import { setOutChoiceSchema } from './set-out/datum-choice';
 
 /**
  * The layout document: all that is needed to lay a floor. It is what the table edits, what a
@@ -156,6 +157,8 @@ export const layoutDocumentSchema = z.object({
   buildUp: buildUpSchema.optional(),
   /** Finish, falls and spot levels; without it the floor is flat and flush with the edge. */
   levels: levelsSchema.optional(),
+  /** The two corners to set out from; without it the program picks them. */
+  setOut: setOutChoiceSchema.optional(),
   notes: z.string().max(10_000).optional(),
 });
 

@@ -8,6 +8,7 @@ import { ringEdges } from './ground';
 import { levelProblems } from './levels';
 import { layoutDocumentSchema, type LayoutDocument } from './layout-document';
 import { ringAnticlockwise, ringProblems, vertexRingArea } from './ring-validation';
+import { choiceTurned, datumProblems } from './set-out/datum-choice';
 
 export type { DocumentProblem } from './document-problem';
 
@@ -150,9 +151,12 @@ export function parseLayoutDocument(input: unknown): ParsedDocument {
   if (!parsed.success) {
     return { ok: false, problems: parsed.error.issues.flatMap(nearestIssues).map(issueProblem) };
   }
-  const { ground } = parsed.data;
+  const { ground, setOut } = parsed.data;
+  const turned = (ring: number) =>
+    vertexRingArea(ring === 0 ? ground.perimeter : ground.keepOuts[ring - 1].ring) < 0;
   const document: LayoutDocument = {
     ...parsed.data,
+    ...(setOut && { setOut: choiceTurned(setOut, ground, turned) }),
     ground: {
       perimeter: ringAnticlockwise(ground.perimeter),
       keepOuts: ground.keepOuts.map((keepOut) => ({
@@ -164,6 +168,14 @@ export function parseLayoutDocument(input: unknown): ParsedDocument {
   const bond = bondProblems(document);
   // A floor too large to lay is said to be so before its outlines are looked into.
   const size = bond.length === 0 ? sizeProblems(document) : [];
-  const problems = size.length > 0 ? size : [...ringProblems(document.ground), ...bond, ...levelProblems(document)];
+  const problems =
+    size.length > 0
+      ? size
+      : [
+          ...ringProblems(document.ground),
+          ...bond,
+          ...levelProblems(document),
+          ...datumProblems(document),
+        ];
   return problems.length > 0 ? { ok: false, problems } : { ok: true, document };
 }

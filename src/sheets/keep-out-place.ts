@@ -1,5 +1,6 @@
 import type { Point } from '@/geometry/point';
 import type { Ground, GroundRing } from '@/paving/ground';
+import { ringCircle } from '@/paving/ring-circle';
 
 /** A distance square from a straight perimeter edge to a point of a keep-out. */
 export interface Offset {
@@ -37,7 +38,7 @@ const LEAST_ANGLE = Math.PI / 6;
 const NEARLY_SQUARE = (80 * Math.PI) / 180;
 
 export function keepOutPlace(ground: Ground, ring: GroundRing): KeepOutPlace {
-  const circle = circleOf(ring);
+  const circle = ringCircle(ring);
   const points = circle
     ? [{ corner: null, point: circle.centre }]
     : ring.edges.map((edge, corner) => ({ corner: corner as number | null, point: edge.start }));
@@ -100,29 +101,6 @@ function tapePair(ground: Ground, point: Point): KeepOutPlace['tapes'] {
     }
   });
   return best;
-}
-
-/** A ring of arcs about one centre. */
-function circleOf(ring: GroundRing): { readonly centre: Point; readonly radius: number } | null {
-  if (ring.edges.some(({ bulge }) => bulge <= 0)) return null;
-  const arcs = ring.edges.map(({ start, end, bulge }) => {
-    const [dx, dy] = [end[0] - start[0], end[1] - start[1]];
-    const toCentre = (1 - bulge * bulge) / (4 * bulge);
-    return {
-      centre: [
-        (start[0] + end[0]) / 2 - dy * toCentre,
-        (start[1] + end[1]) / 2 + dx * toCentre,
-      ] as const,
-      radius: (Math.hypot(dx, dy) * (1 + bulge * bulge)) / (4 * bulge),
-    };
-  });
-  const [first] = arcs;
-  const same = arcs.every(
-    ({ centre, radius }) =>
-      Math.abs(radius - first.radius) < 0.5 &&
-      Math.hypot(centre[0] - first.centre[0], centre[1] - first.centre[1]) < 0.5,
-  );
-  return same ? first : null;
 }
 
 function rectangleOf(ring: GroundRing): KeepOutPlace['size'] {
