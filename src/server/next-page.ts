@@ -21,7 +21,10 @@ const OPEN_PAGES: ReadonlySet<string> = new Set([
 
 /** Pages that anybody may open. Every other page sends those who are not signed in to `/sign-in`. */
 export const isOpenPage = (path: string): boolean =>
-  OPEN_PAGES.has(path) || path === '/guide' || path.startsWith('/guide/');
+  OPEN_PAGES.has(path) ||
+  path === '/guide' ||
+  path.startsWith('/guide/') ||
+  path.startsWith('/current/');
 
 const OPEN_ENDPOINTS: ReadonlySet<string> = new Set([
   '/api/health',
@@ -36,4 +39,4 @@ const OPEN_ENDPOINTS: ReadonlySet<string> = new Set([
 
 /** Endpoints that answer without a session. Letters kept on this machine are guarded by `local-mail.ts`. */
 export const isOpenEndpoint = (path: string): boolean =>
-  OPEN_ENDPOINTS.has(path) || path.startsWith('/api/dev/mail/');
+  OPEN_ENDPOINTS.has(path) || path.startsWith('/api/dev/mail/') || path.startsWith('/api/current/');

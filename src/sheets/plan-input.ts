@@ -5,6 +5,19 @@ import type { PaperName } from './paper';
 /** Where a version stands: the kinds of its events. */
 export type SheetState = 'saved' | 'shared' | 'accepted' | 'change_asked' | 'issued' | 'superseded';
 
+/** What every sheet says of its version's issue. */
+export interface SheetStamp {
+  /** When it was issued for set-out, ISO 8601 UTC. */
+  readonly issuedAt: string | null;
+  /** The version issued in its place, and when. */
+  readonly supersededBy: { readonly number: number | null; readonly at: string } | null;
+  /** Address of the page that says whether this is still the current plan; without it there is no QR code. */
+  readonly currentUrl: string | null;
+}
+
+/** Of a version that was not issued, on a sheet without a QR code. */
+export const NO_STAMP: SheetStamp = { issuedAt: null, supersededBy: null, currentUrl: null };
+
 /** All that a plan sheet is drawn from. The document is the laying's own. */
 export interface PlanInput {
   readonly laying: Laying;
@@ -20,6 +33,7 @@ export interface PlanInput {
   readonly date: string;
   readonly fingerprint: string;
   readonly state: SheetState;
+  readonly stamp: SheetStamp;
   readonly paper: PaperName | 'auto';
 }
 

@@ -1,7 +1,6 @@
 import type { Laying } from '@/paving/laying';
 import type { DrawCommand, PaperBox } from './drawing';
-import { PENS, boxHeight, boxInset, boxRing, boxWidth } from './drawing';
-import { INK, PAPER } from './inks';
+import { boxHeight, boxInset, boxWidth } from './drawing';
 import { keepOutPlace } from './keep-out-place';
 import type { FlowedPanel, PanelColumn, PanelRow } from './panel';
 import { panelFlowed } from './panel';
@@ -9,17 +8,16 @@ import type { Orientation, Paper, PaperName } from './paper';
 import { paperOf } from './paper';
 import { planDrawing } from './plan-drawing';
 import type { PlanInput } from './plan-input';
-import { STATE_NAMES, sheetDate } from './plan-input';
 import type { PlanFacts } from './plan-panel';
 import { planPanelRows } from './plan-panel';
 import type { GroundBounds } from './plan-view';
 import { pointsBounds, viewCentred } from './plan-view';
-import { scaleFitting, scaleName } from './scales';
-import type { Sheet } from './sheet';
+import { scaleFitting } from './scales';
+import type { NumberedSheet, SheetDraft } from './sheet-draft';
+import { footStrip, rule, sheetsNumbered } from './sheet-draft';
 import { startPoint } from './start-point';
-import { sheetText } from './text-measure';
 import { layingTinted } from './unit-drawing';
-import { TITLE_STRIP_HEIGHT, titleFrames, titleStrip } from './title-strip';
+import { TITLE_STRIP_HEIGHT } from './title-strip';
 
 /** White space round the ground for a line of dimensions and the corners' letters, mm. */
 const DIMENSION_MARGIN = 15;
@@ -53,7 +51,7 @@ interface Arrangement {
  * Letter and Tabloid for imperial) that shows units well. The first sheet has the plan; more
  * follow when the figures of its edges and notes need them.
  */
-export function planSheets(given: PlanInput): readonly Sheet[] {
+export function planDrafts(given: PlanInput): readonly SheetDraft[] {
   const laying = layingTinted(given.laying);
   const input = { ...given, laying };
   const facts: PlanFacts = {
@@ -64,11 +62,12 @@ export function planSheets(given: PlanInput): readonly Sheet[] {
   };
   const bounds = pointsBounds(laying.ground.rings[0].edges.flatMap((edge) => edge.chords));
   const arrangement = arrangementChosen(factsDeciding(facts), bounds);
-  return sheetsDrawn(facts, bounds, arrangement);
+  return plansDrawn(facts, bounds, arrangement);
 }
 
-/** The first sheet: the plan itself. */
-export const planSheet = (input: PlanInput): Sheet => planSheets(input)[0];
+/** The plan by itself, outside a pack. */
+export const planSheets = (input: PlanInput): readonly NumberedSheet[] =>
+  sheetsNumbered(planDrafts(input), input);
 
 /** Long notes go where there is room, on a further sheet if need be; they do not decide the paper. */
 function factsDeciding(facts: PlanFacts): PlanFacts {
@@ -140,13 +139,6 @@ function scaleIn(bounds: GroundBounds, box: PaperBox): number {
     boxHeight(box) - 2 * DIMENSION_MARGIN,
   );
 }
-
-const rule = (from: readonly [number, number], to: readonly [number, number]): DrawCommand => ({
-  kind: 'line',
-  from,
-  to,
-  stroke: { width: PENS.medium, colour: INK },
-});
 
 /** Columns of figures at the right, the title strip under the drawing. */
 function landscapeArrangement(
@@ -260,11 +252,11 @@ function panelsFlowed(
   return panels;
 }
 
-function sheetsDrawn(
+function plansDrawn(
   facts: PlanFacts,
   bounds: GroundBounds,
   arrangement: Arrangement,
-): readonly Sheet[] {
+): readonly SheetDraft[] {
   const { paper, scale, drawing, columns } = arrangement;
   const inside = boxInset(drawing, 1.5);
   const plan = planDrawing(facts, viewCentred(bounds, scale, drawing), inside);
@@ -272,51 +264,25 @@ function sheetsDrawn(
   const rows = planPanelRows({ ...facts, asCourses: plan.asCourses }, scale, columnWidth);
   const panels = panelsFlowed(rows, columns, paper);
   const further = furtherColumns(paper, columnWidth);
-  return panels.map((panel, n): Sheet => {
-    const title =
-      n === 0
-        ? arrangement.title
-        : { ...paper.frame, top: paper.frame.bottom - TITLE_STRIP_HEIGHT };
-    const fields = titleFields(facts.input, paper, scale, n + 1, panels.length);
+  return panels.map((panel, n): SheetDraft => {
+    const title = n === 0 ? arrangement.title : footStrip(paper);
     const used = n === 0 ? columns : further;
     return {
-      width: paper.width,
-      height: paper.height,
+      kind: 'plan',
+      type: n === 0 ? 'Floor plan' : 'Floor plan: tables',
       paper,
       scale,
+      title,
       frames: {
         drawing: inside,
         ...Object.fromEntries(used.map(({ frame, box }) => [frame, box])),
-        ...titleFrames(fields, title),
       },
-      layers: [
-        { name: 'paper', commands: [paperSheet(paper)] },
-        ...(n === 0 ? plan.layers : []),
-        { name: 'panel', commands: panel.commands },
-        {
-          name: 'title',
-          commands: [
-            ...titleStrip(fields, title),
-            ...(n === 0
-              ? arrangement.rules
-              : [rule([title.left, title.top], [title.right, title.top])]),
-            {
-              kind: 'path',
-              rings: [boxRing(paper.frame)],
-              stroke: { width: PENS.thick, colour: INK },
-            },
-          ],
-        },
-      ],
+      layers: [...(n === 0 ? plan.layers : []), { name: 'panel', commands: panel.commands }],
+      rules:
+        n === 0 ? arrangement.rules : [rule([title.left, title.top], [title.right, title.top])],
     };
   });
 }
-
-const paperSheet = (paper: Paper): DrawCommand => ({
-  kind: 'path',
-  rings: [boxRing({ left: 0, top: 0, right: paper.width, bottom: paper.height })],
-  fill: PAPER,
-});
 
 /** Columns over the whole of a further sheet. */
 function furtherColumns({ frame }: Paper, columnWidth: number): readonly PanelColumn[] {
@@ -334,24 +300,4 @@ function furtherColumns({ frame }: Paper, columnWidth: number): readonly PanelCo
       },
     };
   });
-}
-
-function titleFields(input: PlanInput, paper: Paper, scale: number, sheet: number, of: number) {
-  const text = {
-    owner: input.firm,
-    title: input.project,
-    supplement: input.label === '' ? input.layout : `${input.layout}: ${input.label}`,
-    documentType: 'Floor plan',
-    documentNumber: input.documentNumber,
-    version: String(input.version),
-    date: sheetDate(input.date),
-    state: STATE_NAMES[input.state],
-    scale: `${scaleName(scale)} on ${paper.name}`,
-    creator: input.creator,
-    fingerprint: input.fingerprint.slice(0, 10),
-    sheet: `${sheet}/${of}`,
-  };
-  return Object.fromEntries(
-    Object.entries(text).map(([name, value]) => [name, sheetText(value)]),
-  ) as unknown as typeof text;
 }

@@ -287,6 +287,30 @@ const rows: readonly Row[] = [
     expected: statuses([200, 200, 200, 404, 404, 404, 404, 401]),
   },
   {
+    row: 'set-out pack: of one only saved',
+    endpoint: 'GET /api/versions/[id]/sheets',
+    id: ({ saved }) => saved,
+    expected: statuses([200, 200, 404, 404, 404, 404, 404, 401]),
+  },
+  {
+    row: 'set-out pack: the plan sheet of a shared one',
+    endpoint: 'GET /api/versions/[id]/sheets',
+    id: ({ shared }) => shared,
+    expected: statuses([200, 200, 404, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: 'set-out pack: of an issued one',
+    endpoint: 'GET /api/versions/[id]/sheets',
+    id: ({ issued }) => issued,
+    expected: statuses([200, 200, 200, 404, 404, 404, 404, 401]),
+  },
+  {
+    row: 'open to all who hold a sheet: whether its plan is current, and nothing else',
+    endpoint: 'GET /api/current/[id]',
+    id: ({ saved }) => saved,
+    expected: statuses([200, 200, 200, 200, 200, 200, 200, 200]),
+  },
+  {
     row: `${DRAFTS}: one not shared yet`,
     endpoint: 'POST /api/versions/[id]/share',
     id: () => versionThatIs('saved'),

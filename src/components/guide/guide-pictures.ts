@@ -5,7 +5,7 @@ import { boxRing } from '@/sheets/drawing';
 import { PAPER } from '@/sheets/inks';
 import { keepOutPlace } from '@/sheets/keep-out-place';
 import { planDrawing } from '@/sheets/plan-drawing';
-import type { PlanInput } from '@/sheets/plan-input';
+import { NO_STAMP, type PlanInput } from '@/sheets/plan-input';
 import { planSheets } from '@/sheets/plan-sheet';
 import { pointsBounds, viewCentred } from '@/sheets/plan-view';
 import { startPoint } from '@/sheets/start-point';
@@ -26,6 +26,7 @@ const sheetInput = (document: LayoutDocument): PlanInput => {
     date: '2026-05-12T08:40:00.000Z',
     fingerprint: 'c0ffee2b1d',
     state: 'issued',
+    stamp: { ...NO_STAMP, issuedAt: '2026-05-20T07:05:00.000Z' },
     paper: 'A4',
   };
 };

@@ -1,6 +1,6 @@
 import './sheet-fonts.css';
 import { useMemo, useState } from 'react';
-import type { VersionDetail } from '@/api-types/versions';
+import type { SheetPack } from '@/api-types/sheet-pack';
 import { letteringGaps } from '@/sheets/lettering-gaps';
 import type { PaperName } from '@/sheets/paper';
 import { PAPER_NAMES } from '@/sheets/paper';
@@ -18,12 +18,15 @@ type Making =
   { readonly kind: 'idle' | 'making' } | { readonly kind: 'failed'; readonly message: string };
 
 /** The plan sheet of a version on screen: choose the paper, take it as PDF or SVG, or print it. */
-export default function PlanView({ version }: { version: VersionDetail }) {
+export default function PlanView({ version, stamp }: Pick<SheetPack, 'version' | 'stamp'>) {
   const [choice, setChoice] = useState<PaperChoice>('auto');
   const [trueSize, setTrueSize] = useState(false);
   const [making, setMaking] = useState<Making>({ kind: 'idle' });
   const [said, setSaid] = useState('');
-  const input = useMemo(() => versionPlanInput(version, choice), [version, choice]);
+  const input = useMemo(
+    () => versionPlanInput({ version, stamp }, choice),
+    [version, stamp, choice],
+  );
   const sheets = useMemo(() => planSheets(input), [input]);
   const [{ paper, scale }] = sheets;
   const title = `${version.projectName}, ${version.layoutName}, version ${version.number}`;

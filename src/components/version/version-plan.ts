@@ -1,10 +1,14 @@
+import type { SheetPack } from '@/api-types/sheet-pack';
 import type { VersionDetail } from '@/api-types/versions';
 import { layFloor } from '@/paving/laying';
 import type { PaperName } from '@/sheets/paper';
 import type { PlanInput } from '@/sheets/plan-input';
 
 /** What the plan sheet of a version is drawn from. */
-export function versionPlanInput(version: VersionDetail, paper: PaperName | 'auto'): PlanInput {
+export function versionPlanInput(
+  { version, stamp }: Pick<SheetPack, 'version' | 'stamp'>,
+  paper: PaperName | 'auto',
+): PlanInput {
   return {
     laying: layFloor(version.document),
     report: version.report,
@@ -18,6 +22,7 @@ export function versionPlanInput(version: VersionDetail, paper: PaperName | 'aut
     date: version.createdAt,
     fingerprint: version.fingerprint,
     state: version.state,
+    stamp,
     paper,
   };
 }

@@ -3,7 +3,7 @@ import { layFloor } from '@/paving/laying';
 import type { LayoutDocument, Vertex } from '@/paving/layout-document';
 import { parseLayoutDocument } from '@/paving/layout-validation';
 import { floorReport } from '@/paving/report';
-import type { PlanInput } from '@/sheets/plan-input';
+import { NO_STAMP, type PlanInput } from '@/sheets/plan-input';
 
 const SLAB = { id: 'a', name: 'Slab 450 × 450', length: 450, width: 450, thickness: 50 };
 
@@ -170,6 +170,7 @@ export function planInput(
     date: '2026-10-14T09:30:00.000Z',
     fingerprint: 'a1b2c3d4e5f60718293a',
     state: 'shared',
+    stamp: NO_STAMP,
     paper: 'auto',
     ...change,
   };

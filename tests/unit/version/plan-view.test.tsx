@@ -4,11 +4,13 @@ import type { VersionDetail } from '@/api-types/versions';
 import PlanView from '@/components/version/PlanView';
 import StartDraft from '@/components/version/StartDraft';
 import { planFileName } from '@/components/version/plan-file-name';
+import { NO_STAMP } from '@/sheets/plan-input';
 import { documentNumber } from '@/components/version/version-plan';
 import { layFloor } from '@/paving/laying';
 import { floorReport } from '@/paving/report';
 import { COURT } from '../sheets/sample-floors';
 
+const stamp = { ...NO_STAMP, currentUrl: 'https://floors.example/current/v3' };
 const { edges: _, ...figures } = floorReport(layFloor(COURT));
 const VERSION: VersionDetail = {
   id: 'v3',
@@ -35,7 +37,7 @@ const VERSION: VersionDetail = {
 
 describe('the plan on screen', () => {
   it('shows the sheet and its scale, on the paper asked for', () => {
-    const { container } = render(<PlanView version={VERSION} />);
+    const { container } = render(<PlanView version={VERSION} stamp={stamp} />);
     const size = () => container.querySelector('[data-sheet] svg')!.getAttribute('viewBox');
     expect(size()).toBe('0 0 210 297');
     expect(container.textContent).toContain('1:50 on A4');
@@ -46,7 +48,7 @@ describe('the plan on screen', () => {
 
   it('says so, and stays usable, when the PDF cannot be made', async () => {
     vi.stubGlobal('fetch', () => Promise.resolve(new Response(null, { status: 503 })));
-    render(<PlanView version={VERSION} />);
+    render(<PlanView version={VERSION} stamp={stamp} />);
     fireEvent.click(screen.getByRole('button', { name: 'Download PDF' }));
     expect((await screen.findByRole('alert')).textContent).toContain('could not be made');
     expect(screen.getByRole<HTMLButtonElement>('button', { name: 'Download PDF' }).disabled).toBe(
@@ -63,7 +65,7 @@ describe('what the plan’s typeface lacks', () => {
       projectName: '庭 at the mill',
       document: { ...COURT, notes: '石' },
     };
-    const { container } = render(<PlanView version={named} />);
+    const { container } = render(<PlanView version={named} stamp={stamp} />);
     const note = screen.getByRole('note').textContent;
     expect(note).toContain('Some letters of the project’s name and the notes');
     expect(note).toContain('庭 石');
@@ -72,7 +74,7 @@ describe('what the plan’s typeface lacks', () => {
 
   it('goes without saying where every letter is there', () => {
     // Polish and Cyrillic letters are in the typeface.
-    render(<PlanView version={{ ...VERSION, projectName: 'Łódź, двор' }} />);
+    render(<PlanView version={{ ...VERSION, projectName: 'Łódź, двор' }} stamp={stamp} />);
     expect(screen.queryByRole('note')).toBeNull();
   });
 });
@@ -81,7 +83,7 @@ describe('the time of a version', () => {
   it('is the reader’s own on screen, and UTC by name on the sheet', () => {
     // Asia/Kolkata keeps UTC+5:30 all the year (IANA time zone database).
     vi.stubEnv('TZ', 'Asia/Kolkata');
-    const { container } = render(<PlanView version={VERSION} />);
+    const { container } = render(<PlanView version={VERSION} stamp={stamp} />);
     expect(container.querySelector('time')!.textContent).toContain('15:00');
     expect(container.querySelector('[data-sheet]')!.textContent).toContain('2026-10-14 09:30 UTC');
     vi.unstubAllEnvs();
