@@ -8,8 +8,18 @@ export interface LocalLetterSummary {
   readonly messageId: string;
 }
 
+export interface LocalAttachment {
+  readonly name: string;
+  readonly type: string;
+  /** In bytes. */
+  readonly size: number;
+  /** In base64. */
+  readonly content: string;
+}
+
 /** GET /api/dev/mail/{id}. */
 export interface LocalLetter extends LocalLetterSummary {
   readonly text: string;
   readonly html: string;
+  readonly attachments: readonly LocalAttachment[];
 }

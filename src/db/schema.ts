@@ -5,13 +5,17 @@
  */
 export * from './schema/agreement';
 export * from './schema/audit';
+export * from './schema/catalogue';
 export * from './schema/comments';
 export * from './schema/drafts';
 export * from './schema/entering';
+export * from './schema/firm-pricing';
 export * from './schema/firms';
 export * from './schema/layouts';
 export * from './schema/outbox';
 export * from './schema/projects';
+export * from './schema/purchase-orders';
+export * from './schema/quotes';
 export * from './schema/sessions';
 export * from './schema/site';
 export * from './schema/versions';

@@ -23,6 +23,10 @@ const SUBJECT_TYPES = [
   'version',
   'thread',
   'choice',
+  'item',
+  'supplier',
+  'quote',
+  'order',
 ] as const;
 
 export interface Subject {

@@ -59,6 +59,14 @@ export const refuseUnlessManaging = (actor: Actor): Refusal | null =>
     ? null
     : notAllowed('Only an owner of the firm manages its people and settings.');
 
+/** What things cost the firm, and what it earns on them, is its owners' and designers' alone. */
+export const seesCosts = (role: Role): boolean => permissions['catalogue and cost prices'][role];
+
+export const refuseUnlessPricing = (actor: Actor): Refusal | null =>
+  seesCosts(actor.role)
+    ? null
+    : notAllowed('Only the firm’s owner and designers see its catalogue, costs and orders.');
+
 /** Whether somebody in this role sees only the projects that they are put on. */
 export const isPutOnProjects = (role: Role): boolean =>
   permissions['see a project'][role] === 'put on';

@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, sql, type SQL } from 'drizzle-orm';
+import { and, asc, desc, eq, sql } from 'drizzle-orm';
 import type { z } from 'zod';
 import {
   projectStages,
@@ -12,25 +12,10 @@ import { exactly, keyRead, keyWritten, MOMENT, type Key } from './keyset';
 import type { Actor } from './permissions';
 import { projectSummaries, seenStage } from './projects';
 import { projectSeen } from './visibility';
+import { wordsMatch } from './word-search';
 
 type Query = z.output<typeof projectQuerySchema>;
 type Stage = ProjectSummary['stage'];
-
-/**
- * All words that a search gives, each as the beginning of a word. Quoted, so that PostgreSQL's own parser takes each
- * apart as it took the names apart, and nothing typed is an operator.
- */
-const wordsSought = (search: string): string =>
-  search
-    .split(/\s+/)
-    .filter((word) => /[\p{L}\p{N}]/u.test(word))
-    .map((word) => `'${word.replace(/[\\']/g, '$&$&')}':*`)
-    .join(' & ');
-
-const searched = (search: string | undefined): SQL | undefined => {
-  const words = wordsSought(search ?? '');
-  return words ? sql`${projects.words} @@ to_tsquery('simple', ${words})` : undefined;
-};
 
 /** Ways to order a list: by moment, newest first, or by text from its beginning; `id` settles what is level. */
 const ORDERS = {
@@ -76,7 +61,7 @@ const rowsOf = async (
         projectSeen(actor),
         ARCHIVED[query.archived],
         stage === undefined ? undefined : eq(seenStage(actor), stage),
-        searched(query.search),
+        wordsMatch(projects.words, query.search),
         after ?? undefined,
       ),
     )

@@ -8,6 +8,11 @@ export const AUDIT_SUBJECTS: readonly (readonly [what: string, name: string])[] 
   ['thread', 'Comments'],
   ['person', 'People'],
   ['invitation', 'Invitations'],
+  ['quote', 'Quotes'],
+  ['order', 'Orders'],
+  ['item', 'The catalogue'],
+  ['catalogue', 'Files read into the catalogue'],
+  ['supplier', 'Suppliers'],
   ['firm', 'The firm'],
 ];
 

@@ -1,7 +1,17 @@
 import { sql } from 'drizzle-orm';
-import { index, integer, pgTable, text, unique } from 'drizzle-orm/pg-core';
+import { index, integer, jsonb, pgTable, text, unique } from 'drizzle-orm/pg-core';
 import { createdAt, instant } from './columns';
 import { firms } from './firms';
+
+/** A file that goes with a letter. */
+export interface Attachment {
+  /** With its ending, such as `order.pdf`. */
+  readonly name: string;
+  /** Such as `application/pdf`. */
+  readonly type: string;
+  /** Its bytes in base64. */
+  readonly content: string;
+}
 
 /** Letters, written in the same transaction as what they tell of, and sent from here; see server/outbox. */
 export const outbox = pgTable(
@@ -16,6 +26,10 @@ export const outbox = pgTable(
     subject: text('subject').notNull(),
     text: text('text_part').notNull(),
     html: text('html_part').notNull(),
+    /** Where answers go, when not to whom letters come from. */
+    replyTo: text('reply_to'),
+    /** Files that go with it; wiped, like its words, once it is sent. */
+    attachments: jsonb('attachments').$type<readonly Attachment[]>(),
     /** The same at every try, so that whoever receives a letter twice can tell. */
     messageId: text('message_id').notNull(),
     createdAt: createdAt(),

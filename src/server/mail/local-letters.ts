@@ -48,6 +48,12 @@ export const readLetter = async (folder: string, id: string): Promise<LocalLette
     messageId: mail.messageId ?? '',
     text: mail.text ?? '',
     html: mail.html || '',
+    attachments: mail.attachments.map(({ filename, contentType, size, content }) => ({
+      name: filename ?? 'file',
+      type: contentType,
+      size,
+      content: content.toString('base64'),
+    })),
   };
 };
 

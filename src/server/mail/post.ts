@@ -1,3 +1,5 @@
+import type { Attachment } from '@/db/schema';
+
 /** A letter as the outbox holds it, ready to travel. */
 export interface PostedLetter {
   readonly id: string;
@@ -5,6 +7,8 @@ export interface PostedLetter {
   readonly subject: string;
   readonly text: string;
   readonly html: string;
+  readonly replyTo: string | null;
+  readonly attachments: readonly Attachment[];
   readonly messageId: string;
   readonly createdAt: Date;
 }

@@ -71,7 +71,7 @@ const claimNext = async (db: Db, leaseSeconds: number): Promise<Claimed | null> 
         order by due_at, id limit 1 for update skip locked)`,
     )
     .returning();
-  return row ? { ...row, claim } : null;
+  return row ? { ...row, attachments: row.attachments ?? [], claim } : null;
 };
 
 /** Whether the claim still holds; it then holds for a whole lease again. */
@@ -92,7 +92,13 @@ const renewClaim = async (db: Db, { id, claim }: Claimed, leaseSeconds: number):
   ).length > 0;
 
 /** A letter that is done with is no longer kept word for word: it may hold a link that lets somebody in. */
-const SPENT = { claimedBy: null, claimedUntil: null, text: '', html: '' } as const;
+const SPENT = {
+  claimedBy: null,
+  claimedUntil: null,
+  text: '',
+  html: '',
+  attachments: null,
+} as const;
 
 const writeDown = async (db: Db, letter: Claimed, delivery: Delivery): Promise<void> => {
   switch (delivery.kind) {

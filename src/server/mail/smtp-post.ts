@@ -33,6 +33,12 @@ const composed = async (letter: PostedLetter, from: string) => {
     subject: letter.subject,
     text: letter.text,
     html: letter.html,
+    ...(letter.replyTo ? { replyTo: { name: '', address: letter.replyTo } } : {}),
+    attachments: letter.attachments.map(({ name, type, content }) => ({
+      filename: name,
+      contentType: type,
+      content: Buffer.from(content, 'base64'),
+    })),
     messageId: letter.messageId,
     date: letter.createdAt,
     // So that no holiday answer comes back (RFC 3834).

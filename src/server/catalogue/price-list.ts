@@ -1,0 +1,66 @@
+import { and, asc, eq, inArray, isNull, or } from 'drizzle-orm';
+import { catalogueItems } from '@/db/schema';
+import type { PriceItem, PriceList } from '@/takeoff/price-list';
+import type { Db } from '../database';
+import { done, type Outcome } from '../outcomes';
+import { refuseUnlessPricing, type Actor } from '../permissions';
+import { today } from '../today';
+import { itemsOn, type ItemRow } from './item-rows';
+import { currencyOf } from './pricing-settings';
+
+const priceItem = ({ item, supplierName, price }: ItemRow): PriceItem | null =>
+  price && {
+    id: item.id,
+    kind: item.kind,
+    name: item.name,
+    supplier: supplierName ?? '',
+    pack: {
+      name: item.packName,
+      holds: item.packHolds,
+      measure: item.packMeasure,
+      whole: item.packWhole,
+    },
+    costMinor: price.costMinor,
+    from: price.from,
+    massKg: item.massKg,
+    looseDensity: item.looseDensity,
+    stone:
+      item.stoneLeast !== null && item.stoneGreatest !== null
+        ? [item.stoneLeast, item.stoneGreatest]
+        : null,
+  };
+
+/**
+ * What the catalogue asked on a day: what it offers, and of what is retired the items named, since a floor may
+ * have been drawn with them. Items that had no price yet are left out.
+ */
+export const priceListOn = async (
+  db: Db,
+  firmId: string,
+  day: string,
+  named: readonly string[] = [],
+): Promise<PriceList> => {
+  const rows = await itemsOn(db, day)
+    .where(
+      and(
+        eq(catalogueItems.firmId, firmId),
+        named.length === 0
+          ? isNull(catalogueItems.retiredAt)
+          : or(isNull(catalogueItems.retiredAt), inArray(catalogueItems.id, [...named])),
+      ),
+    )
+    .orderBy(asc(catalogueItems.id));
+  return {
+    currency: await currencyOf(db, firmId),
+    on: day,
+    items: rows.flatMap((row) => priceItem(row) ?? []),
+  };
+};
+
+/** The firm's price list of a day, for those who see costs. */
+export const openPriceList = async (
+  db: Db,
+  actor: Actor,
+  on: string | undefined,
+): Promise<Outcome<PriceList>> =>
+  refuseUnlessPricing(actor) ?? done(await priceListOn(db, actor.firmId, on ?? today()));
