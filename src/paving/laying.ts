@@ -7,7 +7,8 @@ import { AREA_TOLERANCE_MM2 } from '@/geometry/tolerance';
 import { bondPattern, documentUnit } from './bond';
 import { documentGround, type Ground } from './ground';
 import type { Address, LayoutDocument, Unit } from './layout-document';
-import { chordFrame, rowMarks, type RowMarks } from './row-marks';
+import { chordFrame, rowMarks } from './row-marks';
+import { blockedRuns, insideRuns, runsParted, type Runs } from './row-runs';
 import { addressRow, unitRows, type RowIndex, type UnitRows } from './unit-rows';
 import { unitSetClosed, unitSetReserve, unitSetRoom, type UnitSetRoom } from './unit-set';
 
@@ -127,55 +128,6 @@ function unitCover(
   return votes.length >= 2 ? whole : 0;
 }
 
-/** Runs of whole numbers [from, to], flat, in order and apart. */
-type Runs = number[];
-
-/** Places of the row whose centre lies in the ground. */
-function insideRuns({ crossing }: RowMarks, row: number, runs: Runs): void {
-  runs.length = 0;
-  let depth = 0;
-  let from = 0;
-  for (let n = crossing.start[row]; n < crossing.start[row + 1]; n++) {
-    const before = depth;
-    depth += crossing.rise[n];
-    if (before <= 0 && depth > 0) {
-      from = Math.floor(crossing.at[n]) + 1;
-    } else if (before > 0 && depth <= 0) {
-      const to = Math.ceil(crossing.at[n]) - 1;
-      if (from <= to) runs.push(from, to);
-    }
-  }
-}
-
-function blockedRuns({ blocked }: RowMarks, row: number, runs: Runs): void {
-  runs.length = 0;
-  for (let n = blocked.start[row]; n < blocked.start[row + 1]; n++) {
-    if (runs.length > 0 && blocked.from[n] <= runs[runs.length - 1] + 1) {
-      if (blocked.to[n] > runs[runs.length - 1]) runs[runs.length - 1] = blocked.to[n];
-    } else {
-      runs.push(blocked.from[n], blocked.to[n]);
-    }
-  }
-}
-
-/** Parts of `runs` outside (`free`) and inside (`held`) `others`. */
-function runsParted(runs: Runs, others: Runs, free: Runs, held: Runs): void {
-  free.length = 0;
-  held.length = 0;
-  let m = 0;
-  for (let n = 0; n < runs.length; n += 2) {
-    let from = runs[n];
-    const to = runs[n + 1];
-    while (m < others.length && others[m + 1] < from) m += 2;
-    for (let o = m; o < others.length && others[o] <= to; o += 2) {
-      if (others[o] > from) free.push(from, others[o] - 1);
-      held.push(Math.max(from, others[o]), Math.min(to, others[o + 1]));
-      from = others[o + 1] + 1;
-    }
-    if (from <= to) free.push(from, to);
-  }
-}
-
 /** True when a run holds the place; `at` is where the last search in this row ended. */
 function runsHold(runs: Runs, place: number, at: { n: number }): boolean {
   while (at.n < runs.length && runs[at.n + 1] < place) at.n += 2;
@@ -197,15 +149,8 @@ function liftedPlaces(document: LayoutDocument, rows: UnitRows): Map<number, Set
   return byRow;
 }
 
-/**
- * Lays a valid document's floor. Work grows with the units laid and with the rows that each
- * chord of the boundary touches, never with units times chords: a unit away from the boundary
- * costs only its place in the arrays. `ground` may be handed in when it is worked out already.
- */
-export function layFloor(
-  document: LayoutDocument,
-  ground: Ground = documentGround(document),
-): Laying {
+/** A document's pattern on its ground: the motif's units turned, their centres from the origin, mm, and their rows. */
+export function patternRows(document: LayoutDocument, ground: Ground) {
   const pattern = bondPattern(document);
   const { origin, turn } = document.placement;
   const turned = rotation(turn);
@@ -223,6 +168,20 @@ export function layFloor(
   });
   const centres = motif.map((entry) => pointTurned(entry.at, turned));
   const rows = unitRows(ground, lattice, origin, motif, centres);
+  return { joint: pattern.joint, lattice, motif, centres, rows };
+}
+
+/**
+ * Lays a valid document's floor. Work grows with the units laid and with the rows that each
+ * chord of the boundary touches, never with units times chords: a unit away from the boundary
+ * costs only its place in the arrays. `ground` may be handed in when it is worked out already.
+ */
+export function layFloor(
+  document: LayoutDocument,
+  ground: Ground = documentGround(document),
+): Laying {
+  const { origin } = document.placement;
+  const { joint, lattice, motif, centres, rows } = patternRows(document, ground);
   const frame = chordFrame(ground, rows);
   const lifts = liftedPlaces(document, rows);
   const cell = Math.abs(lattice.a[0] * lattice.b[1] - lattice.a[1] * lattice.b[0]);
@@ -325,7 +284,7 @@ export function layFloor(
     ground,
     lattice,
     origin,
-    joint: pattern.joint,
+    joint,
     motif,
     laid: laidClosed.set,
     leftOut: leftOutClosed.set,

@@ -94,6 +94,7 @@ function orderedRange(first: Float64Array, second: Float64Array, from: number, t
  * What the boundary does to the rows of motif entry k. A unit too near to a chord is one whose
  * centre lies in the chord swept by the unit and by a disc of the clearance: a convex shape, so
  * each chord blocks one run of places in each row, found without looking at the places between.
+ * `touching` false leaves `touch` empty, for whoever only asks which units are whole.
  */
 export function rowMarks(
   ground: Ground,
@@ -101,6 +102,7 @@ export function rowMarks(
   frame: ChordFrame,
   k: number,
   clearance: number,
+  touching = true,
 ): RowMarks {
   const { count, first, start, halfLength, halfWidth } = rows.rows[k];
   const [stepU, stepV] = rows.step;
@@ -148,20 +150,23 @@ export function rowMarks(
       halfWidth[1] * blockY,
       radius,
     );
-    sweepSegment(
-      met,
-      u0,
-      v0,
-      u1,
-      v1,
-      halfLength[0] * touchX,
-      halfLength[1] * touchX,
-      halfWidth[0] * touchY,
-      halfWidth[1] * touchY,
-      0,
-    );
-    const least = Math.min(near.least, met.least);
-    const greatest = Math.max(near.greatest, met.greatest);
+    let { least, greatest } = near;
+    if (touching) {
+      sweepSegment(
+        met,
+        u0,
+        v0,
+        u1,
+        v1,
+        halfLength[0] * touchX,
+        halfLength[1] * touchX,
+        halfWidth[0] * touchY,
+        halfWidth[1] * touchY,
+        0,
+      );
+      least = Math.min(least, met.least);
+      greatest = Math.max(greatest, met.greatest);
+    }
     const from = Math.max(0, Math.ceil((least - row0V) / stepV));
     const to = Math.min(count - 1, Math.floor((greatest - row0V) / stepV));
     for (let row = from; row <= to; row++) {
@@ -184,21 +189,19 @@ export function rowMarks(
           }
         }
       }
-      if (v >= met.least && v <= met.greatest) {
-        if (sweptSection(met, v, cut)) {
-          const low = Math.ceil((cut[0] - u) / pitch);
-          const high = Math.floor((cut[1] - u) / pitch);
-          for (let place = low; place <= high; place++) {
-            touchRow.push(row);
-            touchAt.push(place);
-            touchChord.push(n);
-          }
+      if (touching && v >= met.least && v <= met.greatest && sweptSection(met, v, cut)) {
+        const low = Math.ceil((cut[0] - u) / pitch);
+        const high = Math.floor((cut[1] - u) / pitch);
+        for (let place = low; place <= high; place++) {
+          touchRow.push(row);
+          touchAt.push(place);
+          touchChord.push(n);
         }
-        if (v0 > v !== v1 > v) {
-          crossingRow.push(row);
-          crossingAt.push((u0 + ((v - v0) / (v1 - v0)) * (u1 - u0) - u) / pitch);
-          crossingRise.push(rise);
-        }
+      }
+      if (v0 > v !== v1 > v) {
+        crossingRow.push(row);
+        crossingAt.push((u0 + ((v - v0) / (v1 - v0)) * (u1 - u0) - u) / pitch);
+        crossingRise.push(rise);
       }
     }
   }

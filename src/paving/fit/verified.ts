@@ -1,7 +1,7 @@
 import type { Point } from '@/geometry/point';
 import { LENGTH_TOLERANCE_MM } from '@/geometry/tolerance';
-import { layFloor } from '../laying';
-import { leastGapAt } from '../least-gap';
+import { laidRuns } from '../laid-runs';
+import { leastGapOfRuns } from '../least-gap';
 import type { Placement } from '../layout-document';
 import { groundFromFrame, type FitFrame } from './fit-frame';
 
@@ -60,21 +60,22 @@ export function choiceVerified(
   const onGrid = (value: number) => Math.round(value / ORIGIN_GRID_MM) * ORIGIN_GRID_MM;
   const round = (value: number) => Number(onGrid(value).toFixed(4));
   const expected = found.slack - LENGTH_TOLERANCE_MM;
+  const band = document.clearance + found.slack + LENGTH_TOLERANCE_MM;
   let last = '';
   const origins: Point[] = held ? [exact] : [[round(exact[0]), round(exact[1])], exact];
   for (const origin of origins) {
     const placement: Placement = { origin: [origin[0], origin[1]], turn };
-    const laying = layFloor({ ...document, placement, lifted: [] }, ground);
-    const least = leastGapAt(laying);
-    const play = least ? least.gap - document.clearance : NaN;
+    const laid = laidRuns({ ...document, placement, lifted: [] }, ground);
+    const leastGap = leastGapOfRuns(laid, band);
+    const play = leastGap === null ? NaN : leastGap - document.clearance;
     if (
-      laying.laid.count === found.count &&
-      least &&
+      laid.count === found.count &&
+      leastGap !== null &&
       Math.abs(play - expected) <= LENGTH_TOLERANCE_MM
     ) {
-      return { wholeUnits: found.count, play, leastGap: least.gap, placement };
+      return { wholeUnits: found.count, play, leastGap, placement };
     }
-    last = `${laying.laid.count} units with ${play} mm of play`;
+    last = `${laid.count} units with ${play} mm of play`;
   }
   throw new Error(
     `the fit found ${found.count} units with ${expected} mm of play at [${exact[0]}, ${exact[1]}], turn ${turn}, but the laying finds ${last}`,
