@@ -1,13 +1,17 @@
 import type { Point } from './point';
 
-/** A height over the plane: `a·x + b·y + c`; x and y in mm, the height in mm. */
+/**
+ * A height over the plane: `height` at `at`, growing by `a` a millimetre along x and by `b` along y, mm.
+ * Held at a place near by, so that nothing is lost far from the origin.
+ */
 export interface Plane {
   readonly a: number;
   readonly b: number;
-  readonly c: number;
+  readonly at: Point;
+  readonly height: number;
 }
 
-/** Where `a·x + b·y + c` is nought or more. */
+/** Where the height is nought or more. */
 export type HalfPlane = Plane;
 
 /** A plane over a convex part of the ground: the part that lies in every one of `sides`. */
@@ -19,27 +23,49 @@ export interface PlanePiece {
 /** A height everywhere: pieces that cover the whole plane and meet along their sides. */
 export type PieceSurface = readonly PlanePiece[];
 
-export const planeHeight = ({ a, b, c }: Plane, [x, y]: Point): number => a * x + b * y + c;
+export const planeHeight = ({ a, b, at, height }: Plane, [x, y]: Point): number =>
+  height + a * (x - at[0]) + b * (y - at[1]);
 
-/** The plane with slopes `a` and `b` that has `height` at `at`. */
-export const planeThrough = (a: number, b: number, at: Point, height: number): Plane => ({
-  a,
-  b,
-  c: height - a * at[0] - b * at[1],
-});
+/** The same height everywhere. */
+export const levelPlane = (height: number): Plane => ({ a: 0, b: 0, at: [0, 0], height });
 
 /** One plane less another. */
 export const planeLess = (one: Plane, other: Plane): Plane => ({
   a: one.a - other.a,
   b: one.b - other.b,
-  c: one.c - other.c,
+  at: one.at,
+  height: one.height - planeHeight(other, one.at),
+});
+
+/** The plane upside down; of a half plane its other side. */
+export const planeTurned = ({ a, b, at, height }: Plane): Plane => ({
+  a: -a,
+  b: -b,
+  at,
+  height: -height,
+});
+
+/** The plane higher by `by` mm. */
+export const planeRaised = (plane: Plane, by: number): Plane => ({
+  ...plane,
+  height: plane.height + by,
+});
+
+/** Beyond the line through `from` square to the way to `to`: the side that `to` lies on. */
+export const beyond = (from: Point, to: Point): HalfPlane => ({
+  a: to[0] - from[0],
+  b: to[1] - from[1],
+  at: from,
+  height: 0,
 });
 
 /** Left of the line from `from` on through `to`. */
-export function leftOf(from: Point, to: Point): HalfPlane {
-  const [a, b] = [from[1] - to[1], to[0] - from[0]];
-  return planeThrough(a, b, from, 0);
-}
+export const leftOf = (from: Point, to: Point): HalfPlane => ({
+  a: from[1] - to[1],
+  b: to[0] - from[0],
+  at: from,
+  height: 0,
+});
 
 /** How deep `point` lies inside the piece, in the sides' own measure; negative outside. */
 const depth = ({ sides }: PlanePiece, point: Point): number =>

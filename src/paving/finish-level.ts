@@ -1,5 +1,5 @@
 import {
-  planeThrough,
+  planeRaised,
   surfaceHeight,
   type HalfPlane,
   type PieceSurface,
@@ -19,14 +19,17 @@ interface Rise {
   readonly sides: readonly HalfPlane[];
 }
 
-/** The planes of a fall, all nought at `foot`. */
-function fallRises(fall: Fall): { readonly foot: Point; readonly rises: readonly Rise[] } {
+/** The planes of a fall, all nought at `foot`; one without a place of its own is held at `near`. */
+function fallRises(
+  fall: Fall,
+  near: Point,
+): { readonly foot: Point; readonly rises: readonly Rise[] } {
   switch (fall.kind) {
     case 'none':
-      return { foot: [0, 0], rises: [{ up: [0, 0], sides: [] }] };
+      return { foot: near, rises: [{ up: [0, 0], sides: [] }] };
     case 'oneWay': {
       const [cos, sin] = rotation(fall.direction);
-      return { foot: [0, 0], rises: [{ up: [-cos, -sin], sides: [] }] };
+      return { foot: near, rises: [{ up: [-cos, -sin], sides: [] }] };
     }
     case 'toLine': {
       const { from, to } = fall;
@@ -37,7 +40,7 @@ function fallRises(fall: Fall): { readonly foot: Point; readonly rises: readonly
         foot: from,
         rises: [left, right].map((up) => ({
           up,
-          sides: [planeThrough(up[0], up[1], from, 0)],
+          sides: [{ a: up[0], b: up[1], at: from, height: 0 }],
         })),
       };
     }
@@ -54,9 +57,12 @@ function fallRises(fall: Fall): { readonly foot: Point; readonly rises: readonly
         rises: ways.map((up, n) => {
           // The plane holds where its own way counts for no less than the ways beside it.
           const [before, after] = [ways[(n + 3) % 4], ways[(n + 1) % 4]];
-          const sides = [before, after].map((beside) =>
-            planeThrough(up[0] - beside[0], up[1] - beside[1], fall.at, 0),
-          );
+          const sides = [before, after].map((beside) => ({
+            a: up[0] - beside[0],
+            b: up[1] - beside[1],
+            at: fall.at,
+            height: 0,
+          }));
           return { up, sides };
         }),
       };
@@ -70,20 +76,20 @@ function fallRises(fall: Fall): { readonly foot: Point; readonly rises: readonly
  */
 export function finishSurface(document: Levelled): PieceSurface {
   const { finish, fall } = documentLevels(document);
-  const { foot, rises } = fallRises(fall);
+  const { outline } = groundRing(document.ground.perimeter, 0, null);
+  const { foot, rises } = fallRises(fall, outline[0]);
   const slope = fall.kind === 'none' ? 0 : fall.percent / 100;
   const surface = rises.map(({ up, sides }) => ({
-    plane: planeThrough(slope * up[0], slope * up[1], foot, 0),
+    plane: { a: slope * up[0], b: slope * up[1], at: foot, height: 0 },
     sides,
   }));
-  // A fall never curves down at its rim, so that its highest is at a corner of the outline.
-  const { outline } = groundRing(document.ground.perimeter, 0, null);
+  // Nowhere between two places is a fall higher than at the higher of them: its highest is a corner of the outline.
   const highest = outline.reduce(
     (most, point) => Math.max(most, surfaceHeight(surface, point)),
     -Infinity,
   );
   return surface.map(({ plane, sides }) => ({
-    plane: { ...plane, c: plane.c + finish - highest },
+    plane: planeRaised(plane, finish - highest),
     sides,
   }));
 }

@@ -1,18 +1,14 @@
-import type { LayoutDocument } from '@/paving/layout-document';
+import { convexPart, regionIntegral, type SignedRings } from '@/geometry/convex-part';
+import { levelPlane, planeHeight } from '@/geometry/plane-pieces';
+import type { Point } from '@/geometry/point';
+import { ringHolds } from '@/geometry/ring';
+import { pointSegmentDistance } from '@/geometry/segment-pairs';
+import { documentBuildUp } from '@/paving/build-up';
+import type { Laying } from '@/paving/laying';
+import { cellEarth, earthModel, thickestUnit, type EarthModel } from './earth-cells';
+import { levelWarnings, type LevelWarning } from './level-warnings';
 
-/** What there is to know before the volumes are believed. */
-export interface LevelWarning {
-  readonly kind:
-    | 'noSpots'
-    | 'fewSpots'
-    | 'spotsInLine'
-    | 'groundBeyondSpots'
-    | 'spotsFarApart'
-    | 'spotFarOutside'
-    | 'overdigLeftOut';
-  /** For the person, whole sentences. */
-  readonly text: string;
-}
+export type { LevelWarning } from './level-warnings';
 
 /**
  * What is dug and filled under a floor. Volumes are in m³ **in place**: earth as it lies, base and
@@ -55,4 +51,107 @@ export interface EarthVolumes {
   readonly warnings: readonly LevelWarning[];
 }
 
-export type Levelled = Pick<LayoutDocument, 'ground' | 'levels' | 'buildUp' | 'units' | 'bond'>;
+const MM3_PER_M3 = 1e9;
+const MM2_PER_M2 = 1e6;
+
+/** Cells must cover the dug area to this share of it: less is rounding, more is a fault. */
+const COVER_SHARE = 1e-6;
+/** A place this near to the region's border, mm, is in it. */
+const BORDER_MM = 1e-3;
+
+function regionHolds(region: SignedRings, point: Point): boolean {
+  let inside = false;
+  for (const ring of region) {
+    if (ringHolds(ring, point)) inside = !inside;
+    for (let n = 0, m = ring.length - 1; n < ring.length; m = n++)
+      if (pointSegmentDistance(point, ring[m], ring[n]) < BORDER_MM) return true;
+  }
+  return inside;
+}
+
+/** Greatest depths of cut and fill in the dug region, mm. */
+function deepest({ cells, dug }: EarthModel): { readonly cut: number; readonly fill: number } {
+  let [cut, fill] = [0, 0];
+  for (const { piece, depth } of cells)
+    for (const ring of convexPart(dug, piece))
+      for (const point of ring) {
+        const here = planeHeight(depth, point);
+        // A part may run back along the cell's side outside the region: only what is in it counts.
+        if ((here > cut || -here > fill) && regionHolds(dug, point)) {
+          cut = Math.max(cut, here);
+          fill = Math.max(fill, -here);
+        }
+      }
+  return { cut, fill };
+}
+
+/** What the volumes are worked out from: a floor as laid, of a document that has passed. */
+export type LevelledFloor = Pick<Laying, 'document' | 'ground' | 'motif' | 'laid'>;
+
+/** Bedding that units thinner than the thickest take beyond its thickness, mm³. */
+function beddingUnderThin({ document, motif, laid }: LevelledFloor): number {
+  const thickest = thickestUnit(document);
+  let volume = 0;
+  for (let n = 0; n < laid.count; n++) {
+    const { length, width, thickness } = motif[laid.k[n]].unit;
+    volume += length * width * (thickest - thickness);
+  }
+  return volume;
+}
+
+/**
+ * The volumes of a floor, exact for its surfaces: prisms over the cells in which ground and formation
+ * are planes, each parted along the line where the two meet and clipped to the ground. Throws when the
+ * cells do not cover the dug area.
+ */
+export function earthVolumes(
+  floor: LevelledFloor,
+  model: EarthModel = earthModel(floor.document, floor.ground),
+): EarthVolumes {
+  const { document, ground } = floor;
+  const { bedding, base } = documentBuildUp(document);
+  const dugArea = regionIntegral(model.dug, levelPlane(0)).area;
+  const sum = { cut: 0, fill: 0, cutArea: 0, fillArea: 0, beyond: 0 };
+  for (const cell of model.cells) {
+    const earth = cellEarth(cell, model.dug);
+    sum.cut += earth.cut;
+    sum.fill += earth.fill;
+    sum.cutArea += earth.cutArea;
+    sum.fillArea += earth.fillArea;
+    if (cell.beyond) sum.beyond += earth.cutArea + earth.fillArea;
+  }
+  const covered = sum.cutArea + sum.fillArea;
+  if (Math.abs(covered - dugArea) > COVER_SHARE * dugArea) {
+    throw new Error(
+      `cells of ${covered} mm² do not cover the ${dugArea} mm² dug about ${model.dug[0][0].join(', ')}`,
+    );
+  }
+  const { cut: deepestCut, fill: deepestFill } = deepest(model);
+  const area = ground.area / MM2_PER_M2;
+  const cut = sum.cut / MM3_PER_M3;
+  const fill = sum.fill / MM3_PER_M3;
+  const baseLayer = (base * dugArea) / MM3_PER_M3;
+  const beddingLayer = (bedding * ground.area) / MM3_PER_M3;
+  const underThin = beddingUnderThin(floor) / MM3_PER_M3;
+  const beyondSpots = sum.beyond / MM2_PER_M2;
+  return {
+    area,
+    dugArea: dugArea / MM2_PER_M2,
+    cut,
+    fill,
+    cutArea: sum.cutArea / MM2_PER_M2,
+    fillArea: sum.fillArea / MM2_PER_M2,
+    excavation: cut,
+    spoil: cut,
+    base: baseLayer + fill,
+    baseLayer,
+    bedding: beddingLayer + underThin,
+    beddingLayer,
+    beddingUnderThin: underThin,
+    deepestCut,
+    deepestFill,
+    from: model.existing.shape === 'none' ? 'assumed' : 'spots',
+    beyondSpots,
+    warnings: levelWarnings(document, model, beyondSpots / (dugArea / MM2_PER_M2)),
+  };
+}
