@@ -6,6 +6,7 @@ import type { LayoutDocument } from '@/paving/layout-document';
 import { layFloor } from '@/paving/laying';
 import { parseLayoutDocument, type DocumentProblem } from '@/paving/layout-validation';
 import { floorReport } from '@/paving/report';
+import { setOut } from '@/paving/set-out/set-out';
 
 /**
  * The `layout` command: works out a layout document from a file, or from standard input when the
@@ -79,6 +80,13 @@ const tasks: Readonly<Record<string, Task>> = {
       const refusal = fitRefusal(document, asked);
       if (refusal) throw new Refusal(refusal.message);
       return fit(document, asked);
+    },
+  },
+  'set-out': {
+    usage: 'set-out FILE|-',
+    run: (document, options) => {
+      if (options.length > 0) throw new Refusal(`set-out takes no option "${options[0]}"`);
+      return setOut(layFloor(document));
     },
   },
 };

@@ -78,6 +78,8 @@ export interface ControlPoint extends TapeCross {
   readonly square: number;
   /** `datum`: it is one of the two. Else how to set it out: by its tapes, by a second pair, or by its offsets. */
   readonly by: 'datum' | 'tapes' | 'second-pair' | 'offsets';
+  /** How far from its true place it can come to lie, set out as `by` says and every tape read to ±2 mm; 0 for a datum. */
+  readonly doubt: number;
   /** Where `by` is `second-pair`: from these corners, which cross cleanly. */
   readonly secondPair: (TapeCross & { readonly datums: readonly [Datum, Datum] }) | null;
   /** Of a perimeter's corner: the angle inside the ground, where both its edges are straight. */
@@ -150,12 +152,28 @@ export interface CourseRun {
   readonly after: 'start' | 'outside' | 'lifted' | 'left-out';
 }
 
+/**
+ * What a check measures: a ground edge; a diagonal; a right angle by 3-4-5; the gap at an edge; strings apart; units along a
+ * string; a joint; straightness of a course; flatness under a straightedge; a step between two units; a layer under the units.
+ */
+export type CheckKind =
+  | 'edge'
+  | 'diagonal'
+  | 'square'
+  | 'gap'
+  | 'rows'
+  | 'run'
+  | 'joint'
+  | 'line'
+  | 'flatness'
+  | 'step'
+  | 'layer';
+
 /** Something to measure once it is laid or pegged. */
 export interface Check {
   /** The same for the same floor and datums: `edge-AB`, `square-A`, `rows-1-10`. */
   readonly id: string;
-  readonly kind:
-    'edge' | 'diagonal' | 'square' | 'gap' | 'rows' | 'run' | 'joint' | 'flatness' | 'layer';
+  readonly kind: CheckKind;
   /** An instruction: "Measure edge AB". */
   readonly what: string;
   /** Control points or courses that it is measured between. */

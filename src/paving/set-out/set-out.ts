@@ -1,0 +1,60 @@
+import { unitCorners, type Laying } from '../laying';
+import { floorReport, type Report } from '../report';
+import { setOutAdvice } from './advice';
+import { setOutChecks } from './checks';
+import { controlPoints } from './control-points';
+import { layingCourses } from './courses';
+import { bestDatums, datumAt, datumPair } from './datums';
+import { groundDiagonals } from './diagonals';
+import { cornerChosen, firstUnit, nearestCorners, type UnitCorner } from './first-unit';
+import { setOutMarks, unitMarks } from './marks';
+import type { Datum, SetOut } from './set-out-types';
+
+export type * from './set-out-types';
+
+/**
+ * A laid floor set out from the two corners that its document names, or else from the best two. The same
+ * floor and corners give the same names, numbers and order. `report` may be handed in when it is known.
+ */
+export function setOut(laying: Laying, report: Report = floorReport(laying)): SetOut {
+  const { ground, document } = laying;
+  const index = layingCourses(laying);
+  const { courses } = index;
+  const fixed = setOutMarks(laying, courses, []);
+  const near = new Map<number, UnitCorner[]>();
+  const unitOf = ({ vertex, at }: Datum, other: Datum) => {
+    const corners = near.get(vertex) ?? nearestCorners(laying, at);
+    near.set(vertex, corners);
+    const corner = cornerChosen(corners, at, other.at);
+    if (!corner) return [];
+    const { laid, motif } = laying;
+    const { unit } = corner;
+    return unitMarks(unitCorners(motif[laid.k[unit]], laid.x[unit], laid.y[unit]));
+  };
+  const best = bestDatums(ground, fixed, unitOf);
+  const chosen = document.setOut?.datums;
+  const datums = chosen
+    ? ([datumAt(ground, chosen[0]), datumAt(ground, chosen[1])] as const)
+    : best.datums;
+  const first = firstUnit(laying, index, datums[0].at, datums[1].at);
+  const marks = setOutMarks(laying, courses, first?.corners ?? []);
+  const pair = datumPair(ground, marks, datums);
+  const points = controlPoints(ground, marks, pair);
+  const diagonals = groundDiagonals(ground, datums);
+  const [from, to] = datums.map(({ at }) => at);
+  return {
+    datums,
+    baseline: {
+      length: Math.hypot(to[0] - from[0], to[1] - from[1]),
+      bearingDeg: (Math.atan2(to[1] - from[1], to[0] - from[0]) * 180) / Math.PI,
+      ...pair.sight,
+      chosen: chosen !== undefined,
+    },
+    points,
+    diagonals,
+    firstUnit: first,
+    courses,
+    checks: setOutChecks({ laying, report, courses, diagonals }),
+    advice: setOutAdvice(pair, best, points, courses, document.display),
+  };
+}
