@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { buildUpSchema } from './build-up';
 import { levelsSchema } from './levels';
+import { materialsSchema, orderSchema } from './materials';
 import { setOutChoiceSchema } from './set-out/datum-choice';
 
 /**
@@ -155,6 +156,10 @@ export const layoutDocumentSchema = z.object({
   aggregate: aggregateSchema.optional(),
   /** The layers under the units; without it nothing is known of them yet. */
   buildUp: buildUpSchema.optional(),
+  /** What fills, beds and carries the floor, where it is not the usual. */
+  materials: materialsSchema.optional(),
+  /** Spares, and how things are ordered. */
+  order: orderSchema.optional(),
   /** Finish, falls and spot levels; without it the floor is flat and flush with the edge. */
   levels: levelsSchema.optional(),
   /** The two corners to set out from; without it the program picks them. */
