@@ -37,14 +37,29 @@ export const quoteLineSchema = z.object({
 });
 export type QuoteDraftLine = z.output<typeof quoteLineSchema>;
 
+/** Of a margin of the price, basis points: the whole price would leave no cost. */
+const GREATEST_OF_PRICE = 9000;
+/** Of one line's cost, minor units: with margin and tax, 300 such still add up exactly. */
+const GREATEST_LINE_MINOR = 1_000_000_000_000;
+
 const draftFields = z.object({
   lines: z
     .array(quoteLineSchema)
     .max(300, 'Keep it to 300 lines')
     .refine((lines) => new Set(lines.map(({ id }) => id)).size === lines.length, {
       error: 'has two lines of one id',
+    })
+    .refine(
+      (lines) =>
+        lines.every(({ amount, costMinor }) => amount * (costMinor ?? 0) <= GREATEST_LINE_MINOR),
+      { error: 'has a line of more money than can be reckoned with here' },
+    ),
+  margin: z
+    .object({ of: z.enum(['cost', 'price']), share: marginBasisPoints })
+    .refine(({ of, share }) => of === 'cost' || share <= GREATEST_OF_PRICE, {
+      error: 'A margin of the price is at most 90 %',
+      path: ['share'],
     }),
-  margin: z.object({ of: z.enum(['cost', 'price']), share: marginBasisPoints }),
   tax: z.object({
     name: z.string().trim().min(1, 'Say what the tax is called').max(30),
     share: taxBasisPoints,
@@ -55,6 +70,12 @@ const draftFields = z.object({
     .int('Give whole days')
     .min(1, 'A quote holds for a day at least')
     .max(365, 'A quote holds for a year at most'),
+  /** The total is rounded to so many of the currency's smallest coin. */
+  roundTo: z
+    .number({ error: 'Choose what the total is rounded to' })
+    .int('Choose what the total is rounded to')
+    .min(1, 'Choose what the total is rounded to')
+    .max(10_000, 'That is too much to round by'),
   /** To the client, over the lines. */
   note: z.string().trim().max(2000, 'Keep the note to 2,000 characters'),
   terms: z.string().trim().max(4000, 'Keep the terms to 4,000 characters'),
@@ -104,7 +125,7 @@ export interface SentQuote {
   readonly quote: Quote;
   readonly note: string;
   readonly terms: string;
-  readonly taxName: string;
+  readonly tax: QuoteDraft['tax'];
   readonly paper: 'A4' | 'Letter';
 }
 
@@ -135,7 +156,6 @@ export interface QuoteTotals {
   readonly replaced: boolean;
   readonly currency: string;
   readonly taxName: string;
-  readonly taxBasisPoints: number;
   readonly netMinor: number;
   readonly taxMinor: number;
   readonly totalMinor: number;

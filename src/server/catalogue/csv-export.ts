@@ -28,12 +28,13 @@ export const catalogueCsv = (rows: readonly CatalogueRow[], currency: string): s
   ) + '\r\n';
 
 /** The whole catalogue with today's prices, retired items too. */
-export const exportCatalogue = async (db: Db, actor: Actor): Promise<Outcome<string>> => {
+export const exportCatalogue = async (db: Db, actor: Actor): Promise<Outcome<Uint8Array>> => {
   const refusal = refuseUnlessPricing(actor);
   if (refusal) return refusal;
   const rows = await itemsOn(db, today())
     .where(eq(catalogueItems.firmId, actor.firmId))
     .orderBy(asc(catalogueItems.kind), asc(catalogueItems.name), asc(catalogueItems.id));
+  const csv = catalogueCsv(rows.map(rowOfItem), await currencyOf(db, actor.firmId));
   // Spreadsheets read a file as UTF-8 when it begins with this mark.
-  return done(`\ufeff${catalogueCsv(rows.map(rowOfItem), await currencyOf(db, actor.firmId))}`);
+  return done(new TextEncoder().encode(`\ufeff${csv}`));
 };

@@ -1,4 +1,4 @@
-import { OPS } from 'pdfjs-dist/legacy/build/pdf.mjs';
+import { getDocument, OPS } from 'pdfjs-dist/legacy/build/pdf.mjs';
 
 /** A point of PostScript and PDF: 1/72 inch (ISO 32000-1, 8.3.2.3). */
 export const MM_PER_POINT = 25.4 / 72;
@@ -80,4 +80,15 @@ function flattened(data: Float32Array, m: Matrix) {
     at += [3, 3, 7, 5, 1][op];
   }
   return lines;
+}
+
+/** The texts of each page of a PDF, a page a string. */
+export async function pdfTexts(file: Uint8Array): Promise<readonly string[]> {
+  const pdf = await getDocument({ data: file.slice(), verbosity: 0 }).promise;
+  const pages: string[] = [];
+  for (let n = 1; n <= pdf.numPages; n += 1) {
+    const { items } = await (await pdf.getPage(n)).getTextContent();
+    pages.push(items.map((item) => ('str' in item ? item.str : '')).join('\n'));
+  }
+  return pages;
 }

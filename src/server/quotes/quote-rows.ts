@@ -1,0 +1,18 @@
+import { and, eq } from 'drizzle-orm';
+import { projects, quotes } from '@/db/schema';
+import type { Db } from '../database';
+import type { SeenVersion } from '../seen-version';
+
+export const ofQuote = (firmId: string, id: string) =>
+  and(eq(quotes.firmId, firmId), eq(quotes.id, id));
+
+export const quoteRow = async (db: Db, firmId: string, id: string) =>
+  (await db.select().from(quotes).where(ofQuote(firmId, id))).at(0);
+
+export const clientNameOf = async (db: Db, version: SeenVersion): Promise<string> =>
+  (
+    await db
+      .select({ clientName: projects.clientName })
+      .from(projects)
+      .where(and(eq(projects.firmId, version.firmId), eq(projects.id, version.projectId)))
+  )[0].clientName;
