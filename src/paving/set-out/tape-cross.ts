@@ -18,7 +18,7 @@ export function runningOffsets(first: Point, second: Point, at: Point): Point {
   const length = Math.hypot(dx, dy);
   const px = at[0] - first[0];
   const py = at[1] - first[1];
-  return [(px * dx + py * dy) / length, (py * dx - px * dy) / length];
+  return [(px * dx + py * dy) / length + 0, (py * dx - px * dy) / length + 0];
 }
 
 /** The angle at which two tapes to `at` meet, degrees, 0 to 180. */

@@ -6,6 +6,7 @@ import { fileURLToPath } from 'node:url';
 import { afterAll, expect, test } from 'vitest';
 import { layFloor } from '@/paving/laying';
 import { floorReport } from '@/paving/report';
+import { setOut } from '@/paving/set-out/set-out';
 import { documentOf, parsed } from '../../oracle/documents';
 
 const root = fileURLToPath(new URL('../../../', import.meta.url));
@@ -60,4 +61,10 @@ test.each([
   const { status, stdout, stderr } = layout(args, input);
   expect({ status, stdout }).toEqual({ status: 2, stdout: '' });
   expect(stderr).toContain(words);
+});
+
+test('set-out prints datums, points, courses and checks as JSON', () => {
+  const { status, stdout, stderr } = layout(['set-out', '-'], good);
+  expect({ status, stderr }).toEqual({ status: 0, stderr: '' });
+  expect(JSON.parse(stdout)).toEqual(setOut(layFloor(parsed(documentOf({})))));
 });
