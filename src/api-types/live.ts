@@ -27,6 +27,8 @@ export interface LiveVersion {
   readonly unread: number;
   /** Changes when a comment is made here or a thread resolved: then ask for the comments again. */
   readonly commentsStamp: string;
+  /** How many entries the crew has sent from site: when it grows, ask for them again. */
+  readonly siteEntries: number;
 }
 
 export interface LiveLayout {

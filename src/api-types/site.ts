@@ -2,6 +2,7 @@ import { z } from 'zod';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { siteEntryContentSchema, type SiteEntryContent } from '@/paving/site/site-entry';
 import type { Account, PersonName } from './people';
+import { ENTRIES_AT_ONCE } from './site-limits';
 import type { VersionState } from './versions';
 
 /** Made by the phone: random, so that no two ever meet, and the same however often the entry is sent. */
@@ -14,9 +15,6 @@ const entryFields = z.object({
   /** By the phone's clock. */
   madeAt: z.iso.datetime({ error: 'must be a time in UTC such as 2026-05-04T07:30:00Z' }),
 });
-
-/** Entries sent at a time. */
-export const ENTRIES_AT_ONCE = 50;
 
 /**
  * POST /api/versions/{id}/site-entries: entries made on one phone, in their order. 200 → `EntriesKept`. Each is kept
@@ -40,9 +38,6 @@ export interface EntriesKept {
   readonly kept: readonly string[];
   readonly refused: readonly { readonly id: string; readonly reason: string }[];
 }
-
-/** No photo may be larger as it is sent, bytes. */
-export const PHOTO_LIMIT = 12 * 1024 * 1024;
 
 /**
  * POST /api/versions/{id}/site-photos?id=…&device=…&place=…&by=…&madeAt=…&caption=… with the image as the body (JPEG,
@@ -122,10 +117,10 @@ export interface SitePackSummary {
 export interface SitePacks {
   readonly account: Account;
   readonly keep: 'all' | 'opened';
+  /** AES-256 key of this person, base64: what waits to be sent is locked with it while they are signed out. */
+  readonly key: string;
   readonly packs: readonly SitePackSummary[];
 }
-
-export const PACKS_LISTED = 60;
 
 /** GET /api/versions/{id}/site-pack: all that a phone needs to build from an issued version. */
 export interface SitePack extends SitePackSummary {

@@ -141,37 +141,57 @@ export const saveDraft = async (
   });
 };
 
-/** The draft takes a version's document; what it held is set aside. */
-export const draftFromVersion = async (
+/** A floor that a draft can take: of which version it comes, or is made from. */
+interface Taken {
+  readonly document: LayoutDocument;
+  readonly versionId: string;
+}
+
+/** The draft, if it is still at `baseRevision`, takes the document that `find` gives; what it held is set aside. */
+export const draftTaking = async (
   db: Db,
   actor: Actor,
   layoutId: string,
-  input: z.output<typeof draftFromVersionSchema>,
+  baseRevision: number,
+  find: (tx: Db) => Promise<Outcome<Taken>>,
 ): Promise<Outcome<DraftState>> => {
   const layout = await draftingLayout(db, actor, layoutId);
   if (!layout.ok) return layout;
   const started = await db.transaction(async (tx): Promise<Outcome<DraftSaved>> => {
     const draft = await lockDraft(tx, actor, layoutId);
-    const [version] = await tx
-      .select({ id: versions.id, document: versions.document })
-      .from(versions)
-      .where(
-        and(versionSeen(actor), eq(versions.layoutId, layoutId), eq(versions.id, input.versionId)),
-      );
-    if (!version) return notFound('version');
-    if (draft.revision !== input.baseRevision) {
+    const taken = await find(tx);
+    if (!taken.ok) return taken;
+    const { document, versionId } = taken.value;
+    if (draft.revision !== baseRevision) {
       return changedMeanwhile('The draft was saved again since you opened it. Look at it first.');
     }
-    if (canonicalJson(draft.document) !== canonicalJson(version.document)) {
+    if (canonicalJson(draft.document) !== canonicalJson(document)) {
       await setAside(tx, actor, layoutId, draft.revision, draft.document);
     }
     return done(
-      await storeNext(tx, actor, draft, version.document, {
+      await storeNext(tx, actor, draft, document, {
         tabId: null,
         tabSave: null,
-        basedOnVersion: version.id,
+        basedOnVersion: versionId,
       }),
     );
   });
   return started.ok ? openDraft(db, actor, layoutId) : started;
 };
+
+/** The draft takes a version's document; what it held is set aside. */
+export const draftFromVersion = (
+  db: Db,
+  actor: Actor,
+  layoutId: string,
+  input: z.output<typeof draftFromVersionSchema>,
+): Promise<Outcome<DraftState>> =>
+  draftTaking(db, actor, layoutId, input.baseRevision, async (tx) => {
+    const [version] = await tx
+      .select({ versionId: versions.id, document: versions.document })
+      .from(versions)
+      .where(
+        and(versionSeen(actor), eq(versions.layoutId, layoutId), eq(versions.id, input.versionId)),
+      );
+    return version ? done(version) : notFound('version');
+  });

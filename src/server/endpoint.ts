@@ -4,7 +4,7 @@ import { database, type Db } from './database';
 import type { Outcome } from './outcomes';
 import type { Actor } from './permissions';
 import { problemResponse, refusalResponse } from './problem-response';
-import { parsedWith, readBody } from './request-body';
+import { boundedBytes, parsedWith, readBody } from './request-body';
 
 /** What an endpoint hands to a service. */
 export interface Call {
@@ -97,6 +97,48 @@ export const writing =
     if (!call) return signIn();
     const body = await readBody(context.request, schema);
     return body.ok ? answer(await run(call, body.value), status) : body.response;
+  };
+
+/** An endpoint that takes a file as its body, of at most `limit` bytes, and says in its query what it is. */
+export const receiving =
+  <S extends z.ZodType>(
+    schema: S,
+    limit: { readonly bytes: number; readonly words: string },
+    run: (call: Call, query: z.output<S>, bytes: Uint8Array) => Promise<Outcome<unknown>>,
+    status = 201,
+  ): APIRoute =>
+  async (context) => {
+    const call = await callOf(context);
+    if (!call) return signIn();
+    const query = parsedWith(schema, Object.fromEntries(context.url.searchParams));
+    if (!query.ok) return query.response;
+    const bytes = await boundedBytes(context.request, limit.bytes);
+    if (!bytes) return problemResponse('too-large', limit.words);
+    return answer(await run(call, query.value, bytes), status);
+  };
+
+/** A GET endpoint with a query that answers with a file. Browsers keep no copy: the next to use one must not find it. */
+export const fetching =
+  <S extends z.ZodType>(
+    schema: S,
+    type: string,
+    run: (call: Call, query: z.output<S>) => Promise<Outcome<Uint8Array>>,
+  ): APIRoute =>
+  async (context) => {
+    const call = await callOf(context);
+    if (!call) return signIn();
+    const query = parsedWith(schema, Object.fromEntries(context.url.searchParams));
+    if (!query.ok) return query.response;
+    const outcome = await run(call, query.value);
+    if (!outcome.ok) return refusalResponse(outcome);
+    return new Response(new Uint8Array(outcome.value), {
+      headers: {
+        'content-type': type,
+        'content-length': String(outcome.value.byteLength),
+        'content-disposition': 'inline',
+        'cache-control': 'private, no-store',
+      },
+    });
   };
 
 /** For `ALL`: every method that the endpoint does not have. */

@@ -1,11 +1,21 @@
 import { createHash } from 'node:crypto';
 import { and, asc, count, desc, eq, inArray, sql } from 'drizzle-orm';
 import type { LiveLayout, LiveState, LiveVersion } from '@/api-types/live';
-import { commentReads, comments, drafts, layouts, people, projects, versions } from '@/db/schema';
+import {
+  commentReads,
+  comments,
+  drafts,
+  layouts,
+  people,
+  projects,
+  siteEntries,
+  versions,
+} from '@/db/schema';
 import type { Db } from './database';
 import { done, notFound, type Outcome } from './outcomes';
 import { mayDraft, type Actor } from './permissions';
 import { presentAt } from './presence';
+import { siteKindsSeen } from './site/site-version';
 import { byCreator, versionState } from './version-rows';
 import { layoutSeen, projectSeen, versionSeen } from './visibility';
 
@@ -86,6 +96,10 @@ export const liveState = async (
             layoutId: versions.layoutId,
             number: versions.number,
             state: versionState,
+            siteEntries: sql<number>`(select count(*) from ${siteEntries}
+              where ${siteEntries.firmId} = ${versions.firmId}
+              and ${siteEntries.versionId} = ${versions.id}
+              and ${inArray(siteEntries.kind, siteKindsSeen(actor))})`.mapWith(Number),
           })
           .from(versions)
           .innerJoin(people, byCreator)
@@ -100,7 +114,7 @@ export const liveState = async (
     draft: drafting ? { revision, savedAt: updatedAt.toISOString(), savedBy } : null,
     versions: rows
       .filter(({ layoutId }) => layoutId === id)
-      .map(({ id, number, state }): LiveVersion => {
+      .map(({ id, number, state, siteEntries }): LiveVersion => {
         const said = remarks.get(id);
         return {
           id,
@@ -109,6 +123,7 @@ export const liveState = async (
           comments: said?.comments ?? 0,
           unread: said?.unread ?? 0,
           commentsStamp: said?.stamp ?? '',
+          siteEntries,
         };
       }),
     present: present

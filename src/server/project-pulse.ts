@@ -8,6 +8,7 @@ import {
   memberships,
   projectPeople,
   projects,
+  siteEntries,
   versionEvents,
   versions,
 } from '@/db/schema';
@@ -35,6 +36,10 @@ export const projectPulse = async (db: Db, firmId: string, projectId: string): P
         (select concat_ws(',', count(*), sum(extract(epoch from r.read_at)))
           from ${comments} c join ${commentReads} r on r.firm_id = c.firm_id and r.thread_id = c.id
           where c.firm_id = ${firmId} and c.project_id = ${projectId}),
+        (select count(*) from ${layouts} l
+          join ${versions} v on v.firm_id = l.firm_id and v.layout_id = l.id
+          join ${siteEntries} s on s.firm_id = v.firm_id and s.version_id = v.id
+          where l.firm_id = ${firmId} and l.project_id = ${projectId}),
         (select string_agg(concat_ws(',', q.layout_id, q.person_id,
             coalesce(q.edited_at > now() - make_interval(secs => ${EDITING_FOR_S}), false)),
             ';' order by q.layout_id, q.person_id)

@@ -12,9 +12,12 @@ const refuse = (response: Response): Read<never> => ({ ok: false, response });
 
 const tooLarge = () => refuse(problemResponse('too-large', 'What was sent is over 1 MB.'));
 
-/** The body's bytes, given up as soon as they pass the limit, whatever the header promised. */
-const boundedBytes = async (request: Request): Promise<Uint8Array | null> => {
-  if (Number(request.headers.get('content-length') ?? 0) > BODY_LIMIT) return null;
+/** The body's bytes, given up as soon as they pass the limit, whatever the header promised; null when they do. */
+export const boundedBytes = async (
+  request: Request,
+  limit = BODY_LIMIT,
+): Promise<Uint8Array | null> => {
+  if (Number(request.headers.get('content-length') ?? 0) > limit) return null;
   if (!request.body) return new Uint8Array();
   const reader = request.body.getReader();
   const chunks: Uint8Array[] = [];
@@ -23,7 +26,7 @@ const boundedBytes = async (request: Request): Promise<Uint8Array | null> => {
     const { done, value } = await reader.read();
     if (done) break;
     size += value.byteLength;
-    if (size > BODY_LIMIT) {
+    if (size > limit) {
       await reader.cancel().catch(() => {});
       return null;
     }

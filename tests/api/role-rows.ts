@@ -49,7 +49,7 @@ export interface Row {
   readonly row: string;
   readonly endpoint: string;
   readonly id?: (world: World) => string | Promise<string>;
-  readonly query?: (world: World) => string;
+  readonly query?: (world: World, asker: Asker) => string | Promise<string>;
   readonly body?: (world: World, asker: Asker, id: string) => unknown;
   /** Who asks in the asker's stead, where asking changes who one is. */
   readonly visitor?: (world: World, asker: Asker) => Visitor | Promise<Visitor>;

@@ -13,6 +13,8 @@ import {
 } from './firm';
 import { askers, statuses, type Asker, type Row, type World } from './role-rows';
 import { peopleRows } from './role-rows-people';
+import { pricingRows } from './role-rows-pricing';
+import { siteRows } from './role-rows-site';
 import { db, endpoints, useEmptyDatabase, Visitor } from './site';
 
 useEmptyDatabase();
@@ -109,6 +111,8 @@ const drafting = (success: number) => statuses([success, success, 403, 403, 404,
 
 const rows: readonly Row[] = [
   ...peopleRows,
+  ...pricingRows,
+  ...siteRows,
   {
     row: 'open to all',
     endpoint: 'GET /api/health',
@@ -500,7 +504,7 @@ describe.each(rows)('$endpoint ($row)', (row) => {
   test.each(askers)('asked by %s', async (asker) => {
     const [method, address] = endpoint.split(' ');
     const own = (await id?.(world)) ?? '';
-    const url = `${address.replace('[id]', own)}${query?.(world) ?? ''}`;
+    const url = `${address.replace('[id]', own)}${(await query?.(world, asker)) ?? ''}`;
     const sent = await body?.(world, asker, own);
     const visitor = ENTERING.test(address)
       ? new Visitor()

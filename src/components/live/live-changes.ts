@@ -8,6 +8,8 @@ export interface LiveChanges {
   readonly versions: readonly string[];
   /** Versions whose comments are others, or are read. */
   readonly comments: readonly string[];
+  /** Versions on which the crew has sent more from site. */
+  readonly site: readonly string[];
 }
 
 const versionsOf = (state: LiveState | null) =>
@@ -37,5 +39,6 @@ export function liveChanges(before: LiveState, now: LiveState): LiveChanges {
     comments: differing(old, fresh, (version) =>
       version ? `${version.commentsStamp} ${version.comments} ${version.unread}` : undefined,
     ),
+    site: differing(old, fresh, (version) => version?.siteEntries),
   };
 }

@@ -6,7 +6,7 @@ import { liveConnected } from './live-connection';
 
 /**
  * Keeps an island's queries fresh: those of what changed are asked again. Keys: `['version', id]`, `['agreement', id]`,
- * `['threads', id]`, `['versions', layoutId]`, `['project', id]`, `['timeline', …]`. Gives how the project stands.
+ * `['threads', id]`, `['on-site', id]`, `['versions', layoutId]`, `['project', id]`, `['timeline', …]`. Gives how the project stands.
  */
 export function useLiveRefresh(projectId: string): { state: LiveState | null; gone: boolean } {
   const queries = useQueryClient();
@@ -22,7 +22,7 @@ export function useLiveRefresh(projectId: string): { state: LiveState | null; go
           last.current = now;
           setState(now);
           if (!before || before.stamp === now.stamp) return;
-          const { layouts, versions, comments } = liveChanges(before, now);
+          const { layouts, versions, comments, site } = liveChanges(before, now);
           const refresh = (...queryKey: string[]) => void queries.invalidateQueries({ queryKey });
           for (const id of layouts) refresh('versions', id);
           for (const id of versions) {
@@ -30,6 +30,7 @@ export function useLiveRefresh(projectId: string): { state: LiveState | null; go
             refresh('agreement', id);
           }
           for (const id of comments) refresh('threads', id);
+          for (const id of site) refresh('on-site', id);
           if (layouts.length + versions.length > 0) {
             refresh('project', projectId);
             if (versions.length > 0) refresh('versions');

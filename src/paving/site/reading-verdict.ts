@@ -1,5 +1,5 @@
 import { formatLength, type Display } from '../length';
-import type { Check } from '../set-out/set-out-types';
+import type { Check, CheckKind } from '../set-out/set-out-types';
 
 /** Readings are compared with limits to this, mm: a limit that prints as 3.2 mm is met by a tape that reads 3.2 mm. */
 export const READING_TOLERANCE_MM = 0.05;
@@ -25,7 +25,7 @@ export const readingVerdict = (
 };
 
 /** What to do about a reading that will not do, by what was measured and which way it is off. */
-const REMEDIES: Readonly<Record<Check['kind'], (long: boolean) => string>> = {
+const REMEDIES: Readonly<Record<CheckKind, (long: boolean) => string>> = {
   edge: (long) =>
     `Tape it again, pulled tight and level. If it stays ${long ? 'long' : 'short'}, the edge is not as drawn: do not lay yet, and send the reading to the designer, who can fit the floor anew.`,
   diagonal: (long) =>
@@ -50,6 +50,10 @@ const REMEDIES: Readonly<Record<Check['kind'], (long: boolean) => string>> = {
       : 'The joint is too tight. Ease the units apart to the spacer before the next course.',
   flatness: () =>
     'Lift the units under the straightedge and bed them again before the joints are filled.',
+  step: () =>
+    'One unit stands proud of the next. Lift it, take off or add bedding, and bed both to one height.',
+  line: () =>
+    'The bond line wanders. Pull the string anew along this course, move the units back to it, and lay on from it.',
   layer: (long) =>
     long
       ? 'Too thick here. Take some off and compact again, so that the floor ends at its height.'

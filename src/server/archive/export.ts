@@ -1,8 +1,11 @@
 import { and, asc, eq, gt, sql, type SQL } from 'drizzle-orm';
 import type { PgColumn } from 'drizzle-orm/pg-core';
-import { Zip, ZipDeflate } from 'fflate';
+import { Zip, ZipDeflate, ZipPassThrough } from 'fflate';
 import { firms, people } from '@/db/schema';
 import type { Db } from '../database';
+import type { FileStore } from '../files/file-store';
+import { theFiles } from '../files/the-files';
+import { photoFile, photoHashes } from '../site/photo-files';
 import {
   ARCHIVED_TABLES,
   archivedColumns,
@@ -13,6 +16,9 @@ import {
 } from './tables';
 
 export const ARCHIVE_SCHEMA = 'evenlay/firm@1';
+
+/** Where photos lie in an archive, each named by the SHA-256 of its bytes. */
+export const PHOTO_FOLDER = 'photo-files';
 
 /** Documents read at a time: what is held in memory while an archive is written. */
 const ROWS_AT_ONCE = 200;
@@ -73,39 +79,52 @@ async function* rowsOf(tx: Db, archived: ArchivedTable, firmId: string): AsyncGe
 }
 
 /**
- * Writes everything that a firm has as one ZIP archive of JSON files, but for secrets, as it stood at one moment. `write`
- * takes the archive's bytes in order. Whatever reads it again is `importFirm`.
+ * Writes everything that a firm has as one ZIP archive: its rows as JSON files, but for secrets, as they stood at one moment,
+ * and its photos as they are kept. A photo's file never changes, so files are read once the rows are; one that is lost is
+ * named in `archive.json`. `write` takes the archive's bytes in order. Whatever reads it again is `importFirm`.
  */
-export const exportFirm = (
+export const exportFirm = async (
   db: Db,
   firmId: string,
   write: (bytes: Uint8Array) => void,
-): Promise<void> =>
-  db.transaction(
+  files?: FileStore,
+): Promise<void> => {
+  const zip = new Zip((error, bytes) => {
+    if (error) throw error;
+    write(bytes);
+  });
+  const encoder = new TextEncoder();
+  const add = (bytes: Uint8Array, file: ZipDeflate | ZipPassThrough) => {
+    file.mtime = FILE_DATE;
+    zip.add(file);
+    file.push(bytes, true);
+  };
+  const addJson = (name: string, value: unknown) =>
+    add(encoder.encode(`${JSON.stringify(value, null, 2)}\n`), new ZipDeflate(name, { level: 6 }));
+  const counts: Record<string, number> = {};
+  const photos = await db.transaction(
     async (tx) => {
-      const zip = new Zip((error, bytes) => {
-        if (error) throw error;
-        write(bytes);
-      });
-      const encoder = new TextEncoder();
-      const add = (name: string, value: unknown) => {
-        const file = new ZipDeflate(name, { level: 6 });
-        file.mtime = FILE_DATE;
-        zip.add(file);
-        file.push(encoder.encode(`${JSON.stringify(value, null, 2)}\n`), true);
-      };
-      const counts: Record<string, number> = {};
       for (const archived of ARCHIVED_TABLES) {
         const { name, fileBy } = archived;
         counts[name] = 0;
         for await (const rows of rowsOf(tx, archived, firmId)) {
           counts[name] += rows.length;
-          if (fileBy === undefined) add(`${name}.json`, rows);
-          else for (const row of rows) add(`${name}/${String(row[fileBy])}.json`, row);
+          if (fileBy === undefined) addJson(`${name}.json`, rows);
+          else for (const row of rows) addJson(`${name}/${String(row[fileBy])}.json`, row);
         }
       }
-      add('archive.json', { schema: ARCHIVE_SCHEMA, firmId, counts });
-      zip.end();
+      return photoHashes(tx, firmId);
     },
     { isolationLevel: 'repeatable read', accessMode: 'read only' },
   );
+  const lost: string[] = [];
+  for (const hash of photos) {
+    const bytes = await (files ?? (await theFiles())).get(photoFile(firmId, hash));
+    const name = `${PHOTO_FOLDER}/${hash}.jpg`;
+    // Photos are packed already.
+    if (bytes) add(bytes, new ZipPassThrough(name));
+    else lost.push(hash);
+  }
+  addJson('archive.json', { schema: ARCHIVE_SCHEMA, firmId, counts, lost });
+  zip.end();
+};

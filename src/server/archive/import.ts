@@ -5,10 +5,13 @@ import { unzipSync } from 'fflate';
 import { firms } from '@/db/schema';
 import { layoutDocumentSchema } from '@/paving/layout-document';
 import type { Db } from '../database';
+import type { FileStore } from '../files/file-store';
+import { theFiles } from '../files/the-files';
 import { fingerprintOf } from '../fingerprint';
 import { invalid, done, type Outcome } from '../outcomes';
 import { passwordHash } from '../passwords';
-import { ARCHIVE_SCHEMA } from './export';
+import { PHOTO_TYPE, photoFile } from '../site/photo-files';
+import { ARCHIVE_SCHEMA, PHOTO_FOLDER } from './export';
 import { ARCHIVED_TABLES, archivedColumns, isMoment, type ArchivedTable } from './tables';
 
 type Row = Readonly<Record<string, unknown>>;
@@ -85,6 +88,19 @@ const putIn = async (tx: Db, archived: ArchivedTable, rows: readonly Row[]): Pro
   }
 };
 
+/** The photos of an archive by the hash that names them. */
+const photosIn = (files: Readonly<Record<string, Uint8Array>>): Map<string, Uint8Array> =>
+  new Map(
+    Object.entries(files).flatMap(([name, bytes]) => {
+      const hash = new RegExp(`^${PHOTO_FOLDER}/([0-9a-f]{64})\\.jpg$`).exec(name)?.[1];
+      if (!hash) return [];
+      if (createHash('sha256').update(bytes).digest('hex') !== hash) {
+        throw new NotAnArchive(`photo ${hash} is not the one its name says`);
+      }
+      return [[hash, bytes] as const];
+    }),
+  );
+
 /**
  * Puts a firm's archive into a database that holds no firm. All of it or nothing: 422 `invalid` when it is no archive, or
  * when a version is not what its fingerprint says. Passwords are not in an archive: everybody chooses a new one.
@@ -92,10 +108,12 @@ const putIn = async (tx: Db, archived: ArchivedTable, rows: readonly Row[]): Pro
 export const importFirm = async (
   db: Db,
   archive: Uint8Array,
+  store?: FileStore,
 ): Promise<Outcome<{ firmId: string; counts: Readonly<Record<string, number>> }>> => {
   const refuse = (why: string) =>
     invalid(`This archive cannot be read in: ${why}.`, [{ path: [], message: why }]);
   let tables: { archived: ArchivedTable; rows: Row[] }[];
+  let photos: Map<string, Uint8Array>;
   let firmId: string;
   try {
     const files = unzipSync(archive);
@@ -104,6 +122,7 @@ export const importFirm = async (
       return refuse(`it is not of the kind ${ARCHIVE_SCHEMA}`);
     }
     firmId = about.firmId;
+    photos = photosIn(files);
     tables = ARCHIVED_TABLES.map((archived) => ({ archived, rows: rowsIn(files, archived) }));
     for (const { archived, rows } of tables) {
       if (isRow(about.counts) && about.counts[archived.name] !== rows.length) {
@@ -120,6 +139,9 @@ export const importFirm = async (
       await putIn(tx, archived, rows);
       // Triggers look up what is in already: planned for the tables as they are now, not as when they were empty.
       await tx.execute(sql`analyze ${archived.table}`);
+    }
+    for (const [hash, bytes] of photos) {
+      await (store ?? (await theFiles())).put(photoFile(firmId, hash), bytes, PHOTO_TYPE);
     }
     const counts = Object.fromEntries(
       tables.map(({ archived, rows }) => [archived.name, rows.length]),

@@ -13,6 +13,9 @@ export interface S3Settings {
 /** How long a file may take to go over, ms, and how long until the service answers at all. */
 const PATIENCE = { requestTimeout: 60_000, connectionTimeout: 10_000 };
 
+/** The SDK speaks at every start of Node 20, which this program still runs on; may go when it no longer does. */
+process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED ??= 'true';
+
 /** A file store in a bucket, through whatever speaks S3. */
 export const s3Store = ({ endpoint, region, bucket, keys }: S3Settings): FileStore => {
   const client = new S3Client({

@@ -10,6 +10,7 @@ const version = {
   comments: 1,
   unread: 1,
   commentsStamp: 'c',
+  siteEntries: 0,
 };
 const layout = {
   id: 'l1',
@@ -28,6 +29,7 @@ describe('what changed in a project', () => {
       layouts: [],
       versions: [],
       comments: [],
+      site: [],
     });
   });
 
@@ -36,22 +38,27 @@ describe('what changed in a project', () => {
     expect(liveChanges(BEFORE, now({ draft }) as LiveState).layouts).toEqual(['l1']);
     const second = { ...version, id: 'v2', number: 2, state: 'saved' };
     const added = liveChanges(BEFORE, now({ versions: [second, version] }) as LiveState);
-    expect(added).toEqual({ layouts: ['l1'], versions: ['v2'], comments: ['v2'] });
+    expect(added).toEqual({ layouts: ['l1'], versions: ['v2'], comments: ['v2'], site: ['v2'] });
     const accepted = liveChanges(
       BEFORE,
       now({ versions: [{ ...version, state: 'accepted' }] }) as LiveState,
     );
-    expect(accepted).toEqual({ layouts: [], versions: ['v1'], comments: [] });
+    expect(accepted).toEqual({ layouts: [], versions: ['v1'], comments: [], site: [] });
     const said = liveChanges(
       BEFORE,
       now({ versions: [{ ...version, commentsStamp: 'd' }] }) as LiveState,
     );
-    expect(said).toEqual({ layouts: [], versions: [], comments: ['v1'] });
+    expect(said).toEqual({ layouts: [], versions: [], comments: ['v1'], site: [] });
+    const laid = liveChanges(
+      BEFORE,
+      now({ versions: [{ ...version, siteEntries: 1 }] }) as LiveState,
+    );
+    expect(laid).toEqual({ layouts: [], versions: [], comments: [], site: ['v1'] });
   });
 
   it('notices a layout that is gone', () => {
     const gone = liveChanges(BEFORE, { ...BEFORE, layouts: [] });
-    expect(gone).toEqual({ layouts: ['l1'], versions: ['v1'], comments: ['v1'] });
+    expect(gone).toEqual({ layouts: ['l1'], versions: ['v1'], comments: ['v1'], site: ['v1'] });
   });
 });
 

@@ -28,6 +28,9 @@ test('every bad key is named, with what it is and what would do', () => {
     SECURE_COOKIES: 'sometimes',
     SMTP_URL: 'http://mail.firm.example',
     MAIL_FROM: 'floors at firm',
+    S3_ENDPOINT: 'files.firm.example',
+    S3_BUCKET: 'Photos of ours',
+    S3_REGION: 'West!',
   };
   const message = (() => {
     try {
@@ -45,5 +48,27 @@ test('every bad key is named, with what it is and what would do', () => {
 test('an origin is kept without its path', () => {
   expect(parseEnvironment({ PUBLIC_ORIGIN: 'https://floors.example/app/' }).publicOrigin).toBe(
     'https://floors.example',
+  );
+});
+
+test('photos go into a bucket when one is named, and half a key or a service without a bucket is named', () => {
+  expect(parseEnvironment({ S3_BUCKET: 'photos' }).s3).toEqual({
+    endpoint: undefined,
+    region: 'us-east-1',
+    bucket: 'photos',
+    keys: undefined,
+  });
+  const keys = { S3_ACCESS_KEY_ID: 'id', S3_SECRET_ACCESS_KEY: 'very secret' };
+  expect(
+    parseEnvironment({ S3_BUCKET: 'photos', S3_ENDPOINT: 'https://files.example', ...keys }).s3,
+  ).toMatchObject({
+    endpoint: 'https://files.example',
+    keys: { accessKeyId: 'id', secretAccessKey: 'very secret' },
+  });
+  const half = { S3_BUCKET: 'photos', S3_SECRET_ACCESS_KEY: 'very secret' };
+  expect(() => parseEnvironment(half)).toThrow(/S3_ACCESS_KEY_ID is needed/);
+  expect(() => parseEnvironment(half)).not.toThrow(/very secret/);
+  expect(() => parseEnvironment({ S3_ENDPOINT: 'https://files.example' })).toThrow(
+    /S3_BUCKET is needed/,
   );
 });
