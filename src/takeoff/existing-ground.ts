@@ -20,11 +20,15 @@ import type { Spot } from '@/paving/levels';
  * surface has no step, and it is planes throughout. Spots in one line give strips along the line.
  */
 export interface ExistingGround {
+  /** As joined: their places on a grid of micrometres. */
+  readonly spots: readonly Spot[];
   readonly surface: PieceSurface;
   /** Pieces of `surface` between the spots; those after them lie beyond. */
   readonly within: number;
   /** Corners of each triangle as indices of spots, in the order of the first pieces. */
   readonly triangles: readonly (readonly [number, number, number])[];
+  /** Indices of spots round the triangles, anticlockwise; in order along the line where there are none. */
+  readonly rim: readonly number[];
   /** What the spots came to: triangles, one line, or nothing measured. */
   readonly shape: 'triangles' | 'line' | 'none';
 }
@@ -69,7 +73,14 @@ function lineSurface(spots: readonly Spot[]): PieceSurface {
 /** The existing ground by its spots, which must be apart from one another. */
 export function existingGround(measured: readonly Spot[]): ExistingGround {
   if (measured.length === 0) {
-    return { surface: [level(ASSUMED_GROUND_MM)], within: 0, triangles: [], shape: 'none' };
+    return {
+      spots: [],
+      surface: [level(ASSUMED_GROUND_MM)],
+      within: 0,
+      triangles: [],
+      rim: [],
+      shape: 'none',
+    };
   }
   const [x0, y0] = measured[0].at;
   const grid = measured.map(({ at: [x, y] }): Point => [
@@ -83,7 +94,7 @@ export function existingGround(measured: readonly Spot[]): ExistingGround {
   const joined = triangulation(grid);
   if (joined.kind === 'line') {
     const surface = lineSurface(joined.order.map((n) => spots[n]));
-    return { surface, within: 0, triangles: [], shape: 'line' };
+    return { spots, surface, within: 0, triangles: [], rim: joined.order, shape: 'line' };
   }
   const { triangles, rim } = joined;
   const inside = triangles.map(([p, q, r]): PlanePiece => {
@@ -115,5 +126,6 @@ export function existingGround(measured: readonly Spot[]): ExistingGround {
       strip(here, next, [leftOf(next.at, here.at)]),
     ];
   });
-  return { surface: [...inside, ...outside], within: inside.length, triangles, shape: 'triangles' };
+  const surface = [...inside, ...outside];
+  return { spots, surface, within: inside.length, triangles, rim, shape: 'triangles' };
 }
