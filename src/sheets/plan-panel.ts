@@ -10,24 +10,22 @@ import { cornerName, edgeName, keepOutName } from '@/paving/edge-names';
 import { figureText, lengthText, rangeText } from './figures';
 import { INK, KEEP_OUT_COLOUR, inkMix } from './inks';
 import type { KeepOutPlace } from './keep-out-place';
+import { markRows } from './mark-row';
 import type { PanelRow } from './panel';
 import {
   headingRow,
   keptTogether,
   itemRow,
   pairRow,
-  panelText,
   sampleRow,
   tableRow,
   textRows,
 } from './panel';
 import type { PlanInput } from './plan-input';
-import { setOutMark } from './plan-input';
 import { scaleBarRow } from './scale-bar';
 import { scaleName } from './scales';
 import type { StartPoint } from './start-point';
 import { liftedMarks } from './lifted-marks';
-import { LETTERING, textFitted, textWidth } from './text-measure';
 import { aggregateColour, firstTone, toneMark } from './unit-drawing';
 
 /** What the panel says, worked out once for every arrangement. */
@@ -54,10 +52,7 @@ export function planPanelRows(facts: PlanFacts, scale: number, width: number): r
   const { input } = facts;
   const { display } = input.laying.document;
   return [
-    markRow(setOutMark(input.state), width),
-    ...(input.state === 'superseded'
-      ? textRows('Another version is issued. Do not build from this one.', width)
-      : []),
+    ...markRows(input, width),
     ...quantityRows(input, width),
     ...startRows(facts, width),
     headingRow(`Key, scale ${scaleName(scale)}`, width),
@@ -74,27 +69,6 @@ export function planPanelRows(facts: PlanFacts, scale: number, width: number): r
     ),
     ...noteRows(input.laying.document, width),
   ];
-}
-
-function markRow(text: string, width: number): PanelRow {
-  const height =
-    textWidth(text, LETTERING.large, 700) <= width - 4 ? LETTERING.large : LETTERING.medium;
-  const fitted = textFitted(text, width - 4, height, 700);
-  return {
-    height: 10.5,
-    draw: ([x, y], rowWidth, frame) => [
-      {
-        kind: 'path',
-        rings: [boxRing({ left: x, top: y, right: x + rowWidth, bottom: y + 9.5 })],
-        stroke: { width: PENS.thick, colour: INK },
-      },
-      panelText([x + rowWidth / 2, y + 4.75 + height / 2], fitted, frame, {
-        height,
-        weight: 700,
-        anchor: 'middle',
-      }),
-    ],
-  };
 }
 
 function quantityRows({ laying, report }: PlanInput, width: number): readonly PanelRow[] {

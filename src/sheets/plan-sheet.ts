@@ -1,50 +1,22 @@
 import type { Laying } from '@/paving/laying';
-import type { DrawCommand, PaperBox } from './drawing';
-import { boxHeight, boxInset, boxWidth } from './drawing';
+import type { Arrangement, FiguredContent } from './figured-sheet';
+import { bestArrangement, figuredDrafts } from './figured-sheet';
 import { keepOutPlace } from './keep-out-place';
-import type { FlowedPanel, PanelColumn, PanelRow } from './panel';
-import { panelFlowed } from './panel';
-import type { Orientation, Paper, PaperName } from './paper';
-import { paperOf } from './paper';
+import type { PaperName } from './paper';
 import { planDrawing } from './plan-drawing';
 import type { PlanInput } from './plan-input';
 import type { PlanFacts } from './plan-panel';
 import { planPanelRows } from './plan-panel';
-import type { GroundBounds } from './plan-view';
-import { pointsBounds, viewCentred } from './plan-view';
-import { scaleFitting } from './scales';
+import { pointsBounds } from './plan-view';
 import type { NumberedSheet, SheetDraft } from './sheet-draft';
-import { footStrip, rule, sheetsNumbered } from './sheet-draft';
+import { sheetsNumbered } from './sheet-draft';
 import { startPoint } from './start-point';
 import { layingTinted } from './unit-drawing';
-import { TITLE_STRIP_HEIGHT } from './title-strip';
 
-/** White space round the ground for a line of dimensions and the corners' letters, mm. */
-const DIMENSION_MARGIN = 15;
 /** Characters. */
 const LONG_NOTES = 400;
-const COLUMN_WIDTH = 66;
-const COLUMN_INSET = 3;
-/** A portrait sheet's band of columns may take at most this share of the frame where it holds all. */
-const GREATEST_BAND = 0.55;
-/** The lowest band of columns, mm. */
-const LEAST_BAND = 40;
-/** A plan that fills less of its paper than this, along both sides, is worth a further sheet for its tables if that enlarges it. */
-const WELL_FILLED = 0.5;
 /** A smaller unit on paper than this, mm, asks for a larger sheet where one would be to a larger scale. */
-const READABLE_UNIT = 3;
-
-interface Arrangement {
-  readonly paper: Paper;
-  readonly scale: number;
-  readonly drawing: PaperBox;
-  readonly title: PaperBox;
-  readonly columns: readonly PanelColumn[];
-  /** Lines between the parts. */
-  readonly rules: readonly DrawCommand[];
-  /** All in all, with those that the panel goes on to. */
-  readonly sheets: number;
-}
+export const READABLE_UNIT = 3;
 
 /**
  * The plan of a version on the paper asked for, or with `auto` on the smallest of its family (A4 and A3;
@@ -53,16 +25,24 @@ interface Arrangement {
  */
 export function planDrafts(given: PlanInput): readonly SheetDraft[] {
   const laying = layingTinted(given.laying);
-  const input = { ...given, laying };
   const facts: PlanFacts = {
-    input,
+    input: { ...given, laying },
     start: startPoint(laying),
     keepOuts: laying.ground.rings.slice(1).map((ring) => keepOutPlace(laying.ground, ring)),
     asCourses: false,
   };
-  const bounds = pointsBounds(laying.ground.rings[0].edges.flatMap((edge) => edge.chords));
-  const arrangement = arrangementChosen(factsDeciding(facts), bounds);
-  return plansDrawn(facts, bounds, arrangement);
+  const deciding = factsDeciding(facts);
+  const content: FiguredContent = {
+    bounds: pointsBounds(laying.ground.rings[0].edges.flatMap((edge) => edge.chords)),
+    rows: (scale, width) => planPanelRows(deciding, scale, width),
+    draw: (view, inside) => {
+      const { layers, asCourses } = planDrawing(facts, view, inside);
+      const rows = (width: number) => planPanelRows({ ...facts, asCourses }, view.scale, width);
+      return { layers, rows };
+    },
+  };
+  const arrangement = arrangementChosen(content, facts.input);
+  return figuredDrafts(content, arrangement, { kind: 'plan', type: 'Floor plan' });
 }
 
 /** The plan by itself, outside a pack. */
@@ -77,227 +57,17 @@ function factsDeciding(facts: PlanFacts): PlanFacts {
   return { ...facts, input: { ...facts.input, laying: { ...laying, document } } };
 }
 
-function arrangementChosen(facts: PlanFacts, bounds: GroundBounds): Arrangement {
-  const { paper } = facts.input;
+function arrangementChosen(content: FiguredContent, { laying, paper }: PlanInput): Arrangement {
   const family: readonly PaperName[] =
-    facts.input.laying.document.display === 'metric' ? ['A4', 'A3'] : ['Letter', 'Tabloid'];
-  const best = (name: PaperName) => bestArrangement(facts, bounds, name);
+    laying.document.display === 'metric' ? ['A4', 'A3'] : ['Letter', 'Tabloid'];
+  const best = (name: PaperName) => bestArrangement(content, name);
   if (paper !== 'auto') return best(paper);
   const [small, large] = family.map(best);
-  const readable = leastUnitSide(facts.input.laying) / small.scale >= READABLE_UNIT;
+  const readable = leastUnitSide(laying) / small.scale >= READABLE_UNIT;
   // Tables on a second small sheet are better than a large sheet that shows the plan no larger.
   const enough = large.scale >= small.scale || (readable && small.sheets === 1);
   return enough ? small : large;
 }
 
-const leastUnitSide = (laying: Laying): number =>
+export const leastUnitSide = (laying: Laying): number =>
   Math.min(...laying.motif.map(({ unit }) => Math.min(unit.length, unit.width)));
-
-/**
- * Of a paper's arrangements: the fewest sheets, or one more where the plan would be small and gains by it; then the
- * largest scale; then lying as the ground does; then the roomiest.
- */
-function bestArrangement(facts: PlanFacts, bounds: GroundBounds, name: PaperName): Arrangement {
-  const orientations: readonly Orientation[] = ['landscape', 'portrait'];
-  const candidates = orientations.flatMap((orientation) => {
-    const paper = paperOf(name, orientation);
-    return orientation === 'portrait'
-      ? portraitArrangements(facts, bounds, paper)
-      : [1, 2].flatMap((columns) => landscapeArrangement(facts, bounds, paper, columns));
-  });
-  const room = ({ drawing }: Arrangement) => {
-    const size = boundsSize(bounds);
-    return Math.min(boxWidth(drawing) / size[0], boxHeight(drawing) / size[1]);
-  };
-  const [across, up] = boundsSize(bounds);
-  const lying = across > up * 1.15 ? 'landscape' : across * 1.15 < up ? 'portrait' : null;
-  const against = ({ paper }: Arrangement) => Number(lying !== null && paper.orientation !== lying);
-  const ordered = [...candidates].sort(
-    (p, q) => p.scale - q.scale || against(p) - against(q) || room(q) - room(p),
-  );
-  const within = (most: number) => ordered.filter(({ sheets }) => sheets <= most);
-  const fewest = Math.min(...ordered.map(({ sheets }) => sheets));
-  const [chosen] = within(fewest);
-  const { frame } = chosen.paper;
-  const filled = Math.max(across / boxWidth(frame), up / boxHeight(frame)) / chosen.scale;
-  if (filled >= WELL_FILLED) return chosen;
-  const [larger] = within(fewest + 1);
-  return larger.scale < chosen.scale ? larger : chosen;
-}
-
-const boundsSize = ({ least, greatest }: GroundBounds): readonly [number, number] => [
-  greatest[0] - least[0],
-  greatest[1] - least[1],
-];
-
-function scaleIn(bounds: GroundBounds, box: PaperBox): number {
-  const [width, height] = boundsSize(bounds);
-  return scaleFitting(
-    width,
-    height,
-    boxWidth(box) - 2 * DIMENSION_MARGIN,
-    boxHeight(box) - 2 * DIMENSION_MARGIN,
-  );
-}
-
-/** Columns of figures at the right, the title strip under the drawing. */
-function landscapeArrangement(
-  facts: PlanFacts,
-  bounds: GroundBounds,
-  paper: Paper,
-  count: number,
-): readonly Arrangement[] {
-  const { frame } = paper;
-  const split = frame.right - count * COLUMN_WIDTH;
-  if (split - frame.left < 180) return [];
-  const titleTop = frame.bottom - TITLE_STRIP_HEIGHT;
-  const drawing = { left: frame.left, top: frame.top, right: split, bottom: titleTop };
-  const columns = Array.from({ length: count }, (_, n): PanelColumn => ({
-    frame: `column ${n + 1}`,
-    box: boxInset(
-      {
-        left: split + n * COLUMN_WIDTH,
-        top: frame.top,
-        right: split + (n + 1) * COLUMN_WIDTH,
-        bottom: frame.bottom,
-      },
-      COLUMN_INSET,
-    ),
-  }));
-  const scale = scaleIn(bounds, drawing);
-  const rows = planPanelRows(facts, scale, COLUMN_WIDTH - 2 * COLUMN_INSET);
-  return [
-    {
-      paper,
-      scale,
-      drawing,
-      title: { left: frame.left, top: titleTop, right: split, bottom: frame.bottom },
-      columns,
-      rules: [
-        rule([split, frame.top], [split, frame.bottom]),
-        rule([frame.left, titleTop], [split, titleTop]),
-      ],
-      sheets: panelsFlowed(rows, columns, paper).length,
-    },
-  ];
-}
-
-/** A band of columns over a title strip across the foot: high enough for all, and as high as the largest plan leaves. */
-function portraitArrangements(
-  facts: PlanFacts,
-  bounds: GroundBounds,
-  paper: Paper,
-): readonly Arrangement[] {
-  const { frame } = paper;
-  const count = Math.floor(boxWidth(frame) / 58);
-  const width = boxWidth(frame) / count;
-  const titleTop = frame.bottom - TITLE_STRIP_HEIGHT;
-  const columnsFrom = (top: number) =>
-    Array.from({ length: count }, (_, n): PanelColumn => ({
-      frame: `column ${n + 1}`,
-      box: boxInset(
-        {
-          left: frame.left + n * width,
-          top,
-          right: frame.left + (n + 1) * width,
-          bottom: titleTop,
-        },
-        COLUMN_INSET,
-      ),
-    }));
-  const rowsAt = (scale: number) => planPanelRows(facts, scale, width - 2 * COLUMN_INSET);
-  // The rows are as high at one scale as at another.
-  const rows = rowsAt(100);
-  const greatest = boxHeight(frame) * GREATEST_BAND;
-  let holding = LEAST_BAND;
-  while (holding < greatest && panelFlowed(rows, columnsFrom(titleTop - holding)).rest.length > 0)
-    holding += 2;
-  const drawingOver = (band: number): PaperBox => ({ ...frame, bottom: titleTop - band });
-  const largest = scaleIn(bounds, drawingOver(LEAST_BAND));
-  const needed = boundsSize(bounds)[1] / largest + 2 * DIMENSION_MARGIN;
-  const leaving = Math.max(LEAST_BAND, Math.floor(titleTop - frame.top - needed));
-  return [holding, leaving].map((band) => {
-    const columns = columnsFrom(titleTop - band);
-    const drawing = drawingOver(band);
-    return {
-      paper,
-      scale: scaleIn(bounds, drawing),
-      drawing,
-      title: { ...frame, top: titleTop },
-      columns,
-      rules: [
-        rule([frame.left, titleTop - band], [frame.right, titleTop - band]),
-        rule([frame.left, titleTop], [frame.right, titleTop]),
-      ],
-      sheets: panelsFlowed(rows, columns, paper).length,
-    };
-  });
-}
-
-/** The panel on the first sheet's columns, and on as many further sheets as it takes. */
-function panelsFlowed(
-  rows: readonly PanelRow[],
-  columns: readonly PanelColumn[],
-  paper: Paper,
-): readonly FlowedPanel[] {
-  const further = furtherColumns(paper, boxWidth(columns[0].box));
-  const panels = [panelFlowed(rows, columns)];
-  for (let { rest } = panels[0]; rest.length > 0;) {
-    const next = panelFlowed(rest, further);
-    if (next.rest.length === rest.length)
-      throw new Error('A row of the panel is higher than a whole sheet.');
-    panels.push(next);
-    rest = next.rest;
-  }
-  return panels;
-}
-
-function plansDrawn(
-  facts: PlanFacts,
-  bounds: GroundBounds,
-  arrangement: Arrangement,
-): readonly SheetDraft[] {
-  const { paper, scale, drawing, columns } = arrangement;
-  const inside = boxInset(drawing, 1.5);
-  const plan = planDrawing(facts, viewCentred(bounds, scale, drawing), inside);
-  const columnWidth = boxWidth(columns[0].box);
-  const rows = planPanelRows({ ...facts, asCourses: plan.asCourses }, scale, columnWidth);
-  const panels = panelsFlowed(rows, columns, paper);
-  const further = furtherColumns(paper, columnWidth);
-  return panels.map((panel, n): SheetDraft => {
-    const title = n === 0 ? arrangement.title : footStrip(paper);
-    const used = n === 0 ? columns : further;
-    return {
-      kind: 'plan',
-      type: n === 0 ? 'Floor plan' : 'Floor plan: tables',
-      paper,
-      scale,
-      title,
-      frames: {
-        drawing: inside,
-        ...Object.fromEntries(used.map(({ frame, box }) => [frame, box])),
-      },
-      layers: [...(n === 0 ? plan.layers : []), { name: 'panel', commands: panel.commands }],
-      rules:
-        n === 0 ? arrangement.rules : [rule([title.left, title.top], [title.right, title.top])],
-    };
-  });
-}
-
-/** Columns over the whole of a further sheet. */
-function furtherColumns({ frame }: Paper, columnWidth: number): readonly PanelColumn[] {
-  const count = Math.floor(boxWidth(frame) / (columnWidth + 2 * COLUMN_INSET));
-  const pitch = boxWidth(frame) / count;
-  return Array.from({ length: count }, (_, n) => {
-    const left = frame.left + n * pitch + COLUMN_INSET;
-    return {
-      frame: `column ${n + 1}`,
-      box: {
-        left,
-        top: frame.top + COLUMN_INSET,
-        right: left + columnWidth,
-        bottom: frame.bottom - TITLE_STRIP_HEIGHT - COLUMN_INSET,
-      },
-    };
-  });
-}

@@ -1,0 +1,60 @@
+import type { Check } from '@/paving/set-out/set-out-types';
+import type { Display } from '@/paving/length';
+import { figureText } from './figures';
+import type { PaperName } from './paper';
+import type { TableCell, TableColumn } from './ruled-table';
+import { ruledTable } from './ruled-table';
+import type { SetOutInput } from './set-out-input';
+import type { SheetDraft } from './sheet-draft';
+import { tableDrafts } from './table-sheet';
+import { textRows } from './panel';
+
+const COLUMNS: readonly TableColumn[] = [
+  { title: 'No.', align: 'end', weight: 600 },
+  { title: 'What to measure', align: 'start', grow: 1.5 },
+  { title: 'Expected', align: 'end', weight: 600 },
+  { title: 'At least', align: 'end' },
+  { title: 'At most', align: 'end' },
+  { title: 'Measured', align: 'middle' },
+  { title: 'Good', align: 'middle' },
+  { title: 'Why these limits', align: 'start', grow: 1 },
+];
+
+/** Checks: what to measure, what it should read, and room for what it reads. */
+export function checksDrafts(input: SetOutInput, paper: PaperName): readonly SheetDraft[] {
+  const { setOut, laying } = input;
+  const { display } = laying.document;
+  return tableDrafts(
+    {
+      kind: 'checks',
+      type: 'Checks',
+      title: `Checks${display === 'metric' ? ', in mm' : ''}`,
+      sections: (width) => [
+        ruledTable(COLUMNS, checkCells(setOut.checks, display), width),
+        {
+          header: null,
+          rows: textRows(
+            'A reading out of its limits: stop, find out why, and ask the designer before you go on. Checked by, and date:',
+            width,
+          ),
+        },
+      ],
+    },
+    input,
+    paper,
+  );
+}
+
+function checkCells(checks: readonly Check[], display: Display): readonly (readonly TableCell[])[] {
+  const limit = (mm: number | null) => (mm === null ? '–' : figureText(mm, display, 1));
+  return checks.map(({ what, expected, least, greatest, source }, n) => [
+    String(n + 1),
+    what,
+    figureText(expected, display, 1),
+    limit(least),
+    limit(greatest),
+    { write: true },
+    { tick: true },
+    source,
+  ]);
+}

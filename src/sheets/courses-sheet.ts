@@ -1,0 +1,107 @@
+import { courseRows, ticksEvery } from './course-rows';
+import type { FiguredContent } from './figured-sheet';
+import { bestArrangement, figuredDrafts } from './figured-sheet';
+import { countText, lengthText } from './figures';
+import { markRows } from './mark-row';
+import type { PanelRow } from './panel';
+import { headingRow, itemRow, keptTogether, pairRow, textRows } from './panel';
+import type { PaperName } from './paper';
+import { pointsBounds } from './plan-view';
+import { scaleBarRow } from './scale-bar';
+import { setOutDrawing } from './set-out-drawing';
+import type { SetOutInput } from './set-out-input';
+import { baselineName } from './set-out-input';
+import type { SheetDraft } from './sheet-draft';
+import { tableDrafts } from './table-sheet';
+
+/** Courses: where their strings are, then each course with the running lengths of its units. None without units. */
+export function coursesDrafts(input: SetOutInput, paper: PaperName): readonly SheetDraft[] {
+  const { laying, setOut } = input;
+  if (setOut.courses.length === 0) return [];
+  const content: FiguredContent = {
+    bounds: pointsBounds(laying.ground.rings[0].edges.flatMap((edge) => edge.chords)),
+    rows: (scale, width) => coursesPanel(input, scale, width),
+    draw: (view, frame) => ({
+      layers: setOutDrawing(laying, setOut, view, { figures: 'courses', frame }),
+      rows: (width) => coursesPanel(input, view.scale, width),
+    }),
+  };
+  const { display, units } = laying.document;
+  const words = { display, units, every: ticksEvery(laying.laid.count) };
+  return [
+    ...figuredDrafts(content, bestArrangement(content, paper), {
+      kind: 'courses',
+      type: 'Courses',
+    }),
+    ...tableDrafts(
+      {
+        kind: 'courses',
+        type: 'Courses: running lengths',
+        title: `Courses${display === 'metric' ? ', running lengths in mm' : ', running lengths'}`,
+        sections: (width) => [
+          {
+            header: null,
+            rows: setOut.courses.flatMap((course) => courseRows(course, words, width)),
+          },
+        ],
+      },
+      input,
+      paper,
+    ),
+  ];
+}
+
+function coursesPanel(input: SetOutInput, scale: number, width: number): readonly PanelRow[] {
+  const { laying, setOut } = input;
+  const { display } = laying.document;
+  const { firstUnit: first, courses } = setOut;
+  const every = ticksEvery(laying.laid.count);
+  const turn = first ? Math.round(Math.abs(first.turnDeg) * 100) / 100 : 0;
+  const way = first && first.turnDeg > 0 ? 'anticlockwise' : 'clockwise';
+  return [
+    ...markRows(input, width),
+    headingRow('Strings', width),
+    ...keptTogether(
+      textRows(
+        `A number stands at the start of each course’s string. Strings run from left to right on the plan${turn === 0 ? `, along ${baselineName(setOut)}` : `, turned ${turn}° ${way} from ${baselineName(setOut)}`}.`,
+        width,
+      ),
+    ),
+    pairRow('Courses', countText(courses.length), width),
+    pairRow('Units', countText(laying.laid.count), width),
+    ...(first
+      ? [
+          headingRow('First unit', width),
+          ...textRows(
+            `In course ${first.course}, unit ${first.place} from the string’s start: drawn heavy. Its corners are U1 to U4 of the control points.`,
+            width,
+          ),
+        ]
+      : []),
+    headingRow('How to lay a course', width),
+    itemRow('Stretch the string from point a to point b of the course, and pull it tight.', width),
+    itemRow(
+      'Hold the tape’s end at the string’s start. Each unit has two running lengths: its near and its far edge.',
+      width,
+    ),
+    itemRow(
+      every === 1
+        ? 'Tick each unit as it goes down. Lengths run from one zero, so that errors do not add up.'
+        : `The floor has many units: the lengths of every ${every}th are given, and of the first and last of each run. They run from one zero, so that errors do not add up.`,
+      width,
+    ),
+    scaleBarRow(scale, display, width),
+    headingRow('Joint', width),
+    pairRow('Between units', lengthText(laying.joint, display, 1), width),
+    ...keptTogether(
+      [
+        headingRow('Take care', width),
+        itemRow(
+          'Keep the string clear of the units: a string that is pushed bends the course.',
+          width,
+        ),
+      ],
+      'wished',
+    ),
+  ];
+}
