@@ -36,11 +36,25 @@ const fileWrong = (line: number, message: string): ReadFile => ({
   unknownColumns: [],
 });
 
+const DELIMITERS = [',', ';', '\t'] as const;
+
+/** What parts the cells: that by which the first line names the most columns. What cells hold has no say. */
+const delimiterOf = (csv: string): string => {
+  const named = (delimiter: string) => {
+    const [head = []] = Papa.parse<string[]>(csv, {
+      delimiter,
+      preview: 1,
+      skipEmptyLines: 'greedy',
+    }).data;
+    return head.filter((heading) => columnNamed(heading)).length;
+  };
+  return DELIMITERS.reduce((best, other) => (named(other) > named(best) ? other : best));
+};
+
 /** Takes a catalogue's file apart: commas, semicolons or tabs between cells, headings in the first line. */
 export const catalogueFileRead = (csv: string, currency: string): ReadFile => {
-  const parsed = Papa.parse<string[]>(csv.replace(/^\ufeff/, ''), {
-    delimitersToGuess: [',', ';', '\t'],
-  });
+  const text = csv.replace(/^\ufeff/, '');
+  const parsed = Papa.parse<string[]>(text, { delimiter: delimiterOf(text) });
   const lined = linedRows(parsed.data);
   const broken = parsed.errors.find(({ type }) => type === 'Quotes');
   if (broken) {
