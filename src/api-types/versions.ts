@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import type { LayoutDocument } from '@/paving/layout-document';
+import type { Figures } from '@/paving/figure-comparison';
 import type { Report } from '@/paving/report';
 import type { PersonName } from './people';
 
@@ -54,7 +55,7 @@ export interface VersionSummary {
   readonly createdBy: PersonName;
   /** First 10 hexadecimal digits of the document's SHA-256, as printed on sheets. */
   readonly shortFingerprint: string;
-  readonly figures: Omit<Report, 'edges'>;
+  readonly figures: Figures;
 }
 
 /** GET /api/layouts/{id}/versions → `{ versions: VersionWithDrawing[] }`, newest first. */

@@ -1,10 +1,11 @@
 import { bondPattern, documentUnit } from './bond';
+import type { CutFigures } from './cutting/cut-report';
 import type { LayoutDocument } from './layout-document';
-import type { Report } from './report';
+import { aggregateArea, type Report } from './report';
 import { unitKind } from './unit-matching';
 
-/** A report without its edges, as lists of versions carry it. */
-export type Figures = Omit<Report, 'edges'>;
+/** A report without its edges and its pieces, as lists of versions carry it. */
+export type Figures = Omit<Report, 'edges' | 'cut'> & { readonly cut?: CutFigures };
 
 /** One figure on both floors; `change` is b − a, null where either floor has none. */
 export interface FigureChange {
@@ -36,7 +37,17 @@ export interface FigureComparison {
   readonly play: FigureChange;
   readonly groundArea: FigureChange;
   readonly coveredArea: FigureChange;
+  /** What aggregate takes: less where the edge is laid with cut pieces. */
   readonly fillArea: FigureChange;
+  /** Where either floor is cut at its edge; 0 on one that is not. */
+  readonly cut: {
+    readonly pieces: FigureChange;
+    /** Whole units that the pieces are sawn from. */
+    readonly sawnUnits: FigureChange;
+    readonly waste: FigureChange;
+    /** mm */
+    readonly sawLength: FigureChange;
+  } | null;
 }
 
 function figureChange(a: number | null, b: number | null): FigureChange {
@@ -96,6 +107,15 @@ export function figuresCompared(
     play: figureChange(a.play, b.play),
     groundArea: figureChange(a.groundArea, b.groundArea),
     coveredArea: figureChange(a.coveredArea, b.coveredArea),
-    fillArea: figureChange(a.fillArea, b.fillArea),
+    fillArea: figureChange(aggregateArea(a), aggregateArea(b)),
+    cut:
+      a.cut || b.cut
+        ? {
+            pieces: figureChange(a.cut?.count ?? 0, b.cut?.count ?? 0),
+            sawnUnits: figureChange(a.cut?.wholeUnits ?? 0, b.cut?.wholeUnits ?? 0),
+            waste: figureChange(a.cut?.waste ?? 0, b.cut?.waste ?? 0),
+            sawLength: figureChange(a.cut?.sawLength ?? 0, b.cut?.sawLength ?? 0),
+          }
+        : null,
   };
 }

@@ -1,3 +1,4 @@
+import { cutReport, type CutReport } from './cutting/cut-report';
 import { gapProfile } from './gap-profile';
 import type { Laying } from './laying';
 import { leastGapAt } from './least-gap';
@@ -25,19 +26,36 @@ export interface Report {
   readonly lifted: number;
   readonly groundArea: number;
   readonly coveredArea: number;
-  /** `groundArea` − `coveredArea`: what aggregate takes. */
+  /** `groundArea` − `coveredArea`: what aggregate takes. Of a floor cut at its edge, `cut.fillArea` is. */
   readonly fillArea: number;
   /** Least distance from a laid unit to the perimeter or a keep-out; null if none is laid. */
   readonly leastGap: number | null;
   /** How far the whole field may drift, in any direction, before a laid unit breaks the clearance. */
   readonly play: number | null;
   readonly edges: readonly EdgeReport[];
+  /** Only where the document has units cut at the edge. */
+  readonly cut?: CutReport;
 }
+
+export type { CutReport };
 
 const MM2_PER_M2 = 1e6;
 
 /** The report of a laying, as the layout document defines it. */
 export function floorReport(laying: Laying): Report {
+  const whole = wholeReport(laying);
+  return laying.document.cutting === 'edge' ? { ...whole, cut: cutReport(laying) } : whole;
+}
+
+/** What aggregate takes of a floor, m²: pieces cut at the edge leave it less. */
+export const aggregateArea = ({
+  cut,
+  fillArea,
+}: Pick<Report, 'fillArea'> & { readonly cut?: Pick<CutReport, 'fillArea'> }): number =>
+  cut?.fillArea ?? fillArea;
+
+/** The report of the whole units alone: all of it but `cut`, which takes longer. */
+export function wholeReport(laying: Laying): Omit<Report, 'cut'> {
   const { document, ground, laid, motif } = laying;
   const byMotif = new Array<number>(motif.length).fill(0);
   for (let n = 0; n < laid.count; n++) byMotif[laid.k[n]]++;

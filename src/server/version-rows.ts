@@ -20,7 +20,9 @@ export const summaryColumns = {
   personId: people.id,
   personName: people.name,
   fingerprint: versions.fingerprint,
-  figures: sql<VersionSummary['figures']>`${versions.report} - 'edges'`.mapWith(versions.report),
+  figures: sql<VersionSummary['figures']>`${versions.report} - 'edges' #- '{cut,pieces}'`.mapWith(
+    versions.report,
+  ),
 };
 
 export const byCreator = eq(people.id, versions.createdBy);

@@ -1,4 +1,4 @@
-import type { Point } from '@/geometry/point';
+import { convexHull } from '@/geometry/convex-hull';
 import type { Laying } from '@/paving/laying';
 import { unitCorners } from '@/paving/laying';
 import type { Unit } from '@/paving/layout-document';
@@ -129,24 +129,3 @@ export function courseCommands(
     };
   });
 }
-
-/** Andrew's monotone chain; anticlockwise, without collinear points. */
-function convexHull(points: readonly Point[]): readonly Point[] {
-  const sorted = [...points].sort((p, q) => p[0] - q[0] || p[1] - q[1]);
-  const half = (ordered: readonly Point[]): Point[] => {
-    const chain: Point[] = [];
-    for (const point of ordered) {
-      while (
-        chain.length > 1 &&
-        turnsRight(chain[chain.length - 2], chain[chain.length - 1], point)
-      )
-        chain.pop();
-      chain.push(point);
-    }
-    return chain.slice(0, -1);
-  };
-  return [...half(sorted), ...half([...sorted].reverse())];
-}
-
-const turnsRight = (p: Point, q: Point, r: Point): boolean =>
-  (q[0] - p[0]) * (r[1] - p[1]) - (q[1] - p[1]) * (r[0] - p[0]) <= 0;

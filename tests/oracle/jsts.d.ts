@@ -2,6 +2,7 @@ declare module 'jsts/org/locationtech/jts/geom/GeometryFactory.js' {
   import type { Coordinate } from 'jsts/org/locationtech/jts/geom/Coordinate.js';
   export interface Geometry {
     getArea(): number;
+    getLength(): number;
     isEmpty(): boolean;
     getBoundary(): Geometry;
     getCoordinates(): { readonly x: number; readonly y: number }[];

@@ -3,7 +3,7 @@ import { leastGapAt, type LeastGap } from '@/paving/least-gap';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { parseLayoutDocument, type DocumentProblem } from '@/paving/layout-validation';
 import { layFloor, type Laying } from '@/paving/laying';
-import { floorReport, type Report } from '@/paving/report';
+import { wholeReport, type Report } from '@/paving/report';
 
 /** All that the table shows of a document, worked out once for each and only as far as it is asked for. */
 export interface Floor {
@@ -11,6 +11,7 @@ export interface Floor {
   readonly problems: readonly DocumentProblem[];
   /** Null when the document cannot be laid; `problems` says why. */
   readonly laying: Laying | null;
+  /** Of the whole units: what cutting comes to takes longer and is asked for beside the page. */
   readonly report: Report | null;
   readonly profile: readonly EdgeProfile[];
   readonly leastGap: LeastGap | null;
@@ -33,7 +34,7 @@ export function floorOf(document: LayoutDocument): Floor {
       const laid = laying();
       return laid ? make(laid) : without;
     });
-  const report = from<Report | null>(floorReport, null);
+  const report = from<Report | null>(wholeReport, null);
   const profile = from<readonly EdgeProfile[]>(gapProfile, []);
   const leastGap = from<LeastGap | null>(leastGapAt, null);
   const floor: Floor = {
