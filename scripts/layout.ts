@@ -6,6 +6,7 @@ import type { LayoutDocument } from '@/paving/layout-document';
 import { layFloor } from '@/paving/laying';
 import { parseLayoutDocument, type DocumentProblem } from '@/paving/layout-validation';
 import { floorReport } from '@/paving/report';
+import { takeOff } from '@/takeoff/take-off';
 import { setOut } from '@/paving/set-out/set-out';
 
 /**
@@ -71,6 +72,14 @@ const tasks: Readonly<Record<string, Task>> = {
     run: (document, options) => {
       if (options.length > 0) throw new Refusal(`report takes no option "${options[0]}"`);
       return floorReport(layFloor(document));
+    },
+  },
+  'take-off': {
+    usage: 'take-off FILE|-',
+    run: (document, options) => {
+      if (options.length > 0) throw new Refusal(`take-off takes no option "${options[0]}"`);
+      const laying = layFloor(document);
+      return takeOff(laying, floorReport(laying), null);
     },
   },
   fit: {

@@ -1,104 +1,66 @@
-import type { PackMeasure, PriceKind } from './price-list';
+import type { Laying } from '@/paving/laying';
+import type { Report } from '@/paving/report';
+import { chosenMaterial, type ChosenMaterial } from './chosen-material';
+import { earthVolumes } from './earth-volumes';
+import { aggregateParts, fillLines } from './fill-lines';
+import { edgingLine, geotextileLine, layerLines, spoilLine } from './layer-lines';
+import { orderLines } from './order-lines';
+import type { PriceList } from './price-list';
+import { takeOffWarnings } from './sanity';
+import type { TakeOff } from './take-off-line';
+import { unitLines } from './unit-lines';
 
-/** What a line counts in; volumes and areas of the floor are metric inside, whatever is shown. */
-export type TakeOffMeasure = 'each' | 'm' | 'm2' | 'm3' | 'kg';
+export type {
+  Assumption,
+  OrderLine,
+  TakeOff,
+  TakeOffGroup,
+  TakeOffLine,
+  TakeOffMeasure,
+  TakeOffWarning,
+} from './take-off-line';
+export type { OrderWay } from '@/paving/materials';
 
-export type TakeOffGroup = 'units' | 'fill' | 'layers' | 'earth' | 'sundries';
-
-/** A value that the take-off reckoned with, and where it comes from. */
-export interface Assumption {
-  /** What it is, `Loose for 1 m³ in place`. */
-  readonly name: string;
-  /** As people read it, `1.17`. */
-  readonly value: string;
-  /** A published source, `common practice`, `typed in` or `the catalogue`. */
-  readonly source: string;
-  /** Where the document keeps it when it is changed, `['materials', 'base', 'bulk']`; null where it cannot be. */
-  readonly field: readonly string[] | null;
-}
-
-/** One quantity of the floor. */
-export interface TakeOffLine {
-  /**
-   * The same for the same thing of every version: `units:<unit id>:first-tone`,
-   * `units:<unit id>:second-tone`, `fill:joints`, `fill:voids`, `fill:margin`, `layer:bedding`,
-   * `layer:base`, `earth:spoil`, `geotextile`, `edging`.
-   */
-  readonly id: string;
-  readonly group: TakeOffGroup;
-  readonly name: string;
-  /** What the floor takes, in `measure`: units without spares, volumes as they lie in the floor. */
-  readonly amount: number;
-  readonly measure: TakeOffMeasure;
-  /** m³ as it lies in the floor and as it is carted; null for what is not counted by volume. */
-  readonly volume: { readonly inPlace: number; readonly loose: number } | null;
-  /** With its numbers, so that a person can check it by hand. */
-  readonly formula: string;
-  readonly assumptions: readonly Assumption[];
-  /** Of what is ordered for the line or carted away, kg; null where it is not known. */
-  readonly massKg: number | null;
-  /** The order that it is part of; null for what is not bought. */
-  readonly orderId: string | null;
-}
-
-/** How a thing is ordered. */
-export type OrderWay = 'pack' | 'each' | 'volume' | 'mass' | 'bag' | 'bulkBag' | 'load' | 'length' | 'area'; // prettier-ignore
-
-/** What is bought of one thing: voids and margin of one aggregate are one order. */
-export interface OrderLine {
-  readonly id: string;
-  readonly kind: PriceKind;
-  readonly name: string;
-  /** Ids of the take-off lines that it serves. */
-  readonly lines: readonly string[];
-  /** What is needed with spares and laps, loose, in `measure`, not rounded. */
-  readonly needed: number;
-  readonly measure: TakeOffMeasure;
-  readonly way: OrderWay;
-  /** What is bought at once. */
-  readonly pack: {
-    readonly name: string;
-    readonly holds: number;
-    readonly measure: PackMeasure;
-    readonly whole: boolean;
+/**
+ * All that a floor takes: its quantities by line, what is bought for them, what it weighs and, with the
+ * firm's price list, what it costs. A pure function of document and list.
+ *
+ * @param report the laying's own report
+ * @param prices null where the firm has no list, or the reader may not see it: nothing then has a price,
+ * and densities are those of the document and the defaults
+ */
+export function takeOff(laying: Laying, report: Report, prices: PriceList | null): TakeOff {
+  const chosen = (place: Parameters<typeof chosenMaterial>[1]): ChosenMaterial =>
+    chosenMaterial(laying, place, prices);
+  const materials = {
+    joints: chosen('joints'),
+    voids: chosen('voids'),
+    margin: chosen('margin'),
+    bedding: chosen('bedding'),
+    base: chosen('base'),
   };
-  /** So many packs: a whole number where packs are bought whole, else to a thousandth. */
-  readonly amount: number;
-  /** `3 bulk bags of 800 kg`, in the document's own measures. */
-  readonly words: string;
-  readonly massKg: number | null;
-  /** The entry of the price list that it is bought by; null where none was chosen or found. */
-  readonly item: { readonly id: string; readonly supplier: string; readonly from: string } | null;
-  /** For one pack and for all, without tax, minor units; null without a price. */
-  readonly packCostMinor: number | null;
-  readonly costMinor: number | null;
-}
-
-/** Something that a careful person would look at before ordering. */
-export interface TakeOffWarning {
-  /** Stable, `stone-too-large:joints`. */
-  readonly id: string;
-  /** `wrong` will not work; `look` needs a decision; `caution` is for people's safety. */
-  readonly weight: 'wrong' | 'look' | 'caution';
-  readonly words: string;
-  /** Who says so; `common practice` where nobody published it. */
-  readonly source: string;
-  /** The line that it is about. */
-  readonly line: string | null;
-}
-
-/** All that a floor takes. */
-export interface TakeOff {
-  readonly lines: readonly TakeOffLine[];
-  readonly orders: readonly OrderLine[];
-  readonly warnings: readonly TakeOffWarning[];
-  /** Of all that is delivered, kg; what is not known is left out and `massComplete` is false. */
-  readonly massKg: number;
-  readonly massComplete: boolean;
-  /** ISO 4217; null without a price list. */
-  readonly currency: string | null;
-  /** Of the orders that have a price, minor units; null without a price list. */
-  readonly costMinor: number | null;
-  /** Ids of orders without a price. */
-  readonly unpriced: readonly string[];
+  const parts = aggregateParts(laying, report);
+  const earth = earthVolumes(laying);
+  const lines = [
+    ...unitLines(laying, report, prices),
+    ...fillLines(laying, parts, materials),
+    ...layerLines(laying, earth, materials),
+    ...spoilLine(laying, earth),
+    ...geotextileLine(laying, earth),
+    ...edgingLine(laying),
+  ];
+  const orders = orderLines(laying, lines, Object.values(materials), prices);
+  const priced = orders.filter(({ costMinor }) => costMinor !== null);
+  const total = (parts: readonly (number | null)[]) =>
+    parts.reduce<number>((sum, part) => sum + (part ?? 0), 0);
+  return {
+    lines,
+    orders,
+    warnings: takeOffWarnings({ laying, report, parts, materials, earth, lines, orders, prices }),
+    massKg: total(orders.map(({ massKg }) => massKg)),
+    massComplete: orders.every(({ massKg }) => massKg !== null),
+    currency: prices?.currency ?? null,
+    costMinor: prices ? total(priced.map(({ costMinor }) => costMinor)) : null,
+    unpriced: orders.filter(({ costMinor }) => costMinor === null).map(({ id }) => id),
+  };
 }
