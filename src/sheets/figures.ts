@@ -25,7 +25,13 @@ export function figureText(mm: number, display: Display, decimals = 0): string {
   );
 }
 
-/** The same with its unit, for running text: `6 mm`. */
+/** A level over the datum with its sign: `−12`, `0`, `+5`. */
+export function levelFigureText(mm: number, display: Display): string {
+  const figure = figureText(mm, display);
+  return mm > 0 && figure !== figureText(0, display) ? `+${figure}` : figure;
+}
+
+/** A length with its unit, for running text: `6 mm`. */
 export function lengthText(mm: number, display: Display, decimals = 0): string {
   const figure = figureText(mm, display, decimals);
   return display === 'metric' ? `${figure}\u2009mm` : figure;
