@@ -34,6 +34,8 @@ export interface CutFigures {
   readonly wholeUnits: number;
   /** The same by unit id: every unit that the bond uses. */
   readonly byUnit: Readonly<Record<string, number>>;
+  /** Those of them that are of the second tone; a piece is sawn from a unit of its own tone. */
+  readonly bySecondTone: Readonly<Record<string, number>>;
   /** However the pieces are nested, they take no fewer whole units. */
   readonly leastUnits: number;
   /** Of the units sawn, what no piece takes. */
@@ -55,6 +57,7 @@ const MM2_PER_M2 = 1e6;
 
 interface Kind {
   readonly unit: string;
+  readonly tone: 0 | 1;
   readonly pieces: number[];
 }
 
@@ -63,8 +66,9 @@ function kinds({ document, motif }: Laying, pieces: readonly CutPiece[]): Kind[]
   const found = new Map<string, Kind>();
   pieces.forEach(({ unit: [i, j, k] }, n) => {
     const { unit } = motif[k];
-    const key = `${unitTone(document, i, j, k)} ${unit.id}`;
-    const kind = found.get(key) ?? { unit: unit.id, pieces: [] };
+    const tone = unitTone(document, i, j, k);
+    const key = `${tone} ${unit.id}`;
+    const kind = found.get(key) ?? { unit: unit.id, tone, pieces: [] };
     if (kind.pieces.length === 0) found.set(key, kind);
     kind.pieces.push(n);
   });
@@ -92,6 +96,7 @@ export function cutReport(
   const { ground, laid, motif } = laying;
   const { pieces, failed } = made;
   const byUnit = new Map(motif.map(({ unit }) => [unit.id, 0]));
+  const bySecondTone = new Map<string, number>();
   const sawnFrom = new Int32Array(pieces.length);
   let wholeUnits = 0;
   let leastUnits = 0;
@@ -120,6 +125,7 @@ export function cutReport(
     wholeUnits += nested.units.length;
     leastUnits += nested.leastUnits;
     byUnit.set(kind.unit, byUnit.get(kind.unit)! + nested.units.length);
+    if (kind.tone === 1) bySecondTone.set(kind.unit, nested.units.length);
     sawn += nested.units.length * 4 * shapes[0].half[0] * shapes[0].half[1];
   }
   const area = pieces.reduce((sum, piece) => sum + piece.area, 0);
@@ -137,6 +143,7 @@ export function cutReport(
     fillArea: (ground.area - covered) / MM2_PER_M2 - area,
     wholeUnits,
     byUnit: Object.fromEntries(byUnit),
+    bySecondTone: Object.fromEntries(bySecondTone),
     leastUnits,
     waste: sawn / MM2_PER_M2 - area,
     sawLength,
