@@ -5,7 +5,8 @@ import {
   type ItemFields,
 } from '@/api-types/catalogue';
 import { parseLength } from '@/paving/length';
-import { currencyExponent, parseMoney } from '@/takeoff/money';
+import { parseMoney } from '@/takeoff/money';
+import { moneyFigures } from '@/takeoff/money-figures';
 import { textCellRead, textCellWritten } from '@/takeoff/text-cell';
 
 /** One row of a catalogue's file, as far as it can be read. */
@@ -88,13 +89,6 @@ const number = (field: Numbers, read: (cell: string) => Cell = numberRead) => ({
   write: (row: CatalogueRow) => (row[field] === null ? '' : String(row[field])),
 });
 
-/** Minor units with the currency's point, such as `12.50`. */
-const moneyWritten = (minor: number, currency: string): string => {
-  const exponent = currencyExponent(currency);
-  const digits = String(minor).padStart(exponent + 1, '0');
-  return exponent === 0 ? digits : `${digits.slice(0, -exponent)}.${digits.slice(-exponent)}`;
-};
-
 export const COLUMNS: readonly Column[] = [
   {
     heading: 'Kind',
@@ -134,7 +128,7 @@ export const COLUMNS: readonly Column[] = [
       const parsed = parseMoney(cell, currency);
       return parsed.ok ? value(parsed.minor) : wrong(`“${cell}” is not a price. ${parsed.message}`);
     },
-    write: (row, currency) => (row.price ? moneyWritten(row.price.costMinor, currency) : ''),
+    write: (row, currency) => (row.price ? moneyFigures(row.price.costMinor, currency) : ''),
   },
   {
     heading: 'Price from',

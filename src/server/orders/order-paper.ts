@@ -3,7 +3,8 @@ import Papa from 'papaparse';
 import type { PurchaseOrder, SentOrder } from '@/api-types/purchase-orders';
 import { suppliers } from '@/db/schema';
 import { orderSheets, type OrderPaper } from '@/sheets/order-sheet';
-import { currencyExponent, moneyTimes, PLAIN_ROUNDING } from '@/takeoff/money';
+import { moneyTimes, PLAIN_ROUNDING } from '@/takeoff/money';
+import { moneyFigures } from '@/takeoff/money-figures';
 import { textCellWritten } from '@/takeoff/text-cell';
 import { pricingOf } from '../catalogue/pricing-settings';
 import type { Db } from '../database';
@@ -80,12 +81,6 @@ export const orderPdf = (order: OnPaper): Promise<Uint8Array<ArrayBuffer>> =>
     author: order.firm.name,
   });
 
-const moneyCell = (minor: number, currency: string): string => {
-  const exponent = currencyExponent(currency);
-  const digits = String(minor).padStart(exponent + 1, '0');
-  return exponent === 0 ? digits : `${digits.slice(0, -exponent)}.${digits.slice(-exponent)}`;
-};
-
 const HEADINGS = [
   'Order',
   'Date',
@@ -115,10 +110,10 @@ export const orderCsv = (order: OnPaper): string => {
     textCellWritten(pack.name),
     String(pack.holds),
     pack.measure,
-    costMinor === null ? '' : moneyCell(costMinor, order.currency),
+    costMinor === null ? '' : moneyFigures(costMinor, order.currency),
     costMinor === null
       ? ''
-      : moneyCell(moneyTimes(amount, costMinor, PLAIN_ROUNDING.rule), order.currency),
+      : moneyFigures(moneyTimes(amount, costMinor, PLAIN_ROUNDING.rule), order.currency),
     order.currency,
   ]);
   return `\ufeff${Papa.unparse({ fields: HEADINGS, data: rows }, { newline: '\r\n' })}\r\n`;
