@@ -44,7 +44,7 @@ declare module 'jsts/org/locationtech/jts/operation/buffer/BufferOp.js' {
   import type { Geometry } from 'jsts/org/locationtech/jts/geom/GeometryFactory.js';
   import type BufferParameters from 'jsts/org/locationtech/jts/operation/buffer/BufferParameters.js';
   const BufferOp: {
-    bufferOp(geometry: Geometry, distance: number, how: BufferParameters): Geometry;
+    bufferOp(geometry: Geometry, distance: number, how: BufferParameters | number): Geometry;
   };
   export default BufferOp;
 }
@@ -60,13 +60,6 @@ declare module 'jsts/java/util/ArrayList.js' {
   export default class ArrayList {
     add(item: unknown): boolean;
   }
-}
-declare module 'jsts/org/locationtech/jts/operation/buffer/BufferOp.js' {
-  import type { Geometry } from 'jsts/org/locationtech/jts/geom/GeometryFactory.js';
-  const BufferOp: {
-    bufferOp(geometry: Geometry, distance: number, quadrantSegments: number): Geometry;
-  };
-  export default BufferOp;
 }
 declare module 'jsts/org/locationtech/jts/algorithm/MinimumDiameter.js' {
   import type { Geometry } from 'jsts/org/locationtech/jts/geom/GeometryFactory.js';
