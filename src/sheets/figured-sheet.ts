@@ -28,8 +28,8 @@ export interface FiguredContent {
 
 /** White space round the ground for a line of dimensions and the corners' letters, mm. */
 const DIMENSION_MARGIN = 15;
-const COLUMN_WIDTH = 66;
-const COLUMN_INSET = 3;
+export const COLUMN_WIDTH = 66;
+export const COLUMN_INSET = 3;
 /** A portrait sheet's band of columns may take at most this share of the frame where it holds all. */
 const GREATEST_BAND = 0.55;
 /** The lowest band of columns, mm. */
@@ -188,15 +188,15 @@ function portraitArrangements(
 }
 
 /** The panel on the first sheet's columns, and on as many further sheets as it takes. */
-function panelsFlowed(
+export function panelsFlowed(
   rows: readonly PanelRow[],
   columns: readonly PanelColumn[],
   paper: Paper,
-): readonly FlowedPanel[] {
+): readonly (FlowedPanel & { readonly columns: readonly PanelColumn[] })[] {
   const further = furtherColumns(paper, boxWidth(columns[0].box));
-  const panels = [panelFlowed(rows, columns)];
+  const panels = [{ ...panelFlowed(rows, columns), columns }];
   for (let { rest } = panels[0]; rest.length > 0;) {
-    const next = panelFlowed(rest, further);
+    const next = { ...panelFlowed(rest, further), columns: further };
     if (next.rest.length === rest.length)
       throw new Error('A row of the panel is higher than a whole sheet.');
     panels.push(next);
@@ -216,10 +216,8 @@ export function figuredDrafts(
   const drawn = content.draw(viewCentred(content.bounds, scale, drawing), inside);
   const columnWidth = boxWidth(columns[0].box);
   const panels = panelsFlowed(drawn.rows(columnWidth), columns, paper);
-  const further = furtherColumns(paper, columnWidth);
   return panels.map((panel, n): SheetDraft => {
     const title = n === 0 ? arrangement.title : footStrip(paper);
-    const used = n === 0 ? columns : further;
     return {
       kind: named.kind,
       type: n === 0 ? named.type : `${named.type}: tables`,
@@ -228,7 +226,7 @@ export function figuredDrafts(
       title,
       frames: {
         drawing: inside,
-        ...Object.fromEntries(used.map(({ frame, box }) => [frame, box])),
+        ...Object.fromEntries(panel.columns.map(({ frame, box }) => [frame, box])),
       },
       layers: [...(n === 0 ? drawn.layers : []), { name: 'panel', commands: panel.commands }],
       rules:

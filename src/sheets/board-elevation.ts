@@ -6,7 +6,7 @@ import { tick } from './edge-dimensions';
 import { figureText } from './figures';
 import { INK, PAPER, inkMix } from './inks';
 import { panelText } from './panel';
-import { LETTERING, textFitted, textWidth } from './text-measure';
+import { LETTERING, textWidth } from './text-measure';
 
 const FRAME = 'section';
 

@@ -5,8 +5,8 @@ import { PENS, boxRing, boxWidth } from './drawing';
 import { baselineCentred, tick } from './edge-dimensions';
 import { figureText, lengthText } from './figures';
 import { INK, PAPER, inkMix } from './inks';
-import { panelText } from './panel';
-import { LETTERING, textFitted, textWidth } from './text-measure';
+import { LINE_PITCH, panelText } from './panel';
+import { LETTERING, textLines, textWidth } from './text-measure';
 
 /** What lies under a floor, from the top; thickness null: not entered yet. */
 export interface SectionLayer {
@@ -104,7 +104,7 @@ export function sectionDrawing(
   }
   const nameLeft = right + 12;
   const names = [
-    { text: 'Top of the edge, as built: the datum', y: datum, x: edgeRight - 0.5 },
+    { text: 'Datum: the edge’s top, as built', y: datum, x: edgeRight - 0.5 },
     ...placed.map(({ layer, top, bottom }) => ({
       text: layerName(layer, display),
       y: (top + bottom) / 2,
@@ -156,7 +156,7 @@ function unitRow(
   return commands;
 }
 
-/** Marks spread as a low-discrepancy sequence spreads points: stones for a base, dots for finer stuff. */
+/** Marks on a grid, each shaken off its place the same way every time: stones for a base, dots for finer stuff. */
 function grain(
   left: number,
   right: number,
@@ -164,23 +164,24 @@ function grain(
   bottom: number,
   coarse: boolean,
 ): DrawCommand {
-  const [width, height] = [right - left, bottom - top];
-  const count = Math.floor((width * height) / (coarse ? 7 : 3.2));
-  const size = coarse ? 0.9 : 0.22;
+  const [pitch, size] = coarse ? [3, 0.9] : [1.5, 0.22];
+  const shaken = (n: number) => ((Math.sin(n * 12.9898) * 43758.5453) % 1) * 0.5 * pitch;
   const rings: PathRing[] = [];
-  for (let n = 0; n < count; n += 1) {
-    const x = left + size + (width - 2 * size) * ((0.5 + n * 0.7548776662466927) % 1);
-    const y = top + size + (height - 2 * size) * ((0.5 + n * 0.5698402909980532) % 1);
-    if (height < 2 * size) continue;
-    rings.push({
-      points: [
-        [x - size, y + size * 0.7],
-        [x + size, y + size * 0.5],
-        [x + size * 0.1, y - size * 0.8],
-      ],
-      closed: true,
-    });
-  }
+  let n = 0;
+  for (let row = top + pitch / 2; row < bottom; row += pitch)
+    for (let column = left + pitch / 2; column < right; column += pitch) {
+      n += 2;
+      const [x, y] = [column + shaken(n), row + shaken(n + 1)];
+      if (x < left + size || x > right - size || y < top + size || y > bottom - size) continue;
+      rings.push({
+        points: [
+          [x - size, y + size * 0.7],
+          [x + size, y + size * 0.5],
+          [x + size * 0.1, y - size * 0.8],
+        ],
+        closed: true,
+      });
+    }
   return coarse
     ? { kind: 'path', rings, stroke: { width: PENS.fine, colour: INK } }
     : { kind: 'path', rings, fill: INK };
@@ -250,25 +251,25 @@ function dimension(
   ];
 }
 
-/** Names one under another, each with a line to what it names. */
+/** Names one under another, in two lines where they must, each with a line to what it names. */
 function leaders(
   names: readonly { readonly text: string; readonly x: number; readonly y: number }[],
   left: number,
   width: number,
 ): readonly DrawCommand[] {
-  const PITCH = 5.2;
+  const SPACE = 1.2;
+  const stroke = { width: PENS.fine, colour: INK };
   let lowest = -Infinity;
   return names.flatMap(({ text, x, y }) => {
-    const at = Math.max(y, lowest + PITCH);
-    lowest = at;
-    const stroke = { width: PENS.fine, colour: INK };
+    const lines = textLines(text, width - 1, LETTERING.small);
+    const half = (lines.length * LINE_PITCH) / 2;
+    const at = Math.max(y, lowest + half);
+    lowest = at + half + SPACE;
     return [
       { kind: 'line', from: [x, y], to: [left - 6, y], stroke },
       { kind: 'line', from: [left - 6, y], to: [left - 1.2, at], stroke },
-      panelText(
-        [left, at + LETTERING.small / 2],
-        textFitted(text, width - 1, LETTERING.small),
-        FRAME,
+      ...lines.map((line, n) =>
+        panelText([left, at - half + (n + 0.5) * LINE_PITCH + LETTERING.small / 2], line, FRAME),
       ),
     ] as readonly DrawCommand[];
   });

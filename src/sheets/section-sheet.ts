@@ -1,0 +1,214 @@
+import type { Fall } from '@/paving/levels';
+import { documentLevels } from '@/paving/levels';
+import { pegLevels } from '@/takeoff/peg-levels';
+import { screedBoard } from '@/takeoff/screed-board';
+import { floorCautions } from './cautions';
+import type { PaperBox } from './drawing';
+import { boxInset } from './drawing';
+import { COLUMN_INSET, COLUMN_WIDTH, panelsFlowed } from './figured-sheet';
+import { countText, figureText, lengthText } from './figures';
+import { markRows } from './mark-row';
+import type { PanelColumn, PanelRow } from './panel';
+import { headingRow, itemRow, keptTogether, pairRow, textRows } from './panel';
+import type { PaperName } from './paper';
+import { paperOf } from './paper';
+import type { PlanInput } from './plan-input';
+import type { TableColumn } from './ruled-table';
+import { ruledTable } from './ruled-table';
+import { scaleFitting, scaleName } from './scales';
+import { screedDrawing } from './board-elevation';
+import { layerHeight, sectionDrawing, sectionLayers } from './build-up-section';
+import type { SheetDraft } from './sheet-draft';
+import { footStrip, rule } from './sheet-draft';
+import { tableDrafts } from './table-sheet';
+
+/** Most of the drawing's height that the section takes; the screed board has the rest. */
+const SECTION_SHARE = 0.56;
+
+/** Section: the build-up figured, the screed board, and levels at pegs where levels are entered. */
+export function sectionDrafts(input: PlanInput, name: PaperName): readonly SheetDraft[] {
+  const { document, motif } = input.laying;
+  const paper = paperOf(name, 'landscape');
+  const title = footStrip(paper);
+  const split = paper.frame.right - COLUMN_WIDTH;
+  const drawing: PaperBox = boxInset({ ...paper.frame, right: split, bottom: title.top }, 3);
+  const unit = motif.reduce(
+    (one, { unit: other }) => (other.thickness > one.thickness ? other : one),
+    motif[0].unit,
+  );
+  const high = (drawing.bottom - drawing.top) * SECTION_SHARE;
+  const depth = sectionLayers(document, unit).reduce((sum, layer) => sum + layerHeight(layer), 0);
+  const { finish } = documentLevels(document);
+  const scale = scaleFitting(depth + Math.abs(finish), 1, high - 14, 1);
+  const columns: readonly PanelColumn[] = [
+    {
+      frame: 'column 1',
+      box: boxInset(
+        { left: split, top: paper.frame.top, right: paper.frame.right, bottom: title.top },
+        COLUMN_INSET,
+      ),
+    },
+  ];
+  const width = COLUMN_WIDTH - 2 * COLUMN_INSET;
+  const [first, ...further] = panelsFlowed(sectionRows(input, scale, width), columns, paper);
+  const board = { ...drawing, top: drawing.top + high + 4 };
+  const rules = [rule([title.left, title.top], [title.right, title.top])];
+  const common = { kind: 'section' as const, paper, title, scale };
+  return [
+    {
+      ...common,
+      type: 'Section',
+      frames: { section: drawing, 'column 1': columns[0].box },
+      layers: [
+        {
+          name: 'section',
+          commands: sectionDrawing(document, unit, scale, {
+            ...drawing,
+            bottom: drawing.top + high,
+          }),
+        },
+        {
+          name: 'screed board',
+          commands: screedDrawing(screedBoard(document), document.display, board),
+        },
+        { name: 'panel', commands: first.commands },
+      ],
+      rules: [...rules, rule([split, paper.frame.top], [split, title.top])],
+    },
+    ...further.map(({ commands, columns: used }): SheetDraft => ({
+      ...common,
+      type: 'Section: tables',
+      frames: Object.fromEntries(used.map(({ frame, box }) => [frame, box])),
+      layers: [{ name: 'panel', commands }],
+      rules,
+    })),
+    ...pegDrafts(input, name),
+  ];
+}
+
+function sectionRows(input: PlanInput, scale: number, width: number): readonly PanelRow[] {
+  const { document } = input.laying;
+  const { display, buildUp } = document;
+  const { finish, fall, proud } = documentLevels(document);
+  const board = screedBoard(document);
+  const length = (mm: number) => lengthText(mm, display, 1);
+  const pair = (words: string, value: string) => pairRow(words, value, width);
+  const unknown = 'not entered yet';
+  return [
+    ...markRows(input, width),
+    headingRow(`Build-up, section ${scaleName(scale)}`, width),
+    ...document.units
+      .filter(({ id }) => (input.report.byUnit[id] ?? 0) > 0)
+      .map(({ name, thickness }) => pair(name, length(thickness))),
+    pair('Bedding', buildUp ? length(buildUp.bedding) : unknown),
+    pair('Base', buildUp ? length(buildUp.base) : unknown),
+    pair('Geotextile', buildUp ? (buildUp.geotextile ? 'yes' : 'none') : unknown),
+    ...(buildUp ? [pair('Dig beyond the edge', length(buildUp.overdig))] : []),
+    headingRow('Finish', width),
+    ...(document.levels
+      ? [
+          ...textRows(`${finishWords(finish, display)} ${fallWords(fall)}`, width),
+          ...(proud > 0
+            ? textRows(`Lay the units ${length(proud)} proud: compaction takes them down.`, width)
+            : []),
+        ]
+      : textRows('Levels are not entered yet: drawn flat, flush with the edge.', width)),
+    headingRow('Screed board', width),
+    pair('Pulled', pullWords(board.pullDeg)),
+    pair(
+      board.passes > 1 ? `Strips, of ${countText(board.passes)}` : 'Clear width',
+      length(board.bayWidth),
+    ),
+    pair('Board', length(board.boardLength)),
+    pair('Lower edge below the ears', length(board.depth)),
+    pair('Rides on', board.rides === 'edge' ? 'the edge' : 'rails at the finish'),
+    ...(board.rails > 0 ? [pair('Rails to set', countText(board.rails))] : []),
+    ...keptTogether(
+      [
+        headingRow('Take care', width),
+        ...floorCautions(document, input.report)
+          .filter((text) => /dig|compactor|Frost|Figures/i.test(text))
+          .map((text) => itemRow(text, width)),
+      ],
+      'wished',
+    ),
+  ];
+}
+
+function finishWords(finish: number, display: 'metric' | 'imperial'): string {
+  if (Math.abs(finish) < 0.05) return 'Flush with the top of the edge.';
+  const off = lengthText(Math.abs(finish), display, 1);
+  return `${off} ${finish < 0 ? 'below' : 'above'} the top of the edge where it is highest.`;
+}
+
+/** Directions of the plan as it is drawn: y is up. */
+function fallWords(fall: Fall): string {
+  const percent = 'percent' in fall ? `${Math.round(fall.percent * 100) / 100}\u2009%` : '';
+  switch (fall.kind) {
+    case 'none':
+      return 'No fall: level all over.';
+    case 'oneWay':
+      return `Falls ${percent} one way, ${pullWords(fall.direction, true)} on the plan.`;
+    case 'toPoint':
+      return `Falls ${percent} from all sides to one point.`;
+    case 'toLine':
+      return `Falls ${percent} from both sides to a line.`;
+  }
+}
+
+/** `left to right`, `up` …, or the angle from the plan's foot. */
+function pullWords(degrees: number, oneWay = false): string {
+  const angle = (((Math.round(degrees * 10) / 10) % 360) + 360) % 360;
+  const ways: Readonly<Record<number, string>> = oneWay
+    ? { 0: 'to the right', 90: 'upwards', 180: 'to the left', 270: 'downwards' }
+    : { 0: 'left to right', 90: 'bottom to top', 180: 'left to right', 270: 'bottom to top' };
+  return ways[angle] ?? `${angle}° anticlockwise from the right`;
+}
+
+/** Levels at pegs, where there are levels and a build-up to reckon them from. */
+function pegDrafts(input: PlanInput, name: PaperName): readonly SheetDraft[] {
+  const { document } = input.laying;
+  const { display } = document;
+  if (!document.levels || !document.buildUp) return [];
+  const pegs = pegLevels(document);
+  const existing = pegs.some((peg) => peg.existing !== null);
+  const columns: readonly TableColumn[] = [
+    { title: 'Peg', align: 'start', weight: 600 },
+    { title: 'Where', align: 'start', grow: 1 },
+    { title: 'Finish', align: 'end', weight: 600 },
+    { title: 'Units as laid', align: 'end' },
+    { title: 'Bedding screeded', align: 'end' },
+    { title: 'Base', align: 'end' },
+    { title: 'Bottom of dig', align: 'end', weight: 600 },
+    ...(existing
+      ? [
+          { title: 'Ground now', align: 'end' as const },
+          { title: 'Dig', align: 'end' as const },
+        ]
+      : []),
+    { title: 'Measured', align: 'middle' },
+  ];
+  const figure = (mm: number | null) => (mm === null ? '–' : figureText(mm, display));
+  const where = { corner: 'corner of the edge', low: 'lowest', high: 'highest' } as const;
+  const rows = pegs.map((peg) => [
+    peg.name,
+    where[peg.kind],
+    figure(peg.finish),
+    figure(peg.laid),
+    figure(peg.screeded),
+    figure(peg.base),
+    figure(peg.formation),
+    ...(existing ? [figure(peg.existing), figure(peg.dig)] : []),
+    { write: true } as const,
+  ]);
+  return tableDrafts(
+    {
+      kind: 'section',
+      type: 'Levels at pegs',
+      title: `Levels at pegs, above the edge’s top${display === 'metric' ? ', in mm' : ''}`,
+      sections: (width) => [ruledTable(columns, rows, width)],
+    },
+    input,
+    name,
+  );
+}
