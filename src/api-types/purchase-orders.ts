@@ -6,7 +6,7 @@ import type { FirmOnPaper, VersionOnPaper } from './quotes';
 
 export const purchaseLineSchema = z.object({
   /** Of the take-off's order that it serves, or one of its own. */
-  id: z.string().min(1).max(80),
+  id: z.string().min(1).max(200),
   /** The catalogue's entry; null for a line written by hand. */
   itemId: z.string().max(64).nullable(),
   name: z

@@ -23,7 +23,7 @@ const amount = z
   .max(10_000_000, 'That is over ten million');
 
 export const quoteLineSchema = z.object({
-  id: z.string().min(1).max(80),
+  id: z.string().min(1).max(200),
   group: z.enum(quoteGroups, { error: 'Choose materials, labour or other' }),
   name: z
     .string({ error: 'Name the line' })

@@ -1,5 +1,5 @@
 import type { FieldProblem } from '@/api-types/problem';
-import { layFloor } from '@/paving/laying';
+import { layFloor, type Laying } from '@/paving/laying';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { parseLayoutDocument } from '@/paving/layout-validation';
 import { floorReport, type Report } from '@/paving/report';
@@ -8,6 +8,7 @@ import { done, invalid, type Outcome } from './outcomes';
 export interface ReportedFloor {
   /** As parsed: with defaults filled in and rings anticlockwise. */
   readonly document: LayoutDocument;
+  readonly laying: Laying;
   readonly report: Report;
 }
 
@@ -18,5 +19,7 @@ export const reportOn = (input: unknown): Outcome<ReportedFloor> => {
     const errors: FieldProblem[] = parsed.problems.map((problem) => ({ ...problem }));
     return invalid('This layout cannot be laid as it stands.', errors);
   }
-  return done({ document: parsed.document, report: floorReport(layFloor(parsed.document)) });
+  const { document } = parsed;
+  const laying = layFloor(document);
+  return done({ document, laying, report: floorReport(laying) });
 };

@@ -15,6 +15,7 @@ import { newId } from './ids';
 import { seenLayout } from './layouts';
 import { changedMeanwhile, done, notFound, type Outcome } from './outcomes';
 import type { Actor } from './permissions';
+import { freezePricing, pricedFloor } from './pricing/version-pricing';
 import { touchProject } from './projects';
 import { reportOn } from './reports';
 import { byCreator, summaryColumns, summaryOf } from './version-rows';
@@ -118,8 +119,8 @@ const movedOn = () =>
   );
 
 /**
- * Freezes the stored draft, if it is still at `baseRevision`. The report is computed here, from the
- * document, before the draft is locked; the lock then makes sure that the draft is still the one
+ * Freezes the stored draft, if it is still at `baseRevision`, with its take-off and the prices it was reckoned with. All of it
+ * is computed here, from the document, before the draft is locked; the lock then makes sure that the draft is still the one
  * reported on, and that no two versions get one number.
  */
 export const saveVersion = async (
@@ -137,6 +138,7 @@ export const saveVersion = async (
   const reported = reportOn(draft.document);
   if (!reported.ok) return reported;
   const { document, report } = reported.value;
+  const priced = await pricedFloor(db, actor.firmId, reported.value);
 
   const saved = await db.transaction(async (tx): Promise<Outcome<string>> => {
     const locked = await lockDraft(tx, actor, layoutId);
@@ -161,6 +163,7 @@ export const saveVersion = async (
       requestId: input.requestId ?? null,
       createdBy: actor.personId,
     });
+    await freezePricing(tx, actor.firmId, id, priced);
     await addVersionEvent(tx, actor, id, 'saved', '');
     await recordAudit(tx, actor, 'version.saved', { type: 'version', id }, { layoutId });
     await tx.update(drafts).set({ basedOnVersion: id }).where(ofDraft(actor, layoutId));

@@ -1,7 +1,7 @@
 import { amountText } from '@/takeoff/amount-text';
 import { dayText } from '@/takeoff/day-text';
 import { formatMoney, moneyTimes, PLAIN_ROUNDING } from '@/takeoff/money';
-import { packWords } from '@/takeoff/pack-words';
+import { boughtAs } from '@/takeoff/bought-as';
 import type { PriceItem } from '@/takeoff/price-list';
 import { businessSheets, type BusinessPaper, type PaperPart } from './business-paper';
 import type { Sheet } from './sheet';
@@ -63,7 +63,7 @@ export function orderSheets(order: OrderPaper): readonly Sheet[] {
           name,
           ...(coded ? [code] : []),
           amountText(amount),
-          packWords(pack),
+          boughtAs(pack),
           ...(priced
             ? costMinor === null
               ? ['–', '–']

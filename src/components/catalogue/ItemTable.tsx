@@ -2,7 +2,7 @@ import { createColumnHelper, tableFeatures, useTable } from '@tanstack/react-tab
 import { Fragment, type ReactNode } from 'react';
 import type { CatalogueItem, ItemSort } from '@/api-types/catalogue';
 import { formatMoney } from '@/takeoff/money';
-import { packWords } from '@/takeoff/pack-words';
+import { boughtAs } from '@/takeoff/bought-as';
 import type { Display } from '@/paving/length';
 import { dayText } from '@/takeoff/day-text';
 import { Moment } from '../ui/Moment';
@@ -63,7 +63,7 @@ const columns = (props: Props) =>
               .join(' · ')}
           </p>
           <p className="text-sm text-slate sm:hidden">
-            {packWords({
+            {boughtAs({
               name: item.packName,
               holds: item.packHolds,
               measure: item.packMeasure,
@@ -83,7 +83,7 @@ const columns = (props: Props) =>
       id: 'pack',
       header: 'Bought as',
       cell: ({ row: { original: item } }) =>
-        packWords({
+        boughtAs({
           name: item.packName,
           holds: item.packHolds,
           measure: item.packMeasure,

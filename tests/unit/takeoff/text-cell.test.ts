@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { amountText } from '@/takeoff/amount-text';
-import { packWords } from '@/takeoff/pack-words';
+import { boughtAs } from '@/takeoff/bought-as';
 import { textCellRead, textCellWritten } from '@/takeoff/text-cell';
 
 describe('text in a cell of a spreadsheet', () => {
@@ -47,7 +47,7 @@ test('amounts are written to a thousandth without noughts at the end', () => {
 
 test('packs are said as they are bought', () => {
   const pack = (name: string, holds: number, measure: 'each' | 't') =>
-    packWords({ name, holds, measure, whole: true });
+    boughtAs({ name, holds, measure, whole: true });
   expect(pack('each', 1, 'each')).toBe('each');
   expect(pack('pallet', 288, 'each')).toBe('pallet of 288');
   expect(pack('bulk bag', 0.8, 't')).toBe('bulk bag of 0.8\u202ft');
