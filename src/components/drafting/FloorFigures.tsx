@@ -156,6 +156,9 @@ function problemSubject({ ground, units }: LayoutDocument, path: DocumentProblem
       : 'The bond';
   if (part === 'clearance') return 'The clearance';
   if (part === 'placement') return 'The start';
+  if (part === 'levels')
+    return second === 'spots' && typeof index === 'number' ? `Spot ${index + 1}` : 'The fall';
+  if (part === 'buildUp') return 'A layer';
   return 'The floor';
 }
 

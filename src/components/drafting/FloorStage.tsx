@@ -11,6 +11,7 @@ import {
   groundFromScreen,
   screenFromGround,
 } from './camera';
+import { createPieceKeeper, type PieceKeeper } from './cutting/shown-pieces';
 import { createFloorCache, type FloorCache } from './floor-cache';
 import { floorOf } from './floor';
 import { paintOverlay } from './overlay-picture';
@@ -23,6 +24,7 @@ import { createEditRing, edgeNearest } from './tools/edit-ring';
 import { createHoldEdge } from './tools/hold-edge';
 import { createLiftUnit } from './tools/lift-unit';
 import { createSlidePattern } from './tools/slide-pattern';
+import { createPlacePoint, createSpotLevels } from './tools/spot-levels';
 import { CLICK_SLACK_PX, screenDistance, type TablePointer, type Tool } from './tools/tool';
 
 const createTools = (): Record<ToolName, Tool> => ({
@@ -32,6 +34,8 @@ const createTools = (): Record<ToolName, Tool> => ({
   lift: createLiftUnit(),
   align: createAlignToEdge(),
   hold: createHoldEdge(),
+  spot: createSpotLevels(),
+  place: createPlacePoint(),
 });
 
 /** Below this width the buttons take room from the drawing, px. */
@@ -72,7 +76,7 @@ const LIGHT_PX = 26;
 /** Lights the spot of the edge that a pointer is near to. */
 function lightEdge(table: TableStore, pointer: TablePointer | null) {
   const state = table.getState();
-  if (!pointer || !state.camera || state.drawing || state.step === 'ground') {
+  if (!pointer || !state.camera || state.drawing || ['ground', 'levels'].includes(state.step)) {
     if (state.lit) state.set({ lit: null });
     return;
   }
@@ -94,6 +98,7 @@ export default function FloorStage({ label }: { label: string }) {
   const floorLayer = useRef<Konva.Layer>(null);
   const overlayLayer = useRef<Konva.Layer>(null);
   const cache = useRef<FloorCache | null>(null);
+  const pieces = useRef<PieceKeeper | null>(null);
   const [colours, setColours] = useState<DrawingColours | null>(null);
   const size = useTable((state) => state.size);
 
@@ -119,6 +124,7 @@ export default function FloorStage({ label }: { label: string }) {
 
   useEffect(() => {
     cache.current = createFloorCache(() => floorLayer.current?.batchDraw());
+    pieces.current = createPieceKeeper(() => floorLayer.current?.batchDraw());
     const drawn = table.subscribe((now, before) => {
       if (
         now.camera !== before.camera ||
@@ -131,6 +137,7 @@ export default function FloorStage({ label }: { label: string }) {
     return () => {
       drawn();
       cache.current?.dispose();
+      pieces.current?.dispose();
     };
   }, [table]);
 
@@ -163,14 +170,16 @@ export default function FloorStage({ label }: { label: string }) {
                 const document = shownDocument(state);
                 const ctx = context._context as CanvasRenderingContext2D;
                 if (state.drawing?.target === 'perimeter') ctx.globalAlpha = 0.25;
+                const { laying } = floorOf(document);
                 cache.current?.paint(
                   ctx,
                   document,
-                  floorOf(document).laying,
+                  laying,
                   state.camera,
                   state.size,
                   colours,
                   window.devicePixelRatio || 1,
+                  pieces.current?.of(laying),
                 );
                 ctx.globalAlpha = 1;
               }}

@@ -24,11 +24,36 @@ function once<T>(make: () => T): () => T {
   return () => (made ??= { value: make() }).value;
 }
 
+/** What the laying depends on; a change of anything else leaves every unit where it is. */
+const LAID_BY = [
+  'ground',
+  'units',
+  'bond',
+  'placement',
+  'clearance',
+  'lifted',
+  'cutting',
+  'tones',
+] as const satisfies readonly (keyof LayoutDocument)[];
+
+let lastLaid: { readonly document: LayoutDocument; readonly laying: Laying } | null = null;
+
+/** The laying of `parsed`, which `document` passed as: that laid last, where only levels or notes differ. */
+function layingOf(document: LayoutDocument, parsed: LayoutDocument): Laying {
+  const last = lastLaid;
+  const laying =
+    last && LAID_BY.every((key) => last.document[key] === document[key])
+      ? { ...last.laying, document: parsed }
+      : layFloor(parsed);
+  lastLaid = { document, laying };
+  return laying;
+}
+
 export function floorOf(document: LayoutDocument): Floor {
   const known = floors.get(document);
   if (known) return known;
   const parsed = parseLayoutDocument(document);
-  const laying = once(() => (parsed.ok ? layFloor(parsed.document) : null));
+  const laying = once(() => (parsed.ok ? layingOf(document, parsed.document) : null));
   const from = <T>(make: (laying: Laying) => T, without: T) =>
     once(() => {
       const laid = laying();

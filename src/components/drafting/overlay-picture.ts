@@ -9,81 +9,16 @@ import {
   vertexPoint,
 } from '@/paving/ground-edits';
 import { cornerName, keepOutName } from '@/paving/edge-names';
-import type { LayoutDocument } from '@/paving/layout-document';
 import { formatLength } from '@/paving/length';
 import { unitCorners } from '@/paving/laying';
 import type { DrawingColours } from '../ui/drawing-colours';
-import { screenFromGround, type Camera, type ScreenSize } from './camera';
 import { dimensionLines } from './dimension-lines';
 import type { Floor } from './floor';
+import { paintLevelMarks, paintLevels } from './levels-picture';
+import { boxedText, dot, FONT, path, screen, segment, type Ink } from './overlay-ink';
 import { edgeOutline, ringOutline } from './ring-outline';
 import { shownDocument, type Pick, type TableState } from './table-store';
 import { turnHandle } from './tools/slide-pattern';
-
-/** What an overlay routine draws with. */
-interface Ink {
-  readonly ctx: CanvasRenderingContext2D;
-  readonly colours: DrawingColours;
-  readonly camera: Camera;
-  readonly size: ScreenSize;
-  readonly document: LayoutDocument;
-}
-
-const FONT = "'Nunito Sans', sans-serif";
-
-const screen = (ink: Ink, point: Point): Point => screenFromGround(ink.camera, ink.size, point);
-
-function path(ink: Ink, points: readonly Point[], closed: boolean) {
-  ink.ctx.beginPath();
-  points.forEach((point, n) => {
-    const [x, y] = screen(ink, point);
-    if (n === 0) ink.ctx.moveTo(x, y);
-    else ink.ctx.lineTo(x, y);
-  });
-  if (closed) ink.ctx.closePath();
-}
-
-function segment(ctx: CanvasRenderingContext2D, a: Point, b: Point) {
-  ctx.beginPath();
-  ctx.moveTo(a[0], a[1]);
-  ctx.lineTo(b[0], b[1]);
-  ctx.stroke();
-}
-
-function dot(
-  ctx: CanvasRenderingContext2D,
-  [x, y]: Point,
-  radius: number,
-  fill: string,
-  stroke?: string,
-) {
-  ctx.beginPath();
-  ctx.arc(x, y, radius, 0, 2 * Math.PI);
-  ctx.fillStyle = fill;
-  ctx.fill();
-  if (stroke) {
-    ctx.strokeStyle = stroke;
-    ctx.lineWidth = 1.5;
-    ctx.stroke();
-  }
-}
-
-/** Text in a box of the page's colour, so that it reads over whatever lies below. */
-function boxedText(ink: Ink, text: string, at: Point, angle: number, colour: string, weight = 400) {
-  const { ctx } = ink;
-  ctx.save();
-  ctx.translate(at[0], at[1]);
-  ctx.rotate(angle);
-  ctx.font = `${weight} 12.5px ${FONT}`;
-  ctx.textAlign = 'center';
-  ctx.textBaseline = 'middle';
-  const width = ctx.measureText(text).width + 10;
-  ctx.fillStyle = ink.colours.stone50;
-  ctx.fillRect(-width / 2, -9, width, 18);
-  ctx.fillStyle = colour;
-  ctx.fillText(text, 0, 0.5);
-  ctx.restore();
-}
 
 function paintRings(ink: Ink) {
   const { ctx, document, colours } = ink;
@@ -480,16 +415,19 @@ export function paintOverlay(
   };
   const editing = state.step === 'ground';
   const replacing = state.drawing?.target === 'perimeter';
+  const levelling = state.step === 'levels';
   ctx.save();
   ctx.globalAlpha = replacing ? 0.25 : 1;
+  if (levelling) paintLevels(ink, state, floor);
   paintRings(ink);
   const taken: Taken = [];
-  for (let ring = 0; ring < documentRingCount(ink.document); ring++)
+  for (let ring = 0; ring < documentRingCount(ink.document) && !levelling; ring++)
     paintDimensions(ink, ring, editing ? state.pick : null, taken);
   paintLetters(ink);
   ctx.globalAlpha = 1;
   if (state.step === 'fit' && !state.preview && state.tool !== 'align' && state.tool !== 'hold')
     paintLeastGap(ink, floor);
+  if (levelling) paintLevelMarks(ink, state, floor);
   if (editing && !state.drawing) paintHandles(ink, state);
   if ((state.tool === 'align' || state.tool === 'hold') && state.hover)
     paintPick(ink, state.hover, false);

@@ -12,6 +12,7 @@ import {
   pickNudged,
   pickStepped,
 } from './ground-actions';
+import { placingLeft, spotNudged, spotPlacedInView, spotStepped, spotTaken } from './level-actions';
 import { nudge } from './nudge';
 import { STEPS, type TableStore } from './table-store';
 import { chosenUnitToggled, unitChosen } from './tools/lift-unit';
@@ -65,6 +66,15 @@ export const KEY_LIST: readonly (readonly [
       ['[  ]', 'Turn 1°; with Shift 15°'],
       ['L', 'Lift units, or slide the pattern; arrows choose one, Enter lifts it'],
       ['A', 'Start a row along an edge'],
+    ],
+  ],
+  [
+    'Levels',
+    [
+      ['N', 'Put a spot in the middle of the view'],
+      [',  .', 'Pick the spot before, after'],
+      ['Arrows', 'Move the picked spot 1 mm (1/16″); with Shift 10 mm (1/2″)'],
+      ['Delete', 'Take the picked spot away'],
     ],
   ],
 ];
@@ -130,7 +140,10 @@ function escaped(table: TableStore): void {
   const { drawing, tool, preview, show, set, step } = table.getState();
   if (preview) show(null);
   else if (drawing) drawingLeft(table);
-  else if (step !== 'ground' && tool !== 'slide')
+  else if (step === 'levels') {
+    if (tool === 'place') placingLeft(table);
+    else set({ spot: null });
+  } else if (step !== 'ground' && tool !== 'slide')
     set({ tool: 'slide', holding: null, hover: null });
   else set({ pick: null, hover: null });
 }
@@ -190,6 +203,7 @@ export function keyActed(table: TableStore, event: KeyboardEvent, actions: KeyAc
         : 1;
     const by: Point = [ARROWS[key][0] * step, ARROWS[key][1] * step];
     if (state.step === 'ground') pickNudged(table, by);
+    else if (state.step === 'levels') spotNudged(table, by);
     else
       nudge(table, (document) => ({
         ...document,
@@ -226,8 +240,18 @@ export function keyActed(table: TableStore, event: KeyboardEvent, actions: KeyAc
     l: () => state.set({ tool: state.tool === 'lift' ? 'slide' : 'lift', hover: null }),
     a: () => state.set({ tool: state.tool === 'align' ? 'slide' : 'align', hover: null }),
   };
+  const take = () => state.spot !== null && spotTaken(table, state.spot);
+  const levels: Record<string, () => void> = {
+    n: () => spotPlacedInView(table),
+    ',': () => spotStepped(table, -1),
+    '.': () => spotStepped(table, 1),
+    Delete: take,
+    Backspace: take,
+    s: () => state.set({ snap: !state.snap }),
+  };
+  const own = state.step === 'ground' ? ground : state.step === 'levels' ? levels : pattern;
   const name = key.length === 1 ? key.toLowerCase() : key;
-  const act = acts[name] ?? (state.step === 'ground' ? ground : pattern)[name];
+  const act = acts[name] ?? own[name];
   act?.();
   return act !== undefined;
 }

@@ -17,7 +17,7 @@ export const STEPS = [
 ] as const;
 export type Step = (typeof STEPS)[number];
 
-export type ToolName = 'edit' | 'draw' | 'slide' | 'lift' | 'align' | 'hold';
+export type ToolName = 'edit' | 'draw' | 'slide' | 'lift' | 'align' | 'hold' | 'spot' | 'place';
 
 /** What of the ground is picked: a vertex or an edge of a ring. */
 export type Pick =
@@ -48,6 +48,15 @@ export interface Lit {
   readonly from: 'floor' | 'ribbon';
 }
 
+/** Places being pointed at for the levels: spots one after another, where a fall leads, or which way. */
+export interface Placing {
+  readonly what: 'spots' | 'fallPoint' | 'fallLine' | 'fallDirection';
+  /** The first of two places. */
+  readonly first: Point | null;
+  /** Where the pointer is. */
+  readonly at: Point | null;
+}
+
 export interface TableState {
   /** The document as last settled: what undo steps through, what is saved. */
   readonly document: LayoutDocument;
@@ -70,6 +79,9 @@ export interface TableState {
     readonly kind: 'edge' | 'between';
     readonly first: readonly [number, number] | null;
   } | null;
+  /** The spot level that is picked, by its place in the list. */
+  readonly spot: number | null;
+  readonly placing: Placing | null;
   readonly camera: Camera | null;
   readonly size: ScreenSize;
   /** Said to the person, and read aloud by a screen reader. */
@@ -95,7 +107,7 @@ const FIRST_TOOL: Record<Step, ToolName> = {
   unit: 'slide',
   bond: 'slide',
   fit: 'slide',
-  levels: 'slide',
+  levels: 'spot',
   takeOff: 'slide',
   setOut: 'slide',
   versions: 'slide',
@@ -118,6 +130,8 @@ export function createTableStore(document: LayoutDocument) {
         snap: true,
         hold: [],
         holding: null,
+        spot: null,
+        placing: null,
         camera: null,
         size: { width: 0, height: 0 },
         said: '',
@@ -143,6 +157,8 @@ export function createTableStore(document: LayoutDocument) {
             hover: null,
             drawing: null,
             holding: null,
+            spot: null,
+            placing: null,
             guides: [],
             lit: null,
           });

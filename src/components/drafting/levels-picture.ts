@@ -1,0 +1,224 @@
+import type { Point } from '@/geometry/point';
+import type { Segment } from '@/geometry/region-segments';
+import { rotation } from '@/geometry/rotation';
+import { documentRing } from '@/paving/ground-edits';
+import { levelFigure } from '@/paving/level-text';
+import { documentLevels, type Fall } from '@/paving/levels';
+import { groundMiddle } from '@/paving/placement-edits';
+import { spotName } from '@/takeoff/level-warnings';
+import { earthOf } from './earth';
+import type { Floor } from './floor';
+import { boxedText, dot, path, screen, segment, type Ink } from './overlay-ink';
+import { ringOutline } from './ring-outline';
+import type { TableState } from './table-store';
+
+/** How much of the floor's own picture the level map covers. */
+const VEIL = 0.86;
+/** A contour's figure needs so much of it in sight, px. */
+const FIGURED_FROM_PX = 30;
+/** Figures whose middles come nearer than this would lie over one another, px. */
+const FIGURE_PITCH_PX = [46, 18] as const;
+/** Of an arrow that shows a fall, px. */
+const ARROW_PX = 56;
+
+function strokeAll(
+  ink: Ink,
+  segments: readonly Segment[],
+  colour: string,
+  width: number,
+  dash: number[] = [],
+) {
+  const { ctx } = ink;
+  ctx.strokeStyle = colour;
+  ctx.lineWidth = width;
+  ctx.setLineDash(dash);
+  ctx.beginPath();
+  for (const { from, to } of segments) {
+    const [a, b] = [screen(ink, from), screen(ink, to)];
+    ctx.moveTo(a[0], a[1]);
+    ctx.lineTo(b[0], b[1]);
+  }
+  ctx.stroke();
+  ctx.setLineDash([]);
+}
+
+/** The level map under edge and keep-outs: hatching, contours, and where ground and formation meet. */
+export function paintLevels(ink: Ink, state: TableState, floor: Floor) {
+  const earth = earthOf(floor);
+  const { ctx, colours, document } = ink;
+  path(ink, ringOutline(documentRing(document, 0)), true);
+  ctx.save();
+  ctx.globalAlpha = VEIL;
+  ctx.fillStyle = colours.stone50;
+  ctx.fill();
+  ctx.restore();
+  if (!earth) return;
+  const { map } = earth;
+  strokeAll(ink, map.cut, colours.slate, 0.6);
+  strokeAll(ink, map.fill, colours.graphite, 0.8);
+  strokeAll(ink, map.rim, colours.slate, 1, [7, 5]);
+  for (const { segments } of map.contours) strokeAll(ink, segments, colours.graphite, 1.1);
+  strokeAll(ink, map.meeting, colours.graphite, 3);
+}
+
+/** An arrow down a fall. */
+function arrow(ink: Ink, from: Point, to: Point, colour: string, width: number) {
+  const { ctx } = ink;
+  const length = Math.hypot(to[0] - from[0], to[1] - from[1]);
+  if (length < 6) return;
+  const [ux, uy] = [(to[0] - from[0]) / length, (to[1] - from[1]) / length];
+  ctx.strokeStyle = colour;
+  ctx.fillStyle = colour;
+  ctx.lineWidth = width;
+  segment(ctx, from, to);
+  ctx.beginPath();
+  ctx.moveTo(to[0], to[1]);
+  ctx.lineTo(to[0] - 9 * ux + 4 * uy, to[1] - 9 * uy - 4 * ux);
+  ctx.lineTo(to[0] - 9 * ux - 4 * uy, to[1] - 9 * uy + 4 * ux);
+  ctx.fill();
+}
+
+/** The ways of a fall as seen on the screen, from a place on: unit vectors down it, y down. */
+function waysDown(fall: Fall): Point[] {
+  const ways = (degrees: readonly number[]) =>
+    degrees.map((each): Point => {
+      const [cos, sin] = rotation(each);
+      return [cos, -sin];
+    });
+  switch (fall.kind) {
+    case 'none':
+      return [];
+    case 'oneWay':
+      return ways([fall.direction]);
+    case 'toPoint':
+      return ways([0, 90, 180, 270].map((turn) => fall.direction + turn));
+    case 'toLine': {
+      const [dx, dy] = [fall.to[0] - fall.from[0], fall.to[1] - fall.from[1]];
+      const along = (Math.atan2(dy, dx) * 180) / Math.PI;
+      return ways([along + 90, along - 90]);
+    }
+  }
+}
+
+function paintFall(ink: Ink, fall: Fall) {
+  const { colours, document } = ink;
+  const middle = screen(ink, groundMiddle(document));
+  const at =
+    fall.kind === 'toPoint'
+      ? screen(ink, fall.at)
+      : fall.kind === 'toLine'
+        ? screen(ink, [(fall.from[0] + fall.to[0]) / 2, (fall.from[1] + fall.to[1]) / 2])
+        : middle;
+  if (fall.kind === 'toLine') {
+    ink.ctx.strokeStyle = colours.graphite;
+    ink.ctx.lineWidth = 1.6;
+    ink.ctx.setLineDash([12, 4, 2, 4]);
+    segment(ink.ctx, screen(ink, fall.from), screen(ink, fall.to));
+    ink.ctx.setLineDash([]);
+  }
+  const meets = fall.kind !== 'oneWay';
+  for (const [x, y] of waysDown(fall)) {
+    // Towards the place that the fall leads to; along the one way, through the middle.
+    const [start, end] = meets ? [-ARROW_PX - 12, -12] : [-ARROW_PX / 2, ARROW_PX / 2];
+    arrow(
+      ink,
+      [at[0] + x * start, at[1] + y * start],
+      [at[0] + x * end, at[1] + y * end],
+      colours.graphite,
+      2,
+    );
+  }
+  if (fall.kind === 'toPoint') dot(ink.ctx, at, 5, colours.stone50, colours.graphite);
+  if (fall.kind !== 'none') {
+    const [x, y] = waysDown(fall)[0];
+    const aside: Point = [
+      at[0] - y * 17 - (meets ? x * 44 : 0),
+      at[1] + x * 17 - (meets ? y * 44 : 0),
+    ];
+    boxedText(ink, `${Number(fall.percent.toFixed(2))}\u202f%`, aside, 0, colours.graphite, 600);
+  }
+}
+
+/** Spots, pegs and figures over everything else, and what is being pointed at. */
+export function paintLevelMarks(ink: Ink, state: TableState, floor: Floor) {
+  const earth = earthOf(floor);
+  const { ctx, colours, document } = ink;
+  const { display } = document;
+  const { spots, fall } = documentLevels(document);
+  const taken: Point[] = [];
+  const figure = (text: string, at: Point, colour: string, weight: number, always = false) => {
+    const free = taken.every(
+      ([x, y]) =>
+        Math.abs(x - at[0]) >= FIGURE_PITCH_PX[0] || Math.abs(y - at[1]) >= FIGURE_PITCH_PX[1],
+    );
+    if (!free && !always) return;
+    taken.push(at);
+    boxedText(ink, text, at, 0, colour, weight);
+  };
+  if (state.spot !== null && spots[state.spot]) {
+    const [x, y] = screen(ink, spots[state.spot].at);
+    const text = `${spotName(spots, state.spot)}: ${levelFigure(spots[state.spot].level, display)}`;
+    figure(text, [x, y - 20], colours.line, 600, true);
+  }
+  paintFall(ink, fall);
+  if (earth) {
+    const middle = screen(ink, groundMiddle(document));
+    for (const peg of earth.pegs) {
+      const [x, y] = screen(ink, peg.at);
+      ctx.fillStyle = colours.graphite;
+      ctx.fillRect(x - 4, y - 4, 8, 8);
+      // Corners are lettered outside the edge; their levels stand inside it.
+      const away = Math.hypot(middle[0] - x, middle[1] - y) || 1;
+      const inward: Point = [x + ((middle[0] - x) / away) * 40, y + ((middle[1] - y) / away) * 24];
+      const text = `${peg.kind === 'corner' ? '' : `${peg.name} `}${levelFigure(peg.finish, display)}`;
+      figure(text, peg.kind === 'corner' ? inward : [x, y + 22], colours.graphite, 700);
+    }
+  }
+  spots.forEach(({ at, level }, n) => {
+    const [x, y] = screen(ink, at);
+    const picked = n === state.spot;
+    dot(ctx, [x, y], picked ? 6.5 : 4.5, colours.stone50, picked ? colours.line : colours.graphite);
+    if (!picked)
+      figure(
+        `${spotName(spots, n)}: ${levelFigure(level, display)}`,
+        [x, y - 17],
+        colours.slate,
+        400,
+      );
+  });
+  for (const { level, segments } of earth?.map.contours ?? []) {
+    const longest = segments
+      .map(({ from, to }) => [screen(ink, from), screen(ink, to)] as const)
+      .sort((p, q) => lengthPx(q) - lengthPx(p))[0];
+    if (!longest || lengthPx(longest) < FIGURED_FROM_PX) continue;
+    const [a, b] = longest;
+    figure(
+      levelFigure(level, display),
+      [(a[0] + b[0]) / 2, (a[1] + b[1]) / 2],
+      colours.graphite,
+      400,
+    );
+  }
+  paintPlacing(ink, state);
+}
+
+const lengthPx = ([a, b]: readonly [Point, Point]): number => Math.hypot(b[0] - a[0], b[1] - a[1]);
+
+function paintPlacing(ink: Ink, { placing }: TableState) {
+  if (!placing) return;
+  const { ctx, colours } = ink;
+  ctx.strokeStyle = colours.line;
+  if (placing.first) {
+    const first = screen(ink, placing.first);
+    dot(ctx, first, 5, colours.line);
+    if (placing.at) {
+      const at = screen(ink, placing.at);
+      if (placing.what === 'fallDirection') arrow(ink, first, at, colours.line, 2);
+      else {
+        ctx.lineWidth = 2;
+        segment(ctx, first, at);
+      }
+    }
+  }
+  if (placing.at) dot(ctx, screen(ink, placing.at), 5, colours.stone50, colours.line);
+}

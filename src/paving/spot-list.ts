@@ -1,0 +1,186 @@
+import Papa from 'papaparse';
+import { formatLength, MM_PER_FOOT, MM_PER_INCH, parseLength, type Display } from './length';
+import { GREATEST_LEVEL_MM, GREATEST_SPOTS, spotClashes, type Spot } from './levels';
+
+/** Spots as text: a list pasted from a sheet or a survey, a line each. */
+
+/** What a number without a unit means in the list. */
+export type BareUnit = 'mm' | 'm' | 'in' | 'ft';
+
+const MM_PER: Readonly<Record<BareUnit, number>> = {
+  mm: 1,
+  m: 1000,
+  in: MM_PER_INCH,
+  ft: MM_PER_FOOT,
+};
+
+export interface SpotListOptions {
+  readonly display: Display;
+  readonly bare: BareUnit;
+  /** What the list calls the level of the edge's top, mm: taken off every level. */
+  readonly datum: number;
+}
+
+export interface SpotListProblem {
+  /** Of the text, from 1. */
+  readonly line: number;
+  readonly message: string;
+}
+
+/** All the spots of a list, or what is wrong with it, line by line: nothing is taken by halves. */
+export type ParsedSpotList =
+  | { readonly ok: true; readonly spots: readonly Spot[] }
+  | { readonly ok: false; readonly problems: readonly SpotListProblem[] };
+
+type Column = 'name' | 'x' | 'y' | 'level';
+
+const HEADINGS: Readonly<Record<Column, readonly string[]>> = {
+  name: ['name', 'spot', 'point', 'id', 'no', 'nr', '#', 'label'],
+  x: ['x', 'across', 'east', 'easting', 'e'],
+  y: ['y', 'up', 'north', 'northing', 'n'],
+  level: ['level', 'z', 'height', 'elevation', 'h', 'rl'],
+};
+
+const columnOf = (heading: string): Column | null => {
+  const bare = heading
+    .toLowerCase()
+    .replace(/\(.*\)|,.*$/g, '')
+    .trim();
+  const found = Object.entries(HEADINGS).find(([, names]) => names.includes(bare));
+  return found ? (found[0] as Column) : null;
+};
+
+/** A number alone, its decimals after a point or a comma. */
+const BARE_NUMBER = /^[-−+]?\s*(\d+([.,]\d*)?|[.,]\d+)$/;
+
+function cellLength(text: string, { display, bare }: SpotListOptions): number | null {
+  const cell = text.trim();
+  if (BARE_NUMBER.test(cell)) {
+    const value = Number(cell.replace(/\s/g, '').replace('−', '-').replace(',', '.'));
+    return value * MM_PER[bare];
+  }
+  const parsed = parseLength(cell, display);
+  return parsed.ok ? parsed.mm : null;
+}
+
+/** A grid finer than a tape reads, mm: what a survey in metres loses in floating point comes back whole. */
+const GRID_MM = 0.001;
+const onGrid = (mm: number) => Math.round(mm / GRID_MM) * GRID_MM;
+const rounded = (mm: number) => Number(onGrid(mm).toFixed(3));
+
+/** The columns by a header, or in the usual order: name where there are four, then across, up, level. */
+function columnsOf(
+  first: readonly string[],
+): { readonly columns: readonly Column[]; readonly header: boolean } | SpotListProblem['message'] {
+  const named = first.map(columnOf);
+  // A header is a line of words; a line with any number in it is a spot.
+  if (named.some(Boolean) && !first.some((cell) => /\d/.test(cell))) {
+    const missing = (['x', 'y', 'level'] as const).filter((column) => !named.includes(column));
+    if (missing.length > 0) {
+      return `The headings lack ${missing.join(' and ')}. Name three columns x, y and level; a fourth may be name.`;
+    }
+    return { columns: named as Column[], header: true };
+  }
+  if (first.length >= 4) return { columns: ['name', 'x', 'y', 'level'], header: false };
+  return { columns: ['x', 'y', 'level'], header: false };
+}
+
+/**
+ * Reads a list of spots: cells parted by commas, semicolons or tabs, with headings or without. Lengths as the
+ * trade types them; a bare number is in `bare`. Every line that cannot be used is named with its reason.
+ */
+export function parseSpotList(text: string, options: SpotListOptions): ParsedSpotList {
+  const parsed = Papa.parse<string[]>(text.replace(/^\uFEFF/, '').replace(/\s+$/, ''), {
+    skipEmptyLines: false,
+  });
+  const lines = parsed.data
+    .map((cells, n) => ({ line: n + 1, cells: cells.map((cell) => cell.trim()) }))
+    .filter(({ cells }) => cells.some((cell) => cell !== ''));
+  if (lines.length === 0) {
+    return {
+      ok: false,
+      problems: [
+        {
+          line: 1,
+          message: 'There is nothing here yet. Paste one spot to a line: across, up, level.',
+        },
+      ],
+    };
+  }
+  const arranged = columnsOf(lines[0].cells);
+  if (typeof arranged === 'string') {
+    return { ok: false, problems: [{ line: lines[0].line, message: arranged }] };
+  }
+  const { columns, header } = arranged;
+  const problems: SpotListProblem[] = [];
+  const spots: Spot[] = [];
+  const from: number[] = [];
+  for (const { line, cells } of header ? lines.slice(1) : lines) {
+    const cell = (column: Column) => cells[columns.indexOf(column)] ?? '';
+    const wrong = (message: string) => problems.push({ line, message });
+    const given = cells.filter((text_) => text_ !== '').length;
+    if (!header && cells.length > columns.length) {
+      wrong(
+        `has ${cells.length} cells; ${columns.length} are looked for (${columns.join(', ')}). A comma within a number parts it: write 3.2, or part cells with semicolons.`,
+      );
+      continue;
+    }
+    if (given < 3) {
+      wrong(
+        `has ${given} ${given === 1 ? 'cell' : 'cells'} filled in; a spot needs across, up and level.`,
+      );
+      continue;
+    }
+    const [x, y, level] = (['x', 'y', 'level'] as const).map((column) =>
+      cellLength(cell(column), options),
+    );
+    const unread = (['x', 'y', 'level'] as const).filter((_, n) => [x, y, level][n] === null);
+    if (unread.length > 0) {
+      wrong(
+        unread
+          .map((column) =>
+            cell(column) === ''
+              ? `${column} is missing`
+              : `${column} “${cell(column)}” is not a length`,
+          )
+          .join('; ') + '. Write 3200, 3.2 m or 10\' 6".',
+      );
+      continue;
+    }
+    const above = level! - options.datum;
+    if (Math.abs(above) > GREATEST_LEVEL_MM) {
+      wrong(
+        `lies ${formatLength(Math.abs(above), options.display)} ${above < 0 ? 'below' : 'above'} the edge, which is more than 10 m. Say what the list calls the edge’s top.`,
+      );
+      continue;
+    }
+    const name = cell('name').slice(0, 40);
+    spots.push({
+      ...(name ? { name } : {}),
+      at: [rounded(x!), rounded(y!)],
+      level: rounded(above),
+    });
+    from.push(line);
+  }
+  for (const [first, second] of spotClashes(spots)) {
+    problems.push({
+      line: from[second],
+      message: `is the same place as line ${from[first]}. Keep one of the two.`,
+    });
+  }
+  if (spots.length > GREATEST_SPOTS) {
+    problems.push({
+      line: from[GREATEST_SPOTS],
+      message: `is one more than the ${GREATEST_SPOTS} spots that a floor may have.`,
+    });
+  }
+  problems.sort((one, other) => one.line - other.line);
+  if (problems.length > 0) return { ok: false, problems };
+  if (spots.length === 0) {
+    return {
+      ok: false,
+      problems: [{ line: lines[0].line, message: 'There are headings, but no spot below them.' }],
+    };
+  }
+  return { ok: true, spots };
+}
