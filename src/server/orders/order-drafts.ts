@@ -15,10 +15,20 @@ export interface SplitOrders {
   readonly unsupplied: readonly string[];
 }
 
-const lineOf = (order: OrderLine, code: string): PurchaseLine => ({
+/** Longest name of a line, characters. */
+const NAME_LIMIT = 160;
+
+/** By the name that the supplier knows, with what the floor calls it, such as which tone, where that differs. */
+const lineName = (floor: string, catalogue: string): string =>
+  (floor === catalogue ? catalogue : `${catalogue} (${floor})`).slice(0, NAME_LIMIT);
+
+const lineOf = (
+  order: OrderLine,
+  { name, code }: { readonly name: string; readonly code: string },
+): PurchaseLine => ({
   id: order.id,
   itemId: order.item?.id ?? null,
-  name: order.name,
+  name: lineName(order.name, name),
   code,
   pack: order.pack,
   amount: order.amount,
@@ -38,6 +48,7 @@ export const ordersSplit = async (
         .select({
           id: catalogueItems.id,
           supplierId: catalogueItems.supplierId,
+          name: catalogueItems.name,
           code: catalogueItems.code,
         })
         .from(catalogueItems)
@@ -53,7 +64,7 @@ export const ordersSplit = async (
       continue;
     }
     const own = bySupplier.get(item.supplierId) ?? [];
-    bySupplier.set(item.supplierId, [...own, lineOf(order, item.code)]);
+    bySupplier.set(item.supplierId, [...own, lineOf(order, item)]);
   }
   return {
     bySupplier: [...bySupplier].map(([supplierId, lines]) => ({ supplierId, lines })),
