@@ -1,4 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
+import { dayText } from '@/takeoff/day-text';
 import { formatMass } from '@/takeoff/measures';
 import { formatMoney } from '@/takeoff/money';
 import type { PriceList } from '@/takeoff/price-list';
@@ -106,7 +107,7 @@ function Prices({ list, takeOff }: { list: ReturnType<typeof usePriceList>; take
   if (unpriced.length === 0)
     return (
       <p className="text-sm text-slate">
-        Prices of {list.data.on}. Labour, margin and tax come in with the quote of a saved version.
+        Prices of {dayText(list.data.on)}. Labour, margin and tax come in with the quote of a saved version.
       </p>
     );
   return (

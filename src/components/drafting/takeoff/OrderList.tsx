@@ -1,5 +1,6 @@
 import type { OrderWay } from '@/paving/materials';
 import { orderItemSet, orderWaySet } from '@/takeoff/assumption-edits';
+import { dayText } from '@/takeoff/day-text';
 import { formatMass } from '@/takeoff/measures';
 import { formatMoney } from '@/takeoff/money';
 import type { PriceList } from '@/takeoff/price-list';
@@ -98,7 +99,7 @@ function Order({
       {order.item && order.packCostMinor !== null && currency && (
         <p className="mt-1 text-[0.82rem] text-slate">
           {formatMoney(order.packCostMinor, currency)} a {order.pack.name} without tax, price of{' '}
-          {order.item.from}.
+          {dayText(order.item.from)}.
         </p>
       )}
       {order.item && order.packCostMinor === null && (
