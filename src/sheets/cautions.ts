@@ -1,5 +1,5 @@
 import type { LayoutDocument, Unit } from '@/paving/layout-document';
-import type { Report } from '@/paving/report';
+import { aggregateArea, type Report } from '@/paving/report';
 
 /** Density of plain concrete, kg/m³: ASCE 7 gives 144 lb/ft³ for plain stone concrete; 145 lb/ft³ is the usual low figure. */
 const CONCRETE_KG_PER_M3 = 2320;
@@ -14,7 +14,7 @@ export function floorCautions(document: LayoutDocument, report: Report): readonl
   const laid = document.units.filter((unit) => (report.byUnit[unit.id] ?? 0) > 0);
   const heavy = laid.filter((unit) => unitMassKg(unit) > ONE_PERSON_KG);
   const heaviest = Math.max(0, ...heavy.map(unitMassKg));
-  const openShare = report.groundArea > 0 ? report.fillArea / report.groundArea : 0;
+  const openShare = report.groundArea > 0 ? aggregateArea(report) / report.groundArea : 0;
   return [
     'Call before you dig: have buried services marked.',
     ...(heavy.length > 0

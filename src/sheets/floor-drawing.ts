@@ -1,8 +1,10 @@
+import { cutPieces } from '@/paving/cutting/cut-pieces';
 import type { Laying } from '@/paving/laying';
 import type { DrawCommand, PaperPoint, Stroke } from './drawing';
 import type { Outline } from './edge-dimensions';
 import { grainCommands } from './aggregate-grain';
 import { INK, KEEP_OUT_COLOUR, inkMix } from './inks';
+import { pieceCommands, type PieceStyle } from './piece-drawing';
 import type { PlanView } from './plan-view';
 import { paperChords, paperRing } from './plan-view';
 import { aggregateColour, courseCommands, unitCommands } from './unit-drawing';
@@ -15,6 +17,8 @@ export interface FloorStyle {
   readonly keepOutStroke: Stroke;
   readonly unitStroke: Stroke;
   readonly markTone: boolean;
+  /** How pieces cut at the edge are drawn, where there are any; as units without it. */
+  readonly pieces?: PieceStyle;
   readonly grain: { readonly spacing: number; readonly size: number };
 }
 
@@ -38,6 +42,8 @@ export function floorDrawing(laying: Laying, view: PlanView, style: FloorStyle):
   const least = Math.min(...laying.motif.map(({ unit }) => Math.min(unit.length, unit.width)));
   const asCourses = laying.laid.count > style.mostUnits || least / view.scale < style.leastSide;
   const colour = aggregateColour(laying);
+  const pieceStyle = style.pieces ?? { stroke: style.unitStroke, sawn: style.unitStroke };
+  const pieces = laying.document.cutting === 'edge' ? cutPieces(laying).pieces : [];
   return {
     fill: [
       { kind: 'path', rings: [perimeter], fill: colour },
@@ -46,9 +52,17 @@ export function floorDrawing(laying: Laying, view: PlanView, style: FloorStyle):
         colour: inkMix(colour, INK, 0.55),
       }),
     ],
-    units: asCourses
-      ? courseCommands(laying, view, style.unitStroke)
-      : unitCommands(laying, view, { stroke: style.unitStroke, markTone: style.markTone }),
+    units: [
+      ...(asCourses
+        ? courseCommands(laying, view, style.unitStroke)
+        : unitCommands(laying, view, { stroke: style.unitStroke, markTone: style.markTone })),
+      ...pieceCommands(
+        laying,
+        pieces,
+        view,
+        asCourses ? { ...pieceStyle, hatch: undefined } : pieceStyle,
+      ),
+    ],
     outline: [
       ...keepOuts.map((ring): DrawCommand => ({
         kind: 'path',

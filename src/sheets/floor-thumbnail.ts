@@ -42,6 +42,10 @@ function floorLayers(document: LayoutDocument, width: number, height: number): D
     keepOutStroke: { width: 1, colour: INK },
     unitStroke: { width: 0.4, colour: inkMix('#ffffff', INK, 0.45) },
     markTone: false,
+    pieces: {
+      stroke: { width: 0.4, colour: inkMix('#ffffff', INK, 0.45) },
+      sawn: { width: 0.8, colour: INK },
+    },
     grain: { spacing: Math.max(7, Math.sqrt((width * height) / 900)), size: 0.7 },
   });
   return [

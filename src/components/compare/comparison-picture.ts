@@ -1,9 +1,16 @@
 import { UNIT_FATE, type UnitMatching } from '@/paving/comparison';
 import type { Laying } from '@/paving/laying';
+import { paintPieces } from '../drafting/cutting/piece-picture';
+import { piecesOf } from '../drafting/cutting/shown-pieces';
 import { paintFloor } from '../drafting/floor-picture';
 import type { Picture } from '../floor-window/FloorWindow';
 import { paintGroundLines } from '../floor-window/ground-lines';
-import { PLAIN_UNIT, type DrawingColours } from '../ui/drawing-colours';
+import {
+  colourShaded,
+  PLAIN_AGGREGATE,
+  PLAIN_UNIT,
+  type DrawingColours,
+} from '../ui/drawing-colours';
 
 /** What became of a unit, as it is drawn: by hatching and sign, not by colour alone. */
 export type Fate = 'kept' | 'moved' | 'gone' | 'new';
@@ -239,6 +246,12 @@ export function paintOverlaid(
   };
   if (share < 0.5) drawn(a, matching.fateOfA, 'kept', UNIT_FATE.kept);
   else drawn(b, matching.fateOfB, 'kept', UNIT_FATE.kept);
+  const near = share < 0.5 ? a : b;
+  const cut = piecesOf(near);
+  if (cut) {
+    const dark = colourShaded(nearer.aggregate?.colour ?? PLAIN_AGGREGATE, -0.45);
+    paintPieces(ctx, near, cut.pieces, camera, size, dark, colours.graphite);
+  }
   ctx.globalAlpha = Math.min(1, 2 * (1 - share));
   drawn(a, matching.fateOfA, 'gone', UNIT_FATE.single);
   ctx.globalAlpha = Math.min(1, 2 * share);

@@ -40,7 +40,8 @@ export function differenceHeading(a: LayoutDocument, b: LayoutDocument, units: U
   if (!same(a.ground, b.ground)) return 'Two floors on different ground';
   if (unitsUsed(a) !== unitsUsed(b)) return 'Two units on the same ground';
   if (a.bond.kind !== b.bond.kind) return 'Two patterns on the same ground';
-  if (units.moved + units.gone + units.added === 0) return 'The same floor twice';
+  if (units.moved + units.gone + units.added === 0)
+    return a.cutting === b.cutting ? 'The same floor twice' : 'The same floor, whole and cut';
   if (a.placement.turn !== b.placement.turn) return 'The same pattern, turned';
   if (bondJoint(a) !== bondJoint(b)) return 'The same pattern with another joint';
   if (!same(a.placement, b.placement)) return 'Two ways to start the same pattern';
@@ -56,6 +57,19 @@ const listed = (parts: readonly string[]): string =>
 const LEAST_MM = 0.5;
 const LEAST_M2 = 0.005;
 
+/** What B does at the edge that A does not, or the other way round; nothing where both do alike. */
+function cuttingWords(
+  a: LayoutDocument,
+  b: LayoutDocument,
+  { cut }: FigureComparison,
+  display: Display,
+): string | null {
+  if (a.cutting === b.cutting || !cut) return null;
+  if (b.cutting === 'none') return 'cuts nothing at the edge';
+  const pieces = cut.pieces.b ?? 0;
+  return `cuts ${countText(pieces)} ${pieces === 1 ? 'piece' : 'pieces'} at the edge and throws ${formatArea(cut.waste.b ?? 0, display)} away`;
+}
+
 /** One sentence in plain words that says what differs from A to B. */
 export function differenceSentence(
   a: Side,
@@ -64,8 +78,9 @@ export function differenceSentence(
   units: UnitCounts,
   display: Display,
 ): string {
+  const cutting = cuttingWords(a.document, b.document, figures, display);
   if (units.moved + units.gone + units.added === 0 && same(a.document.ground, b.document.ground))
-    return `Every unit of ${b.name} lies where it lies in ${a.name}.`;
+    return `Every unit of ${b.name} lies where it lies in ${a.name}${cutting ? `; ${b.name} ${cutting}` : ''}.`;
   const parts: string[] = [];
   if (unitsUsed(a.document) !== unitsUsed(b.document))
     parts.push(`takes units of ${unitsUsed(b.document)} instead of ${unitsUsed(a.document)}`);
@@ -77,6 +92,7 @@ export function differenceSentence(
       ? 'has as many whole units'
       : `has ${countText(Math.abs(more))} ${more > 0 ? 'more' : 'fewer'} whole ${Math.abs(more) === 1 ? 'unit' : 'units'}`,
   );
+  if (cutting) parts.push(cutting);
   const fill = figures.fillArea.change ?? 0;
   if (Math.abs(fill) >= LEAST_M2)
     parts.push(
@@ -158,6 +174,14 @@ export function figureRows(
     count('Left out at the edge', figures.leftOut),
     ...((figures.lifted.a ?? 0) + (figures.lifted.b ?? 0) > 0
       ? [count('Lifted out by hand', figures.lifted)]
+      : []),
+    ...(figures.cut
+      ? [
+          count('Pieces cut at the edge', figures.cut.pieces),
+          count('Whole units to saw them from', figures.cut.sawnUnits),
+          area('Thrown away', figures.cut.waste),
+          length('To saw', figures.cut.sawLength),
+        ]
       : []),
     length('Least gap', figures.leastGap),
     length('Play', figures.play, '±'),

@@ -54,6 +54,8 @@ export function FloorFigures({ brief = false }: { brief?: boolean }) {
   const { report } = shown;
   if (!report) return <FloorProblems />;
   const { display } = shown.document;
+  // What the pieces come to takes longer; the section on cutting has it.
+  const cut = shown.document.cutting === 'edge';
   const was = settled !== shown ? settled.report : null;
   const before = <T,>(
     pick: (r: Report) => T,
@@ -98,7 +100,7 @@ export function FloorFigures({ brief = false }: { brief?: boolean }) {
           </p>
           <dl className="mt-3 hairlines text-[0.95rem]">
             <Row
-              name="Left out at the edge"
+              name={cut ? 'Units cut at the edge' : 'Left out at the edge'}
               now={formatCount(report.leftOut)}
               before={before((r) => r.leftOut, formatCount, String)}
             />
@@ -126,12 +128,12 @@ export function FloorFigures({ brief = false }: { brief?: boolean }) {
               before={before((r) => r.groundArea, area, area)}
             />
             <Row
-              name="Under units"
+              name={cut ? 'Under whole units' : 'Under units'}
               now={area(report.coveredArea)}
               before={before((r) => r.coveredArea, area, area)}
             />
             <Row
-              name="Left for aggregate"
+              name={cut ? 'Pieces and aggregate' : 'Left for aggregate'}
               now={<span data-testid="fill-area">{area(report.fillArea)}</span>}
               before={before((r) => r.fillArea, area, area)}
             />

@@ -1,3 +1,4 @@
+import type { CutPieces } from '@/paving/cutting/cut-pieces';
 import type { LayoutDocument } from '@/paving/layout-document';
 import type { Laying } from '@/paving/laying';
 import type { DrawingColours } from '../ui/drawing-colours';
@@ -25,6 +26,7 @@ export interface FloorCache {
     size: ScreenSize,
     colours: DrawingColours,
     pixelRatio: number,
+    cut?: CutPieces | null,
   ): void;
   dispose(): void;
 }
@@ -38,6 +40,7 @@ export function createFloorCache(again: () => void): FloorCache {
     size: ScreenSize;
     colours: DrawingColours;
     pixelRatio: number;
+    cut: CutPieces | null;
   } | null = null;
   let rest: ReturnType<typeof setTimeout> | undefined;
   let sharpDue = false;
@@ -50,18 +53,19 @@ export function createFloorCache(again: () => void): FloorCache {
     picture.height = height * now.pixelRatio;
     const ctx = picture.getContext('2d')!;
     ctx.scale(now.pixelRatio, now.pixelRatio);
-    paintFloor(ctx, now.document, now.laying, now.camera, { width, height }, now.colours);
+    paintFloor(ctx, now.document, now.laying, now.camera, { width, height }, now.colours, now.cut);
     painted = now;
     sharpDue = false;
   };
 
   return {
-    paint(ctx, document, laying, camera, size, colours, pixelRatio) {
-      const now = { document, laying, camera, size, colours, pixelRatio };
+    paint(ctx, document, laying, camera, size, colours, pixelRatio, cut = null) {
+      const now = { document, laying, camera, size, colours, pixelRatio, cut };
       const same =
         painted !== null &&
         painted.document === document &&
         painted.laying === laying &&
+        painted.cut === cut &&
         painted.colours === colours &&
         painted.pixelRatio === pixelRatio &&
         painted.size.width === size.width &&

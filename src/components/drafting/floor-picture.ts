@@ -1,5 +1,6 @@
 import type { LayoutDocument } from '@/paving/layout-document';
 import { documentRing, documentRingCount } from '@/paving/ground-edits';
+import type { CutPieces } from '@/paving/cutting/cut-pieces';
 import type { Laying, UnitSet } from '@/paving/laying';
 import { unitTone } from '@/paving/tones';
 import {
@@ -9,6 +10,7 @@ import {
   type DrawingColours,
 } from '../ui/drawing-colours';
 import { screenFromGround, type Camera, type ScreenSize } from './camera';
+import { paintPieces } from './cutting/piece-picture';
 import { ringOutline } from './ring-outline';
 
 /** Laid units of one colour: their places in `laying.laid`. */
@@ -165,7 +167,8 @@ function grainPattern(
 
 /**
  * Paints ground, aggregate and units, from flat arrays, into a window of `size` CSS pixels. Laid units
- * are filled; left-out ones are a dashed ghost; lifted ones a dashed outline crossed through.
+ * are filled; left-out ones are a dashed ghost; lifted ones a dashed outline crossed through. `cut`: the pieces that
+ * take the place of ghosts on a floor cut at its edge.
  */
 export function paintFloor(
   ctx: CanvasRenderingContext2D,
@@ -174,6 +177,7 @@ export function paintFloor(
   camera: Camera,
   size: ScreenSize,
   colours: DrawingColours,
+  cut: CutPieces | null = null,
 ) {
   const aggregate = document.aggregate?.colour ?? PLAIN_AGGREGATE;
   ctx.save();
@@ -203,13 +207,15 @@ export function paintFloor(
     });
   }
 
+  if (cut) paintPieces(ctx, laying, cut.pieces, camera, size, dark, colours.graphite);
   if (outlined) {
     traceRings(ctx, document, camera, size);
     ctx.clip('evenodd');
     ctx.strokeStyle = dark;
     ctx.lineWidth = 0.9;
     ctx.setLineDash([3, 4]);
-    paintUnits(ctx, laying, laying.leftOut, null, camera, size, () => ctx.stroke());
+    const ghosts = cut ? leftByHand(laying) : null;
+    paintUnits(ctx, laying, laying.leftOut, ghosts, camera, size, () => ctx.stroke());
 
     ctx.strokeStyle = colours.graphite;
     ctx.lineWidth = 1.2;
@@ -220,6 +226,16 @@ export function paintFloor(
     ctx.stroke();
   }
   ctx.restore();
+}
+
+/** Units at the edge that are not cut because they were lifted by hand: their places in `laying.leftOut`. */
+function leftByHand({ document, leftOut }: Laying): Uint32Array {
+  const lifted = new Set(document.lifted.map((address) => address.join()));
+  const places: number[] = [];
+  for (let n = 0; lifted.size > 0 && n < leftOut.count; n++) {
+    if (lifted.has(`${leftOut.i[n]},${leftOut.j[n]},${leftOut.k[n]}`)) places.push(n);
+  }
+  return Uint32Array.from(places);
 }
 
 /** A cross through each lifted unit, corner to corner. */

@@ -1,6 +1,7 @@
 import { useEffect, useMemo, useRef } from 'react';
 import type { Laying, UnitSet } from '@/paving/laying';
 import type { LayoutDocument } from '@/paving/layout-document';
+import { piecesOf } from '../drafting/cutting/shown-pieces';
 import { createFloorCache, type FloorCache } from '../drafting/floor-cache';
 import { floorOf } from '../drafting/floor';
 import type { Painter, Picture } from './FloorWindow';
@@ -46,8 +47,9 @@ export function useFloorPainter(
       again.current = askAgain;
       cache.current ??= createFloorCache(() => again.current());
       const { ctx, camera, size, colours, pixelRatio } = picture;
-      const laying = asBuilt(floorOf(document).laying);
-      cache.current.paint(ctx, document, laying, camera, size, colours, pixelRatio);
+      const { laying } = floorOf(document);
+      const cut = piecesOf(laying);
+      cache.current.paint(ctx, document, asBuilt(laying), camera, size, colours, pixelRatio, cut);
       paintGroundLines(picture, document);
       over?.(picture);
     },

@@ -1,6 +1,7 @@
 import type { VersionDetail } from '@/api-types/versions';
 import { formatArea } from '@/paving/area';
 import { formatLength, formatSize } from '@/paving/length';
+import { aggregateArea } from '@/paving/report';
 import { countText } from '@/sheets/figures';
 
 /** A figure for somebody who does not lay floors: what it is, and what it means for them. */
@@ -10,6 +11,9 @@ export interface PlainFigure {
   readonly meaning: string;
 }
 
+/** Less than this is the noise of adding up, m². */
+const LEAST_SEEN_M2 = 1e-6;
+
 type Shown = Pick<VersionDetail, 'document' | 'report'>;
 
 /** The figures that a client decides by, in plain words. */
@@ -18,8 +22,8 @@ export function plainFigures({ document, report }: Shown): readonly PlainFigure[
   const length = (mm: number) => formatLength(mm, display);
   const laid = document.units.filter((unit) => (report.byUnit[unit.id] ?? 0) > 0);
   const fill = document.aggregate?.name ?? 'Loose fill';
-  const share =
-    report.groundArea > 0 ? Math.round((100 * report.coveredArea) / report.groundArea) : 0;
+  const covered = report.coveredArea + (report.cut?.area ?? 0);
+  const share = report.groundArea > 0 ? Math.round((100 * covered) / report.groundArea) : 0;
   return [
     ...laid.map((unit) => ({
       name: unit.name,
@@ -29,14 +33,25 @@ export function plainFigures({ document, report }: Shown): readonly PlainFigure[
     {
       name: 'Floor',
       value: formatArea(report.groundArea, display),
-      meaning: `Paving covers ${formatArea(report.coveredArea, display)} of it, about ${share} per cent.`,
+      meaning: `Paving covers ${formatArea(covered, display)} of it, about ${share} per cent.`,
     },
-    ...(report.fillArea > 0
+    ...(report.cut
+      ? [
+          {
+            name: 'Cut pieces',
+            value: countText(report.cut.count),
+            meaning: `Sawn to the edge from ${countText(report.cut.wholeUnits)} further units.`,
+          },
+        ]
+      : []),
+    ...(aggregateArea(report) > LEAST_SEEN_M2
       ? [
           {
             name: fill,
-            value: formatArea(report.fillArea, display),
-            meaning: 'What you see of it between the pieces and all round the edge.',
+            value: formatArea(aggregateArea(report), display),
+            meaning: report.cut
+              ? 'What you see of it between the pieces.'
+              : 'What you see of it between the pieces and all round the edge.',
           },
         ]
       : []),
@@ -46,7 +61,9 @@ export function plainFigures({ document, report }: Shown): readonly PlainFigure[
           {
             name: 'Nearest to the edge',
             value: length(report.leastGap),
-            meaning: 'No piece comes closer to the edge than this.',
+            meaning: report.cut
+              ? 'No uncut piece comes closer to the edge than this.'
+              : 'No piece comes closer to the edge than this.',
           },
         ]),
     ...(report.play === null
@@ -55,8 +72,7 @@ export function plainFigures({ document, report }: Shown): readonly PlainFigure[
           {
             name: 'Room to drift',
             value: length(Math.max(0, report.play)),
-            meaning:
-              'Floors drift a little while they are laid. This one may drift so far, and still nothing must be cut.',
+            meaning: `Floors drift a little while they are laid. This one may drift so far, and still ${report.cut ? 'no whole one' : 'nothing'} must be cut.`,
           },
         ]),
   ];
@@ -65,7 +81,7 @@ export function plainFigures({ document, report }: Shown): readonly PlainFigure[
 /** What a client should know before saying yes; never more than applies to this floor. */
 export function clientCautions({ document, report }: Shown): readonly string[] {
   return [
-    ...(report.fillArea > 0
+    ...(aggregateArea(report) > LEAST_SEEN_M2
       ? [
           `With ${document.aggregate?.name.toLowerCase() ?? 'loose fill'} between the pieces the floor is not step-free for wheels or sticks.`,
         ]

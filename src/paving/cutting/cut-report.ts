@@ -1,10 +1,10 @@
 import type { Point } from '@/geometry/point';
-import { pointTurned, rotation } from '@/geometry/rotation';
 import type { Address } from '../layout-document';
 import type { Laying } from '../laying';
 import { unitTone } from '../tones';
 import { cutPieces, type CutPiece, type CutPieces } from './cut-pieces';
 import { nesting } from './nesting';
+import { unitMiddle } from './piece-edges';
 import { ownRing, pieceShape, type PieceShape } from './piece-shape';
 import { sawCuts } from './saw-cuts';
 
@@ -73,15 +73,6 @@ function kinds({ document, motif }: Laying, pieces: readonly CutPiece[]): Kind[]
     kind.pieces.push(n);
   });
   return [...found.values()];
-}
-
-/** Middle of the unit with an address, mm. */
-function unitMiddle({ lattice, origin, motif, document }: Laying, [i, j, k]: Address): Point {
-  const at = pointTurned(motif[k].at, rotation(document.placement.turn));
-  return [
-    origin[0] + i * lattice.a[0] + j * lattice.b[0] + at[0],
-    origin[1] + i * lattice.a[1] + j * lattice.b[1] + at[1],
-  ];
 }
 
 /**

@@ -5,6 +5,7 @@ import { groundMiddle, placementTurned, turnNormal } from '@/paving/placement-ed
 import { Length } from '../../ui/Length';
 import { LengthField } from '../../ui/LengthField';
 import { NumberField } from '../../ui/NumberField';
+import { CuttingChoice } from '../cutting/CuttingChoice';
 import { BestStart } from '../fit/BestStart';
 import { FitPictures } from '../fit/FitPictures';
 import type { FitService } from '../fit/fit-service';
@@ -51,6 +52,7 @@ export function FitPanel({ fit }: { fit: FitService }) {
       <FitPictures fit={fit} />
       <HoldFields fit={fit} />
       <JointRange />
+      <CuttingChoice />
       <section aria-label="By hand">
         <h3 className="mb-2 border-b border-graphite pb-1">By hand</h3>
         <div className="grid grid-cols-3 gap-2">

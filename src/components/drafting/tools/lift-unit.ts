@@ -13,13 +13,14 @@ interface Standing {
 }
 
 /** The units that can be lifted or laid back, with their places. */
-function standing({ laid, lifted }: Laying): Standing[] {
+function standing({ document, laid, lifted, leftOut }: Laying): Standing[] {
   const of = (set: UnitSet): Standing[] =>
     Array.from({ length: set.count }, (_, n) => ({
       address: [set.i[n], set.j[n], set.k[n]],
       at: [set.x[n], set.y[n]],
     }));
-  return [...of(laid), ...of(lifted)];
+  const cut = document.cutting === 'edge' ? of(leftOut) : [];
+  return [...of(laid), ...of(lifted), ...cut];
 }
 
 /** Chooses the nearest unit in a direction from the one chosen; the first time, the one nearest the floor's middle. */
@@ -50,6 +51,18 @@ export function chosenUnitToggled(table: TableStore): void {
   toggled(table, unit, document.lifted.some((a) => same(a, unit)) ? 'lifted' : 'laid');
 }
 
+/** True for a unit at the edge of a floor that is cut there: it is a piece, or was left to aggregate by hand. */
+function unitIsCut(table: TableStore, address: Address): boolean {
+  const { document } = table.getState();
+  const { laying } = floorOf(document);
+  if (document.cutting !== 'edge' || !laying) return false;
+  const { leftOut } = laying;
+  for (let n = 0; n < leftOut.count; n++) {
+    if (same([leftOut.i[n], leftOut.j[n], leftOut.k[n]], address)) return true;
+  }
+  return false;
+}
+
 function toggled(table: TableStore, address: Address, status: 'laid' | 'lifted'): void {
   const { edit, set } = table.getState();
   const change = (now: LayoutDocument): LayoutDocument => ({
@@ -60,16 +73,23 @@ function toggled(table: TableStore, address: Address, status: 'laid' | 'lifted')
         : now.lifted.filter((other) => !same(other, address)),
   });
   edit(change);
+  const lifted = status === 'laid';
+  const piece = unitIsCut(table, address);
   set({
-    said:
-      status === 'laid' ? 'Unit lifted: its place is filled with aggregate.' : 'Unit laid back.',
+    said: piece
+      ? lifted
+        ? 'Not cut: aggregate takes its place.'
+        : 'Cut to the edge again.'
+      : lifted
+        ? 'Unit lifted: its place is filled with aggregate.'
+        : 'Unit laid back.',
   });
 }
 
 /** Takes a laid unit out, or lays a lifted one back, by a click. */
 export function createLiftUnit(): Tool {
   let from: TablePointer | null = null;
-  let over: 'laid' | 'lifted' | 'leftOut' | null = null;
+  let over: 'laid' | 'lifted' | 'leftOut' | 'piece' | null = null;
 
   const unitUnder = (table: TableStore, pointer: TablePointer) => {
     const { laying } = floorOf(table.getState().document);
@@ -89,7 +109,11 @@ export function createLiftUnit(): Tool {
       if (!start || screenDistance(start.screen, pointer.screen) >= CLICK_SLACK_PX) return;
       const unit = unitUnder(table, pointer);
       if (!unit) return;
-      if (unit.status === 'leftOut')
+      const { document } = table.getState();
+      if (unit.status === 'leftOut' && document.cutting === 'edge') {
+        const lifted = document.lifted.some((address) => same(address, unit.address));
+        toggled(table, unit.address, lifted ? 'lifted' : 'laid');
+      } else if (unit.status === 'leftOut')
         table
           .getState()
           .set({ said: 'That unit is left out: it would not lie whole inside the edge.' });
@@ -97,10 +121,11 @@ export function createLiftUnit(): Tool {
     },
     hover(table, pointer) {
       over = pointer ? (unitUnder(table, pointer)?.status ?? null) : null;
+      if (over === 'leftOut' && table.getState().document.cutting === 'edge') over = 'piece';
     },
     cancel() {
       from = null;
     },
-    cursor: () => (over === 'laid' || over === 'lifted' ? 'pointer' : 'grab'),
+    cursor: () => (over === 'laid' || over === 'lifted' || over === 'piece' ? 'pointer' : 'grab'),
   };
 }
