@@ -107,7 +107,8 @@ function Prices({ list, takeOff }: { list: ReturnType<typeof usePriceList>; take
   if (unpriced.length === 0)
     return (
       <p className="text-sm text-slate">
-        Prices of {dayText(list.data.on)}. Labour, margin and tax come in with the quote of a saved version.
+        Prices of {dayText(list.data.on)}. Labour, margin and tax come in with the quote of a saved
+        version.
       </p>
     );
   return (
