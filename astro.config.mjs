@@ -3,6 +3,7 @@ import { defineConfig } from 'astro/config';
 import node from '@astrojs/node';
 import react from '@astrojs/react';
 import tailwindcss from '@tailwindcss/vite';
+import { siteProgram } from './pwa.config';
 
 export default defineConfig({
   output: 'server',
@@ -10,7 +11,7 @@ export default defineConfig({
   // The middleware's own check of origins covers JSON too; Astro's takes every host for localhost.
   security: { checkOrigin: false },
   devToolbar: { enabled: false },
-  integrations: [react()],
+  integrations: [react(), ...siteProgram()],
   vite: {
     plugins: [tailwindcss()],
     // Without this list the first visit in development re-optimises and reloads the page.
@@ -26,6 +27,7 @@ export default defineConfig({
         'polygon-clipping',
         'jspdf',
         'svg2pdf.js',
+        'idb',
       ],
     },
     // Said here as well as in tsconfig.json: the build of workers does not read that.

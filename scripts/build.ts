@@ -5,7 +5,14 @@ import path from 'node:path';
 const ROOT = path.resolve(import.meta.dirname, '..');
 /** Written when a build has ended well, so that one that was broken off counts as missing. */
 const STAMP = path.join(ROOT, 'dist', 'built.txt');
-const SOURCES = ['src', 'public', 'astro.config.mjs', 'package.json', 'tsconfig.json'];
+const SOURCES = [
+  'src',
+  'public',
+  'astro.config.mjs',
+  'pwa.config.ts',
+  'package.json',
+  'tsconfig.json',
+];
 
 const newest = (file: string): number => {
   if (!existsSync(file)) return 0;

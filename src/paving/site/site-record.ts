@@ -34,9 +34,7 @@ const compareText = (a: string, b: string): number => (a < b ? -1 : a > b ? 1 : 
  * Entries in the order in which they were made, however they came in: by moment, and those of one phone in its
  * own order whatever its clock did meanwhile.
  */
-export const entriesInOrder = <By>(
-  entries: readonly RecordedEntry<By>[],
-): readonly RecordedEntry<By>[] => {
+export const entriesInOrder = <E extends RecordedEntry>(entries: readonly E[]): readonly E[] => {
   const byPlace = [...entries].sort(
     (a, b) => compareText(a.device, b.device) || a.place - b.place || compareText(a.id, b.id),
   );

@@ -1,0 +1,102 @@
+import { useMemo, useState } from 'react';
+import type { ControlPoint } from '@/paving/set-out/set-out';
+import { Segmented } from '../ui/Segmented';
+import { PointCard } from './PointCard';
+import type { TabProps } from './PackView';
+import { TapePlan } from './TapePlan';
+
+const GROUPS = [
+  ['edge', 'Edge'],
+  ['unit', 'First unit'],
+  ['string', 'Strings'],
+] as const;
+type Group = (typeof GROUPS)[number][0];
+
+const groupOf = ({ kind }: ControlPoint): Group =>
+  kind === 'unit' ? 'unit' : kind === 'string' ? 'string' : 'edge';
+
+/** The points to peg, one at a time, with their tapes; the plan shows where each lies. */
+export function SetOutTab({ kept, floor, display }: TabProps) {
+  const { setOut } = floor;
+  const [group, setGroup] = useState<Group>('edge');
+  const [name, setName] = useState<string | null>(null);
+  const own = useMemo(
+    () => setOut.points.filter((point) => groupOf(point) === group),
+    [setOut, group],
+  );
+  const at = Math.max(
+    0,
+    own.findIndex((point) => point.name === name),
+  );
+  const point = own.at(at);
+  const step = (by: number) => setName(own[(at + by + own.length) % own.length].name);
+  const [a, b] = setOut.datums;
+  return (
+    <section aria-label="Set out">
+      <h2 className="sr-only">Set out</h2>
+      {kept.pack.issueNote && (
+        <p className="mb-3 border-l-2 border-slate pl-3">“{kept.pack.issueNote}”</p>
+      )}
+      {kept.pack.siteNote && (
+        <p className="mb-3 whitespace-pre-line text-slate">{kept.pack.siteNote}</p>
+      )}
+      <div className="-mx-4 h-[42vh] min-h-64 border-y border-stone-300 sm:mx-0 sm:border">
+        <TapePlan
+          document={kept.pack.document}
+          datums={setOut.datums}
+          points={own}
+          point={point ?? null}
+          onPick={setName}
+        />
+      </div>
+      {setOut.advice.length > 0 && (
+        <ul className="mt-3 space-y-1">
+          {setOut.advice.map(({ text }) => (
+            <li key={text} className="border-l-2 border-amber pl-3">
+              {text}
+            </li>
+          ))}
+        </ul>
+      )}
+      <p className="mt-3 text-slate">
+        Hook one tape on {a.name} and one on {b.name}. Pull both level and tight; the point is where
+        they cross.
+      </p>
+      <div className="mt-3">
+        <Segmented
+          label="Points"
+          hideLabel
+          value={group}
+          onChange={(next) => {
+            setGroup(next);
+            setName(null);
+          }}
+          options={GROUPS}
+        />
+      </div>
+      {point ? (
+        <>
+          <PointCard point={point} datums={setOut.datums} display={display} />
+          <div className="mt-4 flex items-center gap-3">
+            <button type="button" className="button min-h-12 flex-1" onClick={() => step(-1)}>
+              ‹ Before
+            </button>
+            <span className="text-slate">
+              {at + 1} of {own.length}
+            </span>
+            <button type="button" className="button min-h-12 flex-1" onClick={() => step(1)}>
+              Next ›
+            </button>
+          </div>
+        </>
+      ) : (
+        <p className="mt-4 text-slate">There are none on this floor.</p>
+      )}
+      <p className="mt-6 border-t border-stone-300 pt-3 text-sm text-slate">
+        Call before you dig: pegs and pins find buried pipes and cables too. Units over 23 kg are
+        lifted by two people or a machine. Figures are aids to setting out, not a design
+        certificate; local codes and licensed practice decide.
+      </p>
+    </section>
+  );
+}
