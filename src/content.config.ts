@@ -11,7 +11,17 @@ const guide = defineCollection({
     /** Which piece of work it belongs to. */
     part: z.enum(['draft', 'agree']).default('draft'),
     /** Which of the program's own drawings goes with it; see components/guide. */
-    picture: z.enum(['ground', 'bonds', 'places', 'fit', 'gaps', 'versions', 'sheet', 'overlay']),
+    picture: z.enum([
+      'ground',
+      'bonds',
+      'places',
+      'fit',
+      'gaps',
+      'versions',
+      'sheet',
+      'overlay',
+      'cutting',
+    ]),
   }),
 });
 

@@ -1,5 +1,6 @@
 import type { Point } from '@/geometry/point';
 import { cornerName, keepOutName } from '@/paving/edge-names';
+import { cutPieces } from '@/paving/cutting/cut-pieces';
 import type { Laying, UnitSet } from '@/paving/laying';
 import { unitCorners } from '@/paving/laying';
 import type { SetOut } from '@/paving/set-out/set-out-types';
@@ -25,6 +26,7 @@ export const MODEL_LAYERS = [
   'Keep-outs',
   'Units',
   'Lifted units',
+  'Cut pieces',
   'First unit',
   'Strings',
   'Control points',
@@ -63,6 +65,17 @@ export function floorModel(laying: Laying, setOut: SetOut | null): Drawing {
     'Keep-outs': keepOuts,
     Units: outlines(laying, laying.laid),
     'Lifted units': outlines(laying, laying.lifted),
+    'Cut pieces':
+      laying.document.cutting === 'edge'
+        ? cutPieces(laying).pieces.map(({ polygon, holes = [] }): DrawCommand => ({
+            kind: 'path',
+            rings: [polygon, ...holes].map((ring) => ({
+              points: ring.map((point) => paperFromGround(FULL_SIZE, point)),
+              closed: true,
+            })),
+            stroke: STROKE,
+          }))
+        : [],
     'First unit': first ? [closed(first.corners)] : [],
     Strings: (setOut?.courses ?? []).map(({ from, to }) => ({
       kind: 'line',
