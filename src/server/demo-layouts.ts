@@ -1,4 +1,5 @@
 import type { LayoutDocument, Placement, Vertex } from '@/paving/layout-document';
+import type { Spot } from '@/paving/levels';
 
 /** A quarter circle's bulge, tan(90° / 4). */
 const QUARTER = Math.SQRT2 - 1;
@@ -16,6 +17,10 @@ const rectangle = (x: number, y: number, width: number, depth: number): Vertex[]
   [x + width, y + depth],
   [x, y + depth],
 ];
+
+/** Levels measured from the edge's top down to the ground, mm: a place, then its level. */
+const measured = (spots: readonly (readonly [x: number, y: number, level: number])[]): Spot[] =>
+  spots.map(([x, y, level]) => ({ at: [x, y], level }));
 
 const slab = {
   id: 'slab',
@@ -45,6 +50,24 @@ const court: Omit<LayoutDocument, 'bond' | 'placement'> = {
   lifted: [],
   cutting: 'none',
   aggregate: { name: 'River gravel 10 mm', colour: '#a89f8d' },
+  buildUp: { use: 'foot', frost: false, bedding: 25, base: 100, geotextile: true, overdig: 0 },
+  levels: {
+    finish: 0,
+    fall: { kind: 'oneWay', direction: 270, percent: 2 },
+    proud: 3,
+    spots: measured([
+      [0, 0, -305],
+      [3600, 0, -330],
+      [7200, 0, -290],
+      [7200, 3100, -205],
+      [4300, 3100, -190],
+      [4300, 5400, -95],
+      [2000, 5400, -60],
+      [0, 5400, -85],
+      [900, 2600, -215],
+      [2800, 3300, -150],
+    ]),
+  },
   notes:
     'Edge: 150 mm sawn kerb, set level. The tree stays; its pit keeps a 1 m square of open ground.',
 };
@@ -97,6 +120,22 @@ export const ROUND_TERRACE: LayoutDocument = {
   cutting: 'none',
   tones: { rule: 'random', second: '#7d4a3a', share: 0.35, seed: 7 },
   aggregate: { name: 'Slate chippings 6 mm', colour: '#6d7273' },
+  buildUp: { use: 'foot', frost: false, bedding: 25, base: 100, geotextile: false, overdig: 0 },
+  levels: {
+    finish: 0,
+    fall: { kind: 'oneWay', direction: 225, percent: 2 },
+    proud: 4,
+    spots: measured([
+      [2300, 0, -120],
+      [1630, 1630, -90],
+      [0, 2300, -105],
+      [-1630, 1630, -140],
+      [-2300, 0, -185],
+      [-1630, -1630, -260],
+      [0, -2300, -230],
+      [1630, -1630, -160],
+    ]),
+  },
   notes: 'Edge: steel strip rolled to a radius of 2.3 m. The fire bowl stands on its own pad.',
 };
 
@@ -134,4 +173,21 @@ export const SIDE_YARD: LayoutDocument = {
   cutting: 'none',
   tones: { rule: 'course', second: '#8f9591', share: 0.5, seed: 1 },
   aggregate: { name: 'Limestone grit 4 mm', colour: '#d9d3c3' },
+  buildUp: { use: 'foot', frost: false, bedding: 25, base: 100, geotextile: false, overdig: 0 },
+  levels: {
+    finish: 0,
+    fall: { kind: 'toPoint', at: [2800, 300], direction: 0, percent: 2 },
+    proud: 0,
+    spots: measured([
+      [0, 0, -190],
+      [2800, 0, -260],
+      [5200, 0, -215],
+      [10_400, 0, -120],
+      [10_400, 2450, -95],
+      [7900, 2450, -110],
+      [7100, 1750, -150],
+      [3400, 1750, -240],
+      [0, 1750, -175],
+    ]),
+  },
 };
