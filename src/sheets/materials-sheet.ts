@@ -76,7 +76,9 @@ export function materialsDrafts(
           : [
               {
                 header: headingRow('Look at before ordering', width),
-                rows: warnings.map(({ words, source }) => itemRow(`${words} (${source})`, width)),
+                rows: warnings.map(({ words, source }) =>
+                  itemRow(source ? `${words} (${source})` : words, width),
+                ),
               },
             ]),
         {

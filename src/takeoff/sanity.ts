@@ -193,7 +193,7 @@ function openWarnings({ laying, parts, earth, report }: Looked): TakeOffWarning[
       weight: 'look',
       words:
         'No unit is laid, so only the fill and the layers are counted. Look at Unit, Bond and Fit first.',
-      source: 'the layout itself',
+      source: null,
       line: null,
     });
   }
@@ -203,7 +203,7 @@ function openWarnings({ laying, parts, earth, report }: Looked): TakeOffWarning[
       weight: 'look',
       words:
         'Bedding and base have not been looked at yet: the least that is usual for a floor to walk on is taken. Say what they are under Levels.',
-      source: 'the layout itself',
+      source: null,
       line: 'layer:base',
     });
   }
@@ -213,7 +213,7 @@ function openWarnings({ laying, parts, earth, report }: Looked): TakeOffWarning[
       weight: 'look',
       words:
         'In this pattern joints and voids cannot all be told from the margin; the fill as a whole is right.',
-      source: 'the layout itself',
+      source: null,
       line: 'fill:margin',
     });
   }
@@ -222,7 +222,7 @@ function openWarnings({ laying, parts, earth, report }: Looked): TakeOffWarning[
       id: `levels:${kind}`,
       weight: 'look',
       words: text,
-      source: 'the levels',
+      source: null,
       line: 'earth:spoil',
     });
   }

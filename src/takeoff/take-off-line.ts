@@ -92,8 +92,8 @@ export interface TakeOffWarning {
   /** `wrong` will not work; `look` needs a decision; `caution` is for people's safety. */
   readonly weight: 'wrong' | 'look' | 'caution';
   readonly words: string;
-  /** Who says so; `usual practice` where nobody published it. */
-  readonly source: string;
+  /** Who says so; `usual practice` where nobody published it, null where the layout itself does. */
+  readonly source: string | null;
   /** The line that it is about. */
   readonly line: string | null;
 }

@@ -49,7 +49,7 @@ export function PegString() {
           }`}
         >
           <Peg state={n < at ? 'done' : n === at ? 'now' : 'to come'} />
-          {STEP_NAMES[name]}
+          <span className="whitespace-nowrap">{STEP_NAMES[name]}</span>
         </button>
       ))}
     </nav>

@@ -41,11 +41,18 @@ export function TakeOffPanel() {
         <>
           <Totals takeOff={takeOff} />
           <Prices list={list} takeOff={takeOff} />
-          <TakeOffWarnings warnings={takeOff.warnings} />
+          <TakeOffWarnings
+            title="Before you order"
+            warnings={takeOff.warnings.filter(({ weight }) => weight !== 'caution')}
+          />
           <TakeOffBars takeOff={takeOff} document={document} />
           <OrderList takeOff={takeOff} prices={list.data ?? null} />
           <Beyond />
           <QuantityList takeOff={takeOff} />
+          <TakeOffWarnings
+            title="Take care"
+            warnings={takeOff.warnings.filter(({ weight }) => weight === 'caution')}
+          />
         </>
       )}
     </div>

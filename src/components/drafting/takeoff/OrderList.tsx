@@ -34,7 +34,7 @@ function Order({
   const display = useTable((state) => state.document.display);
   const offered = prices?.items.filter(({ kind }) => kind === order.kind) ?? [];
   const cost =
-    currency === null
+    currency === null || prices?.items.length === 0
       ? null
       : order.costMinor === null
         ? 'no price'

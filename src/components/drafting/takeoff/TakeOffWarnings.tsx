@@ -4,15 +4,21 @@ import type { TakeOffWarning } from '@/takeoff/take-off';
 const LOOKS = {
   wrong: { word: 'Will not work', icon: CircleAlert, ink: 'text-brick' },
   look: { word: 'Look here', icon: Eye, ink: 'text-amber' },
-  caution: { word: 'Take care', icon: HardHat, ink: 'text-graphite' },
+  caution: { word: '', icon: HardHat, ink: 'text-graphite' },
 } as const;
 
-/** What a careful person would look at before ordering, what will not work first. */
-export function TakeOffWarnings({ warnings }: { warnings: readonly TakeOffWarning[] }) {
+/** Warnings of one kind under a heading: what a careful person would look at before ordering. */
+export function TakeOffWarnings({
+  title,
+  warnings,
+}: {
+  title: string;
+  warnings: readonly TakeOffWarning[];
+}) {
   if (warnings.length === 0) return null;
   return (
-    <section aria-label="Before you order">
-      <h3 className="border-b border-graphite pb-1">Before you order</h3>
+    <section aria-label={title}>
+      <h3 className="border-b border-graphite pb-1">{title}</h3>
       <ul className="hairlines">
         {warnings.map(({ id, weight, words, source }) => {
           const { word, icon: Icon, ink } = LOOKS[weight];
@@ -21,11 +27,13 @@ export function TakeOffWarnings({ warnings }: { warnings: readonly TakeOffWarnin
               <Icon size={18} aria-hidden className={`mt-0.5 shrink-0 ${ink}`} />
               <div>
                 <p className="text-[0.95rem]">
-                  <b className={ink}>{word}.</b> {words}
+                  {word && <b className={ink}>{word}.</b>} {words}
                 </p>
-                <p className="text-[0.82rem] text-slate">
-                  {source[0].toUpperCase() + source.slice(1)}.
-                </p>
+                {source && (
+                  <p className="text-[0.82rem] text-slate">
+                    {source[0].toUpperCase() + source.slice(1)}.
+                  </p>
+                )}
               </div>
             </li>
           );
