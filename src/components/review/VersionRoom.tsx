@@ -8,6 +8,7 @@ import { Comments } from '../comments/Comments';
 import { useThreads } from '../comments/threads';
 import { useLiveRefresh } from '../live/live-refresh';
 import { api } from '../ui/api';
+import { ClientQuote } from '../quote/ClientQuote';
 import { Queries } from '../ui/Queries';
 import { useAgreement } from './agreement';
 import { type ChangePin } from './AskChangeForm';
@@ -120,6 +121,7 @@ function Room({ version: first, role, layouts, thread, children, tools }: Props)
           (role === 'owner' || role === 'designer') && <FirmSteps version={version} />
         )}
         {tools && <div>{tools}</div>}
+        {client && <ClientQuote versionId={version.id} />}
         {client && <PlainFigures version={version} />}
         <Choices version={version} layouts={layouts} client={client} agreement={agreement.data} />
         <Comments

@@ -1,11 +1,12 @@
 import { BOND_KINDS, BOND_NAMES, bondChosen, mainUnit } from '@/paving/bond-edits';
 import { documentUnit } from '@/paving/bond';
-import type { BondKind, LayoutDocument, Tones } from '@/paving/layout-document';
+import type { Aggregate, BondKind, LayoutDocument, Tones } from '@/paving/layout-document';
 import { LengthField } from '../../ui/LengthField';
 import { NumberField } from '../../ui/NumberField';
 import { Segmented } from '../../ui/Segmented';
 import { PLAIN_AGGREGATE } from '../../ui/drawing-colours';
 import { BondPicture } from '../BondPicture';
+import { CatalogueChoice } from '../CatalogueChoice';
 import { FloorFigures } from '../FloorFigures';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 import { CustomBond } from './CustomBond';
@@ -236,7 +237,7 @@ const AGGREGATES: readonly (readonly [name: string, colour: string])[] = [
 function AggregateFields() {
   const table = useTableStore();
   const { document } = useShownFloor();
-  const now = document.aggregate ?? { name: 'Golden gravel', colour: PLAIN_AGGREGATE };
+  const now: Aggregate = document.aggregate ?? { name: 'Golden gravel', colour: PLAIN_AGGREGATE };
   return (
     <section aria-label="Aggregate">
       <p className="field-label">Aggregate in joints, voids and margin</p>
@@ -256,6 +257,29 @@ function AggregateFields() {
             {name}
           </button>
         ))}
+      </div>
+      <div className="mt-4">
+        <CatalogueChoice
+          kind="aggregate"
+          label="or from your catalogue"
+          chosen={now.catalogueId}
+          picture={(item) => (
+            <span
+              className="inline-block size-5 shrink-0 border border-slate"
+              style={{ background: item.colour ?? PLAIN_AGGREGATE }}
+            />
+          )}
+          onChoose={(item) =>
+            table.getState().edit((d) => ({
+              ...d,
+              aggregate: {
+                name: item.name,
+                colour: item.colour ?? d.aggregate?.colour ?? PLAIN_AGGREGATE,
+                catalogueId: item.id,
+              },
+            }))
+          }
+        />
       </div>
     </section>
   );

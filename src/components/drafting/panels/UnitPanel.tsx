@@ -1,4 +1,5 @@
 import { useState } from 'react';
+import type { CatalogueItem } from '@/api-types/catalogue';
 import { unitChanged, mainUnitId } from '@/paving/bond-edits';
 import type { LayoutDocument, Unit } from '@/paving/layout-document';
 import { formatLength, formatSize } from '@/paving/length';
@@ -6,6 +7,7 @@ import { STARTER_CATALOGUE, type CatalogueUnit } from '@/paving/starter-catalogu
 import { LengthField } from '../../ui/LengthField';
 import { Segmented } from '../../ui/Segmented';
 import { PLAIN_UNIT } from '../../ui/drawing-colours';
+import { CatalogueChoice } from '../CatalogueChoice';
 import { FloorFigures } from '../FloorFigures';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 
@@ -59,7 +61,22 @@ export function UnitPanel() {
   return (
     <div className="space-y-5">
       <FloorFigures brief />
-      <section aria-label="Catalogue">
+      <CatalogueChoice
+        kind="unit"
+        label="From your catalogue"
+        chosen={unit.catalogueId}
+        picture={(item) => (
+          <UnitPicture
+            unit={{
+              length: item.length!,
+              width: item.width!,
+              ...(item.colour ? { colour: item.colour } : {}),
+            }}
+          />
+        )}
+        onChoose={(item) => change(id, unitOfItem(item))}
+      />
+      <section aria-label="Sizes in the trade">
         <Segmented
           label="Sizes in the trade"
           value={system}
@@ -80,7 +97,7 @@ export function UnitPanel() {
                 }`}
                 onClick={() => {
                   const { system: _system, ...sizes } = item;
-                  change(id, sizes);
+                  change(id, { ...sizes, ...NOT_OF_CATALOGUE });
                 }}
               >
                 <UnitPicture unit={item} />
@@ -105,6 +122,21 @@ export function UnitPanel() {
     </div>
   );
 }
+
+/** What a unit of the catalogue is on the floor; what the catalogue does not know is left to be worked out. */
+const unitOfItem = (item: CatalogueItem): Omit<Unit, 'id'> => ({
+  name: item.name,
+  length: item.length!,
+  width: item.width!,
+  thickness: item.thickness!,
+  colour: item.colour ?? undefined,
+  tolerance: item.tolerance ?? undefined,
+  mass: item.massKg ?? undefined,
+  catalogueId: item.id,
+});
+
+/** A unit of some other size is none of the catalogue's. */
+const NOT_OF_CATALOGUE = { catalogueId: undefined, mass: undefined, tolerance: undefined } as const;
 
 /** Names that say no more than the size: the catalogue's, and those made from it. */
 const sizeNamed = (name: string): boolean =>
@@ -164,7 +196,7 @@ function UnitFields({
               const name = `Own ${formatSize(next.length, next.width, display)}`;
               // A name that somebody gave stays; one that only said the size says the new one.
               const renamed = side !== 'thickness' && sizeNamed(unit.name) ? { name } : {};
-              change({ [side]: mm, ...renamed });
+              change({ [side]: mm, ...renamed, ...(unit.catalogueId ? NOT_OF_CATALOGUE : {}) });
             }}
           />
         ))}
