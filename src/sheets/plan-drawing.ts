@@ -1,7 +1,7 @@
 import type { GroundEdge } from '@/paving/ground';
 import { unitCorners } from '@/paving/laying';
-import type { DrawCommand, Layer, PaperBox, PaperPoint } from './drawing';
-import { PENS } from './drawing';
+import type { DrawCommand, Layer, PaperBox, PaperPoint, PathRing } from './drawing';
+import { PENS, boxRing } from './drawing';
 import type { DimensionedEdge, Outline } from './edge-dimensions';
 import { edgeDimensions, readingTurn, tick } from './edge-dimensions';
 import { cornerName, keepOutName } from '@/paving/edge-names';
@@ -15,7 +15,10 @@ import { isInside, withLabels } from './label-space';
 import type { LabelPlace, PlacedLabels, WantedLabel } from './plan-labels';
 import { cornerLetters, labelPlaced, labelsPlaced, placesAlong, placesOff } from './plan-labels';
 import { liftedCommands } from './lifted-marks';
+import { PART_STROKE } from './part-stroke';
+import { PLAN_PIECES } from './piece-drawing';
 import type { PlanFacts } from './plan-panel';
+import type { PlanPart } from './plan-parts';
 import type { PlanView } from './plan-view';
 import { paperChords, paperFromGround } from './plan-view';
 import { LETTERING, textFitted, textWidth } from './text-measure';
@@ -46,6 +49,7 @@ export function planDrawing(facts: PlanFacts, view: PlanView, frame: PaperBox): 
     keepOutStroke: { width: PENS.medium, colour: INK },
     unitStroke: { width: PENS.fine, colour: inkMix(PAPER, INK, unitInk) },
     markTone: true,
+    pieces: PLAN_PIECES,
     grain: { spacing: 1.8, size: 0.3 },
   });
   const [perimeter, ...keepOuts] = laying.ground.rings;
@@ -113,6 +117,8 @@ export function planDrawing(facts: PlanFacts, view: PlanView, frame: PaperBox): 
     ),
   );
 
+  take(labelsPlaced(facts.parts.map(partLabel(view)), space));
+
   return {
     asCourses: floor.asCourses,
     layers: [
@@ -121,10 +127,67 @@ export function planDrawing(facts: PlanFacts, view: PlanView, frame: PaperBox): 
       { name: 'lifted', commands: liftedCommands(laying, view) },
       { name: 'ground', commands: floor.outline },
       { name: 'keep-outs', commands: keepOuts.flatMap((ring) => crossCommands(ring.edges, view)) },
+      {
+        name: 'parts',
+        commands: partLines(facts.parts, floor.rings[0], view),
+      },
       { name: 'figures', commands: figures },
     ],
   };
 }
+
+const partRing = ({ ground: { least, greatest } }: PlanPart, view: PlanView): PathRing => {
+  const [left, bottom] = paperFromGround(view, least);
+  const [right, top] = paperFromGround(view, greatest);
+  return boxRing({ left, top, right, bottom });
+};
+
+/** Between parts, as far as the ground reaches. */
+function partLines(
+  parts: readonly PlanPart[],
+  { points }: Outline,
+  view: PlanView,
+): readonly DrawCommand[] {
+  const [xs, ys] = [points.map(([x]) => x), points.map(([, y]) => y)];
+  const within = (value: number, all: readonly number[]) =>
+    Math.min(Math.max(value, Math.min(...all)), Math.max(...all));
+  return parts.flatMap((part): DrawCommand[] => {
+    const [from, , to] = partRing(part, view).points;
+    const [left, right] = [within(from[0], xs), within(to[0], xs)];
+    const [top, bottom] = [within(from[1], ys), within(to[1], ys)];
+    const line = (start: PaperPoint, end: PaperPoint): DrawCommand => ({
+      kind: 'line',
+      from: start,
+      to: end,
+      stroke: PART_STROKE,
+    });
+    return [
+      ...(part.right === null ? [] : [line([right, top], [right, bottom])]),
+      ...(part.below === null ? [] : [line([left, bottom], [right, bottom])]),
+    ];
+  });
+}
+
+/** A part's name about its middle. */
+const partLabel =
+  (view: PlanView) =>
+  (part: PlanPart): WantedLabel => {
+    const { points } = partRing(part, view);
+    const [left, top] = points[0];
+    const [right, bottom] = points[2];
+    const shares = [0.5, 0.35, 0.65, 0.2, 0.8];
+    return {
+      text: part.name,
+      weight: 700,
+      places: shares.flatMap((down) =>
+        shares.map((along): LabelPlace => ({
+          middle: [left + (right - left) * along, top + (bottom - top) * down],
+          turnDeg: 0,
+          plate: true,
+        })),
+      ),
+    };
+  };
 
 /** Places along an edge that is long enough for the text: outside, then inside on a plate. */
 function alongEdge(edge: DimensionedEdge, text: string): readonly LabelPlace[] {

@@ -2,7 +2,9 @@ import { formatArea } from '@/paving/area';
 import { formatCount } from '@/paving/count';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { MM_PER_FOOT, MM_PER_INCH } from '@/paving/length';
+import { aggregateArea } from '@/paving/report';
 import { smallFigure } from '@/paving/small-figure';
+import { formatRun } from '@/takeoff/measures';
 import { floorCautions } from './cautions';
 import type { DrawCommand, PaperBox } from './drawing';
 import { PENS, boxRing } from './drawing';
@@ -12,20 +14,15 @@ import { INK, KEEP_OUT_COLOUR, inkMix } from './inks';
 import type { KeepOutPlace } from './keep-out-place';
 import { markRows } from './mark-row';
 import type { PanelRow } from './panel';
-import {
-  headingRow,
-  keptTogether,
-  itemRow,
-  pairRow,
-  sampleRow,
-  tableRow,
-  textRows,
-} from './panel';
+import { headingRow, keptTogether, itemRow, pairRow, sampleRow, tableRow, textRows } from './panel';
 import type { PlanInput } from './plan-input';
+import type { PlanPart } from './plan-parts';
 import { scaleBarRow } from './scale-bar';
 import { scaleName } from './scales';
 import type { StartPoint } from './start-point';
 import { liftedMarks } from './lifted-marks';
+import { PART_STROKE } from './part-stroke';
+import { pieceSample } from './piece-drawing';
 import { aggregateColour, firstTone, toneMark } from './unit-drawing';
 
 /** What the panel says, worked out once for every arrangement. */
@@ -34,6 +31,8 @@ export interface PlanFacts {
   readonly start: StartPoint | null;
   readonly keepOuts: readonly KeepOutPlace[];
   readonly asCourses: boolean;
+  /** Parts that further sheets show larger. */
+  readonly parts: readonly PlanPart[];
 }
 
 const BOND_NAMES: Readonly<Record<LayoutDocument['bond']['kind'], string>> = {
@@ -100,17 +99,26 @@ function quantityRows({ laying, report }: PlanInput, width: number): readonly Pa
       ? [pairRow('Whole units in all', formatCount(report.wholeUnits), width, 700)]
       : []),
     ...(report.lifted > 0 ? [pair('Lifted out by hand', formatCount(report.lifted))] : []),
-    pair('Left out, not drawn', formatCount(report.leftOut)),
+    ...(report.cut
+      ? [
+          pairRow('Pieces cut at the edge', formatCount(report.cut.count), width, 700),
+          pair('Whole units to saw them from', formatCount(report.cut.wholeUnits)),
+          ...(report.cut.underThird > 0
+            ? [pair('Smaller than a third of a unit', formatCount(report.cut.underThird))]
+            : []),
+          pair('To saw, in all', formatRun(report.cut.sawLength / 1000, display)),
+        ]
+      : [pair('Left out, not drawn', formatCount(report.leftOut))]),
     pair('Bond', BOND_NAMES[document.bond.kind]),
     pair('Joint', lengthText(joint, display, 1)),
     pair('Ground', formatArea(report.groundArea, display)),
     pair('Under units', formatArea(report.coveredArea, display)),
-    pair(document.aggregate?.name ?? 'Fill', formatArea(report.fillArea, display)),
+    pair(document.aggregate?.name ?? 'Fill', formatArea(aggregateArea(report), display)),
     ...(deep
       ? [
           pair(
             `The same, ${lengthText(thickness, display, 1)} deep`,
-            volumeText((report.fillArea * thickness) / 1000, display),
+            volumeText((aggregateArea(report) * thickness) / 1000, display),
           ),
         ]
       : []),
@@ -161,7 +169,7 @@ function startRows({ input, start }: PlanFacts, width: number): readonly PanelRo
   ];
 }
 
-function keyRows({ input, asCourses }: PlanFacts, width: number): readonly PanelRow[] {
+function keyRows({ input, asCourses, parts }: PlanFacts, width: number): readonly PanelRow[] {
   const { laying, report } = input;
   const { document } = laying;
   const fine = { width: PENS.fine, colour: INK };
@@ -213,6 +221,24 @@ function keyRows({ input, asCourses }: PlanFacts, width: number): readonly Panel
     ),
     ...(laying.ground.rings.length > 1
       ? [sampleRow(swatch(KEEP_OUT_COLOUR, crossed), 'Keep-out', width)]
+      : []),
+    ...(parts.length > 0
+      ? [
+          sampleRow(
+            (box) => [{ kind: 'path', rings: [boxRing(box)], stroke: PART_STROKE }],
+            `Parts ${parts[0].name} to ${parts[parts.length - 1].name}: each larger on a sheet of its own`,
+            width,
+          ),
+        ]
+      : []),
+    ...(report.cut && report.cut.count > 0
+      ? [
+          sampleRow(
+            pieceSample(firstTone(laying.motif[0].unit)),
+            'Cut piece: dashed edge sawn; dot, under a third of a unit; cross, too narrow to lay',
+            width,
+          ),
+        ]
       : []),
     ...(laying.lifted.count > 0
       ? [sampleRow(liftedSample(colour), 'Lifted out by hand: leave open', width)]

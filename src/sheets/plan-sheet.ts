@@ -3,10 +3,14 @@ import type { Arrangement, FiguredContent } from './figured-sheet';
 import { bestArrangement, figuredDrafts } from './figured-sheet';
 import { keepOutPlace } from './keep-out-place';
 import type { PaperName } from './paper';
+import type { NamedPoint } from './part-drawing';
+import { partDrafts } from './part-sheet';
 import { planDrawing } from './plan-drawing';
 import type { PlanInput } from './plan-input';
 import type { PlanFacts } from './plan-panel';
 import { planPanelRows } from './plan-panel';
+import type { PlanPart } from './plan-parts';
+import { planParts } from './plan-parts';
 import { pointsBounds } from './plan-view';
 import type { NumberedSheet, SheetDraft } from './sheet-draft';
 import { sheetsNumbered } from './sheet-draft';
@@ -15,34 +19,59 @@ import { layingTinted } from './unit-drawing';
 
 /** Characters. */
 const LONG_NOTES = 400;
+/** Stand in for parts while it is not known yet which there are: their row is as high. */
+const SOME_PARTS: readonly PlanPart[] = ['A1', 'C3'].map((name) => ({
+  name,
+  ground: { least: [0, 0], greatest: [0, 0] },
+  left: null,
+  right: null,
+  above: null,
+  below: null,
+}));
 /** A smaller unit on paper than this, mm, asks for a larger sheet where one would be to a larger scale. */
 export const READABLE_UNIT = 3;
 
 /**
  * The plan of a version on the paper asked for, or with `auto` on the smallest of its family (A4 and A3;
  * Letter and Tabloid for imperial) that shows units well. The first sheet has the plan; more
- * follow when the figures of its edges and notes need them.
+ * follow when the figures of its edges and notes need them. With `named` points to go by, a plan whose units are too
+ * small to be read is shown again in parts, a sheet each.
  */
-export function planDrafts(given: PlanInput): readonly SheetDraft[] {
+export function planDrafts(
+  given: PlanInput,
+  named: readonly NamedPoint[] | null = null,
+): readonly SheetDraft[] {
   const laying = layingTinted(given.laying);
   const facts: PlanFacts = {
     input: { ...given, laying },
     start: startPoint(laying),
     keepOuts: laying.ground.rings.slice(1).map((ring) => keepOutPlace(laying.ground, ring)),
     asCourses: false,
+    parts: [],
   };
   const deciding = factsDeciding(facts);
-  const content: FiguredContent = {
-    bounds: pointsBounds(laying.ground.rings[0].edges.flatMap((edge) => edge.chords)),
-    rows: (scale, width) => planPanelRows(deciding, scale, width),
-    draw: (view, inside) => {
-      const { layers, asCourses } = planDrawing(facts, view, inside);
-      const rows = (width: number) => planPanelRows({ ...facts, asCourses }, view.scale, width);
-      return { layers, rows };
+  const bounds = pointsBounds(laying.ground.rings[0].outline);
+  const contentWith = (parts: readonly PlanPart[]): FiguredContent => ({
+    bounds,
+    rows: (scale, width) => {
+      const inParts = named !== null && leastUnitSide(laying) / scale < READABLE_UNIT;
+      return planPanelRows({ ...deciding, parts: inParts ? SOME_PARTS : [] }, scale, width);
     },
-  };
-  const arrangement = arrangementChosen(content, facts.input);
-  return figuredDrafts(content, arrangement, { kind: 'plan', type: 'Floor plan' });
+    draw: (view, inside) => {
+      const { layers, asCourses } = planDrawing({ ...facts, parts }, view, inside);
+      const drawn = { ...facts, asCourses, parts };
+      return { layers, rows: (width: number) => planPanelRows(drawn, view.scale, width) };
+    },
+  });
+  const arrangement = arrangementChosen(contentWith([]), facts.input);
+  const made = named && planParts(laying, bounds, arrangement.paper.name, arrangement.scale);
+  const whole = figuredDrafts(contentWith(made?.parts ?? []), arrangement, {
+    kind: 'plan',
+    type: 'Floor plan',
+  });
+  if (!made) return whole;
+  const inPart = { laying, start: facts.start, points: named };
+  return [...whole, ...partDrafts(facts.input, inPart, made, bounds)];
 }
 
 /** The plan by itself, outside a pack. */

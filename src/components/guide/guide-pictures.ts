@@ -47,6 +47,7 @@ export function floorPicture(document: LayoutDocument, figures: 'ground' | 'gaps
     start: bare ? null : startPoint(input.laying),
     keepOuts: ground.rings.slice(1).map((ring) => keepOutPlace(ground, ring)),
     asCourses: false,
+    parts: [],
   };
   const { layers } = planDrawing(facts, viewCentred(bounds, scale, frame), frame);
   const paper = boxRing(frame);

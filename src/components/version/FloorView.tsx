@@ -7,6 +7,7 @@ import { boxRing } from '@/sheets/drawing';
 import { PAPER } from '@/sheets/inks';
 import { keepOutPlace } from '@/sheets/keep-out-place';
 import { planDrawing } from '@/sheets/plan-drawing';
+import { NO_STAMP } from '@/sheets/plan-input';
 import { pointsBounds, viewCentred } from '@/sheets/plan-view';
 import { startPoint } from '@/sheets/start-point';
 import { drawingSvg } from '@/sheets/svg-sink';
@@ -221,7 +222,7 @@ function ZoomButton({ name, sign, act }: { name: string; sign: string; act: () =
 
 /** The plan's own drawing, at whatever scale fills the box. */
 function floorFitted(version: VersionDetail, width: number, height: number): Drawing {
-  const input = versionPlanInput(version, 'auto');
+  const input = versionPlanInput({ version, stamp: NO_STAMP }, 'auto');
   const { ground } = input.laying;
   // The foot keeps clear of the zoom buttons.
   const frame = { left: 0, top: 0, right: width, bottom: height - FOOT };
@@ -235,6 +236,7 @@ function floorFitted(version: VersionDetail, width: number, height: number): Dra
     start: startPoint(input.laying),
     keepOuts: ground.rings.slice(1).map((ring) => keepOutPlace(ground, ring)),
     asCourses: false,
+    parts: [],
   };
   const { layers } = planDrawing(facts, viewCentred(bounds, scale, frame), frame);
   // Paper far beyond the frame, so that panning never comes to its end.

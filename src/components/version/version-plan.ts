@@ -1,12 +1,11 @@
-import type { SheetPack } from '@/api-types/sheet-pack';
 import type { VersionDetail } from '@/api-types/versions';
 import { layFloor } from '@/paving/laying';
 import type { PaperName } from '@/sheets/paper';
-import type { PlanInput } from '@/sheets/plan-input';
+import type { PlanInput, SheetStamp } from '@/sheets/plan-input';
 
 /** What the plan sheet of a version is drawn from. */
 export function versionPlanInput(
-  { version, stamp }: Pick<SheetPack, 'version' | 'stamp'>,
+  { version, stamp }: { readonly version: VersionDetail; readonly stamp: SheetStamp },
   paper: PaperName | 'auto',
 ): PlanInput {
   return {

@@ -1,0 +1,56 @@
+import { setOut } from '@/paving/set-out/set-out';
+import { checksDrafts } from './checks-sheet';
+import { controlDrafts } from './control-sheet';
+import { coursesDrafts } from './courses-sheet';
+import type { MaterialsTakeOff } from './materials-sheet';
+import { materialsDrafts } from './materials-sheet';
+import type { PaperName } from './paper';
+import type { PlanInput } from './plan-input';
+import { planDrafts } from './plan-sheet';
+import { sectionDrafts } from './section-sheet';
+import type { SetOutInput } from './set-out-input';
+import type { NumberedSheet, SheetKind } from './sheet-draft';
+import { sheetsNumbered } from './sheet-draft';
+
+/** All that a set-out pack is drawn from. */
+export interface PackInput extends SetOutInput {
+  readonly takeOff: MaterialsTakeOff;
+}
+
+export const packInput = (input: PlanInput, takeOff: MaterialsTakeOff): PackInput => ({
+  ...input,
+  setOut: setOut(input.laying, input.report),
+  takeOff,
+});
+
+/** What each kind of sheet is called where one chooses among them, and what it is for. */
+export const SHEET_NAMES: Readonly<Record<SheetKind, { name: string; use: string }>> = {
+  plan: { name: 'Plan', use: 'the floor with its figures; in parts where it is large' },
+  control: { name: 'Control points', use: 'every point by two tapes, by offsets, by coordinates' },
+  courses: { name: 'Courses', use: 'strings, and each unit’s running length to tick' },
+  section: { name: 'Section', use: 'the build-up, levels and the screed board' },
+  materials: { name: 'Materials', use: 'what the floor takes and how it is ordered' },
+  checks: { name: 'Checks', use: 'what to measure, what it should read, and room to write' },
+};
+
+/** Every sheet of the pack in the order of use, numbered through, all on one size of paper. */
+export function packSheets(input: PackInput): readonly NumberedSheet[] {
+  const plan = planDrafts(
+    input,
+    input.setOut.points.filter(({ kind }) => kind !== 'string'),
+  );
+  const paper: PaperName = plan[0].paper.name;
+  const drafts = [
+    ...plan,
+    ...controlDrafts(input, paper),
+    ...coursesDrafts(input, paper),
+    ...sectionDrafts(input, paper),
+    ...materialsDrafts(input, input.takeOff, paper),
+    ...checksDrafts(input, paper),
+  ];
+  return sheetsNumbered(drafts, input);
+}
+
+/** The plan sheets alone, for whoever may have no more. */
+export const planPackSheets = (input: PlanInput): readonly NumberedSheet[] =>
+  sheetsNumbered(planDrafts(input, []), input);
