@@ -1,5 +1,8 @@
 import { readFile } from 'node:fs/promises';
 import { text } from 'node:stream/consumers';
+import { creep, measureProblem } from '@/paving/creep/creep';
+import type { JointLimits, UnitMeasure } from '@/paving/creep/creep-types';
+import { refit } from '@/paving/creep/refit';
 import { fit, fitRefusal, type EdgeAddress, type FitHold, type FitOptions } from '@/paving/fit/fit';
 import { rangeTurns } from '@/paving/fit/turn-sweep';
 import type { LayoutDocument } from '@/paving/layout-document';
@@ -66,6 +69,72 @@ function fitOptions(options: readonly string[]): FitOptions {
   return { turn, hold };
 }
 
+/** `--measure UNIT:SIDE:COUNT:TOTAL`, such as `slab:length:10:4509`; any number of them. */
+function unitMeasure(text: string): UnitMeasure {
+  const [unit, side, count, total, ...rest] = text.split(':');
+  if (!unit || (side !== 'length' && side !== 'width') || rest.length > 0)
+    throw new Refusal(
+      `"${text}" is not a measure; write UNIT:SIDE:COUNT:TOTAL, such as slab:length:10:4509`,
+    );
+  return { unit, side, count: number(count), total: number(total) };
+}
+
+/** `1-4` or `1,2,3`, or both. */
+function courseNumbers(text: string): number[] {
+  return text.split(',').flatMap((part) => {
+    const [from, to = from, ...rest] = part.split('-').map(number);
+    if (
+      !Number.isInteger(from) ||
+      !Number.isInteger(to) ||
+      to < from ||
+      to - from > 10_000 ||
+      rest.length > 0
+    )
+      throw new Refusal(`"${part}" is not a run of courses; write 1-4 or 1,2,3`);
+    return Array.from({ length: to - from + 1 }, (_, n) => from + n);
+  });
+}
+
+interface CreepOptions {
+  readonly measures: UnitMeasure[];
+  readonly joints?: JointLimits;
+  readonly laid: number[];
+  readonly offset: number;
+  readonly along?: number;
+  readonly shift?: number;
+}
+
+function creepOptions(task: 'creep' | 'refit', options: readonly string[]): CreepOptions {
+  let asked: CreepOptions = { measures: [], laid: [], offset: 0 };
+  for (let n = 0; n < options.length; n += 2) {
+    const [option, value = ''] = [options[n], options[n + 1]];
+    const length = () => {
+      const mm = number(value);
+      if (!Number.isFinite(mm)) throw new Refusal(`"${value}" is not a length in mm for ${option}`);
+      return mm;
+    };
+    if (option === '--measure') {
+      asked = { ...asked, measures: [...asked.measures, unitMeasure(value)] };
+    } else if (option === '--joints') {
+      const [least, greatest, ...rest] = value.split(':').map(number);
+      if (rest.length > 0 || !(least >= 0 && greatest >= least))
+        throw new Refusal(`"${value}" is not a range of joints; write FROM:TO in mm, such as 2:5`);
+      asked = { ...asked, joints: { least, greatest } };
+    } else if (task === 'refit' && option === '--laid') {
+      asked = { ...asked, laid: courseNumbers(value) };
+    } else if (task === 'refit' && option === '--offset') {
+      asked = { ...asked, offset: length() };
+    } else if (task === 'refit' && option === '--along') {
+      asked = { ...asked, along: length() };
+    } else if (task === 'refit' && option === '--shift') {
+      asked = { ...asked, shift: length() };
+    } else {
+      throw new Refusal(`${task} takes no option "${option}"`);
+    }
+  }
+  return asked;
+}
+
 const tasks: Readonly<Record<string, Task>> = {
   report: {
     usage: 'report FILE|-',
@@ -96,6 +165,24 @@ const tasks: Readonly<Record<string, Task>> = {
     run: (document, options) => {
       if (options.length > 0) throw new Refusal(`set-out takes no option "${options[0]}"`);
       return setOut(layFloor(document));
+    },
+  },
+  creep: {
+    usage: 'creep FILE|- [--measure UNIT:SIDE:COUNT:TOTAL …] [--joints FROM:TO]',
+    run: (document, options) => {
+      const { measures, joints } = creepOptions('creep', options);
+      const problem = measureProblem(document, measures);
+      if (problem) throw new Refusal(problem);
+      return creep(layFloor(document), { measures, joints });
+    },
+  },
+  refit: {
+    usage:
+      'refit FILE|- [--measure UNIT:SIDE:COUNT:TOTAL …] [--laid 1-4] [--offset MM] [--along MM] [--joints FROM:TO] [--shift MM]',
+    run: (document, options) => {
+      const result = refit(layFloor(document), creepOptions('refit', options));
+      if (!result.ok) throw new Refusal(result.message);
+      return result.refit;
     },
   },
 };

@@ -59,12 +59,12 @@ export interface CourseCreep {
 export interface JointCapacity {
   readonly direction: 'along' | 'across';
   readonly units: number;
-  /** What one unit may be off either way, and whence it is known. */
+  /** What one unit may be off, and whence it is known: its tolerance, or its measured growth and the doubt about it (below 0 where units run small). */
   readonly each: number;
   readonly from: 'tolerance' | 'measured';
-  /** Every unit off the same way: `units` × `each`. */
+  /** Every unit off the same way: the growth of the row, and the joint that takes it. */
   readonly worst: { readonly growth: number; readonly joint: number; readonly does: boolean };
-  /** Large and small by chance: √`units` × `each` (root-sum-square). */
+  /** Large and small by chance: the root of the number of units instead of the number (root-sum-square). */
   readonly chance: { readonly growth: number; readonly joint: number; readonly does: boolean };
 }
 
@@ -125,6 +125,8 @@ export interface Refit {
   /** Planned units in courses still to lay, and those of them that have to be left out. */
   readonly toLay: number;
   readonly dropped: readonly Address[];
+  /** Units that will be laid in those courses: `toLay` less those dropped, or, when no course is laid, of the floor started anew. */
+  readonly kept: number;
   /** Joint between courses and joint along them; the same where the bond has only one. */
   readonly jointAcross: number;
   readonly jointAlong: number;

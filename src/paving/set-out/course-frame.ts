@@ -53,8 +53,13 @@ export interface CourseEntry {
 const GREATEST_STEP = 6;
 /** A way along the units' sides is taken unless its period is this many times longer than the lattice's own step. */
 const GREATEST_PERIOD = 2;
+/** Units whose near sides are this much out of line, mm, go by one string: no eye and no string is finer. */
+export const SAME_STRING_MM = 1;
 /** Sides nearer to the string's way than this sine are parallel to it. */
 const PARALLEL_SINE = 1e-7;
+
+/** What of a laying the frame hangs on. */
+type Pattern = Pick<Laying, 'document' | 'lattice' | 'motif'>;
 
 const dot = (one: Point, other: Point) => one[0] * other[0] + one[1] * other[1];
 const cross = (one: Point, other: Point) => one[0] * other[1] - one[1] * other[0];
@@ -64,7 +69,7 @@ function commonDivisor(a: number, b: number): number {
 }
 
 /** The lattice step that strings follow: along a side of the first unit where one is short enough, else along `a`. */
-function stringStep({ lattice, motif }: Laying): readonly [number, number] {
+function stringStep({ lattice, motif }: Pattern): readonly [number, number] {
   const size = (i: number, j: number) =>
     Math.hypot(i * lattice.a[0] + j * lattice.b[0], i * lattice.a[1] + j * lattice.b[1]);
   const limit = GREATEST_PERIOD * Math.hypot(...lattice.a) + LENGTH_TOLERANCE_MM;
@@ -103,7 +108,7 @@ function otherStep(i: number, j: number): readonly [number, number] {
 }
 
 /** The frame of a laying's courses. */
-export function courseFrame(laying: Laying): CourseFrame {
+export function courseFrame(laying: Pattern): CourseFrame {
   const { lattice, motif } = laying;
   let [ci, cj] = stringStep(laying);
   const at = (i: number, j: number): Point => [
@@ -149,15 +154,23 @@ export function courseFrame(laying: Laying): CourseFrame {
     };
   });
 
-  const lines: number[] = [];
+  const firsts: number[] = [];
   const placed = feet.map(({ line }) => {
-    for (let set = 0; set < lines.length; set++) {
-      const rows = Math.round((line - lines[set]) / rise);
-      if (Math.abs(line - lines[set] - rows * rise) <= LENGTH_TOLERANCE_MM) return { set, rows };
+    for (let set = 0; set < firsts.length; set++) {
+      const rows = Math.round((line - firsts[set]) / rise);
+      if (Math.abs(line - firsts[set] - rows * rise) <= SAME_STRING_MM) return { set, rows };
     }
-    lines.push(line);
-    return { set: lines.length - 1, rows: 0 };
+    firsts.push(line);
+    return { set: firsts.length - 1, rows: 0 };
   });
+  // The string runs by the lowest of its units, so that none lies over it.
+  const lines = firsts.map((_, set) =>
+    Math.min(
+      ...feet.flatMap(({ line }, k) =>
+        placed[k].set === set ? [line - placed[k].rows * rise] : [],
+      ),
+    ),
+  );
   const starts = feet.map(({ centre, from }, k) => centre + from - placed[k].rows * shift);
   const entries = feet.map(({ centre, from, to }, k): CourseEntry => {
     const { set, rows } = placed[k];

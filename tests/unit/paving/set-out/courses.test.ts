@@ -5,6 +5,7 @@ import { ringHolds } from '@/geometry/ring';
 import { layFloor, unitCorners, type Laying } from '@/paving/laying';
 import type { LayoutDocument, Vertex } from '@/paving/layout-document';
 import { parseLayoutDocument } from '@/paving/layout-validation';
+import { SAME_STRING_MM } from '@/paving/set-out/course-frame';
 import { layingCourses } from '@/paving/set-out/courses';
 import type { Course } from '@/paving/set-out/set-out-types';
 import {
@@ -28,8 +29,6 @@ const onString = ({ from, to, length }: Course, at: number): Point => [
   from[0] + ((to[0] - from[0]) * at) / length,
   from[1] + ((to[1] - from[1]) * at) / length,
 ];
-
-const distance = (p: Point, q: Point) => Math.hypot(p[0] - q[0], p[1] - q[1]);
 
 const inGround = ({ ground }: Laying, at: Point) =>
   ground.rings.every(({ ring, outline }) => ringHolds(outline, at) === (ring === 0));
@@ -64,11 +63,18 @@ function coursesHold(laying: Laying): void {
           laying.laid.x[unit],
           laying.laid.y[unit],
         );
+        const [sx, sy] = [
+          (course.to[0] - course.from[0]) / course.length,
+          (course.to[1] - course.from[1]) / course.length,
+        ];
         for (const tick of [from, to]) {
           const at = onString(course, tick);
-          expect(Math.min(...corners.map((corner) => distance(corner, at)))).toBeLessThan(
-            TOLERANCE,
-          );
+          const off = corners.map(([x, y]) => ({
+            along: Math.abs((x - at[0]) * sx + (y - at[1]) * sy),
+            square: Math.abs((y - at[1]) * sx - (x - at[0]) * sy),
+          }));
+          const near = off.filter(({ square }) => square < SAME_STRING_MM + TOLERANCE);
+          expect(Math.min(...near.map(({ along }) => along))).toBeLessThan(TOLERANCE);
         }
         // The unit stands on the string, left of it.
         const [dx, dy] = [course.to[0] - course.from[0], course.to[1] - course.from[1]];
