@@ -1,4 +1,4 @@
-import { Camera, Compass, ListChecks, Rows3, Scaling } from 'lucide-react';
+import { Camera, ChevronLeft, Compass, ListChecks, Rows3, Scaling } from 'lucide-react';
 import { useEffect, useMemo, useState } from 'react';
 import type { Display } from '@/paving/length';
 import { CoursesTab } from './CoursesTab';
@@ -68,14 +68,12 @@ export function PackView({ kept, person }: { kept: KeptPack; person: PhonePerson
             href="/site"
             aria-label="All plans"
           >
-            ‹
+            <ChevronLeft size={24} aria-hidden />
           </a>
           <div className="min-w-0 flex-1 border-l border-stone-300 px-3 py-1.5">
-            <h1 className="truncate text-[1.05rem] leading-tight">
-              {pack.projectName}: {pack.layoutName}
-            </h1>
+            <h1 className="truncate text-[1.05rem] leading-tight">{pack.projectName}</h1>
             <p className="truncate text-sm text-slate">
-              Version {pack.number}, {pack.label}
+              {pack.layoutName}, version {pack.number}
             </p>
           </div>
           <button

@@ -24,10 +24,9 @@ export function SetOutTab({ kept, floor, display }: TabProps) {
     () => setOut.points.filter((point) => groupOf(point) === group),
     [setOut, group],
   );
-  const at = Math.max(
-    0,
-    own.findIndex((point) => point.name === name),
-  );
+  const first = own.findIndex(({ by }) => by !== 'datum');
+  const picked = own.findIndex((point) => point.name === name);
+  const at = picked < 0 ? Math.max(0, first) : picked;
   const point = own.at(at);
   const step = (by: number) => setName(own[(at + by + own.length) % own.length].name);
   const [a, b] = setOut.datums;
@@ -49,19 +48,6 @@ export function SetOutTab({ kept, floor, display }: TabProps) {
           onPick={setName}
         />
       </div>
-      {setOut.advice.length > 0 && (
-        <ul className="mt-3 space-y-1">
-          {setOut.advice.map(({ text }) => (
-            <li key={text} className="border-l-2 border-amber pl-3">
-              {text}
-            </li>
-          ))}
-        </ul>
-      )}
-      <p className="mt-3 text-slate">
-        Hook one tape on {a.name} and one on {b.name}. Pull both level and tight; the point is where
-        they cross.
-      </p>
       <div className="mt-3">
         <Segmented
           label="Points"
@@ -92,6 +78,18 @@ export function SetOutTab({ kept, floor, display }: TabProps) {
       ) : (
         <p className="mt-4 text-slate">There are none on this floor.</p>
       )}
+      <h3 className="mt-6 border-b border-graphite pb-1">Before you start</h3>
+      <ul className="mt-2 space-y-2">
+        <li className="border-l-2 border-slate pl-3">
+          Hook one tape on {a.name} and one on {b.name}. Pull both level and tight; the point is
+          where they cross.
+        </li>
+        {setOut.advice.map(({ text }) => (
+          <li key={text} className="border-l-2 border-amber pl-3">
+            {text}
+          </li>
+        ))}
+      </ul>
       <p className="mt-6 border-t border-stone-300 pt-3 text-sm text-slate">
         Call before you dig: pegs and pins find buried pipes and cables too. Units over 23 kg are
         lifted by two people or a machine. Figures are aids to setting out, not a design

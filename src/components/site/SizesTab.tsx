@@ -1,11 +1,10 @@
-import { useMemo, useState } from 'react';
+import { useMemo } from 'react';
 import { bondPattern, documentUnit } from '@/paving/bond';
 import { creep, measureProblem, type Creep, type UnitMeasure } from '@/paving/creep/creep';
 import { layFloor } from '@/paving/laying';
 import { Length } from '../ui/Length';
 import { LengthField } from '../ui/LengthField';
 import { NumberField } from '../ui/NumberField';
-import { Segmented } from '../ui/Segmented';
 import { CreepFigures } from './CreepFigures';
 import type { TabProps } from './PackView';
 import { Refitting } from './Refitting';

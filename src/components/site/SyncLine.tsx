@@ -27,7 +27,7 @@ export const syncWords = ({
 
 /** The line under the head: what is kept, what waits, whether the program opens without signal. */
 export function SyncLine({ keptAt }: { keptAt?: string }) {
-  const { waiting, heard, busy, trouble, person } = useSite();
+  const { waiting, heard, busy, trouble } = useSite();
   const program = useProgram();
   const unsent = waiting.some(({ refused }) => refused === null);
   const refused = waiting.filter((entry) => entry.refused !== null).length;
@@ -41,6 +41,9 @@ export function SyncLine({ keptAt }: { keptAt?: string }) {
           className={`py-1.5 leading-snug ${unsent && !busy ? 'font-semibold' : ''}`}
         >
           {syncWords({ waiting, heard, busy })}
+          {keptAt && !unsent && !busy && (
+            <span className="text-slate"> As of {dayAndTime(keptAt)}.</span>
+          )}
         </p>
         {!busy && heard !== 'heard' && heard !== null && (
           <button type="button" className="button button-quiet" onClick={() => void refreshNow()}>
@@ -74,10 +77,9 @@ export function SyncLine({ keptAt }: { keptAt?: string }) {
             : 'This browser does not keep the program itself: leave this page open, and do not load it again without signal.'}
         </p>
       )}
-      {program === 'kept' && (
+      {program === 'kept' && !keptAt && (
         <p className="px-4 pb-2 text-sm text-slate" data-testid="program">
-          Opens without signal.
-          {keptAt && person && ` As the server had it on ${dayAndTime(keptAt)}.`}
+          This page opens without signal.
         </p>
       )}
     </div>
