@@ -8,6 +8,7 @@ import { rangeTurns } from '@/paving/fit/turn-sweep';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { layFloor } from '@/paving/laying';
 import { parseLayoutDocument, type DocumentProblem } from '@/paving/layout-validation';
+import { levelsReport } from '@/takeoff/levels-report';
 import { floorReport } from '@/paving/report';
 import { takeOff } from '@/takeoff/take-off';
 import { setOut } from '@/paving/set-out/set-out';
@@ -149,6 +150,13 @@ const tasks: Readonly<Record<string, Task>> = {
       if (options.length > 0) throw new Refusal(`take-off takes no option "${options[0]}"`);
       const laying = layFloor(document);
       return takeOff(laying, floorReport(laying), null);
+    },
+  },
+  levels: {
+    usage: 'levels FILE|-',
+    run: (document, options) => {
+      if (options.length > 0) throw new Refusal(`levels takes no option "${options[0]}"`);
+      return levelsReport(document);
     },
   },
   fit: {

@@ -133,7 +133,7 @@ export function earthVolumes(
   const baseLayer = (base * dugArea) / MM3_PER_M3;
   const beddingLayer = (bedding * ground.area) / MM3_PER_M3;
   const underThin = beddingUnderThin(floor) / MM3_PER_M3;
-  const beyondSpots = sum.beyond / MM2_PER_M2;
+  const beyondSpots = Math.max(0, sum.beyond) / MM2_PER_M2;
   return {
     area,
     dugArea: dugArea / MM2_PER_M2,
