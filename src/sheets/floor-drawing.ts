@@ -60,7 +60,7 @@ export function floorDrawing(laying: Laying, view: PlanView, style: FloorStyle):
         laying,
         pieces,
         view,
-        asCourses ? { ...pieceStyle, hatch: undefined } : pieceStyle,
+        asCourses ? { ...pieceStyle, hatch: undefined, marks: false } : pieceStyle,
       ),
     ],
     outline: [

@@ -44,7 +44,8 @@ function floorLayers(document: LayoutDocument, width: number, height: number): D
     markTone: false,
     pieces: {
       stroke: { width: 0.4, colour: inkMix('#ffffff', INK, 0.45) },
-      sawn: { width: 0.8, colour: INK },
+      sawn: { width: 0.6, colour: INK },
+      hatch: { spacing: 2.6, stroke: { width: 0.5, colour: inkMix('#ffffff', INK, 0.5) } },
     },
     grain: { spacing: Math.max(7, Math.sqrt((width * height) / 900)), size: 0.7 },
   });

@@ -14,8 +14,10 @@ export interface PieceStyle {
   readonly stroke: Stroke;
   /** The sawn edges; dashed on a plan. */
   readonly sawn: Stroke;
-  /** Hatching and marks; without it pieces are plain, as on a picture too small for them. */
+  /** Without it pieces are plain, as on a picture too small for it. */
   readonly hatch?: { readonly spacing: number; readonly stroke: Stroke };
+  /** A dot in pieces under a third of a unit, a cross in those too narrow to lay. */
+  readonly marks?: boolean;
 }
 
 /** Pieces on a plan: hatched, the sawn edges dashed. */
@@ -23,6 +25,7 @@ export const PLAN_PIECES: PieceStyle = {
   stroke: { width: PENS.fine, colour: inkMix(PAPER, INK, 0.75) },
   sawn: { width: PENS.thin, colour: INK, dash: [1.2, 0.8] },
   hatch: { spacing: 1.3, stroke: { width: PENS.fine, colour: inkMix(PAPER, INK, 0.45) } },
+  marks: true,
 };
 
 /** Half the arm of the cross in a piece too narrow to lay, and the dot in one under a third of a unit, paper mm. */
@@ -36,7 +39,7 @@ export function pieceCommands(
   laying: Laying,
   pieces: readonly CutPiece[],
   view: PlanView,
-  { stroke, sawn, hatch }: PieceStyle,
+  { stroke, sawn, hatch, marks: marked = false }: PieceStyle,
 ): readonly DrawCommand[] {
   if (pieces.length === 0) return [];
   const { document, motif } = laying;
@@ -54,8 +57,8 @@ export function pieceCommands(
     if (group.length === 0) groups.set(fill, group);
     group.push(...rings.map((points) => ({ points, closed: true })));
     cuts.push(...sawnRuns(laying, piece).map((run) => ({ points: onPaper(run), closed: false })));
-    if (!hatch) continue;
-    lines.push(...hatchLines(rings, hatch.spacing));
+    if (hatch) lines.push(...hatchLines(rings, hatch.spacing));
+    if (!marked) continue;
     const [x, y] = paperFromGround(view, pieceMiddle(piece));
     if (piece.narrow) {
       marks.push({

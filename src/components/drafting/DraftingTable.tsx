@@ -162,7 +162,7 @@ function Board({
         <aside
           key={step}
           aria-label={STEP_NAMES[step]}
-          className="order-4 min-h-0 flex-[1_1_40%] overflow-y-auto border-t border-graphite px-5 pt-3 pb-8 md:order-3 md:w-[21.5rem] md:flex-none md:border-t-0 md:border-l md:pt-5"
+          className="relative order-4 min-h-0 flex-[1_1_40%] overflow-y-auto border-t border-graphite px-5 pt-3 pb-8 md:order-3 md:w-[21.5rem] md:flex-none md:border-t-0 md:border-l md:pt-5"
         >
           <div className="mb-3 flex items-center justify-between gap-3">
             <h1 className="text-[1.3rem]">{STEP_NAMES[step]}</h1>

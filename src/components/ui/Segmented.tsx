@@ -21,7 +21,7 @@ export function Segmented<T extends string>({
         {options.map(([option, text]) => (
           <label
             key={option}
-            className="-ml-px flex min-h-[2.4rem] flex-1 cursor-pointer items-center justify-center border border-slate px-2 text-center first:ml-0 has-checked:z-10 has-checked:border-line has-checked:font-semibold has-checked:text-line has-focus-visible:outline-2 has-focus-visible:outline-offset-2 has-focus-visible:outline-line pointer-coarse:min-h-11"
+            className="relative -ml-px flex min-h-[2.4rem] flex-1 cursor-pointer items-center justify-center border border-slate px-2 text-center first:ml-0 has-checked:z-10 has-checked:border-line has-checked:font-semibold has-checked:text-line has-focus-visible:outline-2 has-focus-visible:outline-offset-2 has-focus-visible:outline-line pointer-coarse:min-h-11"
           >
             <input
               type="radio"

@@ -23,10 +23,10 @@ export function CostTable({ floor, display }: { floor: CutFloor; display: Displa
     row('Units to buy', ({ units }) => formatCount(units)),
     ['of them to saw', '–', formatCount(sawn.sawnUnits)],
     ['Pieces laid', '–', formatCount(sawn.pieces)],
-    ['under a third of a unit', '–', formatCount(cut.underThird)],
+    ['under a third', '–', formatCount(cut.underThird)],
     row('Left for aggregate', ({ aggregate }) => formatArea(aggregate, display)),
     row('Thrown away', ({ waste }) => (waste === 0 ? '–' : formatArea(waste, display))),
-    ['which weighs about', '–', formatMass(sawn.wasteKg, display)],
+    ['weighing about', '–', formatMass(sawn.wasteKg, display)],
     row('To saw', ({ sawLength }) => (sawLength === 0 ? '–' : formatRun(sawLength, display))),
     ['Cuts', '–', formatCount(sawn.cuts)],
     row('Time at the saw', ({ sawMinutes }) =>
