@@ -90,9 +90,10 @@ function columnsOf(
  * trade types them; a bare number is in `bare`. Every line that cannot be used is named with its reason.
  */
 export function parseSpotList(text: string, options: SpotListOptions): ParsedSpotList {
-  const parsed = Papa.parse<string[]>(text.replace(/^\uFEFF/, '').replace(/\s+$/, ''), {
-    skipEmptyLines: false,
-  });
+  const bare = text.replace(/^\uFEFF/, '').replace(/\s+$/, '');
+  // Where cells are parted by tabs or semicolons, commas are decimal.
+  const delimiter = ['\t', ';'].find((mark) => bare.includes(mark)) ?? ',';
+  const parsed = Papa.parse<string[]>(bare, { delimiter });
   const lines = parsed.data
     .map((cells, n) => ({ line: n + 1, cells: cells.map((cell) => cell.trim()) }))
     .filter(({ cells }) => cells.some((cell) => cell !== ''));
