@@ -8,6 +8,7 @@ import type { Sheet } from '@/sheets/sheet';
 import { planSheets } from '@/sheets/plan-sheet';
 import { scaleName } from '@/sheets/scales';
 import { drawingSvg } from '@/sheets/svg-sink';
+import { download } from '../ui/download';
 import { Moment } from '../ui/Moment';
 import { LetteringNote } from './LetteringNote';
 import { planFileName } from './plan-file-name';
@@ -152,14 +153,4 @@ function SheetView({ sheet, trueSize, title }: { sheet: Sheet; trueSize: boolean
       dangerouslySetInnerHTML={{ __html: svg }}
     />
   );
-}
-
-function download(blob: Blob, name: string): void {
-  const url = URL.createObjectURL(blob);
-  const link = document.createElement('a');
-  link.href = url;
-  link.download = name;
-  link.click();
-  // Some browsers read the file only after the click has returned.
-  setTimeout(() => URL.revokeObjectURL(url), 60_000);
 }
