@@ -23,6 +23,7 @@ import { createDrawRing } from './tools/draw-ring';
 import { createEditRing, edgeNearest } from './tools/edit-ring';
 import { createHoldEdge } from './tools/hold-edge';
 import { createLiftUnit } from './tools/lift-unit';
+import { createChooseDatum, createShowPoint } from './tools/set-out-points';
 import { createSlidePattern } from './tools/slide-pattern';
 import { createPlacePoint, createSpotLevels } from './tools/spot-levels';
 import { CLICK_SLACK_PX, screenDistance, type TablePointer, type Tool } from './tools/tool';
@@ -36,6 +37,8 @@ const createTools = (): Record<ToolName, Tool> => ({
   hold: createHoldEdge(),
   spot: createSpotLevels(),
   place: createPlacePoint(),
+  points: createShowPoint(),
+  datum: createChooseDatum(),
 });
 
 /** Below this width the buttons take room from the drawing, px. */

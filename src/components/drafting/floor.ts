@@ -4,6 +4,7 @@ import type { LayoutDocument } from '@/paving/layout-document';
 import { parseLayoutDocument, type DocumentProblem } from '@/paving/layout-validation';
 import { layFloor, type Laying } from '@/paving/laying';
 import { wholeReport, type Report } from '@/paving/report';
+import { setOut, type SetOut } from '@/paving/set-out/set-out';
 
 /** All that the table shows of a document, worked out once for each and only as far as it is asked for. */
 export interface Floor {
@@ -15,6 +16,7 @@ export interface Floor {
   readonly report: Report | null;
   readonly profile: readonly EdgeProfile[];
   readonly leastGap: LeastGap | null;
+  readonly setOut: SetOut | null;
 }
 
 const floors = new WeakMap<LayoutDocument, Floor>();
@@ -62,6 +64,7 @@ export function floorOf(document: LayoutDocument): Floor {
   const report = from<Report | null>(wholeReport, null);
   const profile = from<readonly EdgeProfile[]>(gapProfile, []);
   const leastGap = from<LeastGap | null>(leastGapAt, null);
+  const settingOut = from<SetOut | null>((laid) => setOut(laid, report() ?? undefined), null);
   const floor: Floor = {
     document,
     problems: parsed.ok ? [] : parsed.problems,
@@ -76,6 +79,9 @@ export function floorOf(document: LayoutDocument): Floor {
     },
     get leastGap() {
       return leastGap();
+    },
+    get setOut() {
+      return settingOut();
     },
   };
   floors.set(document, floor);

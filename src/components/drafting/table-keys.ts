@@ -14,7 +14,8 @@ import {
 } from './ground-actions';
 import { placingLeft, spotNudged, spotPlacedInView, spotStepped, spotTaken } from './level-actions';
 import { nudge } from './nudge';
-import { STEPS, type TableStore } from './table-store';
+import { datumsStarted, pointStepped, datumsLeft } from './set-out/set-out-actions';
+import { STEPS, type Step, type TableStore } from './table-store';
 import { chosenUnitToggled, unitChosen } from './tools/lift-unit';
 import { cornerPlaced, cornerTakenBack, ringClosed, typedCorner } from './tools/draw-ring';
 
@@ -75,6 +76,14 @@ export const KEY_LIST: readonly (readonly [
       [',  .', 'Pick the spot before, after'],
       ['Arrows', 'Move the picked spot 1 mm (1/16″); with Shift 10 mm (1/2″)'],
       ['Delete', 'Take the picked spot away'],
+    ],
+  ],
+  [
+    'Set-out',
+    [
+      ['Arrows or ,  .', 'Show how the point before, after is taped'],
+      ['C', 'Choose the two corners to tape from'],
+      ['Esc', 'Leave choosing, or show no point'],
     ],
   ],
 ];
@@ -143,6 +152,9 @@ function escaped(table: TableStore): void {
   else if (step === 'levels') {
     if (tool === 'place') placingLeft(table);
     else set({ spot: null });
+  } else if (step === 'setOut') {
+    if (tool === 'datum') datumsLeft(table);
+    else set({ point: null, pointed: null });
   } else if (step !== 'ground' && tool !== 'slide')
     set({ tool: 'slide', holding: null, hover: null });
   else set({ pick: null, hover: null });
@@ -189,6 +201,11 @@ export function keyActed(table: TableStore, event: KeyboardEvent, actions: KeyAc
   if (state.tool === 'lift' && (key in ARROWS || key === 'Enter' || key === ' ')) {
     if (key in ARROWS) unitChosen(table, ARROWS[key]);
     else chosenUnitToggled(table);
+    return true;
+  }
+
+  if (state.step === 'setOut' && key in ARROWS) {
+    pointStepped(table, key === 'ArrowRight' || key === 'ArrowDown' ? 1 : -1);
     return true;
   }
 
@@ -249,7 +266,13 @@ export function keyActed(table: TableStore, event: KeyboardEvent, actions: KeyAc
     Backspace: take,
     s: () => state.set({ snap: !state.snap }),
   };
-  const own = state.step === 'ground' ? ground : state.step === 'levels' ? levels : pattern;
+  const setOut: Record<string, () => void> = {
+    ',': () => pointStepped(table, -1),
+    '.': () => pointStepped(table, 1),
+    c: () => datumsStarted(table),
+  };
+  const byStep: Partial<Record<Step, Record<string, () => void>>> = { ground, levels, setOut };
+  const own = byStep[state.step] ?? pattern;
   const name = key.length === 1 ? key.toLowerCase() : key;
   const act = acts[name] ?? own[name];
   act?.();

@@ -3,6 +3,8 @@ import { createStore } from 'zustand/vanilla';
 import type { Point } from '@/geometry/point';
 import type { FitHold } from '@/paving/fit/fit';
 import type { Address, LayoutDocument } from '@/paving/layout-document';
+import { choiceKept } from '@/paving/set-out/datum-choice';
+import type { CornerAddress } from '@/paving/set-out/set-out-types';
 import type { Camera, ScreenSize } from './camera';
 
 export const STEPS = [
@@ -17,7 +19,8 @@ export const STEPS = [
 ] as const;
 export type Step = (typeof STEPS)[number];
 
-export type ToolName = 'edit' | 'draw' | 'slide' | 'lift' | 'align' | 'hold' | 'spot' | 'place';
+export type ToolName =
+  'edit' | 'draw' | 'slide' | 'lift' | 'align' | 'hold' | 'spot' | 'place' | 'points' | 'datum';
 
 /** What of the ground is picked: a vertex or an edge of a ring. */
 export type Pick =
@@ -82,6 +85,11 @@ export interface TableState {
   /** The spot level that is picked, by its place in the list. */
   readonly spot: number | null;
   readonly placing: Placing | null;
+  /** Control points of the set-out, by name: the one picked, and the one pointed at. */
+  readonly point: string | null;
+  readonly pointed: string | null;
+  /** The first of two corners to tape from, while they are chosen. */
+  readonly datumFirst: CornerAddress | null;
   readonly camera: Camera | null;
   readonly size: ScreenSize;
   /** Said to the person, and read aloud by a screen reader. */
@@ -109,7 +117,7 @@ const FIRST_TOOL: Record<Step, ToolName> = {
   fit: 'slide',
   levels: 'spot',
   takeOff: 'slide',
-  setOut: 'slide',
+  setOut: 'points',
   versions: 'slide',
 };
 
@@ -132,17 +140,21 @@ export function createTableStore(document: LayoutDocument) {
         holding: null,
         spot: null,
         placing: null,
+        point: null,
+        pointed: null,
+        datumFirst: null,
         camera: null,
         size: { width: 0, height: 0 },
         said: '',
-        settle: (next) => set({ document: next, preview: null, guides: [] }),
+        settle: (next) =>
+          set({ document: choiceKept(get().document, next), preview: null, guides: [] }),
         edit: (change) => {
           get().settleShown();
           const { document } = get();
-          const next = change(document);
+          const next = choiceKept(document, change(document));
           if (next !== document) set({ document: next, guides: [] });
         },
-        show: (preview) => set({ preview }),
+        show: (preview) => set({ preview: preview && choiceKept(get().document, preview) }),
         settleShown: () => {
           const { preview } = get();
           if (preview) set({ document: preview, preview: null, guides: [] });
@@ -159,6 +171,8 @@ export function createTableStore(document: LayoutDocument) {
             holding: null,
             spot: null,
             placing: null,
+            pointed: null,
+            datumFirst: null,
             guides: [],
             lit: null,
           });
