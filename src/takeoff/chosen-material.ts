@@ -2,7 +2,7 @@ import type { LayoutDocument } from '@/paving/layout-document';
 import type { Laying } from '@/paving/laying';
 import { formatLength, type Display } from '@/paving/length';
 import type { MaterialKind, MaterialPlace } from '@/paving/materials';
-import { MATERIAL_DEFAULTS, kindByName } from './material-kinds';
+import { MATERIAL_DEFAULTS, kindByName, kindByStone } from './material-kinds';
 import { formatDensity } from './measures';
 import type { PriceItem, PriceList } from './price-list';
 import type { Assumption } from './take-off-line';
@@ -59,7 +59,7 @@ function usualMaterial(
     };
   }
   const name = document.aggregate?.name ?? PLAIN_AGGREGATE_NAME;
-  const kind = kindByName(name);
+  const kind = kindByName(name) ?? 'chippings';
   if (place === 'joints' && 2 * MATERIAL_DEFAULTS[kind].stone[1] > joint) {
     const width = formatLength(joint, document.display, { decimals: 1 });
     return {
@@ -90,11 +90,22 @@ export function chosenMaterial(
   const chose = own.kind !== undefined || own.name !== undefined || own.catalogueId !== undefined;
   const catalogueId = chose ? own.catalogueId : usual.catalogueId;
   const item = priceItem(prices, catalogueId);
-  const name =
-    own.name ??
-    item?.name ??
-    (own.kind ? MATERIAL_DEFAULTS[own.kind].name : chose ? usual.name : usual.name);
-  const kind = own.kind ?? (chose ? kindByName(name) : usual.kind);
+  const name = own.name ?? item?.name ?? (own.kind ? MATERIAL_DEFAULTS[own.kind].name : usual.name);
+  // An entry of the catalogue says what it is by its name, else by its stones; else it is the usual for the place.
+  const named = chose ? kindByName(name) : null;
+  const kind =
+    own.kind ??
+    (chose ? (named ?? (item?.stone ? kindByStone(item.stone) : null)) : null) ??
+    usual.kind;
+  const why = own.kind
+    ? 'chosen'
+    : !chose
+      ? usual.source
+      : named
+        ? `by the name “${name}”`
+        : item?.stone
+          ? 'by its stones in the catalogue'
+          : 'usual for the place';
   const defaults = MATERIAL_DEFAULTS[kind];
   const at = (key: string) => ['materials', place, key];
   const stone = own.stone ?? item?.stone ?? defaults.stone;
@@ -114,7 +125,7 @@ export function chosenMaterial(
       {
         name: 'Taken as',
         value: defaults.name,
-        source: own.kind ? 'chosen' : chose ? `by the name “${name}”` : usual.source,
+        source: why,
         as: 'material',
         raw: null,
         field: at('kind'),

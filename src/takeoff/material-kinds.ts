@@ -194,13 +194,24 @@ export const GROUND_DEFAULTS: Readonly<Record<GroundKind, GroundDefaults>> = {
 /** Of a unit whose mass nobody gave: plain concrete. */
 export const UNIT_DENSITY = poundsPerCubicFoot(145, HUD);
 
-/** A kind by the words that people call it by; chippings where the name says nothing. */
-export function kindByName(name: string): MaterialKind {
+/** A kind by the words that people call it by; null where the name says nothing. */
+export function kindByName(name: string): MaterialKind | null {
   const words = name.toLowerCase();
   if (/jointing|kiln|dried sand/.test(words)) return 'jointingSand';
   if (/dust|screening/.test(words)) return 'stoneDust';
   if (/sand/.test(words)) return 'sharpSand';
   if (/pea|gravel|pebble|cobble/.test(words)) return 'gravel';
   if (/grit|fine chip/.test(words)) return 'fineChippings';
-  return 'chippings';
+  if (/chip|slate/.test(words)) return 'chippings';
+  if (/clean|drain/.test(words)) return 'openBase';
+  if (/crush|sub-?base|road base|scalping|hardcore|mixed/.test(words)) return 'crushedStone';
+  return null;
+}
+
+/** A kind by its smallest and largest stone, mm, where a catalogue gives them. */
+export function kindByStone([small, large]: readonly [number, number]): MaterialKind {
+  if (large <= 2) return 'jointingSand';
+  if (small < 1) return large <= 6 ? 'sharpSand' : 'crushedStone';
+  if (large <= 6) return 'fineChippings';
+  return large <= 14 ? 'chippings' : 'coarseChippings';
 }

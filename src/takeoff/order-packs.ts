@@ -135,7 +135,8 @@ function plural(name: string, amount: number): string {
 export function packWords(amount: number, pack: Pack, display: Display): string {
   const figure = pack.whole ? formatCount(amount) : formatFigure(amount, 1);
   const gap = SYMBOLS.has(pack.name) ? '\u202f' : ' ';
-  const bare = MEASURES.has(pack.name) || (pack.measure === 'each' && pack.holds === 1);
+  const bare =
+    MEASURES.has(pack.name) || (pack.holds === 1 && (pack.measure === 'each' || !pack.whole));
   return `${figure}${gap}${plural(pack.name, amount)}${bare ? '' : ` of ${holdsWords(pack, display)}`}`;
 }
 

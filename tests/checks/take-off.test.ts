@@ -158,6 +158,39 @@ describe('what the defaults are taken from', () => {
   });
 });
 
+describe('what a material is taken as', () => {
+  const baseOf = (name: string, stone: readonly [number, number] | null = null) => {
+    const item: PriceItem = {
+      id: 'stone',
+      kind: 'aggregate',
+      name,
+      supplier: '',
+      pack: { name: 't', holds: 1, measure: 't', whole: false },
+      costMinor: 1,
+      from: '2026-03-01',
+      massKg: null,
+      looseDensity: null,
+      stone,
+    };
+    const found = takenOff(court({ materials: { base: { catalogueId: 'stone' } } }), {
+      currency: 'EUR',
+      on: '2026-03-01',
+      items: [item],
+    });
+    return lineOf(found, 'layer:base').assumptions.find(({ as }) => as === 'material');
+  };
+
+  it.each([
+    ['River gravel 10 mm', null, 'Rounded gravel', 'by the name “River gravel 10 mm”'],
+    ['Crushed stone 0 to 20', null, 'Crushed stone, all sizes', 'by the name “Crushed stone 0 to 20”'], // prettier-ignore
+    ['Item 804', [0, 40], 'Crushed stone, all sizes', 'by its stones in the catalogue'],
+    ['Item 57', [5, 25], 'Coarse chippings', 'by its stones in the catalogue'],
+    ['Item 9', null, 'Crushed stone, all sizes', 'usual for the place'],
+  ] as const)('%s of %j is %s', (name, stone, value, source) => {
+    expect(baseOf(name, stone)).toMatchObject({ value, source, own: false });
+  });
+});
+
 describe('what a person changes', () => {
   it('depth, bulk and density of a fill are reckoned with, and said to be typed in', () => {
     const found = takenOff(

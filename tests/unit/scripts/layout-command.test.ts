@@ -7,6 +7,7 @@ import { afterAll, expect, test } from 'vitest';
 import { layFloor } from '@/paving/laying';
 import { floorReport } from '@/paving/report';
 import { setOut } from '@/paving/set-out/set-out';
+import { takeOff } from '@/takeoff/take-off';
 import { documentOf, parsed } from '../../oracle/documents';
 
 const root = fileURLToPath(new URL('../../../', import.meta.url));
@@ -37,6 +38,14 @@ test('report prints the report as JSON and nothing else, from a file or standard
   expect(JSON.parse(fromFile.stdout)).toEqual(report);
   const fromInput = layout(['report', '-'], good);
   expect(fromInput).toMatchObject({ status: 0, stderr: '', stdout: fromFile.stdout });
+});
+
+test('take-off prints the take-off as JSON, without prices', () => {
+  const { status, stdout, stderr } = layout(['take-off', '-'], good);
+  expect({ status, stderr }).toEqual({ status: 0, stderr: '' });
+  const laying = layFloor(parsed(documentOf({})));
+  expect(JSON.parse(stdout)).toEqual(JSON.parse(JSON.stringify(takeOff(laying, report, null))));
+  expect(layout(['take-off', '-', '--loud'], good)).toMatchObject({ status: 2, stdout: '' });
 });
 
 test('a document that is not valid prints each error with its path and exits with 2', () => {

@@ -13,11 +13,13 @@ function typedUnit(as: Assumption['as'], display: LayoutDocument['display']) {
   const metric = display === 'metric';
   if (as === 'density')
     return metric
-      ? { suffix: '\u202fkg/m³', size: 1 }
-      : { suffix: '\u202flb/ft³', size: POUNDS_PER_CUBIC_FOOT };
+      ? { suffix: '\u202fkg/m³', size: 1, decimals: 0 }
+      : { suffix: '\u202flb/ft³', size: POUNDS_PER_CUBIC_FOOT, decimals: 1 };
   if (as === 'mass')
-    return metric ? { suffix: '\u202fkg', size: 1 } : { suffix: '\u202flb', size: KG_PER_POUND };
-  return { suffix: as === 'percent' ? '\u202f%' : '', size: 1 };
+    return metric
+      ? { suffix: '\u202fkg', size: 1, decimals: 1 }
+      : { suffix: '\u202flb', size: KG_PER_POUND, decimals: 1 };
+  return { suffix: as === 'percent' ? '\u202f%' : '', size: 1, decimals: 3 };
 }
 
 const KIND_OPTIONS = {
@@ -69,7 +71,7 @@ export function AssumptionRow({ assumption }: { assumption: Assumption }) {
       <NumberField
         label={name}
         hideLabel
-        value={Number((raw! / unit.size).toFixed(as === 'density' || as === 'mass' ? 1 : 3))}
+        value={Number((raw! / unit.size).toFixed(unit.decimals))}
         suffix={unit.suffix}
         refuse={(typed) => refuse(typed * unit.size)}
         onNumber={(typed) => change(typed * unit.size)}
