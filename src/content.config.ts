@@ -21,6 +21,7 @@ const guide = defineCollection({
       'sheet',
       'overlay',
       'cutting',
+      'order',
     ]),
   }),
 });
