@@ -79,7 +79,12 @@ const LIGHT_PX = 26;
 /** Lights the spot of the edge that a pointer is near to. */
 function lightEdge(table: TableStore, pointer: TablePointer | null) {
   const state = table.getState();
-  if (!pointer || !state.camera || state.drawing || ['ground', 'levels'].includes(state.step)) {
+  if (
+    !pointer ||
+    !state.camera ||
+    state.drawing ||
+    ['ground', 'levels', 'setOut'].includes(state.step)
+  ) {
     if (state.lit) state.set({ lit: null });
     return;
   }

@@ -12,10 +12,12 @@ import { cornerName, keepOutName } from '@/paving/edge-names';
 import { formatLength } from '@/paving/length';
 import { unitCorners } from '@/paving/laying';
 import type { DrawingColours } from '../ui/drawing-colours';
+import { paintLetters } from './corner-letters';
 import { dimensionLines } from './dimension-lines';
 import type { Floor } from './floor';
 import { paintLevelMarks, paintLevels } from './levels-picture';
 import { boxedText, dot, FONT, path, screen, segment, type Ink } from './overlay-ink';
+import { paintSetOut } from './set-out/set-out-picture';
 import { edgeOutline, ringOutline } from './ring-outline';
 import { shownDocument, type Pick, type TableState } from './table-store';
 import { turnHandle } from './tools/slide-pattern';
@@ -121,41 +123,6 @@ const overshoot = (from: Point, to: Point): Point => {
   const length = Math.hypot(to[0] - from[0], to[1] - from[1]) || 1;
   return [to[0] + ((to[0] - from[0]) / length) * 5, to[1] + ((to[1] - from[1]) / length) * 5];
 };
-
-function paintLetters(ink: Ink) {
-  const { ctx, document, colours } = ink;
-  const ring = document.ground.perimeter;
-  const unit = (from: Point, to: Point): Point => {
-    const length = Math.hypot(to[0] - from[0], to[1] - from[1]) || 1;
-    return [(to[0] - from[0]) / length, (to[1] - from[1]) / length];
-  };
-  const at = ring.map((v) => screen(ink, vertexPoint(v)));
-  if (
-    ring.length > 12 &&
-    at.some(
-      (p, n) =>
-        Math.hypot(p[0] - at[(n + 1) % at.length][0], p[1] - at[(n + 1) % at.length][1]) < 26,
-    )
-  )
-    return;
-  at.forEach((p, n) => {
-    const u = unit(at[(n + at.length - 1) % at.length], p);
-    const v = unit(p, at[(n + 1) % at.length]);
-    // The sum of the two outward normals points out of the corner, also where it is re-entrant.
-    const out: Point = [-u[1] - v[1], u[0] + v[0]];
-    const length = Math.hypot(...out) || 1;
-    const centre: Point = [p[0] + (out[0] / length) * 16, p[1] + (out[1] / length) * 16];
-    dot(ctx, centre, 8.5, colours.stone50);
-    ctx.strokeStyle = colours.graphite;
-    ctx.lineWidth = 1;
-    ctx.stroke();
-    ctx.fillStyle = colours.graphite;
-    ctx.font = `600 10.5px ${FONT}`;
-    ctx.textAlign = 'center';
-    ctx.textBaseline = 'middle';
-    ctx.fillText(cornerName(0, n), centre[0], centre[1] + 0.5);
-  });
-}
 
 function paintPick(ink: Ink, pick: Pick, strong: boolean) {
   const { ctx, document, colours } = ink;
@@ -428,6 +395,7 @@ export function paintOverlay(
   if (state.step === 'fit' && !state.preview && state.tool !== 'align' && state.tool !== 'hold')
     paintLeastGap(ink, floor);
   if (levelling) paintLevelMarks(ink, state, floor);
+  if (state.step === 'setOut') paintSetOut(ink, state, floor);
   if (editing && !state.drawing) paintHandles(ink, state);
   if ((state.tool === 'align' || state.tool === 'hold') && state.hover)
     paintPick(ink, state.hover, false);

@@ -1,3 +1,34 @@
+import { FloorProblems } from '../FloorFigures';
+import { CheckList } from '../set-out/CheckList';
+import { CourseFields } from '../set-out/CourseFields';
+import { DatumFields } from '../set-out/DatumFields';
+import { PointCard } from '../set-out/PointCard';
+import { PointTable } from '../set-out/PointTable';
+import { useShownFloor } from '../table-context';
+
+/** How the floor is put on the ground: corners to tape from, points, courses and checks. */
 export function SetOutPanel() {
-  return null;
+  const { setOut } = useShownFloor();
+  if (!setOut) return <FloorProblems />;
+  return (
+    <div className="space-y-6">
+      <DatumFields setOut={setOut} />
+      <ul className="space-y-1.5 border-l-2 border-stone-300 pl-3 text-[0.95rem]">
+        {setOut.advice.map(({ text, kind }) => (
+          <li key={text} className={kind === 'floor' ? 'font-semibold' : undefined}>
+            {text}
+          </li>
+        ))}
+      </ul>
+      <PointCard setOut={setOut} />
+      <CourseFields setOut={setOut} />
+      <PointTable setOut={setOut} />
+      <CheckList setOut={setOut} />
+      <p className="border-t border-stone-300 pt-3 text-sm text-slate">
+        Pegs and stakes go into the ground. Have pipes and cables located before you drive one, as
+        your country’s rules ask, and dig by hand near them. An issued version prints all this as
+        sheets for the crew.
+      </p>
+    </div>
+  );
 }
