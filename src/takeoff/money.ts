@@ -21,14 +21,24 @@ export const WHOLE_BASIS_POINTS = 10_000;
 /** Amounts are reckoned to a millionth; no measure of a floor is finer. */
 const AMOUNT_PARTS = 1_000_000;
 
-/** Digits after the point of a currency: 2 for most, 0 for JPY, 3 for KWD (ISO 4217, through Intl). */
-export function currencyExponent(currency: string): number {
-  const { maximumFractionDigits } = new Intl.NumberFormat('en', {
-    style: 'currency',
-    currency,
-  }).resolvedOptions();
-  return maximumFractionDigits ?? 2;
-}
+/**
+ * Currencies of ISO 4217 whose minor unit is not a hundredth, by how many figures follow the point. Not
+ * taken from Intl: there browsers and the server may differ (for RSD they do), which would make one
+ * amount a hundred times the other.
+ */
+const EXPONENTS: Readonly<Record<number, string>> = {
+  0: 'BIF CLP DJF GNF ISK JPY KMF KRW PYG RWF UGX UYI VND VUV XAF XOF XPF',
+  3: 'BHD IQD JOD KWD LYD OMR TND',
+  4: 'CLF UYW',
+};
+const EXPONENT_OF = new Map(
+  Object.entries(EXPONENTS).flatMap(([exponent, codes]) =>
+    codes.split(' ').map((code) => [code, Number(exponent)] as const),
+  ),
+);
+
+/** Figures after the point of a currency: 2 for most, 0 for JPY, 3 for KWD (ISO 4217). */
+export const currencyExponent = (currency: string): number => EXPONENT_OF.get(currency) ?? 2;
 
 function wholeMinor(minor: number): bigint {
   if (!Number.isSafeInteger(minor)) throw new Error(`${minor} is not whole minor units`);

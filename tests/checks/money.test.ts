@@ -60,9 +60,12 @@ it('shares out as Hamilton’s method shared 60 seats among the states of 1790',
   ).toEqual(populations.map(([, , seats]) => seats));
 });
 
-// ISO 4217: two decimals for the pound, none for the yen, three for the dinar of Kuwait.
-it('takes the minor units of ISO 4217', () => {
-  expect(['GBP', 'JPY', 'KWD'].map(currencyExponent)).toEqual([2, 0, 3]);
+// ISO 4217, as Firefox's CurrencyDataGenerated.h (2026-01-01) is made from its list: two figures for the
+// pound, the forint and the dinar of Serbia, none for the yen, three for the dinars of Kuwait and Iraq.
+it('takes the minor units of ISO 4217, not those that people print', () => {
+  expect(['GBP', 'HUF', 'RSD', 'JPY', 'KWD', 'IQD', 'CLF'].map(currencyExponent)).toEqual([
+    2, 2, 2, 0, 3, 3, 4,
+  ]);
   expect(formatMoney(123_450, 'GBP')).toBe('£1\u202f234.50');
   expect(formatMoney(123_450, 'JPY')).toBe('¥123\u202f450');
   expect(formatMoney(123_450, 'KWD')).toBe('KWD\u202f123.450');
