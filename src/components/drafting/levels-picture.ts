@@ -6,9 +6,10 @@ import { levelFigure } from '@/paving/level-text';
 import { documentLevels, type Fall } from '@/paving/levels';
 import { groundMiddle } from '@/paving/placement-edits';
 import { spotName } from '@/takeoff/level-warnings';
+import { letterPlaces } from './corner-letters';
 import { earthOf } from './earth';
 import type { Floor } from './floor';
-import { boxedText, dot, path, screen, segment, type Ink } from './overlay-ink';
+import { boxedText, dot, FONT, path, screen, segment, type Ink } from './overlay-ink';
 import { ringOutline } from './ring-outline';
 import type { TableState } from './table-store';
 
@@ -16,8 +17,6 @@ import type { TableState } from './table-store';
 const VEIL = 0.86;
 /** A contour's figure needs so much of it in sight, px. */
 const FIGURED_FROM_PX = 30;
-/** Figures whose middles come nearer than this would lie over one another, px. */
-const FIGURE_PITCH_PX = [46, 18] as const;
 /** Of an arrow that shows a fall, px. */
 const ARROW_PX = 56;
 
@@ -145,61 +144,97 @@ export function paintLevelMarks(ink: Ink, state: TableState, floor: Floor) {
   const { ctx, colours, document } = ink;
   const { display } = document;
   const { spots, fall } = documentLevels(document);
-  const taken: Point[] = [];
-  const figure = (text: string, at: Point, colour: string, weight: number, always = false) => {
-    const free = taken.every(
-      ([x, y]) =>
-        Math.abs(x - at[0]) >= FIGURE_PITCH_PX[0] || Math.abs(y - at[1]) >= FIGURE_PITCH_PX[1],
-    );
-    if (!free && !always) return;
-    taken.push(at);
-    boxedText(ink, text, at, 0, colour, weight);
+  // Marks first, so that no mark stands on a figure; then figures, the most wanted first.
+  for (const peg of earth?.pegs ?? []) {
+    const [x, y] = screen(ink, peg.at);
+    ctx.fillStyle = colours.graphite;
+    ctx.fillRect(x - 5, y - 5, 10, 10);
+  }
+  spots.forEach(({ at }, n) => {
+    const picked = n === state.spot;
+    const stroke = picked ? colours.line : colours.graphite;
+    dot(ctx, screen(ink, at), picked ? 6.5 : 4.5, colours.stone50, stroke);
+  });
+  const taken: Box[] = [
+    ...letterPlaces(ink).map((at): Box => ({ at, half: [9, 9] })),
+    ...spots.map(({ at }): Box => ({ at: screen(ink, at), half: [4, 4] })),
+  ];
+  const figure = (text: string, places: readonly Point[], style: FigureStyle) => {
+    ctx.font = `${style.weight} 12.5px ${FONT}`;
+    const half: Point = [ctx.measureText(text).width / 2 + 5, 9];
+    const at = places.find((place) => !taken.some((box) => overlaps(box, { at: place, half })));
+    if (!at && !style.always) return;
+    taken.push({ at: at ?? places[0], half });
+    boxedText(ink, text, at ?? places[0], 0, style.colour, style.weight);
   };
+  const spotFigure = (n: number) =>
+    `${spotName(spots, n)}: ${levelFigure(spots[n].level, display)}`;
   if (state.spot !== null && spots[state.spot]) {
-    const [x, y] = screen(ink, spots[state.spot].at);
-    const text = `${spotName(spots, state.spot)}: ${levelFigure(spots[state.spot].level, display)}`;
-    figure(text, [x, y - 20], colours.line, 600, true);
+    const style = { colour: colours.line, weight: 600, always: true };
+    figure(spotFigure(state.spot), around(screen(ink, spots[state.spot].at)), style);
   }
   paintFall(ink, fall);
-  if (earth) {
-    const middle = screen(ink, groundMiddle(document));
-    for (const peg of earth.pegs) {
-      const [x, y] = screen(ink, peg.at);
-      ctx.fillStyle = colours.graphite;
-      ctx.fillRect(x - 4, y - 4, 8, 8);
-      // Corners are lettered outside the edge; their levels stand inside it.
-      const away = Math.hypot(middle[0] - x, middle[1] - y) || 1;
-      const inward: Point = [x + ((middle[0] - x) / away) * 40, y + ((middle[1] - y) / away) * 24];
-      const text = `${peg.kind === 'corner' ? '' : `${peg.name} `}${levelFigure(peg.finish, display)}`;
-      figure(text, peg.kind === 'corner' ? inward : [x, y + 22], colours.graphite, 700);
-    }
+  for (const { at, kind, name, finish } of earth?.pegs ?? []) {
+    const text =
+      kind === 'corner' ? levelFigure(finish, display) : `${name} ${levelFigure(finish, display)}`;
+    const places = kind === 'corner' ? inwards(ink, at) : around(screen(ink, at));
+    figure(text, places, { colour: colours.graphite, weight: 700 });
   }
-  spots.forEach(({ at, level }, n) => {
-    const [x, y] = screen(ink, at);
-    const picked = n === state.spot;
-    dot(ctx, [x, y], picked ? 6.5 : 4.5, colours.stone50, picked ? colours.line : colours.graphite);
-    if (!picked)
-      figure(
-        `${spotName(spots, n)}: ${levelFigure(level, display)}`,
-        [x, y - 17],
-        colours.slate,
-        400,
-      );
+  spots.forEach(({ at }, n) => {
+    if (n !== state.spot)
+      figure(spotFigure(n), around(screen(ink, at)), { colour: colours.slate, weight: 400 });
   });
   for (const { level, segments } of earth?.map.contours ?? []) {
     const longest = segments
       .map(({ from, to }) => [screen(ink, from), screen(ink, to)] as const)
-      .sort((p, q) => lengthPx(q) - lengthPx(p))[0];
-    if (!longest || lengthPx(longest) < FIGURED_FROM_PX) continue;
-    const [a, b] = longest;
-    figure(
-      levelFigure(level, display),
-      [(a[0] + b[0]) / 2, (a[1] + b[1]) / 2],
-      colours.graphite,
-      400,
-    );
+      .filter((each) => lengthPx(each) >= FIGURED_FROM_PX)
+      .sort((p, q) => lengthPx(q) - lengthPx(p));
+    const places = longest
+      .slice(0, 3)
+      .flatMap(([a, b]) =>
+        [0.5, 0.25, 0.75].map((t): Point => [a[0] + t * (b[0] - a[0]), a[1] + t * (b[1] - a[1])]),
+      );
+    figure(levelFigure(level, display), places, { colour: colours.graphite, weight: 400 });
   }
   paintPlacing(ink, state);
+}
+
+interface FigureStyle {
+  readonly colour: string;
+  readonly weight: number;
+  /** Shown even where there is no room. */
+  readonly always?: boolean;
+}
+
+interface Box {
+  readonly at: Point;
+  readonly half: Point;
+}
+
+const overlaps = (one: Box, other: Box): boolean =>
+  [0, 1].every(
+    (axis) => Math.abs(one.at[axis] - other.at[axis]) < one.half[axis] + other.half[axis],
+  );
+
+/** Places for a figure beside a mark, the best first. */
+const around = ([x, y]: Point): Point[] => [
+  [x, y - 17],
+  [x, y + 17],
+  [x + 38, y],
+  [x - 38, y],
+  [x + 30, y - 15],
+  [x - 30, y - 15],
+  [x + 30, y + 15],
+  [x - 30, y + 15],
+];
+
+/** Places for a corner's figure, inside the edge: its letter stands outside. */
+function inwards(ink: Ink, at: Point): Point[] {
+  const [x, y] = screen(ink, at);
+  const middle = screen(ink, groundMiddle(ink.document));
+  const away = Math.hypot(middle[0] - x, middle[1] - y) || 1;
+  const [ux, uy] = [(middle[0] - x) / away, (middle[1] - y) / away];
+  return [1, 1.6].map((far): Point => [x + ux * 40 * far, y + uy * 26 * far]);
 }
 
 const lengthPx = ([a, b]: readonly [Point, Point]): number => Math.hypot(b[0] - a[0], b[1] - a[1]);

@@ -8,7 +8,7 @@ import {
   arcRadius,
   vertexPoint,
 } from '@/paving/ground-edits';
-import { cornerName, keepOutName } from '@/paving/edge-names';
+import { keepOutName } from '@/paving/edge-names';
 import { formatLength } from '@/paving/length';
 import { unitCorners } from '@/paving/laying';
 import type { DrawingColours } from '../ui/drawing-colours';

@@ -12,7 +12,7 @@ import { PointButton } from './FinishFields';
 import { SpotPaste } from './SpotPaste';
 
 /** So many spots are shown at once; a longer list is walked through. */
-const SHOWN = 60;
+const SHOWN = 20;
 
 /** Levels of the existing ground: the list, pointing and pasting. */
 export function SpotFields() {
@@ -42,7 +42,7 @@ export function SpotFields() {
       <PointButton what="spots" label="Point at spots on the plan" />
       <div className="grid grid-cols-2 gap-2">
         <button type="button" className="button" onClick={() => spotPlacedInView(table)}>
-          Add in the middle
+          Add one
         </button>
         <button type="button" className="button" onClick={() => setPasting(true)}>
           <ClipboardPaste size={16} aria-hidden /> Paste a list

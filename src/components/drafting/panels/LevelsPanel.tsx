@@ -16,16 +16,13 @@ export function LevelsPanel() {
   return (
     <div className="space-y-7">
       <EarthFigures />
-      <SpotFields />
-      <FinishFields />
+      <MapKey />
       <LayerFields />
+      <FinishFields />
+      <SpotFields />
       <LevelAdvice />
       <PegTable />
       <ScreedBoardPicture />
-      <section aria-label="The level map" className="space-y-2">
-        <h2 className="border-b border-graphite pb-1 text-base">On the plan</h2>
-        <MapKey />
-      </section>
     </div>
   );
 }
