@@ -1,10 +1,10 @@
 import fc from 'fast-check';
 import { describe, expect, it, test } from 'vitest';
 import { fillParts } from '@/paving/fill-parts';
-import type { Bond, LayoutDocument } from '@/paving/layout-document';
+import type { Bond, LayoutDocument, Vertex } from '@/paving/layout-document';
 import { layFloor } from '@/paving/laying';
 import { floorReport } from '@/paving/report';
-import { anyDocument, documentOf, parsed, unitOf } from '../oracle/documents';
+import { anyDocument, asCustom, documentOf, parsed, unitOf } from '../oracle/documents';
 import { oracleFillParts } from '../oracle/closing';
 
 const partsOf = (document: LayoutDocument) => {
@@ -67,9 +67,39 @@ describe('joints, voids and margin', () => {
         expect(found.margin * 1e6).toBeCloseTo(oracle.margin, -1);
         if (found.joints > 0) seen += 1;
       }),
+      { numRuns: 18, seed: 20260301, endOnFailure: true },
+    );
+    expect(seen).toBeGreaterThan(8);
+  }, 120_000);
+
+  test('are the same for a bond written out as one’s own, and wherever the floor lies', () => {
+    fc.assert(
+      fc.property(anyJointed, fc.integer({ min: -5, max: 5 }), (document, i) => {
+        // In a chequer that is written out nothing says that what it leaves open are places.
+        fc.pre(document.bond.kind !== 'chequer');
+        const there = partsOf(document);
+        const custom = partsOf(asCustom(document));
+        expect(custom.toldApart).toBe(true);
+        expect(custom.joints).toBeCloseTo(there.joints, 6);
+        expect(custom.voids).toBeCloseTo(there.voids, 6);
+        const { perimeter, keepOuts } = document.ground;
+        const moved = ([x, y, ...bulge]: Vertex): Vertex =>
+          [x + i * 1000, y - i * 3000, ...bulge] as Vertex;
+        const [ox, oy] = document.placement.origin;
+        const away = partsOf({
+          ...document,
+          ground: {
+            perimeter: perimeter.map(moved),
+            keepOuts: keepOuts.map(({ name, ring }) => ({ name, ring: ring.map(moved) })),
+          },
+          placement: { ...document.placement, origin: [ox + i * 1000, oy - i * 3000] },
+        });
+        fc.pre(away.report.wholeUnits === there.report.wholeUnits);
+        expect(away.joints).toBeCloseTo(there.joints, 6);
+        expect(away.voids).toBeCloseTo(there.voids, 6);
+      }),
       { numRuns: 40, seed: 20260301, endOnFailure: true },
     );
-    expect(seen).toBeGreaterThan(20);
   });
 
   it('of a stack are its strips and crossings: m × n units have (m−1)n + m(n−1) strips and (m−1)(n−1) crossings', () => {
