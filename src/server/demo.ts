@@ -3,6 +3,7 @@ import { firms, outbox } from '@/db/schema';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { acceptVersion, issueVersion, openAgreement, shareVersion } from './agreement';
 import type { Db } from './database';
+import { fromCatalogue, seedCatalogue, sendDemoOrder, sendDemoQuote } from './demo-catalogue';
 import {
   COURT_CHEQUER,
   COURT_FIRST_CHEQUER,
@@ -72,8 +73,10 @@ const seed = async (db: Db): Promise<void> => {
 
   const project = async (name: string, clientName: string, siteNote: string): Promise<string> =>
     sure(await createProject(db, designer, { name, clientName, siteNote })).id;
+  const items = await seedCatalogue(db, actor('owner'));
+  const floor = (document: LayoutDocument) => fromCatalogue(document, items);
   const layout = async (projectId: string, name: string, document: LayoutDocument) =>
-    sure(await createLayout(db, designer, projectId, { name, document })).id;
+    sure(await createLayout(db, designer, projectId, { name, document: floor(document) })).id;
 
   const yard = await project(
     'Sallowgate side yard',
@@ -93,14 +96,16 @@ const seed = async (db: Db): Promise<void> => {
     {
       label: 'Herringbone about the fire bowl',
       note: 'Set at 45° to the house, started where no block comes near the strip.',
-      document: ROUND_TERRACE,
+      document: floor(ROUND_TERRACE),
       then: async (id) => {
         sure(await shareVersion(db, designer, id, { note: 'As we drew it together.' }));
+        await sendDemoQuote(db, designer, id);
         const { fingerprint, terms } = sure(await openAgreement(db, client, id));
         const typedName = 'Nerys Quillamore';
         const note = 'Lovely. Go ahead.';
         sure(await acceptVersion(db, client, id, { typedName, fingerprint, terms, note }));
         sure(await issueVersion(db, actor('owner'), id, { note: 'For setting out from Monday.' }));
+        await sendDemoOrder(db, designer, id);
       },
     },
   ]);
@@ -115,17 +120,17 @@ const seed = async (db: Db): Promise<void> => {
     {
       label: 'Square to the walls',
       note: 'Every slab, no voids: the most stone and the least planting.',
-      document: COURT_SQUARE,
+      document: floor(COURT_SQUARE),
     },
     {
       label: 'Chequer, from the corner',
       note: 'Turned 45° and started at the south-west corner, before the start was looked for.',
-      document: COURT_FIRST_CHEQUER,
+      document: floor(COURT_FIRST_CHEQUER),
     },
     {
       label: 'Chequer, well started',
       note: 'The same floor, started where the most slabs stay whole.',
-      document: COURT_CHEQUER,
+      document: floor(COURT_CHEQUER),
       then: async (id) => {
         const note = 'Far more slabs than the first start, and margins that forgive.';
         sure(await shareVersion(db, designer, id, { note }));

@@ -216,7 +216,7 @@ describe('a file', () => {
     const gone = await added(owner, { kind: 'sundry', name: 'Old pegs' });
     await owner.visitor.patch(`/api/catalogue/${gone.id}`, { revision: 1, retired: true });
     const exported = (await owner.visitor.get('/api/catalogue/export')).body as string;
-    expect(exported).toContain("'=HS450");
+    expect(exported).toContain("'=QS450");
     expect(exported).toContain("'@Geotextile");
     expect(exported).toContain("'+1");
     const unnamed = (csv: string) => csv.replace(/,[a-z0-9]{24}\r\n/g, ',\r\n');

@@ -56,15 +56,15 @@ export const newPricedOffice = async (): Promise<PricedOffice> => {
   const installer = await newMember(firmId, 'installer');
   const client = await newMember(firmId, 'client');
   const stone = await made(owner, '/api/suppliers', {
-    name: 'Hartsel Stone',
-    email: 'orders@hartsel.example',
+    name: 'Quennock Stone',
+    email: 'orders@quennock.example',
     address: 'Quarry Road',
   });
   const pit = await made(owner, '/api/suppliers', { name: 'Over Pit', email: '' });
   const slab = await made(owner, '/api/catalogue', {
     kind: 'unit',
     name: 'Slab 450',
-    code: '=HS450',
+    code: '=QS450',
     supplierId: stone,
     packName: 'pallet',
     packHolds: 36,

@@ -28,7 +28,7 @@ const ordered = async (office: PricedOffice): Promise<VersionOrders & { version:
 };
 
 const ofStone = ({ orders }: VersionOrders): PurchaseOrder =>
-  orders.find(({ supplier }) => supplier.name === 'Hartsel Stone')!;
+  orders.find(({ supplier }) => supplier.name === 'Quennock Stone')!;
 
 const send = ({ designer }: PricedOffice, { id, revision }: PurchaseOrder) =>
   designer.visitor.post(`/api/orders/${id}/send`, { revision });
@@ -37,14 +37,14 @@ describe('orders of a version', () => {
   test('are parted by supplier, with the take-off’s packs, and what nobody sells is named', async () => {
     const office = await newPricedOffice();
     const { orders, unsupplied, version } = await ordered(office);
-    expect(orders.map(({ supplier }) => supplier.name).sort()).toEqual(['Hartsel Stone', 'Over Pit']); // prettier-ignore
+    expect(orders.map(({ supplier }) => supplier.name).sort()).toEqual(['Quennock Stone', 'Over Pit']); // prettier-ignore
     const { takeOff } = (await office.owner.visitor.get(`/api/versions/${version}/pricing`)).body;
     const wanted = takeOff.orders.find(({ kind }: { kind: string }) => kind === 'unit');
     expect(ofStone({ orders, unsupplied })).toMatchObject({
       state: 'draft',
       number: null,
       letter: null,
-      lines: [{ itemId: office.slab, code: '=HS450', amount: wanted.amount, costMinor: 41_400 }],
+      lines: [{ itemId: office.slab, code: '=QS450', amount: wanted.amount, costMinor: 41_400 }],
       costMinor: wanted.costMinor,
     });
     const lines = orders.flatMap((order) => order.lines).length;
@@ -108,7 +108,7 @@ describe('orders of a version', () => {
     expect((await office.designer.visitor.call('DELETE', `/api/orders/${sent.id}`)).status).toBe(409); // prettier-ignore
     const audit = await office.owner.visitor.get('/api/audit?what=order.sent');
     expect(audit.body.entries).toMatchObject([
-      { detail: { number: 'PO-0001', supplier: 'Hartsel Stone', to: 'orders@hartsel.example' } },
+      { detail: { number: 'PO-0001', supplier: 'Quennock Stone', to: 'orders@quennock.example' } },
     ]);
     await expect((await db()).execute(sql`update purchase_orders set note = 'x' where state = 'sent'`)).rejects.toMatchObject({ cause: { message: expect.stringMatching(/never altered/) } }); // prettier-ignore
   });
@@ -145,7 +145,7 @@ test('an order goes by SMTP with its PDF and CSV as they were when it was sent, 
   );
   await sender.drain();
   const mail = server.taken.find(({ text }) => text?.includes('1 March 2150'))!;
-  expect(mail.to).toMatchObject({ value: [{ address: 'orders@hartsel.example' }] });
+  expect(mail.to).toMatchObject({ value: [{ address: 'orders@quennock.example' }] });
   expect(mail.replyTo).toMatchObject({ value: [{ address: 'desk@firm.example' }] });
   expect(mail.attachments.map(({ filename, contentType }) => [filename, contentType])).toEqual([
     ['order-PO-0001.pdf', 'application/pdf'],
@@ -153,7 +153,7 @@ test('an order goes by SMTP with its PDF and CSV as they were when it was sent, 
   ]);
   const [pdf, csv] = mail.attachments.map(({ content }) => new Uint8Array(content));
   const text = (await pdfTexts(pdf)).join('\n');
-  for (const words of ['Order PO-0001', 'Hartsel Stone', '1 March 2150', 'Unload with care.']) {
+  for (const words of ['Order PO-0001', 'Quennock Stone', '1 March 2150', 'Unload with care.']) {
     expect(text).toContain(words);
   }
   const rows = Papa.parse<Record<string, string>>(
@@ -165,7 +165,7 @@ test('an order goes by SMTP with its PDF and CSV as they were when it was sent, 
       Order: 'PO-0001',
       'Wanted on': '2150-03-01',
       'Deliver to': "'=Court, Bell Row",
-      'Your code': "'=HS450",
+      'Your code': "'=QS450",
       Item: 'Slab 450 (Slab 450 × 450)',
       Packs: String(sent.lines[0].amount),
       'Price of a pack': '414.00',

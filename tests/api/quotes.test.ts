@@ -78,6 +78,7 @@ describe('a version', () => {
         `/api/versions/${version}`,
         `/api/versions/${version}/agreement`,
         `/api/versions/${version}/quotes`,
+        `/api/versions/${version}/cost`,
         `/api/versions/${version}/site-pack`,
         `/api/layouts/${layoutId}/versions`,
         `/api/layouts/${layoutId}`,

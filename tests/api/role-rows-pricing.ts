@@ -136,6 +136,12 @@ export const pricingRows: readonly Row[] = [
     expected: onVersion(200),
   },
   {
+    row: `${TOTALS}: each sees of it what is theirs, a crew nothing`,
+    endpoint: 'GET /api/versions/[id]/cost',
+    id: ({ seenByAll }) => seenByAll,
+    expected: statuses([200, 200, 200, 200, 404, 404, 404, 401]),
+  },
+  {
     row: `${TOTALS}: of a version that is not shown`,
     endpoint: 'GET /api/versions/[id]/pricing',
     id: ({ saved }) => saved,

@@ -50,11 +50,13 @@ const columns = (props: Props) =>
             aria-label={`Change ${item.name}`}
             onClick={() => props.onEdit(item)}
           >
-            <span
-              aria-hidden
-              className="inline-block size-4 shrink-0 border border-slate"
-              style={item.colour ? { background: item.colour } : undefined}
-            />
+            {item.colour && (
+              <span
+                aria-hidden
+                className="inline-block size-4 shrink-0 border border-slate"
+                style={{ background: item.colour }}
+              />
+            )}
             {item.name}
           </button>
           <p className="text-sm text-slate">
@@ -189,7 +191,7 @@ export function ItemTable(props: Props) {
                 {row.getAllCells().map((cell) => (
                   <td
                     key={cell.id}
-                    className={`py-2 pr-4 align-top last:pr-0 ${right(cell.column.id)} ${WIDE_ONLY[cell.column.id] ?? ''}`}
+                    className={`py-2 pr-4 align-baseline last:pr-0 ${right(cell.column.id)} ${WIDE_ONLY[cell.column.id] ?? ''}`}
                   >
                     <table.FlexRender cell={cell} />
                   </td>

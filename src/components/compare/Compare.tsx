@@ -20,6 +20,7 @@ import { Segmented } from '../ui/Segmented';
 import { STATE_WORDS } from '../ui/version-words';
 import { Wrong } from '../ui/Wrong';
 import { compareLink, type CompareView } from './compare-link';
+import { CompareCosts } from './CompareCosts';
 import { CompareTable } from './CompareTable';
 import { paintOverlaid, paintSideMarks } from './comparison-picture';
 import { differenceHeading, differenceSentence, figureRows } from './difference-words';
@@ -163,11 +164,18 @@ function Both({ a, b, several, view, onView, role }: BothProps) {
         <div className="min-w-0">
           <Floors a={a} b={b} laid={laid} view={view} onView={onView} />
         </div>
-        <CompareTable
-          rows={figureRows(a.document, b.document, comparison.figures, display)}
-          a={several && a.layoutId !== b.layoutId ? `${a.layoutName}, ${a.number}` : `${a.number}`}
-          b={several && a.layoutId !== b.layoutId ? `${b.layoutName}, ${b.number}` : `${b.number}`}
-        />
+        <div>
+          <CompareTable
+            rows={figureRows(a.document, b.document, comparison.figures, display)}
+            a={
+              several && a.layoutId !== b.layoutId ? `${a.layoutName}, ${a.number}` : `${a.number}`
+            }
+            b={
+              several && a.layoutId !== b.layoutId ? `${b.layoutName}, ${b.number}` : `${b.number}`
+            }
+          />
+          <CompareCosts a={a.id} b={b.id} names={[`Version ${a.number}`, `Version ${b.number}`]} />
+        </div>
       </div>
     </>
   );

@@ -235,7 +235,7 @@ function Group({
       </div>
       {lines.length === 0 && <p className="mt-2 text-slate">None.</p>}
       <ul className="hairlines">
-        {lines.map((line) => (
+        {lines.map((line, n) => (
           <li
             key={line.id}
             className="grid grid-cols-[1fr_1fr_auto] items-end gap-x-3 gap-y-2 py-2 md:grid-cols-[minmax(12rem,1fr)_7rem_9rem_8rem_7rem_auto]"
@@ -243,6 +243,7 @@ function Group({
             <div className="col-span-3 md:col-span-1">
               <Words
                 label="What"
+                hideLabel={n > 0}
                 short
                 value={line.name}
                 limit={160}
@@ -251,12 +252,14 @@ function Group({
             </div>
             <AmountField
               label="Amount"
+              hideLabel={n > 0}
               amount={line.amount}
               onAmount={(amount) => onLine(line.id, { amount })}
             />
             <div className="max-md:col-span-2">
               <Words
                 label="Measure"
+                hideLabel={n > 0}
                 short
                 value={line.measure}
                 limit={60}
@@ -265,6 +268,7 @@ function Group({
             </div>
             <MoneyField
               label="One costs"
+              hideLabel={n > 0}
               minor={line.costMinor}
               currency={currency}
               onMinor={(costMinor) => onLine(line.id, { costMinor })}
@@ -331,12 +335,14 @@ export function Words({
   limit,
   onValue,
   short = false,
+  hideLabel = false,
 }: {
   label: string;
   value: string;
   limit: number;
   onValue: (value: string) => void;
   short?: boolean;
+  hideLabel?: boolean;
 }) {
   const id = useId();
   const [typed, setTyped] = useState<string | null>(null);
@@ -353,7 +359,7 @@ export function Words({
   };
   return (
     <div>
-      <label htmlFor={id} className="field-label">
+      <label htmlFor={id} className={hideLabel ? 'sr-only' : 'field-label'}>
         {label}
       </label>
       {short ? (
@@ -369,7 +375,7 @@ export function Words({
       ) : (
         <textarea
           {...shared}
-          rows={3}
+          rows={2}
           onChange={(event) => setTyped(event.target.value)}
           onKeyDown={(event) => event.key === 'Escape' && setTyped(null)}
         />

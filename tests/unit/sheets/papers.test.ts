@@ -51,7 +51,7 @@ const quote = (over: Partial<QuotePaper> = {}): QuotePaper => ({
 const order = (over: Partial<OrderPaper> = {}): OrderPaper => ({
   size: 'A4',
   firm,
-  supplier: { name: 'Hartsel Stone Works', address: 'Quarry Road\nOver Hartsel' },
+  supplier: { name: 'Quennock Stone Works', address: 'Quarry Road\nOver Quennock' },
   number: 'PO-0012',
   on: '2026-03-01',
   orderedBy: 'Tamsin Okelby',
@@ -61,7 +61,7 @@ const order = (over: Partial<OrderPaper> = {}): OrderPaper => ({
   lines: [
     {
       name: 'Slab 450 × 450',
-      code: 'HS-450',
+      code: 'QS-450',
       pack: { name: 'pallet', holds: 36, measure: 'each', whole: true },
       amount: 2,
       costMinor: 41_400,

@@ -9,7 +9,7 @@ import { importPlan, type KnownCatalogue, type KnownItem } from '@/server/catalo
 const fields: ItemFields = {
   kind: 'unit',
   name: 'Slab 450',
-  code: 'HS-450',
+  code: 'QS-450',
   supplierId: 's1',
   packName: 'pallet',
   packHolds: 36,
@@ -38,7 +38,7 @@ const item = (over: Partial<KnownItem> = {}): KnownItem => ({
 
 const known = (over: Partial<KnownCatalogue> = {}): KnownCatalogue => ({
   items: [item()],
-  suppliers: [{ id: 's1', name: 'Hartsel Stone' }],
+  suppliers: [{ id: 's1', name: 'Quennock Stone' }],
   currency: 'GBP',
   from: '2026-03-01',
   ...over,
@@ -55,7 +55,7 @@ describe('a file that can be read', () => {
     const { items, problems, newSuppliers } = planned(
       [
         'Kind,Name,Supplier,Pack,Pack holds,Measure,Price,Length,Width,Thickness',
-        'unit,slab 450,hartsel stone,pallet,36,each,415.50,450,450,50',
+        'unit,slab 450,quennock stone,pallet,36,each,415.50,450,450,50',
         'aggregate,Gravel 10 mm,New Pit,bulk bag,0.8,t,62,,,',
       ].join('\n'),
     );
@@ -75,9 +75,9 @@ describe('a file that can be read', () => {
   });
 
   test('columns that it lacks leave an item as it is, empty cells empty it', () => {
-    const lacking = planned('Name,Supplier,Code\nSlab 450,Hartsel Stone,X1').items[0];
+    const lacking = planned('Name,Supplier,Code\nSlab 450,Quennock Stone,X1').items[0];
     expect(lacking.fields).toEqual({ ...fields, code: 'X1' });
-    const emptied = planned('Name,Supplier,Colour\nSlab 450,Hartsel Stone,').items[0];
+    const emptied = planned('Name,Supplier,Colour\nSlab 450,Quennock Stone,').items[0];
     expect(emptied.fields).toEqual({ ...fields, colour: null });
   });
 
@@ -110,9 +110,9 @@ describe('a file that can be read', () => {
   });
 
   test('the same price is not entered again; a day of its own is', () => {
-    const same = planned('Name,Supplier,Price\nSlab 450,Hartsel Stone,414').items[0];
+    const same = planned('Name,Supplier,Price\nSlab 450,Quennock Stone,414').items[0];
     expect(same).toMatchObject({ price: null, row: { what: 'same' } });
-    const later = planned('Name,Supplier,Price,Price from\nSlab 450,Hartsel Stone,420,2027-01-01');
+    const later = planned('Name,Supplier,Price,Price from\nSlab 450,Quennock Stone,420,2027-01-01');
     expect(later.items[0].price).toEqual({ costMinor: 42_000, from: '2027-01-01' });
   });
 
@@ -163,7 +163,7 @@ describe('rows that are wrong are listed with line, column and reason', () => {
     });
     const unknown = planned('Name,Reference\nSlab 450,elsewhere', catalogue);
     expect(unknown.problems[0]).toMatchObject({ line: 2, column: 'Reference' });
-    const taken = planned('Name,Supplier,Reference\nSlab 600,Hartsel Stone,item1', catalogue);
+    const taken = planned('Name,Supplier,Reference\nSlab 600,Quennock Stone,item1', catalogue);
     expect(taken.problems[0]).toMatchObject({ line: 2, column: 'Name' });
   });
 
