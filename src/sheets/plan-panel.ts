@@ -112,7 +112,7 @@ function quantityRows({ laying, report }: PlanInput, width: number): readonly Pa
     pair('Bond', BOND_NAMES[document.bond.kind]),
     pair('Joint', lengthText(joint, display, 1)),
     pair('Ground', formatArea(report.groundArea, display)),
-    pair('Under units', formatArea(report.coveredArea, display)),
+    pair(report.cut ? 'Under whole units' : 'Under units', formatArea(report.coveredArea, display)),
     pair(document.aggregate?.name ?? 'Fill', formatArea(aggregateArea(report), display)),
     ...(deep
       ? [

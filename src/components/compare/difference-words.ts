@@ -5,6 +5,7 @@ import { formatArea, M2_PER_SQUARE_FOOT } from '@/paving/area';
 import { formatLength, formatSize, type Display } from '@/paving/length';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { countText } from '@/sheets/figures';
+import { formatRun } from '@/takeoff/measures';
 
 /** What is compared, as the words need it. */
 export interface Side {
@@ -158,6 +159,11 @@ export function figureRows(
     const change = (to ?? 0) - (from ?? 0);
     return { name, a: p, b: q, change: p === q ? '' : signed(change, areaStep(change, display)) };
   };
+  const run = (name: string, { a: from, b: to }: { a: number | null; b: number | null }) => {
+    const [p, q] = [from ?? 0, to ?? 0].map((mm) => formatRun(mm / 1000, display));
+    const change = ((to ?? 0) - (from ?? 0)) / 1000;
+    return { name, a: p, b: q, change: p === q ? '' : signed(change, formatRun(Math.abs(change), display)) }; // prettier-ignore
+  };
   const text = (name: string, from: string, to: string): FigureRow => ({
     name,
     a: from,
@@ -171,7 +177,7 @@ export function figureRows(
     ...(figures.kinds.length > 1
       ? figures.kinds.map((kind) => count(kind.names.join(' / '), { a: kind.a, b: kind.b }))
       : []),
-    count('Left out at the edge', figures.leftOut),
+    count(figures.cut ? 'Not whole at the edge' : 'Left out at the edge', figures.leftOut),
     ...((figures.lifted.a ?? 0) + (figures.lifted.b ?? 0) > 0
       ? [count('Lifted out by hand', figures.lifted)]
       : []),
@@ -180,13 +186,13 @@ export function figureRows(
           count('Pieces cut at the edge', figures.cut.pieces),
           count('Whole units to saw them from', figures.cut.sawnUnits),
           area('Thrown away', figures.cut.waste),
-          length('To saw', figures.cut.sawLength),
+          run('To saw', figures.cut.sawLength),
         ]
       : []),
     length('Least gap', figures.leastGap),
     length('Play', figures.play, '±'),
     area(fills.join(' / '), figures.fillArea),
-    area('Under units', figures.coveredArea),
+    area(figures.cut ? 'Under whole units' : 'Under units', figures.coveredArea),
     area('Ground', figures.groundArea),
     text('Bond', BOND_NAMES[a.bond.kind], BOND_NAMES[b.bond.kind]),
     text('Turn', turn(a), turn(b)),

@@ -69,6 +69,8 @@ function sawnSvg(document: LayoutDocument, cut: CutReport): string {
   const alike = new Set<string>();
   const units = nesting(shapes, SAW_KERF_MM)
     .units.filter(({ pieces }) => {
+      // A notched piece is nested by its hull, which would look like a piece that it is not.
+      if (pieces.some((n) => cut.pieces[n].notched)) return false;
       const key = pieces.map((n) => shapes[n].key).join();
       return !alike.has(key) && alike.add(key);
     })

@@ -46,6 +46,23 @@ describe('what is said of two floors', () => {
     expect(rows.every(([, , , change]) => change === '')).toBe(true);
   });
 
+  it('says what cutting the edge takes, from the same start', () => {
+    // Shifted by half a slab both ways: nine by nine whole, nine halves along each side and a quarter in each corner.
+    const whole = { ...TEN_BY_TEN, placement: { origin: [300, 300] as [number, number], turn: 0 } };
+    const { heading, sentence, rows } = compared(whole, { ...whole, cutting: 'edge' });
+    expect(heading).toBe('The same floor, whole and cut');
+    expect(sentence).toMatch(/^Every unit of version 2 lies where it lies in version 1; version 2 cuts 40 pieces at the edge and throws \d\.\d\d m² away\.$/); // prettier-ignore
+    expect(rows).toContainEqual(['Pieces cut at the edge', '0', '40', '+40']);
+    expect(rows.find(([name]) => name === 'Fill')).toEqual([
+      'Fill',
+      '1.71 m²',
+      '0.00 m²',
+      '−1.71 m²',
+    ]);
+    const back = compared({ ...whole, cutting: 'edge' }, whole);
+    expect(back.sentence).toContain('version 2 cuts nothing at the edge');
+  });
+
   it('counts what a shift by half a slab costs: nine rows of ten fit', () => {
     // Shifted along x by 150 mm, nine whole slabs of 300 mm fit in the 2 850 mm left: 90 of 100, 0.9 m² more bare.
     const shifted = { ...TEN_BY_TEN, placement: { origin: [300, 150] as const, turn: 0 } };

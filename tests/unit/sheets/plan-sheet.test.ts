@@ -30,6 +30,7 @@ const NAMED: Record<string, LayoutDocument> = {
   'a path of 30 m by 1 m': PATH,
   'a star of 40 corners': STAR,
   stairs: STAIRS,
+  'the court cut at its edge': { ...COURT, cutting: 'edge' as const },
   'demo: chequer': COURT_CHEQUER,
   'demo: square': COURT_SQUARE,
   'demo: terrace': ROUND_TERRACE,

@@ -73,6 +73,11 @@ export function CostTable({ floor, display }: { floor: CutFloor; display: Displa
           ))}
         </tbody>
       </table>
+      {currency === null && (
+        <p className="mt-1 text-sm text-slate">
+          Prices come from your firm’s catalogue, once there are some in it.
+        </p>
+      )}
       {currency !== null && unpriced.length > 0 && (
         <p className="mt-1 text-sm text-slate">
           Without a price in the catalogue: {unpriced.join(', ')}.
