@@ -5,6 +5,7 @@ import type { VersionWithDrawing } from '@/api-types/versions';
 import { formatLength } from '@/paving/length';
 import { countText } from '@/sheets/figures';
 import { compareLink } from '../compare/compare-link';
+import { CoursesLaid } from '../site-progress/CoursesLaid';
 import { presentWords } from '../live/present-words';
 import { api } from '../ui/api';
 import { FloorDrawing } from '../ui/FloorDrawing';
@@ -138,6 +139,11 @@ function Versions({
                 {STATE_WORDS[version.state]}, <Moment iso={version.createdAt} day />
               </span>
             </p>
+            {version.state === 'issued' && (
+              <div className="col-span-2 col-start-2">
+                <CoursesLaid versionId={version.id} document={version.document} />
+              </div>
+            )}
           </li>
         );
       })}

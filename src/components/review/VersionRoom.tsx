@@ -9,6 +9,7 @@ import { useThreads } from '../comments/threads';
 import { useLiveRefresh } from '../live/live-refresh';
 import { api } from '../ui/api';
 import { ClientQuote } from '../quote/ClientQuote';
+import { OnSite } from '../site-progress/OnSite';
 import { Queries } from '../ui/Queries';
 import { useAgreement } from './agreement';
 import { type ChangePin } from './AskChangeForm';
@@ -121,6 +122,7 @@ function Room({ version: first, role, layouts, thread, children, tools }: Props)
           (role === 'owner' || role === 'designer') && <FirmSteps version={version} />
         )}
         {tools && <div>{tools}</div>}
+        <OnSite version={version} role={role} />
         {client && <ClientQuote versionId={version.id} />}
         {client && <PlainFigures version={version} />}
         <Choices version={version} layouts={layouts} client={client} agreement={agreement.data} />

@@ -10,7 +10,7 @@ export type WorkerStanding =
   /** A newer program is on the phone and is taken when the person says so, so that nothing typed is lost. */
   | 'newer';
 
-const WORKER = '/site-worker.js';
+export const WORKER = '/site-worker.js';
 export const SCOPE = '/site';
 
 let standing: WorkerStanding = 'looking';
