@@ -75,7 +75,7 @@ function Totals({ takeOff }: { takeOff: TakeOff }) {
         {figures.map(([name, value]) => (
           <div
             key={name}
-            className="flex min-w-0 flex-1 flex-col border-l border-stone-300 px-2.5 first:border-l-0 first:pl-0"
+            className="flex min-w-max flex-1 flex-col border-l border-stone-300 px-2.5 first:border-l-0 first:pl-0"
           >
             <dt className="order-2 text-sm text-slate">{name}</dt>
             <dd className="order-1 text-[1.25rem] leading-tight font-bold tracking-tight whitespace-nowrap">
