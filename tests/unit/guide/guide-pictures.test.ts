@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { floorPicture, sheetPicture, wholeUnits } from '@/components/guide/guide-pictures';
 import { BARE_GROUND, BOND_PATCHES, COURT, startedAt } from '@/components/guide/sample-floors';
+import { setOutPictureOf } from '@/components/guide/set-out-pictures';
 import { parseLayoutDocument } from '@/paving/layout-validation';
 
 describe('the guide’s pictures', () => {
@@ -22,5 +23,16 @@ describe('the guide’s pictures', () => {
     expect(floorPicture(BARE_GROUND, 'ground')).not.toContain('gap ');
     expect(floorPicture(COURT, 'gaps')).toContain('gap ');
     expect(sheetPicture(COURT)).toContain('Issued for set-out');
+  });
+
+  it('show the edge’s point in the words of the set-out, and a worse crossing as a wider one', () => {
+    const { floorWords, crossings, stringWords } = setOutPictureOf(COURT);
+    expect(floorWords).toMatch(/The tapes meet at \d+°/);
+    expect(crossings).toHaveLength(2);
+    const [good, bad] = crossings.map(({ words }) => Number(/within ([\d.]+)/.exec(words)![1]));
+    // At a right angle 2 mm on each tape is 2.83 mm; nothing is fixed better.
+    expect(good).toBeGreaterThanOrEqual(2.8);
+    expect(bad).toBeGreaterThan(good);
+    expect(stringWords).toMatch(/\d+ units/);
   });
 });

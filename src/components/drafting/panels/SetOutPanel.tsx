@@ -13,14 +13,17 @@ export function SetOutPanel() {
   return (
     <div className="space-y-6">
       <DatumFields setOut={setOut} />
-      <ul className="space-y-1.5 border-l-2 border-stone-300 pl-3 text-[0.95rem]">
-        {setOut.advice.map(({ text, kind }) => (
-          <li key={text} className={kind === 'floor' ? 'font-semibold' : undefined}>
-            {text}
-          </li>
-        ))}
-      </ul>
       <PointCard setOut={setOut} />
+      <section aria-label="What to know">
+        <h2 className="mb-2 border-b border-graphite pb-1 text-base">What to know</h2>
+        <ul className="space-y-1.5 border-l-2 border-stone-300 pl-3 text-[0.95rem]">
+          {setOut.advice.map(({ text, kind }) => (
+            <li key={text} className={kind === 'floor' ? 'font-semibold' : undefined}>
+              {text}
+            </li>
+          ))}
+        </ul>
+      </section>
       <CourseFields setOut={setOut} />
       <PointTable setOut={setOut} />
       <CheckList setOut={setOut} />

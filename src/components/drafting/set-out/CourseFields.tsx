@@ -68,6 +68,17 @@ export function CourseFields({ setOut }: { setOut: SetOut }) {
   const number = pointShown(setOut, { point, pointed: null })?.course ?? 1;
   const course = courses[number - 1];
   const length = (mm: number) => <Length mm={mm} display={document.display} decimals={1} />;
+  const figure = (mm: number) => (
+    <Length
+      mm={mm}
+      display={document.display}
+      decimals={1}
+      unit={document.display === 'imperial'}
+    />
+  );
+  const before = course.runs.map((_, r) =>
+    course.runs.slice(0, r).reduce((sum, { units }) => sum + units, 0),
+  );
   const take = (to: number) => table.getState().set({ point: `${to}a`, pointed: null });
   return (
     <section aria-label="Courses">
@@ -104,32 +115,49 @@ export function CourseFields({ setOut }: { setOut: SetOut }) {
         after the last.
         {course.step !== null && <> {length(course.step)} up from the string before.</>}
       </p>
-      <p className="mt-2 text-sm text-slate">
-        Running lengths from the start of the string, to tick on it: both edges of each unit.
-      </p>
-      {course.runs.map((run) => (
-        <div key={run.from} className="mt-1">
-          {run.after !== 'start' && (
-            <p className="text-sm text-slate">
-              {length(run.from - course.runs[course.runs.indexOf(run) - 1].to)} on,{' '}
-              {BREAKS[run.after]}:
-            </p>
-          )}
-          <ol className="grid grid-cols-2 gap-x-4 text-right text-[0.93rem] tabular-nums">
-            {run.ticks.map(([from, to]) => (
-              <li key={from} className="border-b border-stone-300 py-0.5">
-                {from === to ? (
-                  length(from)
-                ) : (
-                  <>
-                    {length(from)} – {length(to)}
-                  </>
-                )}
-              </li>
-            ))}
-          </ol>
-        </div>
-      ))}
+      <div className="mt-2 max-h-72 overflow-y-auto">
+        <table className="w-full text-right text-[0.93rem]">
+          <caption className="pb-1 text-left text-sm text-slate">
+            Running lengths from the start of the string, to tick on it
+            {document.display === 'metric' && ', mm'}.
+          </caption>
+          <thead className="sticky top-0 bg-stone-50 text-sm text-slate">
+            <tr>
+              <th scope="col" className="py-1 text-left font-normal">
+                Unit
+              </th>
+              <th scope="col" className="font-normal">
+                near side
+              </th>
+              <th scope="col" className="font-normal">
+                far side
+              </th>
+            </tr>
+          </thead>
+          <tbody className="hairlines">
+            {course.runs.flatMap((run, r) => [
+              ...(run.after === 'start'
+                ? []
+                : [
+                    <tr key={`break ${run.from}`}>
+                      <td colSpan={3} className="py-1 text-left text-sm text-slate">
+                        {length(run.from - course.runs[r - 1].to)} on, {BREAKS[run.after]}:
+                      </td>
+                    </tr>,
+                  ]),
+              ...run.ticks.map(([from, to], n) => (
+                <tr key={from}>
+                  <th scope="row" className="py-0.5 text-left font-normal text-slate">
+                    {formatCount(before[r] + n + 1)}
+                  </th>
+                  <td colSpan={from === to ? 2 : 1}>{figure(from)}</td>
+                  {from !== to && <td>{figure(to)}</td>}
+                </tr>
+              )),
+            ])}
+          </tbody>
+        </table>
+      </div>
     </section>
   );
 }

@@ -59,10 +59,10 @@ export function DatumFields({ setOut }: { setOut: SetOut }) {
           </button>
         </div>
       ) : (
-        <div className="grid grid-cols-2 gap-2">
+        <div className="flex gap-2">
           <button
             type="button"
-            className="button px-2 text-sm"
+            className="button flex-1 px-2 text-sm"
             onClick={() => datumsStarted(table)}
           >
             Choose two corners
@@ -70,7 +70,7 @@ export function DatumFields({ setOut }: { setOut: SetOut }) {
           {setOut.baseline.chosen && (
             <button
               type="button"
-              className="button px-2 text-sm"
+              className="button flex-1 px-2 text-sm"
               onClick={() => datumsCleared(table)}
             >
               Pick them for me

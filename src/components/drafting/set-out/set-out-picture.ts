@@ -177,8 +177,20 @@ function paintLive(ink: Ink, setOut: SetOut, point: ControlPoint, floor: Floor) 
         : `${point.name}: tapes meet at ${Math.round(crossing)}°, ±${doubt}`;
   ctx.font = "600 12.5px 'Nunito Sans', sans-serif";
   const width = ctx.measureText(text).width + 16;
-  const left = Math.min(Math.max(x - width / 2, 4), size.width - width - 4);
-  const top = y > 44 ? Math.min(y - 36, size.height - 26) : y + 16;
+  // On the far side of the tapes, where it covers neither them nor their figures.
+  const away = tapedFrom(setOut, point).reduce<Point>(
+    (sum, { at }) => {
+      const [tx, ty] = screen(ink, at);
+      const far = Math.hypot(x - tx, y - ty) || 1;
+      return [sum[0] + (x - tx) / far, sum[1] + (y - ty) / far];
+    },
+    [0, 0],
+  );
+  const reach = Math.hypot(...away) || 1;
+  const [ax, ay] = point.by === 'datum' ? [0, -1] : [away[0] / reach, away[1] / reach];
+  const [lx, ly] = [x + ax * (width / 2 + 26), y + ay * 34];
+  const left = Math.min(Math.max(lx - width / 2, 4), size.width - width - 4);
+  const top = Math.min(Math.max(ly - 11, 4), size.height - 26);
   ctx.fillStyle = colours.line;
   ctx.fillRect(left, top, width, 22);
   ctx.fillStyle = colours.onLine;
