@@ -55,7 +55,7 @@ function usualMaterial(
     return {
       kind: 'crushedStone',
       name: MATERIAL_DEFAULTS.crushedStone.name,
-      source: 'usual practice: crushed stone of all sizes compacts well',
+      source: 'common practice: crushed stone of all sizes compacts well',
     };
   }
   const name = document.aggregate?.name ?? PLAIN_AGGREGATE_NAME;

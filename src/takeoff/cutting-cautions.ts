@@ -77,7 +77,7 @@ export function cuttingCautions(
             id: 'notched' as const,
             weight: 'look' as const,
             words: `${pieces(cut.notched)} cut round an inner corner or a curve: slow to saw, and apt to break from the notch.`,
-            source: 'usual practice',
+            source: 'common practice',
           },
         ]
       : []),

@@ -7,7 +7,7 @@ import { takeOff } from './take-off';
 import { bondUnits, unitMass } from './unit-lines';
 
 /**
- * What the saw's time is reckoned with. All of it is usual practice, to be typed over by whoever knows
+ * What the saw's time is reckoned with. All of it is common practice, to be typed over by whoever knows
  * their saw: nobody publishes a pace for every stone.
  */
 export interface SawTerms {

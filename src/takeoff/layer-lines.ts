@@ -189,7 +189,7 @@ export function geotextileLine(laying: Laying, earth: EarthVolumes): TakeOffLine
           own: materials?.geotextile?.lap !== undefined,
         },
         {
-          ...given('Roll’s width', length(rollWidth), materials?.geotextile?.rollWidth ? TYPED_IN : 'usual practice'), // prettier-ignore
+          ...given('Roll’s width', length(rollWidth), materials?.geotextile?.rollWidth ? TYPED_IN : 'common practice'), // prettier-ignore
           as: 'length',
           raw: rollWidth,
           field: ['materials', 'geotextile', 'rollWidth'],

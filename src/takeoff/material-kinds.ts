@@ -30,7 +30,7 @@ export interface MaterialDefaults {
   readonly open: boolean;
 }
 
-export const USUAL_PRACTICE = 'usual practice';
+export const COMMON_PRACTICE = 'common practice';
 const HUD = 'HUD, Residential Structural Design Guide (2000), table 3.3';
 const EPA = 'US EPA, Standard Volume-to-Weight Conversion Factors (2006)';
 const NAVY = 'Navy Engineering Aid, table 10-1, the row for sand';
@@ -62,13 +62,13 @@ const STONE_COMPACTED: Sourced = {
   source: `${NAVY} (111 loose make 95 compacted), taken for crushed stone too`,
 };
 /** Stone of one size settles little. */
-const SETTLES: Sourced = { value: 1.1, source: `${USUAL_PRACTICE}: stone of few sizes settles by about a tenth` }; // prettier-ignore
+const SETTLES: Sourced = { value: 1.1, source: `${COMMON_PRACTICE}: stone of few sizes settles by about a tenth` }; // prettier-ignore
 
 export const MATERIAL_DEFAULTS: Readonly<Record<MaterialKind, MaterialDefaults>> = {
   jointingSand: {
     name: 'Fine jointing sand',
     stone: [0, 1.2],
-    stoneSource: USUAL_PRACTICE,
+    stoneSource: COMMON_PRACTICE,
     density: DRY_SAND,
     bulk: SAND_COMPACTED,
     rounded: false,
@@ -88,7 +88,7 @@ export const MATERIAL_DEFAULTS: Readonly<Record<MaterialKind, MaterialDefaults>>
   fineChippings: {
     name: 'Fine chippings',
     stone: [2, 6],
-    stoneSource: USUAL_PRACTICE,
+    stoneSource: COMMON_PRACTICE,
     density: CRUSHED_STONE,
     bulk: SETTLES,
     rounded: false,
@@ -108,7 +108,7 @@ export const MATERIAL_DEFAULTS: Readonly<Record<MaterialKind, MaterialDefaults>>
   coarseChippings: {
     name: 'Coarse chippings',
     stone: [10, 20],
-    stoneSource: USUAL_PRACTICE,
+    stoneSource: COMMON_PRACTICE,
     density: CRUSHED_STONE,
     bulk: SETTLES,
     rounded: false,
@@ -118,7 +118,7 @@ export const MATERIAL_DEFAULTS: Readonly<Record<MaterialKind, MaterialDefaults>>
   gravel: {
     name: 'Rounded gravel',
     stone: [4, 10],
-    stoneSource: USUAL_PRACTICE,
+    stoneSource: COMMON_PRACTICE,
     density: DRY_GRAVEL,
     bulk: SETTLES,
     rounded: true,
@@ -148,7 +148,7 @@ export const MATERIAL_DEFAULTS: Readonly<Record<MaterialKind, MaterialDefaults>>
   stoneDust: {
     name: 'Stone dust and screenings',
     stone: [0, 5],
-    stoneSource: USUAL_PRACTICE,
+    stoneSource: COMMON_PRACTICE,
     density: CRUSHED_STONE,
     bulk: STONE_COMPACTED,
     rounded: false,
@@ -166,7 +166,7 @@ export interface GroundDefaults {
 }
 
 /** Earth once dug is heavier wet than dry; the figure is for judging loads. */
-const LOOSE_EARTH: Sourced = { value: 1250, source: `${USUAL_PRACTICE}: moist earth, tipped loose` }; // prettier-ignore
+const LOOSE_EARTH: Sourced = { value: 1250, source: `${COMMON_PRACTICE}: moist earth, tipped loose` }; // prettier-ignore
 
 export const GROUND_DEFAULTS: Readonly<Record<GroundKind, GroundDefaults>> = {
   sand: {
@@ -176,17 +176,17 @@ export const GROUND_DEFAULTS: Readonly<Record<GroundKind, GroundDefaults>> = {
   },
   earth: {
     name: 'Earth',
-    bulk: { value: 1.25, source: USUAL_PRACTICE },
+    bulk: { value: 1.25, source: COMMON_PRACTICE },
     density: LOOSE_EARTH,
   },
   clay: {
     name: 'Clay',
-    bulk: { value: 1.43, source: USUAL_PRACTICE },
+    bulk: { value: 1.43, source: COMMON_PRACTICE },
     density: LOOSE_EARTH,
   },
   rock: {
     name: 'Rock',
-    bulk: { value: 1.5, source: USUAL_PRACTICE },
+    bulk: { value: 1.5, source: COMMON_PRACTICE },
     density: CRUSHED_STONE,
   },
 };

@@ -10,10 +10,10 @@ import type { PackMeasure, PriceItem, PriceKind, PriceList } from './price-list'
 import type { Assumption, OrderLine, TakeOffLine, TakeOffMeasure } from './take-off-line';
 import { bondUnits, unitMass } from './unit-lines';
 
-/** Units beyond those laid and stone beyond what is worked out, per cent: usual practice. */
+/** Units beyond those laid and stone beyond what is worked out, per cent: common practice. */
 const USUAL_SPARES: NonNullable<Order['spares']> = { rule: 'percent', value: 5 };
 const USUAL_EXTRA = 5;
-/** Up to so many kg a thing comes in bags, up to so many in bulk bags: both usual practice. */
+/** Up to so many kg a thing comes in bags, up to so many in bulk bags: both common practice. */
 const GREATEST_IN_BAGS_KG = 300;
 const GREATEST_IN_BULK_BAGS_KG = 4000;
 /** Joints wider than this, mm, are no part of what a pack of so many square metres is reckoned to cover. */
@@ -90,7 +90,7 @@ function unitNeeds(
               value: percent
                 ? `${spares.value}\u202f%`
                 : `${formatCount(spares.value)} of each kind`,
-              source: document.order?.spares ? TYPED_IN : 'usual practice',
+              source: document.order?.spares ? TYPED_IN : 'common practice',
               as: percent ? ('percent' as const) : ('count' as const),
               raw: spares.value,
               field: ['order', 'spares', 'value'],
@@ -155,7 +155,7 @@ function materialNeeds(
             value: `${extra}\u202f%`,
             source:
               document.order?.extra === undefined
-                ? 'usual practice, for what is spilled and trodden in'
+                ? 'common practice, for what is spilled and trodden in'
                 : TYPED_IN,
             as: 'percent',
             raw: extra,
@@ -254,7 +254,7 @@ export function orderLines(
               value: holdsWords(pack, display),
               source: holderKg(document, way).own
                 ? TYPED_IN
-                : 'usual practice; ask whoever delivers',
+                : 'common practice; ask whoever delivers',
               as: 'mass',
               raw: pack.holds,
               field: ['order', way],

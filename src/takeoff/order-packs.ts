@@ -25,7 +25,7 @@ export interface Pack {
   readonly whole: boolean;
 }
 
-/** What bags and lorries hold unless somebody says otherwise, kg: usual practice. */
+/** What bags and lorries hold unless somebody says otherwise, kg: common practice. */
 const USUAL_KG: Readonly<Record<Display, Readonly<Record<'bag' | 'bulkBag' | 'load', number>>>> = {
   metric: { bag: 20, bulkBag: 800, load: 10 * KG_PER_TONNE },
   imperial: { bag: 50 * KG_PER_POUND, bulkBag: 2000 * KG_PER_POUND, load: 10 * KG_PER_SHORT_TON },

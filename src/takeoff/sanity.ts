@@ -18,7 +18,7 @@ const NIOSH =
   'NIOSH publication 94-110: 23\u202fkg (51\u202flb) is the most in the best of circumstances';
 /** A stone goes into a gap that is at least twice as wide. */
 export const STONE_SHARE = 1 / 2;
-const HALF = 'usual practice: a stone goes where the gap is twice as wide';
+const HALF = 'common practice: a stone goes where the gap is twice as wide';
 const CMHA = 'CMHA, “Proper concrete paver base and depth”';
 /** Openings wider than this, mm, are none on an accessible route. */
 const ADA_OPENING_MM = 13;
@@ -119,7 +119,7 @@ function materialWarnings({ materials, parts, lines }: Looked): TakeOffWarning[]
       id: 'sand-base',
       weight: 'look',
       words: `${base.name} alone is no base for a floor that is walked on in the wet: crushed stone is usual.`,
-      source: 'usual practice',
+      source: 'common practice',
       line: 'layer:base',
     });
   }
@@ -128,7 +128,7 @@ function materialWarnings({ materials, parts, lines }: Looked): TakeOffWarning[]
       id: 'sand-over-open-base',
       weight: 'look',
       words: `${bedding.name} runs down into the pores of ${base.name.toLowerCase()}. Lay a bedding of fine clean stone, or a geotextile between them.`,
-      source: 'usual practice',
+      source: 'common practice',
       line: 'layer:bedding',
     });
   }

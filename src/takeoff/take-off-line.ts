@@ -14,7 +14,7 @@ export interface Assumption {
   readonly name: string;
   /** As people read it, `1.17`. */
   readonly value: string;
-  /** A published source, `usual practice`, `typed in`, `the catalogue` or what it was taken from. */
+  /** A published source, `common practice`, `typed in`, `the catalogue` or what it was taken from. */
   readonly source: string;
   /** What kind of value, so that it can be typed anew; null for what cannot be. */
   readonly as: 'length' | 'factor' | 'density' | 'percent' | 'count' | 'mass' | 'material' | 'ground' | null; // prettier-ignore
@@ -92,7 +92,7 @@ export interface TakeOffWarning {
   /** `wrong` will not work; `look` needs a decision; `caution` is for people's safety. */
   readonly weight: 'wrong' | 'look' | 'caution';
   readonly words: string;
-  /** Who says so; `usual practice` where nobody published it, null where the layout itself does. */
+  /** Who says so; `common practice` where nobody published it, null where the layout itself does. */
   readonly source: string | null;
   /** The line that it is about. */
   readonly line: string | null;

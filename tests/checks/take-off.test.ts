@@ -116,11 +116,11 @@ describe('what the defaults are taken from', () => {
   });
 
   // The other rows of that family of tables (earth 1.25, clay 1.43, blasted rock 1.50) are from memory,
-  // and are called usual practice on the screen.
-  it('what was not seen in print is called usual practice', () => {
-    expect(GROUND_DEFAULTS.earth.bulk).toEqual({ value: 1.25, source: 'usual practice' });
-    expect(GROUND_DEFAULTS.clay.bulk).toEqual({ value: 1.43, source: 'usual practice' });
-    expect(GROUND_DEFAULTS.rock.bulk).toEqual({ value: 1.5, source: 'usual practice' });
+  // and are called common practice on the screen.
+  it('what was not seen in print is called common practice', () => {
+    expect(GROUND_DEFAULTS.earth.bulk).toEqual({ value: 1.25, source: 'common practice' });
+    expect(GROUND_DEFAULTS.clay.bulk).toEqual({ value: 1.43, source: 'common practice' });
+    expect(GROUND_DEFAULTS.rock.bulk).toEqual({ value: 1.5, source: 'common practice' });
   });
 
   // HUD, Residential Structural Design Guide (2000), table 3.3, as quoted: concrete 145 to 150, dry sand
@@ -275,7 +275,7 @@ test('units by kind and tone add up to the units laid, and lines to their orders
 describe('what is warned of', () => {
   const chippings = { name: 'Chippings', colour: '#cccccc' };
 
-  // Usual practice: a stone larger than half of the gap does not go in.
+  // Common practice: a stone larger than half of the gap does not go in.
   it('stone that is larger than half of the joint or of the least gap', () => {
     const joint = (width: number) =>
       takenOff(

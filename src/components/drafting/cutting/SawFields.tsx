@@ -27,7 +27,7 @@ export function SawFields({ terms, display, currency, onTerms }: Props) {
         What the saw’s time is reckoned with
       </summary>
       <p className="mt-1 text-sm text-slate">
-        Assumptions, not measured: usual practice for a wet saw in 50 mm concrete. Type your own;
+        Assumptions, not measured: common practice for a wet saw in 50 mm concrete. Type your own;
         they are kept on this device.
       </p>
       <div className="mt-2 grid grid-cols-2 items-end gap-2">
