@@ -25,6 +25,7 @@ export function controlDrafts(input: SetOutInput, paper: PaperName): readonly Sh
   const { laying, setOut } = input;
   const content: FiguredContent = {
     bounds: pointsBounds(laying.ground.rings[0].edges.flatMap((edge) => edge.chords)),
+    head: (width) => markRows(input, width),
     rows: (scale, width) => controlRows(input, scale, width),
     draw: (view, frame) => ({
       layers: setOutDrawing(laying, setOut, view, { figures: 'points', frame }),

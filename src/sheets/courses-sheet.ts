@@ -20,6 +20,7 @@ export function coursesDrafts(input: SetOutInput, paper: PaperName): readonly Sh
   if (setOut.courses.length === 0) return [];
   const content: FiguredContent = {
     bounds: pointsBounds(laying.ground.rings[0].edges.flatMap((edge) => edge.chords)),
+    head: (width) => markRows(input, width),
     rows: (scale, width) => coursesPanel(input, scale, width),
     draw: (view, frame) => ({
       layers: setOutDrawing(laying, setOut, view, { figures: 'courses', frame }),

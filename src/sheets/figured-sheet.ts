@@ -14,6 +14,8 @@ import { TITLE_STRIP_HEIGHT } from './title-strip';
 /** A drawing of the ground with a panel of figures beside it or below. */
 export interface FiguredContent {
   readonly bounds: GroundBounds;
+  /** What further sheets for the panel say before it goes on. */
+  readonly head: (width: number) => readonly PanelRow[];
   /** The panel's rows for a column of this width; as high at one scale as at another. They decide the arrangement. */
   readonly rows: (scale: number, width: number) => readonly PanelRow[];
   /** What is drawn, inside the box, and the rows beside it. */
@@ -98,7 +100,7 @@ function scaleIn(bounds: GroundBounds, box: PaperBox): number {
 
 /** Columns of figures at the right, the title strip under the drawing. */
 function landscapeArrangement(
-  { bounds, rows: rowsAt }: FiguredContent,
+  { bounds, head, rows: rowsAt }: FiguredContent,
   paper: Paper,
   count: number,
 ): readonly Arrangement[] {
@@ -132,14 +134,14 @@ function landscapeArrangement(
         rule([split, frame.top], [split, frame.bottom]),
         rule([frame.left, titleTop], [split, titleTop]),
       ],
-      sheets: panelsFlowed(rows, columns, paper).length,
+      sheets: panelsFlowed(rows, columns, paper, head).length,
     },
   ];
 }
 
 /** A band of columns over a title strip across the foot: high enough for all, and as high as the largest plan leaves. */
 function portraitArrangements(
-  { bounds, rows: rowsAt }: FiguredContent,
+  { bounds, head, rows: rowsAt }: FiguredContent,
   paper: Paper,
 ): readonly Arrangement[] {
   const { frame } = paper;
@@ -182,7 +184,7 @@ function portraitArrangements(
         rule([frame.left, titleTop - band], [frame.right, titleTop - band]),
         rule([frame.left, titleTop], [frame.right, titleTop]),
       ],
-      sheets: panelsFlowed(rows, columns, paper).length,
+      sheets: panelsFlowed(rows, columns, paper, head).length,
     };
   });
 }
@@ -192,12 +194,14 @@ export function panelsFlowed(
   rows: readonly PanelRow[],
   columns: readonly PanelColumn[],
   paper: Paper,
+  head: FiguredContent['head'],
 ): readonly (FlowedPanel & { readonly columns: readonly PanelColumn[] })[] {
-  const further = furtherColumns(paper, boxWidth(columns[0].box));
+  const width = boxWidth(columns[0].box);
+  const further = furtherColumns(paper, width);
   const panels = [{ ...panelFlowed(rows, columns), columns }];
   for (let { rest } = panels[0]; rest.length > 0;) {
-    const next = { ...panelFlowed(rest, further), columns: further };
-    if (next.rest.length === rest.length)
+    const next = { ...panelFlowed([...head(width), ...rest], further), columns: further };
+    if (next.rest.length >= rest.length)
       throw new Error('A row of the panel is higher than a whole sheet.');
     panels.push(next);
     rest = next.rest;
@@ -215,7 +219,7 @@ export function figuredDrafts(
   const inside = boxInset(drawing, 1.5);
   const drawn = content.draw(viewCentred(content.bounds, scale, drawing), inside);
   const columnWidth = boxWidth(columns[0].box);
-  const panels = panelsFlowed(drawn.rows(columnWidth), columns, paper);
+  const panels = panelsFlowed(drawn.rows(columnWidth), columns, paper, content.head);
   return panels.map((panel, n): SheetDraft => {
     const title = n === 0 ? arrangement.title : footStrip(paper);
     return {

@@ -2,6 +2,7 @@ import type { Laying } from '@/paving/laying';
 import type { Arrangement, FiguredContent } from './figured-sheet';
 import { bestArrangement, figuredDrafts } from './figured-sheet';
 import { keepOutPlace } from './keep-out-place';
+import { markRows } from './mark-row';
 import type { PaperName } from './paper';
 import type { NamedPoint } from './part-drawing';
 import { partDrafts } from './part-sheet';
@@ -53,6 +54,7 @@ export function planDrafts(
   const bounds = pointsBounds(laying.ground.rings[0].outline);
   const contentWith = (parts: readonly PlanPart[]): FiguredContent => ({
     bounds,
+    head: (width) => markRows(facts.input, width),
     rows: (scale, width) => {
       const inParts = named !== null && leastUnitSide(laying) / scale < READABLE_UNIT;
       return planPanelRows({ ...deciding, parts: inParts ? SOME_PARTS : [] }, scale, width);

@@ -50,7 +50,12 @@ export function sectionDrafts(input: PlanInput, name: PaperName): readonly Sheet
     },
   ];
   const width = COLUMN_WIDTH - 2 * COLUMN_INSET;
-  const [first, ...further] = panelsFlowed(sectionRows(input, scale, width), columns, paper);
+  const [first, ...further] = panelsFlowed(
+    sectionRows(input, scale, width),
+    columns,
+    paper,
+    (column) => markRows(input, column),
+  );
   const board = { ...drawing, top: drawing.top + high + 4 };
   const rules = [rule([title.left, title.top], [title.right, title.top])];
   const common = { kind: 'section' as const, paper, title, scale };
