@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { floorPicture, sheetPicture, wholeUnits } from '@/components/guide/guide-pictures';
+import { levelPicturesOf, SLOPING_COURT } from '@/components/guide/level-pictures';
 import { BARE_GROUND, BOND_PATCHES, COURT, startedAt } from '@/components/guide/sample-floors';
 import { setOutPictureOf } from '@/components/guide/set-out-pictures';
 import { parseLayoutDocument } from '@/paving/layout-validation';
@@ -34,5 +35,23 @@ describe('the guide’s pictures', () => {
     expect(good).toBeGreaterThanOrEqual(2.8);
     expect(bad).toBeGreaterThan(good);
     expect(stringWords).toMatch(/\d+ units/);
+  });
+
+  it('show earth dug and low ground made up, with a key to all that is on the map', () => {
+    expect(parseLayoutDocument(SLOPING_COURT)).toMatchObject({ ok: true });
+    const { key, map, section, screed, cut } = levelPicturesOf(SLOPING_COURT);
+    expect(key.map(({ text }) => text.split(',')[0])).toEqual([
+      'Earth to dig',
+      'Low ground to make up with base',
+      'Where nothing is dug or made up',
+      'The ground as it is',
+      'A spot and its level',
+      'Measured inside',
+      'A peg and the level of the finish',
+    ]);
+    expect(cut).toMatch(/^\d/);
+    expect(map).toContain('A −94');
+    expect(section).toContain('Geotextile');
+    expect(screed).toContain('below the ears');
   });
 });
