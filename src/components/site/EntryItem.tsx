@@ -1,17 +1,16 @@
 import { useEffect, useState } from 'react';
 import { Moment } from '../ui/Moment';
-import { entryWords } from './entry-words';
 import type { PackEntry } from './pack-floor';
 import { keptPicture } from './phone-store';
 import { dropRefused, phoneStore } from './site-state';
 
 /** One thing written down: what, by whom, when, and whether the server has it. */
-export function EntryItem({ entry }: { entry: PackEntry }) {
+export function EntryItem({ entry, words }: { entry: PackEntry; words: string }) {
   const { content, by, madeAt, standing, reason } = entry;
   return (
     <li className="py-3" data-testid="entry" data-standing={standing ?? 'sent'}>
       {content.kind === 'photo' && <Photo id={entry.id} caption={content.caption} />}
-      <p className="break-words whitespace-pre-line">{entryWords(content)}</p>
+      <p className="break-words whitespace-pre-line">{words}</p>
       <p className="text-sm text-slate">
         {by.name}, <Moment iso={madeAt} />
         {standing === 'waiting' && (

@@ -1,13 +1,17 @@
 import { Camera } from 'lucide-react';
 import { useId, useRef, useState } from 'react';
 import { entriesInOrder } from '@/paving/site/site-record';
+import { entryWords } from './entry-words';
 import { EntryItem } from './EntryItem';
 import type { TabProps } from './PackView';
 import { photoShrunk } from './photo-shrink';
 import { enter } from './site-state';
 
+/** Entries listed before the rest is asked for. */
+const FIRST = 20;
+
 /** Notes and photos for whoever comes after, and all that was written down, newest first. */
-export function NotesTab({ kept, entries }: TabProps) {
+export function NotesTab({ kept, floor, entries, display }: TabProps) {
   const id = useId();
   const [text, setText] = useState('');
   const [said, setSaid] = useState<string | null>(null);
@@ -38,6 +42,13 @@ export function NotesTab({ kept, entries }: TabProps) {
     setBusy(false);
   };
   const all = [...entriesInOrder(entries)].reverse();
+  const item = (entry: (typeof all)[number]) => (
+    <EntryItem
+      key={entry.id}
+      entry={entry}
+      words={entryWords(entry.content, floor.setOut.checks, display)}
+    />
+  );
   return (
     <section aria-label="Notes and photos">
       <h2>Notes and photos</h2>
@@ -100,11 +111,15 @@ export function NotesTab({ kept, entries }: TabProps) {
           Nothing yet. Ticks, readings, notes and photos are listed here, newest first.
         </p>
       )}
-      <ol className="hairlines">
-        {all.map((entry) => (
-          <EntryItem key={entry.id} entry={entry} />
-        ))}
-      </ol>
+      <ol className="hairlines">{all.slice(0, FIRST).map(item)}</ol>
+      {all.length > FIRST && (
+        <details>
+          <summary className="flex min-h-11 items-center font-semibold">
+            {all.length - FIRST} earlier
+          </summary>
+          <ol className="hairlines">{all.slice(FIRST).map(item)}</ol>
+        </details>
+      )}
     </section>
   );
 }

@@ -8,7 +8,7 @@ import { FloorWindow } from '../floor-window/FloorWindow';
 import { groundBox } from '../floor-window/ground-box';
 import type { PackFloor } from './pack-floor';
 
-/** The floor as it would be built on: what lies is hatched, the strings still to pull are live. */
+/** The floor as it would be built on: what lies is hatched, the string to pull next is live. */
 export function RefitPlan({
   found,
   floor,
@@ -25,6 +25,12 @@ export function RefitPlan({
     .filter(({ number }) => laid.includes(number))
     .flatMap(({ runs }) => runs.flatMap((run) => run.laid))
     .map((unit) => unitCorners(motif[lying.k[unit]], lying.x[unit], lying.y[unit]));
+  // The nearest to what lies is the one to pull next.
+  const next = found.courses.reduce<Refit['courses'][number] | null>(
+    (best, course) =>
+      best === null || Math.abs(course.fromLaid) < Math.abs(best.fromLaid) ? course : best,
+    null,
+  )?.number;
   const words = `${laid.length} courses laid, ${found.courses.length} still to lay.`;
   return (
     <FloorWindow
@@ -58,8 +64,9 @@ export function RefitPlan({
             <path
               key={number}
               d={`M${place(from).join(' ')}L${place(to).join(' ')}`}
-              className="fill-none stroke-line"
-              strokeWidth="2"
+              className={number === next ? 'fill-none stroke-line' : 'fill-none stroke-graphite'}
+              strokeWidth={number === next ? 4 : 1}
+              strokeDasharray={number === next ? undefined : '2 5'}
             />
           ))}
         </svg>

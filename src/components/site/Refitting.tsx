@@ -94,7 +94,7 @@ export function Refitting({
             <RefitPlan found={found} floor={floor} laid={laid} />
           </div>
           <p className="mt-1 text-sm text-slate">
-            Hatched: what lies. Pink: the strings of the courses still to lay, as they would go now.
+            Hatched: what lies. Pink: the string to pull next; dashed: those after it.
           </p>
           <ul className="mt-3 space-y-2">
             {found.advice.map((words) => (
@@ -196,20 +196,16 @@ export const rangeWords = (numbers: readonly number[]): string => {
 };
 
 const proposalText = (
-  { keepsAll, toLay, dropped, jointAcross, jointAlong, leastGap, advice }: Refit,
+  { jointAcross, jointAlong, advice }: Refit,
   laid: readonly number[],
   display: TabProps['display'],
 ): string => {
   const said = (mm: number) => formatLength(mm, display, { decimals: 1 });
   return [
     laid.length > 0
-      ? `Courses ${rangeWords(laid)} are laid and stay as they lie.`
+      ? `${laid.length === 1 ? 'Course' : 'Courses'} ${rangeWords(laid)} ${laid.length === 1 ? 'is laid and stays as it lies' : 'are laid and stay as they lie'}.`
       : 'No course is laid yet.',
     `The rest with joints of ${said(jointAcross)} between courses and ${said(jointAlong)} along them.`,
-    keepsAll
-      ? `All ${toLay} units still to lay stay whole.`
-      : `${dropped.length} of ${toLay} units still to lay stay out.`,
-    ...(leastGap === null ? [] : [`Least gap at the edge ${said(leastGap)}.`]),
     ...advice,
   ].join(' ');
 };

@@ -1,8 +1,8 @@
-import { useEffect } from 'react';
+import { useEffect, useState } from 'react';
 import { PackView } from './PackView';
 import { SignedOut } from './SignedOut';
 import { SiteList } from './SiteList';
-import { startSite, useSite } from './site-state';
+import { keepPack, startSite, useSite } from './site-state';
 import { keepProgram } from './site-worker';
 
 /** The last step of the address: the version that is open, or none for the list. */
@@ -17,13 +17,22 @@ export default function SiteApp() {
     return startSite();
   }, []);
   const versionId = versionOf(location.pathname);
+  const kept = packs.find((pack) => pack.versionId === versionId);
+  const listed = person?.summaries.some((summary) => summary.versionId === versionId) ?? false;
+  const [fetched, setFetched] = useState<'no' | 'asked' | 'failed'>('no');
+  // A plan that is opened here is kept here.
+  useEffect(() => {
+    if (!versionId || kept || !listed || fetched !== 'no' || heard !== 'heard') return;
+    setFetched('asked');
+    keepPack(versionId).catch(() => setFetched('failed'));
+  }, [versionId, kept, listed, fetched, heard]);
   if (phase === 'opening') return <Said>Looking at what this phone keeps …</Said>;
   if (phase === 'blocked') return <Blocked />;
   if (!person) {
     if (heard === null) return <Said>Asking what you may build from …</Said>;
     return <SignedOut heard={heard} />;
   }
-  const kept = packs.find((pack) => pack.versionId === versionId);
+  if (versionId && !kept && fetched === 'asked') return <Said>Fetching the plan …</Said>;
   if (versionId && kept) return <PackView kept={kept} person={person} />;
   return <SiteList person={person} packs={packs} asked={versionId} />;
 }

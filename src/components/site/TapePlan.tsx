@@ -42,7 +42,7 @@ export function TapePlan({ document, datums, points, point, onPick }: Props) {
             ? `The plan, with the tapes to ${point.name} drawn over it.`
             : 'The plan, with its points.'
         }
-        over={(place) => (
+        over={(place, size) => (
           <svg aria-hidden="true" className="pointer-events-none absolute inset-0 h-full w-full">
             {point && point.by !== 'datum' && point.by !== 'offsets' && (
               <TapeLines from={own.map(({ at }) => place(at))} to={place(point.at)} />
@@ -59,7 +59,7 @@ export function TapePlan({ document, datums, points, point, onPick }: Props) {
             {own.map(({ name, at }) => (
               <Hook key={name} name={name} at={place(at)} />
             ))}
-            {point && <Named name={point.name} at={place(point.at)} />}
+            {point && <Named name={point.name} at={place(point.at)} width={size.width} />}
           </svg>
         )}
       />
@@ -110,13 +110,18 @@ function Hook({ name, at: [x, y] }: { name: string; at: Point }) {
   );
 }
 
-function Named({ name, at: [x, y] }: { name: string; at: Point }) {
+/** Nearer to the right edge than this, a name stands left of its point, px. */
+const NAME_PX = 90;
+
+function Named({ name, at: [x, y], width }: { name: string; at: Point; width: number }) {
+  const left = x > width - NAME_PX;
   return (
     <g transform={`translate(${x} ${y})`}>
       <circle r="7" className="fill-line" />
       <text
-        x="12"
-        y="-10"
+        x={left ? -12 : 12}
+        y={y < 30 ? 22 : -10}
+        textAnchor={left ? 'end' : 'start'}
         className="fill-line stroke-stone-50 font-sans font-bold"
         fontSize="17"
         strokeWidth="4"

@@ -1,8 +1,24 @@
-import { formatLength, type Display } from '../length';
+import { formatLength, MM_PER_INCH, type Display } from '../length';
 import type { Check, CheckKind } from '../set-out/set-out-types';
 
 /** Readings are compared with limits to this, mm: a limit that prints as 3.2 mm is met by a tape that reads 3.2 mm. */
 export const READING_TOLERANCE_MM = 0.05;
+
+const SIXTEENTH_MM = MM_PER_INCH / 16;
+/** What a reading may differ from whole sixteenths through binary arithmetic, in sixteenths. */
+const WHOLE = 1e-6;
+
+const isInSixteenths = (mm: number): boolean =>
+  Math.abs(mm / SIXTEENTH_MM - Math.round(mm / SIXTEENTH_MM)) < WHOLE;
+
+/**
+ * Whether a reading meets a limit that it is just past. Off a tape in inches, limits are read to the nearest sixteenth, as they
+ * are printed: a reading of just that meets it.
+ */
+const meets = (measured: number, limit: number): boolean =>
+  Math.abs(measured - limit) <= READING_TOLERANCE_MM ||
+  (isInSixteenths(measured) &&
+    Math.round(measured / SIXTEENTH_MM) === Math.round(limit / SIXTEENTH_MM));
 
 /** What a reading says about its check. */
 export interface Verdict {
@@ -20,7 +36,10 @@ export const readingVerdict = (
   const under = least === null ? 0 : least - measured;
   const over = greatest === null ? 0 : measured - greatest;
   const past = Math.max(0, under, over);
-  const within = past <= READING_TOLERANCE_MM;
+  const within =
+    past === 0 ||
+    (under > 0 && least !== null && meets(measured, least)) ||
+    (over > 0 && greatest !== null && meets(measured, greatest));
   return { within, off: measured - expected, past: within ? 0 : past };
 };
 
