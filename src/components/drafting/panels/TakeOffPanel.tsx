@@ -95,7 +95,11 @@ function Prices({ list, takeOff }: { list: ReturnType<typeof usePriceList>; take
     return (
       <p role="alert" className="text-sm text-brick">
         Your prices could not be read, so quantities are shown without them. {list.error.message}{' '}
-        <button type="button" className="link" onClick={() => void list.refetch()}>
+        <button
+          type="button"
+          className="link pointer-coarse:inline-flex pointer-coarse:min-h-11 pointer-coarse:items-center"
+          onClick={() => void list.refetch()}
+        >
           Try again
         </button>
       </p>

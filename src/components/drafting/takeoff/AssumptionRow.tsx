@@ -87,7 +87,7 @@ export function AssumptionRow({ assumption }: { assumption: Assumption }) {
         {own && field && (
           <button
             type="button"
-            className="link pointer-coarse:min-h-11"
+            className="link pointer-coarse:inline-flex pointer-coarse:min-h-11 pointer-coarse:items-center"
             onClick={() => change(undefined)}
           >
             Put the usual back
