@@ -46,7 +46,6 @@ describe('the guide’s pictures', () => {
       'Where nothing is dug or made up',
       'The ground as it is',
       'A spot and its level',
-      'Measured inside',
       'A peg and the level of the finish',
     ]);
     expect(cut).toMatch(/^\d/);
