@@ -1,3 +1,4 @@
+import { readFileSync } from 'node:fs';
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
 import type { Point } from '@/geometry/point';
@@ -114,6 +115,20 @@ test('where units touch edges and corners exactly, and keep-outs share sides', (
     }),
     runs(60),
   );
+});
+
+test.each([
+  'round-terrace-with-round-bed',
+  'concave-arc-in-one-side',
+  'comb-of-narrow-bays',
+  'keep-out-along-the-perimeter',
+  'two-keep-outs-touching-along-an-edge',
+  'custom-two-sizes-skewed-lattice',
+  'far-from-the-origin',
+])('%s, at several clearances', (name) => {
+  const file = new URL(`../golden/${name}/layout.json`, import.meta.url);
+  const document = parsed(JSON.parse(readFileSync(file, 'utf8')));
+  for (const clearance of [0, 3, 25, 80]) piecesAgree({ ...document, clearance }, true);
 });
 
 test('whole units, pieces and fill make up the ground; no piece leaves its unit or comes nearer than the clearance', () => {

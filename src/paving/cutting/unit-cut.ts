@@ -92,30 +92,88 @@ function convexCut(
   return simple.length < 3 ? [] : [[simple]];
 }
 
+/** A band goes on round corners until it has turned by this: so it never meets itself. */
+const GREATEST_BAND_TURN_RAD = (5 / 6) * Math.PI;
+
+const moved = ([x, y]: Point, [nx, ny]: Point, by: number): Point => [x + by * nx, y + by * ny];
+
+/** How far the boundary turns from one chord to the next, radians: negative where a corner stands out into the ground. */
+const turnBetween = (chord: Chord, next: Chord): number => {
+  const [one, other] = [along(chord), along(next)];
+  return Math.atan2(cross(one, other), one[0] * other[0] + one[1] * other[1]);
+};
+
 /**
- * What lies nearer to the boundary than the clearance: a strip along the ground's side of each chord
- * and, at corners that stand out into the ground, a part of a disc. Its arc is drawn outside the true
- * one, by no more than the sagitta of all arcs, so that no piece comes nearer than the clearance.
+ * The line that keeps the clearance from chords which turn into the ground at every corner: straight along each
+ * chord, an arc round each corner. The arc is drawn outside the true one, by no more than the sagitta of all arcs, so
+ * that no piece comes nearer than the clearance.
  */
-function clearanceStrips(chords: readonly (Chord | null)[], clearance: number): Region[] {
-  if (clearance === 0) return [];
-  const moved = ([x, y]: Point, [nx, ny]: Point): Point => [x + clearance * nx, y + clearance * ny];
-  return chords.flatMap((chord, n): Region[] => {
-    if (!chord) return [];
-    const { a, b } = chord;
+function clearanceLine(chords: readonly Chord[], clearance: number): Point[] {
+  return chords.flatMap((chord, n): Point[] => {
     const normal = leftNormal(chord);
-    const strip: Region = [[[a, b, moved(b, normal), moved(a, normal)]]];
-    const next = chords[(n + 1) % chords.length];
-    if (!next) return [strip];
-    const turn = Math.atan2(
-      cross(along(chord), along(next)),
-      along(chord)[0] * along(next)[0] + along(chord)[1] * along(next)[1],
+    const from = moved(chord.a, normal, clearance);
+    const to = moved(chord.b, normal, clearance);
+    const next = chords[n + 1];
+    if (!next) return [from, to];
+    const round = arcPoints(
+      to,
+      moved(next.a, leftNormal(next), clearance),
+      Math.tan(turnBetween(chord, next) / 4),
+      'tangent',
     );
-    if (turn >= 0) return [strip];
-    const from = moved(b, normal);
-    const to = moved(b, leftNormal(next));
-    return [strip, [[[b, ...arcPoints(from, to, Math.tan(turn / 4), 'tangent')]]]];
+    return [from, ...round.slice(0, -1)];
   });
+}
+
+/**
+ * What lies nearer to the boundary than the clearance: bands along the ground's side of the chords, one for each run
+ * of chords that turns into the ground. At corners that turn the other way two bands overlap.
+ */
+function clearanceBands(chords: readonly (Chord | null)[], clearance: number): Region[] {
+  if (clearance === 0) return [];
+  const turns = chords.map((chord, n) => {
+    const next = chords[(n + 1) % chords.length];
+    return chord && next ? turnBetween(chord, next) : 0;
+  });
+  // Begin where a run does, so that none is broken by where the ring begins.
+  const first = Math.max(
+    0,
+    turns.findIndex((turn) => turn >= 0),
+  );
+  const runs: Chord[][] = [];
+  let turned = 0;
+  for (let step = 1; step <= chords.length; step++) {
+    const n = (first + step) % chords.length;
+    const chord = chords[n];
+    const turn = turns[(n + chords.length - 1) % chords.length];
+    const goesOn = step > 1 && chord && turn < 0 && turned - turn < GREATEST_BAND_TURN_RAD;
+    if (goesOn) {
+      runs[runs.length - 1].push(chord);
+      turned -= turn;
+      continue;
+    }
+    // Where a run was cut short the corner's arc goes with a chord of both.
+    if (chord && turn < 0 && step > 1 && runs.length > 0) {
+      runs.push([runs[runs.length - 1][runs[runs.length - 1].length - 1], chord]);
+      turned = -turn;
+    } else if (chord) {
+      runs.push([chord]);
+      turned = 0;
+    }
+  }
+  return runs.map((run): Region => {
+    const back = [run[run.length - 1].b, ...run.map(({ a }) => a).reverse()];
+    return [[[...clearanceLine(run, clearance), ...back]]];
+  });
+}
+
+/** A convex keep-out and all that is nearer to it than the clearance, as one ring. */
+function grownKeepOut(ring: readonly Point[], clearance: number): Region {
+  if (clearance === 0) return [[ring]];
+  // The ground is right of its edges; taken the other way round it turns into the ground at every corner.
+  const corners = [...ring].reverse();
+  const chords = corners.map((a, n): Chord => ({ a, b: corners[(n + 1) % corners.length] }));
+  return [[clearanceLine([...chords, chords[0]], clearance).slice(0, -2)]];
 }
 
 /** Signed area of the ring inside the unit, mm²: right also where the ring runs there and back. */
@@ -139,34 +197,48 @@ export function unitCut(
   window: GroundWindow,
   clearance: number,
 ): UnitCut {
-  const { box, perimeter, keepOuts } = window;
+  const { box, perimeter } = window;
   if (perimeter.length < 3) return [];
+  const keepOuts = window.keepOuts.map(distinct).filter((ring) => ring.length >= 3);
   const outer = windowChords(perimeter, box);
-  if (keepOuts.length === 0 && turnsLeftOnly(perimeter)) {
-    return convexCut(corners, outer, clearance);
-  }
-  // A keep-out's ground is outside it: taken the other way round, its ground is left of it too.
-  const taken = keepOuts.map((ring): Region => [[ring]]);
-  const strips = [perimeter, ...keepOuts.map((ring) => [...ring].reverse())].flatMap((ring) =>
-    clearanceStrips(windowChords(ring, box), clearance),
-  );
+  const convex = turnsLeftOnly(perimeter);
+  const kept = convex ? convexCut(corners, outer, clearance) : null;
+  if (kept && (keepOuts.length === 0 || kept.length === 0)) return kept;
+  const taken = keepOuts.flatMap((ring): Region[] => {
+    if (turnsLeftOnly(ring)) return [grownKeepOut(ring, clearance)];
+    return [[[ring]], ...clearanceBands(windowChords([...ring].reverse(), box), clearance)];
+  });
+  if (!convex) taken.push(...clearanceBands(outer, clearance));
   const inside = areaInside(perimeter, corners);
   const open = keepOuts.reduce((sum, ring) => sum - areaInside(ring, corners), inside);
   for (const nudge of NUDGES_MM) {
-    const shifted = corners.map(([x, y]): Point => [x + nudge, y + nudge]);
-    const within = regionClip('intersection', [[shifted]], [[[perimeter]]], inside);
-    if (!within.ok) continue;
-    if (taken.length + strips.length === 0) return partsOf(within.region);
+    const shift = (ring: readonly Point[]) => ring.map(([x, y]): Point => [x + nudge, y + nudge]);
+    let within: Region;
+    if (kept) within = kept.map((part) => part.map(shift));
+    else {
+      const met = regionClip('intersection', [[shift(corners)]], [[[perimeter]]], inside);
+      if (!met.ok) continue;
+      within = met.region;
+    }
+    if (taken.length === 0 || within.length === 0) return partsOf(within);
     // Keep-outs along an arc part from it by a sagitta, so that only floors without clearance add up.
     const rest = regionClip(
       'difference',
-      within.region,
-      [...taken, ...strips],
+      within,
+      taken,
       clearance === 0 && keepOuts.length === 1 ? open : undefined,
     );
     if (rest.ok) return partsOf(rest.region);
   }
   return null;
+}
+
+/** A ring without corners that lie on one another. */
+function distinct(ring: readonly Point[]): readonly Point[] {
+  return ring.filter(([x, y], n) => {
+    const [px, py] = ring[(n + ring.length - 1) % ring.length];
+    return Math.hypot(x - px, y - py) > ON_WINDOW_MM;
+  });
 }
 
 const partsOf = (region: Region): readonly Part[] =>

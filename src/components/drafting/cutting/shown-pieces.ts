@@ -16,8 +16,8 @@ export function piecesOf(laying: Laying | null): CutPieces | null {
   return pieces;
 }
 
-/** Pieces that take no longer than this, ms, keep up with the hand; others come after it has rested. */
-const FRAME_MS = 8;
+/** Pieces that take no longer than this, ms, as long as laying and figures do, keep up with the hand; others come after it has rested. */
+const FRAME_MS = 24;
 const REST_MS = 150;
 /** What a unit at the edge is taken to cost before any was timed, ms. */
 const FIRST_GUESS_MS = 0.05;
