@@ -1,3 +1,4 @@
+import { useEffect, useRef } from 'react';
 import type { CatalogueItem, ItemFields } from '@/api-types/catalogue';
 import type { Supplier } from '@/api-types/suppliers';
 import { formatMoney } from '@/takeoff/money';
@@ -20,6 +21,8 @@ export function BothSides({
   onKeep: () => void;
   onTake: () => void;
 }) {
+  const box = useRef<HTMLDivElement>(null);
+  useEffect(() => box.current?.scrollIntoView({ block: 'nearest' }), []);
   const shown = (name: keyof ItemFields, value: unknown): string => {
     if (value === null || value === '') return 'nothing';
     if (name === 'supplierId') return suppliers.find(({ id }) => id === value)?.name ?? 'another';
@@ -38,7 +41,7 @@ export function BothSides({
     ]);
   }
   return (
-    <div role="alert" className="mt-3 bg-amber-wash p-3">
+    <div ref={box} role="alert" className="mt-3 bg-amber-wash p-3">
       <p>
         <strong>Somebody changed this item after you opened it.</strong> Yours was not stored over
         theirs.

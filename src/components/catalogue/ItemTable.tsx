@@ -46,7 +46,7 @@ const columns = (props: Props) =>
           <button
             type="button"
             data-item={item.id}
-            className="flex min-h-8 items-center gap-2 text-left font-semibold hover:text-line pointer-coarse:min-h-11"
+            className="flex items-center gap-2 text-left font-semibold hover:text-line pointer-coarse:min-h-11"
             aria-label={`Change ${item.name}`}
             onClick={() => props.onEdit(item)}
           >
@@ -109,7 +109,7 @@ function Price({ item, props }: { item: CatalogueItem; props: Props }) {
   return (
     <button
       type="button"
-      className="min-h-8 text-right hover:text-line pointer-coarse:min-h-11"
+      className="text-right hover:text-line pointer-coarse:min-h-11"
       aria-label={`Prices of ${item.name}`}
       onClick={() => props.onHistory(item)}
     >
@@ -191,7 +191,7 @@ export function ItemTable(props: Props) {
                 {row.getAllCells().map((cell) => (
                   <td
                     key={cell.id}
-                    className={`py-2 pr-4 align-baseline last:pr-0 ${right(cell.column.id)} ${WIDE_ONLY[cell.column.id] ?? ''}`}
+                    className={`py-2 pr-4 align-top last:pr-0 ${right(cell.column.id)} ${WIDE_ONLY[cell.column.id] ?? ''}`}
                   >
                     <table.FlexRender cell={cell} />
                   </td>
