@@ -4,6 +4,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { afterAll, expect, test } from 'vitest';
+import type { Creep, Refit } from '@/paving/creep/creep-types';
 import { layFloor } from '@/paving/laying';
 import { floorReport } from '@/paving/report';
 import { setOut } from '@/paving/set-out/set-out';
@@ -76,4 +77,36 @@ test('set-out prints datums, points, courses and checks as JSON', () => {
   const { status, stdout, stderr } = layout(['set-out', '-'], good);
   expect({ status, stderr }).toEqual({ status: 0, stderr: '' });
   expect(JSON.parse(stdout)).toEqual(setOut(layFloor(parsed(documentOf({})))));
+});
+
+test('creep says what ten units laid tight come to on this floor', () => {
+  const { status, stdout, stderr } = layout(
+    ['creep', '-', '--measure', 'a:length:10:4506', '--joints', '2:4'],
+    good,
+  );
+  expect({ status, stderr }).toEqual({ status: 0, stderr: '' });
+  const found = JSON.parse(stdout) as Creep;
+  expect(found.units[0].lengthGrowth).toBeCloseTo(0.6, 9);
+  expect(found.joints).toMatchObject({ least: 2, greatest: 4 });
+});
+
+test('refit holds the courses laid and gives the joint and the floor for the rest', () => {
+  const { status, stdout, stderr } = layout(
+    ['refit', '-', '--measure', 'a:length:10:4506', '--laid', '1-2', '--offset', '-3'],
+    good,
+  );
+  expect({ status, stderr }).toEqual({ status: 0, stderr: '' });
+  const found = JSON.parse(stdout) as Refit;
+  expect(found.courses[0].number).toBe(3);
+  expect(layFloor(parsed(found.document)).laid.count).toBeGreaterThan(0);
+});
+
+test.each([
+  ['creep', ['--measure', 'a:height:10:4500'], 'UNIT:SIDE:COUNT:TOTAL'],
+  ['refit', ['--laid', '99'], 'no course 99'],
+  ['set-out', ['--loud'], 'takes no option'],
+])('%s %j exits with 2 and says what would do', (task, options, words) => {
+  const { status, stdout, stderr } = layout([task, '-', ...options], good);
+  expect({ status, stdout }).toEqual({ status: 2, stdout: '' });
+  expect(stderr).toContain(words);
 });
