@@ -38,6 +38,19 @@ test.each([
   expect(edges.length).toBeGreaterThan(0);
 });
 
+test('a version cut at its edge keeps its pieces, and lists carry only what they come to', async () => {
+  const document = { ...court(), cutting: 'edge' as const };
+  const { visitor, url } = await start(document);
+  const saved = (await visitor.post(url, { baseRevision: 1, label: 'Cut' })).body;
+  const { edges: _, cut, ...figures } = ownReport(document);
+  const { pieces, ...sums } = cut;
+  expect(saved.report.cut.pieces).toEqual(pieces);
+  expect(pieces.length).toBe(sums.count);
+  expect(saved.figures).toEqual({ ...figures, cut: sums });
+  const list = (await visitor.get(url)).body.versions;
+  expect(list[0].figures).toEqual({ ...figures, cut: sums });
+});
+
 test('a version holds the document, the figures, who, when and the event of its saving', async () => {
   const { visitor, actor, url } = await start();
   const saved = await visitor.post(url, { baseRevision: 1, label: ' First ', note: 'As measured' });
