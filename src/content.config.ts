@@ -9,7 +9,7 @@ const guide = defineCollection({
     summary: z.string(),
     order: z.number(),
     /** Which piece of work it belongs to. */
-    part: z.enum(['draft', 'agree']).default('draft'),
+    part: z.enum(['draft', 'agree', 'site']).default('draft'),
     /** Which of the program's own drawings goes with it; see components/guide. */
     picture: z.enum([
       'ground',
@@ -22,6 +22,8 @@ const guide = defineCollection({
       'overlay',
       'cutting',
       'order',
+      'set-out',
+      'site',
     ]),
   }),
 });

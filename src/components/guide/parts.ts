@@ -8,4 +8,8 @@ export const GUIDE_PARTS = {
     title: 'Agreeing on a floor',
     summary: 'From the first look that the client takes to the version that the crew builds from.',
   },
+  site: {
+    title: 'Building a floor',
+    summary: 'From the issued plan to the last course, with what the crew measures on the way.',
+  },
 } as const;
