@@ -93,7 +93,7 @@ function floorSvg(laying: Laying, { datums, courses }: SetOut, point: ControlPoi
     `<path d="${tapes}" stroke="var(--line)" stroke-width="26" fill="none"/><path d="${arcs}" stroke="var(--line)" stroke-width="16" stroke-dasharray="60 40" fill="none"/>` +
     `<path d="${pegs}" fill="var(--graphite)" stroke="var(--stone-50)" stroke-width="18"/>` +
     `<circle cx="${px}" cy="${py}" r="80" fill="var(--stone-50)" stroke="var(--line)" stroke-width="24"/></g>${letters}` +
-    `<text x="${px + (px > (min[0] + max[0]) / 2 ? 250 : -250)}" y="${-py + 70}" font-size="230" font-weight="700" text-anchor="middle" fill="var(--line)">${point.name}</text></svg>`
+    `<text x="${px + (px > (min[0] + max[0]) / 2 ? 250 : -250)}" y="${-py - 190}" font-size="230" font-weight="700" text-anchor="middle" fill="var(--line)">${point.name}</text></svg>`
   );
 }
 
