@@ -34,6 +34,14 @@ export type ParsedSpotList =
 
 type Column = 'name' | 'x' | 'y' | 'level';
 
+/** As the table calls them. */
+const WORDS: Readonly<Record<Column, string>> = {
+  name: 'name',
+  x: 'across',
+  y: 'up',
+  level: 'level',
+};
+
 const HEADINGS: Readonly<Record<Column, readonly string[]>> = {
   name: ['name', 'spot', 'point', 'id', 'no', 'nr', '#', 'label'],
   x: ['x', 'across', 'east', 'easting', 'e'],
@@ -122,7 +130,7 @@ export function parseSpotList(text: string, options: SpotListOptions): ParsedSpo
     const given = cells.filter((text_) => text_ !== '').length;
     if (!header && cells.length > columns.length) {
       wrong(
-        `has ${cells.length} cells; ${columns.length} are looked for (${columns.join(', ')}). A comma within a number parts it: write 3.2, or part cells with semicolons.`,
+        `has ${cells.length} cells; ${columns.length} are looked for (${columns.map((column) => WORDS[column]).join(', ')}). A comma within a number parts it: write 3.2, or part cells with semicolons.`,
       );
       continue;
     }
@@ -141,8 +149,8 @@ export function parseSpotList(text: string, options: SpotListOptions): ParsedSpo
         unread
           .map((column) =>
             cell(column) === ''
-              ? `${column} is missing`
-              : `${column} “${cell(column)}” is not a length`,
+              ? `${WORDS[column]} is missing`
+              : `${WORDS[column]} “${cell(column)}” is not a length`,
           )
           .join('; ') + '. Write 3200, 3.2 m or 10\' 6".',
       );

@@ -69,20 +69,21 @@ function regionHolds(region: SignedRings, point: Point): boolean {
   return inside;
 }
 
-/** Greatest depths of cut and fill in the dug region, mm. */
-function deepest({ cells, dug }: EarthModel): { readonly cut: number; readonly fill: number } {
-  let [cut, fill] = [0, 0];
-  for (const { piece, depth } of cells)
-    for (const ring of convexPart(dug, piece))
-      for (const point of ring) {
-        const here = planeHeight(depth, point);
-        // A part may run back along the cell's side outside the region: only what is in it counts.
-        if ((here > cut || -here > fill) && regionHolds(dug, point)) {
-          cut = Math.max(cut, here);
-          fill = Math.max(fill, -here);
-        }
-      }
-  return { cut, fill };
+/** The greatest of `sign` times the depth in the dug region, mm; 0 where there is none. */
+function deepest({ cells, dug }: EarthModel, sign: 1 | -1): number {
+  let most = 0;
+  for (const { piece, depth } of cells) {
+    const deeper = (point: Point) => sign * planeHeight(depth, point);
+    if (piece.outline.every((point) => deeper(point) <= most)) continue;
+    // A part may run back along the cell's side outside the region: only what is in it counts.
+    const found = convexPart(dug, piece)
+      .flat()
+      .filter((point) => deeper(point) > most)
+      .sort((p, q) => deeper(q) - deeper(p))
+      .find((point) => regionHolds(dug, point));
+    if (found) most = deeper(found);
+  }
+  return most;
 }
 
 /** What the volumes are worked out from: a floor as laid, of a document that has passed. */
@@ -126,7 +127,6 @@ export function earthVolumes(
       `cells of ${covered} mm² do not cover the ${dugArea} mm² dug about ${model.dug[0][0].join(', ')}`,
     );
   }
-  const { cut: deepestCut, fill: deepestFill } = deepest(model);
   const area = ground.area / MM2_PER_M2;
   const cut = sum.cut / MM3_PER_M3;
   const fill = sum.fill / MM3_PER_M3;
@@ -148,8 +148,8 @@ export function earthVolumes(
     bedding: beddingLayer + underThin,
     beddingLayer,
     beddingUnderThin: underThin,
-    deepestCut,
-    deepestFill,
+    deepestCut: deepest(model, 1),
+    deepestFill: deepest(model, -1),
     from: model.existing.shape === 'none' ? 'assumed' : 'spots',
     beyondSpots,
     warnings: levelWarnings(document, model, beyondSpots / (dugArea / MM2_PER_M2)),

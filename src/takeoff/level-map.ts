@@ -1,4 +1,4 @@
-import { convexPieceIn, pointsBox, type SignedRings } from '@/geometry/convex-part';
+import { convexPieceIn, pointsBox } from '@/geometry/convex-part';
 import { planeTurned, surfaceHeight } from '@/geometry/plane-pieces';
 import type { Point } from '@/geometry/point';
 import {
@@ -48,21 +48,6 @@ const HATCH_SHARE = 1 / 55;
 /** What is filled is hatched more closely, the other way. */
 const FILL_CLOSER = 0.5;
 
-/** Parallel lines across a box, at 45° up (`1`) or down (`-1`), `apart` mm from one to the next. */
-function hatchLines(min: Point, max: Point, apart: number, way: 1 | -1): Segment[] {
-  const step = apart * Math.SQRT2;
-  const height = max[1] - min[1];
-  const lines: Segment[] = [];
-  for (let x = min[0] - height + step / 2; x < max[0]; x += step) {
-    lines.push(
-      way === 1
-        ? { from: [x, min[1]], to: [x + height, max[1]] }
-        : { from: [x, max[1]], to: [x + height, min[1]] },
-    );
-  }
-  return lines;
-}
-
 /** Stretches that follow one another along a line, as one: pieces meet within a line of hatching. */
 function joined(segments: readonly Segment[]): Segment[] {
   const sorted = [...segments].sort((p, q) => p.from[0] - q.from[0]);
@@ -76,24 +61,31 @@ function joined(segments: readonly Segment[]): Segment[] {
   return all;
 }
 
-/** The hatching of what is dug (`sign` 1) or filled (−1). */
-function hatching(
-  { cells }: EarthModel,
-  dug: SignedRings,
-  lines: readonly Segment[],
-  sign: 1 | -1,
-): Segment[] {
-  const parts = cells.flatMap(({ piece, depth }) => {
+/**
+ * The hatching of what is dug (`sign` 1), in lines at 45° up, or filled (−1), at 45° down, `apart` mm from one
+ * to the next. Each piece is hatched by the lines that cross it; what follows on along a line is one stretch.
+ */
+function hatching({ cells, dug }: EarthModel, apart: number, sign: 1 | -1): Segment[] {
+  const step = apart * Math.SQRT2;
+  const lines = new Map<number, Segment[]>();
+  for (const { piece, depth } of cells) {
     const part = convexPieceIn(piece, sign === 1 ? depth : planeTurned(depth));
-    return part ? [part] : [];
-  });
-  return lines.flatMap((line) =>
-    joined(
-      parts.flatMap((part) => {
-        const within = segmentInPiece(line, part);
-        return within ? [within] : [];
-      }),
-    ).flatMap((stretch) => segmentParts(dug, stretch)),
+    if (!part) continue;
+    const { min, max } = pointsBox(part.outline);
+    // A line is known by where it would cross y = 0.
+    const [low, high] = span(part.outline.map(([x, y]) => x - sign * y));
+    for (let n = Math.ceil(low / step); n * step <= high; n++) {
+      const foot = n * step;
+      const at = (x: number): Point => [x, sign * (x - foot)];
+      const within = segmentInPiece({ from: at(min[0]), to: at(max[0]) }, part);
+      if (!within) continue;
+      const line = lines.get(n);
+      if (line) line.push(within);
+      else lines.set(n, [within]);
+    }
+  }
+  return [...lines.values()].flatMap((line) =>
+    joined(line).flatMap((stretch) => segmentParts(dug, stretch)),
   );
 }
 
@@ -143,8 +135,8 @@ export function levelMap(model: EarthModel, display: Display): LevelMap {
     contours,
     interval,
     meeting,
-    cut: hatching(model, dug, hatchLines(min, max, apart, 1), 1),
-    fill: hatching(model, dug, hatchLines(min, max, apart * FILL_CLOSER, -1), -1),
+    cut: hatching(model, apart, 1),
+    fill: hatching(model, apart * FILL_CLOSER, -1),
     rim: rimSegments(model).flatMap((segment) => segmentParts(dug, segment)),
   };
 }

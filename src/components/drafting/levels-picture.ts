@@ -99,7 +99,8 @@ function waysDown(fall: Fall): Point[] {
   }
 }
 
-function paintFall(ink: Ink, fall: Fall) {
+/** Arrows down the fall and its steepness; the places that they take. */
+function paintFall(ink: Ink, fall: Fall): Box[] {
   const { colours, document } = ink;
   const middle = screen(ink, groundMiddle(document));
   const at =
@@ -135,7 +136,9 @@ function paintFall(ink: Ink, fall: Fall) {
       at[1] + x * 17 - (meets ? y * 44 : 0),
     ];
     boxedText(ink, `${Number(fall.percent.toFixed(2))}\u202f%`, aside, 0, colours.graphite, 600);
+    return [{ at: aside, half: [20, 9] }];
   }
+  return [];
 }
 
 /** Spots, pegs and figures over everything else, and what is being pointed at. */
@@ -173,7 +176,7 @@ export function paintLevelMarks(ink: Ink, state: TableState, floor: Floor) {
     const style = { colour: colours.line, weight: 600, always: true };
     figure(spotFigure(state.spot), around(screen(ink, spots[state.spot].at)), style);
   }
-  paintFall(ink, fall);
+  taken.push(...paintFall(ink, fall));
   for (const { at, kind, name, finish } of earth?.pegs ?? []) {
     const text =
       kind === 'corner' ? levelFigure(finish, display) : `${name} ${levelFigure(finish, display)}`;
