@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { useMemo, useState } from 'react';
+import { memo, useMemo, useState } from 'react';
 import { formatCount } from '@/paving/count';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { cuttingCautions } from '@/takeoff/cutting-cautions';
@@ -24,8 +24,11 @@ const SAID: Readonly<Record<LayoutDocument['cutting'], string>> = {
   edge: 'Units are cut at the edge.',
 };
 
-/** The same start laid of whole units alone, or with its edge cut: what each comes to, and the choice. */
-export function CuttingChoice() {
+/**
+ * The same start laid of whole units alone, or with its edge cut: what each comes to, and the choice. It is of the
+ * floor as settled, so nothing of it is drawn anew while a hand is on the floor.
+ */
+export const CuttingChoice = memo(function CuttingChoice() {
   const table = useTableStore();
   const { document, laying } = useSettledFloor();
   const [terms, setTerms] = useState(keptSawTerms);
@@ -115,7 +118,7 @@ export function CuttingChoice() {
       )}
     </section>
   );
-}
+});
 
 function nestingWords(pieces: number, units: number, least: number): string {
   const come = `${formatCount(pieces)} ${pieces === 1 ? 'piece comes' : 'pieces come'} out of ${formatCount(units)} whole ${units === 1 ? 'unit' : 'units'}.`;

@@ -1,3 +1,4 @@
+import { useMemo } from 'react';
 import type { FitChoice } from '@/paving/fit/fit';
 import { formatCount } from '@/paving/count';
 import type { LayoutDocument } from '@/paving/layout-document';
@@ -16,9 +17,23 @@ const SHOWN = 6;
 
 /** The trade-off between most units and most play, as a short list with small drawings. */
 export function Choices({ choices, document, chosen, onChoice }: Props) {
+  const { ground, units, bond, tones, aggregate, clearance, placement } = document;
+  const shown = useMemo(
+    () =>
+      choices.slice(0, SHOWN).map((choice) => ({
+        choice,
+        picture: floorThumbnailSvg(
+          { ...document, placement: choice.placement, lifted: [], cutting: 'none' },
+          56,
+          44,
+        ),
+      })),
+    // Where the pattern stands is the choice's own: dragging the floor draws none of them anew.
+    [choices, ground, units, bond, tones, aggregate, clearance, placement.turn],
+  );
   return (
     <ul className="hairlines border-y border-stone-300">
-      {choices.slice(0, SHOWN).map((choice) => (
+      {shown.map(({ choice, picture }) => (
         <li key={choice.wholeUnits}>
           <button
             type="button"
@@ -31,13 +46,7 @@ export function Choices({ choices, document, chosen, onChoice }: Props) {
             <span
               className="block w-14 shrink-0"
               aria-hidden="true"
-              dangerouslySetInnerHTML={{
-                __html: floorThumbnailSvg(
-                  { ...document, placement: choice.placement, lifted: [] },
-                  56,
-                  44,
-                ),
-              }}
+              dangerouslySetInnerHTML={{ __html: picture }}
             />
             <span className="flex-1">
               <b>{formatCount(choice.wholeUnits)}</b> whole
