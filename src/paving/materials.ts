@@ -92,7 +92,11 @@ export const materialsSchema = z.object({
       /** By how much strips overlap, mm. */
       lap: depth.optional(),
       /** Width of a roll, mm. */
-      rollWidth: z.number().min(200, 'must be at least 200 mm').max(20_000).optional(),
+      rollWidth: z
+        .number()
+        .min(200, 'must be at least 200 mm')
+        .max(20_000, 'is over 20 m; widths are in millimetres')
+        .optional(),
       catalogueId: z.string().max(80).optional(),
     })
     .refine(
@@ -120,7 +124,7 @@ export const orderSchema = z.object({
       'rule',
       [
         z.object({ rule: z.literal('percent'), value: percent }),
-        z.object({ rule: z.literal('count'), value: z.number().int('must be a whole number').min(0).max(1_000_000) }), // prettier-ignore
+        z.object({ rule: z.literal('count'), value: z.number().int('must be a whole number').min(0, 'must be none or more').max(1_000_000, 'must be at most a million') }), // prettier-ignore
       ],
       { error: 'must be by percent or by count' },
     )

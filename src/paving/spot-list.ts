@@ -29,7 +29,12 @@ export interface SpotListProblem {
 
 /** All the spots of a list, or what is wrong with it, line by line: nothing is taken by halves. */
 export type ParsedSpotList =
-  | { readonly ok: true; readonly spots: readonly Spot[] }
+  | {
+      readonly ok: true;
+      readonly spots: readonly Spot[];
+      /** The line of the text that each spot stands on. */
+      readonly lines: readonly number[];
+    }
   | { readonly ok: false; readonly problems: readonly SpotListProblem[] };
 
 type Column = 'name' | 'x' | 'y' | 'level';
@@ -128,9 +133,11 @@ export function parseSpotList(text: string, options: SpotListOptions): ParsedSpo
     const cell = (column: Column) => cells[columns.indexOf(column)] ?? '';
     const wrong = (message: string) => problems.push({ line, message });
     const given = cells.filter((text_) => text_ !== '').length;
-    if (!header && cells.length > columns.length) {
+    if (cells.slice(columns.length).some((text_) => text_ !== '')) {
       wrong(
-        `has ${cells.length} cells; ${columns.length} are looked for (${columns.map((column) => WORDS[column]).join(', ')}). A comma within a number parts it: write 3.2, or part cells with semicolons.`,
+        header
+          ? `has ${cells.length} cells under ${columns.length} headings. A comma within a number parts it: write 3.2, or part cells with semicolons.`
+          : `has ${cells.length} cells; ${columns.length} are looked for (${columns.map((column) => WORDS[column]).join(', ')}). A comma within a number parts it: write 3.2, or part cells with semicolons.`,
       );
       continue;
     }
@@ -191,5 +198,5 @@ export function parseSpotList(text: string, options: SpotListOptions): ParsedSpo
       problems: [{ line: lines[0].line, message: 'There are headings, but no spot below them.' }],
     };
   }
-  return { ok: true, spots };
+  return { ok: true, spots, lines: from };
 }

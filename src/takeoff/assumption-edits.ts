@@ -6,6 +6,7 @@ import {
   type OrderWay,
 } from '@/paving/materials';
 import type { OrderLine } from './take-off-line';
+import { usBoundWords, type PassedBound } from './typed-bounds';
 
 /** Changes that a take-off makes to its document: what was typed is kept, what is put back is left out. */
 
@@ -108,7 +109,14 @@ export function orderItemSet(
   );
 }
 
-/** Why a value would not do, or null: the schema's own words. */
+type Issue = { readonly code?: string; readonly minimum?: unknown; readonly maximum?: unknown };
+
+function passedBound({ code, minimum, maximum }: Issue): PassedBound | null {
+  if (code === 'too_small') return { side: 'least', value: Number(minimum) };
+  return code === 'too_big' ? { side: 'most', value: Number(maximum) } : null;
+}
+
+/** Why a value would not do, or null: the schema's own words, its bounds in the measures of the document. */
 export function assumptionRefused(
   document: LayoutDocument,
   field: readonly string[],
@@ -120,6 +128,10 @@ export function assumptionRefused(
       ? orderSchema.safeParse(next.order ?? {})
       : materialsSchema.safeParse(next.materials ?? {});
   if (read.success) return null;
-  const [{ message }] = read.error.issues;
+  const [issue] = read.error.issues;
+  const { message } = issue;
+  const bound = document.display === 'imperial' ? passedBound(issue) : null;
+  const usWords = bound && usBoundWords(field, bound);
+  if (usWords) return usWords;
   return `${message[0].toUpperCase()}${message.slice(1)}.`;
 }

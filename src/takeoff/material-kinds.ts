@@ -3,7 +3,7 @@ import { M3_PER_CUBIC_YARD, KG_PER_POUND, POUNDS_PER_CUBIC_FOOT } from './measur
 
 /**
  * What each kind of stone, sand and ground is reckoned with until somebody types better: every figure
- * with where it comes from. Figures that nobody published, or that were not seen in print, are `usual
+ * with where it comes from. Figures that nobody published, or that were not seen in print, are `common
  * practice`: a supplier's own sheet is better than any of them.
  */
 

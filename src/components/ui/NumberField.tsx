@@ -14,7 +14,11 @@ export function NumberField({ value, suffix = '', onNumber, ...field }: Props) {
       shown={`${Number(value.toFixed(3))}${suffix}`}
       inputMode="decimal"
       read={(text) => {
-        const bare = text.replace(suffix.trim(), '').replace(',', '.').replace('−', '-').trim();
+        const bare = text
+          .replace(suffix.trim(), '')
+          .replace(/[\s\u2009\u202f]/g, '')
+          .replace(',', '.')
+          .replace('−', '-');
         const number = bare === '' ? NaN : Number(bare);
         return Number.isFinite(number)
           ? { ok: true, value: number }

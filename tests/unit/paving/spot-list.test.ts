@@ -61,6 +61,16 @@ describe('a list of spots', () => {
     expect(problems[4]).toContain('more than 10 m');
   });
 
+  test('a decimal comma among commas is not taken for another cell, under headings either', () => {
+    expect(problemsOf('x,y,level\n3,2,1,5,-40')[0]).toContain('5 cells under 3 headings');
+    expect(spotsOf('x,y,level\n3200,1500,-40,,')).toEqual([{ at: [3200, 1500], level: -40 }]);
+  });
+
+  test('each spot knows its line, headings and empty lines counted', () => {
+    const list = parseSpotList('x,y,level\n\n0,0,-40\n\n100,0,-50\n', METRIC);
+    expect(list).toMatchObject({ ok: true, lines: [3, 5] });
+  });
+
   test('headings without a level, headings alone and nothing at all say so', () => {
     expect(problemsOf('name,x,y\nA,1,2')[0]).toContain('lack level');
     expect(problemsOf('x,y,level\n')[0]).toContain('no spot below');

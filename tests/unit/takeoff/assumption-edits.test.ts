@@ -52,9 +52,34 @@ describe('an assumption that is typed', () => {
     [['materials', 'voids', 'depth'], -3, /more than 0 mm/],
     [['materials', 'base', 'density'], 20, /at least 100 kg\/m³/],
     [['order', 'spares', 'value'], 120, /at most 100 %/],
+    [['materials', 'geotextile', 'rollWidth'], 25_000, /^Is over 20 m/],
     [['materials', 'geotextile', 'rollWidth'], 250, /wider than their lap/],
   ])('%j of %d is refused', (field, value, words) => {
     expect(assumptionRefused(plain, field, value)).toMatch(words);
+  });
+});
+
+it('a count of spares is refused in words', () => {
+  const counted = sparesRuled(plain, 'count');
+  const refused = (value: number) =>
+    assumptionRefused(counted, ['order', 'spares', 'value'], value);
+  expect(refused(-3)).toBe('Must be none or more.');
+  expect(refused(2.5)).toBe('Must be a whole number.');
+  expect(refused(1e7)).toBe('Must be at most a million.');
+});
+
+describe('on a floor in feet and inches', () => {
+  const us = { ...plain, display: 'imperial' as const };
+  // By 1 lb = 0.453 592 37 kg and 1 ft = 304.8 mm, rounded towards what is allowed.
+  it.each([
+    [['materials', 'base', 'density'], 20, 'Must be at least 6.3\u202flb/ft³.'],
+    [['order', 'bag'], 400, 'Must be at most 220.4\u202flb.'],
+    [['order', 'bag'], 0.1, 'Must be at least 2.3\u202flb.'],
+    [['materials', 'voids', 'depth'], -3, 'Must be more than nothing.'],
+    [['materials', 'voids', 'depth'], 5000, 'Must be at most 6\' 6".'],
+    [['order', 'spares', 'value'], 120, 'Must be at most 100 %.'],
+  ])('%j of %d is refused in its own measures', (field, value, words) => {
+    expect(assumptionRefused(us, field, value)).toBe(words);
   });
 });
 

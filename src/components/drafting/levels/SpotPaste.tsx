@@ -38,7 +38,7 @@ function PasteForm({ onClose }: { onClose: () => void }) {
     if (clash) {
       return setProblems([
         {
-          line: clash[1] - (spots.length - parsed.spots.length) + 1,
+          line: parsed.lines[clash[1] - had.length],
           message: `is the same place as spot ${clash[0] + 1}, which the floor has already. Leave it out, or replace the spots there are.`,
         },
       ]);
@@ -52,7 +52,12 @@ function PasteForm({ onClose }: { onClose: () => void }) {
       ]);
     }
     table.getState().edit((now) => levelsChanged(now, { spots }));
-    table.getState().set({ spot: null, said: `${parsed.spots.length} spots taken from the list.` });
+    table
+      .getState()
+      .set({
+        spot: null,
+        said: `${parsed.spots.length === 1 ? 'One spot' : `${parsed.spots.length} spots`} taken from the list.`,
+      });
     zoomToFit(table);
     onClose();
   };
