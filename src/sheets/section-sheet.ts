@@ -163,7 +163,7 @@ function fallWords(fall: Fall): string {
 
 /** `left to right`, `up` …, or the angle from the plan's foot. */
 function pullWords(degrees: number, oneWay = false): string {
-  const angle = (((Math.round(degrees * 10) / 10) % 360) + 360) % 360;
+  const angle = Number((((degrees % 360) + 360) % 360).toFixed(1));
   const ways: Readonly<Record<number, string>> = oneWay
     ? { 0: 'to the right', 90: 'upwards', 180: 'to the left', 270: 'downwards' }
     : { 0: 'left to right', 90: 'bottom to top', 180: 'left to right', 270: 'bottom to top' };

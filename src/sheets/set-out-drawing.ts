@@ -52,11 +52,11 @@ export function setOutDrawing(
   const placed = labelsPlaced(labels, space);
   return [
     { name: 'units', commands: floor.units.map((command) => inOutline(command, grey)) },
-    { name: 'ground', commands: floor.outline },
     {
       name: 'strings',
       commands: strings.map((line) => ({ kind: 'line', ...line, stroke: STRING_STROKE })),
     },
+    { name: 'ground', commands: floor.outline },
     {
       name: 'control',
       commands: [
@@ -156,7 +156,11 @@ function pointLabels(
           away([at[0] - mx, at[1] - my]),
           textWidth(name, LETTERING.small, weight),
           [1.6, 2.6, 4, 6, 9],
-        ).map((place) => ({ ...place, plate: point.kind !== 'corner' })),
+        ).map((place) => ({
+          ...place,
+          // Over units and strings, but not over the edge.
+          plate: point.kind === 'unit' || point.kind === 'keep-out',
+        })),
       };
     });
 }
