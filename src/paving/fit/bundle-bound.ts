@@ -1,7 +1,7 @@
 import type { CellPieces } from './cell-pieces';
 
 /** Directions are gathered into this many bundles. */
-const BUNDLES = 12;
+const BUNDLES = 5;
 /** Bundles of more lines than this are left alone: putting them in order would cost more than it saves. */
 const GREATEST_BUNDLE = 128;
 
@@ -15,11 +15,12 @@ export interface Bundles {
   /** For each family its bundle, and the slope of its lines against the bundle's. */
   readonly of: Uint8Array;
   readonly slope: Float64Array;
-  /** Share of the way along the bundle's normal in the family's own. */
-  readonly share: Float64Array;
+  /** How far one goes along the bundle's normal for each mm along the family's own. */
+  readonly perMm: Float64Array;
   readonly nx: Float64Array;
   readonly ny: Float64Array;
-  /** Scratch. */
+  /** Scratch. How far the box reaches along each bundle's lines, either way from its middle. */
+  readonly along: Float64Array;
   readonly gain: Float64Array;
   readonly count: Int32Array;
   readonly at: Float64Array;
@@ -32,9 +33,10 @@ export function bundlesOf({ families }: CellPieces): Bundles {
   const bundles: Bundles = {
     of: new Uint8Array(total),
     slope: new Float64Array(total),
-    share: new Float64Array(total),
+    perMm: new Float64Array(total),
     nx: new Float64Array(BUNDLES),
     ny: new Float64Array(BUNDLES),
+    along: new Float64Array(BUNDLES),
     gain: new Float64Array(BUNDLES),
     count: new Int32Array(BUNDLES),
     at: new Float64Array(BUNDLES * GREATEST_BUNDLE),
@@ -53,43 +55,53 @@ export function bundlesOf({ families }: CellPieces): Bundles {
     const share = families.nx[f] * bundles.nx[bundle] + families.ny[f] * bundles.ny[bundle];
     const cross = families.nx[f] * bundles.ny[bundle] - families.ny[f] * bundles.nx[bundle];
     bundles.of[f] = bundle;
-    bundles.share[f] = share;
+    bundles.perMm[f] = 1 / share;
     bundles.slope[f] = Math.abs(cross / share);
   }
   return bundles;
 }
 
-export function bundlesEmptied({ gain, count, before }: Bundles): void {
-  gain.fill(0);
-  count.fill(0);
-  before.fill(0);
+/** Makes them ready for a box, given as half its sides. */
+export function bundlesEmptied(
+  { gain, count, before, along, nx, ny }: Bundles,
+  halfU: number,
+  halfV: number,
+): void {
+  for (let bundle = 0; bundle < BUNDLES; bundle++) {
+    gain[bundle] = 0;
+    count[bundle] = 0;
+    before[bundle] = 0;
+    along[bundle] = Math.abs(ny[bundle]) * halfU + Math.abs(nx[bundle]) * halfV;
+  }
 }
 
-/** Adds a line through the whole box whose middle is (mx, my); `below` when the box's point of reference has passed it. */
+/**
+ * Adds a line through the whole box, `offset` from its middle; `below` when the box's point of reference
+ * has passed it. Origins keep `stand` off it, mm: what gains begins, and what loses ends, by that much later.
+ */
 export function bundleAdd(
   bundles: Bundles,
   f: number,
   offset: number,
-  halfU: number,
-  halfV: number,
   step: number,
   below: boolean,
+  stand = 0,
 ): void {
   const bundle = bundles.of[f];
   const count = bundles.count[bundle]++;
   if (below) bundles.before[bundle] += step;
   if (count >= GREATEST_BUNDLE) return;
-  const along = Math.abs(bundles.ny[bundle]) * halfU + Math.abs(bundles.nx[bundle]) * halfV;
-  const slack = bundles.slope[f] * along;
-  const at = offset / bundles.share[f] + (step > 0 ? -slack : slack);
+  const shift = bundles.slope[f] * bundles.along[bundle] - stand * bundles.perMm[f];
+  const begin = offset * bundles.perMm[f] + (step > 0 ? -shift : shift);
+  const { at, change } = bundles;
   const first = bundle * GREATEST_BUNDLE;
   let place = first + count;
-  for (; place > first && bundles.at[place - 1] > at; place--) {
-    bundles.at[place] = bundles.at[place - 1];
-    bundles.change[place] = bundles.change[place - 1];
+  for (; place > first && at[place - 1] > begin; place--) {
+    at[place] = at[place - 1];
+    change[place] = change[place - 1];
   }
-  bundles.at[place] = at;
-  bundles.change[place] = step;
+  at[place] = begin;
+  change[place] = step;
 }
 
 /** What the lines of all bundles can add to the count over the box: bundle by bundle, or family by family where that is less. */

@@ -2,6 +2,7 @@ import { cellPieces, type CellPieces } from './cell-pieces';
 import { unitCount } from './count';
 import type { FitFrame } from './fit-frame';
 import { cellMost, type CellMost } from './most';
+import { mostPlay } from './most-play';
 import { nearPieces } from './near-pieces';
 import { cellTradeOff, type CellChoice } from './trade-off';
 
@@ -25,34 +26,68 @@ export function frameMost(frame: FitFrame, stop?: () => boolean) {
   return { pieces, most };
 }
 
+/** First reach, in widths that the cell's area would have spread along all its pieces. */
+const FIRST_REACH = 8;
+
 /**
- * Origins of the cell with the most slack: that of the most units alone, or the whole trade-off.
- * Pieces are looked at as far off as the slack may reach; how far that is, is known only when the
- * answer is, so a short reach is tried first and drawn out while some origin has all of it.
+ * Asks for origins with the most slack, of pieces with their repeats as far off as the slack may reach. How
+ * far that is, is known only when the answer is: a short reach is tried first, and drawn out while
+ * some origin has all of it.
  */
-export function frameChoices(
-  frame: FitFrame,
+function withinReach<T>(
+  { pitch, rise }: FitFrame,
   pieces: CellPieces,
-  most: CellMost,
-  all: boolean,
-  stop?: () => boolean,
-): CellChoice[] {
-  const { pitch, rise, shift } = frame;
+  first: number,
+  found: (reach: number) => T,
+  slackOf: (answer: T) => number,
+): T {
   let length = 0;
   for (let n = 0; n < pieces.count; n++) {
     length += Math.hypot(pieces.x1[n] - pieces.x0[n], pieces.y1[n] - pieces.y0[n]);
   }
   // No origin with a unit has more: the unit's neighbour along the row that is not whole bounds it.
   const greatest = pitch * 1.001;
-  const least = all ? Math.max(1, Math.ceil(CHOICES_SHARE * most.count)) : most.count;
-  for (let reach = Math.min(greatest, (FIRST_REACH * pitch * rise) / length); ; reach *= 4) {
+  for (let reach = Math.max(first, (FIRST_REACH * pitch * rise) / length); ; reach *= 4) {
     reach = Math.min(reach, greatest);
-    const near = nearPieces(pieces, pitch, rise, shift, reach);
-    const choices = cellTradeOff(near, pitch, rise, reach, { least, most, stop });
-    const cut = choices.some(({ slack }) => slack >= reach * 0.999);
-    if (!cut || reach >= greatest || stop?.()) return choices;
+    const answer = found(reach);
+    if (slackOf(answer) < reach * 0.999 || reach >= greatest) return answer;
   }
 }
 
-/** First reach, in widths that the cell's area would have spread along all its pieces. */
-const FIRST_REACH = 8;
+/** Of the origins with the most units, that with the most slack. */
+export function frameStart(
+  frame: FitFrame,
+  pieces: CellPieces,
+  most: CellMost,
+  stop?: () => boolean,
+): CellChoice {
+  const { pitch, rise, shift } = frame;
+  return withinReach(
+    frame,
+    pieces,
+    0,
+    (reach) => mostPlay(nearPieces(pieces, pitch, rise, shift, reach, true), reach, most, stop),
+    ({ slack }) => (stop?.() ? 0 : slack),
+  );
+}
+
+/** The whole trade-off, from the start with the most units on. */
+export function frameChoices(
+  frame: FitFrame,
+  pieces: CellPieces,
+  most: CellChoice,
+  stop?: () => boolean,
+): CellChoice[] {
+  const { pitch, rise, shift } = frame;
+  const least = Math.max(1, Math.ceil(CHOICES_SHARE * most.count));
+  return withinReach(
+    frame,
+    pieces,
+    2 * most.slack,
+    (reach) => {
+      const near = nearPieces(pieces, pitch, rise, shift, reach);
+      return cellTradeOff(near, pitch, rise, reach, { least, most, stop });
+    },
+    (choices) => (stop?.() ? 0 : Math.max(...choices.map(({ slack }) => slack))),
+  );
+}

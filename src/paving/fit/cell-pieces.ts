@@ -143,23 +143,79 @@ function cutPiece(
   }
 }
 
-/** Numbers of the pieces, arcs first, then family by family, each in the order that `before` tells. */
+/** Pieces of a family that fall into one of so many equal steps of height as there are of them are put in order one by one, up to this many. */
+const FEW_TOGETHER = 16;
+
+/**
+ * Numbers of the pieces, arcs first, then family by family, each by height; those at one height as `before`
+ * tells, or in the order that they came in. Heights spread over a cell, so that nearly all fall into
+ * place without being compared.
+ */
 export function familyOrder(
   family: ArrayLike<number>,
   families: number,
-  before: (m: number, n: number) => number,
+  height: ArrayLike<number>,
+  before: (m: number, n: number) => number = () => 0,
 ): Int32Array {
   const start = new Int32Array(families + 2);
   for (let n = 0; n < family.length; n++) start[family[n] + 2]++;
   for (let f = 0; f <= families; f++) start[f + 1] += start[f];
   const order = new Int32Array(family.length);
   for (let n = 0; n < family.length; n++) order[start[family[n] + 1]++] = n;
+  const sooner = (m: number, n: number) => height[m] - height[n] || before(m, n) || m - n;
   // Filling moved each start on to the next.
   for (let f = 0; f <= families; f++) {
     const from = f === 0 ? 0 : start[f - 1];
-    if (start[f] - from > 1) order.subarray(from, start[f]).sort(before);
+    orderedByHeight(order.subarray(from, start[f]), height, sooner);
   }
   return order;
+}
+
+function orderedByHeight(
+  list: Int32Array,
+  height: ArrayLike<number>,
+  sooner: (m: number, n: number) => number,
+): void {
+  const size = list.length;
+  let low = Infinity;
+  let high = -Infinity;
+  for (let m = 0; m < size; m++) {
+    low = Math.min(low, height[list[m]]);
+    high = Math.max(high, height[list[m]]);
+  }
+  const perMm = high > low && size > FEW_TOGETHER ? (size - 1) / (high - low) : 0;
+  if (perMm === 0) {
+    oneByOne(list, 0, size, sooner);
+    return;
+  }
+  const stepOf = (n: number) => Math.floor((height[n] - low) * perMm);
+  const start = new Int32Array(size + 1);
+  for (let m = 0; m < size; m++) start[stepOf(list[m]) + 1]++;
+  for (let m = 0; m < size; m++) start[m + 1] += start[m];
+  const given = list.slice();
+  const next = start.slice();
+  for (let m = 0; m < size; m++) list[next[stepOf(given[m])]++] = given[m];
+  for (let m = 0; m < size; m++) {
+    if (start[m + 1] - start[m] > 1) oneByOne(list, start[m], start[m + 1], sooner);
+  }
+}
+
+function oneByOne(
+  list: Int32Array,
+  from: number,
+  to: number,
+  sooner: (m: number, n: number) => number,
+): void {
+  if (to - from > FEW_TOGETHER) {
+    list.subarray(from, to).sort(sooner);
+    return;
+  }
+  for (let m = from + 1; m < to; m++) {
+    const n = list[m];
+    let place = m;
+    for (; place > from && sooner(list[place - 1], n) > 0; place--) list[place] = list[place - 1];
+    list[place] = n;
+  }
 }
 
 /** The boundaries of a frame's regions in one cell. */
@@ -224,9 +280,8 @@ export function cellPieces(frame: FitFrame): CellPieces {
       cutPiece(b, n, frame, put);
     }
   }
-  const before = (m: number, n: number) =>
-    height[m] - height[n] || cut.x0[m] - cut.x0[n] || cut.y0[m] - cut.y0[n];
-  const order = familyOrder(family, families.nx.length, before);
+  const before = (m: number, n: number) => cut.x0[m] - cut.x0[n] || cut.y0[m] - cut.y0[n];
+  const order = familyOrder(family, families.nx.length, height, before);
   // Among those at nearly the same height, pieces that lie on one another are one.
   const kept: number[] = [];
   const owners: number[][] = [];

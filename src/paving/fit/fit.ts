@@ -1,6 +1,6 @@
 import { documentGround } from '../ground';
 import type { LayoutDocument, Placement } from '../layout-document';
-import { frameChoices, frameMost } from './cell-fit';
+import { frameChoices, frameMost, frameStart } from './cell-fit';
 import { fitFrame, holdFrame, type FitFrame } from './fit-frame';
 import { holdRefusal, type FitHold, type HoldRefusal } from './hold';
 import { heldChoices } from './line-fit';
@@ -89,7 +89,9 @@ function fixedFit(document: LayoutDocument, turn: number, options: FitOptions): 
   const { pieces, most } = frameMost(frame, shouldStop);
   check();
   if (most.count === 0) return resultOf(frame, []);
-  const found = frameChoices(frame, pieces, most, choices, shouldStop);
+  const start = frameStart(frame, pieces, most, shouldStop);
+  check();
+  const found = choices ? frameChoices(frame, pieces, start, shouldStop) : [start];
   check();
   return resultOf(
     frame,

@@ -16,7 +16,7 @@ const LEAF_PIECES = 6;
 /** Cells with more pieces and directions than these are looked into square by square from the start. */
 const MANY_PIECES = 500;
 const MANY_FAMILIES = 24;
-const GRID_SQUARES = 512;
+const GRID_SQUARES = 256;
 /** In boxes that more pieces cross than this, bundles of nearly parallel ones are too many to bound much. */
 const BUNDLED_PIECES = 400;
 /** Boxes smaller than this, mm, are left: no start holds its count for less than `FIT_MARGIN_MM` about it. */
@@ -79,13 +79,14 @@ export function depthMoved(
   return sum;
 }
 
-/** Boxes of the cell, and the count at the point of each that `SPLIT` tells. */
+/** Boxes of the cell, the count at the point of each that `SPLIT` tells, and the pieces that meet it. */
 export interface CellBoxes {
   readonly x0: number[];
   readonly y0: number[];
   readonly x1: number[];
   readonly y1: number[];
   readonly depth: number[];
+  readonly list: Int32Array[];
 }
 
 /** The most units, with boxes that hold every origin that has them. */
@@ -135,7 +136,7 @@ export function cellMost(
   const boxTo: number[] = [];
   let highest = 0;
   // Boxes that hold no more than the best known, but may hold as many.
-  const tied: CellBoxes = { x0: [], y0: [], x1: [], y1: [], depth: [] };
+  const tied: CellBoxes = { x0: [], y0: [], x1: [], y1: [], depth: [], list: [] };
   let tiedAt = best;
 
   const offer = (count: number, u: number, v: number) => {
@@ -145,12 +146,22 @@ export function cellMost(
     bestV = v;
   };
 
-  const tie = (bound: number, ax: number, ay: number, bx: number, by: number, depth: number) => {
+  const tie = (
+    bound: number,
+    ax: number,
+    ay: number,
+    bx: number,
+    by: number,
+    depth: number,
+    from: number,
+    to: number,
+  ) => {
     if (bound < best) return;
     if (tiedAt < best) {
-      for (const values of [tied.x0, tied.y0, tied.x1, tied.y1, tied.depth]) values.length = 0;
+      for (const values of Object.values(tied)) values.length = 0;
       tiedAt = best;
     }
+    tied.list.push(arena.slice(from, to));
     tied.x0.push(ax);
     tied.y0.push(ay);
     tied.x1.push(bx);
@@ -208,7 +219,7 @@ export function cellMost(
     let gain = 0;
     let familyGain = 0;
     const bundled = to - from <= BUNDLED_PIECES;
-    if (bundled) bundlesEmptied(bundles);
+    if (bundled) bundlesEmptied(bundles, hx, hy);
     // The two families that promise most, to look where both do best.
     let oneGain = 0;
     let one = -1;
@@ -328,7 +339,7 @@ export function cellMost(
         open = false;
         mostTo = t;
       }
-      if (bundled) bundleAdd(bundles, f, t - middle, hx, hy, change, t < ref);
+      if (bundled) bundleAdd(bundles, f, t - middle, change, t < ref);
       sum += change;
       if (t < ref) before = sum;
       if (sum > most) {
@@ -343,7 +354,7 @@ export function cellMost(
     const bound =
       depth + gain + (bundled ? Math.min(familyGain, bundlesGain(bundles)) : familyGain);
     if (bound <= best) {
-      tie(bound, ax, ay, bx, by, depth);
+      tie(bound, ax, ay, bx, by, depth, own, top);
       top = own;
       return depth;
     }
@@ -365,7 +376,7 @@ export function cellMost(
       if (cu > ax && cu < bx && cv > ay && cv < by) {
         offer(depthMoved(pieces, arena, own, top, u, v, cu, cv, depth), cu, cv);
         if (bound <= best) {
-          tie(bound, ax, ay, bx, by, depth);
+          tie(bound, ax, ay, bx, by, depth, own, top);
           top = own;
           return depth;
         }
@@ -374,12 +385,12 @@ export function cellMost(
     if (top - own <= LEAF_PIECES) {
       const box = { x0: ax, y0: ay, x1: bx, y1: by };
       leafFaces(pieces, arena, own, top, box, u, v, depth, () => best + 1, offer);
-      tie(bound, ax, ay, bx, by, depth);
+      tie(bound, ax, ay, bx, by, depth, own, top);
       top = own;
       return depth;
     }
     if (hx * 2 < SMALLEST_BOX_MM && hy * 2 < SMALLEST_BOX_MM) {
-      tie(bound, ax, ay, bx, by, depth);
+      tie(bound, ax, ay, bx, by, depth, own, top);
       top = own;
       return depth;
     }
@@ -463,7 +474,7 @@ export function cellMost(
     }
   }
   for (const id of waiting[best - start.count] ?? [])
-    tie(best, boxX0[id], boxY0[id], boxX1[id], boxY1[id], boxDepth[id]);
+    tie(best, boxX0[id], boxY0[id], boxX1[id], boxY1[id], boxDepth[id], boxFrom[id], boxTo[id]);
   if (tiedAt < best) throw new Error(`no box holds the ${best} units at [${bestU}, ${bestV}]`);
   return { count: best, u: bestU, v: bestV, boxes: tied };
 }

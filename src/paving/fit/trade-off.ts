@@ -1,7 +1,6 @@
 import { LENGTH_TOLERANCE_MM } from '@/geometry/tolerance';
 import type { CellPieces } from './cell-pieces';
-import { arcMeetsBox, arcOnlyTakes, depthMoved, SPLIT, type CellMost } from './most';
-import { pieceGrid } from './piece-grid';
+import { arcMeetsBox, arcOnlyTakes, depthMoved, SPLIT } from './most';
 import { KEEP_OFF_MM, pieceGap, pieceGapsRoom, pointSlack, unitsApart } from './slack';
 import { slackPolished } from './slack-polish';
 
@@ -26,8 +25,6 @@ const COARSE_SAMPLE = 8;
 const NEAREST = 28;
 /** Up to this many pieces that no origin of a box loses are set against each other. */
 const GREATEST_HELD = 8;
-/** The grid by which the pieces near a box are found has no more squares each way. */
-const GRID_LINES = 32;
 /** Places that a level of boxes has for pieces at first. */
 const FIRST_ROOM = 256;
 /** Below this, mm, a box is left. */
@@ -62,8 +59,8 @@ const levelOf = (size: number): Level => ({
 export interface TradeOffOptions {
   /** Counts below this are of no interest. */
   readonly least: number;
-  /** The most there is, with an origin that has it and boxes that hold all that have. */
-  readonly most: CellMost;
+  /** Of the origins with the most units, the one with the most slack. */
+  readonly most: CellChoice;
   readonly stop?: () => boolean;
 }
 
@@ -80,12 +77,10 @@ export function cellTradeOff(
   pitch: number,
   rise: number,
   reach: number,
-  { least: lowest, most, stop }: TradeOffOptions,
+  { least, most, stop }: TradeOffOptions,
 ): CellChoice[] {
   const { x0, y0, x1, y1, radius, family, height, step, families } = near;
-  const span = most.count - lowest + 1;
-  // Counts below this are, for now, of no interest.
-  let least = lowest;
+  const span = most.count - least + 1;
   const bestSlack = new Float64Array(span).fill(-1);
   const bestU = new Float64Array(span);
   const bestV = new Float64Array(span);
@@ -94,7 +89,7 @@ export function cellTradeOff(
   const fresh = new Set<number>();
 
   const offer = (count: number, slack: number, u: number, v: number) => {
-    const at = count - lowest;
+    const at = count - least;
     if (at < 0 || at >= span || slack <= bestSlack[at]) return;
     bestSlack[at] = slack;
     bestU[at] = u;
@@ -105,7 +100,7 @@ export function cellTradeOff(
   };
   /** Nothing with up to `count` units and `slack` would be news. */
   const beaten = (count: number, slack: number) =>
-    count < least || slack <= known[Math.min(count - lowest, span - 1)] + SLACK_TOLERANCE_MM;
+    count < least || slack <= known[Math.min(count - least, span - 1)] + SLACK_TOLERANCE_MM;
 
   const every = new Int32Array(near.count);
   for (let n = 0; n < near.count; n++) every[n] = n;
@@ -115,17 +110,11 @@ export function cellTradeOff(
     for (const at of [...fresh]) {
       if (bestSlack[at] < known[at]) continue;
       const found = slackPolished(near, every, bestU[at], bestV[at], bestSlack[at]);
-      for (const { u, v, gained, slack } of found) offer(at + lowest + gained, slack, u, v);
+      for (const { u, v, gained, slack } of found) offer(at + least + gained, slack, u, v);
     }
     fresh.clear();
   };
-  offer(
-    most.count,
-    Math.max(0, pointSlack(near, every, 0, near.count, most.u, most.v, reach, room, order)),
-    most.u,
-    most.v,
-  );
-  polish();
+  offer(most.count, most.slack, most.u, most.v);
 
   // Scratch for one box: gaps of the listed pieces, those through it, and the family's lines.
   const through = new Uint8Array(near.count);
@@ -174,7 +163,7 @@ export function cellTradeOff(
     const own = out.top;
     let { top } = out;
     const { list } = out;
-    if (least < most.count && h > COARSE_TIMES * known[0] && h > reach) {
+    if (h > COARSE_TIMES * known[0] && h > reach) {
       for (let a = from; a < to; a++) {
         const n = source[a];
         if (pieceWithin(n, ax, ay, bx, by, mx, my, hx, hy, within)) list[top++] = n;
@@ -548,46 +537,6 @@ export function cellTradeOff(
     return level;
   };
 
-  /** The boxes outside which no origin has the most units, each with the pieces near it. */
-  const mostBoxes = (): Level => {
-    const { boxes } = most;
-    const level = levelOf(near.count);
-    const squares = Math.max(1, Math.min(GRID_LINES, Math.floor(boxes.x0.length / 2)));
-    const grid = pieceGrid(near, -reach, -reach, pitch + reach, rise + reach, squares, squares);
-    const perU = squares / (pitch + 2 * reach);
-    const perV = squares / (rise + 2 * reach);
-    const seen = new Int32Array(near.count).fill(-1);
-    const gathered = new Int32Array(near.count);
-    const square = (at: number, per: number) =>
-      Math.max(0, Math.min(squares - 1, Math.floor(at * per)));
-    for (let box = 0; box < boxes.x0.length && !stop?.(); box++) {
-      const ax = boxes.x0[box];
-      const ay = boxes.y0[box];
-      const bx = boxes.x1[box];
-      const by = boxes.y1[box];
-      const left = square(ax, perU);
-      const right = square(bx + 2 * reach, perU);
-      const low = square(ay, perV);
-      const high = square(by + 2 * reach, perV);
-      let count = 0;
-      for (let row = low; row <= high; row++) {
-        const first = grid.start[row * squares + left];
-        const last = grid.start[row * squares + right + 1];
-        for (let at = first; at < last; at++) {
-          const n = grid.of[at];
-          if (seen[n] === box) continue;
-          seen[n] = box;
-          gathered[count++] = n;
-        }
-      }
-      if (left !== right || low !== high) gathered.subarray(0, count).sort();
-      const u = ax + (bx - ax) * SPLIT;
-      const v = ay + (by - ay) * SPLIT;
-      look(gathered, 0, count, u, v, boxes.depth[box], reach, ax, ay, bx, by, level);
-    }
-    return level;
-  };
-
   const search = (first: Level) => {
     let level = first;
     polish();
@@ -623,19 +572,13 @@ export function cellTradeOff(
       polish();
     }
   };
-  // First for the most units, in the boxes that can have them, then for fewer.
-  least = most.count;
-  search(mostBoxes());
-  if (lowest < most.count) {
-    least = lowest;
-    search(wholeCell());
-  }
+  search(wholeCell());
   const choices: CellChoice[] = [];
   let above = -Infinity;
   for (let at = span - 1; at >= 0; at--) {
     if (bestSlack[at] <= above + LENGTH_TOLERANCE_MM) continue;
     above = bestSlack[at];
-    choices.push({ count: at + lowest, slack: bestSlack[at], u: bestU[at], v: bestV[at] });
+    choices.push({ count: at + least, slack: bestSlack[at], u: bestU[at], v: bestV[at] });
   }
   return choices;
 }

@@ -1,6 +1,6 @@
 import { documentGround, type Ground } from '../ground';
 import type { LayoutDocument } from '../layout-document';
-import { frameChoices, frameMost } from './cell-fit';
+import { frameMost, frameStart } from './cell-fit';
 import { fitFrame } from './fit-frame';
 import { holdRefusal, type FitHold } from './hold';
 import { heldChoices } from './line-fit';
@@ -55,8 +55,7 @@ export function turnFit(
   }
   const { pieces, most } = frameMost(frame);
   if (most.count === 0) return none;
-  const [choice] = frameChoices(frame, pieces, most, false);
-  const { wholeUnits, play } = choiceVerified(frame, choice);
+  const { wholeUnits, play } = choiceVerified(frame, frameStart(frame, pieces, most));
   return { turn, wholeUnits, play };
 }
 
