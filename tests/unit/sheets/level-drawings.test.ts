@@ -1,0 +1,125 @@
+import { describe, expect, test } from 'vitest';
+import { SLOPING_COURT } from '@/components/guide/level-pictures';
+import type { LayoutDocument } from '@/paving/layout-document';
+import { levelsSchema } from '@/paving/levels';
+import type { DrawCommand, PaperBox } from '@/sheets/drawing';
+import { layerSection } from '@/sheets/layer-section';
+import { levelMapDrawing, levelMapKey, mapKeySample } from '@/sheets/level-map-drawing';
+import { paperOf } from '@/sheets/paper';
+import { pointsBounds, viewCentred } from '@/sheets/plan-view';
+import { PREFERRED_SCALES } from '@/sheets/scales';
+import { screedPicture } from '@/sheets/screed-picture';
+import { earthModel } from '@/takeoff/earth-cells';
+import { levelMap } from '@/takeoff/level-map';
+import { letteringFaults, sheetTexts } from './sheet-invariants';
+
+const FRAME = 'picture';
+const sheetOf = (commands: readonly DrawCommand[], box: PaperBox) => ({
+  width: box.right,
+  height: box.bottom,
+  layers: [{ name: 'picture', commands }],
+  paper: paperOf('A4', 'landscape'),
+  scale: 1,
+  frames: { [FRAME]: box },
+});
+const textsOf = (commands: readonly DrawCommand[], box: PaperBox) =>
+  sheetTexts(sheetOf(commands, box)).map(({ text }) => text);
+
+const floors: readonly (readonly [string, LayoutDocument])[] = [
+  ['as the guide has it', SLOPING_COURT],
+  [
+    'deep, with overdig, in inches',
+    {
+      ...SLOPING_COURT,
+      display: 'imperial',
+      buildUp: {
+        use: 'driveway',
+        frost: true,
+        bedding: 25.4,
+        base: 304.8,
+        geotextile: true,
+        overdig: 150,
+      },
+      levels: levelsSchema.parse({ finish: -12.7, proud: 6 }),
+    },
+  ],
+  [
+    'on no base and hardly any bedding',
+    {
+      ...SLOPING_COURT,
+      buildUp: { use: 'foot', frost: false, bedding: 3, base: 0, geotextile: true, overdig: 0 },
+      levels: levelsSchema.parse({ finish: -2 }),
+    },
+  ],
+  ['above the edge', { ...SLOPING_COURT, levels: levelsSchema.parse({ finish: 30, proud: 5 }) }],
+];
+const boxes: readonly PaperBox[] = [
+  { left: 1, top: 1, right: 83, bottom: 59 },
+  { left: 10, top: 20, right: 180, bottom: 100 },
+];
+
+describe.each(floors)('a floor %s', (_, document) => {
+  test.each(boxes)(
+    'the section’s lettering stays in its box and apart, as it should on $right mm',
+    (box) => {
+      for (const toScale of [true, false]) {
+        const { commands, scale } = layerSection(document, box, FRAME, { toScale });
+        expect(letteringFaults(sheetOf(commands, box))).toEqual([]);
+        if (toScale) expect(PREFERRED_SCALES).toContain(scale);
+        const texts = textsOf(commands, box);
+        expect(texts.some((text) => text.startsWith('Unit '))).toBe(true);
+        expect(texts.includes('Geotextile')).toBe(document.buildUp!.geotextile);
+      }
+    },
+  );
+
+  test.each(boxes)('the screed board’s too, on $right mm', (box) => {
+    const high = { ...box, bottom: box.top + (box.right - box.left) * 0.5 };
+    const commands = screedPicture(document, high, FRAME);
+    expect(letteringFaults(sheetOf(commands, high))).toEqual([]);
+  });
+});
+
+test('layers on the section are as thick as they are figured', () => {
+  const { commands, scale } = layerSection(SLOPING_COURT, boxes[1], FRAME);
+  const heights = commands.flatMap((command) =>
+    command.kind === 'path' &&
+    command.rings[0].points.length === 4 &&
+    command.fill &&
+    command.stroke
+      ? [Math.abs(command.rings[0].points[2][1] - command.rings[0].points[0][1]) * scale]
+      : [],
+  );
+  // The guide's court: 25 mm of bedding on 100 mm of base.
+  for (const thickness of [25, 100])
+    expect(heights.some((height) => Math.abs(height - thickness) < 0.01)).toBe(true);
+});
+
+describe('the level map', () => {
+  const model = earthModel(SLOPING_COURT);
+  const map = levelMap(model, 'metric');
+  const box: PaperBox = { left: 5, top: 5, right: 165, bottom: 130 };
+  const view = viewCentred(pointsBounds(model.ground.rings[0].outline), 48, box);
+  const { commands, unfigured } = levelMapDrawing(
+    SLOPING_COURT,
+    model,
+    view,
+    { box, frame: FRAME },
+    map,
+  );
+
+  test('figures every peg, every spot and every contour that has room, none over another', () => {
+    expect(letteringFaults(sheetOf(commands, box))).toEqual([]);
+    expect(unfigured).toBeLessThanOrEqual(1);
+    const texts = textsOf(commands, box);
+    // 2 % over the 4700 mm from F to A is 94 mm.
+    for (const text of ['A −94', 'F 0', '8 −215', '−200']) expect(texts).toContain(text);
+  });
+
+  test('has a sample for each row of its key', () => {
+    for (const { sample } of levelMapKey(model, map, '25 mm'))
+      expect(mapKeySample(sample, { left: 0, top: 0, right: 9, bottom: 5 }).length).toBeGreaterThan(
+        0,
+      );
+  });
+});
