@@ -8,6 +8,7 @@ import type { Creep, Refit } from '@/paving/creep/creep-types';
 import { layFloor } from '@/paving/laying';
 import { floorReport } from '@/paving/report';
 import { setOut } from '@/paving/set-out/set-out';
+import { levelsReport } from '@/takeoff/levels-report';
 import { takeOff } from '@/takeoff/take-off';
 import { documentOf, parsed } from '../../oracle/documents';
 
@@ -39,6 +40,13 @@ test('report prints the report as JSON and nothing else, from a file or standard
   expect(JSON.parse(fromFile.stdout)).toEqual(report);
   const fromInput = layout(['report', '-'], good);
   expect(fromInput).toMatchObject({ status: 0, stderr: '', stdout: fromFile.stdout });
+});
+
+test('levels prints volumes, pegs, screed board and advice as JSON, and takes no option', () => {
+  const { status, stdout, stderr } = layout(['levels', '-'], good);
+  expect({ status, stderr }).toEqual({ status: 0, stderr: '' });
+  expect(JSON.parse(stdout)).toEqual(JSON.parse(JSON.stringify(levelsReport(parsed(documentOf({}))))));
+  expect(layout(['levels', '-', '--loud'], good)).toMatchObject({ status: 2, stdout: '' });
 });
 
 test('take-off prints the take-off as JSON, without prices', () => {
