@@ -1,5 +1,5 @@
 import { unitCorners, type Laying } from '../laying';
-import { floorReport, type Report } from '../report';
+import { wholeReport, type Report } from '../report';
 import { setOutAdvice } from './advice';
 import { setOutChecks } from './checks';
 import { controlPoints } from './control-points';
@@ -16,7 +16,7 @@ export type * from './set-out-types';
  * A laid floor set out from the two corners that its document names, or else from the best two. The same
  * floor and corners give the same names, numbers and order. `report` may be handed in when it is known.
  */
-export function setOut(laying: Laying, report: Report = floorReport(laying)): SetOut {
+export function setOut(laying: Laying, report: Report = wholeReport(laying)): SetOut {
   const { ground, document } = laying;
   const index = layingCourses(laying);
   const { courses } = index;

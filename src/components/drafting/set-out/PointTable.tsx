@@ -66,7 +66,7 @@ export function PointTable({ setOut }: { setOut: SetOut }) {
                 meet
               </th>
               <th scope="col" className="font-normal">
-                ±
+                {document.display === 'metric' ? '±' : '±\u202fmm'}
               </th>
             </tr>
           </thead>
