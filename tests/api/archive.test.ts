@@ -8,7 +8,7 @@ import { ARCHIVED_TABLES, NOT_ARCHIVED } from '@/server/archive/tables';
 import { useDatabase } from '@/server/database';
 import { startSession } from '@/server/sessions';
 import { court, moved, newVersion } from './firm';
-import { newOffice, versionThatIs } from './office';
+import { newOffice, versionThatIs, type Office } from './office';
 import { db, openEmpty, serve, useEmptyDatabase, Visitor } from './site';
 
 useEmptyDatabase();
@@ -17,6 +17,29 @@ const archiveOf = async (firmId: string, database?: Awaited<ReturnType<typeof db
   const parts: Uint8Array[] = [];
   await exportFirm(database ?? (await db()), firmId, (bytes) => parts.push(bytes));
   return new Uint8Array(Buffer.concat(parts));
+};
+
+/** A supplier, an item with two prices, settings, and a quote of a version that is sent. */
+const pricedThings = async ({ owner }: Office, version: string) => {
+  const { visitor } = owner;
+  await visitor.patch('/api/firm/pricing', { revision: 0, currency: 'GBP', taxBasisPoints: 2000 });
+  const supplier = (await visitor.post('/api/suppliers', { name: 'Yard' })).body;
+  const item = (
+    await visitor.post('/api/catalogue', {
+      kind: 'sundry',
+      name: 'Pegs',
+      supplierId: supplier.id,
+      packHolds: 0.1,
+      price: { costMinor: 5, from: '2026-01-01' },
+    })
+  ).body;
+  const price = { costMinor: 6, from: '2026-02-01' };
+  await visitor.patch(`/api/catalogue/${item.id}`, { revision: 1, price });
+  const quote = (await visitor.post(`/api/versions/${version}/quotes`)).body;
+  const line = { id: 'own', group: 'labour', name: 'Work', amount: 1.5, measure: 'day', costMinor: 7 }; // prettier-ignore
+  await visitor.patch(`/api/quotes/${quote.id}`, { revision: 1, lines: [line] });
+  const sent = await visitor.post(`/api/quotes/${quote.id}/send`, { revision: 2 });
+  expect(sent.status, JSON.stringify(sent.body)).toBe(200);
 };
 
 /** A firm with something in every table that an archive holds and that endpoints write. */
@@ -36,6 +59,7 @@ const busyOffice = async () => {
   await owner.visitor.put(`/api/threads/${thread.id}/read`, { upTo: thread.id });
   await designer.visitor.patch(`/api/threads/${thread.id}`, { resolved: true });
   await client.visitor.post(`/api/versions/${shared}/ask-change`, { note: 'Turn it' });
+  await pricedThings(office, first);
   const draft = `/api/layouts/${layoutId}/draft`;
   await designer.visitor.put(draft, { baseRevision: 1, document: moved(court(), 3) });
   await owner.visitor.put(draft, { baseRevision: 1, document: moved(court(), 4) });
@@ -57,6 +81,13 @@ test('read into an empty instance, an archive gives the very same archive again,
     'comments',
     'comment-reads',
     'audit-events',
+    'firm-pricing',
+    'number-sequences',
+    'suppliers',
+    'catalogue-items',
+    'catalogue-prices',
+    'version-pricings',
+    'quotes',
   ]) {
     expect(counts[name], name).toBeGreaterThan(0);
   }

@@ -78,7 +78,7 @@ it('takes a file of prices to a priced version, its quote as a PDF and an order 
   await page.getByRole('button', { name: 'Save version 1' }).click();
   await page.getByRole('dialog').getByLabel('Label').fill('Priced');
   await page.getByRole('dialog').getByRole('button', { name: 'Save version 1' }).click();
-  await page.getByText(/Version 1 saved/).waitFor();
+  await page.getByText(/Version 1 saved/).last().waitFor();
   const layout = new URL(page.url()).pathname.split('/').pop();
   const version = await page.evaluate(
     async (id) => (await (await fetch(`/api/layouts/${id}/versions`)).json()).versions[0].id,
@@ -95,7 +95,7 @@ it('takes a file of prices to a priced version, its quote as a PDF and an order 
   const unpriced = page.getByText('no cost yet');
   await page.getByTestId('quote-sums').waitFor();
   for (let left = await unpriced.count(); left > 0; left -= 1) {
-    const row = page.getByRole('listitem').filter({ has: unpriced.first() });
+    const row = page.getByRole('listitem').filter({ hasText: 'no cost yet' }).first();
     await row.getByLabel('One costs').fill('10');
     await row.getByLabel('One costs').press('Enter');
     await expect.poll(() => unpriced.count()).toBe(left - 1);
