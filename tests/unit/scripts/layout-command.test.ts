@@ -45,7 +45,9 @@ test('report prints the report as JSON and nothing else, from a file or standard
 test('levels prints volumes, pegs, screed board and advice as JSON, and takes no option', () => {
   const { status, stdout, stderr } = layout(['levels', '-'], good);
   expect({ status, stderr }).toEqual({ status: 0, stderr: '' });
-  expect(JSON.parse(stdout)).toEqual(JSON.parse(JSON.stringify(levelsReport(parsed(documentOf({}))))));
+  expect(JSON.parse(stdout)).toEqual(
+    JSON.parse(JSON.stringify(levelsReport(parsed(documentOf({}))))),
+  );
   expect(layout(['levels', '-', '--loud'], good)).toMatchObject({ status: 2, stdout: '' });
 });
 
