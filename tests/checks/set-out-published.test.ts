@@ -106,7 +106,7 @@ describe('what two tapes can be off', () => {
   });
 
   /**
-   * Identity of the textbooks on surveying, checked here against the four errors themselves: two distances off by σ each and
+   * Identity of the textbooks on surveying (recalled from memory, and derived here from the four errors themselves): two distances off by σ each and
    * independently put a point √(σ² + σ²) / sin γ off in the mean square, with semi-axes σ / (√2 sin γ/2) and σ / (√2 cos γ/2).
    * The worst, to first order, is √2 times the longer: σ / min(sin γ/2, cos γ/2).
    */
