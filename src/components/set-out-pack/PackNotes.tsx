@@ -30,7 +30,7 @@ export function PackNotes({ pack }: { readonly pack: SheetPack }) {
         </p>
       )}
       <p>Print at 100&nbsp;%, not fitted to the page, or the scale is lost.</p>
-      {isNear(new URL(stamp.currentUrl).hostname) && (
+      {pack.sheets === 'all' && isNear(new URL(stamp.currentUrl).hostname) && (
         <p>
           The QR code leads to this machine alone ({new URL(stamp.currentUrl).host}): phones on site
           can’t open it until whoever runs this site sets its public address.
