@@ -355,6 +355,8 @@ function pointersBound(table: TableStore, element: HTMLElement): () => void {
 
   const onDouble = (event: MouseEvent) => tool().doubleClick?.(table, pointerOf(event));
   const noMenu = (event: Event) => event.preventDefault();
+  // After a tap browsers play a mouse press as well, which would take the focus back from the field that the tap opened.
+  const noPress = (event: Event) => event.preventDefault();
   const unsubscribe = table.subscribe((now, before) => {
     if (now.tool !== before.tool) paintCursor();
   });
@@ -367,6 +369,7 @@ function pointersBound(table: TableStore, element: HTMLElement): () => void {
   element.addEventListener('wheel', onWheel, { passive: false });
   element.addEventListener('dblclick', onDouble);
   element.addEventListener('contextmenu', noMenu);
+  element.addEventListener('mousedown', noPress);
   return () => {
     unsubscribe();
     cancelAnimationFrame(frame);
@@ -378,5 +381,6 @@ function pointersBound(table: TableStore, element: HTMLElement): () => void {
     element.removeEventListener('wheel', onWheel);
     element.removeEventListener('dblclick', onDouble);
     element.removeEventListener('contextmenu', noMenu);
+    element.removeEventListener('mousedown', noPress);
   };
 }

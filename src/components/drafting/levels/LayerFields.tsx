@@ -1,6 +1,6 @@
 import { useMemo } from 'react';
 import { documentBuildUp, GREATEST_LAYER_MM, type BuildUp } from '@/paving/build-up';
-import { LEAST_BASE_MM, NOMINAL_BEDDING_MM } from '@/paving/build-up-advice';
+import { LEAST_BASE_MM, NOMINAL_BEDDING_MM, SOURCES } from '@/paving/build-up-advice';
 import { buildUpChanged } from '@/paving/level-edits';
 import { formatLength } from '@/paving/length';
 import { layerSection } from '@/sheets/layer-section';
@@ -84,6 +84,9 @@ export function LayerFields() {
         'Dig and base go on beyond the edge by',
         'Nothing inside an edge that stands. For one set on the base, the larger of 150 mm (6") and the base is published.',
       )}
+      <p className="text-sm text-slate">
+        Published in: {SOURCES.tolerances}. Local codes and licensed practice come first.
+      </p>
     </section>
   );
 }
