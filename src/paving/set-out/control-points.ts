@@ -4,8 +4,8 @@ import type { Mark } from './marks';
 import type { ControlPoint } from './set-out-types';
 import { runningOffsets, TAPE_READING_MM, tapeCross } from './tape-cross';
 
-/** Points this near to the baseline are set out along and square to it, if their tapes will not do, mm. */
-const NEAR_BASELINE_MM = 500;
+/** Points this near to the baseline's string are ticked along it, if their tapes will not do, mm. */
+const ON_BASELINE_MM = 5;
 /** Pairs of corners beside the datums that a crew is asked to tape from. */
 const MOST_SECOND_PAIRS = 3;
 
@@ -21,19 +21,19 @@ export function controlPoints(
   const [a, b] = datums;
   const baseline = Math.hypot(b.at[0] - a.at[0], b.at[1] - a.at[1]);
   const sighted = sight.inside && sight.crosses.length === 0;
-  const nearLine = (n: number) => {
+  const onLine = (n: number) => {
     const [along, square] = runningOffsets(a.at, b.at, marks[n].at);
     return (
       sighted &&
-      Math.abs(square) <= NEAR_BASELINE_MM &&
-      along >= -NEAR_BASELINE_MM &&
-      along <= baseline + NEAR_BASELINE_MM
+      Math.abs(square) <= ON_BASELINE_MM &&
+      along >= -ON_BASELINE_MM &&
+      along <= baseline + ON_BASELINE_MM
     );
   };
   const pairs = secondPairs(
     ground,
     marks,
-    failing.filter((n) => !nearLine(n)),
+    failing.filter((n) => !onLine(n)),
     MOST_SECOND_PAIRS,
   );
   const fails = new Set(failing);
