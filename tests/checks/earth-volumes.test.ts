@@ -1,5 +1,9 @@
 import fc from 'fast-check';
 import Fraction from 'fraction.js';
+import Centroid from 'jsts/org/locationtech/jts/algorithm/Centroid.js';
+import Coordinate from 'jsts/org/locationtech/jts/geom/Coordinate.js';
+import GeometryFactory from 'jsts/org/locationtech/jts/geom/GeometryFactory.js';
+import SnapIfNeededOverlayOp from 'jsts/org/locationtech/jts/operation/overlay/snap/SnapIfNeededOverlayOp.js';
 import { describe, expect, test } from 'vitest';
 import { ringIntegral } from '@/geometry/convex-part';
 import { surfaceHeight, type Plane } from '@/geometry/plane-pieces';
@@ -434,6 +438,85 @@ describe('against a slow sum', () => {
         },
       ),
       { numRuns: 200 },
+    );
+  });
+});
+
+describe('against JSTS', () => {
+  const factory = new GeometryFactory();
+  const ringOf = (ring: readonly Point[]) =>
+    factory.createLinearRing([...ring, ring[0]].map(([x, y]) => new Coordinate(x, y)));
+
+  // JSTS, a port of JTS, cuts each triangle's dug and filled part to the ground; area times the depth at the
+  // centroid is the volume under a plane.
+  test('cut and fill are those of its overlays, on any ground with any spots', () => {
+    const corners: Spot[] = [
+      spot(-9000, -9000, -120),
+      spot(9000, -9000, -300),
+      spot(9000, 9000, -60),
+      spot(-9000, 9000, -200),
+    ];
+    fc.assert(
+      fc.property(
+        groundOf,
+        spotsOf(0),
+        real(0, 360),
+        real(0.5, 6),
+        (ground, inner, direction, percent) => {
+          const fall = { kind: 'oneWay' as const, direction, percent };
+          const document = parsed(
+            documentOf({ ground, levels: levels({ fall, spots: [...corners, ...inner] }) }),
+          );
+          const laying = layFloor(document);
+          const volumes = earthVolumes(laying);
+          const [perimeter, ...holes] = laying.ground.rings.map(({ outline }) => ringOf(outline));
+          const area = factory.createPolygon(perimeter, holes);
+          const { spots: all } = document.levels!;
+          const [cos, sin] = rotation(direction);
+          const formation = (p: Point) =>
+            -(p[0] * cos + p[1] * sin) * (percent / 100) - buildUpDepth(document);
+          const highest = Math.max(
+            ...laying.ground.rings[0].outline.map((p) => formation(p) + buildUpDepth(document)),
+          );
+          const sum = { cut: 0, fill: 0 };
+          for (const triangle of existingGround(all).triangles) {
+            const points = triangle.map((n) => all[n].at);
+            const depths = triangle.map((n) => all[n].level - formation(all[n].at) + highest);
+            const [[x0, y0], [x1, y1], [x2, y2]] = points;
+            const twice = (x1 - x0) * (y2 - y0) - (x2 - x0) * (y1 - y0);
+            const depth: Plane = {
+              a:
+                ((depths[1] - depths[0]) * (y2 - y0) - (depths[2] - depths[0]) * (y1 - y0)) / twice,
+              b:
+                ((depths[2] - depths[0]) * (x1 - x0) - (depths[1] - depths[0]) * (x2 - x0)) / twice,
+              at: points[0],
+              height: depths[0],
+            };
+            for (const sign of [1, -1]) {
+              const side = {
+                a: sign * depth.a,
+                b: sign * depth.b,
+                at: depth.at,
+                height: sign * depth.height,
+              };
+              const part = clipped(points, side);
+              if (part.length < 3) continue;
+              const within = SnapIfNeededOverlayOp.intersection(
+                area,
+                factory.createPolygon(ringOf(part)),
+              );
+              if (within.isEmpty()) continue;
+              const centre = Centroid.getCentroid(within);
+              const [dx, dy] = [centre.x - side.at[0], centre.y - side.at[1]];
+              const volume = within.getArea() * (side.height + side.a * dx + side.b * dy);
+              sum[sign > 0 ? 'cut' : 'fill'] += volume / 1e9;
+            }
+          }
+          expect(volumes.cut).toBeCloseTo(sum.cut, 6);
+          expect(volumes.fill).toBeCloseTo(sum.fill, 6);
+        },
+      ),
+      { numRuns: 60 },
     );
   });
 });

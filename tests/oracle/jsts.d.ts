@@ -68,3 +68,8 @@ declare module 'jsts/org/locationtech/jts/algorithm/MinimumDiameter.js' {
     getLength(): number;
   }
 }
+declare module 'jsts/org/locationtech/jts/algorithm/Centroid.js' {
+  import type { Geometry } from 'jsts/org/locationtech/jts/geom/GeometryFactory.js';
+  const Centroid: { getCentroid(geometry: Geometry): { readonly x: number; readonly y: number } };
+  export default Centroid;
+}
