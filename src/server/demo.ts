@@ -12,6 +12,7 @@ import {
   SIDE_YARD,
 } from './demo-layouts';
 import { DEMO_FIRM, DEMO_PASSWORD, DEMO_PEOPLE, DEMO_TERMS } from './demo-people';
+import { writeDemoSiteRecord } from './demo-site';
 import { openDraft, saveDraft } from './drafts';
 import { newId } from './ids';
 import { createLayout } from './layouts';
@@ -106,6 +107,7 @@ const seed = async (db: Db): Promise<void> => {
         sure(await acceptVersion(db, client, id, { typedName, fingerprint, terms, note }));
         sure(await issueVersion(db, actor('owner'), id, { note: 'For setting out from Monday.' }));
         await sendDemoOrder(db, designer, id);
+        sure(await writeDemoSiteRecord(db, installer, id, ROUND_TERRACE));
       },
     },
   ]);

@@ -266,6 +266,8 @@ it('an installer builds without signal: what is entered is kept, sent once and i
   await again.goto('/site');
   await again.getByText('Nobody is signed in on this phone').waitFor();
   await again.getByText('One entry waits on this phone, locked.').waitFor();
+  await owner.page.goto(`/versions/${second}`);
+  await owner.page.getByTestId('courses-laid').filter({ hasText: '0 of' }).waitFor();
   await context.setOffline(false);
   await again.unroute('**/site-entries');
   await signIn(again, 'installer@larkmoss.example');
@@ -275,6 +277,9 @@ it('an installer builds without signal: what is entered is kept, sent once and i
   expect(after.entries.map(({ place, content }) => [place, content])).toEqual([
     [7, { kind: 'course', course: 1, laid: true }],
   ]);
+
+  // The office sees it come in, without loading the page anew.
+  await owner.page.getByTestId('courses-laid').filter({ hasText: '1 of' }).waitFor();
 
   // A lost connection is the browser's own complaint; there is none of ours.
   const ours = [...complaints, ...complaintsAgain].filter(

@@ -30,7 +30,7 @@ export function RefitPlan({
     (best, course) =>
       best === null || Math.abs(course.fromLaid) < Math.abs(best.fromLaid) ? course : best,
     null,
-  )?.number;
+  );
   const words = `${laid.length} courses laid, ${found.courses.length} still to lay.`;
   return (
     <FloorWindow
@@ -60,15 +60,13 @@ export function RefitPlan({
               className="stroke-graphite"
             />
           ))}
-          {found.courses.map(({ number, from, to }) => (
+          {next && (
             <path
-              key={number}
-              d={`M${place(from).join(' ')}L${place(to).join(' ')}`}
-              className={number === next ? 'fill-none stroke-line' : 'fill-none stroke-graphite'}
-              strokeWidth={number === next ? 4 : 1}
-              strokeDasharray={number === next ? undefined : '2 5'}
+              d={`M${place(next.from).join(' ')}L${place(next.to).join(' ')}`}
+              className="fill-none stroke-line"
+              strokeWidth="4"
             />
-          ))}
+          )}
         </svg>
       )}
     />

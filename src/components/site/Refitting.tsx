@@ -94,7 +94,7 @@ export function Refitting({
             <RefitPlan found={found} floor={floor} laid={laid} />
           </div>
           <p className="mt-1 text-sm text-slate">
-            Hatched: what lies. Pink: the string to pull next; dashed: those after it.
+            Hatched: what lies. Pink: the string to pull next.
           </p>
           <ul className="mt-3 space-y-2">
             {found.advice.map((words) => (

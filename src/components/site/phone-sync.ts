@@ -97,7 +97,7 @@ const nextToSend = (waiting: readonly WaitingEntry[]): readonly WaitingEntry[] =
     ({ versionId, device, content }) =>
       versionId !== first.versionId || device !== first.device || content.kind === 'photo',
   );
-  return toSend.slice(0, Math.min(ENTRIES_AT_ONCE, stop < 0 ? toSend.length : stop));
+  return stop < 0 ? toSend : toSend.slice(0, stop);
 };
 
 const sendPhoto = async (
@@ -116,20 +116,13 @@ const sendPhoto = async (
     by: person.account.id,
     caption,
   };
-  try {
-    await api<SitePhoto>(
-      'POST',
-      `/api/versions/${versionId}/site-photos?${new URLSearchParams(query)}`,
-      undefined,
-      { body: image, headers: { 'content-type': 'image/jpeg' } },
-    );
-    return { kept: [id], refused: [] };
-  } catch (error) {
-    if (error instanceof ApiError && (error.status === 413 || error.status === 422)) {
-      return { kept: [], refused: [{ id, reason: error.message }] };
-    }
-    throw error;
-  }
+  await api<SitePhoto>(
+    'POST',
+    `/api/versions/${versionId}/site-photos?${new URLSearchParams(query)}`,
+    undefined,
+    { body: image, headers: { 'content-type': 'image/jpeg' } },
+  );
+  return { kept: [id], refused: [] };
 };
 
 const sendEntries = (
@@ -150,10 +143,12 @@ const sendEntries = (
  * from the phone only once the server has answered for it; sent again after a lost answer it is kept once all the same.
  */
 export const waitingSent = async (db: PhoneStore): Promise<Heard> => {
+  // Once a batch was found to be too much or not right, entries go one by one, so that the one at fault is found.
+  let atOnce: number = ENTRIES_AT_ONCE;
   for (;;) {
     const person = await phonePerson(db);
     if (!person) return 'signed-out';
-    const next = nextToSend(await waitingEntries(db, person.who));
+    const next = nextToSend(await waitingEntries(db, person.who)).slice(0, atOnce);
     if (next.length === 0) return 'heard';
     const [{ versionId, content }] = next;
     try {
@@ -171,6 +166,12 @@ export const waitingSent = async (db: PhoneStore): Promise<Heard> => {
           db,
           next.map(({ id }) => ({ id, reason: NO_LONGER_YOURS })),
         );
+        continue;
+      }
+      if (error instanceof ApiError && (error.status === 413 || error.status === 422)) {
+        if (next.length === 1)
+          await entriesRefused(db, [{ id: next[0].id, reason: error.message }]);
+        atOnce = 1;
         continue;
       }
       const heard = heardOf(error);

@@ -78,6 +78,7 @@ const oneRound = async (): Promise<void> => {
     if (refresh) {
       heard = await packsRefreshed(store);
       if (heard === 'heard') refreshedAt = Date.now();
+      useSite.setState({ heard });
       await reread();
     }
     if (heard === 'heard') {

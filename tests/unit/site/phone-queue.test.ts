@@ -152,6 +152,26 @@ describe('what is entered on a phone', () => {
     expect((await keptPacks(store, JOSS)).map(({ versionId }) => versionId)).toEqual(['v2']);
   });
 
+  test('of which one alone is not right to the server is found, and the rest goes over', async () => {
+    await keepEntries(store, JOSS, 'v1', [course(1), course(2), course(3)]);
+    const [, bad] = await waitingEntries(store, JOSS);
+    server.meddle = (_method, _path, body) =>
+      body.includes(bad.id) ? { status: 422, body: { detail: 'Not right yet.' } } : undefined;
+    expect(await waitingSent(store)).toBe('heard');
+    expect(server.kept.map(({ place }) => place)).toEqual([1, 3]);
+    expect(await waitingEntries(store, JOSS)).toMatchObject([
+      { id: bad.id, refused: 'Not right yet.' },
+    ]);
+  });
+
+  test('that is too much at once goes over one by one', async () => {
+    await keepEntries(store, JOSS, 'v1', [course(1), course(2), course(3)]);
+    server.meddle = (_method, _path, body) =>
+      body.split('"kind"').length > 2 ? { status: 413, body: { detail: 'Over 1 MB.' } } : undefined;
+    expect(await waitingSent(store)).toBe('heard');
+    expect(server.kept.map(({ place }) => place)).toEqual([1, 2, 3]);
+  });
+
   test('an error of the server’s leaves everything waiting', async () => {
     await keepEntries(store, JOSS, 'v1', [course(1)]);
     server.meddle = () => ({ status: 500, body: { detail: 'Broken' } });

@@ -42,7 +42,7 @@ export class FakeServer {
   readonly asked: string[] = [];
   photos = new Map<string, number>();
   /** Says what becomes of a request before it is answered; undefined lets it be answered. */
-  meddle: (method: string, path: string) => Answer | undefined = () => undefined;
+  meddle: (method: string, path: string, body: string) => Answer | undefined = () => undefined;
 
   readonly key = (id: string) =>
     Buffer.from(id.padEnd(32, '.').slice(0, 32), 'utf8').toString('base64');
@@ -50,7 +50,7 @@ export class FakeServer {
   fetch = async (url: string | URL | Request, init: RequestInit = {}): Promise<Response> => {
     const [method, path] = [init.method ?? 'GET', String(url)];
     this.asked.push(`${method} ${path.split('?')[0]}`);
-    const meddled = this.meddle(method, path);
+    const meddled = this.meddle(method, path, typeof init.body === 'string' ? init.body : '');
     if (meddled === 'no-signal') throw new TypeError('Failed to fetch');
     if (meddled && meddled !== 'lost') return this.response(meddled.status, meddled.body);
     const answer = this.answer(method, path, init);
