@@ -258,7 +258,7 @@ describe('ten thousand items', () => {
       ).join('\n')}`;
     expect((await imported(firm, 'take', csv(10))).body).toMatchObject({ taken: true, added: COUNT }); // prettier-ignore
     expect((await imported(firm, 'take', csv(25))).body).toMatchObject({ taken: true, changed: COUNT }); // prettier-ignore
-  });
+  }, 120_000);
 
   test('are paged by key, none twice and none left out, and found by beginnings of words', async () => {
     const names = (await everything(firm)).map(({ name }) => name);

@@ -37,7 +37,7 @@ describe('orders of a version', () => {
   test('are parted by supplier, with the take-off’s packs, and what nobody sells is named', async () => {
     const office = await newPricedOffice();
     const { orders, unsupplied, version } = await ordered(office);
-    expect(orders.map(({ supplier }) => supplier.name).sort()).toEqual(['Quennock Stone', 'Over Pit']); // prettier-ignore
+    expect(orders.map(({ supplier }) => supplier.name).sort()).toEqual(['Over Pit', 'Quennock Stone']); // prettier-ignore
     const { takeOff } = (await office.owner.visitor.get(`/api/versions/${version}/pricing`)).body;
     const wanted = takeOff.orders.find(({ kind }: { kind: string }) => kind === 'unit');
     expect(ofStone({ orders, unsupplied })).toMatchObject({

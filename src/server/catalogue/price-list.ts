@@ -1,4 +1,4 @@
-import { and, asc, eq, inArray, isNull, or } from 'drizzle-orm';
+import { and, asc, eq, inArray, isNull } from 'drizzle-orm';
 import { catalogueItems } from '@/db/schema';
 import type { PriceItem, PriceList } from '@/takeoff/price-list';
 import type { Db } from '../database';
@@ -31,25 +31,26 @@ const priceItem = ({ item, supplierName, price }: ItemRow): PriceItem | null =>
   };
 
 /**
- * What the catalogue asked on a day: what it offers, and of what is retired the items named, since a floor may
+ * What the catalogue asked on a day for all that it offers, or for the items named alone, retired ones too, since a floor may
  * have been drawn with them. Items that had no price yet are left out.
  */
 export const priceListOn = async (
   db: Db,
   firmId: string,
   day: string,
-  named: readonly string[] = [],
+  named?: readonly string[],
 ): Promise<PriceList> => {
-  const rows = await itemsOn(db, day)
-    .where(
-      and(
-        eq(catalogueItems.firmId, firmId),
-        named.length === 0
-          ? isNull(catalogueItems.retiredAt)
-          : or(isNull(catalogueItems.retiredAt), inArray(catalogueItems.id, [...named])),
-      ),
-    )
-    .orderBy(asc(catalogueItems.id));
+  const rows =
+    named?.length === 0
+      ? []
+      : await itemsOn(db, day)
+          .where(
+            and(
+              eq(catalogueItems.firmId, firmId),
+              named ? inArray(catalogueItems.id, [...named]) : isNull(catalogueItems.retiredAt),
+            ),
+          )
+          .orderBy(asc(catalogueItems.id));
   return {
     currency: await currencyOf(db, firmId),
     on: day,
