@@ -165,7 +165,14 @@ export function paintLevelMarks(ink: Ink, state: TableState, floor: Floor) {
   const figure = (text: string, places: readonly Point[], style: FigureStyle) => {
     ctx.font = `${style.weight} 12.5px ${FONT}`;
     const half: Point = [ctx.measureText(text).width / 2 + 5, 9];
-    const at = places.find((place) => !taken.some((box) => overlaps(box, { at: place, half })));
+    const inWindow = ([x, y]: Point) =>
+      x >= half[0] &&
+      x <= ink.size.width - half[0] &&
+      y >= half[1] &&
+      y <= ink.size.height - half[1];
+    const at = places.find(
+      (place) => inWindow(place) && !taken.some((box) => overlaps(box, { at: place, half })),
+    );
     if (!at && !style.always) return;
     taken.push({ at: at ?? places[0], half });
     boxedText(ink, text, at ?? places[0], 0, style.colour, style.weight);
