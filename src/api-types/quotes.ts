@@ -90,11 +90,16 @@ export type QuoteChange = z.input<typeof quoteChangeSchema>;
 
 /**
  * POST /api/quotes/{id}/send: numbers and freezes it, shows its totals to the project’s clients and writes to them with the quote as
- * a PDF. 200 → `QuoteDetail`; 409 when it was changed since `revision`, is sent already, or the version is not shared yet.
+ * a PDF. 200 → `QuoteSent`; 409 when it was changed since `revision`, is sent already, or the version is not shared yet.
  */
 export const quoteSendSchema = z.object({
   revision: z.number({ error: 'names no revision' }).int().min(1),
 });
+
+export interface QuoteSent extends QuoteDetail {
+  /** Clients to whom it was written: none where no client is on the project, or none of them wants letters. */
+  readonly written: number;
+}
 
 /** Who a quote or order comes from, as it stood when it was sent. */
 export interface FirmOnPaper {

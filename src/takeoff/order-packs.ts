@@ -124,7 +124,8 @@ const SYMBOLS = new Set(['t', 'm', 'm²', 'm³']);
 /** Packs whose name says what they hold. */
 const MEASURES = new Set([...SYMBOLS, 'cubic yard', 'short ton', 'foot', 'square foot']);
 
-function plural(name: string, amount: number): string {
+/** A pack's name for so many: `pallets`, `t`, `square feet`. */
+export function packPlural(name: string, amount: number): string {
   if (amount === 1 || SYMBOLS.has(name)) return name;
   if (name === 'foot') return 'feet';
   if (name === 'square foot') return 'square feet';
@@ -137,7 +138,7 @@ export function packWords(amount: number, pack: Pack, display: Display): string 
   const gap = SYMBOLS.has(pack.name) ? '\u202f' : ' ';
   const bare =
     MEASURES.has(pack.name) || (pack.holds === 1 && (pack.measure === 'each' || !pack.whole));
-  return `${figure}${gap}${plural(pack.name, amount)}${bare ? '' : ` of ${holdsWords(pack, display)}`}`;
+  return `${figure}${gap}${packPlural(pack.name, amount)}${bare ? '' : ` of ${holdsWords(pack, display)}`}`;
 }
 
 /** So many packs for what is needed, both in the pack's measure: whole packs, or to a tenth, never less. */

@@ -3,7 +3,7 @@ import { describe, expect, test } from 'vitest';
 import type { QuoteDetail, VersionQuotes } from '@/api-types/quotes';
 import { openQuotePdf } from '@/server/quotes/quote-paper';
 import { pdfTexts } from '../unit/pdf/pdf-reading';
-import { moved, newVersion, type Signed } from './firm';
+import { moved, newFirm, newProject, newVersion, type Signed } from './firm';
 import { lettersTo } from './letters-to';
 import { letters } from './office';
 import { newPricedOffice, pricedCourt, sharedVersion, type PricedOffice } from './priced-office';
@@ -152,7 +152,7 @@ describe('a quote', () => {
     const { designer, owner, client } = office;
     const version = await sharedVersion(office);
     const first = await sent(office, version);
-    expect(first).toMatchObject({ state: 'sent', number: 'Q-0001' });
+    expect(first).toMatchObject({ state: 'sent', number: 'Q-0001', written: 1 });
     const again = await designer.visitor.post(`/api/quotes/${first.id}/send`, { revision: first.revision }); // prettier-ignore
     expect(again.status).toBe(409);
     for (const [method, path, body] of [
@@ -193,6 +193,30 @@ describe('a quote', () => {
       true,
     ]);
     await expect((await db()).execute(sql`delete from quotes where state = 'sent'`)).rejects.toMatchObject({ cause: { message: expect.stringMatching(/never altered/) } }); // prettier-ignore
+  });
+
+  test('that nobody is written to says so', async () => {
+    const office = await newPricedOffice();
+    const { id } = await newVersion(office.designer.visitor, office.layoutId);
+    await office.designer.visitor.post(`/api/versions/${id}/share`);
+    await office.owner.visitor.post(`/api/projects/${office.projectId}/people/remove`, {
+      personId: office.client.actor.personId,
+    });
+    expect(await sent(office, id)).toMatchObject({ state: 'sent', written: 0 });
+    expect((await letters(office.owner.actor.firmId, 'quote-sent')).length).toBe(0);
+  });
+
+  test('that is being written holds the currency', async () => {
+    const firm = await newFirm();
+    const { layoutId } = await newProject(firm.visitor);
+    const version = await newVersion(firm.visitor, layoutId);
+    const quote = (await firm.visitor.post(`/api/versions/${version.id}/quotes`)).body;
+    const change = { revision: 0, currency: 'JPY' };
+    const held = await firm.visitor.patch('/api/firm/pricing', change);
+    expect(held).toMatchObject({ status: 422, body: { errors: [{ path: ['currency'] }] } });
+    await firm.visitor.call('DELETE', `/api/quotes/${quote.id}`);
+    const free = await firm.visitor.patch('/api/firm/pricing', change);
+    expect(free).toMatchObject({ status: 200, body: { currency: 'JPY' } });
   });
 
   test('numbers have no gaps and are given once, however many are sent at a time', async () => {

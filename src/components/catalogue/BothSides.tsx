@@ -1,6 +1,7 @@
 import { useEffect, useRef } from 'react';
 import type { CatalogueItem, ItemFields } from '@/api-types/catalogue';
 import type { Supplier } from '@/api-types/suppliers';
+import { dayText } from '@/takeoff/day-text';
 import { formatMoney } from '@/takeoff/money';
 import { FIELD_WORDS } from './catalogue-words';
 import type { ItemSent } from './ItemForm';
@@ -36,8 +37,8 @@ export function BothSides({
     const { price } = current;
     rows.push([
       'Price',
-      price ? `${formatMoney(price.costMinor, currency)} from ${price.from}` : 'nothing',
-      `${formatMoney(sent.price.costMinor, currency)} from ${sent.price.from}`,
+      price ? `${formatMoney(price.costMinor, currency)} from ${dayText(price.from)}` : 'nothing',
+      `${formatMoney(sent.price.costMinor, currency)} from ${dayText(sent.price.from)}`,
     ]);
   }
   return (

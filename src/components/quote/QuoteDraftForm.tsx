@@ -1,7 +1,13 @@
 import { useMutation } from '@tanstack/react-query';
 import { Plus, X } from 'lucide-react';
 import { useId, useState } from 'react';
-import type { QuoteDetail, QuoteDraft, QuoteDraftLine, QuoteGroup } from '@/api-types/quotes';
+import type {
+  QuoteDetail,
+  QuoteDraft,
+  QuoteDraftLine,
+  QuoteGroup,
+  QuoteSent,
+} from '@/api-types/quotes';
 import { dayText } from '@/takeoff/day-text';
 import { formatMoney } from '@/takeoff/money';
 import { api, type ApiError } from '../ui/api';
@@ -12,7 +18,7 @@ import { useSavedDraft } from './use-saved-draft';
 export const GROUP_WORDS: Readonly<Record<QuoteGroup, string>> = {
   materials: 'Materials',
   labour: 'Work',
-  other: 'Besides',
+  other: 'Other',
 };
 
 interface Props {
@@ -34,11 +40,15 @@ export function QuoteDraftForm({ quote: first, shared, onSent, onDropped }: Prop
   const lines = (next: readonly QuoteDraftLine[]) => draft.change({ lines: [...next] });
   const line = (id: string, part: Partial<QuoteDraftLine>) =>
     lines(now.lines.map((own) => (own.id === id ? { ...own, ...part } : own)));
-  const send = useMutation<QuoteDetail, ApiError>({
+  const send = useMutation<QuoteSent, ApiError>({
     networkMode: 'always',
     mutationFn: () => api('POST', `/api/quotes/${saved.id}/send`, { revision: saved.revision }),
-    onSuccess: ({ number }) =>
-      onSent(`Quote ${number} is sent. Its clients see the total, and have it by e-mail as a PDF.`),
+    onSuccess: ({ number, written }) =>
+      onSent(
+        written > 0
+          ? `Quote ${number} is sent. Its clients see the total, and have it by e-mail as a PDF.`
+          : `Quote ${number} is numbered and kept, but no letter went out: no client on this project gets letters. Put the client on the project, or hand the PDF over yourself.`,
+      ),
   });
   const drop = useMutation<unknown, ApiError>({
     networkMode: 'always',
@@ -220,7 +230,7 @@ function Group({
     onAdd({
       id: `own:${crypto.randomUUID()}`,
       group,
-      name: group === 'labour' ? 'Labour' : 'Something besides',
+      name: group === 'labour' ? 'Labour' : 'Something else',
       amount: 1,
       measure: group === 'labour' ? 'hours' : 'each',
       costMinor: null,

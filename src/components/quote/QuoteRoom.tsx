@@ -280,8 +280,8 @@ function Orders({
       )}
       {unsupplied.length > 0 && (
         <p className="mt-3 text-slate">
-          No supplier of the catalogue sells {unsupplied.join(', ')}. Take what it is from the
-          catalogue on the drafting table, or buy it besides.
+          Without a supplier in your catalogue: {unsupplied.join(', ')}. Choose an item of the
+          catalogue on the drafting table and save another version, or buy it separately.
         </p>
       )}
       {orders.length > 0 && (

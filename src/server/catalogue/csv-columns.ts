@@ -47,6 +47,7 @@ const numberRead = (cell: string): Cell => {
       `“${cell}” could be ${plain.replace(/,/g, '')} or ${plain.replace(',', '.')}. Write it without a comma.`,
     );
   }
+  if (/^[-−]\d/.test(plain)) return wrong(`“${cell}” is below nothing. Write one such as 12.5.`);
   const number = Number(plain.replace(/^(\d*),(\d+)$/, '$1.$2'));
   return /^\d*[.,]?\d+([eE][-+]?\d+)?$|^\d+[.,]$/.test(plain) && Number.isFinite(number)
     ? value(number)
@@ -56,6 +57,26 @@ const numberRead = (cell: string): Cell => {
 const lengthRead = (cell: string): Cell => {
   const parsed = parseLength(cell, 'metric');
   return parsed.ok ? value(parsed.mm) : wrong(`“${cell}” is not a length. ${parsed.message}`);
+};
+
+const isoDay = (year: string, month: string, day: string) =>
+  `${year}-${month.padStart(2, '0')}-${day.padStart(2, '0')}`;
+
+/**
+ * A day as it is exported, or as a spreadsheet writes it anew on saving: with points the day comes first
+ * everywhere; with slashes that hangs on the country, so where both could be meant it is asked for.
+ */
+const dayRead = (cell: string): Cell => {
+  const pointed = /^(\d{1,2})\.(\d{1,2})\.(\d{4})$/.exec(cell);
+  if (pointed) return value(isoDay(pointed[3], pointed[2], pointed[1]));
+  const slashed = /^(\d{1,2})\/(\d{1,2})\/(\d{4})$/.exec(cell);
+  if (!slashed) return value(cell);
+  const [first, second, year] = slashed.slice(1);
+  if (Number(second) > 12) return value(isoDay(year, first, second));
+  if (Number(first) > 12 || first === second) return value(isoDay(year, second, first));
+  return wrong(
+    `“${cell}” could be ${isoDay(year, second, first)} or ${isoDay(year, first, second)}. Write it like one of these.`,
+  );
 };
 
 const YES = ['yes', 'y', 'true', '1', 'whole', 'x'];
@@ -135,7 +156,7 @@ export const COLUMNS: readonly Column[] = [
     also: ['from', 'valid from'],
     field: 'from',
     empty: null,
-    read: (cell) => value(cell),
+    read: dayRead,
     write: (row) => row.price?.from ?? '',
   },
   { heading: 'Length', also: ['length mm'], ...number('length', lengthRead) },

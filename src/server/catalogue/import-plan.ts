@@ -6,6 +6,7 @@ import {
   type ImportRow,
   type ItemFields,
 } from '@/api-types/catalogue';
+import { dayText } from '@/takeoff/day-text';
 import { formatMoney } from '@/takeoff/money';
 import { COLUMNS, type Field } from './csv-columns';
 import type { ReadRow } from './csv-reading';
@@ -195,6 +196,8 @@ const changesOf = (
       ? []
       : ['Supplier']),
     ...(retired === item.retired ? [] : [retired ? 'Retired' : 'Offered again']),
-    ...(price ? [`Price ${formatMoney(price.costMinor, currency)} from ${price.from}`] : []),
+    ...(price
+      ? [`Price ${formatMoney(price.costMinor, currency)} from ${dayText(price.from)}`]
+      : []),
   ];
 };

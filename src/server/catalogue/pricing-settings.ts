@@ -1,7 +1,7 @@
-import { eq } from 'drizzle-orm';
+import { and, eq } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { FirmPricing, firmPricingChangeSchema } from '@/api-types/pricing';
-import { cataloguePrices, firmPricing } from '@/db/schema';
+import { cataloguePrices, firmPricing, quotes } from '@/db/schema';
 import { recordAudit } from '../audit';
 import type { Db } from '../database';
 import { changedMeanwhile, done, invalid, type Outcome } from '../outcomes';
@@ -51,6 +51,16 @@ const hasPrices = async (db: Db, firmId: string): Promise<boolean> =>
       .limit(1)
   ).length > 0;
 
+/** Whether a quote is being written, whose costs are in the currency of today. */
+const hasDraftQuotes = async (db: Db, firmId: string): Promise<boolean> =>
+  (
+    await db
+      .select({ id: quotes.id })
+      .from(quotes)
+      .where(and(eq(quotes.firmId, firmId), eq(quotes.state, 'draft')))
+      .limit(1)
+  ).length > 0;
+
 const settingsOf = async (db: Db, firmId: string): Promise<FirmPricing> => ({
   ...(await pricingOf(db, firmId)),
   currencyOpen: !(await hasPrices(db, firmId)),
@@ -88,6 +98,14 @@ export const changePricing = async (
           },
         ],
       );
+    }
+    if (after.currency !== before.currency && (await hasDraftQuotes(tx, actor.firmId))) {
+      return invalid(`A quote in ${before.currency} is being written and would mean another sum.`, [
+        {
+          path: ['currency'],
+          message: `A quote is being written in ${before.currency}. Send it or throw it away first`,
+        },
+      ]);
     }
     await tx
       .insert(firmPricing)

@@ -2,6 +2,7 @@ import type { QuoteDraft, QuoteDraftLine } from '@/api-types/quotes';
 import type { FirmPricing } from '@/api-types/pricing';
 import type { Report } from '@/paving/report';
 import { PLAIN_ROUNDING } from '@/takeoff/money';
+import { packPlural } from '@/takeoff/order-packs';
 import { labourLine, quoteOf, type Quote } from '@/takeoff/quote';
 import type { TakeOff } from '@/takeoff/take-off';
 
@@ -27,7 +28,7 @@ export const firstDraft = (taken: TakeOff, report: Report, settings: Settings): 
       group: 'materials' as const,
       name,
       amount,
-      measure: pack.name,
+      measure: packPlural(pack.name, amount),
       costMinor: packCostMinor,
     })),
     ...labour(

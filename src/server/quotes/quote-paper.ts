@@ -14,7 +14,7 @@ import { openQuote } from './quotes';
 const GROUP_NAMES: Readonly<Record<QuoteGroup, string>> = {
   materials: 'Materials',
   labour: 'Work',
-  other: 'Besides',
+  other: 'Other',
 };
 
 /** What the client reads of a quote: each group's lines and sum. Lines of nothing are left out. */

@@ -1,5 +1,5 @@
 import { and, eq } from 'drizzle-orm';
-import type { QuoteDetail, SentQuote } from '@/api-types/quotes';
+import type { QuoteSent, SentQuote } from '@/api-types/quotes';
 import { quotes } from '@/db/schema';
 import { formatMoney } from '@/takeoff/money';
 import { dayText } from '@/takeoff/day-text';
@@ -45,13 +45,13 @@ export const sendQuote = async (
   actor: Actor,
   id: string,
   { revision }: { readonly revision: number },
-): Promise<Outcome<QuoteDetail>> => {
+): Promise<Outcome<QuoteSent>> => {
   const found = await pricedQuote(db, actor, id);
   if (!found.ok) return found;
   const { version } = found.value;
   // Read in beforehand: the transaction is not to wait for it.
   await nodePdfMeans();
-  const outcome = await db.transaction(async (tx): Promise<Outcome<null>> => {
+  const outcome = await db.transaction(async (tx): Promise<Outcome<number>> => {
     const locked = await lockedDraft(tx, actor, id, revision);
     if (!locked.ok) return locked;
     if (version.state === 'saved') {
@@ -103,20 +103,24 @@ export const sendQuote = async (
       'application/pdf',
       await quotePdf(sent),
     );
-    for (const onlooker of await onlookersOf(tx, version, actor.personId)) {
-      if (onlooker.role !== 'client' || !onlooker.mailSteps) continue;
+    const readers = (await onlookersOf(tx, version, actor.personId)).filter(
+      ({ role, mailSteps }) => role === 'client' && mailSteps,
+    );
+    for (const reader of readers) {
       await postLetter(
         tx,
         {
-          to: onlooker.email,
+          to: reader.email,
           firmId: actor.firmId,
           attachments: [pdf],
           ...(sent.firm.email ? { replyTo: sent.firm.email } : {}),
         },
-        letterOf(sent, version, onlooker.name),
+        letterOf(sent, version, reader.name),
       );
     }
-    return done(null);
+    return done(readers.length);
   });
-  return outcome.ok ? openQuote(db, actor, id) : outcome;
+  if (!outcome.ok) return outcome;
+  const quote = await openQuote(db, actor, id);
+  return quote.ok ? done({ ...quote.value, written: outcome.value }) : quote;
 };

@@ -51,6 +51,34 @@ const planned = (csv: string, catalogue = known()) => {
 };
 
 describe('a file that can be read', () => {
+  test.each([
+    ['2026-03-13', '2026-03-13'],
+    ['13.3.2026', '2026-03-13'],
+    ['13/03/2026', '2026-03-13'],
+    ['3/13/2026', '2026-03-13'],
+    ['04/04/2026', '2026-04-04'],
+  ])('knows the day %s as a spreadsheet saves it anew', (cell, from) => {
+    const { items, problems } = planned(
+      `Kind,Name,Price,Price from,Length,Width,Thickness\nunit,Kerb,2,${cell},300,100,60\n`,
+    );
+    expect(problems).toEqual([]);
+    expect(items[0].price).toEqual({ costMinor: 200, from });
+  });
+
+  test('asks for a day that could be two, and says of a number below nothing that it is', () => {
+    const { problems } = planned(
+      'Kind,Name,Pack holds,Price,Price from\nsundry,Pegs,1,2,01/12/2026\nsundry,String,-3,2,\n',
+    );
+    expect(problems).toEqual([
+      {
+        line: 2,
+        column: 'Price from',
+        message: '“01/12/2026” could be 2026-12-01 or 2026-01-12. Write it like one of these.',
+      },
+      { line: 3, column: 'Pack holds', message: '“-3” is below nothing. Write one such as 12.5.' },
+    ]);
+  });
+
   test('adds what is new and changes what is there, known by its name and supplier', () => {
     const { items, problems, newSuppliers } = planned(
       [
@@ -65,7 +93,7 @@ describe('a file that can be read', () => {
     expect(items[0]).toMatchObject({
       known: { id: 'item1' },
       price: { costMinor: 41_550, from: '2026-03-01' },
-      row: { line: 2, changes: ['Name', 'Price £415.50 from 2026-03-01'] },
+      row: { line: 2, changes: ['Name', 'Price £415.50 from 1 March 2026'] },
     });
     expect(items[1]).toMatchObject({
       known: null,
