@@ -4,7 +4,7 @@ import { floorReport } from '@/paving/report';
 import { formatWorkedVolume } from '@/takeoff/measures';
 import { takeOff } from '@/takeoff/take-off';
 import { PLAIN_AGGREGATE } from '../ui/drawing-colours';
-import { COURT } from './sample-floors';
+import { SLOPING_COURT } from './level-pictures';
 
 /** One thing that the guide's court takes: its volume as it lies and loose, and what is ordered for it. */
 export interface OrderBar {
@@ -16,12 +16,12 @@ export interface OrderBar {
   readonly fill: string;
 }
 
-/** The court laid as a chequer, so that it has voids as well as a margin. */
+/** The court of the level map laid as a chequer, so that it has voids as well as a margin. */
 const CHEQUER: LayoutDocument = {
-  ...COURT,
-  bond: { kind: 'chequer', unit: COURT.units[0].id, joint: 5 },
+  ...SLOPING_COURT,
+  bond: { kind: 'chequer', unit: SLOPING_COURT.units[0].id, joint: 5 },
   aggregate: { name: 'Grey chippings', colour: PLAIN_AGGREGATE },
-  buildUp: { use: 'foot', frost: false, bedding: 25, base: 100, geotextile: false, overdig: 0 },
+  buildUp: { ...SLOPING_COURT.buildUp!, geotextile: false },
 };
 
 let made: readonly OrderBar[] | null = null;
