@@ -1,5 +1,5 @@
 import { Check, ChevronDown } from 'lucide-react';
-import { useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import type { PersonName } from '@/api-types/people';
 import type { Course } from '@/paving/set-out/set-out';
 import type { RecordedEntry } from '@/paving/site/site-record';
@@ -21,6 +21,15 @@ export function CoursesTab({ kept, floor, record, display }: TabProps) {
     setSeen(next);
     if (open === seen) setOpen(next);
   }
+  const list = useRef<HTMLOListElement>(null);
+  const first = useRef(true);
+  // The live course is in view when the string is come to, and when it goes on to the next.
+  useEffect(() => {
+    const live = list.current?.querySelector('[data-live=true]');
+    const far = first.current && next !== null && next > 3;
+    live?.scrollIntoView({ block: far ? 'center' : 'nearest' });
+    first.current = false;
+  }, [next]);
   const tick = (numbers: readonly number[], laid: boolean) =>
     void enter(
       kept.versionId,
@@ -39,7 +48,7 @@ export function CoursesTab({ kept, floor, record, display }: TabProps) {
       <p className="text-slate">
         {units(laid)} of {units(courses)} units. Tick a course once it is down and checked.
       </p>
-      <ol className="relative mt-3">
+      <ol ref={list} className="relative mt-3">
         {courses.map((course) => (
           <CourseRow
             key={course.number}
@@ -94,7 +103,12 @@ function CourseRow({
 }) {
   const laid = entry !== undefined;
   return (
-    <li className="relative border-b border-stone-300" data-testid="course" data-laid={laid}>
+    <li
+      className="relative scroll-mb-20 border-b border-stone-300"
+      data-testid="course"
+      data-laid={laid}
+      data-live={live}
+    >
       <span
         aria-hidden="true"
         className={`absolute top-0 bottom-0 left-[6px] border-l ${live ? 'border-line' : 'border-slate'}`}

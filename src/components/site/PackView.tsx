@@ -78,7 +78,7 @@ export function PackView({ kept, person }: { kept: KeptPack; person: PhonePerson
           </div>
           <button
             type="button"
-            className="button button-quiet shrink-0"
+            className="button button-quiet min-w-14 shrink-0"
             aria-label={display === 'metric' ? 'Show feet and inches' : 'Show millimetres'}
             onClick={switchDisplay}
           >

@@ -29,7 +29,10 @@ export function SiteList({ person, packs, asked }: Props) {
   return (
     <>
       <header className="flex min-h-[52px] items-center justify-between border-b border-graphite px-4">
-        <a className="flex items-center gap-2 py-2 text-lg font-bold no-underline" href="/projects">
+        <a
+          className="flex min-h-11 items-center gap-2 text-lg font-bold no-underline"
+          href="/projects"
+        >
           <Mark size={26} />
           On site
         </a>
@@ -84,12 +87,13 @@ export function SiteList({ person, packs, asked }: Props) {
         )}
         <p className="mt-8 border-t border-stone-300 pt-3 text-sm text-slate">
           Signing out takes every plan off this phone. What is not sent yet stays on it, locked,
-          until you sign in again.{' '}
-          <a className="link" href="/account">
+          until you sign in again.
+        </p>
+        <p className="flex gap-6">
+          <a className="link flex min-h-11 items-center" href="/account">
             Your account
-          </a>{' '}
-          ·{' '}
-          <a className="link" href="/guide/on-site">
+          </a>
+          <a className="link flex min-h-11 items-center" href="/guide/on-site">
             Guide
           </a>
         </p>
