@@ -1,3 +1,5 @@
+import type { Unit } from '@/paving/layout-document';
+
 /**
  * What the firm's catalogue asks for the things that floors take, as of one day. A saved version
  * freezes the list that it was priced with. Money is whole minor units of the currency (cents,
@@ -32,6 +34,8 @@ export interface PriceItem {
   readonly looseDensity: number | null;
   /** Smallest and largest stone, mm; null for what is no aggregate. */
   readonly stone: readonly [number, number] | null;
+  /** Length, width and thickness of a unit, mm; left out where the catalogue does not give all three. */
+  readonly size?: readonly [number, number, number];
 }
 
 export interface PriceList {
@@ -40,4 +44,20 @@ export interface PriceList {
   /** The day that it was drawn up for, `2026-03-01`. */
   readonly on: string;
   readonly items: readonly PriceItem[];
+}
+
+/** Sides this near to each other, mm, are the same: inches and millimetres of one stone differ by rounding. */
+const SAME_SIDE_MM = 2;
+
+/** Whether an entry is the unit that a floor lays, either side of it first; an entry without a size may be. */
+export function itemFits(
+  { size }: Pick<PriceItem, 'size'>,
+  { length, width, thickness }: Pick<Unit, 'length' | 'width' | 'thickness'>,
+): boolean {
+  if (!size) return true;
+  const [long, short, thick] = size;
+  const near = (a: number, b: number) => Math.abs(a - b) <= SAME_SIDE_MM;
+  const face =
+    (near(long, length) && near(short, width)) || (near(long, width) && near(short, length));
+  return face && near(thick, thickness);
 }

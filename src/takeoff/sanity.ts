@@ -3,12 +3,12 @@ import type { FillParts } from '@/paving/fill-parts';
 import type { Laying } from '@/paving/laying';
 import { formatLength } from '@/paving/length';
 import type { Report } from '@/paving/report';
-import { formatStone, type ChosenMaterial } from './chosen-material';
+import { formatStone, priceItem, type ChosenMaterial } from './chosen-material';
 import type { EarthVolumes } from './earth-volumes';
 import type { FillPlace } from './fill-lines';
 import { MATERIAL_DEFAULTS } from './material-kinds';
 import { formatMass } from './measures';
-import type { PriceList } from './price-list';
+import { itemFits, type PriceList } from './price-list';
 import type { OrderLine, TakeOffLine, TakeOffWarning } from './take-off-line';
 import { bondUnits, unitMass } from './unit-lines';
 
@@ -135,6 +135,26 @@ function materialWarnings({ materials, parts, lines }: Looked): TakeOffWarning[]
   return warnings;
 }
 
+/** Units priced by an entry of the catalogue that is another size. */
+function sizeWarnings({ laying, prices }: Looked): TakeOffWarning[] {
+  const { display } = laying.document;
+  const sides = (lengths: readonly number[]) =>
+    lengths.map((mm) => formatLength(mm, display, { decimals: 1 })).join(' × ');
+  return bondUnits(laying).flatMap((unit): TakeOffWarning[] => {
+    const item = priceItem(prices, unit.catalogueId);
+    if (!item?.size || itemFits(item, unit)) return [];
+    return [
+      {
+        id: `other-size:${unit.id}`,
+        weight: 'wrong',
+        words: `${unit.name} is priced as ${item.name}, which the catalogue has as ${sides(item.size)}. The floor lays ${sides([unit.length, unit.width, unit.thickness])}: choose an entry of that size.`,
+        source: null,
+        line: `units:${unit.id}:first-tone`,
+      },
+    ];
+  });
+}
+
 /** What hurts people. */
 function peopleWarnings({ laying, parts, orders, prices }: Looked): TakeOffWarning[] {
   const { document } = laying;
@@ -233,6 +253,7 @@ function openWarnings({ laying, parts, earth, report }: Looked): TakeOffWarning[
 export function takeOffWarnings(looked: Looked): TakeOffWarning[] {
   const order = { wrong: 0, look: 1, caution: 2 };
   return [
+    ...sizeWarnings(looked),
     ...stoneWarnings(looked),
     ...materialWarnings(looked),
     ...openWarnings(looked),

@@ -361,6 +361,36 @@ describe('with the firm’s prices', () => {
   const priced = (prices: PriceList, parts: Partial<LayoutDocument> = {}) =>
     takenOff(court({ units: [{ ...unitOf('a', 300), catalogueId: 'slab' }], ...parts }), prices);
 
+  it('an entry of another size than the unit is said, the same stone either way round is not', () => {
+    const { thickness } = unitOf('a', 300);
+    const unit = { ...unitOf('a', 300), width: 200, catalogueId: 'slab' };
+    const idsWith = (size?: readonly [number, number, number]) =>
+      warned(
+        priced(
+          {
+            currency: 'EUR',
+            on: '2026-03-01',
+            items: [
+              item({
+                id: 'slab',
+                kind: 'unit',
+                pack: { name: 'each', holds: 1, measure: 'each', whole: true },
+                costMinor: 400,
+                ...(size ? { size } : {}),
+              }),
+            ],
+          },
+          { units: [unit] },
+        ),
+      );
+    expect(idsWith([600, 200, thickness])).toContain('other-size:a');
+    expect(idsWith([300, 200, thickness + 20])).toContain('other-size:a');
+    // 8 in are 203.2 mm, which is no 200; 11 13/16 in are 300.04 mm, which is 300.
+    expect(idsWith([300, 203.2, thickness])).toContain('other-size:a');
+    for (const same of [undefined, [200, 300, thickness], [300.04, 200, thickness]] as const)
+      expect(idsWith(same)).not.toContain('other-size:a');
+  });
+
   it('units come in whole packs: 114 are 5 pallets of 24', () => {
     const found = priced(list(slab()));
     expect(orderOf(found, 'units:a:first-tone')).toMatchObject({

@@ -28,6 +28,9 @@ const priceItem = ({ item, supplierName, price }: ItemRow): PriceItem | null =>
       item.stoneLeast !== null && item.stoneGreatest !== null
         ? [item.stoneLeast, item.stoneGreatest]
         : null,
+    ...(item.length !== null && item.width !== null && item.thickness !== null
+      ? { size: [item.length, item.width, item.thickness] as const }
+      : {}),
   };
 
 /**

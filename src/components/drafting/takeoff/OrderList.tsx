@@ -3,7 +3,7 @@ import { orderItemSet, orderWaySet } from '@/takeoff/assumption-edits';
 import { dayText } from '@/takeoff/day-text';
 import { formatMass } from '@/takeoff/measures';
 import { formatMoney } from '@/takeoff/money';
-import type { PriceList } from '@/takeoff/price-list';
+import { itemFits, type PriceItem, type PriceList } from '@/takeoff/price-list';
 import type { OrderLine, TakeOff } from '@/takeoff/take-off';
 import { useTable, useTableStore } from '../table-context';
 import { AssumptionRow } from './AssumptionRow';
@@ -32,7 +32,12 @@ function Order({
 }) {
   const table = useTableStore();
   const display = useTable((state) => state.document.display);
-  const offered = prices?.items.filter(({ kind }) => kind === order.kind) ?? [];
+  const units = useTable((state) => state.document.units);
+  const unitId = /^units:(.*):[^:]*$/.exec(order.id)?.[1];
+  const unit = units.find(({ id }) => id === unitId);
+  // What is another size is no choice; what was chosen stays in the list, to be seen and left.
+  const fits = (item: PriceItem) => !unit || item.id === order.item?.id || itemFits(item, unit);
+  const offered = prices?.items.filter((item) => item.kind === order.kind && fits(item)) ?? [];
   const cost =
     currency === null || prices?.items.length === 0
       ? null
