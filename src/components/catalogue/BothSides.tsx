@@ -1,16 +1,27 @@
 import { useEffect, useRef } from 'react';
 import type { CatalogueItem, ItemFields } from '@/api-types/catalogue';
 import type { Supplier } from '@/api-types/suppliers';
+import { formatLength, type Display } from '@/paving/length';
 import { dayText } from '@/takeoff/day-text';
 import { formatMoney } from '@/takeoff/money';
 import { FIELD_WORDS } from './catalogue-words';
 import type { ItemSent } from './ItemForm';
+
+const LENGTHS: ReadonlySet<keyof ItemFields> = new Set([
+  'length',
+  'width',
+  'thickness',
+  'tolerance',
+  'stoneLeast',
+  'stoneGreatest',
+]);
 
 /** A change that was refused because somebody else changed the item first: theirs and one's own, to choose from. */
 export function BothSides({
   current,
   sent,
   suppliers,
+  display,
   currency,
   onKeep,
   onTake,
@@ -18,6 +29,7 @@ export function BothSides({
   current: CatalogueItem;
   sent: ItemSent;
   suppliers: readonly Supplier[];
+  display: Display;
   currency: string;
   onKeep: () => void;
   onTake: () => void;
@@ -28,6 +40,9 @@ export function BothSides({
     if (value === null || value === '') return 'nothing';
     if (name === 'supplierId') return suppliers.find(({ id }) => id === value)?.name ?? 'another';
     if (typeof value === 'boolean') return value ? 'yes' : 'no';
+    if (typeof value === 'number' && LENGTHS.has(name)) {
+      return formatLength(value, display, { decimals: 3 });
+    }
     return String(value);
   };
   const rows = (Object.keys(sent.fields) as (keyof ItemFields)[])

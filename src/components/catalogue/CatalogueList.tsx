@@ -91,7 +91,10 @@ function List({ first, suppliers, display }: Props) {
   const items = pages.flatMap((page) => page.items);
   const currency = pages[0]?.currency ?? first.currency;
   const anew = () => queries.invalidateQueries({ queryKey: ['catalogue'] });
-  const change = (part: Partial<Look>) => setLook((now) => ({ ...now, ...part }));
+  const change = (part: Partial<Look>) => {
+    setSaid('');
+    setLook((now) => ({ ...now, ...part }));
+  };
 
   const add = useMutation<CatalogueItem, ApiError, ItemSent>({
     networkMode: 'always',
@@ -152,7 +155,10 @@ function List({ first, suppliers, display }: Props) {
           look={look}
           typed={typed}
           suppliers={suppliers}
-          onTyped={setTyped}
+          onTyped={(text) => {
+            setSaid('');
+            setTyped(text);
+          }}
           onChange={change}
         />
       )}
@@ -297,6 +303,7 @@ function Editing({
           current={current}
           sent={sent}
           suppliers={suppliers}
+          display={display}
           currency={currency}
           onKeep={() => send(current.revision, sent)}
           onTake={() => onLeave('It stays as it is.')}
