@@ -38,6 +38,7 @@ export function packSheets(input: PackInput): readonly NumberedSheet[] {
   const plan = planDrafts(
     input,
     input.setOut.points.filter(({ kind }) => kind !== 'string'),
+    input.setOut,
   );
   const paper: PaperName = plan[0].paper.name;
   const drafts = [

@@ -144,27 +144,27 @@ function volumeText(cubicMetres: number, display: 'metric' | 'imperial'): string
 function startRows({ input, start }: PlanFacts, width: number): readonly PanelRow[] {
   if (!start) return [];
   const { display } = input.laying.document;
-  const corners = input.laying.ground.rings[0].edges.length;
-  const edge = edgeName(0, 0, corners);
+  const { from } = start;
+  const line = `${from}–${start.to}`;
   const along =
     start.along < -0.5
-      ? `${lengthText(-start.along, display)} beyond A, in line with ${edge}`
-      : `${lengthText(start.along, display)} from A along ${start.chord ? 'the straight line ' : ''}${edge}`;
-  const square =
-    start.square < -0.5
-      ? `${lengthText(-start.square, display)} square behind it`
-      : `${lengthText(start.square, display)} square in`;
+      ? `${lengthText(-start.along, display)} beyond ${from}, in line with ${line}`
+      : `${lengthText(start.along, display)} from ${from} along ${line}`;
+  const square = `${lengthText(Math.abs(start.square), display)} square to its ${start.square < 0 ? 'right' : 'left'}`;
   const angle = Math.round(Math.abs(start.turnDeg) * 100) / 100;
   const turn =
     angle === 0
-      ? `Rows run along ${edge}.`
+      ? `Rows run along ${line}.`
       : angle === 90
-        ? `Rows run square to ${edge}.`
-        : `Rows turn ${angle}° ${start.turnDeg > 0 ? 'anticlockwise' : 'clockwise'} from ${edge}.`;
+        ? `Rows run square to ${line}.`
+        : `Rows turn ${angle}° ${start.turnDeg > 0 ? 'anticlockwise' : 'clockwise'} from ${line}.`;
   return [
     headingRow('Start', width),
     ...keptTogether(
-      textRows(`First unit, marked S: its corner nearest A is ${along}, ${square}. ${turn}`, width),
+      textRows(
+        `First unit, marked S: its corner nearest ${from} is ${along}, ${square}. ${turn}`,
+        width,
+      ),
     ),
   ];
 }

@@ -1,4 +1,5 @@
 import type { Laying } from '@/paving/laying';
+import type { SetOut } from '@/paving/set-out/set-out-types';
 import type { Arrangement, FiguredContent } from './figured-sheet';
 import { bestArrangement, figuredDrafts } from './figured-sheet';
 import { keepOutPlace } from './keep-out-place';
@@ -36,16 +37,17 @@ export const READABLE_UNIT = 3;
  * The plan of a version on the paper asked for, or with `auto` on the smallest of its family (A4 and A3;
  * Letter and Tabloid for imperial) that shows units well. The first sheet has the plan; more
  * follow when the figures of its edges and notes need them. With `named` points to go by, a plan whose units are too
- * small to be read is shown again in parts, a sheet each.
+ * small to be read is shown again in parts, a sheet each. `setOut` may be handed in when it is known.
  */
 export function planDrafts(
   given: PlanInput,
   named: readonly NamedPoint[] | null = null,
+  setOut?: SetOut,
 ): readonly SheetDraft[] {
   const laying = layingTinted(given.laying);
   const facts: PlanFacts = {
     input: { ...given, laying },
-    start: startPoint(laying),
+    start: startPoint(laying, setOut),
     keepOuts: laying.ground.rings.slice(1).map((ring) => keepOutPlace(laying.ground, ring)),
     asCourses: false,
     parts: [],

@@ -1,57 +1,32 @@
 import type { Point } from '@/geometry/point';
 import type { Laying } from '@/paving/laying';
-import { unitCorners } from '@/paving/laying';
+import { setOut, type SetOut } from '@/paving/set-out/set-out';
+import { runningOffsets } from '@/paving/set-out/tape-cross';
 
-/** Where the first unit goes, measured from corner A of the perimeter. */
+/** Where the first unit goes, measured from the first datum: the same unit on every sheet. */
 export interface StartPoint {
   /** Index into the laid units. */
   readonly unit: number;
-  /** The corner of that unit nearest to A. */
+  /** The corner of that unit nearest to the first datum. */
   readonly corner: Point;
-  /** From A along AB, mm; negative beyond A. For an arc AB, along its chord. */
+  /** The two datums, as corners are named on the drawings. */
+  readonly from: string;
+  readonly to: string;
+  /** From the first datum towards the second, mm; negative beyond the first. */
   readonly along: number;
-  /** Square to AB, to the inside, mm. */
+  /** Square to the line between them, mm; positive to its left. */
   readonly square: number;
-  /** Turn of the rows from AB, degrees anticlockwise, more than −90 and at most 90: a row runs both ways. */
+  /** Turn of the courses from that line, degrees anticlockwise, more than −90 and at most 90: a course runs both ways. */
   readonly turnDeg: number;
-  readonly chord: boolean;
 }
 
-/** The laid unit with the corner nearest to the datum corner A; null when none is laid. */
-export function startPoint(laying: Laying): StartPoint | null {
-  const { laid, motif, document } = laying;
-  const first = laying.ground.rings[0].edges[0];
-  const [ax, ay] = first.start;
-  const length = Math.hypot(first.end[0] - ax, first.end[1] - ay);
-  const u: Point = [(first.end[0] - ax) / length, (first.end[1] - ay) / length];
-  // Corners lie within half a diagonal of the centre, so that few units need their corners looked at.
-  let nearest = Infinity;
-  for (let n = 0; n < laid.count; n += 1)
-    nearest = Math.min(nearest, Math.hypot(laid.x[n] - ax, laid.y[n] - ay));
-  const reach = Math.max(0, ...motif.map(({ unit }) => Math.hypot(unit.length, unit.width)));
-  let best: { unit: number; corner: Point; distance: number } | null = null;
-  for (let n = 0; n < laid.count; n += 1) {
-    if (Math.hypot(laid.x[n] - ax, laid.y[n] - ay) > nearest + reach) continue;
-    for (const corner of unitCorners(motif[laid.k[n]], laid.x[n], laid.y[n])) {
-      const distance = Math.hypot(corner[0] - ax, corner[1] - ay);
-      // A tie within a thousandth of a millimetre goes to the corner further along AB.
-      const gain = best ? best.distance - distance : Infinity;
-      const further = best
-        ? (corner[0] - best.corner[0]) * u[0] + (corner[1] - best.corner[1]) * u[1]
-        : 0;
-      if (gain > 1e-3 || (Math.abs(gain) <= 1e-3 && further > 1e-3))
-        best = { unit: n, corner, distance };
-    }
-  }
-  if (!best) return null;
-  const [dx, dy] = [best.corner[0] - ax, best.corner[1] - ay];
-  const turn = document.placement.turn - (Math.atan2(u[1], u[0]) * 180) / Math.PI;
-  return {
-    unit: best.unit,
-    corner: best.corner,
-    along: dx * u[0] + dy * u[1],
-    square: dy * u[0] - dx * u[1],
-    turnDeg: 90 - ((((90 - turn) % 180) + 180) % 180),
-    chord: first.bulge !== 0,
-  };
+/** Null when no unit is laid. */
+export function startPoint(laying: Laying, plan: SetOut = setOut(laying)): StartPoint | null {
+  const { firstUnit: first, datums } = plan;
+  if (!first) return null;
+  const [from, to] = datums;
+  const corner = first.corners[first.nearest];
+  const [along, square] = runningOffsets(from.at, to.at, corner);
+  const { unit, turnDeg } = first;
+  return { unit, corner, from: from.name, to: to.name, along, square, turnDeg };
 }

@@ -208,20 +208,28 @@ describe('a plan sheet', () => {
     );
   });
 
-  it('says of a pattern turned right round that its rows run along AB', () => {
+  it('says of a pattern turned right round that its rows run along the line taped from', () => {
     const said = (turn: number) =>
       sheetTexts(
         planSheets(
           planInput(
-            floor(rectangle(0, 0, 4000, 3000), { placement: { origin: [240, 240], turn } }),
+            floor(rectangle(0, 0, 4000, 3000), {
+              placement: { origin: [240, 240], turn },
+              setOut: {
+                datums: [
+                  [0, 0],
+                  [0, 1],
+                ],
+              },
+            }),
           ),
         )[0],
       )
         .map(outlineText)
         .join(' ');
-    expect(said(180)).toContain('Rows run along AB.');
-    expect(said(-90)).toContain('Rows run square to AB.');
-    expect(said(-153.02)).toMatch(/Rows turn 26\.98° anticlockwise from AB/);
+    expect(said(180)).toContain('Rows run along A–B.');
+    expect(said(-90)).toContain('Rows run square to A–B.');
+    expect(said(-153.02)).toMatch(/Rows turn 26\.98° anticlockwise from A–B/);
   });
 
   it('takes Letter and a sheet of tables for an imperial court of 7 × 5 m, rather than Tabloid at the same scale', () => {

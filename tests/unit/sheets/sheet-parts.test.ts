@@ -2,6 +2,8 @@ import { readFileSync } from 'node:fs';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { layFloor } from '@/paving/laying';
+import type { SetOutChoice } from '@/paving/set-out/datum-choice';
+import { setOut } from '@/paving/set-out/set-out';
 import type { PathRing } from '@/sheets/drawing';
 import type { PanelColumn, PanelRow } from '@/sheets/panel';
 import { keptTogether, panelFlowed } from '@/sheets/panel';
@@ -127,15 +129,54 @@ describe('scales', () => {
 });
 
 describe('set-out', () => {
-  it('starts from the unit corner nearest to A, measured along AB and square to it', () => {
+  const FROM_A: SetOutChoice = {
+    datums: [
+      [0, 0],
+      [0, 1],
+    ],
+  };
+
+  it('starts from the unit corner nearest to the first datum, measured along the line and square to it', () => {
     // Slabs of 450 with a centre at (240, 240): the nearest corner lies at (15, 15).
     const plain = floor(rectangle(0, 0, 3000, 2000), {
       placement: { origin: [240, 240], turn: 0 },
+      setOut: FROM_A,
     });
     const start = startPoint(layFloor(plain))!;
+    expect([start.from, start.to]).toEqual(['A', 'B']);
     expect(start.along).toBeCloseTo(15, 6);
     expect(start.square).toBeCloseTo(15, 6);
     expect(start.turnDeg).toBeCloseTo(0, 9);
+  });
+
+  it('is the first unit of the control points and courses, from whichever corners these are taped', () => {
+    const datums = fc
+      .tuple(fc.integer({ min: 0, max: 5 }), fc.integer({ min: 0, max: 5 }))
+      .filter(([a, b]) => a !== b);
+    fc.assert(
+      fc.property(datums, ([a, b]) => {
+        const chosen = {
+          ...COURT,
+          setOut: {
+            datums: [
+              [0, a],
+              [0, b],
+            ],
+          } satisfies SetOutChoice,
+        };
+        const laying = layFloor(chosen);
+        const plan = setOut(laying);
+        const start = startPoint(laying)!;
+        expect(start.unit).toBe(plan.firstUnit!.unit);
+        const point = plan.points.find(({ name }) => name === `U${plan.firstUnit!.nearest + 1}`)!;
+        expect([start.from, start.along, start.square]).toEqual([
+          plan.datums[0].name,
+          point.along,
+          point.square,
+        ]);
+      }),
+      { numRuns: 10 },
+    );
   });
 
   it('gives the same distances wherever the ground lies and however it is turned', () => {
@@ -152,6 +193,7 @@ describe('set-out', () => {
           ];
           const turned = floor(rectangle(0, 0, 3000, 2000).map(moved), {
             placement: { origin: moved([240, 240]), turn },
+            setOut: FROM_A,
           });
           const start = startPoint(layFloor(turned))!;
           expect(start.along).toBeCloseTo(15, 5);
@@ -166,7 +208,12 @@ describe('set-out', () => {
   it('states the turn of rows as the lesser of the two ways round, for a row runs both ways', () => {
     const turnOf = (turn: number) =>
       startPoint(
-        layFloor(floor(rectangle(0, 0, 3000, 2000), { placement: { origin: [240, 240], turn } })),
+        layFloor(
+          floor(rectangle(0, 0, 3000, 2000), {
+            placement: { origin: [240, 240], turn },
+            setOut: FROM_A,
+          }),
+        ),
       )!.turnDeg;
     const stated = [
       [26.98, 26.98],
