@@ -1,7 +1,7 @@
 import { bondPattern, documentUnit } from './bond';
 import { documentBuildUp, type BuildUp } from './build-up';
 import type { LayoutDocument } from './layout-document';
-import { formatLength, type Display } from './length';
+import { formatLength, MM_PER_INCH, type Display } from './length';
 import { documentLevels } from './levels';
 
 /**
@@ -21,6 +21,16 @@ export const SOURCES = {
 
 /** Least thickness of the compacted base by use, mm: 4 in and 6 in (source: tolerances). */
 export const LEAST_BASE_MM: Readonly<Record<BuildUp['use'], number>> = { foot: 100, driveway: 150 };
+/** The same as the source prints it for inches: 4 in and 6 in, not what 100 and 150 mm come to. */
+const LEAST_BASE_INCHES: Readonly<Record<BuildUp['use'], number>> = { foot: 4, driveway: 6 };
+
+/** The least thickness of the base as it is published, in the words of a display system. */
+export const leastBaseWords = (use: BuildUp['use'], display: Display): string =>
+  formatLength(
+    display === 'imperial' ? LEAST_BASE_INCHES[use] * MM_PER_INCH : LEAST_BASE_MM[use],
+    display,
+  );
+
 /** Nominal bedding, mm: 1 in (source: tolerances). */
 export const NOMINAL_BEDDING_MM = 25;
 /** Least thickness of a paver for feet or a driveway, mm: 2 3/8 in (source: tolerances). */
@@ -131,7 +141,7 @@ function layerAdvice({ use, bedding, base, frost }: BuildUp, display: Display): 
     advice.push({
       kind: 'thinBase',
       weight: 'look',
-      text: `The base is ${shown(base)}; at least ${shown(least)} compacted is published for ${use === 'foot' ? 'patios and paths' : 'a driveway'}.`,
+      text: `The base is ${shown(base)}; at least ${leastBaseWords(use, display)} compacted is published for ${use === 'foot' ? 'patios and paths' : 'a driveway'}.`,
       source: SOURCES.tolerances,
     });
   }

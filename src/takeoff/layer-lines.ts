@@ -2,7 +2,8 @@ import { formatArea } from '@/paving/area';
 import { documentBuildUp } from '@/paving/build-up';
 import { formatCount } from '@/paving/count';
 import type { Laying } from '@/paving/laying';
-import { formatLength } from '@/paving/length';
+import type { LayoutDocument } from '@/paving/layout-document';
+import { formatLength, MM_PER_FOOT, type Display } from '@/paving/length';
 import type { MaterialPlace } from '@/paving/materials';
 import { TYPED_IN, type ChosenMaterial } from './chosen-material';
 import { dugRegion } from './dug-region';
@@ -14,12 +15,30 @@ import { loadHolds } from './order-packs';
 import type { Assumption, TakeOffLine } from './take-off-line';
 
 const MM_PER_M = 1000;
-/** Strips of a geotextile overlap by this, mm, and it goes up the sides of the dig. */
-const GEOTEXTILE_LAP_MM = 300;
+/** Strips of a geotextile overlap by this, mm, 12 in, and it goes up the sides of the dig. */
+const GEOTEXTILE_LAP_MM: Readonly<Record<Display, number>> = {
+  metric: 300,
+  imperial: MM_PER_FOOT,
+};
 const GEOTEXTILE_SOURCE =
   'Masonry Magazine, April 2007, p. 52: strips overlap by at least 300\u202fmm (12 in), up the sides of the dig';
-/** A usual roll, mm. */
-const ROLL_WIDTH_MM = 4500;
+/** A usual roll, mm: 4.5 m, or 15 ft. */
+const ROLL_WIDTH_MM: Readonly<Record<Display, number>> = {
+  metric: 4500,
+  imperial: 15 * MM_PER_FOOT,
+};
+
+/** Lap and roll of the geotextile that a document has or takes, mm. */
+export const geotextileRoll = ({
+  display,
+  materials,
+}: Pick<LayoutDocument, 'display' | 'materials'>): {
+  readonly lap: number;
+  readonly rollWidth: number;
+} => ({
+  lap: materials?.geotextile?.lap ?? GEOTEXTILE_LAP_MM[display],
+  rollWidth: materials?.geotextile?.rollWidth ?? ROLL_WIDTH_MM[display],
+});
 
 const given = (name: string, value: string, source: string): Assumption => ({
   name,
@@ -154,8 +173,7 @@ export function geotextileLine(laying: Laying, earth: EarthVolumes): TakeOffLine
   const { display, materials } = document;
   const { geotextile, bedding, base, overdig } = documentBuildUp(document);
   if (!geotextile) return [];
-  const lap = materials?.geotextile?.lap ?? GEOTEXTILE_LAP_MM;
-  const rollWidth = materials?.geotextile?.rollWidth ?? ROLL_WIDTH_MM;
+  const { lap, rollWidth } = geotextileRoll(document);
   const rings = dugRegion(ground, overdig) ?? dugRegion(ground, 0)!;
   const round = rings.reduce(
     (sum, ring) =>

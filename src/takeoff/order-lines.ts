@@ -3,6 +3,7 @@ import type { LayoutDocument, Unit } from '@/paving/layout-document';
 import type { Laying } from '@/paving/laying';
 import type { Order, OrderWay } from '@/paving/materials';
 import { TYPED_IN, priceItem, type ChosenMaterial } from './chosen-material';
+import { geotextileRoll } from './layer-lines';
 import { KG_PER_TONNE, formatAmount, formatFigure, formatMass } from './measures';
 import { moneyTimes } from './money';
 import { holderKg, holdsWords, packWords, packsFor, wayPack, type Pack } from './order-packs';
@@ -178,7 +179,7 @@ function sundryNeeds(
     const line = lines.find((candidate) => candidate.id === id);
     if (!line?.orderId || line.amount <= 0) return [];
     const item = priceItem(prices, materials?.[id]?.catalogueId);
-    const width = (materials?.geotextile?.rollWidth ?? 4500) / 1000;
+    const width = geotextileRoll(document).rollWidth / 1000;
     const own = id === 'geotextile' ? 'area' : 'length';
     return [
       {

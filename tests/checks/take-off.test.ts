@@ -144,6 +144,11 @@ describe('what the defaults are taken from', () => {
     const { buildUp } = court();
     const found = takenOff(court({ buildUp: { ...buildUp!, geotextile: true } }));
     expect(lineOf(found, 'geotextile').amount).toBeCloseTo(((12 + 14 * 0.125) * 4500) / 4200, 9);
+    // On a floor in feet and inches 12 in of a roll of 15 ft (the roll: common practice), so 14 of 15 parts cover.
+    const feet = takenOff(
+      court({ display: 'imperial', buildUp: { ...buildUp!, geotextile: true } }),
+    );
+    expect(lineOf(feet, 'geotextile').amount).toBeCloseTo(((12 + 14 * 0.125) * 15) / 14, 9);
   });
 
   it('every assumption says where it comes from, and every one with a value can be changed or is the document’s own', () => {

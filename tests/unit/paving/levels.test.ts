@@ -149,6 +149,8 @@ describe('what is published', () => {
     const thin = buildUpAdvice(of({ base: 80 }))[0];
     expect(thin).toMatchObject({ kind: 'thinBase', weight: 'look', source: SOURCES.tolerances });
     expect(thin.text).toContain('100\u202fmm');
+    const inches = buildUpAdvice({ ...of({ base: 80 }), display: 'imperial' as const })[0];
+    expect(inches.text).toContain('at least 4" compacted');
     expect(kinds(of({ use: 'driveway', base: 150 }))).not.toContain('thinBase');
     expect(kinds(of({ use: 'driveway', base: 140 }))).toContain('thinBase');
     expect(kinds(of({ bedding: 60 }))).toContain('thickBedding');

@@ -1,6 +1,6 @@
 import { useMemo } from 'react';
 import { documentBuildUp, GREATEST_LAYER_MM, type BuildUp } from '@/paving/build-up';
-import { LEAST_BASE_MM, NOMINAL_BEDDING_MM, SOURCES } from '@/paving/build-up-advice';
+import { leastBaseWords, NOMINAL_BEDDING_MM, SOURCES } from '@/paving/build-up-advice';
 import { buildUpChanged } from '@/paving/level-edits';
 import { formatLength } from '@/paving/length';
 import { layerSection } from '@/sheets/layer-section';
@@ -74,7 +74,7 @@ export function LayerFields() {
         {field(
           'base',
           'Base, compacted',
-          `At least ${shown(LEAST_BASE_MM[buildUp.use])} is published.`,
+          `At least ${leastBaseWords(buildUp.use, display)} is published.`,
         )}
       </div>
       {check('geotextile', 'A geotextile between base and ground')}
