@@ -19,11 +19,13 @@ const OPEN_PAGES: ReadonlySet<string> = new Set([
   '/500',
 ]);
 
-/** Pages that anybody may open. Every other page sends those who are not signed in to `/sign-in`. */
+/**
+ * Pages that anybody may open. Every other page sends those who are not signed in to `/sign-in`. `/site` is the same for
+ * everybody: phones keep it, and must never keep the sign-in page in its place.
+ */
 export const isOpenPage = (path: string): boolean =>
   OPEN_PAGES.has(path) ||
-  path === '/guide' ||
-  path.startsWith('/guide/') ||
+  ['/guide', '/site'].some((open) => path === open || path.startsWith(`${open}/`)) ||
   path.startsWith('/current/');
 
 const OPEN_ENDPOINTS: ReadonlySet<string> = new Set([

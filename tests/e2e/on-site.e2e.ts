@@ -112,6 +112,37 @@ const hasNoFaults = async (page: Page) => {
   expect(violations.map(({ id, nodes }) => [id, nodes.map(({ html }) => html)])).toEqual([]);
 };
 
+it('the phone’s page is the same for everybody, and says to sign in', async () => {
+  const { context, page, complaints } = await openPage(browser, { width: 390, height: 844 });
+  const answer = await page.goto('/site');
+  expect(new URL(page.url()).pathname).toBe('/site');
+  expect(answer!.headers()['content-security-policy']).toContain("script-src 'self'");
+  await page.getByRole('link', { name: 'Sign in' }).waitFor();
+  await hasNoFaults(page);
+  // Being told that nobody is signed in is the one refusal.
+  expect(complaints.filter((words) => !words.includes('401'))).toEqual([]);
+  // What the worker keeps is this page and not another in its place, and no answer about anybody.
+  await page.evaluate(() => navigator.serviceWorker.ready);
+  const kept = await page.evaluate(async () => {
+    const requests = await Promise.all(
+      (await caches.keys()).map(async (name) => (await caches.open(name)).keys()),
+    );
+    const page = await caches.match('/site', { ignoreSearch: true });
+    return {
+      paths: requests.flat().map(({ url }) => new URL(url).pathname),
+      shell: (await page?.text()) ?? '',
+    };
+  });
+  expect(kept.shell).toContain('SiteApp');
+  expect(kept.shell).not.toContain('Password');
+  expect(
+    kept.paths.filter(
+      (path) => !/^\/(_astro\/|site$|site\.webmanifest$)|\.(js|svg|png)$/.test(path),
+    ),
+  ).toEqual([]);
+  await context.close();
+});
+
 it('an installer builds without signal: what is entered is kept, sent once and in order, and put away at sign-out', async () => {
   const owner = await openPage(browser);
   const client = await openPage(browser);
