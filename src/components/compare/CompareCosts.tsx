@@ -8,6 +8,8 @@ interface Row {
   readonly name: string;
   readonly a: number | null;
   readonly b: number | null;
+  /** Where there is no sum. */
+  readonly none: string;
 }
 
 const useCost = (id: string) =>
@@ -54,8 +56,18 @@ function CostRows({
   const money = (minor: number) => formatMoney(minor, a.currency);
   const rows = (
     [
-      { name: 'Materials cost', a: a.materialsMinor, b: b.materialsMinor },
-      { name: 'Quoted, with tax', a: a.quotedMinor, b: b.quotedMinor },
+      {
+        name: 'Materials cost',
+        a: a.materialsMinor,
+        b: b.materialsMinor,
+        none: 'not known',
+      },
+      {
+        name: 'Quoted, with tax',
+        a: a.quotedMinor,
+        b: b.quotedMinor,
+        none: 'no quote sent',
+      },
     ] satisfies Row[]
   ).filter((row) => row.a !== null || row.b !== null);
   if (rows.length === 0) return null;
@@ -80,7 +92,7 @@ function CostRows({
             <div key={names[n]} className="mt-1 flex items-center gap-3">
               <span className="w-24 shrink-0 truncate text-sm text-slate">{names[n]}</span>
               {minor === null ? (
-                <span className="text-sm text-slate">not known</span>
+                <span className="text-sm text-slate">{row.none}</span>
               ) : (
                 <>
                   <span className="min-w-0 flex-1" aria-hidden>
