@@ -64,7 +64,7 @@ function coursesPanel(input: SetOutInput, scale: number, width: number): readonl
     headingRow('Strings', width),
     ...keptTogether(
       textRows(
-        `A number stands at the start of each course’s string. Strings run from left to right on the plan${turn === 0 ? `, along ${baselineName(setOut)}` : `, turned ${turn}° ${way} from ${baselineName(setOut)}`}.`,
+        `A number stands at the start of a course’s string, or at its end where the start is crowded. Strings run from left to right on the plan${turn === 0 ? `, along ${baselineName(setOut)}` : `, turned ${turn}° ${way} from ${baselineName(setOut)}`}.`,
         width,
       ),
     ),

@@ -1,3 +1,6 @@
+import { arcIsStraight } from '@/geometry/arc';
+import { documentEdgeName } from '@/paving/edge-names';
+import type { Laying } from '@/paving/laying';
 import type { Fall } from '@/paving/levels';
 import { documentLevels } from '@/paving/levels';
 import { pegLevels } from '@/takeoff/peg-levels';
@@ -119,9 +122,9 @@ function sectionRows(input: PlanInput, scale: number, width: number): readonly P
         ]
       : textRows('Levels are not entered yet: drawn flat, flush with the edge.', width)),
     headingRow('Screed board', width),
-    pair('Pulled', pullWords(board.pullDeg)),
+    pair('Pulled', pullWords(input.laying, board.pullDeg)),
     pair(
-      board.passes > 1 ? `Strips, of ${countText(board.passes)}` : 'Clear width',
+      board.passes > 1 ? `Clear, each of ${countText(board.passes)} strips` : 'Clear width',
       length(board.bayWidth),
     ),
     pair('Board', length(board.boardLength)),
@@ -153,7 +156,7 @@ function fallWords(fall: Fall): string {
     case 'none':
       return 'No fall: level all over.';
     case 'oneWay':
-      return `Falls ${percent} one way, ${pullWords(fall.direction, true)} on the plan.`;
+      return `Falls ${percent} one way, ${fallsTo(fall.direction)} on the plan.`;
     case 'toPoint':
       return `Falls ${percent} from all sides to one point.`;
     case 'toLine':
@@ -161,13 +164,38 @@ function fallWords(fall: Fall): string {
   }
 }
 
-/** `left to right`, `up` …, or the angle from the plan's foot. */
-function pullWords(degrees: number, oneWay = false): string {
+/** `to the right`, `upwards` …, or the angle from the plan's foot. */
+function fallsTo(degrees: number): string {
   const angle = Number((((degrees % 360) + 360) % 360).toFixed(1));
-  const ways: Readonly<Record<number, string>> = oneWay
-    ? { 0: 'to the right', 90: 'upwards', 180: 'to the left', 270: 'downwards' }
-    : { 0: 'left to right', 90: 'bottom to top', 180: 'left to right', 270: 'bottom to top' };
+  const ways: Readonly<Record<number, string>> = {
+    0: 'to the right',
+    90: 'upwards',
+    180: 'to the left',
+    270: 'downwards',
+  };
   return ways[angle] ?? `${angle}° anticlockwise from the right`;
+}
+
+/** An edge runs the board's way when its ends are no further out of it than this, mm. */
+const ALONG_MM = 1;
+
+/** `along AB` where a straight edge runs that way; else by the plan as it is drawn. A board is pulled either way. */
+function pullWords({ ground, document }: Laying, degrees: number): string {
+  const radians = (degrees * Math.PI) / 180;
+  const along = ground.rings[0].edges
+    .filter(
+      ({ start, end, bulge }) =>
+        arcIsStraight(start, end, bulge) &&
+        Math.abs(
+          (end[0] - start[0]) * Math.sin(radians) - (end[1] - start[1]) * Math.cos(radians),
+        ) < ALONG_MM,
+    )
+    .sort((one, other) => other.length - one.length);
+  if (along.length > 0) return `along ${documentEdgeName(document, 0, along[0].edge)}`;
+  const angle = Number((90 - ((((90 - degrees) % 180) + 180) % 180)).toFixed(1));
+  if (angle === 0) return 'left to right';
+  if (Math.abs(angle) === 90) return 'bottom to top';
+  return `${Math.abs(angle)}° ${angle > 0 ? 'anticlockwise' : 'clockwise'} from left to right`;
 }
 
 /** Levels at pegs, where there are levels and a build-up to reckon them from. */

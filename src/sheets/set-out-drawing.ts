@@ -175,7 +175,7 @@ const middleOf = (points: readonly Point[]): Point => {
   return [sum[0] / Math.max(1, points.length), sum[1] / Math.max(1, points.length)];
 };
 
-/** Numbers before the strings' starts: first and last, then round ones, then the rest where there is room. */
+/** Numbers before the strings' starts, or behind their ends where there is no room: first and last, then round ones, then the rest where there is room. */
 function courseLabels(
   courses: readonly Course[],
   strings: readonly Segment[],

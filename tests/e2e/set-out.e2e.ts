@@ -35,6 +35,16 @@ it('sets a court out: points by the keys, corners chosen by letter and taken bac
   await page.getByRole('button', { name: 'Pick them for me' }).click();
   await expect.poll(() => datums.textContent()).toBe(picked);
 
+  // By the keys alone: the focus goes on from the button pressed, first to the letters and then back.
+  await page.getByRole('button', { name: 'Choose two corners' }).press('Enter');
+  const focused = () => page.evaluate(() => document.activeElement?.textContent);
+  await expect.poll(focused).toBe('A');
+  await page.keyboard.press('Enter');
+  await page.keyboard.press('Tab');
+  await page.keyboard.press('Enter');
+  await expect.poll(focused).toBe('Choose two corners');
+  await page.getByRole('button', { name: 'Pick them for me' }).click();
+
   // The table of points and the courses follow.
   await page.getByLabel('Which points').selectOption('string');
   await page.getByRole('button', { name: '2a', exact: true }).click();

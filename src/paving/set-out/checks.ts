@@ -12,7 +12,8 @@ import { TAPE_READING_MM } from './tape-cross';
 const ICPI = 'ICPI, Construction Tolerances for Interlocking Concrete Pavements';
 const JOINT_MM = { least: 2, greatest: 5 } as const;
 const FLATNESS_MM = 10;
-const STRAIGHTEDGE_MM = 3000;
+/** The sheet names both: 10 ft (3 m). */
+const STRAIGHTEDGE_MM = { metric: 3000, imperial: 10 * MM_PER_FOOT } as const;
 const STEP_MM = 3;
 const BASE_MM = { under: 13, over: 20 } as const;
 const BOND_LINE_MM = { off: 13, over: 16_000 } as const;
@@ -234,7 +235,7 @@ function surfaceChecks({ laying, courses }: Floor): Check[] {
   const { display, buildUp } = laying.document;
   const longest = Math.max(...courses.map(({ length }) => length));
   const off = Math.max(TAPE_READING_MM, (BOND_LINE_MM.off * longest) / BOND_LINE_MM.over);
-  const edge = formatLength(STRAIGHTEDGE_MM, display);
+  const edge = formatLength(STRAIGHTEDGE_MM[display], display);
   const checks: Check[] = [
     {
       id: 'line',

@@ -208,6 +208,23 @@ describe('the set-out pack', () => {
     expect(said).toEqual(expect.arrayContaining(['30\u2009mm', '150\u2009mm', '235']));
   });
 
+  it('names the edge that the screed board is pulled along, however it lies', () => {
+    const pulled = (perimeter: LayoutDocument['ground']['perimeter']) =>
+      pack(floor(perimeter))
+        .filter(({ kind }) => kind === 'section')
+        .flatMap(words)
+        .join(' ');
+    expect(pulled(rectangle(0, 0, 4000, 2000))).toMatch(/along (AB|CD)/);
+    const skew = (by: number): LayoutDocument['ground']['perimeter'] => [
+      [0, 0],
+      [3900, by],
+      [3600, by + 2000],
+      [-300, 2000],
+    ];
+    expect(pulled(skew(700))).toMatch(/along (AB|CD)/);
+    expect(pulled(skew(-700))).toMatch(/along (AB|CD)/);
+  });
+
   it('draws with the line widths of ISO 128 alone', () => {
     const widths: readonly number[] = Object.values(PENS);
     for (const sheet of pack(levelled(COURT)))

@@ -1,3 +1,4 @@
+import { useEffect, useRef } from 'react';
 import { cornerLabel } from '@/paving/set-out/marks';
 import type { SetOut } from '@/paving/set-out/set-out';
 import { Length } from '../../ui/Length';
@@ -18,6 +19,17 @@ export function DatumFields({ setOut }: { setOut: SetOut }) {
   const choosing = useTable((state) => state.tool === 'datum');
   const first = useTable((state) => state.datumFirst);
   const [a, b] = setOut.datums;
+  const letters = useRef<HTMLUListElement>(null);
+  const again = useRef<HTMLButtonElement>(null);
+  const before = useRef(choosing);
+  // The button pressed is gone by then: by the keys one goes on where one was.
+  useEffect(() => {
+    if (before.current === choosing) return;
+    before.current = choosing;
+    const { activeElement, body } = window.document;
+    if (activeElement !== body) return;
+    (choosing ? letters.current?.querySelector('button') : again.current)?.focus();
+  }, [choosing]);
   return (
     <section aria-label="Corners to tape from" className="space-y-2">
       <p className="text-lg leading-snug">
@@ -36,7 +48,7 @@ export function DatumFields({ setOut }: { setOut: SetOut }) {
               ? `From ${cornerLabel(...first)} and …: point at the second corner.`
               : 'Point at the first corner to tape from.'}
           </p>
-          <ul className="mt-2 flex flex-wrap gap-2">
+          <ul ref={letters} className="mt-2 flex flex-wrap gap-2">
             {datumCorners(document).map((corner) => (
               <li key={corner.join('.')}>
                 <button
@@ -61,6 +73,7 @@ export function DatumFields({ setOut }: { setOut: SetOut }) {
       ) : (
         <div className="flex gap-2">
           <button
+            ref={again}
             type="button"
             className="button flex-1 px-2 text-sm"
             onClick={() => datumsStarted(table)}
