@@ -42,7 +42,7 @@ function strokeAll(
 }
 
 /** The level map under edge and keep-outs: hatching, contours, and where ground and formation meet. */
-export function paintLevels(ink: Ink, state: TableState, floor: Floor) {
+export function paintLevels(ink: Ink, floor: Floor) {
   const earth = earthOf(floor);
   const { ctx, colours, document } = ink;
   path(ink, ringOutline(documentRing(document, 0)), true);
