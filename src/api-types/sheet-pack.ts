@@ -1,3 +1,4 @@
+import type { TakeOffWithoutCosts } from '@/takeoff/without-costs';
 import type { VersionDetail } from './versions';
 
 /** GET /api/versions/{id}/sheets: what the sheets of a version are drawn from, the stamp that each bears. */
@@ -12,6 +13,11 @@ export interface SheetPack {
   };
   /** `plan`: a client has the plan of a shared version, and no more. */
   readonly sheets: 'all' | 'plan';
+  /**
+   * What it takes, as it was reckoned from the firm's catalogue when it was saved: what the orders say too. Null with the plan
+   * alone, and for versions saved before that was kept.
+   */
+  readonly materials: TakeOffWithoutCosts | null;
 }
 
 /**

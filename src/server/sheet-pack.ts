@@ -2,9 +2,11 @@ import { and, asc, eq, gt, ne } from 'drizzle-orm';
 import { alias } from 'drizzle-orm/pg-core';
 import type { PlanStatus, SheetPack } from '@/api-types/sheet-pack';
 import { versionEvents, versions } from '@/db/schema';
+import { takeOffWithoutCosts } from '@/takeoff/without-costs';
 import type { Db } from './database';
 import { done, type Outcome } from './outcomes';
 import { permissions, type Actor } from './permissions';
+import { pricingOfVersion } from './pricing/version-pricing';
 import { siteOrigin } from './site-origin';
 import { openVersion } from './versions';
 
@@ -24,6 +26,8 @@ export const openSheetPack = async (
   if (!found.ok) return found;
   const version = found.value;
   const status = await planStatus(db, id);
+  const sheets = permissions['set-out pack'][actor.role] === 'plan sheet' ? 'plan' : 'all';
+  const pricing = sheets === 'all' ? await pricingOfVersion(db, actor.firmId, id) : null;
   return done({
     version,
     stamp: {
@@ -31,7 +35,8 @@ export const openSheetPack = async (
       supersededBy: status.status === 'superseded' ? { number: status.by, at: status.at } : null,
       currentUrl: currentUrl(id),
     },
-    sheets: permissions['set-out pack'][actor.role] === 'plan sheet' ? 'plan' : 'all',
+    sheets,
+    materials: pricing && takeOffWithoutCosts(pricing.takeOff),
   });
 };
 

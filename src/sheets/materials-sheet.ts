@@ -1,5 +1,6 @@
 import { formatAmount, formatMass, formatWorkedVolume } from '@/takeoff/measures';
-import type { OrderLine, TakeOff, TakeOffLine } from '@/takeoff/take-off-line';
+import type { TakeOffLine } from '@/takeoff/take-off-line';
+import type { TakeOffWithoutCosts } from '@/takeoff/without-costs';
 import type { Display } from '@/paving/length';
 import { floorCautions } from './cautions';
 import { headingRow, itemRow, textRows } from './panel';
@@ -9,9 +10,6 @@ import type { TableColumn } from './ruled-table';
 import { ruledTable } from './ruled-table';
 import type { SheetDraft } from './sheet-draft';
 import { tableDrafts, type TableSection } from './table-sheet';
-
-/** The take-off as the crew has it: amounts and no prices. */
-export type MaterialsTakeOff = Pick<TakeOff, 'lines' | 'orders' | 'warnings'>;
 
 const TAKEN: readonly TableColumn[] = [
   { title: 'The floor takes', align: 'start', weight: 600, grow: 1 },
@@ -32,7 +30,7 @@ const ORDERED: readonly TableColumn[] = [
 /** Materials: what the floor takes, how it is ordered, what to look at before that. */
 export function materialsDrafts(
   input: PlanInput,
-  { lines, orders, warnings }: MaterialsTakeOff,
+  { lines, orders, warnings }: TakeOffWithoutCosts,
   paper: PaperName,
 ): readonly SheetDraft[] {
   const { document } = input.laying;
@@ -106,7 +104,10 @@ const takenCells = (
   formula,
 ];
 
-const orderCells = ({ name, needed, measure, words, massKg }: OrderLine, display: Display) => [
+const orderCells = (
+  { name, needed, measure, words, massKg }: TakeOffWithoutCosts['orders'][number],
+  display: Display,
+) => [
   name,
   formatAmount(needed, measure, display),
   words,

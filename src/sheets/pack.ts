@@ -1,8 +1,8 @@
 import { setOut } from '@/paving/set-out/set-out';
+import type { TakeOffWithoutCosts } from '@/takeoff/without-costs';
 import { checksDrafts } from './checks-sheet';
 import { controlDrafts } from './control-sheet';
 import { coursesDrafts } from './courses-sheet';
-import type { MaterialsTakeOff } from './materials-sheet';
 import { materialsDrafts } from './materials-sheet';
 import type { PaperName } from './paper';
 import type { PlanInput } from './plan-input';
@@ -14,10 +14,10 @@ import { sheetsNumbered } from './sheet-draft';
 
 /** All that a set-out pack is drawn from. */
 export interface PackInput extends SetOutInput {
-  readonly takeOff: MaterialsTakeOff;
+  readonly takeOff: TakeOffWithoutCosts;
 }
 
-export const packInput = (input: PlanInput, takeOff: MaterialsTakeOff): PackInput => ({
+export const packInput = (input: PlanInput, takeOff: TakeOffWithoutCosts): PackInput => ({
   ...input,
   setOut: setOut(input.laying, input.report),
   takeOff,

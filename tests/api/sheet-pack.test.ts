@@ -1,5 +1,6 @@
 import { beforeAll, describe, expect, test } from 'vitest';
 import { newOffice, versionThatIs, type Office } from './office';
+import { newPricedOffice, sharedVersion } from './priced-office';
 import { ORIGIN, useEmptyDatabase, Visitor } from './site';
 
 useEmptyDatabase();
@@ -65,6 +66,26 @@ describe('the page that a sheet’s QR code leads to', () => {
 });
 
 describe('the sheets of a version', () => {
+  test('say what it takes as its orders do, without prices; a client has the plan alone', async () => {
+    const priced = await newPricedOffice();
+    const { owner, designer, installer, client } = priced;
+    const version = await sharedVersion(priced);
+    const { fingerprint, terms } = (await client.visitor.get(`/api/versions/${version}/agreement`)).body; // prettier-ignore
+    await client.visitor.post(`/api/versions/${version}/accept`, { typedName: 'C', fingerprint, terms }); // prettier-ignore
+    await owner.visitor.post(`/api/versions/${version}/issue`);
+    const { takeOff } = (await designer.visitor.get(`/api/versions/${version}/pricing`)).body;
+    const sheets = async ({ visitor }: typeof owner) =>
+      (await visitor.get(`/api/versions/${version}/sheets`)).body;
+    const crew = await sheets(installer);
+    const words = ({ orders }: { orders: { name: string; words: string }[] }) =>
+      orders.map(({ name, words: amount }) => `${name}: ${amount}`);
+    expect(words(crew.materials)).toEqual(words(takeOff));
+    // In the catalogue's own packs, which a take-off without the catalogue knows nothing of.
+    expect(words(crew.materials).join()).toMatch(/pallets? of 36/);
+    expect(JSON.stringify(crew)).not.toMatch(/costMinor|"supplier"|\b41400\b|\b6250\b|Quennock/i);
+    expect((await sheets(client)).materials).toBeNull();
+  });
+
   test('bear when it was issued, what took its place, and the page’s whole address', async () => {
     const first = await versionThatIs(office, 'issued');
     const pack = async (id: string) =>

@@ -11,7 +11,7 @@ import { versionPlanInput } from '../version/version-plan';
 
 const packOf = (pack: SheetPack, paper: PaperName | 'auto') => {
   const input = versionPlanInput(pack, paper);
-  return packInput(input, takeOff(input.laying, input.report, null));
+  return packInput(input, pack.materials ?? takeOff(input.laying, input.report, null));
 };
 
 /** The pack drawn beside the page, so that a large floor does not hold it up. */
