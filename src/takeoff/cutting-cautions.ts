@@ -55,8 +55,8 @@ export function cuttingCautions(
             id: 'small' as const,
             weight: vehicles ? ('wrong' as const) : ('look' as const),
             words: vehicles
-              ? `${pieces(cut.underThird)} smaller than a third of a unit: under wheels they work loose. Move the start, or leave them to aggregate.`
-              : `${pieces(cut.underThird)} smaller than a third of a unit. On foot that is allowed, but they show and work loose first; under wheels it is not.`,
+              ? `${pieces(cut.underThird)} smaller than a third of a unit. Under wheels such pieces work loose: move the start, or leave them to aggregate.`
+              : `${pieces(cut.underThird)} smaller than a third of a unit. On foot that is allowed, but such pieces show, and work loose first; under wheels it is not.`,
             source: CMHA,
           },
         ]
