@@ -186,6 +186,12 @@ it('an installer builds without signal: what is entered is kept, sent once and i
   await plan.getByRole('link').click();
   await first.getByRole('heading', { name: `0 of ${courses.length} courses laid` }).waitFor();
   await hasNoFaults(first);
+  await first.getByRole('button', { name: 'Dusk colours' }).click();
+  for (const tab of ['Set out', 'Sizes', 'Courses']) {
+    await first.getByRole('link', { name: tab, exact: true }).click();
+    await hasNoFaults(first);
+  }
+  await first.getByRole('button', { name: 'Day colours' }).click();
 
   // Out of signal. The page is loaded anew from the phone alone.
   await context.setOffline(true);

@@ -27,6 +27,7 @@ const OPEN = [
   '/forgotten-password',
   '/guide',
   '/guide/best-start',
+  '/guide/on-site',
   '/guide/keys',
 ];
 

@@ -52,14 +52,13 @@ export function RefitPlan({
               <path d="M0 0V7" className="stroke-graphite" strokeWidth="2" />
             </pattern>
           </defs>
-          {held.map((corners, n) => (
-            <polygon
-              key={n}
-              points={corners.map((corner: Point) => place(corner).join(' ')).join(' ')}
-              fill="url(#laid-hatch)"
-              className="stroke-graphite"
-            />
-          ))}
+          <path
+            d={held
+              .map((corners) => `M${corners.map((at: Point) => place(at).join(' ')).join('L')}Z`)
+              .join('')}
+            fill="url(#laid-hatch)"
+            className="stroke-graphite"
+          />
           {next && (
             <path
               d={`M${place(next.from).join(' ')}L${place(next.to).join(' ')}`}
