@@ -1,11 +1,12 @@
 import { bondPattern, documentUnit } from '@/paving/bond';
 import { documentBuildUp } from '@/paving/build-up';
 import type { LayoutDocument } from '@/paving/layout-document';
+import type { Display } from '@/paving/length';
 import { documentLevels } from '@/paving/levels';
 import { thickestUnit } from '@/takeoff/earth-cells';
 import type { DrawCommand, PaperBox, PaperPoint } from './drawing';
 import { PENS, boxHeight, boxRing, boxWidth } from './drawing';
-import { figureText, levelFigureText } from './figures';
+import { figureText, lengthText, levelFigureText } from './figures';
 import { AGGREGATE_COLOUR, INK, PAPER, SECOND_INK, UNIT_COLOUR, inkMix } from './inks';
 import { LEVEL_MARK, levelMark } from './level-mark';
 import { panelText } from './panel';
@@ -23,8 +24,30 @@ export interface LayerSection {
 const EDGE_MM = 70;
 /** How much of the ground below the dig is drawn, mm of the ground. */
 const GROUND_MM = 70;
-/** The floor is drawn over at least this length, mm of the ground: on a sheet, and where space is dear. */
+/** On a sheet, to a preferred scale and in full words; on a screen or in running text, where space is dear. */
+export type SectionPlace = 'sheet' | 'screen';
+/** The floor is drawn over at least this length, mm of the ground. */
 const LEAST_RUN_MM = { sheet: 360, screen: 150 } as const;
+/** No name is longer than this, paper mm. */
+const LONGEST_NAME = 62;
+const WORDS = {
+  sheet: {
+    edge: 'top of the edge',
+    dig: 'bottom of the dig',
+    Bedding: 'Bedding, screeded',
+    Base: 'Base, compacted',
+    geotextile: 'Geotextile on the ground',
+    ground: 'Ground, trimmed',
+  },
+  screen: {
+    edge: 'edge',
+    dig: 'dig',
+    Bedding: 'Bedding',
+    Base: 'Base',
+    geotextile: 'Geotextile',
+    ground: 'Ground',
+  },
+} as const;
 /** An edge that stands on its own goes below the dig by this, mm of the ground. */
 const EDGE_FOOT_MM = 30;
 /** Room above the section for the datum's mark, paper mm. */
@@ -35,14 +58,16 @@ const BEDDING_COLOUR = inkMix(PAPER, AGGREGATE_COLOUR, 0.5);
 const BASE_COLOUR = inkMix(PAPER, INK, 0.1);
 
 interface Band {
-  readonly name: string;
+  readonly name: 'Unit' | 'Bedding' | 'Base';
+  /** False on a sheet where the document has no layers yet, and a usual thickness stands in. */
+  readonly known: boolean;
   /** Levels of its top and bottom, mm above the datum. */
   readonly top: number;
   readonly bottom: number;
 }
 
 /** Unit, bedding and base from the finish down; a layer without thickness is none. */
-function sectionBands(document: LayoutDocument): readonly Band[] {
+function sectionBands(document: LayoutDocument, place: SectionPlace): readonly Band[] {
   const { bedding, base } = documentBuildUp(document);
   const layers = [
     ['Unit', thickestUnit(document)],
@@ -51,42 +76,60 @@ function sectionBands(document: LayoutDocument): readonly Band[] {
   ] as const;
   let top = documentLevels(document).finish;
   return layers.flatMap(([name, thickness]) => {
-    const band = { name, top, bottom: top - thickness };
+    const known = name === 'Unit' || place === 'screen' || document.buildUp !== undefined;
+    const band = { name, known, top, bottom: top - thickness };
     top -= thickness;
     return thickness > 0 ? [band] : [];
   });
 }
 
+const bandFigure = ({ name, top, bottom }: Band, display: Display): string =>
+  `${name} ${figureText(top - bottom, display)}`;
+
+/** A layer by its name and thickness; the unit by its own name, or that of the thickest. */
+function bandWords({ name, known, top, bottom }: Band, document: LayoutDocument): string {
+  const thickness = lengthText(top - bottom, document.display, 1);
+  if (name !== 'Unit') return `${WORDS.sheet[name]}: ${known ? thickness : 'not entered yet'}`;
+  const unit = bondPattern(document)
+    .motif.map(({ unit: id }) => documentUnit(document, id))
+    .reduce((one, other) => (other.thickness > one.thickness ? other : one));
+  const room = LONGEST_NAME - textWidth(`: ${thickness}`, LETTERING.small);
+  return `${textFitted(unit.name, room, LETTERING.small)}: ${thickness}`;
+}
+
 /**
- * The section at the perimeter, where the finish is highest, in `box` on the paper. Layers are to scale, a
- * preferred one unless `toScale` is false (as on a screen). Where two texts would fall on one line, they step
- * aside and lines lead to them.
+ * The section at the perimeter, where the finish is highest, in `box` on the paper. Layers are to scale. A sheet
+ * says which of them are not entered yet; a screen shows what stands in for them. Where two texts would fall on
+ * one line, they step aside and lines lead to them.
  */
 export function layerSection(
   document: LayoutDocument,
   box: PaperBox,
   frame: string,
-  { toScale = true }: { readonly toScale?: boolean } = {},
+  place: SectionPlace,
 ): LayerSection {
   const { display } = document;
+  const words = WORDS[place];
   const { geotextile, overdig } = documentBuildUp(document);
   const { finish, proud } = documentLevels(document);
-  const bands = sectionBands(document);
+  const bands = sectionBands(document, place);
   const formation = bands[bands.length - 1].bottom;
   const levels = [
-    { level: 0, text: `${levelFigureText(0, display)} edge` },
+    { level: 0, text: `${levelFigureText(0, display)} ${words.edge}` },
     ...(Math.abs(finish) < 0.5
       ? []
       : [{ level: finish, text: `${levelFigureText(finish, display)} finish` }]),
-    { level: formation, text: `${levelFigureText(formation, display)} dig` },
+    ...(bands[bands.length - 1].known
+      ? [{ level: formation, text: `${levelFigureText(formation, display)} ${words.dig}` }]
+      : []),
   ].sort((one, other) => other.level - one.level);
   const labels = [
-    ...bands.map(({ name, top, bottom }) => ({
-      text: `${name} ${figureText(top - bottom, display)}`,
-      level: (top + bottom) / 2,
+    ...bands.map((band) => ({
+      text: place === 'sheet' ? bandWords(band, document) : bandFigure(band, display),
+      level: (band.top + band.bottom) / 2,
     })),
-    ...(geotextile ? [{ text: 'Geotextile', level: formation }] : []),
-    { text: 'Ground', level: formation - GROUND_MM * 0.55 },
+    ...(geotextile ? [{ text: words.geotextile, level: formation }] : []),
+    { text: words.ground, level: formation - GROUND_MM * 0.55 },
   ];
   const widest = (texts: readonly { text: string }[]) =>
     Math.max(...texts.map(({ text }) => textWidth(text, LETTERING.small)));
@@ -98,10 +141,11 @@ export function layerSection(
   const bottomLevel = formation - GROUND_MM;
   const room = boxHeight(box) - HEAD - 1;
   const tall = topLevel - bottomLevel;
-  const wide = EDGE_MM + LEAST_RUN_MM[toScale ? 'sheet' : 'screen'];
-  const scale = toScale
-    ? scaleFitting(tall, wide, room, sectionWidth)
-    : Math.max(tall / room, wide / sectionWidth);
+  const wide = EDGE_MM + LEAST_RUN_MM[place];
+  const scale =
+    place === 'sheet'
+      ? scaleFitting(tall, wide, room, sectionWidth)
+      : Math.max(tall / room, wide / sectionWidth);
   const top = box.top + HEAD + Math.max(0, (room - tall / scale) / 2);
   const left = box.left + leftWidth;
   const right = left + sectionWidth;
@@ -200,7 +244,7 @@ export function layerSection(
 
   // Thicknesses and names at the right.
   const chain = right + 2;
-  for (const { top: high, bottom: low } of bands) {
+  for (const { top: high, bottom: low } of bands.filter(({ known }) => known)) {
     line([chain, y(high)], [chain, y(low)], PENS.fine);
     for (const end of [high, low])
       line([chain - 0.7, y(end) + 0.7], [chain + 0.7, y(end) - 0.7], PENS.fine);
@@ -212,7 +256,7 @@ export function layerSection(
   );
   labels.forEach(({ text, level }, n) => {
     const at = labelYs[n];
-    line([n < bands.length ? chain : right, y(level)], [chain + 3.6, at], PENS.fine);
+    line([bands[n]?.known ? chain : right, y(level)], [chain + 3.6, at], PENS.fine);
     commands.push(panelText([chain + 4.4, at + LETTERING.small / 2], text, frame));
   });
   return { commands, scale };

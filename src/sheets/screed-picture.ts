@@ -76,11 +76,17 @@ function stripPlan(
       stroke: { width: PENS.medium, colour: INK },
     },
   ];
+  const turned = paper.map(([x, y]): PaperPoint => [
+    x * along[0] + y * along[1],
+    x * across[0] + y * across[1],
+  ]);
   for (let n = 1; n < passes; n++)
-    commands.push(line(at(from, low + n * bay), at(to, low + n * bay), PENS.fine, [1.6, 1]));
+    for (const [s0, s1] of stretchesAt(turned, low + n * bay))
+      commands.push(line(at(s0, low + n * bay), at(s1, low + n * bay), PENS.fine, [1.6, 1]));
   for (let n = 0; n < passes; n++) {
     const middle = low + (n + 0.5) * bay;
-    const [start, end] = [from + (to - from) * 0.2, from + (to - from) * 0.8];
+    const [s0, s1] = longestStretch(stretchesAt(turned, middle)) ?? [from, to];
+    const [start, end] = [s0 + (s1 - s0) * 0.2, s0 + (s1 - s0) * 0.85];
     commands.push(
       line(at(start, middle - bay * 0.42), at(start, middle + bay * 0.42), PENS.thick),
       line(at(start, middle), at(end, middle), PENS.thin),
@@ -99,6 +105,22 @@ function stripPlan(
   return commands;
 }
 
+type Stretch = readonly [from: number, to: number];
+
+/** Where the line at `across` runs within an outline whose points are along and across. */
+function stretchesAt(outline: readonly PaperPoint[], across: number): readonly Stretch[] {
+  const crossings = outline
+    .flatMap(([s0, t0], n): number[] => {
+      const [s1, t1] = outline[(n + 1) % outline.length];
+      return t0 < across === t1 < across ? [] : [s0 + ((across - t0) / (t1 - t0)) * (s1 - s0)];
+    })
+    .sort((one, other) => one - other);
+  return crossings.flatMap((from, n): Stretch[] => (n % 2 === 0 ? [[from, crossings[n + 1]]] : []));
+}
+
+const longestStretch = (stretches: readonly Stretch[]): Stretch | undefined =>
+  [...stretches].sort((one, other) => other[1] - other[0] - (one[1] - one[0]))[0];
+
 /** The board from the front, between edges or rails, figured. */
 function boardElevation(
   board: ScreedBoard,
@@ -107,6 +129,7 @@ function boardElevation(
   frame: string,
 ): DrawCommand[] {
   const figure = (mm: number) => figureText(mm, display);
+  const carrierName = board.rides === 'edge' ? 'edge' : 'rail';
   const carrier = Math.min(9, boxWidth(box) * 0.12);
   const [left, right] = [box.left + carrier, box.right - carrier];
   const row = LETTERING.small + 2.2;
@@ -177,13 +200,16 @@ function boardElevation(
   for (const x of [boardLeft, boardRight])
     commands.push(line([x, lower], [x, first + 0.8], PENS.fine));
   dimension(boardLeft, boardRight, first, `${figure(board.boardLength)} lower edge`);
+  if (textWidth(carrierName, LETTERING.small) < carrier - 0.6)
+    for (const x of [box.left + carrier / 2, right + carrier / 2])
+      commands.push(panelText([x, first - 0.8], carrierName, frame, { anchor: 'middle' }));
   for (const x of [left, right]) commands.push(line([x, foot], [x, first + row + 0.8], PENS.fine));
   dimension(left, right, first + row, `${figure(board.bayWidth)} clear`);
 
   // How far the lower edge hangs, within the board.
   const x = boardLeft + (boardRight - boardLeft) * 0.06;
   const text = textFitted(
-    `${figure(board.depth)} below the ears`,
+    `${figureText(board.depth, display, 1)} below the ears`,
     boardRight - x - 2,
     LETTERING.small,
   );

@@ -10,39 +10,43 @@ import type { PaperBox } from './drawing';
 import { boxInset } from './drawing';
 import { COLUMN_INSET, COLUMN_WIDTH, panelsFlowed } from './figured-sheet';
 import { countText, figureText, lengthText } from './figures';
+import { layerSection } from './layer-section';
 import { markRows } from './mark-row';
 import type { PanelColumn, PanelRow } from './panel';
-import { headingRow, itemRow, keptTogether, pairRow, textRows } from './panel';
+import { headingRow, itemRow, keptTogether, pairRow, panelText, textRows } from './panel';
 import type { PaperName } from './paper';
 import { paperOf } from './paper';
 import type { PlanInput } from './plan-input';
 import type { TableColumn } from './ruled-table';
 import { ruledTable } from './ruled-table';
-import { scaleFitting, scaleName } from './scales';
-import { screedDrawing } from './board-elevation';
-import { layerHeight, sectionDrawing, sectionLayers } from './build-up-section';
+import { scaleName } from './scales';
+import { screedPicture } from './screed-picture';
 import type { SheetDraft } from './sheet-draft';
 import { footStrip, rule } from './sheet-draft';
 import { tableDrafts } from './table-sheet';
+import { LETTERING } from './text-measure';
 
 /** Most of the drawing's height that the section takes; the screed board has the rest. */
 const SECTION_SHARE = 0.56;
+const FRAME = 'section';
+const BOARD_TITLE =
+  'Screed board: how it is pulled, and the board as you look along its pull (not to scale)';
 
 /** Section: the build-up figured, the screed board, and levels at pegs where levels are entered. */
 export function sectionDrafts(input: PlanInput, name: PaperName): readonly SheetDraft[] {
-  const { document, motif } = input.laying;
+  const { document } = input.laying;
   const paper = paperOf(name, 'landscape');
   const title = footStrip(paper);
   const split = paper.frame.right - COLUMN_WIDTH;
   const drawing: PaperBox = boxInset({ ...paper.frame, right: split, bottom: title.top }, 3);
-  const unit = motif.reduce(
-    (one, { unit: other }) => (other.thickness > one.thickness ? other : one),
-    motif[0].unit,
-  );
   const high = (drawing.bottom - drawing.top) * SECTION_SHARE;
-  const depth = sectionLayers(document, unit).reduce((sum, layer) => sum + layerHeight(layer), 0);
-  const { finish } = documentLevels(document);
-  const scale = scaleFitting(depth + Math.abs(finish), 1, high - 14, 1);
+  const section = layerSection(
+    document,
+    { ...drawing, bottom: drawing.top + high },
+    FRAME,
+    'sheet',
+  );
+  const { scale } = section;
   const columns: readonly PanelColumn[] = [
     {
       frame: 'column 1',
@@ -70,14 +74,16 @@ export function sectionDrafts(input: PlanInput, name: PaperName): readonly Sheet
       layers: [
         {
           name: 'section',
-          commands: sectionDrawing(document, unit, scale, {
-            ...drawing,
-            bottom: drawing.top + high,
-          }),
+          commands: section.commands,
         },
         {
           name: 'screed board',
-          commands: screedDrawing(screedBoard(document), document.display, board),
+          commands: [
+            panelText([board.left, board.top + LETTERING.small], BOARD_TITLE, FRAME, {
+              weight: 700,
+            }),
+            ...screedPicture(document, { ...board, top: board.top + 5 }, FRAME),
+          ],
         },
         { name: 'panel', commands: first.commands },
       ],

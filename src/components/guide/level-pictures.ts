@@ -94,11 +94,7 @@ export function levelPicturesOf(document: LayoutDocument): LevelPictures {
   const interval = formatLength(map.interval, document.display);
   return {
     map: picture(drawn.commands, width, height),
-    section: picture(
-      layerSection(document, inset(100, 62), 'section', { toScale: false }).commands,
-      100,
-      62,
-    ),
+    section: picture(layerSection(document, inset(100, 62), 'section', 'screen').commands, 100, 62),
     screed: picture(screedPicture(document, inset(100, 46), 'screed'), 100, 46),
     key: levelMapKey(model, map, interval).map(({ sample, text }) => ({
       sample: picture(mapKeySample(sample, { left: 0.6, top: 0.6, right: 8.4, bottom: 4.4 }), 9, 5),

@@ -62,16 +62,24 @@ describe.each(floors)('a floor %s', (_, document) => {
   test.each(boxes)(
     'the section’s lettering stays in its box and apart, as it should on $right mm',
     (box) => {
-      for (const toScale of [true, false]) {
-        const { commands, scale } = layerSection(document, box, FRAME, { toScale });
-        expect(letteringFaults(sheetOf(commands, box))).toEqual([]);
-        if (toScale) expect(PREFERRED_SCALES).toContain(scale);
-        const texts = textsOf(commands, box);
-        expect(texts.some((text) => text.startsWith('Unit '))).toBe(true);
-        expect(texts.includes('Geotextile')).toBe(document.buildUp!.geotextile);
-      }
+      const { commands } = layerSection(document, box, FRAME, 'screen');
+      expect(letteringFaults(sheetOf(commands, box))).toEqual([]);
+      const texts = textsOf(commands, box);
+      expect(texts.some((text) => text.startsWith('Unit '))).toBe(true);
+      expect(texts.includes('Geotextile')).toBe(document.buildUp!.geotextile);
     },
   );
+
+  test('a sheet’s section is to a preferred scale, in full words', () => {
+    const box = boxes[1];
+    const { commands, scale } = layerSection(document, box, FRAME, 'sheet');
+    expect(letteringFaults(sheetOf(commands, box))).toEqual([]);
+    expect(PREFERRED_SCALES).toContain(scale);
+    const texts = textsOf(commands, box);
+    expect(texts.some((text) => text.startsWith(`${document.units[0].name}: `))).toBe(true);
+    expect(texts.some((text) => text.startsWith('Bedding, screeded: '))).toBe(true);
+    expect(texts.includes('Geotextile on the ground')).toBe(document.buildUp!.geotextile);
+  });
 
   test.each(boxes)('the screed board’s too, on $right mm', (box) => {
     const high = { ...box, bottom: box.top + (box.right - box.left) * 0.5 };
@@ -81,7 +89,7 @@ describe.each(floors)('a floor %s', (_, document) => {
 });
 
 test('layers on the section are as thick as they are figured', () => {
-  const { commands, scale } = layerSection(SLOPING_COURT, boxes[1], FRAME);
+  const { commands, scale } = layerSection(SLOPING_COURT, boxes[1], FRAME, 'sheet');
   const heights = commands.flatMap((command) =>
     command.kind === 'path' &&
     command.rings[0].points.length === 4 &&
@@ -93,6 +101,39 @@ test('layers on the section are as thick as they are figured', () => {
   // The guide's court: 25 mm of bedding on 100 mm of base.
   for (const thickness of [25, 100])
     expect(heights.some((height) => Math.abs(height - thickness) < 0.01)).toBe(true);
+});
+
+test('a sheet says which layers are not entered yet; a screen shows what stands in for them', () => {
+  const bare: LayoutDocument = { ...SLOPING_COURT, buildUp: undefined };
+  const texts = (place: 'sheet' | 'screen') =>
+    textsOf(layerSection(bare, boxes[1], FRAME, place).commands, boxes[1]);
+  const unknown = texts('sheet').filter((text) => text.includes('not entered yet'));
+  expect(unknown).toEqual([
+    'Bedding, screeded: not entered yet',
+    'Base, compacted: not entered yet',
+  ]);
+  expect(texts('sheet').some((text) => text.includes('bottom of the dig'))).toBe(false);
+  expect(texts('screen')).toEqual(expect.arrayContaining(['Bedding 25', 'Base 100']));
+});
+
+test('the board is drawn within the floor’s own strips', () => {
+  // The court is an L: of its two strips, 4700 mm across, the upper ends at x = 4100 of 6400 mm.
+  const box: PaperBox = { left: 1, top: 1, right: 201, bottom: 61 };
+  const commands = screedPicture(SLOPING_COURT, box, FRAME);
+  const heads = commands.flatMap((command) =>
+    command.kind === 'path' && command.rings[0].points.length === 3
+      ? [command.rings[0].points[0][0]]
+      : [],
+  );
+  const outline = commands[0].kind === 'path' ? commands[0].rings[0].points : [];
+  const [left, right] = [
+    Math.min(...outline.map(([x]) => x)),
+    Math.max(...outline.map(([x]) => x)),
+  ];
+  const shares = heads.map((x) => (x - left) / (right - left)).sort();
+  expect(shares).toHaveLength(2);
+  expect(shares[0]).toBeLessThan(4100 / 6400);
+  expect(shares[1]).toBeGreaterThan(4100 / 6400);
 });
 
 describe('the level map', () => {

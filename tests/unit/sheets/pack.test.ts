@@ -205,7 +205,9 @@ describe('the set-out pack', () => {
     ).toBeGreaterThan(2);
     const said = section(levelled(COURT));
     expect(said.some((text) => text.includes('not entered yet'))).toBe(false);
-    expect(said).toEqual(expect.arrayContaining(['30\u2009mm', '150\u2009mm', '235']));
+    expect(said).toEqual(
+      expect.arrayContaining(['30\u2009mm', '150\u2009mm', '−235 bottom of the dig']),
+    );
   });
 
   it('names the edge that the screed board is pulled along, however it lies', () => {

@@ -24,10 +24,7 @@ export function LayerFields() {
   const change = (part: Partial<BuildUp>) =>
     table.getState().edit((now) => buildUpChanged(now, part));
   const shown = (mm: number) => formatLength(mm, display, { decimals: 1 });
-  const section = useMemo(
-    () => layerSection(document, PICTURE, 'section', { toScale: false }),
-    [document],
-  );
+  const section = useMemo(() => layerSection(document, PICTURE, 'section', 'screen'), [document]);
   const field = (name: 'bedding' | 'base' | 'overdig', label: string, hint: string) => (
     <div>
       <LengthField
