@@ -99,6 +99,7 @@ function CheckCard({
             mm={reading ? reading.measured : null}
             display={display}
             inputRef={input}
+            refuse={(read) => (read < 0 ? 'A tape reads nothing less than 0.' : null)}
             onLength={onRead}
           />
         </div>

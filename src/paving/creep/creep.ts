@@ -163,7 +163,8 @@ export function creep(laying: Laying, input: CreepInput, plan: SetOut = setOut(l
       },
       {
         direction: 'across',
-        count: courses.length,
+        // From the first string to the last the far side of the last course does not count.
+        count: courses.length - 1,
         sides: height(floors.larger) - acrossNow,
         joints: acrossGain,
       },

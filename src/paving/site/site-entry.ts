@@ -24,7 +24,7 @@ export const courseEntrySchema = z.object({
 export const checkEntrySchema = z.object({
   kind: z.literal('check'),
   check: z.string().min(1).max(80),
-  measured: z.number().min(-1e8).max(1e8).nullable(),
+  measured: z.number().min(0, 'A tape reads nothing less than 0.').max(1e8).nullable(),
 });
 
 export const noteEntrySchema = z.object({

@@ -93,7 +93,7 @@ describe('units that run large or small', () => {
       ['along', 'tolerance'],
       ['across', 'tolerance'],
     ]);
-    const [along] = capacity;
+    const [along, across] = capacity;
     expect(along.worst.growth).toBeCloseTo(10 * 2, 6);
     expect(along.worst.joint).toBeCloseTo(3 - 20 / 9, 6);
     // 0.78 mm is less than the 2 mm that ICPI has for a joint.
@@ -101,6 +101,9 @@ describe('units that run large or small', () => {
     expect(along.chance.growth).toBeCloseTo(Math.sqrt(10) * 2, 6);
     expect(along.chance.joint).toBeCloseTo(3 - (Math.sqrt(10) * 2) / 9, 6);
     expect(along.chance.does).toBe(true);
+    // From string to string: as many units as are said grow, and as many joints share it.
+    expect(across.worst.growth).toBeCloseTo(across.units * 2, 6);
+    expect(across.worst.joint).toBeCloseTo(3 - 2, 6);
   });
 
   test('with units as planned nothing changes, whatever the bond', () => {
