@@ -27,6 +27,11 @@ export function CreepFigures({ found, display }: { found: Creep; display: Displa
       {found.edges.length > 0 && (
         <>
           <h4 className="mt-5 font-bold">The gap at each edge, joints kept</h4>
+          <p className="text-sm text-slate">
+            {found.heldCourse === null
+              ? 'Reckoned from the first unit, where it is drawn.'
+              : `Reckoned from course ${found.heldCourse}, which is laid.`}
+          </p>
           <Rows
             head={['Edge', 'drawn', 'comes to', '']}
             rows={found.edges.map(({ name, planned, coming, holds }) => ({

@@ -15,7 +15,7 @@ const TEN = 10;
 
 /** Units that run large or small: what it comes to, whether the joints take it, and the rest of the floor fitted anew. */
 export function SizesTab(props: TabProps) {
-  const { kept, floor, display } = props;
+  const { kept, floor, record, display } = props;
   const { document } = kept.pack;
   // The words of the reckoning follow the tape in hand; the figures do not change.
   const laying = useMemo(() => layFloor({ ...document, display }), [document, display]);
@@ -24,9 +24,11 @@ export function SizesTab(props: TabProps) {
   const wrong = measures.length > 0 ? measureProblem(laying.document, measures) : null;
   const found = useMemo(
     (): Creep | null =>
-      measures.length > 0 && wrong === null ? creep(laying, { measures }, floor.setOut) : null,
+      measures.length > 0 && wrong === null
+        ? creep(laying, { measures, laid: [...record.laid.keys()] }, floor.setOut)
+        : null,
     // The measures are made anew at each drawing; what they were made from is not.
-    [laying, floor, measured, wrong],
+    [laying, floor, record, measured, wrong],
   );
   const units = [...new Set(bondPattern(document).motif.map(({ unit }) => unit))].map((id) =>
     documentUnit(document, id),

@@ -27,6 +27,8 @@ export interface CreepInput {
   readonly measures: readonly UnitMeasure[];
   /** Left out: what the trade allows (`tradeJoints`). */
   readonly joints?: JointLimits;
+  /** Numbers of the courses that are laid: the outermost of them is held, else the first unit. */
+  readonly laid?: readonly number[];
 }
 
 export interface ActualUnit {
@@ -82,6 +84,8 @@ export interface EdgeCreep {
 
 export interface Creep {
   readonly units: readonly ActualUnit[];
+  /** The course held where it is drawn while the others grow; null: the first unit is. */
+  readonly heldCourse: number | null;
   readonly joints: JointLimits & { readonly planned: number; readonly source: string };
   readonly courses: readonly CourseCreep[];
   /** From the first string to the last, square to them. */

@@ -1,10 +1,11 @@
+import type { Point } from '@/geometry/point';
 import { edgeName } from '../edge-names';
 import { gapProfile } from '../gap-profile';
-import { layFloor, type Laying } from '../laying';
+import { layFloor, unitCorners, type Laying } from '../laying';
 import type { LayoutDocument } from '../layout-document';
 import { parseLayoutDocument } from '../layout-validation';
 import { LENGTH_TOLERANCE_MM } from '@/geometry/tolerance';
-import { setOut, type SetOut } from '../set-out/set-out';
+import { setOut, type Course, type SetOut } from '../set-out/set-out';
 import { stringStretches } from '../set-out/string-crossings';
 import { unitFind } from '../unit-rows';
 import { actualDocument, jointFreedom, keptJoints, type Joints } from './actual-pattern';
@@ -41,8 +42,8 @@ const within = (joint: number, { least, greatest }: JointLimits) =>
   joint >= least - JOINT_ROUNDING_MM && joint <= greatest + JOINT_ROUNDING_MM;
 
 /**
- * What becomes of a floor with its units as they are, when the crew starts at the first unit and keeps to the planned
- * joints (stepping stones: to the planned steps). Throws what `measureProblem` says of measures that cannot be.
+ * What becomes of a floor with its units as they are, when the crew starts at the first unit, or has started with the
+ * courses laid, and keeps to the planned joints (stepping stones: to the planned steps). Throws what `measureProblem` says of measures that cannot be.
  */
 export function creep(laying: Laying, input: CreepInput, plan: SetOut = setOut(laying)): Creep {
   const { document, ground, laid } = laying;
@@ -56,6 +57,7 @@ export function creep(laying: Laying, input: CreepInput, plan: SetOut = setOut(l
   if (!plan.firstUnit) {
     return {
       units,
+      heldCourse: null,
       joints,
       courses: [],
       across: { courses: 0, growth: 0, doubt: 0, joint: null, jointDoes: true },
@@ -66,14 +68,19 @@ export function creep(laying: Laying, input: CreepInput, plan: SetOut = setOut(l
     };
   }
   const addressOf = (unit: number): UnitAddress => [laid.i[unit], laid.j[unit], laid.k[unit]];
-  const { unit: first, corners, nearest } = plan.firstUnit;
+  const held = heldCorner(laying, plan.courses, input.laid ?? []) ?? {
+    course: null,
+    unit: plan.firstUnit.unit,
+    corner: plan.firstUnit.nearest,
+    at: plan.firstUnit.corners[plan.firstUnit.nearest],
+  };
   const placed = (sizes: readonly ActualUnit[], by: Joints = keptJoints(document, sizes)) =>
     anchored(
       actualDocument(document, sizes, by),
       ground,
-      addressOf(first),
-      nearest,
-      corners[nearest],
+      addressOf(held.unit),
+      held.corner,
+      held.at,
     );
   const coming = placed(units);
   const kept = keptJoints(document, units);
@@ -144,6 +151,7 @@ export function creep(laying: Laying, input: CreepInput, plan: SetOut = setOut(l
 
   const found: Omit<Creep, 'advice'> = {
     units,
+    heldCourse: held.course,
     joints,
     courses,
     across: {
@@ -176,6 +184,33 @@ export function creep(laying: Laying, input: CreepInput, plan: SetOut = setOut(l
     ...found,
     advice: creepAdvice(document, found, checked.ok ? null : checked.problems[0].message),
   };
+}
+
+/**
+ * Of the courses laid the outermost, and the corner of its first unit on its outer side. Null when none is laid.
+ */
+function heldCorner(
+  { document, ground, laid, motif }: Laying,
+  courses: readonly Course[],
+  down: readonly number[],
+) {
+  const lying = courses.filter(({ number }) => down.includes(number));
+  if (lying.length === 0) return null;
+  const [least, greatest] = [lying[0], lying[lying.length - 1]];
+  const fromFirst = least.number - courses[0].number <= courses.length - greatest.number;
+  const course = fromFirst ? least : greatest;
+  const [unit] = course.runs[0].laid;
+  const { direction, normal } = unitPlaces(document, ground).strings;
+  const corners = unitCorners(motif[laid.k[unit]], laid.x[unit], laid.y[unit]);
+  const off = ([x, y]: Point, [dx, dy]: Point) => x * dx + y * dy;
+  const out = (at: Point) => (fromFirst ? 1 : -1) * off(at, normal);
+  const corner = [0, 1, 2, 3].reduce((best, n) => {
+    const outer = out(corners[n]) - out(corners[best]);
+    const level = Math.abs(outer) <= LENGTH_TOLERANCE_MM;
+    const earlier = off(corners[n], direction) < off(corners[best], direction);
+    return outer < -LENGTH_TOLERANCE_MM || (level && earlier) ? n : best;
+  }, 0);
+  return { course: course.number, unit, corner, at: corners[corner] };
 }
 
 function jointsWider(document: LayoutDocument, joints: Joints, which: keyof Joints): Joints {

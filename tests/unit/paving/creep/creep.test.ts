@@ -70,6 +70,27 @@ describe('units that run large or small', () => {
     expect(by.BC.planned).toBeCloseTo(60, 6);
   });
 
+  test('edges: with courses laid the outermost of them stays, wherever the first unit is', () => {
+    // Taped from C and D: the first unit is at the far corner.
+    const far = field({
+      setOut: {
+        datums: [
+          [0, 2],
+          [0, 3],
+        ],
+      },
+    });
+    const coming = (laid: readonly number[]) => {
+      const { edges, heldCourse } = creep(far, { measures: [ten(far, 0.9)], laid });
+      const by = new Map(edges.map((edge) => [edge.name, edge.coming]));
+      return [heldCourse, ...['AB', 'BC', 'CD', 'DA'].map((name) => by.get(name)?.toFixed(6))];
+    };
+    const gaps = (...all: number[]) => all.map((gap) => gap.toFixed(6));
+    expect(coming([])).toEqual([null, ...gaps(40 - 9, 60, 60, 40 - 9)]);
+    expect(coming([1, 2, 3])).toEqual([1, ...gaps(40, 60 - 9, 60 - 9, 40)]);
+    expect(coming([10, 9])).toEqual([10, ...gaps(40 - 9, 60 - 9, 60, 40)]);
+  });
+
   test('more growth than the gap: a row of ten and a column of ten are lost', () => {
     const found = creep(field(), { measures: [ten(field(), 6)] });
     // The far side comes 60 mm nearer and meets the clearance of 6: nineteen units in all.
