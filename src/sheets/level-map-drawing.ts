@@ -8,6 +8,7 @@ import { spotName } from '@/takeoff/level-warnings';
 import { pegLevels } from '@/takeoff/peg-levels';
 import type { DrawCommand, PaperBox, PaperPoint, Stroke } from './drawing';
 import { PENS, boxRing } from './drawing';
+import { arrowCommands, fallArrows } from './fall-arrows';
 import { levelFigureText } from './figures';
 import { INK, PAPER, SECOND_INK } from './inks';
 import { isFree, withLabels, type LabelSpace } from './label-space';
@@ -29,13 +30,13 @@ const SPOT_RADIUS = 0.8;
 
 export interface LevelMapPicture {
   readonly commands: readonly DrawCommand[];
-  /** Contours and spots whose figures found no room. */
-  readonly unfigured: number;
+  /** Figures of pegs and spots that found no room; a contour's neighbours tell its level. */
+  readonly unfigured: readonly string[];
 }
 
 /**
  * The level map: ground and keep-outs, hatching of cut and of fill, contours of the existing ground with their
- * levels, the line where nothing is dug or filled, spots, and pegs with the finish. Levels are over the datum.
+ * levels, the line where nothing is dug or filled, spots, the fall, and pegs with the finish. Levels are over the datum.
  */
 export function levelMapDrawing(
   document: LayoutDocument,
@@ -72,28 +73,40 @@ export function levelMapDrawing(
     },
   ];
 
-  // Figures, each on a plate of the paper's own colour: pegs first, then spots, then contours.
-  let space: LabelSpace = { frame: box, outlines: [], lines: [] };
-  let unfigured = 0;
+  // Figures, each on a plate of the paper's own colour: pegs first, then spots, the fall, and contours.
+  const arrows = fallArrows(document, perimeter.outline, view);
+  let space: LabelSpace = {
+    frame: box,
+    outlines: arrows.outlines,
+    lines: model.ground.rings.flatMap(({ outline }) =>
+      outline.map((from, n) => ({
+        from: on(from),
+        to: on(outline[(n + 1) % outline.length]),
+      })),
+    ),
+  };
+  const unfigured: string[] = [];
   const plates: DrawCommand[] = [];
   const place = (
     places: readonly PaperPoint[],
     text: string,
     turnDeg = 0,
     weight: 400 | 600 = 400,
-  ) => {
+  ): boolean => {
     const width = textWidth(text, LETTERING.small, weight);
-    for (const at of places) {
+    // Clear of edges where there is such a place, else over them.
+    const tries = [false, true].flatMap((overLines) => places.map((at) => ({ at, overLines })));
+    for (const { at, overLines } of tries) {
       const label = { at, height: LETTERING.small, anchor: 'middle' as const, turnDeg };
       const corners = lineCorners(label, width + 0.8);
-      if (!isFree(space, corners, { overLines: true })) continue;
+      if (!isFree(space, corners, { overLines })) continue;
       space = withLabels(space, [corners]);
       plates.push({ kind: 'path', rings: [{ points: corners, closed: true }], fill: PAPER });
       const command = panelText(at, text, frame, { anchor: 'middle', weight });
       plates.push(command.kind === 'text' ? { ...command, turnDeg } : command);
-      return;
+      return true;
     }
-    unfigured += 1;
+    return false;
   };
   const around = ([x, y]: PaperPoint, width: number): PaperPoint[] => {
     const [dx, up, down] = [width / 2 + 2.2, y - 2.6, y + LETTERING.small + 2];
@@ -129,7 +142,8 @@ export function levelMapDrawing(
         ],
       ]);
       const text = sheetText(`${peg.name} ${levelFigureText(peg.finish, display)}`);
-      place(around(at, textWidth(text, LETTERING.small, 600)), text, 0, 600);
+      if (!place(around(at, textWidth(text, LETTERING.small, 600)), text, 0, 600))
+        unfigured.push(text);
     }
   }
   spots.forEach(({ at: spotAt, level }, n) => {
@@ -142,8 +156,9 @@ export function levelMapDrawing(
       stroke: { width: PENS.thin, colour: INK },
     });
     const text = sheetText(`${spotName(spots, n)} ${levelFigureText(level, display)}`);
-    place(around(at, textWidth(text, LETTERING.small)), text);
+    if (!place(around(at, textWidth(text, LETTERING.small)), text)) unfigured.push(text);
   });
+  if (arrows.figure) place(arrows.figure.places, sheetText(arrows.figure.text), 0, 600);
   for (const { level, segments } of map.contours) {
     const longest = [...segments].sort((p, q) => lengthOf(q) - lengthOf(p)).slice(0, 4);
     const text = levelFigureText(level, display);
@@ -157,19 +172,24 @@ export function levelMapDrawing(
       text,
     );
   }
-  return { commands: [...commands, ...marks, ...plates], unfigured };
+  return { commands: [...commands, ...arrows.commands, ...marks, ...plates], unfigured };
 }
 
 const lengthOf = ({ from, to }: Segment): number => Math.hypot(to[0] - from[0], to[1] - from[1]);
 
 /** One row of the map's key: how it looks, and what it says. */
 export interface MapKeyRow {
-  readonly sample: 'cut' | 'fill' | 'contour' | 'meeting' | 'rim' | 'spot' | 'peg';
+  readonly sample: 'cut' | 'fill' | 'contour' | 'meeting' | 'rim' | 'spot' | 'fall' | 'peg';
   readonly text: string;
 }
 
 /** What the key of a level map says, for what is on it. */
-export function levelMapKey(model: EarthModel, map: LevelMap, intervalText: string): MapKeyRow[] {
+export function levelMapKey(
+  model: EarthModel,
+  map: LevelMap,
+  intervalText: string,
+  falls: boolean,
+): MapKeyRow[] {
   const rows: MapKeyRow[] = [];
   if (map.cut.length > 0) rows.push({ sample: 'cut', text: 'Earth to dig' });
   if (map.fill.length > 0) rows.push({ sample: 'fill', text: 'Low ground to make up with base' });
@@ -179,6 +199,7 @@ export function levelMapKey(model: EarthModel, map: LevelMap, intervalText: stri
     rows.push({ sample: 'contour', text: `The ground as it is, a line every ${intervalText}` });
   if (model.existing.spots.length > 0) rows.push({ sample: 'spot', text: 'A spot and its level' });
   if (map.rim.length > 0) rows.push({ sample: 'rim', text: 'Measured inside, reckoned outside' });
+  if (falls) rows.push({ sample: 'fall', text: 'The floor falls this way' });
   rows.push({ sample: 'peg', text: 'A peg and the level of the finish' });
   return rows;
 }
@@ -219,6 +240,8 @@ export function mapKeySample(sample: MapKeyRow['sample'], box: PaperBox): DrawCo
           stroke: MAP_STROKES[sample],
         },
       ];
+    case 'fall':
+      return [...arrowCommands([box.left, middle], [box.right, middle])];
     case 'spot':
       return [
         {

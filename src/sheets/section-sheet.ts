@@ -11,6 +11,7 @@ import { boxInset } from './drawing';
 import { COLUMN_INSET, COLUMN_WIDTH, panelsFlowed } from './figured-sheet';
 import { countText, figureText, lengthText } from './figures';
 import { layerSection } from './layer-section';
+import { levelsDrafts } from './levels-sheet';
 import { markRows } from './mark-row';
 import type { PanelColumn, PanelRow } from './panel';
 import { headingRow, itemRow, keptTogether, pairRow, panelText, textRows } from './panel';
@@ -32,7 +33,7 @@ const FRAME = 'section';
 const BOARD_TITLE =
   'Screed board: how it is pulled, and the board as you look along its pull (not to scale)';
 
-/** Section: the build-up figured, the screed board, and levels at pegs where levels are entered. */
+/** Section: the build-up figured, the screed board, and where levels are entered the level map and levels at pegs. */
 export function sectionDrafts(input: PlanInput, name: PaperName): readonly SheetDraft[] {
   const { document } = input.laying;
   const paper = paperOf(name, 'landscape');
@@ -96,6 +97,7 @@ export function sectionDrafts(input: PlanInput, name: PaperName): readonly Sheet
       layers: [{ name: 'panel', commands }],
       rules,
     })),
+    ...levelsDrafts(input, name),
     ...pegDrafts(input, name),
   ];
 }

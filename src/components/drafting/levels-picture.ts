@@ -1,6 +1,6 @@
 import type { Point } from '@/geometry/point';
 import type { Segment } from '@/geometry/region-segments';
-import { rotation } from '@/geometry/rotation';
+import { fallPlace, fallWays } from '@/paving/fall-ways';
 import { documentRing } from '@/paving/ground-edits';
 import { levelFigure } from '@/paving/level-text';
 import { documentLevels, type Fall } from '@/paving/levels';
@@ -77,38 +77,12 @@ function arrow(ink: Ink, from: Point, to: Point, colour: string, width: number) 
   ctx.fill();
 }
 
-/** The ways of a fall as seen on the screen, from a place on: unit vectors down it, y down. */
-function waysDown(fall: Fall): Point[] {
-  const ways = (degrees: readonly number[]) =>
-    degrees.map((each): Point => {
-      const [cos, sin] = rotation(each);
-      return [cos, -sin];
-    });
-  switch (fall.kind) {
-    case 'none':
-      return [];
-    case 'oneWay':
-      return ways([fall.direction]);
-    case 'toPoint':
-      return ways([0, 90, 180, 270].map((turn) => fall.direction + turn));
-    case 'toLine': {
-      const [dx, dy] = [fall.to[0] - fall.from[0], fall.to[1] - fall.from[1]];
-      const along = (Math.atan2(dy, dx) * 180) / Math.PI;
-      return ways([along + 90, along - 90]);
-    }
-  }
-}
-
 /** Arrows down the fall and its steepness; the places that they take. */
 function paintFall(ink: Ink, fall: Fall): Box[] {
   const { colours, document } = ink;
-  const middle = screen(ink, groundMiddle(document));
-  const at =
-    fall.kind === 'toPoint'
-      ? screen(ink, fall.at)
-      : fall.kind === 'toLine'
-        ? screen(ink, [(fall.from[0] + fall.to[0]) / 2, (fall.from[1] + fall.to[1]) / 2])
-        : middle;
+  const at = screen(ink, fallPlace(document));
+  // On the screen y is down.
+  const ways = fallWays(fall).map(([x, y]): Point => [x, -y]);
   if (fall.kind === 'toLine') {
     ink.ctx.strokeStyle = colours.graphite;
     ink.ctx.lineWidth = 1.6;
@@ -117,7 +91,7 @@ function paintFall(ink: Ink, fall: Fall): Box[] {
     ink.ctx.setLineDash([]);
   }
   const meets = fall.kind !== 'oneWay';
-  for (const [x, y] of waysDown(fall)) {
+  for (const [x, y] of ways) {
     // Towards the place that the fall leads to; along the one way, through the middle.
     const [start, end] = meets ? [-ARROW_PX - 12, -12] : [-ARROW_PX / 2, ARROW_PX / 2];
     arrow(
@@ -130,7 +104,7 @@ function paintFall(ink: Ink, fall: Fall): Box[] {
   }
   if (fall.kind === 'toPoint') dot(ink.ctx, at, 5, colours.stone50, colours.graphite);
   if (fall.kind !== 'none') {
-    const [x, y] = waysDown(fall)[0];
+    const [x, y] = ways[0];
     const aside: Point = [
       at[0] - y * 17 - (meets ? x * 44 : 0),
       at[1] + x * 17 - (meets ? y * 44 : 0),

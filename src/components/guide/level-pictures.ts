@@ -1,7 +1,7 @@
 import type { LayoutDocument } from '@/paving/layout-document';
 import { layFloor } from '@/paving/laying';
 import { formatLength } from '@/paving/length';
-import { levelsSchema } from '@/paving/levels';
+import { documentLevels, levelsSchema } from '@/paving/levels';
 import { formatVolume } from '@/paving/volume';
 import { boxRing, type DrawCommand } from '@/sheets/drawing';
 import { PAPER } from '@/sheets/inks';
@@ -96,10 +96,16 @@ export function levelPicturesOf(document: LayoutDocument): LevelPictures {
     map: picture(drawn.commands, width, height),
     section: picture(layerSection(document, inset(100, 62), 'section', 'screen').commands, 100, 62),
     screed: picture(screedPicture(document, inset(100, 46), 'screed'), 100, 46),
-    key: levelMapKey(model, map, interval).map(({ sample, text }) => ({
-      sample: picture(mapKeySample(sample, { left: 0.6, top: 0.6, right: 8.4, bottom: 4.4 }), 9, 5),
-      text,
-    })),
+    key: levelMapKey(model, map, interval, documentLevels(document).fall.kind !== 'none').map(
+      ({ sample, text }) => ({
+        sample: picture(
+          mapKeySample(sample, { left: 0.6, top: 0.6, right: 8.4, bottom: 4.4 }),
+          9,
+          5,
+        ),
+        text,
+      }),
+    ),
     cut: formatVolume(cut, document.display),
     base: formatVolume(base, document.display),
   };

@@ -106,7 +106,7 @@ describe.each(PACKS)('the pack of the %s as PDF, read by machine', (_name, docum
     const diagonal = Math.hypot(unit.length, unit.width);
     let measured = 0;
     for (const [n, sheet] of sheets.entries()) {
-      if (!/^(Floor plan|Control points|Courses)(, part \w+)?$/.test(sheet.type)) continue;
+      if (!/^(Floor plan|Control points|Courses|Levels)(, part \w+)?$/.test(sheet.type)) continue;
       measured += 1;
       const page = await pdf.getPage(n + 1);
       const lines = (await strokedPaths(page as never)).flatMap((path) => path.lines);
@@ -119,7 +119,8 @@ describe.each(PACKS)('the pack of the %s as PDF, read by machine', (_name, docum
           ),
         );
       // On a part a whole unit is measured, corner to corner; elsewhere the longest straight edge too.
-      expect(spans(diagonal / sheet.scale), `${sheet.type}: a unit`).toBe(true);
+      if (sheet.type !== 'Levels')
+        expect(spans(diagonal / sheet.scale), `${sheet.type}: a unit`).toBe(true);
       if (!sheet.type.includes('part') && longest.bulge === 0)
         expect(spans(longest.length / sheet.scale), `${sheet.type}: the edge`).toBe(true);
     }

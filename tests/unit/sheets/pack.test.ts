@@ -227,6 +227,23 @@ describe('the set-out pack', () => {
     expect(pulled(skew(-700))).toMatch(/along (AB|CD)/);
   });
 
+  it('has the level map where a floor has spots or a fall, with every peg, and not otherwise', () => {
+    const levels = (document: LayoutDocument) =>
+      pack(document).filter(({ type }) => type === 'Levels');
+    expect(levels(COURT)).toEqual([]);
+    const [sheet] = levels(levelled(COURT));
+    const said = words(sheet);
+    // 5 mm below the edge, and 1.5 % down over the 5400 mm from E to B: 81 mm.
+    expect(said).toEqual(
+      expect.arrayContaining(['A −86', 'B −86', 'E −5', '1 −20', '2 −60', '3 +30', '1.5\u2009%']),
+    );
+    expect(said).toEqual(expect.arrayContaining(['Earth to dig', 'A spot and its level']));
+    const unmeasured = levelled(COURT);
+    const [dry] = levels({ ...unmeasured, levels: { ...unmeasured.levels!, spots: [] } });
+    expect(words(dry)).toContain('A −86');
+    expect(words(dry)).not.toContain('Earth to dig');
+  });
+
   it('draws with the line widths of ISO 128 alone', () => {
     const widths: readonly number[] = Object.values(PENS);
     for (const sheet of pack(levelled(COURT)))

@@ -1,4 +1,5 @@
 import { formatLength } from '@/paving/length';
+import { documentLevels } from '@/paving/levels';
 import { levelMapKey, mapKeySample } from '@/sheets/level-map-drawing';
 import { SheetPicture } from '../../ui/SheetPicture';
 import { earthOf } from '../earth';
@@ -11,11 +12,12 @@ export function MapKey() {
   const floor = useShownFloor();
   const earth = earthOf(floor);
   if (!earth) return null;
+  const falls = documentLevels(floor.document).fall.kind !== 'none';
   const interval = formatLength(earth.map.interval, floor.document.display, { decimals: 1 });
   return (
     <section aria-label="Key of the level map">
       <ul className="space-y-1 text-sm">
-        {levelMapKey(earth.model, earth.map, interval).map(({ sample, text }) => (
+        {levelMapKey(earth.model, earth.map, interval, falls).map(({ sample, text }) => (
           <li key={sample} className="flex items-center gap-3">
             <span className="w-9 shrink-0">
               <SheetPicture commands={mapKeySample(sample, SAMPLE)} width={9} height={5} label="" />
