@@ -12,8 +12,8 @@ import type { SearchResult } from './refit-search';
 import { chordsNear, unitClearance } from './unit-clearance';
 import { unitPlace, unitPlaces, unitTouch, type UnitAddress, type UnitPlaces } from './unit-places';
 
-/** What the laying may differ by from the search, mm. */
-const AGREEMENT_MM = 1e-3;
+/** What the laying may differ by from the search, mm: units that fit by the tolerance alone are shrunk at their corners. */
+const AGREEMENT_MM = LENGTH_TOLERANCE_MM / 2;
 
 /** The answer, laid and measured by the ordinary laying. */
 export function refitAnswer(
@@ -35,18 +35,22 @@ export function refitAnswer(
   const isLaid = (address: UnitAddress) => unitFind(laid.rows, laid.index.laid, address) >= 0;
   const dropped = floor.rest.filter((address) => !isLaid(address));
   const kept = floor.rest.filter(isLaid);
-  if (result && kept.length !== result.kept)
+  // The search keeps a hair inside the tolerance: the laying may keep more, never fewer.
+  if (result && kept.length < result.kept)
     throw new Error(
       `the re-fit found ${result.kept} units but the laying finds ${kept.length}, first unit at [${floor.at.join(', ')}], joints ${choice.joints.across} and ${choice.joints.along}`,
     );
   const leastGap = restGap(laying, places, kept);
-  if (result && result.gap < Infinity && leastGap !== null) {
-    const measured = Math.min(leastGap, result.gap + AGREEMENT_MM);
-    if (Math.abs(measured - result.gap) > AGREEMENT_MM)
-      throw new Error(
-        `the re-fit found a least gap of ${result.gap} mm but ${leastGap} mm is measured, first unit at [${floor.at.join(', ')}]`,
-      );
-  }
+  if (
+    result &&
+    kept.length === result.kept &&
+    result.gap < Infinity &&
+    leastGap !== null &&
+    leastGap < result.gap - AGREEMENT_MM
+  )
+    throw new Error(
+      `the re-fit found a least gap of ${result.gap} mm but ${leastGap} mm is measured, first unit at [${floor.at.join(', ')}]`,
+    );
   const lifted = liftedFor(laying, laid, dropped);
   return {
     keepsAll: dropped.length === 0,

@@ -23,6 +23,8 @@ export function restSearched(
 ): SearchResult {
   const { ground, document } = laying;
   const clearance = Math.max(0, document.clearance - LENGTH_TOLERANCE_MM) + SEARCH_MARGIN_MM;
+  // What of the tolerance the clearance cannot give is taken off the units, as the laying does.
+  const shrink = Math.max(0, LENGTH_TOLERANCE_MM - document.clearance);
   const placesOf = (values: readonly number[]) =>
     unitPlaces(chosenDocument(laying, floor, units, choice(values)), ground);
   const middle = freedoms.map(({ from, to }) => (from + to) / 2);
@@ -40,7 +42,7 @@ export function restSearched(
       const [x, y] = unitPlace(places, address);
       return [(x - at[0]) / by, (y - at[1]) / by];
     });
-    const entry = base.motif[address[2]];
+    const entry = entryShrunk(base.motif[address[2]], shrink);
     const reach = ways.reduce((sum, way, m) => sum + Math.hypot(...way) * half[m], 0);
     return { entry, at, ways, reach };
   });
@@ -71,7 +73,22 @@ export function restSearched(
   };
   let { found, dropped } = attempt(LIKELY_DROPPED);
   if (dropped > LIKELY_DROPPED) ({ found, dropped } = attempt(weighed.length));
-  return { ...found, kept: floor.rest.length - dropped };
+  return { ...found, kept: floor.rest.length - dropped, gap: Math.max(0, found.gap - shrink) };
+}
+
+/** The unit smaller by so much on every side, mm. */
+function entryShrunk(entry: LaidMotif, by: number): LaidMotif {
+  if (by === 0) return entry;
+  const { unit, halfLength, halfWidth } = entry;
+  const length = unit.length - 2 * by;
+  const width = unit.width - 2 * by;
+  const scaled = ([x, y]: Point, share: number): Point => [x * share, y * share];
+  return {
+    ...entry,
+    unit: { ...unit, length, width },
+    halfLength: scaled(halfLength, length / unit.length),
+    halfWidth: scaled(halfWidth, width / unit.width),
+  };
 }
 
 interface MovedUnit {
