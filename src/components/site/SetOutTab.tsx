@@ -91,8 +91,8 @@ export function SetOutTab({ kept, floor, display }: TabProps) {
         ))}
       </ul>
       <p className="mt-6 border-t border-stone-300 pt-3 text-sm text-slate">
-        Call before you dig: pegs and pins find buried pipes and cables too. Units over 23 kg are
-        lifted by two people or a machine. Figures are aids to setting out, not a design
+        Call before you dig: pegs and pins find buried pipes and cables too. Units over 23 kg (51
+        lb) are lifted by two people or a machine. Figures are aids to setting out, not a design
         certificate; local codes and licensed practice decide.
       </p>
     </section>

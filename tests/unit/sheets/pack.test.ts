@@ -244,6 +244,19 @@ describe('the set-out pack', () => {
     expect(words(dry)).not.toContain('Earth to dig');
   });
 
+  it('cautions of a heavy unit in the measures of the floor, by its maker where that is known', () => {
+    const slab = { ...COURT.units[0], length: 600, width: 600, thickness: 50 };
+    const said = (change: Partial<LayoutDocument>) =>
+      pack(floor(rectangle(0, 0, 3000, 3000), { units: [slab], ...change }))
+        .flatMap(words)
+        .join(' ');
+    // 0.018 m³ at 2 320 kg/m³; 23 kg or 51 lb: NIOSH publication 94-110.
+    expect(said({})).toMatch(/about 41\.8.kg if of concrete: over 23.kg is/);
+    expect(said({ display: 'imperial' })).toMatch(/about 92\.1.lb if of concrete: over 51.lb is/);
+    expect(said({ units: [{ ...slab, mass: 30 }] })).toMatch(/about 30\.0.kg: over 23.kg is/);
+    expect(said({ units: [{ ...slab, mass: 20 }] })).not.toContain('lift for two');
+  });
+
   it('draws with the line widths of ISO 128 alone', () => {
     const widths: readonly number[] = Object.values(PENS);
     for (const sheet of pack(levelled(COURT)))
