@@ -2,7 +2,7 @@ import type { ControlPoint, TapeCross } from '@/paving/set-out/set-out-types';
 import type { DrawCommand, PaperBox } from './drawing';
 import { PENS, boxRing } from './drawing';
 import type { FiguredContent } from './figured-sheet';
-import { bestArrangement, figuredDrafts } from './figured-sheet';
+import { figuredAndTabled } from './figured-sheet';
 import { figureText, lengthText } from './figures';
 import { INK, PAPER } from './inks';
 import { markRows } from './mark-row';
@@ -18,7 +18,7 @@ import { BASELINE_STROKE, STRING_STROKE, pointMark, setOutDrawing } from './set-
 import type { SetOutInput } from './set-out-input';
 import { baselineName } from './set-out-input';
 import type { SheetDraft } from './sheet-draft';
-import { tableDrafts } from './table-sheet';
+import type { TableContent } from './table-sheet';
 
 /** Control: where the tapes hook on and every point by two tapes, by offsets and by coordinates. */
 export function controlDrafts(input: SetOutInput, paper: PaperName): readonly SheetDraft[] {
@@ -32,22 +32,13 @@ export function controlDrafts(input: SetOutInput, paper: PaperName): readonly Sh
       rows: (width) => controlRows(input, view.scale, width),
     }),
   };
-  return [
-    ...figuredDrafts(content, bestArrangement(content, paper), {
-      kind: 'control',
-      type: 'Control points',
-    }),
-    ...tableDrafts(
-      {
-        kind: 'control',
-        type: 'Control points: table',
-        title: `Control points${input.laying.document.display === 'metric' ? ', in mm' : ''}`,
-        sections: (width) => [controlTable(input, width)],
-      },
-      input,
-      paper,
-    ),
-  ];
+  const table: TableContent = {
+    kind: 'control',
+    type: 'Control points: table',
+    title: `Control points${laying.document.display === 'metric' ? ', in mm' : ''}`,
+    sections: (width) => [controlTable(input, width)],
+  };
+  return figuredAndTabled(content, table, 'Control points', input, paper);
 }
 
 function controlRows(input: SetOutInput, scale: number, width: number): readonly PanelRow[] {

@@ -21,7 +21,7 @@ export const ticksEvery = (units: number): number =>
 export interface CourseWords {
   readonly display: Display;
   readonly units: readonly Unit[];
-  /** Every how many units a running length is given. */
+  /** Every how many units a running length is given, in courses whose steps repeat. */
   readonly every: number;
 }
 
@@ -32,10 +32,32 @@ const AFTER: Readonly<Record<CourseRun['after'], string>> = {
   'left-out': 'past the unit left out',
 };
 
+/** Most units after which steps repeat, for them to be said. */
+const LONGEST_REPEAT = 6;
+/** Steps that differ by less are the same, mm. */
+const SAME_STEP = 0.05;
+
+/** From each unit's near edge to the next one's along the string, in turn as they repeat, mm; null where they do not. */
+export function courseSteps({ runs }: Pick<Course, 'runs'>): readonly number[] | null {
+  const steps = runs.map(({ ticks }) => ticks.slice(1).map(([near], n) => near - ticks[n][0]));
+  for (let every = 1; every <= LONGEST_REPEAT; every += 1) {
+    // Each run begins anew: only one step holds from run to run.
+    const parts = every === 1 ? [steps.flat()] : steps.filter((run) => run.length > 0);
+    if (parts.length !== 1 || parts[0].length < every) continue;
+    const [all] = parts;
+    if (all.every((step, n) => Math.abs(step - all[n % every]) < SAME_STEP))
+      return all.slice(0, every);
+  }
+  return null;
+}
+
 /** One course: what it is made of, then the running lengths of its units, each with a box to tick. */
 export function courseRows(course: Course, words: CourseWords, width: number): readonly PanelRow[] {
   const { display } = words;
   const figure = (mm: number) => figureText(mm, display);
+  const steps = words.every === 1 ? null : courseSteps(course);
+  // Without a step to go by, every unit has its length.
+  const given = steps === null ? { ...words, every: 1 } : words;
   const head = [
     `${countText(course.units)} ${course.units === 1 ? 'unit' : 'units'}${kinds(course, words)}`,
     `string ${course.number}a to ${course.number}b, ${lengthText(course.length, display)} long`,
@@ -43,6 +65,7 @@ export function courseRows(course: Course, words: CourseWords, width: number): r
       ? []
       : [`${lengthText(course.step, display)} from the string of course ${course.number - 1}`]),
     `first unit ${lengthText(course.startGap, display)} from its start`,
+    ...(steps === null ? [] : [stepWords(steps, display)]),
     `last unit ${lengthText(course.endGap, display)} from its end`,
   ].join('; ');
   const outside = course.outside.map(
@@ -61,11 +84,16 @@ export function courseRows(course: Course, words: CourseWords, width: number): r
               width,
             ),
           )),
-      ...tickRows(run, words, width),
+      ...tickRows(run, given, width),
     ]),
     { height: 2, draw: () => [] },
   ];
 }
+
+const stepWords = (steps: readonly number[], display: Display): string =>
+  steps.length === 1
+    ? `then a unit every ${lengthText(steps[0], display, 1)}`
+    : `then units in steps of ${steps.map((step) => lengthText(step, display, 1)).join(', ')} in turn`;
 
 const kept = (rows: readonly PanelRow[]): readonly PanelRow[] =>
   rows.map((row) => ({ ...row, keepsNext: 'needed' as const }));

@@ -1,6 +1,6 @@
 import { courseRows, ticksEvery } from './course-rows';
 import type { FiguredContent } from './figured-sheet';
-import { bestArrangement, figuredDrafts } from './figured-sheet';
+import { figuredAndTabled } from './figured-sheet';
 import { countText, lengthText } from './figures';
 import { markRows } from './mark-row';
 import type { PanelRow } from './panel';
@@ -12,7 +12,7 @@ import { setOutDrawing } from './set-out-drawing';
 import type { SetOutInput } from './set-out-input';
 import { baselineName } from './set-out-input';
 import type { SheetDraft } from './sheet-draft';
-import { tableDrafts } from './table-sheet';
+import type { TableContent } from './table-sheet';
 
 /** Courses: where their strings are, then each course with the running lengths of its units. None without units. */
 export function coursesDrafts(input: SetOutInput, paper: PaperName): readonly SheetDraft[] {
@@ -29,27 +29,18 @@ export function coursesDrafts(input: SetOutInput, paper: PaperName): readonly Sh
   };
   const { display, units } = laying.document;
   const words = { display, units, every: ticksEvery(laying.laid.count) };
-  return [
-    ...figuredDrafts(content, bestArrangement(content, paper), {
-      kind: 'courses',
-      type: 'Courses',
-    }),
-    ...tableDrafts(
+  const table: TableContent = {
+    kind: 'courses',
+    type: 'Courses: running lengths',
+    title: `Courses${display === 'metric' ? ', running lengths in mm' : ', running lengths'}`,
+    sections: (width) => [
       {
-        kind: 'courses',
-        type: 'Courses: running lengths',
-        title: `Courses${display === 'metric' ? ', running lengths in mm' : ', running lengths'}`,
-        sections: (width) => [
-          {
-            header: null,
-            rows: setOut.courses.flatMap((course) => courseRows(course, words, width)),
-          },
-        ],
+        header: null,
+        rows: setOut.courses.flatMap((course) => courseRows(course, words, width)),
       },
-      input,
-      paper,
-    ),
-  ];
+    ],
+  };
+  return figuredAndTabled(content, table, 'Courses', input, paper);
 }
 
 function coursesPanel(input: SetOutInput, scale: number, width: number): readonly PanelRow[] {
@@ -88,7 +79,7 @@ function coursesPanel(input: SetOutInput, scale: number, width: number): readonl
     itemRow(
       every === 1
         ? 'Tick each unit as it goes down. Lengths run from one zero, so that errors do not add up.'
-        : `The floor has many units: the lengths of every ${every}th are given, and of the first and last of each run. They run from one zero, so that errors do not add up.`,
+        : `The floor has many units: of each run the first, every ${every}th and the last have their lengths, numbered from the run’s start. The course’s head says how far on each unit in between begins from the one before. All lengths run from one zero: check every ${every}th, so that errors do not add up.`,
       width,
     ),
     scaleBarRow(scale, display, width),

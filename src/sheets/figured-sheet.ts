@@ -4,11 +4,14 @@ import type { FlowedPanel, PanelColumn, PanelRow } from './panel';
 import { panelFlowed } from './panel';
 import type { Orientation, Paper, PaperName } from './paper';
 import { paperOf } from './paper';
+import type { PlanInput } from './plan-input';
 import type { GroundBounds, PlanView } from './plan-view';
 import { viewCentred } from './plan-view';
+import { rowBand } from './row-band';
 import { scaleFitting } from './scales';
 import type { SheetDraft } from './sheet-draft';
 import { footStrip, rule } from './sheet-draft';
+import { tableBox, tableDrafts, type TableContent } from './table-sheet';
 import { TITLE_STRIP_HEIGHT } from './title-strip';
 
 /** A drawing of the ground with a panel of figures beside it or below. */
@@ -189,18 +192,30 @@ function portraitArrangements(
   });
 }
 
+type SheetPanel = FlowedPanel & { readonly columns: readonly PanelColumn[] };
+
 /** The panel on the first sheet's columns, and on as many further sheets as it takes. */
 export function panelsFlowed(
   rows: readonly PanelRow[],
   columns: readonly PanelColumn[],
   paper: Paper,
   head: FiguredContent['head'],
-): readonly (FlowedPanel & { readonly columns: readonly PanelColumn[] })[] {
-  const width = boxWidth(columns[0].box);
-  const further = furtherColumns(paper, width);
-  const panels = [{ ...panelFlowed(rows, columns), columns }];
-  for (let { rest } = panels[0]; rest.length > 0;) {
-    const next = { ...panelFlowed([...head(width), ...rest], further), columns: further };
+): readonly SheetPanel[] {
+  const first = { ...panelFlowed(rows, columns), columns };
+  return [first, ...panelsFurther(first.rest, boxWidth(columns[0].box), paper, head)];
+}
+
+/** What is left of a panel, on as many sheets as it takes. */
+function panelsFurther(
+  left: readonly PanelRow[],
+  width: number,
+  paper: Paper,
+  head: FiguredContent['head'],
+): readonly SheetPanel[] {
+  const columns = furtherColumns(paper, width);
+  const panels: SheetPanel[] = [];
+  for (let rest = left; rest.length > 0;) {
+    const next = { ...panelFlowed([...head(width), ...rest], columns), columns };
     if (next.rest.length >= rest.length)
       throw new Error('A row of the panel is higher than a whole sheet.');
     panels.push(next);
@@ -209,34 +224,84 @@ export function panelsFlowed(
   return panels;
 }
 
+/** The sheet by itself, and the rows of its panel that it has no room for. */
+function figuredDraft(
+  content: FiguredContent,
+  arrangement: Arrangement,
+  named: Pick<SheetDraft, 'kind' | 'type'>,
+): { readonly draft: SheetDraft; readonly rest: readonly PanelRow[] } {
+  const { paper, scale, drawing, columns, title, rules } = arrangement;
+  const inside = boxInset(drawing, 1.5);
+  const drawn = content.draw(viewCentred(content.bounds, scale, drawing), inside);
+  const panel = panelFlowed(drawn.rows(boxWidth(columns[0].box)), columns);
+  const frames = columns.map(({ frame, box }) => [frame, box]);
+  return {
+    draft: {
+      ...named,
+      paper,
+      scale,
+      title,
+      frames: { drawing: inside, ...Object.fromEntries(frames) },
+      layers: [...drawn.layers, { name: 'panel', commands: panel.commands }],
+      rules,
+    },
+    rest: panel.rest,
+  };
+}
+
 /** The sheet, and as many further ones as its panel takes. */
 export function figuredDrafts(
   content: FiguredContent,
   arrangement: Arrangement,
   named: Pick<SheetDraft, 'kind' | 'type'>,
 ): readonly SheetDraft[] {
-  const { paper, scale, drawing, columns } = arrangement;
-  const inside = boxInset(drawing, 1.5);
-  const drawn = content.draw(viewCentred(content.bounds, scale, drawing), inside);
-  const columnWidth = boxWidth(columns[0].box);
-  const panels = panelsFlowed(drawn.rows(columnWidth), columns, paper, content.head);
-  return panels.map((panel, n): SheetDraft => {
-    const title = n === 0 ? arrangement.title : footStrip(paper);
-    return {
-      kind: named.kind,
-      type: n === 0 ? named.type : `${named.type}: tables`,
-      paper,
-      scale,
-      title,
-      frames: {
-        drawing: inside,
-        ...Object.fromEntries(panel.columns.map(({ frame, box }) => [frame, box])),
-      },
-      layers: [...(n === 0 ? drawn.layers : []), { name: 'panel', commands: panel.commands }],
-      rules:
-        n === 0 ? arrangement.rules : [rule([title.left, title.top], [title.right, title.top])],
-    };
-  });
+  const { draft, rest } = figuredDraft(content, arrangement, named);
+  return [draft, ...furtherDrafts(rest, content, arrangement, named)];
+}
+
+function furtherDrafts(
+  rest: readonly PanelRow[],
+  { head }: FiguredContent,
+  { paper, scale, columns }: Arrangement,
+  { kind, type }: Pick<SheetDraft, 'kind' | 'type'>,
+): readonly SheetDraft[] {
+  const title = footStrip(paper);
+  return panelsFurther(rest, boxWidth(columns[0].box), paper, head).map((panel): SheetDraft => ({
+    kind,
+    type: `${type}: tables`,
+    paper,
+    scale,
+    title,
+    frames: Object.fromEntries(panel.columns.map(({ frame, box }) => [frame, box])),
+    layers: [{ name: 'panel', commands: panel.commands }],
+    rules: [rule([title.left, title.top], [title.right, title.top])],
+  }));
+}
+
+/**
+ * The sheet, then its table. What the panel has no room for stands over the table where that leaves the table
+ * half of its first sheet, and else on sheets of its own.
+ */
+export function figuredAndTabled(
+  content: FiguredContent,
+  table: TableContent,
+  type: string,
+  input: PlanInput,
+  name: PaperName,
+): readonly SheetDraft[] {
+  const named = { kind: table.kind, type };
+  const arrangement = bestArrangement(content, name);
+  const { draft, rest } = figuredDraft(content, arrangement, named);
+  if (rest.length === 0) return [draft, ...tableDrafts(table, input, name)];
+  const box = tableBox(name);
+  const lead = rowBand(rest, boxWidth(arrangement.columns[0].box), boxWidth(box));
+  if (lead.height <= boxHeight(box) / 2)
+    return [draft, ...tableDrafts({ ...table, lead }, input, name)];
+  return [
+    draft,
+    ...furtherDrafts(rest, content, arrangement, named),
+    ...tableDrafts(table, input, name),
+  ];
 }
 
 /** Columns over the whole of a further sheet. */

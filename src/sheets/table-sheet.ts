@@ -19,6 +19,8 @@ export interface TableContent {
   readonly type: string;
   /** At the head of every sheet. */
   readonly title: string;
+  /** Stands over the table on its first sheet; at most half as high as that. */
+  readonly lead?: PanelRow;
   /** For a table of this width. */
   readonly sections: (width: number) => readonly TableSection[];
 }
@@ -33,6 +35,12 @@ const tablePaper = (name: PaperName): Paper =>
 
 const space = (height: number): PanelRow => ({ height, draw: () => [] });
 
+/** Where a table of this paper stands. */
+export function tableBox(name: PaperName): PaperBox {
+  const paper = tablePaper(name);
+  return boxInset({ ...paper.frame, bottom: footStrip(paper).top }, INSET);
+}
+
 /** Tables over the whole of a sheet, and on to as many as they take. */
 export function tableDrafts(
   content: TableContent,
@@ -41,7 +49,7 @@ export function tableDrafts(
 ): readonly SheetDraft[] {
   const paper = tablePaper(name);
   const title = footStrip(paper);
-  const box: PaperBox = boxInset({ ...paper.frame, bottom: title.top }, INSET);
+  const box = tableBox(name);
   const width = boxWidth(box);
   const mostTogether = (box.bottom - box.top) * 0.7;
   const sheets: DrawCommand[][] = [];
@@ -54,6 +62,7 @@ export function tableDrafts(
     sheets.push([]);
     y = box.top;
     sheetHead(content.title, input, width).forEach(put);
+    if (sheets.length === 1 && content.lead) put(content.lead);
     if (header) put(header);
   };
   content.sections(width).forEach(({ header, rows }, section) => {

@@ -6,6 +6,7 @@ import type { LayoutDocument } from '@/paving/layout-document';
 import { parseLayoutDocument } from '@/paving/layout-validation';
 import { setOut } from '@/paving/set-out/set-out';
 import { COURT_CHEQUER, ROUND_TERRACE, SIDE_YARD } from '@/server/demo-layouts';
+import { courseSteps } from '@/sheets/course-rows';
 import { drawingCommands, PENS } from '@/sheets/drawing';
 import { packInput, packSheets } from '@/sheets/pack';
 import { PAPER_NAMES } from '@/sheets/paper';
@@ -193,6 +194,58 @@ describe('the set-out pack', () => {
       return Math.abs(x1 - x0 - 3) < 1e-9 && Math.abs(y1 - y0 - 3) < 1e-9;
     });
     expect(boxes).toHaveLength(planInput(COURT).laying.laid.count);
+  });
+
+  it('gives a crew the step from unit to unit where not every running length is printed', () => {
+    // 2 000 blocks 200 mm long without a joint: each begins 200 mm on from the one before.
+    const blocks = floor(rectangle(0, 0, 8_060, 5_030), {
+      units: [{ id: 'a', name: 'Block 200 × 100', length: 200, width: 100, thickness: 60 }],
+      bond: { kind: 'running', unit: 'a', joint: 0, shift: 0.5 },
+      placement: { origin: [30, 20], turn: 0 },
+    });
+    const { courses } = setOut(planInput(blocks).laying);
+    const said = pack(blocks)
+      .filter(({ type }) => type === 'Courses: running lengths')
+      .flatMap(words)
+      .join(' ')
+      .split(/(?=Course \d+ )/)
+      .filter((text) => text.startsWith('Course '));
+    const whole = said.filter((text) => text.includes(' units; string '));
+    expect(whole).toHaveLength(courses.length);
+    for (const text of whole) {
+      const flat = text.replace(/\s/g, '');
+      expect(flat).toContain('thenaunitevery200mm');
+      const first = Number(/firstunit(\d+)mmfromitsstart/.exec(flat)![1]);
+      const ticks = [...text.replace(/[\u00a0\u2009]/g, '').matchAll(/(\d+): (\d+)–(\d+)/g)];
+      expect(ticks.length).toBeGreaterThan(5);
+      for (const [, number, near, far] of ticks) {
+        expect(Number(near)).toBe(first + (Number(number) - 1) * 200);
+        expect(Number(far)).toBe(Number(near) + 200);
+      }
+    }
+  });
+
+  it('names steps only where they repeat: units of two lengths in turn, and not at random', () => {
+    const course = (...runs: readonly (readonly number[])[]) => ({
+      runs: runs.map((nears) => ({
+        ...setOut(planInput(COURT).laying).courses[0].runs[0],
+        ticks: nears.map((near) => [near, near + 90] as const),
+      })),
+    });
+    expect(courseSteps(course([0, 100, 200], [450, 550]))).toEqual([100]);
+    expect(courseSteps(course([0, 100, 300, 400, 600]))).toEqual([100, 200]);
+    expect(courseSteps(course([0, 100, 300, 350, 700, 720, 950, 1000]))).toBeNull();
+    expect(courseSteps(course([0, 100, 300], [500, 700, 800]))).toBeNull();
+    expect(courseSteps(course([0]))).toBeNull();
+  });
+
+  it('puts what the control sheet’s panel has no room for over its table, not on a sheet of its own', () => {
+    const sheets = pack(BAY, { paper: 'Letter' }).filter(({ kind }) => kind === 'control');
+    expect(sheets.map(({ type }) => type)).not.toContain('Control points: tables');
+    const said = sheets.map(words);
+    expect(said[0].join(' ')).not.toContain('Figures rule over');
+    expect(said[1].join(' ')).toContain('Figures rule over');
+    expect(said[1]).toContain('What it is');
   });
 
   it('says what of the build-up is not entered yet, and figures what is', () => {
