@@ -277,6 +277,10 @@ it('an installer builds without signal: what is entered is kept, sent once and i
 
   // The phone has learnt that it must not be built from, and by what.
   await again.getByText('Superseded. Do not build from this plan.').waitFor();
+  // In sight also from far down the page.
+  await again.evaluate(() => scrollTo(0, document.body.scrollHeight));
+  const told = again.getByText('Superseded. Do not build from this plan.');
+  await expect.poll(async () => (await told.boundingBox())!.y).toBe(0);
   await again.getByRole('link', { name: 'Open version 2' }).click();
   await again.waitForURL(`**/site/${second}`);
   await again.getByRole('heading', { name: `0 of ${courses.length} courses laid` }).waitFor();
