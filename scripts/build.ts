@@ -26,11 +26,21 @@ export const buildIsStale = (): boolean =>
   !existsSync(STAMP) ||
   statSync(STAMP).mtimeMs < Math.max(...SOURCES.map((name) => newest(path.join(ROOT, name))));
 
+/** What Vite calls its own flags. A test runner sets them, and a build would take them for what it is built for. */
+const FLAGS = ['DEV', 'PROD', 'MODE', 'SSR', 'BASE_URL'];
+
+const environmentOfBuild = (): NodeJS.ProcessEnv =>
+  Object.fromEntries(Object.entries(process.env).filter(([name]) => !FLAGS.includes(name)));
+
 /** Runs Astro's command line in this project and waits for it; throws when it fails. */
 export const runAstro = (...args: string[]): Promise<void> =>
   new Promise((resolve, reject) => {
     const astro = path.join(ROOT, 'node_modules', 'astro', 'astro.js');
-    const child = spawn(process.execPath, [astro, ...args], { cwd: ROOT, stdio: 'inherit' });
+    const child = spawn(process.execPath, [astro, ...args], {
+      cwd: ROOT,
+      stdio: 'inherit',
+      env: environmentOfBuild(),
+    });
     child.once('error', reject);
     child.once('exit', (code) =>
       code === 0 ? resolve() : reject(new Error(`astro ${args[0]} ended with ${code}`)),
