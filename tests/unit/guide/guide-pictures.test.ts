@@ -46,6 +46,7 @@ describe('the guide’s pictures', () => {
       'Where nothing is dug or made up',
       'The ground as it is',
       'A spot and its level',
+      'The floor falls this way',
       'A peg and the level of the finish',
     ]);
     expect(cut).toMatch(/^\d/);
