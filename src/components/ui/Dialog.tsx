@@ -29,7 +29,7 @@ export function Dialog({ open, onClose, title, children, wide }: Props) {
               <X size={18} aria-hidden />
             </Base.Close>
           </div>
-          <div ref={sheet} className="overflow-y-auto px-5 py-4">
+          <div ref={sheet} tabIndex={0} className="overflow-y-auto px-5 py-4">
             {children}
           </div>
         </Base.Popup>
