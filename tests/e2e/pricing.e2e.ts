@@ -78,7 +78,10 @@ it('takes a file of prices to a priced version, its quote as a PDF and an order 
   await page.getByRole('button', { name: 'Save version 1' }).click();
   await page.getByRole('dialog').getByLabel('Label').fill('Priced');
   await page.getByRole('dialog').getByRole('button', { name: 'Save version 1' }).click();
-  await page.getByText(/Version 1 saved/).last().waitFor();
+  await page
+    .getByText(/Version 1 saved/)
+    .last()
+    .waitFor();
   const layout = new URL(page.url()).pathname.split('/').pop();
   const version = await page.evaluate(
     async (id) => (await (await fetch(`/api/layouts/${id}/versions`)).json()).versions[0].id,

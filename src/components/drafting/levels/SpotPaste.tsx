@@ -52,12 +52,10 @@ function PasteForm({ onClose }: { onClose: () => void }) {
       ]);
     }
     table.getState().edit((now) => levelsChanged(now, { spots }));
-    table
-      .getState()
-      .set({
-        spot: null,
-        said: `${parsed.spots.length === 1 ? 'One spot' : `${parsed.spots.length} spots`} taken from the list.`,
-      });
+    table.getState().set({
+      spot: null,
+      said: `${parsed.spots.length === 1 ? 'One spot' : `${parsed.spots.length} spots`} taken from the list.`,
+    });
     zoomToFit(table);
     onClose();
   };
