@@ -431,29 +431,30 @@ function sweepPieces(
     const qx = px + dx * length;
     const qy = py + dy * length;
     covered.length = 0;
-    let whole = false;
+    // Neighbours cover most sides from their ends: what is left between.
+    let begin = 0;
+    let end = length;
     for (const other of near) {
       const s = sweeps[other];
       if (Math.min(px, qx) > s.maxX || Math.max(px, qx) < s.minX) continue;
       if (Math.min(py, qy) > s.maxY || Math.max(py, qy) < s.minY) continue;
       if (!lineSection(s, px, py, dx, dy, cut)) continue;
-      if (cut[1] <= 0 || cut[0] >= length) continue;
-      if (cut[0] <= 0 && cut[1] >= length) {
-        whole = true;
-        break;
-      }
-      covered.push([cut[0], cut[1]]);
+      if (cut[1] <= begin || cut[0] >= end) continue;
+      if (cut[0] <= begin) begin = cut[1];
+      else if (cut[1] >= end) end = cut[0];
+      else covered.push([cut[0], cut[1]]);
+      if (begin >= end) break;
     }
     // Corners go with the sides: each is looked at after the side that leads to it.
     if (radius > 0 && !cornerCovered(sweeps, near, x[o], y[o])) {
       cornerPieces(ground, sweeps, sweep, o, m, near, room);
     }
-    if (whole) continue;
+    if (begin >= end) continue;
     covered.sort((one, other) => one[0] - other[0]);
-    covered.push([length, length]);
-    let from = 0;
+    covered.push([end, end]);
+    let from = begin;
     for (const [low, high] of covered) {
-      const to = Math.min(low, length);
+      const to = Math.min(low, end);
       if (to - from > LEAST_PIECE_MM) {
         const middle = (from + to) / 2;
         if (groundHolds(ground, px + dx * middle, py + dy * middle)) {

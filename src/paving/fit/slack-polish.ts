@@ -30,7 +30,7 @@ export function slackPolished(
   let v = startV;
   let slack = startSlack;
   let trust = Math.max(slack, 0.05);
-  const scope = 2.5 * trust + 2 * slack;
+  const scope = 1.5 * trust + 1.5 * slack;
   // Pieces that can matter while the origin stays within `scope` of where it started.
   const one = pieceGapsRoom(1);
   const nearest: number[] = [];

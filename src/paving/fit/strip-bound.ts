@@ -4,6 +4,8 @@ import { arcMeetsBox, arcOnlyTakes } from './most';
 
 /** What comes no further into a box than this, mm, only touches it. */
 const TOUCH_MM = 1e-8;
+/** Strips between two lines thinner than this, mm, are rounding: no start is looked for in them. */
+const THINNEST_MM = 1e-7;
 /** Strips narrower by no more than this than they must be, mm, are counted as wide enough. */
 const HAIR_MM = 1e-7;
 
@@ -189,7 +191,9 @@ export function stripCount(
         if (firstBelow >= 0) upFrom = Math.max(upFrom, room.height[firstBelow] + slack);
       }
       const upTo = strip < lines ? Math.min(above, room.height[strip]) : above;
-      if (upFrom <= upTo + HAIR_MM && sum > most) {
+      const thin =
+        strip > 0 && strip < lines && room.height[strip] - room.height[strip - 1] < THINNEST_MM;
+      if (!thin && upFrom <= upTo + HAIR_MM && sum > most) {
         most = sum;
         mostAt = (upFrom + upTo) / 2;
       }
@@ -270,7 +274,7 @@ function crossesBox(
   return 2;
 }
 
-/** True when the piece has all of its line that lies in the box or within `slack` of it, and so the foot of whatever is that near. */
+/** True when the piece has the foot of every point of the box that is within `slack` of its line. */
 function beforeLine(
   { x0, y0, x1, y1 }: CellPieces,
   n: number,
@@ -283,22 +287,24 @@ function beforeLine(
   bx: number,
   by: number,
 ): boolean {
-  // Along (−ny, nx) from the foot of the origin of the frame.
-  let low = -Infinity;
-  let high = Infinity;
+  // Along (−ny, nx), as far as the box goes, and no farther than the line is within `slack` of it.
+  const middle = (nx * (ay + by) - ny * (ax + bx)) / 2;
+  const half = ((ny < 0 ? -ny : ny) * (bx - ax) + (nx < 0 ? -nx : nx) * (by - ay)) / 2;
+  let low = middle - half;
+  let high = middle + half;
   if (ny !== 0) {
     const one = (nx * t - (ax - slack)) / ny;
     const other = (nx * t - (bx + slack)) / ny;
-    low = Math.min(one, other);
-    high = Math.max(one, other);
+    low = Math.max(low, one < other ? one : other);
+    high = Math.min(high, one < other ? other : one);
   }
   if (nx !== 0) {
     const one = (ay - slack - ny * t) / nx;
     const other = (by + slack - ny * t) / nx;
-    low = Math.max(low, Math.min(one, other));
-    high = Math.min(high, Math.max(one, other));
+    low = Math.max(low, one < other ? one : other);
+    high = Math.min(high, one < other ? other : one);
   }
   const s0 = -ny * x0[n] + nx * y0[n];
   const s1 = -ny * x1[n] + nx * y1[n];
-  return Math.min(s0, s1) <= low && Math.max(s0, s1) >= high;
+  return (s0 < s1 ? s0 : s1) <= low && (s0 < s1 ? s1 : s0) >= high;
 }

@@ -1,8 +1,10 @@
+import { envelopeTop, planeEnvelope } from '@/geometry/plane-envelope';
 import { LENGTH_TOLERANCE_MM } from '@/geometry/tolerance';
 import type { CellPieces } from './cell-pieces';
 import { arcMeetsBox, arcOnlyTakes, depthMoved, SPLIT } from './most';
 import { KEEP_OFF_MM, pieceGap, pieceGapsRoom, pointSlack, unitsApart } from './slack';
 import { slackPolished } from './slack-polish';
+import { KEPT_OFF, stripCount, stripRoom, type KeptOff, type OriginBox } from './strip-bound';
 
 /** The origin of the cell with the most slack among those with a count. */
 export interface CellChoice {
@@ -15,16 +17,28 @@ export interface CellChoice {
 /** No origin of the same count has this much more slack than the one that is given, mm. */
 export const SLACK_TOLERANCE_MM = 0.004;
 const TOUCH_MM = 1e-8;
-/** Up to this many pieces through a box, each is held against each to see which tell a unit's whole edge there. */
-const FEW_THROUGH = 32;
 /** While boxes are so many times larger than the most slack known, they are halved without a look at each piece. */
 const COARSE_TIMES = 3;
 /** One in so many of those is looked into for slack, so that there is some to compare with. */
 const COARSE_SAMPLE = 8;
 /** So many of the nearest pieces are looked at one by one. */
 const NEAREST = 28;
-/** Up to this many pieces that no origin of a box loses are set against each other. */
-const GREATEST_HELD = 8;
+/** So many of the nearest pieces that no origin of a box loses are weighed against each other. */
+const WEIGHED = 7;
+/** So many units that must be lost, and as many that are held, are set against each other. */
+const MOST_WAYS = 5;
+/** So many of the nearest pieces that origins of a box may lose are weighed one by one. */
+const MOST_LOSSES = 64;
+/** With fewer lines right through a box, of many directions, strips are not looked at. */
+const FEW_LINES = 24;
+/** Directions whose sine is less are too nearly the same to cross. */
+const LEAST_CROSS = 1e-6;
+/** Boxes smaller than the slack by this are looked into where the slack should be greatest. */
+const SMALL_SHARE = 8;
+/** How much more steeply than a piece's own a plane rises that stands for having to be beyond it. */
+const STEEP = 1000;
+/** A piece that is not straight before all of a box makes no plane when it is no farther than this from being in it, mm. */
+const LEAST_AWAY_MM = 1e-3;
 /** Places that a level of boxes has for pieces at first. */
 const FIRST_ROOM = 256;
 /** Below this, mm, a box is left. */
@@ -97,10 +111,22 @@ export function cellTradeOff(
     if (slack <= known[at]) return;
     fresh.add(at);
     for (let n = at; n >= 0 && known[n] < slack; n--) known[n] = slack;
+    steps = null;
   };
-  /** Nothing with up to `count` units and `slack` would be news. */
-  const beaten = (count: number, slack: number) =>
-    count < least || slack <= known[Math.min(count - least, span - 1)] + SLACK_TOLERANCE_MM;
+  let steps: { readonly slack: number; readonly fewest: number }[] | null = null;
+  /**
+   * What would be news, as a stair: more than the slack, with at least the fewest units. Counts that are known with the
+   * same slack are one step, and the fewest of them is the easiest to beat.
+   */
+  const stair = () => {
+    if (steps) return steps;
+    steps = [];
+    for (let n = 0; n < span; n++) {
+      if (n === 0 || known[n] !== known[n - 1])
+        steps.push({ slack: Math.max(0, known[n] + SLACK_TOLERANCE_MM), fewest: n + least });
+    }
+    return steps;
+  };
 
   const every = new Int32Array(near.count);
   for (let n = 0; n < near.count; n++) every[n] = n;
@@ -116,22 +142,32 @@ export function cellTradeOff(
   };
   offer(most.count, most.slack, most.u, most.v);
 
-  // Scratch for one box: gaps of the listed pieces, those through it, and the family's lines.
-  const through = new Uint8Array(near.count);
-  const holds = new Uint8Array(near.count);
-  const others = new Int32Array(near.count);
-  const gainAt = new Float64Array(near.count);
-  const gainWeight = new Float64Array(near.count);
-  const putGain = (count: number, distance: number, weight: number): number => {
+  const strips = stripRoom(near);
+  const planes = planeEnvelope(WEIGHED);
+  const ways = planeEnvelope(2 * MOST_WAYS);
+  const gaps = pieceGapsRoom(Math.max(64, near.count));
+  // Pieces through which units may be gained, by the slack that an origin beyond them may have, most first.
+  const gainPiece = new Int32Array(near.count);
+  const gainSlack = new Float64Array(near.count);
+  const putGain = (count: number, n: number, slack: number): number => {
     let place = count;
-    for (; place > 0 && gainAt[place - 1] > distance; place--) {
-      gainAt[place] = gainAt[place - 1];
-      gainWeight[place] = gainWeight[place - 1];
+    for (; place > 0 && gainSlack[place - 1] < slack; place--) {
+      gainSlack[place] = gainSlack[place - 1];
+      gainPiece[place] = gainPiece[place - 1];
     }
-    gainAt[place] = distance;
-    gainWeight[place] = weight;
+    gainSlack[place] = slack;
+    gainPiece[place] = n;
     return count + 1;
   };
+  // For each unit that a piece has to itself, when it was last seen, and in how many pieces of a list.
+  const seenAt = new Int32Array(strips.stamp.length);
+  const seen = new Int32Array(strips.stamp.length);
+  let looks = 0;
+  let stamped = 0;
+  const others = new Int32Array(near.count);
+  const lossAt = new Int32Array(MOST_LOSSES);
+  const lossWeight = new Int32Array(MOST_LOSSES);
+  const lossSlack = new Float64Array(MOST_LOSSES);
 
   const look = (
     source: Int32Array,
@@ -168,22 +204,23 @@ export function cellTradeOff(
         const n = source[a];
         if (pieceWithin(n, ax, ay, bx, by, mx, my, hx, hy, within)) list[top++] = n;
       }
+      if (!strips.bundles) {
+        // Parallel to few directions: strips tell much, even in a large box.
+        const local = list.subarray(own, top);
+        room.distance.fill(0, 0, local.length);
+        const box = { ax, ay, bx, by };
+        if (!stripsNews(local, box, u, v, depth, h, within, onceSeen(local))) return;
+      }
       if (out.x0.length % COARSE_SAMPLE === 0) {
         offer(depth, pointSlack(near, list, own, top, u, v, within, room, order), u, v);
       }
       keep(out, ax, ay, bx, by, depth, within, own, top);
       return;
     }
-    let gain = 0;
-    let current = -1;
-    let half = 0;
-    let middle = 0;
-    let ref = 0;
-    let sum = 0;
-    let highest = 0;
-    let before = 0;
-    let crossing = 0;
+    looks++;
     let gains = 0;
+    let through = 0;
+    let alone = true;
     for (let a = from; a < to; a++) {
       const n = source[a];
       const px = x0[n];
@@ -195,28 +232,23 @@ export function cellTradeOff(
       if (py < qy ? py > by + within || qy < ay - within : qy > by + within || py < ay - within)
         continue;
       const f = family[n];
-      if (f >= 0 && f !== current) {
-        gain += highest - before;
-        current = f;
+      let off = 0;
+      let half = 0;
+      if (f >= 0) {
         const nx = families.nx[f];
         const ny = families.ny[f];
-        middle = nx * mx + ny * my;
-        half = Math.abs(nx) * hx + Math.abs(ny) * hy;
-        ref = nx * u + ny * v;
-        sum = 0;
-        highest = 0;
-        before = 0;
+        half = (nx < 0 ? -nx : nx) * hx + (ny < 0 ? -ny : ny) * hy;
+        off = height[n] - nx * mx - ny * my;
+        if (off > half + within || off < -half - within) continue;
       }
-      const t = height[n];
-      if (f >= 0 && Math.abs(t - middle) > half + within) continue;
       const at = top - own;
       pieceGap(near, n, u, v, room, at);
-      if (room.distance[at] > within + h) continue;
+      const d = room.distance[at];
+      if (d > within + h) continue;
       list[top++] = n;
-      holds[at] = 0;
+      alone = unitSeen(n) && alone;
       // What it may add to the count over the box.
-      through[at] = 0;
-      if (room.distance[at] > h) continue;
+      if (d >= h) continue;
       if (
         px < qx
           ? px > bx - TOUCH_MM || qx < ax + TOUCH_MM
@@ -229,63 +261,42 @@ export function cellTradeOff(
           : qy > by - TOUCH_MM || py < ay + TOUCH_MM
       )
         continue;
-      const weight = Math.abs(step[n]);
       if (f < 0) {
-        if (!arcMeetsBox(near, n, ax, ay, bx, by)) continue;
-        crossing++;
-        through[at] = 1;
-        if (!arcOnlyTakes(near, n, u, v)) {
-          gain += weight;
-          gains = putGain(gains, room.distance[at], weight);
-        }
+        if (arcMeetsBox(near, n, ax, ay, bx, by) && !arcOnlyTakes(near, n, u, v))
+          gains = putGain(gains, n, h - d);
         continue;
       }
-      if (Math.abs(t - middle) > half - TOUCH_MM) continue;
-      crossing++;
-      through[at] = 1;
-      const bad = step[n] > 0 ? ref < t : ref > t;
-      if (bad) {
-        gains = putGain(gains, room.distance[at], weight);
+      if (off > half - TOUCH_MM || off < TOUCH_MM - half) continue;
+      const ends =
+        (px > ax && px < bx && py > ay && py < by) || (qx > ax && qx < bx && qy > ay && qy < by);
+      if (!ends) through++;
+      const above = height[n] - families.nx[f] * u - families.ny[f] * v;
+      if (step[n] > 0 ? above < 0 : above > 0) continue;
+      let beyond = h;
+      if (straightBefore(n, u, v, h)) {
+        const gx = room.awayX[at];
+        const gy = room.awayY[at];
+        beyond =
+          (gx > 0 ? gx * (u - ax) : gx * (u - bx)) + (gy > 0 ? gy * (v - ay) : gy * (v - by));
       }
-      const whole =
-        !(px > ax + TOUCH_MM && px < bx - TOUCH_MM && py > ay + TOUCH_MM && py < by - TOUCH_MM) &&
-        !(qx > ax + TOUCH_MM && qx < bx - TOUCH_MM && qy > ay + TOUCH_MM && qy < by - TOUCH_MM);
-      if (!whole) {
-        if (bad) gain += weight;
-        continue;
-      }
-      through[at] = 2;
-      sum += step[n];
-      if (t < ref) before = sum;
-      if (sum > highest) highest = sum;
+      if (beyond > d) gains = putGain(gains, n, beyond - d);
     }
-    gain += highest - before;
-    const bound = Math.min(depth + gain, most.count);
-    if (bound < least) return;
 
     // In order of distance: units that the point has and the box's origins may lose, up to the first
     // whose region holds the whole box.
     const local = list.subarray(own, top);
     let slackHere = -1;
     let doubtful = false;
-    let open = false;
     let lost = 0;
     let all = within;
     let held = -1;
-    // Units that the box's origins may gain. The way to one that does enters the unit through a piece
-    // at least `d` off, so it is at most h − d beyond it; so far off, only nearer units can be gained.
-    if (gains > 0) {
-      let gained = 0;
-      for (let m = 0; m < gains && !open; m++) {
-        gained += gainWeight[m];
-        open = !beaten(Math.min(bound, depth + gained), h - gainAt[m]);
-      }
-    }
+    let losses = 0;
+    planes.count = 0;
     // The nearest few tell nearly always; where they do not, all are gone through.
     let count = inOrder(top - own, within, NEAREST);
-    for (let m = 0; ; m++) {
+    for (let m = 0; planes.count < WEIGHED; m++) {
       if (m === count) {
-        if (count < NEAREST || count > NEAREST) break;
+        if (held >= 0 || count < NEAREST || count > NEAREST) break;
         count = inOrder(top - own, within, Infinity);
         if (m === count) break;
       }
@@ -295,53 +306,259 @@ export function cellTradeOff(
         continue;
       }
       const d = room.distance[at];
+      // So far off that it is nowhere the nearest of those held.
+      if (held >= 0 && d > room.distance[order[held]] + 2 * h) break;
       // Once so many are lost that the rest is of no interest, how many more does not matter.
-      const enough = d < h ? Math.max(1, Math.min(bound, depth - lost) - least + 1) : 1;
+      const enough = d < h ? Math.max(1, depth - lost - least + 1) : 1;
       const apart = unitsApart(near, local[at], local, order, m, enough);
       if (apart === 0) continue;
       if (slackHere < 0) slackHere = d;
+      const plain = straightBefore(local[at], u, v, h);
       if (d >= h) {
-        all = Math.min(all, d + h);
-        held = m;
-        break;
+        // No origin of the box loses it: what is farther from it than the plane says is not in the box.
+        if (held < 0) held = m;
+        if (!plain && d - h < LEAST_AWAY_MM) {
+          all = Math.min(all, d + h);
+          continue;
+        }
+        const to = planes.count++;
+        planes.d[to] = d + (plain ? 0 : (h * h) / (2 * (d - h)));
+        planes.gx[to] = room.awayX[at];
+        planes.gy[to] = room.awayY[at];
+        continue;
       }
-      if (!open && !beaten(Math.min(bound, depth - lost), d + h)) open = true;
+      // An origin that keeps it has no more slack than it can be off it.
+      const gx = room.awayX[at];
+      const gy = room.awayY[at];
+      const far = plain
+        ? (gx > 0 ? gx * (bx - u) : gx * (ax - u)) + (gy > 0 ? gy * (by - v) : gy * (ay - v))
+        : h;
+      if (losses < MOST_LOSSES) {
+        lossAt[losses] = at;
+        lossWeight[losses] = apart;
+        lossSlack[losses++] = d + far;
+      }
       lost += apart;
     }
+    if (planes.count > 0) all = Math.min(all, envelopeTop(planes, ax - u, ay - v, bx - u, by - v));
     // With nothing within the whole reach the slack is that at least.
     if (slackHere < 0 && within === reach) slackHere = within;
     if (slackHere >= 0 && !doubtful) offer(depth, slackHere, u, v);
-    // Two pieces that face each other across the box bound the slack by half their distance apart.
-    if (held >= 0) {
-      const first = order[held];
-      const d0 = room.distance[first];
-      const bend = straightBefore(local[first], u, v, h)
-        ? 0
-        : (h * h) / (2 * Math.max(1e-12, d0 - h));
-      holds[first] = 1;
-      let tried = 0;
-      for (let m = held + 1; m < count && tried < GREATEST_HELD; m++) {
-        const at = order[m];
-        if (room.side[at] < 0) continue;
-        const d = room.distance[at];
-        if (unitsApart(near, local[at], local, order, m, 1) === 0) continue;
-        tried++;
-        holds[at] = 1;
-        const leanX = room.awayX[first] + room.awayX[at];
-        const leanY = room.awayY[first] + room.awayY[at];
-        const bends =
-          bend + (straightBefore(local[at], u, v, h) ? 0 : (h * h) / (2 * Math.max(1e-12, d - h)));
-        all = Math.min(all, (d0 + d + bends) / 2 + (Math.hypot(leanX, leanY) / 2) * h);
-      }
-    }
-    if (!open && !beaten(Math.min(bound, depth - lost), all)) open = true;
-    if (!open) return;
-    if (crossing <= FEW_THROUGH && stripsBeaten(local, depth, gain, all, u, v, ax, ay, bx, by))
-      return;
-    if (hx * 2 < SMALLEST_BOX_MM && hy * 2 < SMALLEST_BOX_MM) return;
+    if (bx - ax < SMALLEST_BOX_MM && by - ay < SMALLEST_BOX_MM) return;
+    const box = { ax, ay, bx, by };
+    if (!news(local, box, u, v, depth, h, all, gains, losses, through, alone)) return;
     // Over the box no origin has more slack than this: what is farther off does not matter there.
-    const farthest = lost > 0 || gains > 0 ? Math.max(all, 2 * h) : all;
-    keep(out, ax, ay, bx, by, depth, Math.min(within, farthest), own, top);
+    keep(out, ax, ay, bx, by, depth, Math.min(within, all), own, top);
+  };
+
+  /** Tells which units are in one listed piece only; true when each of the pieces is of one unit. */
+  const onceSeen = (local: Int32Array): boolean => {
+    let alone = true;
+    looks++;
+    for (const n of local) alone = unitSeen(n) && alone;
+    return alone;
+  };
+
+  /** Counts one more piece of a listed piece's unit; false when it has more units than one. */
+  const unitSeen = (n: number): boolean => {
+    const unit = strips.unit[n];
+    if (unit < 0) return false;
+    if (seenAt[unit] === looks) seen[unit]++;
+    else {
+      seenAt[unit] = looks;
+      seen[unit] = 1;
+    }
+    return true;
+  };
+
+  /** The count that an origin of the box with more slack can have by its strips; `room` has the distances, or less. */
+  const stripsBound = (
+    local: Int32Array,
+    box: OriginBox,
+    u: number,
+    v: number,
+    depth: number,
+    h: number,
+    slack: number,
+    alone: boolean,
+  ): number => {
+    // A unit whose only piece near enough is this one is whole right up to it.
+    const nearby = slack + h;
+    const keptOff = (at: number): KeptOff => {
+      const unit = strips.unit[local[at]];
+      if (alone && seen[unit] === 1) return KEPT_OFF.held;
+      let count = 0;
+      for (let n = 0; n < local.length; n++) {
+        if (n === at || room.distance[n] > nearby) continue;
+        if (!alone) others[count++] = n;
+        else if (strips.unit[local[n]] === unit) return KEPT_OFF.none;
+      }
+      if (alone) return KEPT_OFF.held;
+      const apart = unitsApart(near, local[at], local, others, count, 1);
+      return apart > 0 ? KEPT_OFF.held : KEPT_OFF.none;
+    };
+    return stripCount(
+      near,
+      local,
+      0,
+      local.length,
+      box,
+      u,
+      v,
+      depth,
+      slack,
+      room.distance,
+      h,
+      false,
+      keptOff,
+      strips,
+    );
+  };
+
+  /** Tries where the strips that allow the most, of the two families with most lines, cross. */
+  const tryStrips = (
+    local: Int32Array,
+    { ax, ay, bx, by }: OriginBox,
+    u: number,
+    v: number,
+    depth: number,
+    all: number,
+  ) => {
+    const { found, nx, ny, at } = strips;
+    const cross = found < 2 ? 0 : nx[0] * ny[1] - ny[0] * nx[1];
+    if (Math.abs(cross) < LEAST_CROSS) return;
+    const toU = (at[0] * ny[1] - at[1] * ny[0]) / cross;
+    const toV = (at[1] * nx[0] - at[0] * nx[1]) / cross;
+    if (!(toU > ax && toU < bx && toV > ay && toV < by)) return;
+    const there = depthMoved(near, local, 0, local.length, u, v, toU, toV, depth);
+    if (there < least || known[Math.min(there - least, span - 1)] >= all) return;
+    const slack = pointSlack(near, local, 0, local.length, toU, toV, all, gaps, order);
+    if (slack < all) offer(there, slack, toU, toV);
+  };
+
+  /** False when the strips alone show that no origin of the box is news. */
+  const stripsNews = (
+    local: Int32Array,
+    box: OriginBox,
+    u: number,
+    v: number,
+    depth: number,
+    h: number,
+    all: number,
+    alone: boolean,
+  ): boolean => {
+    for (const { slack, fewest } of stair()) {
+      if (slack >= all || stripsBound(local, box, u, v, depth, h, slack, alone) < fewest) continue;
+      tryStrips(local, box, u, v, depth, all);
+      return true;
+    }
+    return false;
+  };
+
+  /**
+   * False when no origin of the box is news. For each step of the stair the origins with more slack are bounded: units that none of them can keep are lost, and those that none can be so far beyond the edge of are not
+   * gained; the ways to lose them must not contradict each other; and the strips must have room.
+   */
+  const news = (
+    local: Int32Array,
+    box: OriginBox,
+    u: number,
+    v: number,
+    depth: number,
+    h: number,
+    all: number,
+    gains: number,
+    losses: number,
+    through: number,
+    alone: boolean,
+  ): boolean => {
+    for (const { slack, fewest } of stair()) {
+      if (slack >= all) continue;
+      let count = depth;
+      for (let m = 0; m < losses; m++) if (lossSlack[m] <= slack) count -= lossWeight[m];
+      const counted = --stamped;
+      for (let m = 0; m < gains && count < fewest && gainSlack[m] > slack; m++) {
+        const unit = strips.unit[gainPiece[m]];
+        if (unit >= 0) {
+          if (seenAt[unit] === counted) continue;
+          seenAt[unit] = counted;
+        }
+        count += Math.abs(step[gainPiece[m]]);
+      }
+      if (count < fewest || !waysAgree(local, box, u, v, depth, h, all, slack, losses)) continue;
+      // Few lines of many directions leave no strips that tell.
+      if (through === 0 || (strips.bundles && through < FEW_LINES)) return true;
+      const bound = stripsBound(local, box, u, v, depth, h, slack, alone);
+      if (bound < fewest) continue;
+      tryStrips(local, box, u, v, depth, all);
+      return true;
+    }
+    return false;
+  };
+
+  /**
+   * False when no origin of the box is beyond the edges of all the units that must be lost for the slack and
+   * off those of the units that are held by as much. An origin that has lost a unit has gone out through some
+   * piece of it, and is beyond that piece's line; and not far from beyond the nearest one's, where they bend little.
+   */
+  const waysAgree = (
+    local: Int32Array,
+    { ax, ay, bx, by }: OriginBox,
+    u: number,
+    v: number,
+    depth: number,
+    h: number,
+    all: number,
+    slack: number,
+    losses: number,
+  ): boolean => {
+    ways.count = 0;
+    for (let m = 0; m < losses && ways.count < MOST_WAYS; m++) {
+      if (lossSlack[m] > slack) continue;
+      const n = local[lossAt[m]];
+      const unit = strips.unit[n];
+      if (unit < 0 || radius[n] > 0) continue;
+      const off = near.ux[n] * (v - y0[n]) - near.uy[n] * (u - x0[n]);
+      let bend = 0;
+      for (let a = 0, left = seen[unit] - 1; left > 0 && a < local.length; a++) {
+        const o = local[a];
+        if (o === n || strips.unit[o] !== unit) continue;
+        left--;
+        if (room.distance[a] > h) continue;
+        if (radius[o] > 0) bend = Infinity;
+        const other = near.ux[o] * (v - y0[o]) - near.uy[o] * (u - x0[o]);
+        const turn = Math.hypot(near.ux[n] - near.ux[o], near.uy[n] - near.uy[o]);
+        bend = Math.max(bend, off - other + turn * h);
+      }
+      if (bend > h) continue;
+      const to = ways.count++;
+      ways.d[to] = bend - off;
+      ways.gx[to] = near.uy[n];
+      ways.gy[to] = -near.ux[n];
+    }
+    if (ways.count === 0) return true;
+    const lines = ways.count;
+    for (let m = 0; m < planes.count && m < MOST_WAYS; m++) {
+      const to = ways.count++;
+      ways.d[to] = planes.d[m] - slack;
+      ways.gx[to] = planes.gx[m];
+      ways.gy[to] = planes.gy[m];
+    }
+    if (envelopeTop(ways, ax - u, ay - v, bx - u, by - v) < 0) return false;
+    if (h * SMALL_SHARE > slack) return true;
+    // In a small box, try where the slack is greatest just beyond those lines.
+    for (let to = 0; to < lines; to++) {
+      ways.d[to] = (ways.d[to] - 2 * KEEP_OFF_MM) * STEEP;
+      ways.gx[to] *= STEEP;
+      ways.gy[to] *= STEEP;
+    }
+    if (envelopeTop(ways, ax - u, ay - v, bx - u, by - v) <= 0) return true;
+    const toU = u + ways.x;
+    const toV = v + ways.y;
+    const there = depthMoved(near, local, 0, local.length, u, v, toU, toV, depth);
+    const found = pointSlack(near, local, 0, local.length, toU, toV, all, gaps, order);
+    if (found < all) offer(there, found, toU, toV);
+    return true;
   };
 
   /** Puts the listed pieces nearer than `within` in `order`, nearest first, `most` of them at most. */
@@ -410,125 +627,6 @@ export function cellTradeOff(
     if (radius[n] > 0) return false;
     const along = (u - x0[n]) * near.ux[n] + (v - y0[n]) * near.uy[n];
     return along >= h && along <= near.length[n] - h;
-  };
-
-  /**
-   * True when some family of parallel pieces through the box shows that none of its origins is news:
-   * between each two neighbours of the family the count is bounded by the family's steps, and the
-   * slack by the nearest piece below and above that has a unit to itself in the box.
-   */
-  const stripsBeaten = (
-    local: Int32Array,
-    depth: number,
-    gain: number,
-    all: number,
-    u: number,
-    v: number,
-    ax: number,
-    ay: number,
-    bx: number,
-    by: number,
-  ): boolean => {
-    const mx = (ax + bx) / 2;
-    const my = (ay + by) / 2;
-    const hx = (bx - ax) / 2;
-    const hy = (by - ay) / 2;
-    const reachOfBox = Math.hypot(Math.max(u - ax, bx - u), Math.max(v - ay, by - v));
-    for (let a = 0; a < local.length;) {
-      const f = family[local[a]];
-      let b = a;
-      while (b < local.length && family[local[b]] === f) b++;
-      // One line alone shows nothing that its distance does not.
-      if (f < 0 || b - a < 2) {
-        a = b;
-        continue;
-      }
-      const nx = families.nx[f];
-      const ny = families.ny[f];
-      const middle = nx * mx + ny * my;
-      const half = Math.abs(nx) * hx + Math.abs(ny) * hy;
-      const along = -ny * mx + nx * my;
-      const halfAlong = Math.abs(ny) * hx + Math.abs(nx) * hy;
-      const ref = nx * u + ny * v;
-      const lines: number[] = [];
-      let farBelow = -Infinity;
-      let farAbove = Infinity;
-      let before = 0;
-      let highest = 0;
-      let sum = 0;
-      for (let m = a; m < b; m++) {
-        if (through[m] !== 2) {
-          // Beyond the box, and of a unit that holds all of it.
-          if (holds[m] === 1 && straightBefore(local[m], u, v, reachOfBox)) {
-            const t = height[local[m]];
-            if (t < middle && step[local[m]] > 0) farBelow = Math.max(farBelow, t);
-            if (t > middle && step[local[m]] < 0) farAbove = Math.min(farAbove, t);
-          }
-          continue;
-        }
-        lines.push(m);
-        sum += step[local[m]];
-        if (height[local[m]] < ref) before = sum;
-        if (sum > highest) highest = sum;
-      }
-      if (
-        lines.length > 1 ||
-        (lines.length === 1 && (farBelow > -Infinity || farAbove < Infinity))
-      ) {
-        const rest = depth + gain - (highest - before);
-        const tells = lines.map((m) => {
-          const n = local[m];
-          const s0 = -ny * x0[n] + nx * y0[n];
-          const s1 = -ny * x1[n] + nx * y1[n];
-          if (Math.min(s0, s1) > along - halfAlong || Math.max(s0, s1) < along + halfAlong)
-            return false;
-          return hasOwnUnit(local, m);
-        });
-        let beatenAll = true;
-        sum = 0;
-        for (let line = 0; line <= lines.length && beatenAll; line++) {
-          const low = line === 0 ? middle - half : height[local[lines[line - 1]]];
-          const high = line === lines.length ? middle + half : height[local[lines[line]]];
-          if (line > 0) sum += step[local[lines[line - 1]]];
-          let below = farBelow;
-          for (let m = line - 1; m >= 0; m--) {
-            const n = local[lines[m]];
-            if (step[n] > 0 && tells[m]) {
-              below = height[n];
-              break;
-            }
-          }
-          let above = farAbove;
-          for (let m = line; m < lines.length; m++) {
-            const n = local[lines[m]];
-            if (step[n] < 0 && tells[m]) {
-              above = height[n];
-              break;
-            }
-          }
-          const at = Math.max(low, Math.min(high, (below + above) / 2));
-          const slack =
-            below === -Infinity
-              ? above === Infinity
-                ? Infinity
-                : above - low
-              : above === Infinity
-                ? high - below
-                : Math.min(at - below, above - at);
-          beatenAll = beaten(Math.min(most.count, rest + sum - before), Math.min(all, slack));
-        }
-        if (beatenAll) return true;
-      }
-      a = b;
-    }
-    return false;
-  };
-
-  /** True when one of the piece's units has no other piece through the box. */
-  const hasOwnUnit = (local: Int32Array, m: number): boolean => {
-    let count = 0;
-    for (let n = 0; n < local.length; n++) if (n !== m && through[n] > 0) others[count++] = n;
-    return unitsApart(near, local[m], local, others, count, 1) > 0;
   };
 
   const wholeCell = (): Level => {
