@@ -87,3 +87,8 @@ export const wholeUnits = async (page: Page) =>
 
 export const saved = (page: Page) =>
   page.locator('[data-testid=sync][data-status=saved]').waitFor();
+
+/** The page's islands hear clicks: before, a button is only drawn. */
+export const awake = async (page: Page): Promise<void> => {
+  await page.waitForFunction(() => !document.querySelector('astro-island[ssr]'));
+};
