@@ -340,8 +340,7 @@ export function mostPlay(
     const box = { ax: boxes.x0[n], ay: boxes.y0[n], bx: boxes.x1[n], by: boxes.y1[n] };
     const u = box.ax + (box.bx - box.ax) * SPLIT;
     const v = box.ay + (box.by - box.ay) * SPLIT;
-    const meeting = boxes.list[n].map((piece) => near.of[piece]);
-    look(meeting, 0, reach, u, v, boxes.depth[n], box);
+    look(piecesHere(near, boxes.list[n]), 0, reach, u, v, boxes.depth[n], box);
   }
   while (heap.length > 0 && heap[0].bound > known() && !stop?.()) {
     const { bound, box, depth, list: meeting, within } = heapTake(heap);
@@ -357,4 +356,14 @@ export function mostPlay(
     }
   }
   return { count: most.count, slack: best, u: bestU, v: bestV };
+}
+
+/** The pieces that a cell's own pieces are part of, each once and in order. */
+function piecesHere({ of }: NearPieces, own: Int32Array): Int32Array {
+  const here = own.map((piece) => of[piece]).sort();
+  let count = 0;
+  for (let a = 0; a < here.length; a++) {
+    if (count === 0 || here[a] !== here[count - 1]) here[count++] = here[a];
+  }
+  return here.subarray(0, count);
 }

@@ -166,7 +166,13 @@ export function nearPieces(
           near.x0[o] = ax;
           near.y0[o] = ay;
         }
-        near.length[o] += pieces.length[n];
+        // A piece of next to no length has next to no direction: the longer one tells.
+        const ex = near.x1[o] - near.x0[o];
+        const ey = near.y1[o] - near.y0[o];
+        const length = Math.sqrt(ex * ex + ey * ey);
+        near.ux[o] = ex / length;
+        near.uy[o] = ey / length;
+        near.length[o] = length;
         if (at < pieces.count) of[at] = o;
         joined = true;
         break;
