@@ -1,3 +1,4 @@
+import { useEffect, useRef } from 'react';
 import { STEPS, type Step } from './table-store';
 import { useTable, useTableStore } from './table-context';
 
@@ -29,8 +30,16 @@ export function PegString() {
   const table = useTableStore();
   const step = useTable((state) => state.step);
   const at = STEPS.indexOf(step);
+  const string = useRef<HTMLElement>(null);
+  // On a narrow window the string is longer than the window: the current peg is kept in its middle.
+  useEffect(() => {
+    const peg = string.current?.querySelector<HTMLElement>('[aria-current]');
+    if (!string.current || !peg) return;
+    string.current.scrollLeft = peg.offsetLeft - (string.current.clientWidth - peg.offsetWidth) / 2;
+  }, [step]);
   return (
     <nav
+      ref={string}
       aria-label="Steps"
       className="relative flex overflow-x-auto md:w-[6.6rem] md:flex-col md:overflow-x-visible md:py-6"
     >
