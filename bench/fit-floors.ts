@@ -95,8 +95,25 @@ export const fitFloors: Readonly<Record<string, LayoutDocument>> = {
   'plaza of 200 corners at 17°': plaza(stretched(wavyRing(46_000, 200), 1.09, 0.65), 17),
 };
 
-/** A square whose perimeter is that many times the pitch of a 200 mm unit, at 17°. */
+/** A square has more units than can be laid at once when its perimeter is more pitches than this. */
+const SQUARE_PITCHES = 5_000;
+
+/**
+ * A square of 200 mm units at 17° whose boundary is that many times the pitch; a large one has a square
+ * keep-out in its middle, which counts: 11 parts of the side to 14.
+ */
 export function squareFloor(pitches: number): LayoutDocument {
-  const side = (pitches * 200) / 4;
-  return floorOf({ ring: rectangle(side, side), size: [200, 200], bond: 'stack', turn: 17 });
+  const hollow = pitches > SQUARE_PITCHES;
+  const side = (pitches * 200) / (hollow ? 4 * (1 + 11 / 14) : 4);
+  const inner = (side * 11) / 14;
+  const keepOuts: KeepOut[] = hollow
+    ? [{ name: 'Pool', ring: rectangle(inner, inner, (side - inner) / 2, (side - inner) / 2) }]
+    : [];
+  return floorOf({
+    ring: rectangle(side, side),
+    size: [200, 200],
+    bond: 'stack',
+    turn: 17,
+    keepOuts,
+  });
 }

@@ -528,10 +528,10 @@ function cornerPieces(
   // What is left of the arc after each other sweep, as angles from `from`.
   let left = [0, sweep];
   const cuts: number[] = [];
-  for (let at = 0; at < near.length; at++) {
-    // Most corners are gone after the neighbours; of the rest most lie outside the ground.
-    if (at === 4 && discOutside(ground, near, cx, cy, radius)) return;
-    const s = sweeps[near[at]];
+  // Half of the corners lie outside the ground; most of the rest are gone after the neighbours.
+  if (discOutside(ground, near, cx, cy, radius)) return;
+  for (const other of near) {
+    const s = sweeps[other];
     if (cx - radius > s.maxX || cx + radius < s.minX) continue;
     if (cy - radius > s.maxY || cy + radius < s.minY) continue;
     cuts.length = 0;
