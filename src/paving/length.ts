@@ -1,3 +1,4 @@
+import { formatCount } from './count';
 import type { LayoutDocument } from './layout-document';
 
 /**
@@ -126,8 +127,6 @@ export interface LengthParts {
   readonly unit: string;
 }
 
-const grouped = (figures: string): string => figures.replace(/\B(?=(\d{3})+(?!\d))/g, THIN);
-
 /**
  * @param decimals places of a millimetre to show in metric (trailing noughts are dropped). Imperial
  * always rounds to the nearest sixteenth.
@@ -138,7 +137,7 @@ export function lengthParts(mm: number, display: Display, decimals = 0): LengthP
     const [whole, part] = String(rounded).split('.');
     return {
       negative: mm < 0 && rounded !== 0,
-      figures: grouped(whole) + (part ? `.${part}` : ''),
+      figures: formatCount(Number(whole)) + (part ? `.${part}` : ''),
       fraction: null,
       unit: 'mm',
     };

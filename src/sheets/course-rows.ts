@@ -1,7 +1,8 @@
 import type { Course, CourseRun } from '@/paving/set-out/set-out-types';
 import type { Unit } from '@/paving/layout-document';
 import type { Display } from '@/paving/length';
-import { countText, figureText, lengthText } from './figures';
+import { formatCount } from '@/paving/count';
+import { figureText, lengthText } from './figures';
 import type { PanelRow } from './panel';
 import { LINE_PITCH, panelText, textRows } from './panel';
 import { tickBox } from './ruled-table';
@@ -59,7 +60,7 @@ export function courseRows(course: Course, words: CourseWords, width: number): r
   // Without a step to go by, every unit has its length.
   const given = steps === null ? { ...words, every: 1 } : words;
   const head = [
-    `${countText(course.units)} ${course.units === 1 ? 'unit' : 'units'}${kinds(course, words)}`,
+    `${formatCount(course.units)} ${course.units === 1 ? 'unit' : 'units'}${kinds(course, words)}`,
     `string ${course.number}a to ${course.number}b, ${lengthText(course.length, display)} long`,
     ...(course.step === null
       ? []
@@ -80,7 +81,7 @@ export function courseRows(course: Course, words: CourseWords, width: number): r
         ? []
         : kept(
             textRows(
-              `Then ${countText(run.units)} more, ${AFTER[run.after]}, from ${figure(run.from)}:`,
+              `Then ${formatCount(run.units)} more, ${AFTER[run.after]}, from ${figure(run.from)}:`,
               width,
             ),
           )),
@@ -103,7 +104,7 @@ function kinds({ byUnit }: Course, { units }: CourseWords): string {
   const used = units.filter(({ id }) => (byUnit[id] ?? 0) > 0);
   return units.length === 1
     ? ''
-    : ` (${used.map(({ id, name }) => `${countText(byUnit[id])} ${name}`).join(', ')})`;
+    : ` (${used.map(({ id, name }) => `${formatCount(byUnit[id])} ${name}`).join(', ')})`;
 }
 
 function headRow(title: string, words: string, width: number): PanelRow {

@@ -1,7 +1,8 @@
 import { courseRows, ticksEvery } from './course-rows';
 import type { FiguredContent } from './figured-sheet';
 import { figuredAndTabled } from './figured-sheet';
-import { countText, lengthText } from './figures';
+import { formatCount } from '@/paving/count';
+import { lengthText } from './figures';
 import { markRows } from './mark-row';
 import type { PanelRow } from './panel';
 import { headingRow, itemRow, keptTogether, pairRow, textRows } from './panel';
@@ -59,8 +60,8 @@ function coursesPanel(input: SetOutInput, scale: number, width: number): readonl
         width,
       ),
     ),
-    pairRow('Courses', countText(courses.length), width),
-    pairRow('Units', countText(laying.laid.count), width),
+    pairRow('Courses', formatCount(courses.length), width),
+    pairRow('Units', formatCount(laying.laid.count), width),
     ...(first
       ? [
           headingRow('First unit', width),

@@ -37,9 +37,6 @@ export function lengthText(mm: number, display: Display, decimals = 0): string {
   return display === 'metric' ? `${figure}\u2009mm` : figure;
 }
 
-/** One way of printing counts, for screen and sheet. */
-export { formatCount as countText } from '@/paving/count';
-
 /** Least to greatest, as `11–26`, or one figure when they print alike. */
 export function rangeText(least: number, greatest: number, display: Display): string {
   const [from, to] = [figureText(least, display), figureText(greatest, display)];

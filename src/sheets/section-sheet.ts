@@ -9,7 +9,8 @@ import { floorCautions } from './cautions';
 import type { PaperBox } from './drawing';
 import { boxInset } from './drawing';
 import { COLUMN_INSET, COLUMN_WIDTH, panelsFlowed } from './figured-sheet';
-import { countText, figureText, lengthText } from './figures';
+import { formatCount } from '@/paving/count';
+import { figureText, lengthText } from './figures';
 import { layerSection } from './layer-section';
 import { levelsDrafts } from './levels-sheet';
 import { markRows } from './mark-row';
@@ -132,13 +133,13 @@ function sectionRows(input: PlanInput, scale: number, width: number): readonly P
     headingRow('Screed board', width),
     pair('Pulled', pullWords(input.laying, board.pullDeg)),
     pair(
-      board.passes > 1 ? `Clear, each of ${countText(board.passes)} strips` : 'Clear width',
+      board.passes > 1 ? `Clear, each of ${formatCount(board.passes)} strips` : 'Clear width',
       length(board.bayWidth),
     ),
     pair('Board', length(board.boardLength)),
     pair('Lower edge below the ears', length(board.depth)),
     pair('Rides on', board.rides === 'edge' ? 'the edge' : 'rails at the finish'),
-    ...(board.rails > 0 ? [pair('Rails to set', countText(board.rails))] : []),
+    ...(board.rails > 0 ? [pair('Rails to set', formatCount(board.rails))] : []),
     ...keptTogether(
       [
         headingRow('Take care', width),

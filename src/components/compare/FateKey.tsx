@@ -1,4 +1,4 @@
-import { countText } from '@/sheets/figures';
+import { formatCount } from '@/paving/count';
 import type { Fate } from './comparison-picture';
 import type { UnitCounts } from './difference-words';
 
@@ -40,7 +40,7 @@ export function FateKey({ units, from, to }: { units: UnitCounts; from: string; 
             />
           </svg>
           <span>
-            <strong data-testid={`units-${fate}`}>{countText(count)}</strong> {words}
+            <strong data-testid={`units-${fate}`}>{formatCount(count)}</strong> {words}
           </span>
         </li>
       ))}

@@ -4,7 +4,7 @@ import { BOND_NAMES, bondJoint } from '@/paving/bond-edits';
 import { formatArea, M2_PER_SQUARE_FOOT } from '@/paving/area';
 import { formatLength, formatSize, type Display } from '@/paving/length';
 import type { LayoutDocument } from '@/paving/layout-document';
-import { countText } from '@/sheets/figures';
+import { formatCount } from '@/paving/count';
 import { formatRun } from '@/takeoff/measures';
 
 /** What is compared, as the words need it. */
@@ -68,7 +68,7 @@ function cuttingWords(
   if (a.cutting === b.cutting || !cut) return null;
   if (b.cutting === 'none') return 'cuts nothing at the edge';
   const pieces = cut.pieces.b ?? 0;
-  return `cuts ${countText(pieces)} ${pieces === 1 ? 'piece' : 'pieces'} at the edge and throws ${formatArea(cut.waste.b ?? 0, display)} away`;
+  return `cuts ${formatCount(pieces)} ${pieces === 1 ? 'piece' : 'pieces'} at the edge and throws ${formatArea(cut.waste.b ?? 0, display)} away`;
 }
 
 /** One sentence in plain words that says what differs from A to B. */
@@ -91,7 +91,7 @@ export function differenceSentence(
   parts.push(
     more === 0
       ? 'has as many whole units'
-      : `has ${countText(Math.abs(more))} ${more > 0 ? 'more' : 'fewer'} whole ${Math.abs(more) === 1 ? 'unit' : 'units'}`,
+      : `has ${formatCount(Math.abs(more))} ${more > 0 ? 'more' : 'fewer'} whole ${Math.abs(more) === 1 ? 'unit' : 'units'}`,
   );
   if (cutting) parts.push(cutting);
   const fill = figures.fillArea.change ?? 0;
@@ -134,12 +134,12 @@ export function figureRows(
 ): readonly FigureRow[] {
   const count = (name: string, { a: from, b: to }: { a: number | null; b: number | null }) => ({
     name,
-    a: countText(from ?? 0),
-    b: countText(to ?? 0),
+    a: formatCount(from ?? 0),
+    b: formatCount(to ?? 0),
     change:
       (to ?? 0) === (from ?? 0)
         ? ''
-        : signed((to ?? 0) - (from ?? 0), countText(Math.abs((to ?? 0) - (from ?? 0)))),
+        : signed((to ?? 0) - (from ?? 0), formatCount(Math.abs((to ?? 0) - (from ?? 0)))),
   });
   const length = (
     name: string,

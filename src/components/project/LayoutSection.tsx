@@ -3,7 +3,7 @@ import type { LayoutSummary } from '@/api-types/layouts';
 import type { LiveLayout } from '@/api-types/live';
 import type { VersionWithDrawing } from '@/api-types/versions';
 import { formatLength } from '@/paving/length';
-import { countText } from '@/sheets/figures';
+import { formatCount } from '@/paving/count';
 import { compareLink } from '../compare/compare-link';
 import { CoursesLaid } from '../site-progress/CoursesLaid';
 import { presentWords } from '../live/present-words';
@@ -130,7 +130,7 @@ function Versions({
               Plan
             </a>
             <p className="col-span-2 col-start-2 text-sm">
-              {countText(version.figures.wholeUnits)} whole units,{' '}
+              {formatCount(version.figures.wholeUnits)} whole units,{' '}
               {version.figures.leastGap === null
                 ? 'no unit laid'
                 : `${formatLength(version.figures.leastGap, version.document.display)} least gap`}

@@ -2,7 +2,7 @@ import { useQueries } from '@tanstack/react-query';
 import type { Agreement } from '@/api-types/agreement';
 import type { VersionDetail, VersionWithDrawing } from '@/api-types/versions';
 import { formatLength } from '@/paving/length';
-import { countText } from '@/sheets/figures';
+import { formatCount } from '@/paving/count';
 import { compareLink } from '../compare/compare-link';
 import { api } from '../ui/api';
 import { FloorDrawing } from '../ui/FloorDrawing';
@@ -61,7 +61,7 @@ export function Choices({
                 <p className="text-sm text-slate">{other.layoutName}</p>
               )}
               <p className="text-sm">
-                {countText(other.figures.wholeUnits)} {client ? 'pieces' : 'whole units'}
+                {formatCount(other.figures.wholeUnits)} {client ? 'pieces' : 'whole units'}
                 {other.figures.leastGap !== null &&
                   `, ${formatLength(other.figures.leastGap, other.document.display)} ${client ? 'from the edge' : 'least gap'}`}
                 <span className="text-slate">

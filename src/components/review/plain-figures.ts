@@ -2,7 +2,7 @@ import type { VersionDetail } from '@/api-types/versions';
 import { formatArea } from '@/paving/area';
 import { formatLength, formatSize } from '@/paving/length';
 import { aggregateArea } from '@/paving/report';
-import { countText } from '@/sheets/figures';
+import { formatCount } from '@/paving/count';
 
 /** A figure for somebody who does not lay floors: what it is, and what it means for them. */
 export interface PlainFigure {
@@ -27,7 +27,7 @@ export function plainFigures({ document, report }: Shown): readonly PlainFigure[
   return [
     ...laid.map((unit) => ({
       name: unit.name,
-      value: countText(report.byUnit[unit.id]),
+      value: formatCount(report.byUnit[unit.id]),
       meaning: `${formatSize(unit.length, unit.width, display)}, ${document.cutting === 'edge' ? 'laid whole; only those at the edge are cut.' : 'each laid whole: none is cut.'}`,
     })),
     {
@@ -39,8 +39,8 @@ export function plainFigures({ document, report }: Shown): readonly PlainFigure[
       ? [
           {
             name: 'Cut pieces',
-            value: countText(report.cut.count),
-            meaning: `Sawn to the edge from ${countText(report.cut.wholeUnits)} further units.`,
+            value: formatCount(report.cut.count),
+            meaning: `Sawn to the edge from ${formatCount(report.cut.wholeUnits)} further units.`,
           },
         ]
       : []),
