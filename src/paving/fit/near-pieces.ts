@@ -170,8 +170,10 @@ export function nearPieces(
         const ex = near.x1[o] - near.x0[o];
         const ey = near.y1[o] - near.y0[o];
         const length = Math.sqrt(ex * ex + ey * ey);
-        near.ux[o] = ex / length;
-        near.uy[o] = ey / length;
+        if (length > 0) {
+          near.ux[o] = ex / length;
+          near.uy[o] = ey / length;
+        }
         near.length[o] = length;
         if (at < pieces.count) of[at] = o;
         joined = true;
