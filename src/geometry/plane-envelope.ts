@@ -27,8 +27,7 @@ export function planeEnvelope(most: number): PlaneEnvelope {
 const LEAST_CROSS = 1e-9;
 
 /**
- * Height of the highest point of the envelope over x0 ≤ x ≤ x1, y0 ≤ y ≤ y1, 0 within it; writes the point,
- * or, where the envelope is level along a side or planes are all but parallel, one of those that it may be.
+ * Height of the highest point of the envelope over x0 ≤ x ≤ x1, y0 ≤ y ≤ y1, 0 within it; writes the point.
  * No plane makes Infinity. A linear programme in three unknowns, by its dual: some one, two or three
  * planes, weighed so that the sum is level but for what the rectangle's sides hold, bound the rest.
  * What it returns is never less than the truth, but for rounding.
