@@ -10,6 +10,13 @@ export interface SlackPlace {
   readonly slack: number;
 }
 
+/** What the pieces are complete for: origins of the cell, out to `reach`, mm. */
+export interface PolishedWithin {
+  readonly pitch: number;
+  readonly rise: number;
+  readonly reach: number;
+}
+
 const LEAST_STEP_MM = 1e-7;
 const GREATEST_HELD = 10;
 
@@ -24,30 +31,55 @@ export function slackPolished(
   startU: number,
   startV: number,
   startSlack: number,
+  { pitch, rise, reach }: PolishedWithin,
 ): SlackPlace[] {
   const found: SlackPlace[] = [];
   let u = startU;
   let v = startV;
   let slack = startSlack;
   let trust = Math.max(slack, 0.05);
-  const scope = 1.5 * trust + 1.5 * slack;
-  // Pieces that can matter while the origin stays within `scope` of where it started.
+  // Pieces that can matter while the origin stays within `scope` of (aboutU, aboutV), with no more slack than that.
+  let scope = 0;
+  let aboutU = u;
+  let aboutV = v;
+  let local = new Int32Array(0);
+  let room = pieceGapsRoom(0);
+  let order = new Int32Array(0);
   const one = pieceGapsRoom(1);
-  const nearest: number[] = [];
-  for (let a = 0; a < list.length; a++) {
-    const n = list[a];
-    if (Math.min(pieces.x0[n], pieces.x1[n]) > u + 2 * scope) continue;
-    if (Math.max(pieces.x0[n], pieces.x1[n]) < u - 2 * scope) continue;
-    if (Math.min(pieces.y0[n], pieces.y1[n]) > v + 2 * scope) continue;
-    if (Math.max(pieces.y0[n], pieces.y1[n]) < v - 2 * scope) continue;
-    pieceGap(pieces, n, u, v, one, 0);
-    if (one.distance[0] < 2 * scope) nearest.push(n);
-  }
-  const room = pieceGapsRoom(nearest.length);
-  const local = Int32Array.from(nearest);
-  const order = new Int32Array(local.length);
+  const gather = () => {
+    scope = 1.5 * trust + 1.5 * slack;
+    aboutU = u;
+    aboutV = v;
+    const nearest: number[] = [];
+    for (let a = 0; a < list.length; a++) {
+      const n = list[a];
+      if (Math.min(pieces.x0[n], pieces.x1[n]) > u + 2 * scope) continue;
+      if (Math.max(pieces.x0[n], pieces.x1[n]) < u - 2 * scope) continue;
+      if (Math.min(pieces.y0[n], pieces.y1[n]) > v + 2 * scope) continue;
+      if (Math.max(pieces.y0[n], pieces.y1[n]) < v - 2 * scope) continue;
+      pieceGap(pieces, n, u, v, one, 0);
+      if (one.distance[0] < 2 * scope) nearest.push(n);
+    }
+    local = Int32Array.from(nearest);
+    room = pieceGapsRoom(local.length);
+    order = new Int32Array(local.length);
+  };
+  gather();
+  /** How far off pieces are known about a point, which may lie beyond the cell. */
+  const knownAbout = (x: number, y: number) =>
+    reach - Math.hypot(Math.max(0, -x, x - pitch), Math.max(0, -y, y - rise));
   const slackAt = (x: number, y: number) =>
-    pointSlack(pieces, local, 0, local.length, x, y, scope, room, order);
+    pointSlack(
+      pieces,
+      local,
+      0,
+      local.length,
+      x,
+      y,
+      Math.min(scope, knownAbout(x, y)),
+      room,
+      order,
+    );
   for (let round = 0; round < 60 && trust > LEAST_STEP_MM; round++) {
     // Held: pieces of units that the origin has. Shunned: pieces of those it has not.
     let count = 0;
@@ -91,6 +123,13 @@ export function slackPolished(
     }
     const nextU = u + step.x;
     const nextV = v + step.y;
+    if (knownAbout(nextU, nextV) <= slack) break;
+    if (Math.hypot(nextU - aboutU, nextV - aboutV) > scope || 1.2 * slack > scope) {
+      // Too far for what was gathered: gather anew where it has come to.
+      if (aboutU === u && aboutV === v) break;
+      gather();
+      continue;
+    }
     const gained = depthMoved(pieces, local, 0, local.length, u, v, nextU, nextV, 0);
     const there = slackAt(nextU, nextV);
     if (gained !== 0) {
@@ -101,7 +140,6 @@ export function slackPolished(
       u = nextU;
       v = nextV;
       slack = there;
-      if (Math.hypot(u - startU, v - startV) > scope) break;
       if (!trusted) trust /= 2;
     } else {
       trust /= 4;

@@ -135,7 +135,11 @@ export function cellTradeOff(
   const polish = () => {
     for (const at of [...fresh]) {
       if (bestSlack[at] < known[at]) continue;
-      const found = slackPolished(near, every, bestU[at], bestV[at], bestSlack[at]);
+      const found = slackPolished(near, every, bestU[at], bestV[at], bestSlack[at], {
+        pitch,
+        rise,
+        reach,
+      });
       for (const { u, v, gained, slack } of found) offer(at + least + gained, slack, u, v);
     }
     fresh.clear();

@@ -1,0 +1,70 @@
+import fc from 'fast-check';
+import { expect, test } from 'vitest';
+import { fit } from '@/paving/fit/fit';
+import { CHOICES_SHARE, frameChoices, frameMost, frameStart } from '@/paving/fit/cell-fit';
+import { unitCount } from '@/paving/fit/count';
+import { fitFrame } from '@/paving/fit/fit-frame';
+import { nearPieces } from '@/paving/fit/near-pieces';
+import { pieceGapsRoom, pointSlack } from '@/paving/fit/slack';
+import { slackPolished } from '@/paving/fit/slack-polish';
+import { SLACK_TOLERANCE_MM } from '@/paving/fit/trade-off';
+import { LENGTH_TOLERANCE_MM } from '@/geometry/tolerance';
+import { anyDocument } from '../../../oracle/documents';
+
+// The trade-off's own promise, looked for by another way: from starts anywhere, climbing to where the slack
+// about each is greatest. No source is needed: something better is a counterexample.
+
+const share = fc.double({ min: 0, max: 1, noNaN: true });
+
+test('no start climbed to from anywhere has more play, with as many units, than the trade-off gives', () => {
+  let told = 0;
+  fc.assert(
+    fc.property(
+      anyDocument({ arcs: true }),
+      fc.array(fc.tuple(share, share), { minLength: 40, maxLength: 40 }),
+      (document, places) => {
+        const frame = fitFrame(document);
+        const { pitch, rise, shift } = frame;
+        const { pieces, most } = frameMost(frame);
+        if (most.count === 0) return;
+        const choices = frameChoices(frame, pieces, frameStart(frame, pieces, most));
+        const reach = pitch * 1.001;
+        const near = nearPieces(pieces, pitch, rise, shift, reach);
+        const every = Int32Array.from({ length: near.count }, (_, n) => n);
+        const room = pieceGapsRoom(near.count);
+        const order = new Int32Array(near.count);
+        const given = (count: number) =>
+          Math.max(...choices.filter((one) => one.count >= count).map(({ slack }) => slack));
+        for (const [s, t] of places) {
+          const [u, v] = [s * pitch, t * rise];
+          const slack = pointSlack(near, every, 0, near.count, u, v, reach, room, order);
+          const count = unitCount(frame, u, v);
+          if (slack <= 0 || count < CHOICES_SHARE * most.count) continue;
+          for (const place of slackPolished(near, every, u, v, slack, { pitch, rise, reach })) {
+            const units = count + place.gained;
+            if (units < CHOICES_SHARE * most.count || units === 0) continue;
+            told++;
+            // Choices that differ by no more than the tolerance of lengths are one.
+            expect(place.slack).toBeLessThanOrEqual(
+              given(units) + SLACK_TOLERANCE_MM + LENGTH_TOLERANCE_MM,
+            );
+          }
+        }
+      },
+    ),
+    { seed: 21, numRuns: 60 },
+  );
+  expect(told).toBeGreaterThan(1000);
+}, 180_000);
+
+test('every choice is borne out by the laying: a fit ends without a fault', () => {
+  for (const seed of [8, 1001]) {
+    fc.assert(
+      fc.property(anyDocument({ arcs: true }), (document) => {
+        const { wholeUnits, choices } = fit(document);
+        expect(choices[0]?.wholeUnits ?? 0).toBe(wholeUnits);
+      }),
+      { seed, numRuns: 120 },
+    );
+  }
+}, 120_000);
