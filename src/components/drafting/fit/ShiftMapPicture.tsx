@@ -136,7 +136,7 @@ export function ShiftMapPicture({
             <circle
               cx={bestAt[0] * map.pitch}
               cy={bestAt[1] * map.rise}
-              r={best.play}
+              r={Math.max(0, best.play)}
               strokeDasharray="3 2"
               vectorEffect="non-scaling-stroke"
             />
