@@ -6,7 +6,6 @@ import { unitCount } from '@/paving/fit/count';
 import { fit, type FitResult } from '@/paving/fit/fit';
 import { cellPoint, fitFrame, frameFromGround } from '@/paving/fit/fit-frame';
 import { depthMoved } from '@/paving/fit/most';
-import { startCounter } from '@/paving/fit/start-counter';
 import { documentGround, type Ground } from '@/paving/ground';
 import { layFloor } from '@/paving/laying';
 import type { LayoutDocument } from '@/paving/layout-document';
@@ -14,6 +13,7 @@ import { leastGapAt } from '@/paving/least-gap';
 import { bondPattern } from '@/paving/bond';
 import { oracleFloor } from '../oracle/brute-force';
 import { anyDocument } from '../oracle/documents';
+import { startCounter } from '../oracle/start-counter';
 
 // A second, slow way to the fit: floors laid from very many starts, each the laying's own decision,
 // and the best of them looked about in more closely. The laying itself is judged by JSTS in

@@ -92,3 +92,16 @@ export const saved = (page: Page) =>
 export const awake = async (page: Page): Promise<void> => {
   await page.waitForFunction(() => !document.querySelector('astro-island[ssr]'));
 };
+
+/** Draws on by keyboard alone from a ring's first corner: a direction and a length for each side. */
+export async function drawSides(
+  page: Page,
+  sides: readonly (readonly [arrow: string, length: string])[],
+) {
+  for (const [arrow, length] of sides) {
+    await page.getByTestId('floor').focus();
+    await page.keyboard.press(arrow);
+    await page.keyboard.type(length);
+    await page.keyboard.press('Enter');
+  }
+}

@@ -1,6 +1,7 @@
 import { afterAll, beforeAll, expect, it } from 'vitest';
 import type { Browser, Page } from 'playwright-core';
 import {
+  drawSides,
   goToStep,
   launch,
   openNewTable,
@@ -26,12 +27,11 @@ async function exactFloor(page: Page) {
   await page.getByRole('button', { name: 'Draw anew' }).click();
   await page.getByTestId('floor').focus();
   await page.keyboard.press('Enter');
-  for (const arrow of ['ArrowRight', 'ArrowUp', 'ArrowLeft']) {
-    await page.getByTestId('floor').focus();
-    await page.keyboard.press(arrow);
-    await page.keyboard.type('3000');
-    await page.keyboard.press('Enter');
-  }
+  await drawSides(page, [
+    ['ArrowRight', '3000'],
+    ['ArrowUp', '3000'],
+    ['ArrowLeft', '3000'],
+  ]);
   await page.keyboard.press('Escape');
   await page.getByTestId('floor').focus();
   await page.keyboard.press('c');

@@ -1,6 +1,7 @@
 import { afterAll, beforeAll, expect, it } from 'vitest';
-import type { Browser, Page } from 'playwright-core';
+import type { Browser } from 'playwright-core';
 import {
+  drawSides,
   goToStep,
   launch,
   openNewTable,
@@ -16,16 +17,6 @@ beforeAll(async () => {
   browser = await launch();
 });
 afterAll(() => browser.close());
-
-/** Draws a ring by keyboard alone: the first corner where the pointer is, then a direction and a length for each side. */
-async function drawSides(page: Page, sides: readonly (readonly [arrow: string, length: string])[]) {
-  for (const [arrow, length] of sides) {
-    await page.getByTestId('floor').focus();
-    await page.keyboard.press(arrow);
-    await page.keyboard.type(length);
-    await page.keyboard.press('Enter');
-  }
-}
 
 /** The L-shaped court of the layout document's example: 7200 × 5400 less 2900 × 2300. */
 const COURT = [

@@ -81,6 +81,8 @@ export interface TableState {
   readonly holding: {
     readonly kind: 'edge' | 'between';
     readonly first: readonly [number, number] | null;
+    /** Why the edge that was pointed at last will not do. */
+    readonly refused?: string;
   } | null;
   /** The spot level that is picked, by its place in the list. */
   readonly spot: number | null;

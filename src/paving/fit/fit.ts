@@ -1,10 +1,14 @@
 import { documentGround } from '../ground';
 import type { LayoutDocument, Placement } from '../layout-document';
+import type { BestFace } from './best-face';
 import { frameChoices, frameMost, frameStart } from './cell-fit';
+import { cellPieces } from './cell-pieces';
+import { cellFace } from './face';
 import { fitFrame, holdFrame, type FitFrame } from './fit-frame';
 import { holdRefusal, type FitHold, type HoldRefusal } from './hold';
 import { heldChoices } from './line-fit';
 import { rangeTurns, turnBest, turnSweep, type FitTurn, type TurnRange } from './turn-sweep';
+import type { CellChoice } from './trade-off';
 import { choiceVerified, type FitChoice } from './verified';
 
 export type { EdgeAddress, FitHold, HoldRefusal } from './hold';
@@ -72,31 +76,63 @@ function resultOf(frame: FitFrame, choices: readonly FitChoice[]): FitResult {
   return { wholeUnits, placement, leastGap, play, choices };
 }
 
-function fixedFit(document: LayoutDocument, turn: number, options: FitOptions): FitResult {
-  const { hold = [], choices = true, shouldStop } = options;
+/** The fit at one turn, begun: the most units and the start that gives them are known, the rest can be asked for. */
+export interface FitBegun {
+  /** Without the trade-off: `choices` has the start alone. */
+  readonly result: FitResult;
+  /** The outline of the starts about it that have as many units; none with holds, or where nothing is laid. */
+  readonly face: () => BestFace | null;
+  /** With the trade-off, from what is known already. */
+  readonly whole: () => FitResult;
+}
+
+/**
+ * Begins the fit of a valid document at its own turn, or another. Throws as `fit` does, now and when the rest is asked for.
+ */
+export function fitBegun(
+  document: LayoutDocument,
+  { hold = [], shouldStop }: Pick<FitOptions, 'hold' | 'shouldStop'> = {},
+  turn: number = document.placement.turn,
+): FitBegun {
+  const refusal = fitRefusal({ ...document, placement: { ...document.placement, turn } }, { hold });
+  if (refusal) throw new Error(refusal.message);
   const frame = fitFrame(document, turn, documentGround(document));
-  const check = () => {
+  const check = <T>(found: T): T => {
     if (shouldStop?.()) throw new Error(FIT_STOPPED);
+    return found;
   };
-  if (hold.length > 0) {
-    const held = heldChoices(frame, hold, choices);
-    check();
-    return resultOf(
+  const verified = (choices: readonly CellChoice[], held: boolean) =>
+    resultOf(
       frame,
-      held.map((choice) => choiceVerified(frame, choice, true)),
+      choices.map((choice) => choiceVerified(frame, choice, held)),
     );
+  if (hold.length > 0) {
+    const pieces = cellPieces(frame);
+    const held = (all: boolean) =>
+      verified(check(heldChoices(frame, pieces, hold, all, shouldStop)), true);
+    return { result: held(false), face: () => null, whole: () => held(true) };
   }
-  const { pieces, most } = frameMost(frame, shouldStop);
-  check();
-  if (most.count === 0) return resultOf(frame, []);
-  const start = frameStart(frame, pieces, most, shouldStop);
-  check();
-  const found = choices ? frameChoices(frame, pieces, start, shouldStop) : [start];
-  check();
-  return resultOf(
-    frame,
-    found.map((choice) => choiceVerified(frame, choice)),
-  );
+  const { pieces, most } = check(frameMost(frame, shouldStop));
+  if (most.count === 0) {
+    const none = resultOf(frame, []);
+    return { result: none, face: () => null, whole: () => none };
+  }
+  const start = check(frameStart(frame, pieces, most, shouldStop));
+  const result = verified([start], false);
+  return {
+    result,
+    face: () => ({ most: most.count, outline: cellFace(pieces, frame, most.u, most.v) }),
+    whole: () => {
+      const [, ...fewer] = check(frameChoices(frame, pieces, start, shouldStop));
+      const rest = fewer.map((choice) => choiceVerified(frame, choice));
+      return { ...result, choices: [...result.choices, ...rest] };
+    },
+  };
+}
+
+function fixedFit(document: LayoutDocument, turn: number, options: FitOptions): FitResult {
+  const begun = fitBegun(document, options, turn);
+  return options.choices === false ? begun.result : begun.whole();
 }
 
 /**

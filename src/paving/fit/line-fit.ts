@@ -2,7 +2,7 @@ import { LENGTH_TOLERANCE_MM } from '@/geometry/tolerance';
 import { gapProfile } from '../gap-profile';
 import { layFloor } from '../laying';
 import { CHOICES_SHARE } from './cell-fit';
-import { cellPieces, type CellPieces } from './cell-pieces';
+import type { CellPieces } from './cell-pieces';
 import { unitCount } from './count';
 import { cellPoint, groundFromFrame, type FitFrame } from './fit-frame';
 import { holdLines, type EdgeAddress, type FitHold, type HoldLine } from './hold';
@@ -178,7 +178,7 @@ const FOLLOWED = 8;
  * distance to each of their pieces is convex along the line, so over a part of the stretch it is
  * nowhere more than at the part's ends; parts in which no such bound beats the best are let go.
  */
-function stretchSearch(frame: FitFrame, pieces: CellPieces) {
+function stretchSearch(frame: FitFrame, pieces: CellPieces, stop?: () => boolean) {
   const { pitch, rise, shift } = frame;
   const reach = pitch * 1.001;
   const near = nearPieces(pieces, pitch, rise, shift, reach);
@@ -200,7 +200,7 @@ function stretchSearch(frame: FitFrame, pieces: CellPieces) {
     const within = Math.min(reach, best.slack + half);
     const local = every.filter((_, n) => room.distance[n] <= within + half);
     let parts = [{ low: from, high: to }];
-    while (parts.length > 0) {
+    while (parts.length > 0 && !stop?.()) {
       const next: typeof parts = [];
       for (const { low, high } of parts) {
         const centre = (low + high) / 2;
@@ -246,12 +246,15 @@ function marginsAgree(frame: FitFrame, holds: readonly FitHold[], u: number, v: 
 /**
  * The trade-off among origins that keep one or two holds, most units first; empty when none lays a
  * unit. Along a line the count changes only where it crosses a boundary of the regions, so between
- * those crossings every origin is the same and the best of each stretch is the best there is.
+ * those crossings every origin is the same and the best of each stretch is the best there is. Without
+ * `all`, the best start alone. When `stop` answers true what was found so far is given, and is not to be used.
  */
 export function heldChoices(
   frame: FitFrame,
+  pieces: CellPieces,
   holds: readonly FitHold[],
   all: boolean,
+  stop?: () => boolean,
 ): CellChoice[] {
   const first = holdLines(frame, holds[0]);
   const stretches =
@@ -263,10 +266,10 @@ export function heldChoices(
   stretches.sort(
     (one, other) => other.count - one.count || other.to - other.from - (one.to - one.from),
   );
-  const bestOn = stretchSearch(frame, cellPieces(frame));
+  const bestOn = stretchSearch(frame, pieces, stop);
   const choices: CellChoice[] = [];
   let above = -Infinity;
-  for (let n = 0; n < stretches.length;) {
+  for (let n = 0; n < stretches.length && !stop?.();) {
     const { count } = stretches[n];
     const top = choices.length > 0 ? choices[0].count : count;
     if (count <= 0 || (choices.length > 0 && (!all || count < CHOICES_SHARE * top))) break;
@@ -280,6 +283,7 @@ export function heldChoices(
       Math.abs(one.slack - other.slack) <= LINE_TOLERANCE_MM ? 0 : other.slack - one.slack,
     );
     for (const { line, s, slack } of places) {
+      if (stop?.()) break;
       if (slack <= above + LENGTH_TOLERANCE_MM) break;
       const [u, v] = pointOn(line, s);
       if (!marginsAgree(frame, holds, u, v)) continue;

@@ -134,11 +134,3 @@ export function shiftMapShift(map: ShiftMap, [along, up]: Point): Point {
   const [ux, uy] = map.direction;
   return [along * ux - up * uy, along * uy + up * ux];
 }
-
-/** The count that the map shows for a start on the ground. */
-export function shiftMapCount(map: ShiftMap, origin: Point): number {
-  const [u, v] = shiftMapPlace(map, origin);
-  const column = Math.min(map.width - 1, Math.floor((u / map.pitch) * map.width));
-  const row = Math.min(map.height - 1, Math.floor((v / map.rise) * map.height));
-  return map.counts[row * map.width + column];
-}

@@ -1,6 +1,7 @@
 import { documentGround, type Ground } from '../ground';
 import type { LayoutDocument } from '../layout-document';
 import { frameMost, frameStart } from './cell-fit';
+import { cellPieces } from './cell-pieces';
 import { fitFrame } from './fit-frame';
 import { holdRefusal, type FitHold } from './hold';
 import { heldChoices } from './line-fit';
@@ -48,7 +49,7 @@ export function turnFit(
   const none = { turn, wholeUnits: 0, play: null };
   if (hold.length > 0) {
     if (holdRefusal(frame, hold)) return null;
-    const [choice] = heldChoices(frame, hold, false);
+    const [choice] = heldChoices(frame, cellPieces(frame), hold, false);
     if (!choice) return none;
     const { wholeUnits, play } = choiceVerified(frame, choice, true);
     return { turn, wholeUnits, play };

@@ -1,14 +1,14 @@
 import { describe, expect, test } from 'vitest';
 import { bestFace } from '@/paving/fit/best-face';
-import { fit, fitRefusal, fitSteps, FIT_STOPPED, type FitHold } from '@/paving/fit/fit';
-import { shiftMap, shiftMapCount, shiftMapPlace } from '@/paving/fit/shift-map';
-import { startCounter } from '@/paving/fit/start-counter';
+import { fit, fitBegun, fitRefusal, fitSteps, FIT_STOPPED, type FitHold } from '@/paving/fit/fit';
+import { shiftMap, shiftMapPlace } from '@/paving/fit/shift-map';
 import { rangeTurns } from '@/paving/fit/turn-sweep';
 import { gapProfile } from '@/paving/gap-profile';
 import { layFloor } from '@/paving/laying';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { floorReport } from '@/paving/report';
 import { documentOf, parsed, unitOf } from '../../oracle/documents';
+import { startCounter } from '../../oracle/start-counter';
 
 const COURT: LayoutDocument = parsed(
   documentOf({
@@ -98,6 +98,29 @@ test('the start is given as near as can be to where the pattern stands', () => {
   expect(
     Math.hypot(placement.origin[0] - origin[0], placement.origin[1] - origin[1]),
   ).toBeLessThanOrEqual(step);
+});
+
+test('begun, it gives the start and its face at once, and the whole from the same pieces', () => {
+  const begun = fitBegun(COURT);
+  expect(begun.result).toEqual(fit(COURT, { choices: false }));
+  expect(begun.face()).toEqual(bestFace(COURT));
+  expect(begun.whole()).toEqual(fit(COURT));
+  const hold: FitHold[] = [{ edge: [0, 0] }];
+  const held = fitBegun(atTurn(0), { hold });
+  expect(held.result).toEqual(fit(atTurn(0), { hold, choices: false }));
+  expect(held.face()).toBeNull();
+  expect(held.whole()).toEqual(fit(atTurn(0), { hold }));
+});
+
+test('with a hold it can be stopped on the way', () => {
+  let asked = 0;
+  const hold: FitHold[] = [{ edge: [0, 0] }];
+  fit(atTurn(0), { hold, shouldStop: () => ++asked < 0 });
+  expect(asked).toBeGreaterThan(10);
+  for (const after of [0, 1, asked >> 1, asked - 1]) {
+    let times = 0;
+    expect(() => fit(atTurn(0), { hold, shouldStop: () => ++times > after })).toThrow(FIT_STOPPED);
+  }
 });
 
 test('where nothing can be laid the answer says so and the placement is kept', () => {
@@ -317,7 +340,10 @@ test('a start is counted alike by the counter, the laying and the shift map', ()
   }
   const best = fit(COURT);
   expect(count(best.placement.origin)).toBe(best.wholeUnits);
-  expect(shiftMapCount(map, best.placement.origin)).toBeLessThanOrEqual(best.wholeUnits);
+  const [u, v] = shiftMapPlace(map, best.placement.origin);
+  const column = Math.min(map.width - 1, Math.floor((u / map.pitch) * map.width));
+  const row = Math.min(map.height - 1, Math.floor((v / map.rise) * map.height));
+  expect(map.counts[row * map.width + column]).toBeLessThanOrEqual(best.wholeUnits);
   expect(map.most).toBeLessThanOrEqual(best.wholeUnits);
 });
 

@@ -39,6 +39,11 @@ export function HoldFields({ fit: _fit }: { fit: FitService }) {
       )}
       {holding ? (
         <div className="border-l-2 border-line pl-3">
+          {holding.refused && (
+            <p role="alert" className="mb-2 text-brick first-letter:uppercase">
+              {holding.refused}
+            </p>
+          )}
           <p>
             {holding.kind === 'edge'
               ? 'Point at the edge along which a row starts.'

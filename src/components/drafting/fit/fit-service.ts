@@ -98,14 +98,13 @@ export function createFitService(
     state.setState({ working: true });
     try {
       hand ??= newHand();
-      const [result, map, face] = await Promise.all([
-        hand.remote.fit(document, { hold: now.hold, choices: false }),
+      const [{ result, face }, map] = await Promise.all([
+        hand.remote.begin(document, now.hold),
         hand.remote.map(document, MAP_ACROSS),
-        now.hold.length === 0 ? hand.remote.face(document) : null,
       ]);
       state.setState({ key, result, map, face, failure: null });
       // The most and the start that gives it come first; the trade-off takes longer and follows.
-      if (!due) state.setState({ result: await hand.remote.fit(document, { hold: now.hold }) });
+      if (!due) state.setState({ result: (await hand.remote.whole()) ?? result });
     } catch (error) {
       state.setState({
         key,
@@ -174,7 +173,7 @@ export function createFitService(
       };
       show(turned);
       hand ??= newHand();
-      const found = await hand.remote.fit(turned, { choices: false }).catch(() => null);
+      const found = await hand.remote.start(turned).catch(() => null);
       // Somebody else's hand may be on the floor by now.
       if (table.getState().preview !== turned) return;
       if (found && found.wholeUnits > 0) show({ ...turned, placement: found.placement });

@@ -1,9 +1,10 @@
 import { expose, transfer } from 'comlink';
-import { bestFace, type BestFace } from '@/paving/fit/best-face';
+import type { BestFace } from '@/paving/fit/best-face';
 import {
   fit,
+  fitBegun,
+  type FitBegun,
   type FitHold,
-  type FitOptions,
   type FitResult,
   type FitTurn,
   type TurnRange,
@@ -12,13 +13,26 @@ import { fitJoints, type JointFits, type JointRange } from '@/paving/fit/joint-r
 import { shiftMap, type ShiftMap } from '@/paving/fit/shift-map';
 import type { LayoutDocument } from '@/paving/layout-document';
 
+/** The floor fitted last: what is known of it is not worked out anew for the trade-off. */
+let begun: FitBegun | null = null;
+
 /** The fit beside the page: the very code that the server and the command line run. */
 const fitWorker = {
-  fit: (document: LayoutDocument, options: Pick<FitOptions, 'hold' | 'choices'>): FitResult =>
-    fit(document, options),
+  /** The most units, the best start, and the outline of the starts about it. */
+  begin: (
+    document: LayoutDocument,
+    hold: readonly FitHold[],
+  ): { result: FitResult; face: BestFace | null } => {
+    begun = null;
+    begun = fitBegun(document, { hold });
+    return { result: begun.result, face: begun.face() };
+  },
 
-  /** Outline of the starts with the most units, to its true edge. */
-  face: (document: LayoutDocument): BestFace => bestFace(document),
+  /** The trade-off of the floor that was begun last, from the same pieces. */
+  whole: (): FitResult | null => begun?.whole() ?? null,
+
+  /** The best start alone. */
+  start: (document: LayoutDocument): FitResult => fit(document, { choices: false }),
 
   /** The shift map, about `across` counts wide. */
   map: (document: LayoutDocument, across: number): ShiftMap => {

@@ -1,4 +1,4 @@
-import type { FitHold } from '@/paving/fit/fit';
+import { fitRefusal, type FitHold } from '@/paving/fit/fit';
 import { documentEdgeName } from '@/paving/edge-names';
 import type { TableStore } from '../table-store';
 import { edgeNearest } from './edit-ring';
@@ -22,7 +22,7 @@ export function holdPointed(table: TableStore, ring: number, edge: number): void
   if (!holding) return;
   if (holding.kind === 'between' && !holding.first) {
     set({
-      holding: { ...holding, first: [ring, edge] },
+      holding: { kind: 'between', first: [ring, edge] },
       said: `Between ${documentEdgeName(document, ring, edge)} and …: point at the other edge.`,
     });
     return;
@@ -32,7 +32,17 @@ export function holdPointed(table: TableStore, ring: number, edge: number): void
     ? { between: [[...holding.first], [ring, edge]] }
     : { edge: [ring, edge] };
   // Two freedoms at most: the oldest hold gives way to a third.
-  set({ hold: [...hold, made].slice(-2), tool: 'slide', holding: null, hover: null });
+  const next = [...hold, made].slice(-2);
+  const name = (r: number, e: number) => documentEdgeName(document, r, e);
+  if (
+    fitRefusal(document, { hold: next }) &&
+    !next.some((one) => fitRefusal(document, { hold: [one] }))
+  ) {
+    const refused = `${holdWords(made, name)} and ${holdWords(next[0], name)} run the same way, so both cannot be kept. Point at an edge that runs another way, or leave it free and let go of the first.`;
+    set({ holding: { kind: holding.kind, first: null, refused } });
+    return;
+  }
+  set({ hold: next, tool: 'slide', holding: null, hover: null });
 }
 
 /** The hold in words: `a row along AB`, `the pattern centred between BC and FA`. */
