@@ -85,7 +85,8 @@ export function mostPlay(
   const list = new Int32Array(near.count);
   const order = new Int32Array(WEIGHED);
   const planes = planeEnvelope(WEIGHED);
-  const strips = stripRoom(near);
+  // Where many pieces are of few directions nearly all run right through, and their units do not matter.
+  const strips = stripRoom(near, near.count < MANY_LISTED * (1 + families.nx.length));
   const heap: Waiting[] = [];
   const both = () => KEPT_OFF.both;
 

@@ -45,11 +45,12 @@ export interface StripRoom {
   found: number;
 }
 
-export function stripRoom(pieces: CellPieces): StripRoom {
+/** Room for the pieces' strips; `named` false where it is not worth while to tell which pieces are of one unit. */
+export function stripRoom(pieces: CellPieces, named = true): StripRoom {
   const { count, unitStart, units, families } = pieces;
   const unit = new Int32Array(count).fill(-1);
   const numbers = new Map<number, number>();
-  for (let n = 0; n < count; n++) {
+  for (let n = 0; named && n < count; n++) {
     if (unitStart[n + 1] - unitStart[n] !== 1) continue;
     const name = units[unitStart[n]];
     let number = numbers.get(name);
@@ -147,7 +148,10 @@ export function stripCount(
         continue;
       }
       if (crossing === 0 && (t < low - slack || t > high + slack)) continue;
-      const off = beforeLine(pieces, n, nx, ny, t, slack, ax, ay, bx, by) ? keptOff(a) : 0;
+      const hasFeet =
+        (crossing === 2 && endsBeyond(pieces, n, slack, ax, ay, bx, by)) ||
+        beforeLine(pieces, n, nx, ny, t, slack, ax, ay, bx, by);
+      const off = hasFeet ? keptOff(a) : KEPT_OFF.none;
       if (crossing === 0) {
         if (off === KEPT_OFF.none) continue;
         if (t <= middle - half) {
@@ -272,6 +276,26 @@ function crossesBox(
   if (px > inAx && px < inBx && py > inAy && py < inBy) return 1;
   if (qx > inAx && qx < inBx && qy > inAy && qy < inBy) return 1;
   return 2;
+}
+
+/** True when neither end is in the box or within `slack` of its sides. */
+function endsBeyond(
+  { x0, y0, x1, y1 }: CellPieces,
+  n: number,
+  slack: number,
+  ax: number,
+  ay: number,
+  bx: number,
+  by: number,
+): boolean {
+  const px = x0[n];
+  const py = y0[n];
+  const qx = x1[n];
+  const qy = y1[n];
+  return (
+    (px < ax - slack || px > bx + slack || py < ay - slack || py > by + slack) &&
+    (qx < ax - slack || qx > bx + slack || qy < ay - slack || qy > by + slack)
+  );
 }
 
 /** True when the piece has the foot of every point of the box that is within `slack` of its line. */
