@@ -7,7 +7,6 @@ import {
   ratioRounded,
   type Rounding,
 } from './money';
-import type { TakeOff } from './take-off';
 
 /** One thing sold: so much at so much. */
 export interface QuoteLineInput {
@@ -80,15 +79,6 @@ export function labourLine(
   measure = by === 'hour' ? 'hours' : 'm²',
 ): QuoteLineInput {
   return { id: `labour:${by}`, name: 'Labour', amount, measure, costMinor: rateMinor };
-}
-
-/** The orders of a take-off that have a price, as lines; those without are named in `unpriced`. */
-export function takeOffQuoteLines({ orders }: TakeOff): QuoteLineInput[] {
-  return orders.flatMap(({ id, name, amount, pack, packCostMinor }) =>
-    packCostMinor === null
-      ? []
-      : [{ id, name, amount, measure: pack.name, costMinor: packCostMinor }],
-  );
 }
 
 const MS_PER_DAY = 86_400_000;

@@ -3,13 +3,13 @@ import GeometryFactory from 'jsts/org/locationtech/jts/geom/GeometryFactory.js';
 import Coordinate from 'jsts/org/locationtech/jts/geom/Coordinate.js';
 import SnapIfNeededOverlayOp from 'jsts/org/locationtech/jts/operation/overlay/snap/SnapIfNeededOverlayOp.js';
 import { expect, test } from 'vitest';
-import { fillRegion } from '@/paving/fill-region';
 import { layFloor, unitAt, unitCorners } from '@/paving/laying';
 import type { LayoutDocument, Vertex } from '@/paving/layout-document';
 import { floorReport, type Report } from '@/paving/report';
 import type { Point } from '@/geometry/point';
 import { rectangleOverlap } from '@/geometry/rectangle';
 import { oracleGround } from '../oracle/brute-force';
+import { fillRegion } from '../oracle/fill-region';
 import { anyDocument, asCustom, parsed, real } from '../oracle/documents';
 
 /** Units whose distance to a limit is under 1e-6 mm could fall either way after rounding. */

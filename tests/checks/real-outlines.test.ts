@@ -3,12 +3,12 @@ import { createRequire } from 'node:module';
 import { feature } from 'topojson-client';
 import type { GeometryCollection, Topology } from 'topojson-specification';
 import { expect, test } from 'vitest';
-import { fillRegion } from '@/paving/fill-region';
 import { layFloor } from '@/paving/laying';
 import type { Vertex } from '@/paving/layout-document';
 import { floorReport } from '@/paving/report';
 import { documentOf, parsed, unitOf } from '../oracle/documents';
 import { oracleFloor } from '../oracle/brute-force';
+import { fillRegion } from '../oracle/fill-region';
 
 // Outlines nobody drew for this test: counties of the United States (US Census Bureau, by the
 // package us-atlas, counties-albers-10m.json, planar), each scaled to a court of 5 to 10 m. Every

@@ -3,7 +3,7 @@ import { earthModel, type EarthModel } from '@/takeoff/earth-cells';
 import { earthVolumes, type EarthVolumes } from '@/takeoff/earth-volumes';
 import { levelMap, type LevelMap } from '@/takeoff/level-map';
 import { pegLevels, type PegLevel } from '@/takeoff/peg-levels';
-import { floorOf, type Floor } from './floor';
+import type { Floor } from './floor';
 
 /** What the step Levels shows of a floor, worked out once for each document and only as far as it is asked for. */
 export interface Earth {
@@ -43,6 +43,3 @@ function earthOfLaying(laying: NonNullable<Floor['laying']>): Earth {
     },
   };
 }
-
-export const earthOfDocument = (document: LayoutDocument): Earth | null =>
-  earthOf(floorOf(document));

@@ -1,6 +1,5 @@
 import { regionClip, type ClipResult, type Region } from '@/geometry/clipping';
-import type { Laying } from './laying';
-import { unitCorners } from './laying';
+import { unitCorners, type Laying } from '@/paving/laying';
 
 /** Units taken away at a time when the clipping library fails on all of them at once. */
 const BATCH = 64;
