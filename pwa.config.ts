@@ -17,7 +17,7 @@ const ENTRIES = [
 const BESIDES = [
   /^_astro\/[^/]+\.css$/,
   /^_astro\/nunito-sans-latin(-ext)?-(400|600|700)-normal\.[^/]+\.woff2$/,
-  /^(theme\.js|favicon\.svg|icon-\d+\.png)$/,
+  /^(theme\.js|held-presses\.js|favicon\.svg|icon-\d+\.png)$/,
 ];
 
 /** Files that the phone's program can come to need, whichever of its parts is opened. */

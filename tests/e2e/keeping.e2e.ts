@@ -65,7 +65,7 @@ it('keeps work through a sign-out in another tab, and takes it up after signing 
   const table = page.url();
   const other = await context.newPage();
   await other.goto('/account');
-  await other.getByRole('button', { name: 'Sign out' }).click();
+  await other.getByRole('button', { name: 'Sign out on this device' }).click();
   await other.waitForURL('**/sign-in');
   await other.close();
   await setClearance(page, '31');

@@ -299,7 +299,7 @@ it('an installer builds without signal: what is entered is kept, sent once and i
   await again.getByRole('button', { name: 'Course 1 is laid', exact: true }).click();
   await sync(again, '1 entry to send');
   await again.goto('/account');
-  await again.getByRole('button', { name: 'Sign out' }).click();
+  await again.getByRole('button', { name: 'Sign out on this device' }).click();
   await again.waitForURL('**/sign-in');
   await expect.poll(() => keptOnPhone(again)).not.toContain('Nettlefold');
   expect(await keptOnPhone(again)).not.toContain('Winterpell');
