@@ -30,7 +30,7 @@ export interface Assumption {
 export interface TakeOffLine {
   /**
    * The same for the same thing of every version: `units:<unit id>:first-tone`,
-   * `units:<unit id>:second-tone`, `units:<unit id>:to-cut`, `fill:joints`, `fill:voids`, `fill:margin`, `layer:bedding`,
+   * `units:<unit id>:second-tone`, `units:<unit id>:to-cut`, `units:<unit id>:to-cut-second-tone`, `fill:joints`, `fill:voids`, `fill:margin`, `layer:bedding`,
    * `layer:base`, `earth:spoil`, `geotextile`, `edging`.
    */
   readonly id: string;

@@ -109,12 +109,25 @@ export function unitLines(
         tone,
       ),
     );
+    // A piece is sawn from a unit of its own tone, so that each tone is ordered with what is sawn from it.
     const sawn = report.cut?.byUnit[unit.id] ?? 0;
-    return sawn > 0
-      ? [
-          ...tones,
-          line('to-cut', `${unit.name}, to be cut`, sawn, 'to saw pieces from', 'first-tone'),
-        ]
-      : tones;
+    const ofSecond = toned ? (report.cut?.bySecondTone[unit.id] ?? 0) : 0;
+    const toCut = [
+      ['to-cut', 'first', sawn - ofSecond] as const,
+      ['to-cut-second-tone', 'second', ofSecond] as const,
+    ].flatMap(([end, tone, count]) =>
+      count > 0
+        ? [
+            line(
+              end,
+              `${unit.name}, ${toned ? `${tone} tone, ` : ''}to be cut`,
+              count,
+              'to saw pieces from',
+              `${tone}-tone`,
+            ),
+          ]
+        : [],
+    );
+    return [...tones, ...toCut];
   });
 }

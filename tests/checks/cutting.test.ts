@@ -5,6 +5,7 @@ import { layFloor } from '@/paving/laying';
 import type { LayoutDocument, Vertex } from '@/paving/layout-document';
 import { floorReport } from '@/paving/report';
 import { documentOf, parsed, unitOf } from '../oracle/documents';
+import { DIAGONAL_CELLS } from './diagonal-cells';
 
 const SIDE = 100;
 
@@ -48,9 +49,10 @@ describe('squares at 45° in a rectangle of a × b diagonals', () => {
         expect(cut.waste * 1e6).toBeCloseTo(0, 0);
         expect(cut.fillArea * 1e6).toBeCloseTo(0, 0);
         expect(cut.underThird).toBe(4);
-        // Halves are cut once along a diagonal, quarters twice along half of one.
-        expect(cut.sawLength).toBeCloseTo((2 * (a - 1) + 2 * (b - 1) + 4) * d, 1);
-        expect(cut.cuts).toBe(2 * (a - 1) + 2 * (b - 1) + 8);
+        // Every tile is parted once along a diagonal, which makes a side of both halves; two of the halves are
+        // parted once more, along half of one.
+        expect(cut.sawLength).toBeCloseTo((a + b) * d, 1);
+        expect(cut.cuts).toBe(a + b + 1);
         // A real saw takes its cut: no two halves come out of one tile any more.
         const sawn = cutReport(laying, made, 3);
         expect(sawn.leastUnits).toBeGreaterThanOrEqual(2 * (a - 1) + 2 * (b - 1));
@@ -74,18 +76,7 @@ describe('squares at 45° in a rectangle of a × b diagonals', () => {
 
 describe('a straight diagonal across a grid', () => {
   test('A074712: leaves a piece of each of the m + n − gcd(m, n) cells that it cuts', () => {
-    // The rows of A074712 (oeis.org) for m = 1..8.
-    const rows = [
-      [1, 2, 3, 4, 5, 6, 7, 8],
-      [2, 2, 4, 4, 6, 6, 8, 8],
-      [3, 4, 3, 6, 7, 6, 9, 10],
-      [4, 4, 6, 4, 8, 8, 10, 8],
-      [5, 6, 7, 8, 5, 10, 11, 12],
-      [6, 6, 6, 8, 10, 6, 12, 12],
-      [7, 8, 9, 10, 11, 12, 7, 14],
-      [8, 8, 10, 8, 12, 12, 14, 8],
-    ];
-    rows.forEach((row, r) => {
+    DIAGONAL_CELLS.forEach((row, r) => {
       row.forEach((cells, c) => {
         const [m, n] = [r + 1, c + 1];
         const laying = squares(
@@ -136,6 +127,10 @@ test('the report has the pieces where units are cut at the edge, and no word of 
   expect(cut).toMatchObject({ count: 16, underThird: 6, narrow: 0, notched: 0, failed: [] });
   expect(cut!.area).toBeCloseTo((5 * 30 * 100 + 10 * 50 * 100 + 30 * 50) / 1e6, 9);
   expect(cut!.fillArea).toBeCloseTo(0, 9);
+  // Ten units: no two of 50 mm come out of one. Five give one of 50 and one of 30, two cuts each; four give one of
+  // 50; one gives one of 50 and, of the 47 mm left beside it, the corner: across those 47 mm, then along its 50 mm.
+  expect(cut).toMatchObject({ wholeUnits: 10, cuts: 5 * 2 + 4 + 3 });
+  expect(cut!.sawLength).toBeCloseTo(5 * 200 + 4 * 100 + (100 + 47 + 50), 6);
   expect(floorReport(layFloor({ ...laying.document, cutting: 'none' }))).toEqual(whole);
   expect('cut' in whole).toBe(false);
 });

@@ -1,12 +1,11 @@
-import type { Point } from '@/geometry/point';
 import type { Address } from '../layout-document';
 import type { Laying } from '../laying';
 import { unitTone } from '../tones';
 import { cutPieces, type CutPiece, type CutPieces } from './cut-pieces';
 import { nesting } from './nesting';
 import { unitMiddle } from './piece-edges';
-import { ownRing, pieceShape, type PieceShape } from './piece-shape';
-import { sawCuts } from './saw-cuts';
+import { pieceShape, type PieceShape } from './piece-shape';
+import { sawWay } from './saw-way';
 
 /** What the saw takes away, mm: a wet-cutting diamond blade's usual cut (common practice). */
 export const SAW_KERF_MM = 3;
@@ -40,8 +39,9 @@ export interface CutFigures {
   readonly leastUnits: number;
   /** Of the units sawn, what no piece takes. */
   readonly waste: number;
-  /** Edge that is sawn, not the maker's. */
+  /** The way that the saw goes by the nesting, right through what is left of each unit: see `saw-way`. */
   readonly sawLength: number;
+  /** Straight or curved cuts of that way; one that makes a side of two pieces is one. */
   readonly cuts: number;
   /** What the saw takes away, mm. */
   readonly kerf: number;
@@ -98,20 +98,18 @@ export function cutReport(
     const shapes = kind.pieces.map((n): PieceShape => {
       const piece = pieces[n];
       const entry = motif[piece.unit[2]];
-      const middle = unitMiddle(laying, piece.unit);
-      const half: Point = [entry.unit.length / 2, entry.unit.width / 2];
-      const rings = [piece.polygon, ...(piece.holes ?? [])];
-      const work = sawCuts(
-        rings.map((ring) => ownRing(entry, middle, ring)),
-        half,
-      );
-      sawLength += work.length;
-      cuts += work.cuts;
-      return pieceShape(entry, middle, piece);
+      return pieceShape(entry, unitMiddle(laying, piece.unit), piece);
     });
     const nested = nesting(shapes, kerf);
     nested.units.forEach((unit, n) => {
       for (const piece of unit.pieces) sawnFrom[kind.pieces[piece]] = wholeUnits + n;
+      const way = sawWay(
+        unit.pieces.map((piece) => shapes[piece]),
+        unit.places,
+        kerf,
+      );
+      sawLength += way.length;
+      cuts += way.cuts;
     });
     wholeUnits += nested.units.length;
     leastUnits += nested.leastUnits;

@@ -3,6 +3,7 @@ import type { Point } from '@/geometry/point';
 import { ringArea } from '@/geometry/ring';
 import type { LaidMotif } from '../laying';
 import type { CutPiece } from './cut-pieces';
+import { sawnEdges, type SawCuts } from './saw-cuts';
 
 /** Sides of a unit in its own frame, in order: that x grows to, that y grows to, and those across. */
 export type Side = 0 | 1 | 2 | 3;
@@ -27,6 +28,10 @@ export interface PieceShape {
   readonly loose: boolean;
   /** Shares of a unit that it takes wherever it lies, each 0 to 1: of area, of corners and of factory edges. */
   readonly shares: readonly [area: number, corners: number, edges: number];
+  /** For each side of a place, from its corner of that number on, whether it is sawn in one straight cut. */
+  readonly sawnSides: readonly boolean[];
+  /** What is left to saw along its own outline: curves and notches. */
+  readonly bent: SawCuts;
 }
 
 /** A piece's ring in its unit's own frame, corners on a side of the unit put exactly there. */
@@ -105,7 +110,9 @@ function moves(low: number, high: number, half: number, onLow: boolean, onHigh: 
  */
 export function pieceShape(entry: LaidMotif, centre: Point, piece: CutPiece): PieceShape {
   const half: Point = [entry.unit.length / 2, entry.unit.width / 2];
-  const hull = convexHull(ownRing(entry, centre, piece.polygon));
+  const rings = [piece.polygon, ...(piece.holes ?? [])].map((ring) => ownRing(entry, centre, ring));
+  const hull = convexHull(rings[0]);
+  const { sides, bent } = sawnEdges(rings, half, hull);
   const unitArea = 4 * half[0] * half[1];
   const hullArea = ringArea(hull);
   const places: Place[] = [];
@@ -145,6 +152,8 @@ export function pieceShape(entry: LaidMotif, centre: Point, piece: CutPiece): Pi
       loose ? 0 : corners,
       edges / (4 * (half[0] + half[1])),
     ],
+    sawnSides: sides,
+    bent,
   };
 }
 

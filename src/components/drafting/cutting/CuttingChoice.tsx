@@ -95,7 +95,8 @@ export const CuttingChoice = memo(function CuttingChoice() {
             <>
               <p className="text-sm text-slate">
                 {nestingWords(floor.cut.count, floor.cut.wholeUnits, floor.cut.leastUnits)} Pieces
-                are sawn face up, a maker’s edge on a maker’s edge.
+                are sawn face up, a maker’s edge on a maker’s edge. The saw goes right through each
+                unit; a cut that two pieces share counts once.
                 {cutting === 'edge' &&
                   ' On the floor they are hatched, with the sawn edge dashed; a dot marks one smaller than a third of a unit, a cross one too narrow to lay. With Lift you can leave a piece out.'}
               </p>

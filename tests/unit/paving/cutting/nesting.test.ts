@@ -147,6 +147,13 @@ describe('strips along a straight side', () => {
     expect(cut.waste).toBeCloseTo(5 * 0.16 - 10 * 0.4 * 0.19, 9);
   });
 
+  test('where just the saw’s cut lies between two of them it is one cut', () => {
+    // 198.5 + 3 + 198.5 = 400.
+    const cut = strips(400 + 198.5);
+    expect([cut.count, cut.wholeUnits]).toEqual([10, 5]);
+    expect([cut.cuts, cut.sawLength]).toEqual([5, 2000]);
+  });
+
   test('one to a unit when the saw’s cut is what is too much', () => {
     const cut = strips(400 + 199);
     expect([cut.count, cut.wholeUnits, cut.leastUnits]).toEqual([10, 10, 10]);
