@@ -12,6 +12,7 @@ import { levelsReport } from '@/takeoff/levels-report';
 import { floorReport } from '@/paving/report';
 import { takeOff } from '@/takeoff/take-off';
 import { setOut } from '@/paving/set-out/set-out';
+import { setOutWritten } from '@/paving/set-out/set-out-written';
 
 /**
  * The `layout` command: works out a layout document from a file, or from standard input when the
@@ -172,7 +173,7 @@ const tasks: Readonly<Record<string, Task>> = {
     usage: 'set-out FILE|-',
     run: (document, options) => {
       if (options.length > 0) throw new Refusal(`set-out takes no option "${options[0]}"`);
-      return setOut(layFloor(document));
+      return setOutWritten(setOut(layFloor(document)), document.display);
     },
   },
   creep: {

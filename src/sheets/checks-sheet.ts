@@ -1,6 +1,7 @@
 import type { Check } from '@/paving/set-out/set-out-types';
 import type { Display } from '@/paving/length';
-import { figureText } from './figures';
+import { figuredText } from '@/paving/figured-words';
+import { figureText, lengthText } from './figures';
 import type { PaperName } from './paper';
 import type { TableCell, TableColumn } from './ruled-table';
 import { ruledTable } from './ruled-table';
@@ -49,7 +50,7 @@ function checkCells(checks: readonly Check[], display: Display): readonly (reado
   const limit = (mm: number | null) => (mm === null ? '–' : figureText(mm, display, 1));
   return checks.map(({ what, expected, least, greatest, source }, n) => [
     String(n + 1),
-    what,
+    figuredText(what, display, lengthText),
     figureText(expected, display, 1),
     limit(least),
     limit(greatest),

@@ -3,6 +3,8 @@ import type { DrawCommand, PaperBox } from './drawing';
 import { PENS, boxRing } from './drawing';
 import type { FiguredContent } from './figured-sheet';
 import { figuredAndTabled } from './figured-sheet';
+import { figuredText } from '@/paving/figured-words';
+import { TAPE_READING_MM } from '@/paving/set-out/tape-cross';
 import { figureText, lengthText } from './figures';
 import { INK, PAPER } from './inks';
 import { markRows } from './mark-row';
@@ -77,7 +79,7 @@ function controlRows(input: SetOutInput, scale: number, width: number): readonly
       width,
     ),
     itemRow(
-      `“Out by” is how far off a point may come to lie when each tape is read to ±2\u2009mm.`,
+      `“Out by” is how far off a point may come to lie when each tape is read to ±${lengthText(TAPE_READING_MM, display)}.`,
       width,
     ),
     headingRow(`Key, scale ${scaleName(scale)}`, width),
@@ -87,7 +89,9 @@ function controlRows(input: SetOutInput, scale: number, width: number): readonly
       ? []
       : [
           headingRow('Before you start', width),
-          ...setOut.advice.map(({ text }) => itemRow(text, width)),
+          ...setOut.advice.map(({ text }) =>
+            itemRow(figuredText(text, display, lengthText), width),
+          ),
         ]),
     ...keptTogether(
       [
@@ -159,7 +163,7 @@ function controlTable({ setOut, laying }: SetOutInput, width: number) {
   const figure = (mm: number) => figureText(mm, display);
   const rows = setOut.points.map((point): readonly TableCell[] => [
     point.name,
-    point.what,
+    figuredText(point.what, display, lengthText),
     ...tapeCells(point, figure),
     figure(point.along),
     figure(point.square),

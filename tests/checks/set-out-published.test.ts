@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
+import { figuredText } from '@/paving/figured-words';
 import { layFloor } from '@/paving/laying';
 import type { LayoutDocument, Vertex } from '@/paving/layout-document';
 import { setOut } from '@/paving/set-out/set-out';
@@ -25,8 +26,8 @@ describe('right angles and outlines', () => {
     const squares = checks.filter(({ kind }) => kind === 'square');
     expect(squares.map(({ id }) => id)).toEqual(['square-A', 'square-B', 'square-C', 'square-D']);
     for (const { what, expected } of squares) {
-      const sides = [...what.matchAll(/([\d\u202f]+)\u202fmm/g)].map(([, figures]) =>
-        Number(figures.replace(/\u202f/g, '')),
+      const sides = [...figuredText(what, 'metric').matchAll(/([\d\u202f]+)\u202fmm/g)].map(
+        ([, figures]) => Number(figures.replace(/\u202f/g, '')),
       );
       const unit = expected / 5;
       expect(sides.sort((p, q) => p - q)).toEqual([3 * unit, 4 * unit]);
@@ -38,8 +39,8 @@ describe('right angles and outlines', () => {
   test('in feet, a large corner is proved by 24, 32 and 40', () => {
     const { checks } = floorOf(rectangle(12_000, 9000), { display: 'imperial' });
     const square = checks.find(({ id }) => id === 'square-A')!;
-    expect(square.what).toContain("24'");
-    expect(square.what).toContain("32'");
+    expect(figuredText(square.what, 'imperial')).toContain("24'");
+    expect(figuredText(square.what, 'imperial')).toContain("32'");
     expect(square.expected).toBeCloseTo(40 * 304.8, 9);
   });
 

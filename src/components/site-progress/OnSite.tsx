@@ -1,6 +1,7 @@
 import type { Role } from '@/api-types/people';
 import type { VersionDetail } from '@/api-types/versions';
 import { readingVerdict, verdictWords } from '@/paving/site/reading-verdict';
+import { FiguredWords } from '../ui/FiguredWords';
 import { Moment } from '../ui/Moment';
 import { Wrong } from '../ui/Wrong';
 import { ProgressString } from './ProgressString';
@@ -53,7 +54,7 @@ function Standing({ version, role }: { version: VersionDetail; role: Role }) {
           <ul className="mt-1 space-y-1">
             {progress.wrong.map(({ check, reading }) => (
               <li key={check.id} className="border-l-2 border-brick pl-3">
-                {check.what}.{' '}
+                <FiguredWords words={check.what} display={version.document.display} />.{' '}
                 <span className="font-semibold text-brick">
                   {verdictWords(readingVerdict(check, reading.measured), version.document.display)}
                 </span>{' '}

@@ -9,6 +9,7 @@ import {
 } from '@/paving/site/reading-verdict';
 import type { SiteRecord } from '@/paving/site/site-record';
 import type { PersonName } from '@/api-types/people';
+import { FiguredWords } from '../ui/FiguredWords';
 import { Length } from '../ui/Length';
 import { LengthField } from '../ui/LengthField';
 import { Moment } from '../ui/Moment';
@@ -84,7 +85,9 @@ function CheckCard({
   const allowed = allowedWords(check, display);
   return (
     <li className="py-3" data-testid="check" data-check={check.id}>
-      <p className="font-semibold">{check.what}</p>
+      <p className="font-semibold">
+        <FiguredWords words={check.what} display={display} />
+      </p>
       <p className="mt-0.5">
         Drawn:{' '}
         <strong className="text-[1.2rem]">

@@ -1,5 +1,6 @@
 import type { Display } from '@/paving/length';
 import type { ControlPoint, Datum, TapeCross } from '@/paving/set-out/set-out';
+import { FiguredWords } from '../ui/FiguredWords';
 import { Length } from '../ui/Length';
 
 const SIDES = { left: 'left', right: 'right', on: null } as const;
@@ -19,7 +20,9 @@ export function PointCard({
     <article className="mt-4" data-testid="point" aria-live="polite">
       <h3 className="flex items-baseline gap-3 text-[1.35rem]">
         <span className="border-2 border-line px-2 font-bold text-line">{point.name}</span>
-        <span className="text-[1rem] font-normal">{point.what}</span>
+        <span className="text-[1rem] font-normal">
+          <FiguredWords words={point.what} display={display} />
+        </span>
       </h3>
       {point.by === 'datum' ? (
         <p className="mt-2">A tape is hooked on here. Nothing to measure to it.</p>

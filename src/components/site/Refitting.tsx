@@ -35,7 +35,9 @@ export function Refitting({
   };
   const send = async (proposed: Refit) => {
     const text = proposalText(proposed, laid, display);
-    const content = { kind: 'proposal', text, document: proposed.document } as const;
+    // The tape in hand is the phone's affair: the floor keeps the units that it was drawn in.
+    const document = { ...proposed.document, display: kept.pack.document.display };
+    const content = { kind: 'proposal', text, document } as const;
     if (await enter(kept.versionId, [{ content }])) setSent(true);
   };
   return (

@@ -1,5 +1,6 @@
 import { useMemo, useState } from 'react';
 import type { ControlPoint } from '@/paving/set-out/set-out';
+import { FiguredWords } from '../ui/FiguredWords';
 import { Segmented } from '../ui/Segmented';
 import { PointCard } from './PointCard';
 import type { TabProps } from './PackView';
@@ -84,9 +85,9 @@ export function SetOutTab({ kept, floor, display }: TabProps) {
           Hook one tape on {a.name} and one on {b.name}. Pull both level and tight; the point is
           where they cross.
         </li>
-        {setOut.advice.map(({ text }) => (
-          <li key={text} className="border-l-2 border-amber pl-3">
-            {text}
+        {setOut.advice.map(({ text }, n) => (
+          <li key={n} className="border-l-2 border-amber pl-3">
+            <FiguredWords words={text} display={display} />
           </li>
         ))}
       </ul>

@@ -1,3 +1,4 @@
+import { figuredText } from '@/paving/figured-words';
 import { formatLength, type Display } from '@/paving/length';
 import type { Check } from '@/paving/set-out/set-out';
 import type { SiteEntryContent } from '@/paving/site/site-entry';
@@ -14,7 +15,10 @@ export const entryWords = (
         ? `Course ${content.course} is laid.`
         : `Course ${content.course} is not laid after all.`;
     case 'check': {
-      const what = checks.find(({ id }) => id === content.check)?.what ?? content.check;
+      const what = figuredText(
+        checks.find(({ id }) => id === content.check)?.what ?? content.check,
+        display,
+      );
       return content.measured === null
         ? `${what}: reading taken back.`
         : `${what}: ${formatLength(content.measured, display, { decimals: 1 })}.`;

@@ -1,7 +1,8 @@
 import { formatCount } from '../count';
-import { formatLength, type Display } from '../length';
+import { figured, type FiguredWords } from '../figured-words';
 import type { DatumPair } from './datums';
 import type { Advice, ControlPoint, Course } from './set-out-types';
+import { TAPE_READING_MM } from './tape-cross';
 
 /** Names that a sentence can hold before it is a list. */
 const MOST_NAMES = 8;
@@ -25,14 +26,12 @@ export function setOutAdvice(
   best: DatumPair,
   all: readonly ControlPoint[],
   courses: readonly Course[],
-  display: Display,
 ): Advice[] {
   const [a, b] = pair.datums;
   const advice: Advice[] = [];
-  const say = (kind: Advice['kind'], text: string, about: readonly string[] = []) =>
+  const say = (kind: Advice['kind'], text: FiguredWords, about: readonly string[] = []) =>
     advice.push({ kind, text, points: about });
   const names = (list: readonly ControlPoint[]) => list.map(({ name }) => name);
-  const length = (mm: number) => formatLength(mm, display, { decimals: 1 });
 
   if (courses.length === 0)
     say('floor', 'No unit is laid yet, so there are only the corners to set out.');
@@ -71,7 +70,7 @@ export function setOutAdvice(
     const angles = taped.map(({ crossingDeg }) => crossingDeg);
     say(
       'datums',
-      `From ${a.name} and ${b.name} the tapes${failing.length > 0 ? ' to the others' : ''} meet at ${Math.round(Math.min(...angles))}° to ${Math.round(Math.max(...angles))}°. Read to ±2 mm, no point comes to lie more than ${length(worst.doubt)} off; the worst is ${worst.name}.`,
+      figured`From ${a.name} and ${b.name} the tapes${failing.length > 0 ? ' to the others' : ''} meet at ${Math.round(Math.min(...angles))}° to ${Math.round(Math.max(...angles))}°. Read to ±${{ mm: TAPE_READING_MM }}, no point comes to lie more than ${{ mm: worst.doubt, decimals: 1 }} off; the worst is ${worst.name}.`,
       [worst.name],
     );
     const right = taped.filter(({ side }) => side === 'right');
@@ -96,7 +95,7 @@ export function setOutAdvice(
   if (longest > LONG_TAPE_MM)
     say(
       'datums',
-      `The longest tape is ${length(longest)}: take a steel tape and pull it each time as hard.`,
+      figured`The longest tape is ${{ mm: longest, decimals: 1 }}: take a steel tape and pull it each time as hard.`,
     );
   return advice;
 }

@@ -2,7 +2,8 @@ import { arcIsStraight } from '@/geometry/arc';
 import { documentEdgeName } from '../edge-names';
 import type { GroundEdge } from '../ground';
 import type { Laying } from '../laying';
-import { formatLength, MM_PER_FOOT } from '../length';
+import { figured } from '../figured-words';
+import { MM_PER_FOOT } from '../length';
 import type { Report } from '../report';
 import { cornerLabel, cornerTurns } from './marks';
 import type { Check, Course, Diagonal } from './set-out-types';
@@ -12,7 +13,7 @@ import { TAPE_READING_MM } from './tape-cross';
 const ICPI = 'ICPI, Construction Tolerances for Interlocking Concrete Pavements';
 const JOINT_MM = { least: 2, greatest: 5 } as const;
 const FLATNESS_MM = 10;
-/** The sheet names both: 10 ft (3 m). */
+/** The sheet names both, 10 ft (3 m): each tape has its own. */
 const STRAIGHTEDGE_MM = { metric: 3000, imperial: 10 * MM_PER_FOOT } as const;
 const STEP_MM = 3;
 const BASE_MM = { under: 13, over: 20 } as const;
@@ -120,14 +121,13 @@ function squareChecks({ laying }: Floor): Check[] {
       const far = (n + 1) % ring.edges.length;
       const ends = [cornerLabel(0, far), cornerLabel(0, before.edge)];
       const [four, three] = edge.length >= before.length ? ends : [ends[1], ends[0]];
-      const shown = (mm: number) => formatLength(mm, display);
       // A right angle out by α moves the far mark by 4k·α, and the five by 3k/5k of that.
       const off = (2.4 * side * BOND_LINE_MM.off) / BOND_LINE_MM.over;
       return [
         {
           id: `square-${corner}`,
           kind: 'square',
-          what: `From ${corner} mark ${shown(3 * side)} towards ${three} and ${shown(4 * side)} towards ${four}; measure between the marks`,
+          what: figured`From ${corner} mark ${{ mm: 3 * side }} towards ${three} and ${{ mm: 4 * side }} towards ${four}; measure between the marks`,
           from: corner,
           ...around(5 * side, Math.max(TAPE_READING_MM, off)),
           source: SQUARE,
@@ -232,10 +232,9 @@ function jointChecks({ laying }: Floor): Check[] {
 }
 
 function surfaceChecks({ laying, courses }: Floor): Check[] {
-  const { display, buildUp } = laying.document;
+  const { buildUp } = laying.document;
   const longest = Math.max(...courses.map(({ length }) => length));
   const off = Math.max(TAPE_READING_MM, (BOND_LINE_MM.off * longest) / BOND_LINE_MM.over);
-  const edge = formatLength(STRAIGHTEDGE_MM[display], display);
   const checks: Check[] = [
     {
       id: 'line',
@@ -249,7 +248,7 @@ function surfaceChecks({ laying, courses }: Floor): Check[] {
     {
       id: 'flatness',
       kind: 'flatness',
-      what: `Widest gap under a ${edge} straightedge, anywhere, either way`,
+      what: figured`Widest gap under a ${{ mm: STRAIGHTEDGE_MM }} straightedge, anywhere, either way`,
       expected: 0,
       least: 0,
       greatest: FLATNESS_MM,
@@ -279,7 +278,7 @@ function surfaceChecks({ laying, courses }: Floor): Check[] {
       {
         id: 'base-flatness',
         kind: 'layer',
-        what: `Widest gap between the base and a ${edge} straightedge`,
+        what: figured`Widest gap between the base and a ${{ mm: STRAIGHTEDGE_MM }} straightedge`,
         expected: 0,
         least: 0,
         greatest: FLATNESS_MM,

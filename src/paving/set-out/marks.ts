@@ -3,7 +3,7 @@ import type { Point } from '@/geometry/point';
 import { cornerName, edgeName, keepOutName } from '../edge-names';
 import type { GroundEdge, GroundRing } from '../ground';
 import type { Laying } from '../laying';
-import { formatLength } from '../length';
+import { figured } from '../figured-words';
 import { ringCircle } from '../ring-circle';
 import type { ControlPoint, Course } from './set-out-types';
 
@@ -56,13 +56,13 @@ const QUARTERS = [
   [0.75, '3/4', 'three quarters along'],
 ] as const;
 
-function ringMarks(ring: GroundRing, display: Laying['document']['display']): Mark[] {
+function ringMarks(ring: GroundRing): Mark[] {
   const { edges } = ring;
   const perimeter = ring.ring === 0;
   const kind = perimeter ? 'corner' : 'keep-out';
   const circle = perimeter ? null : ringCircle(ring);
   if (circle) {
-    const what = `Middle of ${ring.name}, a circle of ${formatLength(circle.radius, display, { decimals: 1 })} radius`;
+    const what = figured`Middle of ${ring.name ?? keepOutName(ring.ring)}, a circle of ${{ mm: circle.radius, decimals: 1 }} radius`;
     return [{ name: keepOutName(ring.ring), kind, what, at: circle.centre, corner: null }];
   }
   const straight = edges.map(({ start, end, bulge }) => arcIsStraight(start, end, bulge));
@@ -115,7 +115,7 @@ export function setOutMarks(
   courses: readonly Course[],
   corners: readonly Point[],
 ): Mark[] {
-  const { ground, document } = laying;
+  const { ground } = laying;
   const strings = courses.flatMap(({ number, from, to }): Mark[] => [
     {
       name: `${number}a`,
@@ -134,9 +134,5 @@ export function setOutMarks(
       course: number,
     },
   ]);
-  return [
-    ...ground.rings.flatMap((ring) => ringMarks(ring, document.display)),
-    ...unitMarks(corners),
-    ...strings,
-  ];
+  return [...ground.rings.flatMap((ring) => ringMarks(ring)), ...unitMarks(corners), ...strings];
 }

@@ -1,4 +1,5 @@
 import type { Point } from '@/geometry/point';
+import type { FiguredWords } from '../figured-words';
 
 /**
  * A floor set out: what a crew needs to put it on the ground with two tapes and a string. All a pure
@@ -71,7 +72,7 @@ export interface ControlPoint extends TapeCross {
   readonly name: string;
   readonly kind: ControlPointKind;
   /** In words: "Start of the string of course 7". */
-  readonly what: string;
+  readonly what: FiguredWords;
   readonly at: Point;
   /** Running offsets: along the baseline from the first datum, and square to it, positive to the left. */
   readonly along: number;
@@ -174,8 +175,8 @@ export interface Check {
   /** The same for the same floor and datums: `edge-AB`, `square-A`, `rows-1-10`. */
   readonly id: string;
   readonly kind: CheckKind;
-  /** An instruction: "Measure edge AB". */
-  readonly what: string;
+  /** An instruction: "Measure edge AB". Its lengths are written by whoever shows it. */
+  readonly what: FiguredWords;
   /** Control points or courses that it is measured between. */
   readonly from?: string;
   readonly to?: string;
@@ -189,7 +190,7 @@ export interface Check {
 
 export interface Advice {
   readonly kind: 'datums' | 'points' | 'baseline' | 'floor';
-  readonly text: string;
+  readonly text: FiguredWords;
   /** Names of the control points that it is about. */
   readonly points: readonly string[];
 }

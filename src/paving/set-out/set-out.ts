@@ -55,6 +55,6 @@ export function setOut(laying: Laying, report: Report = wholeReport(laying)): Se
     firstUnit: first,
     courses,
     checks: setOutChecks({ laying, report, courses, diagonals }),
-    advice: setOutAdvice(pair, best, points, courses, document.display),
+    advice: setOutAdvice(pair, best, points, courses),
   };
 }

@@ -8,6 +8,7 @@ import type { Creep, Refit } from '@/paving/creep/creep-types';
 import { layFloor } from '@/paving/laying';
 import { floorReport } from '@/paving/report';
 import { setOut } from '@/paving/set-out/set-out';
+import { setOutWritten } from '@/paving/set-out/set-out-written';
 import { levelsReport } from '@/takeoff/levels-report';
 import { takeOff } from '@/takeoff/take-off';
 import { documentOf, parsed } from '../../oracle/documents';
@@ -86,7 +87,9 @@ test.each([
 test('set-out prints datums, points, courses and checks as JSON', () => {
   const { status, stdout, stderr } = layout(['set-out', '-'], good);
   expect({ status, stderr }).toEqual({ status: 0, stderr: '' });
-  expect(JSON.parse(stdout)).toEqual(setOut(layFloor(parsed(documentOf({})))));
+  const found = setOut(layFloor(parsed(documentOf({}))));
+  expect(JSON.parse(stdout)).toEqual(setOutWritten(found, 'metric'));
+  expect(stdout).toContain('a 3\u202f000\u202fmm straightedge');
 });
 
 test('creep says what ten units laid tight come to on this floor', () => {

@@ -1,3 +1,4 @@
+import { FiguredWords } from '../../ui/FiguredWords';
 import { FloorProblems } from '../FloorFigures';
 import { CheckList } from '../set-out/CheckList';
 import { CourseFields } from '../set-out/CourseFields';
@@ -8,7 +9,7 @@ import { useShownFloor } from '../table-context';
 
 /** How the floor is put on the ground: corners to tape from, points, courses and checks. */
 export function SetOutPanel() {
-  const { setOut } = useShownFloor();
+  const { setOut, document } = useShownFloor();
   if (!setOut) return <FloorProblems />;
   return (
     <div className="space-y-6">
@@ -17,9 +18,9 @@ export function SetOutPanel() {
       <section aria-label="What to know">
         <h2 className="mb-2 border-b border-graphite pb-1 text-base">What to know</h2>
         <ul className="space-y-1.5 border-l-2 border-stone-300 pl-3 text-[0.95rem]">
-          {setOut.advice.map(({ text, kind }) => (
-            <li key={text} className={kind === 'floor' ? 'font-semibold' : undefined}>
-              {text}
+          {setOut.advice.map(({ text, kind }, n) => (
+            <li key={n} className={kind === 'floor' ? 'font-semibold' : undefined}>
+              <FiguredWords words={text} display={document.display} />
             </li>
           ))}
         </ul>

@@ -1,6 +1,7 @@
 import { formatCount } from '@/paving/count';
 import type { Check, SetOut } from '@/paving/set-out/set-out';
 import { formatLength, type Display } from '@/paving/length';
+import { FiguredWords } from '../../ui/FiguredWords';
 import { Length } from '../../ui/Length';
 import { useShownFloor } from '../table-context';
 
@@ -25,7 +26,9 @@ export function CheckList({ setOut }: { setOut: SetOut }) {
         {setOut.checks.map((check) => (
           <li key={check.id} className="py-1.5">
             <div className="flex items-baseline justify-between gap-3">
-              <span>{check.what}</span>
+              <span>
+                <FiguredWords words={check.what} display={display} />
+              </span>
               <b className="shrink-0">
                 <Length mm={check.expected} display={display} decimals={1} />
               </b>

@@ -1,6 +1,7 @@
 import { ChevronLeft, ChevronRight } from 'lucide-react';
 import type { ReactNode } from 'react';
 import type { ControlPoint, SetOut } from '@/paving/set-out/set-out';
+import { FiguredWords } from '../../ui/FiguredWords';
 import { Length } from '../../ui/Length';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 import { pointStepped } from './set-out-actions';
@@ -76,7 +77,7 @@ function PointFigures({
   return (
     <div data-testid="point">
       <p>
-        {point.what}
+        <FiguredWords words={point.what} display={display} />
         {point.angleDeg !== undefined && `, ${Number(point.angleDeg.toFixed(2))}°`}.
       </p>
       {point.by === 'datum' && <p className="text-slate">One of the two corners to tape from.</p>}

@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import { formatCount } from '@/paving/count';
+import { figuredText } from '@/paving/figured-words';
 import type { ControlPoint, SetOut } from '@/paving/set-out/set-out';
 import { Length } from '../../ui/Length';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
@@ -84,7 +85,7 @@ export function PointTable({ setOut }: { setOut: SetOut }) {
                   <button
                     type="button"
                     className="py-1 pointer-coarse:min-h-11 pointer-coarse:min-w-11 text-left"
-                    title={point.what}
+                    title={figuredText(point.what, document.display)}
                   >
                     {point.name}
                   </button>
