@@ -162,3 +162,27 @@ test('where a court is begun, mirrored or moved makes no difference to count or 
     });
   }
 });
+
+test('squares in a rectangle turned by t and by −t or 90° − t are mirror images: the same count and play', () => {
+  // Plane geometry: the rectangle is its own mirror image, and so is a stack of squares. The best starts
+  // of such a floor make one long face that leaves the lattice cell on one side or the other.
+  const bond = { kind: 'stack', unit: 'a', joint: 5 } as const;
+  const document = parsed(
+    documentOf({
+      ground: { perimeter: rectangle(4800, 3600), keepOuts: [] },
+      units: [unitOf('a', 450)],
+      bond,
+      clearance: 6,
+    }),
+  );
+  const at = (turn: number) =>
+    fit({ ...document, placement: { origin: [0, 0], turn } }, { choices: false });
+  for (let turn = 0.5; turn < 45; turn += 1) {
+    const here = at(turn);
+    for (const mirrored of [-turn, 90 - turn]) {
+      const other = at(mirrored);
+      expect(other.wholeUnits, `${turn}° and ${mirrored}°`).toBe(here.wholeUnits);
+      expect(Math.abs(other.play! - here.play!)).toBeLessThan(0.01);
+    }
+  }
+});

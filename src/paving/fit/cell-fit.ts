@@ -28,29 +28,34 @@ export function frameMost(frame: FitFrame, stop?: () => boolean) {
 
 /** First reach, in widths that the cell's area would have spread along all its pieces. */
 const FIRST_REACH = 8;
+/** A face of the best starts is no longer than a way round the cell; pieces are known this many cells off at most. */
+const GREATEST_CELLS = 3;
 
 /**
  * Asks for origins with the most slack, of pieces with their repeats as far off as the slack may reach. How
  * far that is, is known only when the answer is: a short reach is tried first, and drawn out while
- * some origin has all of it.
+ * some origin needs all of it.
  */
 function withinReach<T>(
   { pitch, rise }: FitFrame,
   pieces: CellPieces,
   first: number,
   found: (reach: number) => T,
-  slackOf: (answer: T) => number,
+  needed: (answer: T) => number,
 ): T {
   let length = 0;
   for (let n = 0; n < pieces.count; n++) {
     length += Math.hypot(pieces.x1[n] - pieces.x0[n], pieces.y1[n] - pieces.y0[n]);
   }
-  // No origin with a unit has more: the unit's neighbour along the row that is not whole bounds it.
+  // No origin with a unit has more slack: the unit's neighbour along the row that is not whole bounds it.
   const greatest = pitch * 1.001;
-  for (let reach = Math.max(first, (FIRST_REACH * pitch * rise) / length); ; reach *= 4) {
-    reach = Math.min(reach, greatest);
+  const farthest = GREATEST_CELLS * (pitch + rise);
+  let reach = Math.min(Math.max(first, (FIRST_REACH * pitch * rise) / length), greatest);
+  for (;;) {
     const answer = found(reach);
-    if (slackOf(answer) < reach * 0.999 || reach >= greatest) return answer;
+    const need = needed(answer);
+    if (need < reach * 0.999 || reach >= farthest) return answer;
+    reach = Math.min(Math.max(Math.min(4 * reach, greatest), 1.01 * need), farthest);
   }
 }
 
@@ -67,7 +72,9 @@ export function frameStart(
     pieces,
     0,
     (reach) => mostPlay(nearPieces(pieces, pitch, rise, shift, reach, true), reach, most, stop),
-    ({ slack }) => (stop?.() ? 0 : slack),
+    // A face may run out of the cell, and the start with it: about that, too, all pieces must be known.
+    ({ slack, u, v }) =>
+      stop?.() ? 0 : slack + Math.hypot(Math.max(0, -u, u - pitch), Math.max(0, -v, v - rise)),
   );
 }
 
