@@ -3,6 +3,7 @@ import { layFloor } from '@/paving/laying';
 import type { LayoutDocument, Vertex } from '@/paving/layout-document';
 import { floorReport } from '@/paving/report';
 import { documentOf, parsed, unitOf } from '../oracle/documents';
+import { DIAGONAL_CELLS } from './diagonal-cells';
 
 const SIDE = 100;
 
@@ -102,18 +103,8 @@ describe('a straight diagonal across a grid', () => {
   const gcd = (m: number, n: number): number => (n === 0 ? m : gcd(n, m % n));
 
   test('A074712: it cuts m + n − gcd(m, n) cells, and leaves the closed form whole', () => {
-    // The rows of A074712 (oeis.org) for m = 1..8; the whole cells of the triangle follow from it.
-    const rows = [
-      [1, 2, 3, 4, 5, 6, 7, 8],
-      [2, 2, 4, 4, 6, 6, 8, 8],
-      [3, 4, 3, 6, 7, 6, 9, 10],
-      [4, 4, 6, 4, 8, 8, 10, 8],
-      [5, 6, 7, 8, 5, 10, 11, 12],
-      [6, 6, 6, 8, 10, 6, 12, 12],
-      [7, 8, 9, 10, 11, 12, 7, 14],
-      [8, 8, 10, 8, 12, 12, 14, 8],
-    ];
-    rows.forEach((row, r) => {
+    // The whole cells of the triangle follow from those that are cut.
+    DIAGONAL_CELLS.forEach((row, r) => {
       row.forEach((cut, c) => {
         const [m, n] = [r + 1, c + 1];
         const triangle: Vertex[] = [

@@ -2,27 +2,13 @@ import { createHash } from 'node:crypto';
 import AxeBuilder from '@axe-core/playwright';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, expect, it } from 'vitest';
-import { goToStep, launch, openPage, signIn } from './browser';
+import { ask, goToStep, launch, openPage, signIn } from './browser';
 
 let browser: Browser;
 beforeAll(async () => {
   browser = await launch();
 });
 afterAll(() => browser.close());
-
-/** Asks the server as the page's own scripts do. */
-const ask = <T>(page: Page, method: string, path: string, body?: unknown): Promise<T> =>
-  page.evaluate(
-    async ([how, where, what]) => {
-      const answer = await fetch(where, {
-        method: how,
-        headers: what ? { 'content-type': 'application/json' } : {},
-        body: what ?? undefined,
-      });
-      return { status: answer.status, ...(await answer.json()) };
-    },
-    [method, path, body === undefined ? null : JSON.stringify(body)] as const,
-  ) as Promise<T>;
 
 interface Id {
   readonly id: string;

@@ -88,6 +88,32 @@ export const wholeUnits = async (page: Page) =>
 export const saved = (page: Page) =>
   page.locator('[data-testid=sync][data-status=saved]').waitFor();
 
+/** The next answer to a save of the draft: what was done since is settled by then, as one undo step or several. */
+export const draftAnswered = (page: Page) =>
+  page.waitForResponse(
+    (answer) => answer.url().endsWith('/draft') && answer.request().method() === 'PUT',
+  );
+
+/** What was just done is drawn: pointers are taken in once a frame. */
+export const drawn = (page: Page): Promise<void> =>
+  page.evaluate(
+    () => new Promise((done) => requestAnimationFrame(() => requestAnimationFrame(() => done()))),
+  );
+
+/** Asks the server as the page's own scripts do; the answer's status stands beside its fields. */
+export const ask = <T>(page: Page, method: string, path: string, body?: unknown): Promise<T> =>
+  page.evaluate(
+    async ([how, where, what]) => {
+      const answer = await fetch(where, {
+        method: how,
+        headers: what ? { 'content-type': 'application/json' } : {},
+        body: what ?? undefined,
+      });
+      return { status: answer.status, ...(await answer.json()) };
+    },
+    [method, path, body === undefined ? null : JSON.stringify(body)] as const,
+  ) as Promise<T>;
+
 /** The page's islands hear clicks: before, a button is only drawn. */
 export const awake = async (page: Page): Promise<void> => {
   await page.waitForFunction(() => !document.querySelector('astro-island[ssr]'));

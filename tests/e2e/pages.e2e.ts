@@ -1,7 +1,7 @@
 import AxeBuilder from '@axe-core/playwright';
 import { afterAll, beforeAll, expect, it } from 'vitest';
 import type { Browser, Page } from 'playwright-core';
-import { launch, openPage, signIn, tableReady, goToStep } from './browser';
+import { awake, launch, openPage, signIn, tableReady, goToStep } from './browser';
 
 let browser: Browser;
 beforeAll(async () => {
@@ -77,7 +77,7 @@ it('has no serious accessibility fault on any page of a firm', { timeout: 240_00
   const version = (await firstOf(page, '/versions/')).replace(/\?.*|\/plan$/, '');
   for (const path of ['/people', '/audit', '/dev/mail', '/account', version, `${version}/plan`]) {
     await page.goto(path);
-    await page.waitForTimeout(500);
+    await awake(page);
     await lookedOver(page, path, found);
   }
   expect(found).toEqual([]);
@@ -156,7 +156,8 @@ it.each([
   const [table, version] = [await firstOf(page, '/layouts/'), await firstOf(page, '/versions/')];
   for (const path of [version, `${version.replace(/\/plan$/, '')}/plan`, '/account', table]) {
     await page.goto(path);
-    await page.waitForTimeout(700);
+    await awake(page);
+    if (path === table) await tableReady(page);
     await check(path);
   }
   expect(over).toEqual([]);

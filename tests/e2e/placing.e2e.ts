@@ -1,6 +1,16 @@
 import { afterAll, beforeAll, expect, it } from 'vitest';
 import type { Browser, Page } from 'playwright-core';
-import { goToStep, launch, openPage, saved, signIn, tableReady, wholeUnits } from './browser';
+import {
+  draftAnswered,
+  drawn,
+  goToStep,
+  launch,
+  openPage,
+  saved,
+  signIn,
+  tableReady,
+  wholeUnits,
+} from './browser';
 
 let browser: Browser;
 beforeAll(async () => {
@@ -63,13 +73,15 @@ it('nudges with arrows and turns with brackets, a run of presses being one undo 
   await openCourt(page, 'Nudge');
   await page.getByTestId('floor').focus();
   const start = await field(page, 'Start across');
+  const slid = draftAnswered(page);
   for (let press = 0; press < 5; press++) await page.keyboard.press('ArrowRight');
   await page.keyboard.press('Shift+ArrowRight');
   await expect.poll(() => field(page, 'Start across')).toBeCloseTo(start + 15, 6);
-  await page.waitForTimeout(700);
+  await slid;
+  const turned = draftAnswered(page);
   await page.keyboard.press(']');
   await expect.poll(() => field(page, 'Turn, anticlockwise')).toBe(44);
-  await page.waitForTimeout(700);
+  await turned;
   await page.keyboard.press('Control+z');
   await expect.poll(() => field(page, 'Turn, anticlockwise')).toBe(45);
   await page.keyboard.press('Control+z');
@@ -92,7 +104,7 @@ it('lifts a unit by a click and lays it back by another', async () => {
   for (let n = 0; n < 12 && !at; n++) {
     const place: [number, number] = [box.x + box.width * 0.35 + n * 17, box.y + box.height * 0.7];
     await page.mouse.click(...place);
-    await page.waitForTimeout(60);
+    await drawn(page);
     if ((await wholeUnits(page)) === units - 1) at = place;
   }
   expect(at).not.toBeNull();
