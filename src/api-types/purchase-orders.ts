@@ -63,10 +63,13 @@ export const newOrdersSchema = z.object({ supplierId: z.string().min(1).max(64).
 
 /**
  * POST /api/orders/{id}/send: numbers and freezes it and writes to the supplier, the order going with the letter as PDF and CSV. Once
- * only: 409 when it is sent already or was changed since `revision`. 200 → `PurchaseOrder`.
+ * only: 409 when it is sent already or was changed since `revision`. Orders that went for another version of the project must be known:
+ * 409 with `elsewhere` while `besides` leaves one of them out. 200 → `PurchaseOrder`.
  */
 export const orderSendSchema = z.object({
   revision: z.number({ error: 'names no revision' }).int().min(1),
+  /** Ids of the orders for other versions of the project that the sender was shown. */
+  besides: z.array(z.string().min(1).max(64)).max(10_000).default([]),
 });
 
 /** All that a sent order says, as it was sent. */
@@ -112,9 +115,24 @@ export interface PurchaseOrder {
   readonly letter: 'waiting' | 'sent' | 'refused' | null;
 }
 
+/** An order that went for another version of the project. */
+export interface OrderElsewhere {
+  readonly id: string;
+  readonly number: string;
+  readonly supplier: string;
+  readonly email: string;
+  readonly sentAt: string;
+  readonly sentBy: string;
+  readonly versionId: string;
+  readonly versionNumber: number;
+  readonly layoutName: string;
+}
+
 /** GET /api/versions/{id}/orders. */
 export interface VersionOrders {
   readonly orders: readonly PurchaseOrder[];
   /** What the take-off says to buy that no supplier of the catalogue sells yet, by name. */
   readonly unsupplied: readonly string[];
+  /** What was sent for other versions of the project, newest first: sending more orders on top of it. */
+  readonly elsewhere: readonly OrderElsewhere[];
 }

@@ -167,6 +167,13 @@ export interface QuoteTotals {
   readonly note: string;
 }
 
+/** A client on a quote's project. */
+export interface QuoteReader {
+  readonly name: string;
+  /** Whether a letter goes to them as well; some take none. */
+  readonly byLetter: boolean;
+}
+
 /**
  * GET /api/versions/{id}/quotes → `{ quotes }`, newest first: `QuoteDetail` in full for those who see costs, totals of what is
  * sent for clients (`totals`). POST makes a draft from the version's take-off, or answers with the one there is. 201 → `QuoteDetail`.
@@ -175,4 +182,6 @@ export interface VersionQuotes {
   /** Empty for clients. */
   readonly quotes: readonly QuoteDetail[];
   readonly totals: readonly QuoteTotals[];
+  /** The clients on the project, by name, to whom a quote would go; empty for clients. */
+  readonly clients: readonly QuoteReader[];
 }

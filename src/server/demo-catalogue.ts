@@ -184,5 +184,5 @@ export const sendDemoOrder = async (db: Db, designer: Actor, versionId: string):
       deliveryPlace: 'Ashwick round terrace\nFrom the lane; the gate is 2.4 m wide',
     }),
   );
-  sure(await sendOrder(db, designer, first.id, { revision }));
+  sure(await sendOrder(db, designer, first.id, { revision, besides: [] }));
 };

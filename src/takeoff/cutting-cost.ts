@@ -17,7 +17,7 @@ export interface SawTerms {
   readonly minutesACut: number;
   /** Of the saw in the hand, m/s²; 0 for a saw on a bench. */
   readonly vibration: number;
-  /** Labour by the hour, minor units of the list's currency; null where it is not said. */
+  /** Labour by the hour, minor units of the firm's currency; null where nobody has said: then the firm's own hour counts. */
   readonly hourMinor: number | null;
 }
 

@@ -11,10 +11,10 @@ import { mkdtempSync, readdirSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
 import { pdfTexts } from '../unit/pdf/pdf-reading';
-import { newVersion } from './firm';
+import { newProject, newVersion } from './firm';
 import { mailServer } from './mail-servers';
 import { letters } from './office';
-import { newPricedOffice, type PricedOffice } from './priced-office';
+import { newPricedOffice, pricedCourt, type PricedOffice } from './priced-office';
 import { db, useEmptyDatabase } from './site';
 
 useEmptyDatabase();
@@ -27,7 +27,7 @@ const ordered = async (office: PricedOffice): Promise<VersionOrders & { version:
   return { ...answer.body, version: id };
 };
 
-const ofStone = ({ orders }: VersionOrders): PurchaseOrder =>
+const ofStone = ({ orders }: Pick<VersionOrders, 'orders'>): PurchaseOrder =>
   orders.find(({ supplier }) => supplier.name === 'Quennock Stone')!;
 
 const send = ({ designer }: PricedOffice, { id, revision }: PurchaseOrder) =>
@@ -40,7 +40,7 @@ describe('orders of a version', () => {
     expect(orders.map(({ supplier }) => supplier.name).sort()).toEqual(['Over Pit', 'Quennock Stone']); // prettier-ignore
     const { takeOff } = (await office.owner.visitor.get(`/api/versions/${version}/pricing`)).body;
     const wanted = takeOff.orders.find(({ kind }: { kind: string }) => kind === 'unit');
-    expect(ofStone({ orders, unsupplied })).toMatchObject({
+    expect(ofStone({ orders })).toMatchObject({
       state: 'draft',
       number: null,
       letter: null,
@@ -126,6 +126,64 @@ describe('orders of a version', () => {
       supplierId: 'nobody',
     });
     expect(elsewhere.status).toBe(422);
+  });
+});
+
+describe('an order for another version of the project', () => {
+  test('is named before a second one goes, which then goes all the same', async () => {
+    const office = await newPricedOffice();
+    const first = await ordered(office);
+    const went = (await send(office, ofStone(first))).body as PurchaseOrder;
+    const second = await ordered(office);
+    const at = `/api/versions/${second.version}/orders`;
+    const { elsewhere } = (await office.designer.visitor.get(at)).body as VersionOrders;
+    expect(elsewhere).toMatchObject([
+      {
+        id: went.id,
+        number: 'PO-0001',
+        supplier: 'Quennock Stone',
+        email: 'orders@quennock.example',
+        sentAt: went.sentAt,
+        sentBy: went.sentBy!.name,
+        versionId: first.version,
+        versionNumber: 1,
+      },
+    ]);
+    const refused = await send(office, ofStone(second));
+    expect(refused).toMatchObject({
+      status: 409,
+      body: {
+        detail: expect.stringMatching(/^Order PO-0001 went to Quennock Stone, orders@quennock.example, on .* for version 1 of /), // prettier-ignore
+        elsewhere: [{ id: went.id }],
+      },
+    });
+    // Nothing is numbered for what was not sent, and what is known is no hindrance.
+    const sent = await office.designer.visitor.post(`/api/orders/${ofStone(second).id}/send`, {
+      revision: 1,
+      besides: [went.id],
+    });
+    expect(sent).toMatchObject({ status: 200, body: { number: 'PO-0002' } });
+  });
+
+  test('is told of when both are sent at the same time', async () => {
+    const office = await newPricedOffice();
+    const orders = [await ordered(office), await ordered(office)].map(ofStone);
+    const answers = await Promise.all(orders.map((order) => send(office, order)));
+    expect(answers.map(({ status }) => status).sort()).toEqual([200, 409]);
+  });
+
+  test('of the same version, and of another project, are no matter', async () => {
+    const office = await newPricedOffice();
+    const { version, ...first } = await ordered(office);
+    await send(office, ofStone(first));
+    const more = await office.designer.visitor.post(`/api/versions/${version}/orders`, {
+      supplierId: office.stone,
+    });
+    expect(more.body.elsewhere).toEqual([]);
+    const draft = more.body.orders.find(({ state, supplier }: PurchaseOrder) => state === 'draft' && supplier.id === office.stone); // prettier-ignore
+    expect((await send(office, draft)).status).toBe(200);
+    const { layoutId } = await newProject(office.designer.visitor, pricedCourt(office.slab, office.gravel)); // prettier-ignore
+    expect((await ordered({ ...office, layoutId })).elsewhere).toEqual([]);
   });
 });
 

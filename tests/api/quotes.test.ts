@@ -199,9 +199,12 @@ describe('a quote', () => {
     const office = await newPricedOffice();
     const { id } = await newVersion(office.designer.visitor, office.layoutId);
     await office.designer.visitor.post(`/api/versions/${id}/share`);
+    expect((await quotesFor(office.designer, id)).clients).toEqual([{ name: expect.stringMatching(/^client/), byLetter: true }]); // prettier-ignore
+    expect((await quotesFor(office.client, id)).clients).toEqual([]);
     await office.owner.visitor.post(`/api/projects/${office.projectId}/people/remove`, {
       personId: office.client.actor.personId,
     });
+    expect((await quotesFor(office.designer, id)).clients).toEqual([]);
     expect(await sent(office, id)).toMatchObject({ state: 'sent', written: 0 });
     expect((await letters(office.owner.actor.firmId, 'quote-sent')).length).toBe(0);
   });

@@ -1,6 +1,12 @@
 import { useMutation } from '@tanstack/react-query';
+import { TriangleAlert } from 'lucide-react';
 import { useId, useState } from 'react';
-import type { OrderChange, PurchaseLine, PurchaseOrder } from '@/api-types/purchase-orders';
+import type {
+  OrderChange,
+  OrderElsewhere,
+  PurchaseLine,
+  PurchaseOrder,
+} from '@/api-types/purchase-orders';
 import { amountText } from '@/takeoff/amount-text';
 import { boughtAs } from '@/takeoff/bought-as';
 import { dayText } from '@/takeoff/day-text';
@@ -22,16 +28,44 @@ const LETTER_WORDS = {
 /** An order of one supplier: changed and sent while it is a draft, afterwards as it went. */
 export function OrderCard({
   order,
+  elsewhere,
   onChanged,
+  onElsewhere,
 }: {
   order: PurchaseOrder;
+  /** What was sent for other versions of the project. */
+  elsewhere: readonly OrderElsewhere[];
   /** With what to say. */
   onChanged: (said: string) => void;
+  /** When another order went for the project meanwhile. */
+  onElsewhere: () => void;
 }) {
   return order.state === 'sent' ? (
     <SentOrderCard order={order} />
   ) : (
-    <DraftOrderCard order={order} onChanged={onChanged} />
+    <DraftOrderCard
+      order={order}
+      elsewhere={elsewhere}
+      onChanged={onChanged}
+      onElsewhere={onElsewhere}
+    />
+  );
+}
+
+/** What went for other versions of the project: number, to whom, when and for what. */
+export function ElsewhereList({ orders }: { orders: readonly OrderElsewhere[] }) {
+  return (
+    <ul className="mt-1 list-disc pl-5">
+      {orders.map((order) => (
+        <li key={order.id}>
+          <strong>{order.number}</strong> to {order.supplier}, {order.email}, sent by {order.sentBy}{' '}
+          <Moment iso={order.sentAt} />, for{' '}
+          <a className="link" href={`/versions/${order.versionId}/quote`}>
+            version {order.versionNumber} of {order.layoutName}
+          </a>
+        </li>
+      ))}
+    </ul>
   );
 }
 
@@ -78,11 +112,10 @@ function SentOrderCard({ order }: { order: PurchaseOrder }) {
 
 function DraftOrderCard({
   order: first,
+  elsewhere,
   onChanged,
-}: {
-  order: PurchaseOrder;
-  onChanged: (said: string) => void;
-}) {
+  onElsewhere,
+}: Parameters<typeof OrderCard>[0]) {
   const id = useId();
   const draft = useSavedDraft<PurchaseOrder, Omit<OrderChange, 'revision'>>(
     first,
@@ -93,7 +126,14 @@ function DraftOrderCard({
   const [asking, setAsking] = useState(false);
   const send = useMutation<PurchaseOrder, ApiError>({
     networkMode: 'always',
-    mutationFn: () => api('POST', `/api/orders/${saved.id}/send`, { revision: saved.revision }),
+    mutationFn: () =>
+      api('POST', `/api/orders/${saved.id}/send`, {
+        revision: saved.revision,
+        besides: elsewhere.map((other) => other.id),
+      }),
+    onError: ({ problem }) => {
+      if (problem?.elsewhere) onElsewhere();
+    },
     onSuccess: ({ number, supplier }) =>
       onChanged(`Order ${number} is on its way to ${supplier.name}, ${supplier.email}.`),
   });
@@ -170,14 +210,7 @@ function DraftOrderCard({
         />
       </div>
       <div className="mt-3">
-        <SaveNote
-          saving={draft.saving}
-          error={draft.error}
-          clash={draft.theirs !== null}
-          keepMine={draft.keepMine}
-          takeTheirs={draft.takeTheirs}
-          again={draft.again}
-        />
+        <SaveNote draft={draft} />
       </div>
       <div className="mt-2 flex flex-wrap gap-2">
         <button
@@ -210,6 +243,17 @@ function DraftOrderCard({
       )}
       {asking && (
         <div className="mt-3 border-l-2 border-line pl-3">
+          {elsewhere.length > 0 && (
+            <div role="alert" className="mb-3 bg-amber-wash p-3">
+              <p className="flex items-center gap-1.5 font-bold text-amber">
+                <TriangleAlert size={16} aria-hidden /> Already ordered for this project
+              </p>
+              <ElsewhereList orders={elsewhere} />
+              <p className="mt-1">
+                Sending this one orders on top of that. To change what went, ask the supplier.
+              </p>
+            </div>
+          )}
           <p>
             {saved.supplier.name} gets this order at {saved.supplier.email}, as a PDF and a CSV
             file. It is numbered and can then not be changed or sent again.
@@ -221,7 +265,11 @@ function DraftOrderCard({
               disabled={send.isPending}
               onClick={() => send.mutate()}
             >
-              {send.isPending ? 'Sending …' : 'Send it'}
+              {send.isPending
+                ? 'Sending …'
+                : elsewhere.length > 0
+                  ? 'Send it all the same'
+                  : 'Send it'}
             </button>
             <button type="button" className="button button-quiet" onClick={() => setAsking(false)}>
               Not now

@@ -6,11 +6,13 @@ import type {
   QuoteDraft,
   QuoteDraftLine,
   QuoteGroup,
+  QuoteReader,
   QuoteSent,
 } from '@/api-types/quotes';
 import { dayText } from '@/takeoff/day-text';
 import { formatMoney } from '@/takeoff/money';
 import { api, type ApiError } from '../ui/api';
+import { ReadersNote } from './ReadersNote';
 import { SaveNote } from './SaveNote';
 import { AmountField, MoneyField, ShareField } from './typed-figures';
 import { useSavedDraft } from './use-saved-draft';
@@ -25,12 +27,22 @@ interface Props {
   readonly quote: QuoteDetail;
   /** Whether the project's clients see the version yet. */
   readonly shared: boolean;
+  /** The clients on the project. */
+  readonly clients: readonly QuoteReader[];
+  readonly projectId: string;
   readonly onSent: (said: string) => void;
   readonly onDropped: () => void;
 }
 
 /** A quote while it is being made: each line, margin, tax and words; saved as it is changed. */
-export function QuoteDraftForm({ quote: first, shared, onSent, onDropped }: Props) {
+export function QuoteDraftForm({
+  quote: first,
+  shared,
+  clients,
+  projectId,
+  onSent,
+  onDropped,
+}: Props) {
   const draft = useSavedDraft<QuoteDetail, QuoteDraft>(first, `/api/quotes/${first.id}`);
   const { saved } = draft;
   const now: QuoteDraft = { ...saved.draft, ...draft.pending };
@@ -198,6 +210,7 @@ export function QuoteDraftForm({ quote: first, shared, onSent, onDropped }: Prop
             </button>
           </div>
           {why && <p className="mt-2 text-sm text-slate">{why}</p>}
+          <ReadersNote clients={clients} projectId={projectId} />
           {(send.error ?? drop.error) && (
             <p role="alert" className="mt-2 text-brick">
               {(send.error ?? drop.error)!.message}

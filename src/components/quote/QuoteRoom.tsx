@@ -3,6 +3,7 @@ import { useState } from 'react';
 import type { VersionOrders } from '@/api-types/purchase-orders';
 import type { QuoteDetail, VersionPricing, VersionQuotes } from '@/api-types/quotes';
 import type { VersionState } from '@/api-types/versions';
+import { formatCount } from '@/paving/count';
 import { dayText } from '@/takeoff/day-text';
 import { formatMoney } from '@/takeoff/money';
 import { api, type ApiError } from '../ui/api';
@@ -11,11 +12,12 @@ import { Peg } from '../ui/Peg';
 import { Queries } from '../ui/Queries';
 import { Wrong } from '../ui/Wrong';
 import { CostBars } from './CostBars';
-import { OrderCard } from './OrderCard';
+import { ElsewhereList, OrderCard } from './OrderCard';
 import { QuoteDraftForm } from './QuoteDraftForm';
 
 interface Props {
   readonly versionId: string;
+  readonly projectId: string;
   readonly state: VersionState;
   /** Null for a version saved before take-offs were kept with versions. */
   readonly pricing: VersionPricing | null;
@@ -32,7 +34,7 @@ export default function QuoteRoom(props: Props) {
   );
 }
 
-function Room({ versionId, state, pricing, quotes, orders }: Props) {
+function Room({ versionId, projectId, state, pricing, quotes, orders }: Props) {
   if (!pricing)
     return (
       <p className="mt-6 max-w-xl text-lg text-slate">
@@ -43,7 +45,7 @@ function Room({ versionId, state, pricing, quotes, orders }: Props) {
   return (
     <>
       <Costs pricing={pricing} />
-      <Quotes versionId={versionId} state={state} first={quotes} />
+      <Quotes versionId={versionId} projectId={projectId} state={state} first={quotes} />
       <Orders versionId={versionId} state={state} first={orders} pricing={pricing} />
     </>
   );
@@ -117,10 +119,12 @@ function Costs({ pricing: { takeOff, priceList, at } }: { pricing: VersionPricin
 
 function Quotes({
   versionId,
+  projectId,
   state,
   first,
 }: {
   versionId: string;
+  projectId: string;
   state: VersionState;
   first: VersionQuotes;
 }) {
@@ -189,6 +193,8 @@ function Quotes({
           key={draft.id}
           quote={draft}
           shared={state !== 'saved'}
+          clients={list.data.clients}
+          projectId={projectId}
           onSent={(words) => {
             setSaid(words);
             void anew();
@@ -243,7 +249,7 @@ function Orders({
     refetchInterval: ({ state: { data } }) =>
       data?.orders.some(({ letter }) => letter === 'waiting') ? 3000 : false,
   });
-  const { orders, unsupplied } = list.data;
+  const { orders, unsupplied, elsewhere } = list.data;
   const begin = useMutation<VersionOrders, ApiError, { supplierId?: string }>({
     networkMode: 'always',
     mutationFn: (what) => api('POST', path, what),
@@ -278,6 +284,16 @@ function Orders({
           ready; look twice before you send them.
         </p>
       )}
+      {elsewhere.length > 0 && (
+        <div className="mt-3 bg-amber-wash p-3">
+          <p className="font-bold text-amber">
+            {elsewhere.length === 1 ? 'An order' : `${formatCount(elsewhere.length)} orders`} went
+            for another version of this project
+          </p>
+          <ElsewhereList orders={elsewhere} />
+          <p className="mt-1">What is sent from here comes on top of that.</p>
+        </div>
+      )}
       {unsupplied.length > 0 && (
         <p className="mt-3 text-slate">
           Without a supplier in your catalogue: {unsupplied.join(', ')}. Choose an item of the
@@ -287,7 +303,13 @@ function Orders({
       {orders.length > 0 && (
         <ul className="mt-1 hairlines border-b border-stone-300">
           {orders.map((order) => (
-            <OrderCard key={`${order.id} ${order.state}`} order={order} onChanged={changed} />
+            <OrderCard
+              key={`${order.id} ${order.state}`}
+              order={order}
+              elsewhere={elsewhere}
+              onChanged={changed}
+              onElsewhere={() => void list.refetch()}
+            />
           ))}
         </ul>
       )}

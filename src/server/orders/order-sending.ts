@@ -1,5 +1,11 @@
+import type { z } from 'zod';
 import type { FieldProblem } from '@/api-types/problem';
-import type { PurchaseOrder, SentOrder } from '@/api-types/purchase-orders';
+import type {
+  OrderElsewhere,
+  orderSendSchema,
+  PurchaseOrder,
+  SentOrder,
+} from '@/api-types/purchase-orders';
 import { purchaseOrders } from '@/db/schema';
 import { dayText } from '@/takeoff/day-text';
 import { recordAudit } from '../audit';
@@ -8,7 +14,7 @@ import type { Db } from '../database';
 import { newId } from '../ids';
 import type { Letter } from '../mail/letter';
 import { attachment, postLetter } from '../mail/outbox';
-import { done, invalid, type Outcome } from '../outcomes';
+import { changedMeanwhile, done, invalid, type Outcome } from '../outcomes';
 import { nodePdfMeans } from '../pdf/node-pdf';
 import type { Actor } from '../permissions';
 import { personEmail } from '../pricing/on-paper';
@@ -16,6 +22,7 @@ import { nextNumber, numberedFile } from '../pricing/paper-numbers';
 import { orderAsSent, orderCsv, orderPdf, type UnsentOrder } from './order-paper';
 import { ofOrder } from './order-rows';
 import { lockedOrder, openOrder, pricedOrder } from './orders';
+import { lockProjectOrders, ordersElsewhere } from './orders-elsewhere';
 
 /** What keeps an order from being sent as it stands. */
 const orderFaults = ({ lines, supplier, deliveryDay, on }: UnsentOrder): FieldProblem[] => [
@@ -62,6 +69,9 @@ const letterOf = (order: SentOrder): Letter => ({
   why: `You get this letter because ${order.firm.name} buys from you. Answer it to reach ${order.sentBy}.`,
 });
 
+const elsewhereWords = (order: OrderElsewhere): string =>
+  `Order ${order.number} went to ${order.supplier}, ${order.email}, on ${dayText(order.sentAt.slice(0, 10))} for version ${order.versionNumber} of ${order.layoutName}.`;
+
 /**
  * Sends an order, once: numbered, frozen and written to the supplier with its PDF and CSV, all or nothing. The letter goes into
  * the outbox in the same transaction; whoever presses twice is told that it is sent.
@@ -70,7 +80,7 @@ export const sendOrder = async (
   db: Db,
   actor: Actor,
   id: string,
-  { revision }: { readonly revision: number },
+  { revision, besides }: z.output<typeof orderSendSchema>,
 ): Promise<Outcome<PurchaseOrder>> => {
   const found = await pricedOrder(db, actor, id);
   if (!found.ok) return found;
@@ -78,8 +88,17 @@ export const sendOrder = async (
   // Read in beforehand: the transaction is not to wait for it.
   await nodePdfMeans();
   const outcome = await db.transaction(async (tx): Promise<Outcome<null>> => {
+    await lockProjectOrders(tx, version);
     const locked = await lockedOrder(tx, actor, id, revision);
     if (!locked.ok) return locked;
+    const elsewhere = await ordersElsewhere(tx, version);
+    const unknown = elsewhere.filter((other) => !besides.includes(other.id));
+    if (unknown.length > 0) {
+      return changedMeanwhile(
+        `${unknown.map(elsewhereWords).join(' ')} Sending this one orders on top of that.`,
+        { elsewhere },
+      );
+    }
     const unsent = await orderAsSent(tx, actor, version, locked.value);
     const faults = orderFaults(unsent);
     if (faults.length > 0) {

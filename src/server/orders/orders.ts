@@ -17,19 +17,21 @@ import { pricingOfVersion } from '../pricing/version-pricing';
 import { seenVersion, type SeenVersion } from '../seen-version';
 import { ordersSplit } from './order-drafts';
 import { ofOrder, orderOf, orderRows, type OrderRow } from './order-rows';
+import { ordersElsewhere } from './orders-elsewhere';
 
 const ordersOf = async (db: Db, actor: Actor, versionId: string): Promise<OrderRow[]> =>
   orderRows(db)
     .where(and(eq(purchaseOrders.firmId, actor.firmId), eq(purchaseOrders.versionId, versionId)))
     .orderBy(asc(purchaseOrders.createdAt), asc(purchaseOrders.id));
 
-/** The orders of a version, oldest first, and what nobody sells. */
+/** The orders of a version, oldest first, what nobody sells, and what went for other versions of the project. */
 export const listOrders = async (
   db: Db,
   actor: Actor,
   versionId: string,
 ): Promise<Outcome<VersionOrders>> => {
-  if (!(await seenVersion(db, actor, versionId))) return notFound('version');
+  const version = await seenVersion(db, actor, versionId);
+  if (!version) return notFound('version');
   const refusal = refuseUnlessPricing(actor);
   if (refusal) return refusal;
   const currency = await currencyOf(db, actor.firmId);
@@ -38,6 +40,7 @@ export const listOrders = async (
   return done({
     orders: (await ordersOf(db, actor, versionId)).map((row) => orderOf(row, currency)),
     unsupplied: split?.unsupplied ?? [],
+    elsewhere: await ordersElsewhere(db, version),
   });
 };
 

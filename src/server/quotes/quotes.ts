@@ -20,6 +20,7 @@ import { pricingOfVersion } from '../pricing/version-pricing';
 import { seenVersion, type SeenVersion } from '../seen-version';
 import { today } from '../today';
 import { draftFigures, firstDraft } from './quote-figures';
+import { quoteReaders } from './quote-readers';
 
 const senders = alias(people, 'senders');
 
@@ -77,7 +78,8 @@ export const listQuotes = async (
   actor: Actor,
   versionId: string,
 ): Promise<Outcome<VersionQuotes>> => {
-  if (!(await seenVersion(db, actor, versionId))) return notFound('version');
+  const version = await seenVersion(db, actor, versionId);
+  if (!version) return notFound('version');
   if (!permissions['quote totals'][actor.role]) {
     return notAllowed('Quotes are between the firm and its client.');
   }
@@ -91,6 +93,7 @@ export const listQuotes = async (
   return done({
     quotes: seesCosts(actor.role) ? rows.map((row) => detailOf(row, currency)) : [],
     totals: sent.map(({ quote }) => totalsOf(quote, quote.sent!, quote.id !== newest)),
+    clients: seesCosts(actor.role) ? await quoteReaders(db, actor.firmId, version.projectId) : [],
   });
 };
 

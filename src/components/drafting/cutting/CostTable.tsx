@@ -8,13 +8,25 @@ import { formatMinutes } from '@/takeoff/saw-time';
 import type { CutFloor } from './cut-worker';
 
 const NO_PRICE = 'no price yet';
+const NO_RATE = 'no rate yet';
 
 /** Both floors in figures, side by side. */
-export function CostTable({ floor, display }: { floor: CutFloor; display: Display }) {
+export function CostTable({
+  floor,
+  display,
+  hourCurrency,
+}: {
+  floor: CutFloor;
+  display: Display;
+  /** What an hour is paid in where there is no price list yet; null where costs are not for the reader. */
+  hourCurrency: string | null;
+}) {
   const { cut, comparison } = floor;
   const { whole, cut: sawn, currency } = comparison;
-  const money = (minor: number | null) =>
-    minor === null || currency === null ? NO_PRICE : formatMoney(minor, currency);
+  const money = (minor: number | null) => {
+    const paidIn = currency ?? hourCurrency;
+    return minor === null || paidIn === null ? NO_PRICE : formatMoney(minor, paidIn);
+  };
   const row = (
     name: string,
     text: (cost: FloorCost) => string,
@@ -33,7 +45,10 @@ export function CostTable({ floor, display }: { floor: CutFloor; display: Displa
       sawMinutes === 0 ? '–' : `${formatMinutes(sawMinutes)}`,
     ),
     row('Materials', ({ materialsMinor }) => money(materialsMinor)),
-    row('Hours at the saw', ({ labourMinor }) => (labourMinor === 0 ? '–' : money(labourMinor))),
+    row('Hours at the saw', ({ labourMinor, sawMinutes }) => {
+      if (sawMinutes === 0) return '–';
+      return labourMinor === null ? NO_RATE : money(labourMinor);
+    }),
   ];
   const unpriced = [...new Set([...whole.unpriced, ...sawn.unpriced])];
   return (
@@ -64,7 +79,7 @@ export function CostTable({ floor, display }: { floor: CutFloor; display: Displa
               {[one, other].map((text, n) => (
                 <td
                   key={n}
-                  className={`py-1 pl-2 whitespace-nowrap ${text === NO_PRICE ? 'text-sm text-slate' : 'font-semibold'}`}
+                  className={`py-1 pl-2 whitespace-nowrap ${text === NO_PRICE || text === NO_RATE ? 'text-sm text-slate' : 'font-semibold'}`}
                 >
                   {text}
                 </td>
@@ -73,6 +88,15 @@ export function CostTable({ floor, display }: { floor: CutFloor; display: Displa
           ))}
         </tbody>
       </table>
+      {sawn.labourMinor === null && hourCurrency !== null && sawn.sawMinutes > 0 && (
+        <p className="mt-1 text-sm text-slate">
+          What an hour costs is not said yet.{' '}
+          <a className="link" href="/catalogue/prices">
+            Say it once for the firm
+          </a>
+          , or type one below for this device.
+        </p>
+      )}
       {currency === null && (
         <p className="mt-1 text-sm text-slate">
           Prices come from your firm’s catalogue, once there are some in it.

@@ -1,6 +1,7 @@
 import { useQuery } from '@tanstack/react-query';
 import { memo, useMemo, useState } from 'react';
 import { formatCount } from '@/paving/count';
+import type { FirmPricing } from '@/api-types/pricing';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { cuttingCautions } from '@/takeoff/cutting-cautions';
 import type { PriceList } from '@/takeoff/price-list';
@@ -38,8 +39,20 @@ export const CuttingChoice = memo(function CuttingChoice() {
     staleTime: 60_000,
     retry: false,
   });
+  const firm = useQuery({
+    queryKey: ['firm-pricing'],
+    queryFn: () => api<FirmPricing>('GET', '/api/firm/pricing'),
+    staleTime: 60_000,
+    retry: false,
+  });
+  // The firm's hour, until somebody types another here; nought says that it has none.
+  const firmHour = firm.data?.labourHourMinor || null;
+  const reckoned = useMemo(
+    () => ({ ...terms, hourMinor: terms.hourMinor ?? firmHour }),
+    [terms, firmHour],
+  );
   const list = prices.data && prices.data.items.length > 0 ? prices.data : null;
-  const { floor, working, failure } = useCutFloor(laying ? document : null, list, terms);
+  const { floor, working, failure } = useCutFloor(laying ? document : null, list, reckoned);
   const both = useMemo(
     () => [
       { ...document, cutting: 'none' as const },
@@ -86,7 +99,7 @@ export const CuttingChoice = memo(function CuttingChoice() {
           aria-busy={working}
           data-testid="cutting-figures"
         >
-          <CostTable floor={floor} display={display} />
+          <CostTable floor={floor} display={display} hourCurrency={firm.data?.currency ?? null} />
           {floor.cut.count === 0 ? (
             <p className="text-sm">
               Nothing to cut here: no unit at the edge leaves a piece wide enough to saw.
@@ -104,7 +117,8 @@ export const CuttingChoice = memo(function CuttingChoice() {
               <SawFields
                 terms={terms}
                 display={display}
-                currency={floor.comparison.currency}
+                currency={floor.comparison.currency ?? firm.data?.currency ?? null}
+                firmHour={firmHour}
                 onTerms={(next) => {
                   setTerms(next);
                   keepSawTerms(next);

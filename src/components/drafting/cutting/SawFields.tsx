@@ -9,11 +9,14 @@ interface Props {
   readonly terms: SawTerms;
   readonly display: Display;
   readonly currency: string | null;
+  /** What an hour costs the firm, minor units; null where it has not said. */
+  readonly firmHour: number | null;
   readonly onTerms: (terms: SawTerms) => void;
 }
 
 /** What the saw's time and cost are reckoned with: assumptions, to be typed over. */
-export function SawFields({ terms, display, currency, onTerms }: Props) {
+export function SawFields({ terms, display, currency, firmHour, onTerms }: Props) {
+  const hour = terms.hourMinor ?? firmHour;
   const metres = display === 'metric';
   const pacePer = metres ? 1 : M_PER_FOOT;
   const between =
@@ -55,7 +58,7 @@ export function SawFields({ terms, display, currency, onTerms }: Props) {
         {currency && (
           <TypedField
             label="Labour, an hour"
-            shown={terms.hourMinor === null ? '' : formatMoney(terms.hourMinor, currency)}
+            shown={hour === null ? '' : formatMoney(hour, currency)}
             inputMode="decimal"
             read={(text) => {
               const parsed = parseMoney(text, currency);
@@ -66,6 +69,17 @@ export function SawFields({ terms, display, currency, onTerms }: Props) {
           />
         )}
       </div>
+      {currency && firmHour !== null && (
+        <p className="mt-1 text-sm text-slate">
+          {terms.hourMinor === null
+            ? 'The hour is your firm’s, from its '
+            : `Your firm’s hour is ${formatMoney(firmHour, currency)}, from its `}
+          <a className="link" href="/catalogue/prices">
+            prices and papers
+          </a>
+          .
+        </p>
+      )}
       {JSON.stringify(terms) !== JSON.stringify(USUAL_SAW) && (
         <button type="button" className="button mt-2 w-full" onClick={() => onTerms(USUAL_SAW)}>
           Back to the usual figures
