@@ -1,10 +1,11 @@
 import { useInfiniteQuery } from '@tanstack/react-query';
-import { useId, useState } from 'react';
+import { useState } from 'react';
 import type { AuditPage } from '@/api-types/audit';
 import type { PersonName } from '@/api-types/people';
 import { api } from '../ui/api';
 import { Queries } from '../ui/Queries';
 import { Moment } from '../ui/Moment';
+import { SelectField } from '../ui/SelectField';
 import { Wrong } from '../ui/Wrong';
 import { AUDIT_SUBJECTS, deedText, detailText, subjectLink } from './audit-words';
 
@@ -23,7 +24,6 @@ export default function AuditTrail(props: Props) {
 }
 
 function Trail({ first, people }: Props) {
-  const id = useId();
   const [what, setWhat] = useState('');
   const [person, setPerson] = useState('');
   const trail = useInfiniteQuery({
@@ -46,42 +46,20 @@ function Trail({ first, people }: Props) {
   return (
     <>
       <div className="mt-5 grid grid-cols-2 gap-3 sm:flex">
-        <div className="sm:w-48">
-          <label htmlFor={`${id}-what`} className="field-label">
-            About
-          </label>
-          <select
-            id={`${id}-what`}
-            className="field"
-            value={what}
-            onChange={(event) => setWhat(event.target.value)}
-          >
-            <option value="">Everything</option>
-            {AUDIT_SUBJECTS.map(([value, name]) => (
-              <option key={value} value={value}>
-                {name}
-              </option>
-            ))}
-          </select>
-        </div>
-        <div className="sm:w-56">
-          <label htmlFor={`${id}-person`} className="field-label">
-            By
-          </label>
-          <select
-            id={`${id}-person`}
-            className="field"
-            value={person}
-            onChange={(event) => setPerson(event.target.value)}
-          >
-            <option value="">Everybody</option>
-            {people.map((each) => (
-              <option key={each.id} value={each.id}>
-                {each.name}
-              </option>
-            ))}
-          </select>
-        </div>
+        <SelectField
+          label="About"
+          value={what}
+          onValue={setWhat}
+          options={[['', 'Everything'], ...AUDIT_SUBJECTS]}
+          className="sm:w-48"
+        />
+        <SelectField
+          label="By"
+          value={person}
+          onValue={setPerson}
+          options={[['', 'Everybody'], ...people.map(({ id, name }) => [id, name] as const)]}
+          className="sm:w-56"
+        />
       </div>
       <Wrong error={trail.error} again={() => void trail.refetch()} className="mt-4" />
       {trail.data && entries.length === 0 && (

@@ -1,5 +1,5 @@
 import { useInfiniteQuery, useMutation, useQueryClient } from '@tanstack/react-query';
-import { useEffect, useId, useState } from 'react';
+import { useEffect, useState } from 'react';
 import type {
   CatalogueItem,
   CataloguePage,
@@ -13,6 +13,8 @@ import type { Display } from '@/paving/length';
 import type { PriceKind } from '@/takeoff/price-list';
 import { api, ApiError } from '../ui/api';
 import { Queries } from '../ui/Queries';
+import { SearchField } from '../ui/SearchField';
+import { SelectField } from '../ui/SelectField';
 import { Wrong } from '../ui/Wrong';
 import { BothSides } from './BothSides';
 import { ImportFile } from './ImportFile';
@@ -351,59 +353,34 @@ function Controls({
   onTyped: (text: string) => void;
   onChange: (part: Partial<Look>) => void;
 }) {
-  const id = useId();
   return (
     <div
       role="search"
       className="mt-5 grid grid-cols-2 items-end gap-3 sm:flex sm:flex-wrap sm:items-end"
     >
-      <div className="col-span-2 sm:w-72">
-        <label htmlFor={`${id}-search`} className="field-label">
-          Find by name or code
-        </label>
-        <input
-          id={`${id}-search`}
-          type="search"
-          className="field"
-          maxLength={120}
-          value={typed}
-          onChange={(event) => onTyped(event.target.value)}
-        />
-      </div>
-      <div>
-        <label htmlFor={`${id}-kind`} className="field-label">
-          Kind
-        </label>
-        <select
-          id={`${id}-kind`}
-          className="field"
-          value={look.kind}
-          onChange={(event) => onChange({ kind: event.target.value as Look['kind'] })}
-        >
-          <option value="">All</option>
-          <option value="unit">Units</option>
-          <option value="aggregate">Aggregates</option>
-          <option value="sundry">Sundries</option>
-        </select>
-      </div>
-      <div>
-        <label htmlFor={`${id}-supplier`} className="field-label">
-          Supplier
-        </label>
-        <select
-          id={`${id}-supplier`}
-          className="field"
-          value={look.supplier}
-          onChange={(event) => onChange({ supplier: event.target.value })}
-        >
-          <option value="">All</option>
-          {suppliers.map(({ id: own, name }) => (
-            <option key={own} value={own}>
-              {name}
-            </option>
-          ))}
-        </select>
-      </div>
+      <SearchField
+        label="Find by name or code"
+        value={typed}
+        onValue={onTyped}
+        className="col-span-2 sm:w-72"
+      />
+      <SelectField
+        label="Kind"
+        value={look.kind}
+        onValue={(kind) => onChange({ kind })}
+        options={[
+          ['', 'All'],
+          ['unit', 'Units'],
+          ['aggregate', 'Aggregates'],
+          ['sundry', 'Sundries'],
+        ]}
+      />
+      <SelectField
+        label="Supplier"
+        value={look.supplier}
+        onValue={(supplier) => onChange({ supplier })}
+        options={[['', 'All'], ...suppliers.map(({ id, name }) => [id, name] as const)]}
+      />
       <label className="col-span-2 flex min-h-[2.4rem] items-center gap-2">
         <input
           type="checkbox"

@@ -4,6 +4,7 @@ import type { Supplier } from '@/api-types/suppliers';
 import type { Display } from '@/paving/length';
 import type { ApiError } from '../ui/api';
 import { Segmented } from '../ui/Segmented';
+import { SelectField } from '../ui/SelectField';
 import { KIND_WORDS, MEASURE_WORDS } from './catalogue-words';
 import { entryOf, entryRead, type Entry, type EntryProblems } from './item-entry';
 
@@ -109,7 +110,7 @@ export function ItemForm({
           />
         </div>
         <div className="col-span-2">{field('name', 'Name', { maxLength: 80, first: true })}</div>
-        <Choice
+        <SelectField
           label="Supplier"
           value={entry.supplierId}
           problem={problems.supplierId}
@@ -151,7 +152,7 @@ export function ItemForm({
 
         {field('packName', 'Bought as', { maxLength: 60, placeholder: 'pallet' })}
         {field('packHolds', 'which holds', number)}
-        <Choice
+        <SelectField
           label="Measure"
           value={entry.packMeasure}
           problem={problems.packMeasure}
@@ -233,43 +234,6 @@ function Field({
           {problem}
         </p>
       )}
-    </div>
-  );
-}
-
-function Choice({
-  label,
-  value,
-  problem,
-  onValue,
-  options,
-}: {
-  label: string;
-  value: string;
-  problem: string | undefined;
-  onValue: (value: string) => void;
-  options: readonly (readonly [value: string, label: string])[];
-}) {
-  const id = useId();
-  return (
-    <div className="min-w-0">
-      <label htmlFor={id} className="field-label">
-        {label}
-      </label>
-      <select
-        id={id}
-        className="field"
-        value={value}
-        aria-invalid={problem !== undefined}
-        onChange={(event) => onValue(event.target.value)}
-      >
-        {options.map(([option, text]) => (
-          <option key={option} value={option}>
-            {text}
-          </option>
-        ))}
-      </select>
-      {problem && <p className="mt-1 text-sm text-brick">{problem}</p>}
     </div>
   );
 }

@@ -6,6 +6,7 @@ import { boughtAs } from '@/takeoff/bought-as';
 import type { Display } from '@/paving/length';
 import { dayText } from '@/takeoff/day-text';
 import { Moment } from '../ui/Moment';
+import { SortedHead } from '../ui/SortedHead';
 import { itemMeasure, KIND_WORDS } from './catalogue-words';
 
 // The server searches, sorts and pages: the table holds columns and rows alone.
@@ -152,26 +153,15 @@ export function ItemTable(props: Props) {
             {group.headers.map((header) => {
               const { id } = header.column;
               const sorted = SORTED[id];
-              const picked = sorted?.by === sort;
               return (
-                <th
+                <SortedHead
                   key={header.id}
-                  scope="col"
-                  aria-sort={picked ? sorted.order : undefined}
-                  className={`py-1 pr-4 font-normal last:pr-0 ${right(id)} ${WIDE_ONLY[id] ?? ''}`}
+                  order={sorted?.by === sort ? sorted.order : null}
+                  onSort={sorted && (() => onSort(sorted.by))}
+                  className={`${right(id)} ${WIDE_ONLY[id] ?? ''}`}
                 >
-                  {sorted ? (
-                    <button
-                      type="button"
-                      className={`min-h-8 pointer-coarse:min-h-11 ${picked ? 'font-bold text-graphite' : 'hover:text-line'}`}
-                      onClick={() => onSort(sorted.by)}
-                    >
-                      <table.FlexRender header={header} />
-                    </button>
-                  ) : (
-                    <table.FlexRender header={header} />
-                  )}
-                </th>
+                  <table.FlexRender header={header} />
+                </SortedHead>
               );
             })}
           </tr>

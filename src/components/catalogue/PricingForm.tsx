@@ -4,7 +4,9 @@ import type { FirmPricing, FirmPricingChange } from '@/api-types/pricing';
 import { parseMoney } from '@/takeoff/money';
 import { moneyFigures } from '@/takeoff/money-figures';
 import { api, type ApiError } from '../ui/api';
+import { FieldNote } from '../ui/FieldNote';
 import { Queries } from '../ui/Queries';
+import { SelectField } from '../ui/SelectField';
 
 interface Props {
   readonly first: FirmPricing;
@@ -132,7 +134,7 @@ function Form({ first, mayChange, currencies }: Props) {
         </p>
       )}
       <Group title="Money">
-        <Select
+        <SelectField
           label="Currency of all prices"
           options={currencies.map((code) => [code, code] as const)}
           {...shared('currency')}
@@ -150,7 +152,7 @@ function Form({ first, mayChange, currencies }: Props) {
           {...shared('taxBasisPoints')}
           hint="Your tax office says which rate is yours."
         />
-        <Select
+        <SelectField
           label="Tax is worked out"
           options={[
             ['sum', 'once, on the sum'],
@@ -159,7 +161,7 @@ function Form({ first, mayChange, currencies }: Props) {
           {...shared('taxOn')}
         />
         <Line label="Margin, per cent" right {...shared('marginBasisPoints')} />
-        <Select
+        <SelectField
           label="Margin is a share"
           options={[
             ['cost', 'of the cost: 25 % on 100 is 125'],
@@ -179,7 +181,7 @@ function Form({ first, mayChange, currencies }: Props) {
         <Line label="A quote holds for, days" right {...shared('validDays')} />
         <Line label="Quote numbers begin with" {...shared('quotePrefix')} />
         <Line label="Order numbers begin with" {...shared('orderPrefix')} />
-        <Select
+        <SelectField
           label="Paper"
           options={[
             ['A4', 'A4'],
@@ -264,14 +266,6 @@ interface FieldProps {
   readonly hint?: string;
 }
 
-function Note({ id, problem, hint }: { id: string; problem?: string; hint?: string }) {
-  return (
-    <p id={id} className={`mt-1 text-sm empty:hidden ${problem ? 'text-brick' : 'text-slate'}`}>
-      {problem ?? hint}
-    </p>
-  );
-}
-
 function Line({
   label,
   value,
@@ -298,7 +292,7 @@ function Line({
         aria-describedby={`${id}-note`}
         onChange={(event) => onValue(event.target.value)}
       />
-      <Note id={`${id}-note`} problem={problem} hint={hint} />
+      <FieldNote id={`${id}-note`} problem={problem} hint={hint} />
     </div>
   );
 }
@@ -320,41 +314,7 @@ function Text({ label, value, problem, disabled, onValue, hint }: FieldProps) {
         aria-describedby={`${id}-note`}
         onChange={(event) => onValue(event.target.value)}
       />
-      <Note id={`${id}-note`} problem={problem} hint={hint} />
-    </div>
-  );
-}
-
-function Select({
-  label,
-  value,
-  problem,
-  disabled,
-  onValue,
-  hint,
-  options,
-}: FieldProps & { readonly options: readonly (readonly [value: string, label: string])[] }) {
-  const id = useId();
-  return (
-    <div>
-      <label htmlFor={id} className="field-label">
-        {label}
-      </label>
-      <select
-        id={id}
-        className="field"
-        value={value}
-        disabled={disabled}
-        aria-describedby={`${id}-note`}
-        onChange={(event) => onValue(event.target.value)}
-      >
-        {options.map(([option, text]) => (
-          <option key={option} value={option}>
-            {text}
-          </option>
-        ))}
-      </select>
-      <Note id={`${id}-note`} problem={problem} hint={hint} />
+      <FieldNote id={`${id}-note`} problem={problem} hint={hint} />
     </div>
   );
 }

@@ -4,6 +4,7 @@ import type { DuplicateLayout, LayoutChange, LayoutSummary } from '@/api-types/l
 import type { ProjectPage } from '@/api-types/projects';
 import { api } from '../ui/api';
 import { Dialog } from '../ui/Dialog';
+import { SearchField } from '../ui/SearchField';
 import { Wrong } from '../ui/Wrong';
 
 type Doing = 'rename' | 'duplicate' | 'move' | null;
@@ -179,7 +180,6 @@ function MoveDialog({
   error: Error | null;
   onMove: (projectId: string, name: string) => void;
 }) {
-  const id = useId();
   const [search, setSearch] = useState('');
   const [picked, setPicked] = useState<{ id: string; name: string } | null>(null);
   const found = useQuery({
@@ -199,16 +199,7 @@ function MoveDialog({
         The layout goes with its draft, versions and comments. Whoever sees the other project then
         sees it there.
       </p>
-      <label htmlFor={id} className="field-label mt-3">
-        Find a project
-      </label>
-      <input
-        id={id}
-        type="search"
-        className="field"
-        value={search}
-        onChange={(event) => setSearch(event.target.value)}
-      />
+      <SearchField label="Find a project" value={search} onValue={setSearch} className="mt-3" />
       <fieldset className="mt-2 max-h-60 overflow-y-auto">
         <legend className="sr-only">Projects</legend>
         {others.map((project) => (

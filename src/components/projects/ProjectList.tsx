@@ -1,5 +1,5 @@
 import { useInfiniteQuery, useMutation, useQueryClient } from '@tanstack/react-query';
-import { useEffect, useId, useState } from 'react';
+import { useEffect, useState } from 'react';
 import type { Role } from '@/api-types/people';
 import {
   projectStages,
@@ -9,7 +9,9 @@ import {
 } from '@/api-types/projects';
 import { api } from '../ui/api';
 import { Queries } from '../ui/Queries';
+import { SearchField } from '../ui/SearchField';
 import { Segmented } from '../ui/Segmented';
+import { SelectField } from '../ui/SelectField';
 import { STATE_WORDS } from '../ui/version-words';
 import { Wrong } from '../ui/Wrong';
 import { isNarrowed, lookAsked, lookWritten, type ListLook } from './list-query';
@@ -136,59 +138,37 @@ function Controls({
   onChange: (part: Partial<ListLook>) => void;
   drafting: boolean;
 }) {
-  const id = useId();
   return (
     <div
       role="search"
       className="mt-5 grid grid-cols-2 items-end gap-3 sm:flex sm:flex-wrap sm:items-end"
     >
-      <div className="col-span-2 sm:w-72">
-        <label htmlFor={`${id}-search`} className="field-label">
-          Find by project or client
-        </label>
-        <input
-          id={`${id}-search`}
-          type="search"
-          className="field"
-          maxLength={120}
-          value={typed}
-          onChange={(event) => onTyped(event.target.value)}
-        />
-      </div>
-      <div>
-        <label htmlFor={`${id}-stage`} className="field-label">
-          State
-        </label>
-        <select
-          id={`${id}-stage`}
-          className="field"
-          value={look.stage}
-          onChange={(event) => onChange({ stage: event.target.value as ListLook['stage'] })}
-        >
-          <option value="">All</option>
-          {projectStages.map((stage) => (
-            <option key={stage} value={stage}>
-              {STATE_WORDS[stage]}
-            </option>
-          ))}
-        </select>
-      </div>
-      <div>
-        <label htmlFor={`${id}-sort`} className="field-label">
-          In order of
-        </label>
-        <select
-          id={`${id}-sort`}
-          className="field"
-          value={look.sort}
-          onChange={(event) => onChange({ sort: event.target.value as ListLook['sort'] })}
-        >
-          <option value="updated">Last worked on</option>
-          <option value="name">Name</option>
-          <option value="client">Client</option>
-          <option value="stage">State, furthest first</option>
-        </select>
-      </div>
+      <SearchField
+        label="Find by project or client"
+        value={typed}
+        onValue={onTyped}
+        className="col-span-2 sm:w-72"
+      />
+      <SelectField
+        label="State"
+        value={look.stage}
+        onValue={(stage) => onChange({ stage })}
+        options={[
+          ['', 'All'],
+          ...projectStages.map((stage) => [stage, STATE_WORDS[stage]] as const),
+        ]}
+      />
+      <SelectField
+        label="In order of"
+        value={look.sort}
+        onValue={(sort) => onChange({ sort })}
+        options={[
+          ['updated', 'Last worked on'],
+          ['name', 'Name'],
+          ['client', 'Client'],
+          ['stage', 'State, furthest first'],
+        ]}
+      />
       {!look.archived && (
         <div className="col-span-2 sm:ml-auto sm:w-48">
           <Segmented

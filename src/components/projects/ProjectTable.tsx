@@ -3,6 +3,7 @@ import type { ProjectSort, ProjectSummary } from '@/api-types/projects';
 import { FloorDrawing } from '../ui/FloorDrawing';
 import { Peg, statePeg } from '../ui/Peg';
 import { Moment } from '../ui/Moment';
+import { SortedHead } from '../ui/SortedHead';
 import { STATE_WORDS } from '../ui/version-words';
 
 // The server searches, sorts and pages: the table holds columns and rows alone.
@@ -86,29 +87,15 @@ export function ProjectTable({
             {group.headers.map((header) => {
               const { id } = header.column;
               const sorted = SORTED[id];
-              const picked = sorted?.by === sort;
               return (
-                <th
+                <SortedHead
                   key={header.id}
-                  scope="col"
-                  aria-sort={picked ? sorted.order : undefined}
-                  className={`py-1 pr-4 font-normal last:pr-0 ${number(id)} ${hidden(id)}`}
+                  order={sorted?.by === sort ? sorted.order : null}
+                  onSort={sorted && (() => onSort(sorted.by))}
+                  className={`${number(id)} ${hidden(id)}`}
                 >
-                  {sorted ? (
-                    <button
-                      type="button"
-                      className={`min-h-8 pointer-coarse:min-h-11 ${picked ? 'font-bold text-graphite' : 'hover:text-line'}`}
-                      onClick={() => onSort(sorted.by)}
-                    >
-                      <table.FlexRender header={header} />
-                      <span aria-hidden="true">
-                        {picked && (sorted.order === 'ascending' ? ' ↑' : ' ↓')}
-                      </span>
-                    </button>
-                  ) : (
-                    <table.FlexRender header={header} />
-                  )}
-                </th>
+                  <table.FlexRender header={header} />
+                </SortedHead>
               );
             })}
           </tr>

@@ -12,6 +12,7 @@ import type {
 import { dayText } from '@/takeoff/day-text';
 import { formatMoney } from '@/takeoff/money';
 import { api, type ApiError } from '../ui/api';
+import { SelectField } from '../ui/SelectField';
 import { ReadersNote } from './ReadersNote';
 import { SaveNote } from './SaveNote';
 import { AmountField, MoneyField, ShareField } from './typed-figures';
@@ -97,32 +98,28 @@ export function QuoteDraftForm({
               share={now.margin.share}
               onShare={(share) => draft.change({ margin: { ...now.margin, share } })}
             />
-            <Pick
+            <SelectField
               label="Share of"
               value={now.margin.of}
               options={[
                 ['cost', 'the cost'],
                 ['price', 'the price'],
               ]}
-              onValue={(of) =>
-                draft.change({ margin: { ...now.margin, of: of as QuoteDraft['margin']['of'] } })
-              }
+              onValue={(of) => draft.change({ margin: { ...now.margin, of } })}
             />
             <ShareField
               label={now.tax.name}
               share={now.tax.share}
               onShare={(share) => draft.change({ tax: { ...now.tax, share } })}
             />
-            <Pick
+            <SelectField
               label="Worked out"
               value={now.tax.on}
               options={[
                 ['sum', 'on the sum'],
                 ['lines', 'on each line'],
               ]}
-              onValue={(on) =>
-                draft.change({ tax: { ...now.tax, on: on as QuoteDraft['tax']['on'] } })
-              }
+              onValue={(on) => draft.change({ tax: { ...now.tax, on } })}
             />
             <AmountField
               label="Holds for, days"
@@ -131,7 +128,7 @@ export function QuoteDraftForm({
               refuse={(days) => (days < 1 || days > 365 ? 'From 1 to 365 days.' : null)}
               onAmount={(validDays) => draft.change({ validDays })}
             />
-            <Pick
+            <SelectField
               label="Total rounded to"
               value={String(now.roundTo)}
               options={[1, 5, 10, 100, 1000].map((step) => [String(step), money(step)] as const)}
@@ -179,14 +176,7 @@ export function QuoteDraftForm({
             it, what each part comes to and the total: neither cost nor margin.
           </p>
           <div className="mt-3">
-            <SaveNote
-              saving={draft.saving}
-              error={draft.error}
-              clash={draft.theirs !== null}
-              keepMine={draft.keepMine}
-              takeTheirs={draft.takeTheirs}
-              again={draft.again}
-            />
+            <SaveNote draft={draft} />
           </div>
           <div className="mt-4 flex flex-wrap gap-2">
             <button
@@ -315,39 +305,6 @@ function Group({
         ))}
       </ul>
     </section>
-  );
-}
-
-function Pick({
-  label,
-  value,
-  options,
-  onValue,
-}: {
-  label: string;
-  value: string;
-  options: readonly (readonly [value: string, label: string])[];
-  onValue: (value: string) => void;
-}) {
-  const id = useId();
-  return (
-    <div>
-      <label htmlFor={id} className="field-label">
-        {label}
-      </label>
-      <select
-        id={id}
-        className="field"
-        value={value}
-        onChange={(event) => onValue(event.target.value)}
-      >
-        {options.map(([option, text]) => (
-          <option key={option} value={option}>
-            {text}
-          </option>
-        ))}
-      </select>
-    </div>
   );
 }
 

@@ -1,22 +1,15 @@
-import type { ApiError } from '../ui/api';
+import type { SavedDraft } from './use-saved-draft';
 
 /** Whether what was typed is stored, and what to do when it is not. */
 export function SaveNote({
-  saving,
-  error,
-  clash,
-  keepMine,
-  takeTheirs,
-  again,
+  draft: { saving, error, theirs, keepMine, takeTheirs, again },
 }: {
-  saving: boolean;
-  error: ApiError | null;
-  /** Somebody else changed it first. */
-  clash: boolean;
-  keepMine: () => void;
-  takeTheirs: () => void;
-  again: () => void;
+  draft: Pick<
+    SavedDraft<never, never>,
+    'saving' | 'error' | 'keepMine' | 'takeTheirs' | 'again'
+  > & { readonly theirs: unknown };
 }) {
+  const clash = theirs !== null;
   if (!error)
     return (
       <p role="status" className="text-sm text-slate">
