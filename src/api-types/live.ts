@@ -60,6 +60,8 @@ export interface LiveState {
   /** The same just while nothing in the rest has changed. */
   readonly stamp: string;
   readonly layouts: readonly LiveLayout[];
+  /** Another whenever the client's choices are picked anew; null while nothing is picked. */
+  readonly choices: string | null;
 }
 
 export const LIVE_POLL_S = 2;

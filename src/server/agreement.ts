@@ -11,6 +11,7 @@ import {
 import type { VersionDetail } from '@/api-types/versions';
 import { acceptances, people, versions } from '@/db/schema';
 import { recordAudit } from './audit';
+import { addToChoices, notAChoice, refuseUnlessChoice } from './choices';
 import type { Db } from './database';
 import { lockDraft } from './drafts';
 import { newId } from './ids';
@@ -34,7 +35,7 @@ import { versionSeen } from './visibility';
 
 interface Beside {
   /** Asked under the lock, before anything is written. */
-  readonly check?: (version: SeenVersion) => Refusal | null;
+  readonly check?: (version: SeenVersion, tx: Db) => Refusal | null | Promise<Refusal | null>;
   /** What else the step writes; the number of the version that is superseded by it, if one is. */
   readonly write?: (tx: Db, version: SeenVersion, eventId: string) => Promise<number | void>;
 }
@@ -61,7 +62,7 @@ const takeStep = async (
     if (!version) return notFound('version');
     const notNow = stepNotNow(step, version.state);
     if (notNow) return changedMeanwhile(notNow);
-    const checked = check?.(version);
+    const checked = await check?.(version, tx);
     if (checked) return checked;
     const kind = STEP_LEADS[step].to;
     const eventId = await addVersionEvent(tx, actor, versionId, kind, note);
@@ -86,7 +87,8 @@ export const shareVersion = (
   actor: Actor,
   id: string,
   { note }: { readonly note: string },
-): Promise<Outcome<VersionDetail>> => takeStep(db, actor, id, 'share', note);
+): Promise<Outcome<VersionDetail>> =>
+  takeStep(db, actor, id, 'share', note, { write: (tx, version) => addToChoices(tx, version) });
 
 /** Asks for a change to a shared version; each pin begins a thread of comments at its spot. */
 export const askForChange = (
@@ -170,16 +172,17 @@ export const acceptVersion = async (
   { typedName, fingerprint, terms, note }: z.output<typeof acceptVersionSchema>,
 ): Promise<Outcome<AcceptanceRecord>> => {
   const accepted = await takeStep(db, actor, id, 'accept', note, {
-    check: (version) => {
+    check: async (version, tx) => {
       if (fingerprint !== version.fingerprint) {
         return changedMeanwhile('What you were shown is not this version. Open it again and look.');
       }
-      return terms === version.terms
-        ? null
-        : changedMeanwhile(
-            'The firm’s terms have changed since they were shown to you. Read them again first.',
-            { terms: version.terms },
-          );
+      if (terms !== version.terms) {
+        return changedMeanwhile(
+          'The firm’s terms have changed since they were shown to you. Read them again first.',
+          { terms: version.terms },
+        );
+      }
+      return refuseUnlessChoice(tx, version);
     },
     write: async (tx, _version, eventId) => {
       await tx.insert(acceptances).values({
@@ -223,12 +226,14 @@ export const openAgreement = async (
     .where(
       and(versionSeen(actor), eq(versions.layoutId, version.layoutId), eq(versionState, 'issued')),
     );
+  const standings = Object.fromEntries(
+    steps.map((step) => [step, stepStanding(step, actor.role, version.state)]),
+  ) as unknown as Agreement['steps'];
+  const takenBack = standings.accept.may ? await notAChoice(db, version) : null;
   return done({
     versionId: version.id,
     state: version.state,
-    steps: Object.fromEntries(
-      steps.map((step) => [step, stepStanding(step, actor.role, version.state)]),
-    ) as unknown as Agreement['steps'],
+    steps: takenBack ? { ...standings, accept: { may: false, why: takenBack } } : standings,
     terms: version.terms,
     fingerprint: version.fingerprint,
     acceptance: await recordOf(db, version),

@@ -11,6 +11,7 @@ import {
   siteEntries,
   versions,
 } from '@/db/schema';
+import { standingChoices } from './choices';
 import type { Db } from './database';
 import { done, notFound, type Outcome } from './outcomes';
 import { mayDraft, type Actor } from './permissions';
@@ -130,5 +131,6 @@ export const liveState = async (
       .filter(({ layoutId }) => layoutId === id)
       .map(({ person, editing }) => ({ person, editing })),
   }));
-  return done({ projectId, stamp: stampOf(all), layouts: all });
+  const picked = await standingChoices(db, actor.firmId, projectId);
+  return done({ projectId, stamp: stampOf([all, picked]), layouts: all, choices: picked });
 };

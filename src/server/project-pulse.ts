@@ -1,5 +1,6 @@
 import { sql } from 'drizzle-orm';
 import {
+  choices,
   commentReads,
   comments,
   draftPresence,
@@ -40,6 +41,8 @@ export const projectPulse = async (db: Db, firmId: string, projectId: string): P
           join ${versions} v on v.firm_id = l.firm_id and v.layout_id = l.id
           join ${siteEntries} s on s.firm_id = v.firm_id and s.version_id = v.id
           where l.firm_id = ${firmId} and l.project_id = ${projectId}),
+        (select concat_ws(',', count(*), count(o.withdrawn_at)) from ${choices} o
+          where o.firm_id = ${firmId} and o.project_id = ${projectId}),
         (select string_agg(concat_ws(',', q.layout_id, q.person_id,
             coalesce(q.edited_at > now() - make_interval(secs => ${EDITING_FOR_S}), false)),
             ';' order by q.layout_id, q.person_id)

@@ -175,6 +175,25 @@ const rows: readonly Row[] = [
     expected: statuses([200, 200, 200, 200, 404, 404, 404, 401]),
   },
   {
+    row: `${SEE_PROJECT}: what its client chooses from, as far as one sees it`,
+    endpoint: 'GET /api/projects/[id]/choices',
+    id: ({ project }) => project,
+    expected: statuses([200, 200, 200, 200, 404, 404, 404, 401]),
+  },
+  {
+    row: `${DRAFTS}: which of them the client chooses from`,
+    endpoint: 'PUT /api/projects/[id]/choices',
+    id: ({ project }) => project,
+    body: ({ shared }) => ({ versionIds: [shared] }),
+    expected: drafting(200),
+  },
+  {
+    row: `${DRAFTS}: which of them the client chooses from`,
+    endpoint: 'DELETE /api/projects/[id]/choices',
+    id: ({ project }) => project,
+    expected: drafting(200),
+  },
+  {
     row: DRAFTS,
     endpoint: 'PATCH /api/projects/[id]',
     id: ({ project }) => project,

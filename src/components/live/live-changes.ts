@@ -10,6 +10,8 @@ export interface LiveChanges {
   readonly comments: readonly string[];
   /** Versions on which the crew has sent more from site. */
   readonly site: readonly string[];
+  /** Whether the client's choices were picked anew. */
+  readonly choices: boolean;
 }
 
 const versionsOf = (state: LiveState | null) =>
@@ -40,5 +42,6 @@ export function liveChanges(before: LiveState, now: LiveState): LiveChanges {
       version ? `${version.commentsStamp} ${version.comments} ${version.unread}` : undefined,
     ),
     site: differing(old, fresh, (version) => version?.siteEntries),
+    choices: before.choices !== now.choices,
   };
 }

@@ -5,7 +5,7 @@ import { liveChanges } from './live-changes';
 import { liveConnected } from './live-connection';
 
 /**
- * Keeps an island's queries fresh: those of what changed are asked again. Keys: `['version', id]`, `['agreement', id]`,
+ * Keeps an island's queries fresh: those of what changed are asked again. Keys: `['version', id]`, `['agreement', id]`, `['choices', projectId]`,
  * `['threads', id]`, `['on-site', id]`, `['versions', layoutId]`, `['project', id]`, `['timeline', …]`. Gives how the project stands.
  */
 export function useLiveRefresh(projectId: string): { state: LiveState | null; gone: boolean } {
@@ -22,7 +22,7 @@ export function useLiveRefresh(projectId: string): { state: LiveState | null; go
           last.current = now;
           setState(now);
           if (!before || before.stamp === now.stamp) return;
-          const { layouts, versions, comments, site } = liveChanges(before, now);
+          const { layouts, versions, comments, site, choices } = liveChanges(before, now);
           const refresh = (...queryKey: string[]) => void queries.invalidateQueries({ queryKey });
           for (const id of layouts) refresh('versions', id);
           for (const id of versions) {
@@ -31,6 +31,9 @@ export function useLiveRefresh(projectId: string): { state: LiveState | null; go
           }
           for (const id of comments) refresh('threads', id);
           for (const id of site) refresh('on-site', id);
+          // Whether a version can be accepted hangs on the choices.
+          if (choices) refresh('agreement');
+          if (choices || versions.length > 0) refresh('choices', projectId);
           if (layouts.length + versions.length > 0) {
             refresh('project', projectId);
             if (versions.length > 0) refresh('versions');

@@ -6,6 +6,8 @@ import type { Role } from '@/api-types/people';
 import type { ProjectDetail } from '@/api-types/projects';
 import type { TimelinePage } from '@/api-types/timeline';
 import type { VersionWithDrawing } from '@/api-types/versions';
+import { ChoicesOffered } from '../choices/ChoicesOffered';
+import { YourChoices } from '../choices/YourChoices';
 import { useLiveRefresh } from '../live/live-refresh';
 import { api } from '../ui/api';
 import { Queries } from '../ui/Queries';
@@ -60,8 +62,18 @@ function Home({ project: first, versions, timeline, role }: Props) {
         </p>
       )}
       <div className="mt-8 grid gap-x-12 gap-y-12 xl:grid-cols-[minmax(0,1fr)_20rem]">
-        <div>
+        <div className="min-w-0">
+          {role === 'client' && (
+            <div className="mb-12 empty:hidden">
+              <YourChoices projectId={project.id} />
+            </div>
+          )}
           {current.map(section)}
+          {drafting && (
+            <div className="mt-12 empty:hidden">
+              <ChoicesOffered projectId={project.id} />
+            </div>
+          )}
           {current.length === 0 && (
             <p className="max-w-xl text-lg text-slate">
               {drafting

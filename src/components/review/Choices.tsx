@@ -1,46 +1,39 @@
-import { useQueries } from '@tanstack/react-query';
+import { useQuery } from '@tanstack/react-query';
 import type { Agreement } from '@/api-types/agreement';
 import type { VersionDetail, VersionWithDrawing } from '@/api-types/versions';
 import { formatLength } from '@/paving/length';
 import { formatCount } from '@/paving/count';
+import { useChoices } from '../choices/use-choices';
 import { compareLink } from '../compare/compare-link';
 import { api } from '../ui/api';
 import { FloorDrawing } from '../ui/FloorDrawing';
 import { STATE_WORDS } from '../ui/version-words';
 
-export interface LayoutName {
-  readonly id: string;
-  readonly name: string;
-}
-
 /** The other floors that this person may choose from, with the way to compare each with this one. */
 export function Choices({
   version,
-  layouts,
   client,
   agreement,
 }: {
   version: VersionDetail;
-  layouts: readonly LayoutName[];
   client: boolean;
   agreement: Agreement | undefined;
 }) {
-  const lists = useQueries({
-    queries: layouts.map(({ id }) => ({
-      queryKey: ['versions', id],
-      queryFn: () =>
-        api<{ versions: VersionWithDrawing[] }>('GET', `/api/layouts/${id}/versions`).then(
-          (answer) => answer.versions,
-        ),
-    })),
+  const offered = useChoices(version.projectId);
+  const { data: ofLayout = [] } = useQuery({
+    queryKey: ['versions', version.layoutId],
+    queryFn: () =>
+      api<{ versions: VersionWithDrawing[] }>(
+        'GET',
+        `/api/layouts/${version.layoutId}/versions`,
+      ).then((answer) => answer.versions),
+    enabled: !client,
   });
-  const others = layouts.flatMap((layout, n) =>
-    (lists[n].data ?? [])
-      .filter(({ id, state }) => id !== version.id && (!client || state !== 'superseded'))
-      .map((other) => ({ ...other, layoutName: layout.name })),
-  );
-  if (others.length === 0) return null;
-  const shown = client ? others : others.filter(({ layoutId }) => layoutId === version.layoutId);
+  // The firm sees what else there is of this layout; a client what is put before them, in that order.
+  const all = client
+    ? (offered.data?.versions ?? [])
+    : ofLayout.map((other) => ({ ...other, layoutName: version.layoutName }));
+  const shown = all.filter(({ id }) => id !== version.id);
   if (shown.length === 0) return null;
   return (
     <section aria-label={client ? 'Your choices' : 'Other versions'}>

@@ -39,7 +39,11 @@ export function ClientAnswer(props: Props) {
         <Peg look={statePeg(version.state)} />
         <strong data-testid="state">{STATE_WORDS[version.state]}</strong>
       </p>
-      <p className="mt-1">{CLIENT_STATES[version.state]}</p>
+      <p className="mt-1">
+        {version.state === 'shared' && data?.steps.accept.why
+          ? data.steps.accept.why
+          : CLIENT_STATES[version.state]}
+      </p>
       {data?.acceptance && (
         <p className="mt-1">
           Accepted by {data.acceptance.typedName}, <Moment iso={data.acceptance.at} />.{' '}

@@ -1,9 +1,12 @@
-import { useId, useState } from 'react';
+import { useId, useState, type ReactNode } from 'react';
 import type { Agreement, Step } from '@/api-types/agreement';
 import type { VersionDetail } from '@/api-types/versions';
 import { Peg, statePeg } from '../ui/Peg';
 import { STATE_WORDS } from '../ui/version-words';
 import { Wrong } from '../ui/Wrong';
+import { ChoicePicker } from '../choices/ChoicePicker';
+import { pickableOf } from '../choices/choice-words';
+import { useChoices, usePicking } from '../choices/use-choices';
 import { useAgreement, useSteps } from './agreement';
 import { currentPlanNote, FIRM_STATES } from './state-words';
 
@@ -30,13 +33,27 @@ export function FirmSteps({ version }: { version: VersionDetail }) {
   const [asking, setAsking] = useState<keyof typeof OFFERS | null>(null);
   const steps = useSteps(version.id);
   const { data } = agreement;
+  const { data: before } = useChoices(version.projectId);
+  const picking = usePicking(version.projectId);
+  // Until something is ticked or moved the choices stay as they are, with this version after them.
+  const [picked, setPicked] = useState<readonly string[] | null>(null);
+  const offered = [...(before?.versions ?? []), ...(before?.others ?? [])].filter(
+    ({ id }) => id !== version.id,
+  );
+  const thisOne = pickableOf(version);
+  const takenBack =
+    version.state === 'shared' && before?.others.some(({ id }) => id === version.id);
   return (
     <section aria-label="Agreement" className="border-y border-graphite py-3">
       <p className="flex items-center gap-3">
         <Peg look={statePeg(version.state)} />
         <strong data-testid="state">{STATE_WORDS[version.state]}</strong>
       </p>
-      <p className="mt-1">{FIRM_STATES[version.state]}</p>
+      <p className="mt-1">
+        {takenBack
+          ? 'The client can look at it, but it is not among the choices, so they cannot accept it.'
+          : FIRM_STATES[version.state]}
+      </p>
       {data && <Standing agreement={data} />}
       <Wrong error={agreement.error} again={() => void agreement.refetch()} />
       {data && (
@@ -57,11 +74,47 @@ export function FirmSteps({ version }: { version: VersionDetail }) {
           version={version}
           offer={OFFERS[asking]}
           busy={steps[asking].isPending}
-          onSend={(note) => steps[asking].mutate({ note }, { onSuccess: () => setAsking(null) })}
+          onSend={(note) =>
+            steps[asking].mutate(
+              { note },
+              {
+                onSuccess: () => {
+                  if (asking === 'share' && picked) {
+                    picking.pick.mutate({ versionIds: [...picked], note: before?.picked?.note });
+                  }
+                  setPicked(null);
+                  setAsking(null);
+                },
+              },
+            )
+          }
           onLeave={() => setAsking(null)}
-        />
+        >
+          {asking === 'share' && offered.length > 0 && (
+            <fieldset className="mt-3">
+              <legend className="field-label">
+                What the client chooses from then, in this order
+              </legend>
+              <ChoicePicker
+                versions={[...offered.map(pickableOf), thisOne]}
+                picked={picked ?? [...(before?.versions ?? []).map(({ id }) => id), version.id]}
+                onPick={setPicked}
+                fixed={version.id}
+              />
+            </fieldset>
+          )}
+        </NoteForm>
       )}
       <Wrong error={steps.share.error ?? steps.issue.error} className="mt-2" />
+      {picking.pick.error && (
+        <p role="alert" className="mt-2 text-brick">
+          The version is shared, but the choices stayed as they were: {picking.pick.error.message}{' '}
+          <a className="link" href={`/projects/${version.projectId}`}>
+            Pick them on the project’s page
+          </a>
+          .
+        </p>
+      )}
     </section>
   );
 }
@@ -131,12 +184,14 @@ function NoteForm({
   busy,
   onSend,
   onLeave,
+  children,
 }: {
   version: VersionDetail;
   offer: (typeof OFFERS)[keyof typeof OFFERS];
   busy: boolean;
   onSend: (note: string) => void;
   onLeave: () => void;
+  children?: ReactNode;
 }) {
   const [note, setNote] = useState('');
   const id = useId();
@@ -160,6 +215,7 @@ function NoteForm({
         value={note}
         onChange={(event) => setNote(event.target.value)}
       />
+      {children}
       <div className="mt-2 flex gap-2">
         <button className="button button-primary" disabled={busy}>
           {busy ? 'Sending …' : offer.act}

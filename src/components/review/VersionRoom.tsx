@@ -13,7 +13,7 @@ import { OnSite } from '../site-progress/OnSite';
 import { Queries } from '../ui/Queries';
 import { useAgreement } from './agreement';
 import { type ChangePin } from './AskChangeForm';
-import { Choices, type LayoutName } from './Choices';
+import { Choices } from './Choices';
 import { ClientAnswer } from './ClientAnswer';
 import { FirmSteps } from './FirmSteps';
 import { NewerVersion } from './NewerVersion';
@@ -24,7 +24,6 @@ import { VersionFloor } from './VersionFloor';
 interface Props {
   readonly version: VersionDetail;
   readonly role: Role;
-  readonly layouts: readonly LayoutName[];
   /** The thread that a link leads to. */
   readonly thread: string | null;
   /** The designer's figures, drawn by the page. */
@@ -44,7 +43,7 @@ export default function VersionRoom(props: Props) {
 
 type Picking = 'comment' | 'change' | null;
 
-function Room({ version: first, role, layouts, thread, children, tools }: Props) {
+function Room({ version: first, role, thread, children, tools }: Props) {
   const client = role === 'client';
   const { data: version } = useQuery({
     queryKey: ['version', first.id],
@@ -125,7 +124,7 @@ function Room({ version: first, role, layouts, thread, children, tools }: Props)
         <OnSite version={version} role={role} />
         {client && <ClientQuote versionId={version.id} />}
         {client && <PlainFigures version={version} />}
-        <Choices version={version} layouts={layouts} client={client} agreement={agreement.data} />
+        <Choices version={version} client={client} agreement={agreement.data} />
         <Comments
           versionId={version.id}
           spot={spot}

@@ -19,7 +19,7 @@ const layout = {
   versions: [version],
   present: [],
 };
-const BEFORE = { projectId: 'p1', stamp: '1', layouts: [layout] } as LiveState;
+const BEFORE = { projectId: 'p1', stamp: '1', layouts: [layout], choices: null } as LiveState;
 const now = (change: object) => ({ ...BEFORE, stamp: '2', layouts: [{ ...layout, ...change }] });
 
 describe('what changed in a project', () => {
@@ -30,6 +30,7 @@ describe('what changed in a project', () => {
       versions: [],
       comments: [],
       site: [],
+      choices: false,
     });
   });
 
@@ -38,27 +39,50 @@ describe('what changed in a project', () => {
     expect(liveChanges(BEFORE, now({ draft }) as LiveState).layouts).toEqual(['l1']);
     const second = { ...version, id: 'v2', number: 2, state: 'saved' };
     const added = liveChanges(BEFORE, now({ versions: [second, version] }) as LiveState);
-    expect(added).toEqual({ layouts: ['l1'], versions: ['v2'], comments: ['v2'], site: ['v2'] });
+    expect(added).toEqual({
+      layouts: ['l1'],
+      versions: ['v2'],
+      comments: ['v2'],
+      site: ['v2'],
+      choices: false,
+    });
     const accepted = liveChanges(
       BEFORE,
       now({ versions: [{ ...version, state: 'accepted' }] }) as LiveState,
     );
-    expect(accepted).toEqual({ layouts: [], versions: ['v1'], comments: [], site: [] });
+    expect(accepted).toEqual({
+      layouts: [],
+      versions: ['v1'],
+      comments: [],
+      site: [],
+      choices: false,
+    });
     const said = liveChanges(
       BEFORE,
       now({ versions: [{ ...version, commentsStamp: 'd' }] }) as LiveState,
     );
-    expect(said).toEqual({ layouts: [], versions: [], comments: ['v1'], site: [] });
+    expect(said).toEqual({ layouts: [], versions: [], comments: ['v1'], site: [], choices: false });
     const laid = liveChanges(
       BEFORE,
       now({ versions: [{ ...version, siteEntries: 1 }] }) as LiveState,
     );
-    expect(laid).toEqual({ layouts: [], versions: [], comments: [], site: ['v1'] });
+    expect(laid).toEqual({ layouts: [], versions: [], comments: [], site: ['v1'], choices: false });
+  });
+
+  it('tells that the choices were picked anew', () => {
+    const picked = liveChanges(BEFORE, { ...BEFORE, stamp: '2', choices: 'c1' });
+    expect(picked).toEqual({ layouts: [], versions: [], comments: [], site: [], choices: true });
   });
 
   it('notices a layout that is gone', () => {
     const gone = liveChanges(BEFORE, { ...BEFORE, layouts: [] });
-    expect(gone).toEqual({ layouts: ['l1'], versions: ['v1'], comments: ['v1'], site: ['v1'] });
+    expect(gone).toEqual({
+      layouts: ['l1'],
+      versions: ['v1'],
+      comments: ['v1'],
+      site: ['v1'],
+      choices: false,
+    });
   });
 });
 
