@@ -24,8 +24,8 @@ export interface MailPreferences {
 /** POST /api/account/password. 200 → `{}`; every other session of the person ends. */
 export const passwordChangeSchema = z.object({
   current: z
-    .string({ error: 'Give your password as it is' })
-    .min(1, 'Give your password as it is')
+    .string({ error: 'Give your present password' })
+    .min(1, 'Give your present password')
     .max(200),
   password: newPassword,
 });

@@ -34,13 +34,13 @@ export const GREATEST_MINOR = 10_000_000_000;
 export const minorSchema = z
   .number({ error: 'Give an amount of money' })
   .int('Give a whole number of the smallest coin')
-  .min(0, 'An amount cannot be below nothing')
-  .max(GREATEST_MINOR, 'That is more money than can be reckoned with here');
+  .min(0, 'An amount cannot be less than 0')
+  .max(GREATEST_MINOR, 'That is more money than Evenlay can work with');
 
 const positive = (what: string, most: number, unit: string) =>
   z
     .number({ error: `Give ${what} as a number` })
-    .positive(`${what[0].toUpperCase()}${what.slice(1)} must be more than nothing`)
+    .positive(`${what[0].toUpperCase()}${what.slice(1)} must be more than 0`)
     .max(most, `${what[0].toUpperCase()}${what.slice(1)} is over ${most} ${unit}`)
     .nullable();
 
@@ -62,7 +62,7 @@ const fields = z.object({
     .max(60, 'Keep the pack’s name to 60 characters'),
   packHolds: z
     .number({ error: 'Give how much a pack holds' })
-    .positive('A pack must hold more than nothing')
+    .positive('A pack must hold more than 0')
     .max(1_000_000, 'A pack cannot hold over 1,000,000'),
   packMeasure: z.enum(packMeasures, { error: 'Choose each, m, m2, m3, t or kg' }),
   packWhole: z.boolean({ error: 'Say whether only whole packs are sold' }),
@@ -71,7 +71,7 @@ const fields = z.object({
   thickness: side('the thickness'),
   tolerance: z
     .number({ error: 'Give the tolerance as a number' })
-    .min(0, 'The tolerance cannot be below nothing')
+    .min(0, 'The tolerance cannot be less than 0')
     .max(100, 'The tolerance is over 100 mm')
     .nullable(),
   massKg: positive('the mass', 20_000, 'kg'),
@@ -80,7 +80,7 @@ const fields = z.object({
     .regex(/^#[0-9a-f]{6}$/i, 'must be a colour such as #e9e4d8')
     .nullable(),
   looseDensity: positive('the loose density', 10_000, 'kg/m³'),
-  stoneLeast: z.number().min(0, 'A stone cannot be below nothing').max(1000).nullable(),
+  stoneLeast: z.number().min(0, 'A stone cannot be smaller than 0').max(1000).nullable(),
   stoneGreatest: positive('the largest stone', 1000, 'mm'),
   note: z.string().trim().max(1000, 'Keep the note to 1,000 characters'),
 });

@@ -6,7 +6,7 @@ const basisPoints = (what: string, most: number) =>
   z
     .number({ error: `Give ${what} as a number` })
     .int(`Give ${what} with at most two decimals`)
-    .min(0, `${what[0].toUpperCase()}${what.slice(1)} cannot be below nothing`)
+    .min(0, `${what[0].toUpperCase()}${what.slice(1)} cannot be less than 0`)
     .max(most, `${what[0].toUpperCase()}${what.slice(1)} is over ${most / 100} %`);
 
 const line = (most: number) => z.string().trim().max(most, `Keep it to ${most} characters`);

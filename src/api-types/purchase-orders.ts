@@ -17,14 +17,14 @@ export const purchaseLineSchema = z.object({
   code: z.string().trim().max(60, 'Keep the code to 60 characters'),
   pack: z.object({
     name: z.string().trim().min(1, 'Say what is bought at once').max(60),
-    holds: z.number().positive('A pack must hold more than nothing').max(1_000_000),
+    holds: z.number().positive('A pack must hold more than 0').max(1_000_000),
     measure: z.enum(packMeasures),
     whole: z.boolean(),
   }),
   /** So many packs. */
   amount: z
     .number({ error: 'Give an amount' })
-    .min(0, 'An amount cannot be below nothing')
+    .min(0, 'An amount cannot be less than 0')
     .max(1_000_000, 'That is over a million'),
   /** For one pack without tax, as expected; null when no price is named to the supplier. */
   costMinor: minorSchema.nullable(),

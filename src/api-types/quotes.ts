@@ -19,7 +19,7 @@ export type QuoteGroup = (typeof quoteGroups)[number];
 
 const amount = z
   .number({ error: 'Give an amount' })
-  .min(0, 'An amount cannot be below nothing')
+  .min(0, 'An amount cannot be less than 0')
   .max(10_000_000, 'That is over ten million');
 
 export const quoteLineSchema = z.object({
@@ -52,7 +52,7 @@ const draftFields = z.object({
     .refine(
       (lines) =>
         lines.every(({ amount, costMinor }) => amount * (costMinor ?? 0) <= GREATEST_LINE_MINOR),
-      { error: 'has a line of more money than can be reckoned with here' },
+      { error: 'has a line of more money than Evenlay can work with' },
     ),
   margin: z
     .object({ of: z.enum(['cost', 'price']), share: marginBasisPoints })

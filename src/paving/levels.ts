@@ -9,6 +9,8 @@ import type { DocumentProblem } from './document-problem';
 
 /** No level lies farther than this from the datum, mm. */
 export const GREATEST_LEVEL_MM = 10_000;
+/** Units stand proud of the finish by no more than this before they are compacted, mm. */
+export const GREATEST_PROUD_MM = 100;
 /** As far from the origin as any coordinate of a document, mm. */
 const GREATEST_PLACE_MM = 100_000_000;
 /** More spots than this are a survey for another program. */
@@ -68,7 +70,7 @@ export const levelsSchema = z.object({
   proud: z
     .number({ error: 'must be a number of millimetres' })
     .min(0, 'must be 0 mm or more')
-    .max(100, 'is over 100 mm')
+    .max(GREATEST_PROUD_MM, `is over ${GREATEST_PROUD_MM} mm`)
     .default(0),
   /** Measured levels of the existing ground, in the order in which they were taken. */
   spots: z.array(spotSchema).max(GREATEST_SPOTS, `are more than ${GREATEST_SPOTS}`).default([]),

@@ -139,7 +139,7 @@ export const changePassword = async (
     .from(people)
     .where(eq(people.id, person.id));
   if (!(await passwordFits(row.passwordHash, current))) {
-    const message = 'This is not your password as it is';
+    const message = 'That is not your present password';
     return invalid(message, [{ path: ['current'], message }]);
   }
   await forgetAttempts(db, attempt);

@@ -71,7 +71,7 @@ export function levelWarnings(
   if (overdigLeftOut) {
     warn(
       'overdigLeftOut',
-      'The overdig could not be drawn round this outline, and is not in the volumes. Reckon it by hand, or set it to nothing.',
+      'The overdig could not be drawn round this outline, and is not in the volumes. Work it out by hand, or set it to 0.',
     );
   }
   if (spots.length === 0) {

@@ -31,7 +31,7 @@ const US_UNITS: readonly {
     size: MM_PER_INCH,
     decimals: 0,
     words: (figure) =>
-      figure === 0 ? 'nothing' : formatLength(figure * MM_PER_INCH, 'imperial', { decimals: 1 }),
+      figure === 0 ? '0' : formatLength(figure * MM_PER_INCH, 'imperial', { decimals: 1 }),
   },
 ];
 

@@ -22,7 +22,7 @@ export function MoneyField({
         const parsed = parseMoney(text, currency);
         if (!parsed.ok) return parsed;
         return parsed.minor < 0
-          ? { ok: false, message: 'An amount cannot be below nothing.' }
+          ? { ok: false, message: 'An amount cannot be less than 0.' }
           : { ok: true, value: parsed.minor };
       }}
       onValue={onMinor}

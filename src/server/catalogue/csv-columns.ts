@@ -47,7 +47,7 @@ const numberRead = (cell: string): Cell => {
       `“${cell}” could be ${plain.replace(/,/g, '')} or ${plain.replace(',', '.')}. Write it without a comma.`,
     );
   }
-  if (/^[-−]\d/.test(plain)) return wrong(`“${cell}” is below nothing. Write one such as 12.5.`);
+  if (/^[-−]\d/.test(plain)) return wrong(`“${cell}” is less than 0. Write one such as 12.5.`);
   const number = Number(plain.replace(/^(\d*),(\d+)$/, '$1.$2'));
   return /^\d*[.,]?\d+([eE][-+]?\d+)?$|^\d+[.,]$/.test(plain) && Number.isFinite(number)
     ? value(number)

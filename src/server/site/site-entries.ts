@@ -113,7 +113,11 @@ export const keepSiteEntries = async (
       const fault = faultOf(content, versionId, document);
       const put = fault === null ? await putEntry(tx, actor, versionId, device, entry) : null;
       if (put === null) refused.push({ id, reason: fault! });
-      else if (put === 'taken') refused.push({ id, reason: 'This entry is known as another one.' });
+      else if (put === 'taken')
+        refused.push({
+          id,
+          reason: 'This was written down before with other words. Enter it again.',
+        });
       else kept.push(id);
       if (put === 'new' && content.kind === 'proposal') {
         await postProposalLetters(tx, actor, site.value.version, content.text);

@@ -23,7 +23,7 @@ const photoRow = async (db: Db, firmId: string, entryId: string) =>
   )[0];
 
 const takenId = () =>
-  invalid('This photo is known as another entry.', [
+  invalid('This photo was kept before as another entry. Take it again.', [
     { path: ['id'], message: 'is the id of another entry' },
   ]);
 

@@ -75,7 +75,7 @@ describe('on a floor in feet and inches', () => {
     [['materials', 'base', 'density'], 20, 'Must be at least 6.3\u202flb/ft³.'],
     [['order', 'bag'], 400, 'Must be at most 220.4\u202flb.'],
     [['order', 'bag'], 0.1, 'Must be at least 2.3\u202flb.'],
-    [['materials', 'voids', 'depth'], -3, 'Must be more than nothing.'],
+    [['materials', 'voids', 'depth'], -3, 'Must be more than 0.'],
     [['materials', 'voids', 'depth'], 5000, 'Must be at most 6\' 6".'],
     [['order', 'spares', 'value'], 120, 'Must be at most 100 %.'],
   ])('%j of %d is refused in its own measures', (field, value, words) => {

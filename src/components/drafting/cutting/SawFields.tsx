@@ -64,7 +64,7 @@ export function SawFields({ terms, display, currency, firmHour, onTerms }: Props
               const parsed = parseMoney(text, currency);
               return parsed.ok ? { ok: true, value: parsed.minor } : parsed;
             }}
-            refuse={(minor) => (minor < 0 ? 'An hour costs nothing or more.' : null)}
+            refuse={(minor) => (minor < 0 ? 'An hour cannot cost less than 0.' : null)}
             onValue={(hourMinor) => onTerms({ ...terms, hourMinor })}
           />
         )}

@@ -6,13 +6,14 @@ import {
   documentLevels,
   GREATEST_FALL_PERCENT,
   GREATEST_LEVEL_MM,
+  GREATEST_PROUD_MM,
   type Fall,
   type Levels,
 } from '@/paving/levels';
 import { groundMiddle } from '@/paving/placement-edits';
 import { LengthField } from '../../ui/LengthField';
 import { NumberField } from '../../ui/NumberField';
-import { coordinateRefused } from '../field-limits';
+import { coordinateRefused, lengthWithin } from '../field-limits';
 import { placingLeft, placingStarted } from '../level-actions';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 import type { Placing } from '../table-store';
@@ -26,13 +27,10 @@ const FALLS: readonly (readonly [Fall['kind'], string])[] = [
 
 const percentRefused = (percent: number) =>
   percent <= 0
-    ? 'Must be more than nothing. For none, choose “Level all over”.'
+    ? 'Must be more than 0 %. For none, choose “Level all over”.'
     : percent > GREATEST_FALL_PERCENT
       ? `Steeper than ${GREATEST_FALL_PERCENT} % is a stair.`
       : null;
-
-const levelRefused = (mm: number) =>
-  Math.abs(mm) > GREATEST_LEVEL_MM ? 'That is over 10 m from the edge.' : null;
 
 /** The finish against the edge's top, and how the floor falls. */
 export function FinishFields() {
@@ -55,14 +53,14 @@ export function FinishFields() {
           label="Finish above the edge (− is below)"
           mm={finish}
           display={display}
-          refuse={levelRefused}
+          refuse={lengthWithin(display, -GREATEST_LEVEL_MM, GREATEST_LEVEL_MM)}
           onLength={(mm) => change({ finish: mm })}
         />
         <LengthField
           label="Units stand proud until compacted by"
           mm={proud}
           display={display}
-          refuse={(mm) => (mm < 0 || mm > 100 ? 'Between nothing and 100 mm.' : null)}
+          refuse={lengthWithin(display, 0, GREATEST_PROUD_MM)}
           onLength={(mm) => change({ proud: mm })}
         />
       </div>

@@ -8,12 +8,10 @@ import { buildUpDepth, thickestUnit } from '@/takeoff/earth-cells';
 import { LengthField } from '../../ui/LengthField';
 import { Segmented } from '../../ui/Segmented';
 import { SheetPicture } from '../../ui/SheetPicture';
+import { lengthWithin } from '../field-limits';
 import { useShownFloor, useTableStore } from '../table-context';
 
 const PICTURE = { left: 1, top: 1, right: 83, bottom: 59 };
-
-const layerRefused = (mm: number) =>
-  mm < 0 ? 'A layer is nothing or more.' : mm > GREATEST_LAYER_MM ? 'That is over 2 m.' : null;
 
 /** The layers from the unit down, with what is published for them, and their section. */
 export function LayerFields() {
@@ -31,7 +29,7 @@ export function LayerFields() {
         label={label}
         mm={buildUp[name]}
         display={display}
-        refuse={layerRefused}
+        refuse={lengthWithin(display, 0, GREATEST_LAYER_MM)}
         onLength={(mm) => change({ [name]: mm })}
       />
       <p className="mt-1 text-sm text-slate">{hint}</p>

@@ -5,7 +5,7 @@ import { levelText } from '@/paving/level-text';
 import { documentLevels, GREATEST_LEVEL_MM } from '@/paving/levels';
 import { spotName } from '@/takeoff/level-warnings';
 import { LengthField } from '../../ui/LengthField';
-import { coordinateRefused } from '../field-limits';
+import { coordinateRefused, lengthWithin } from '../field-limits';
 import { spotPlacedInView, spotTaken } from '../level-actions';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 import { PointButton } from './FinishFields';
@@ -132,7 +132,7 @@ function SpotRow({ index }: { index: number }) {
             inputRef={level}
             mm={spot.level}
             display={document.display}
-            refuse={(mm) => (Math.abs(mm) > GREATEST_LEVEL_MM ? 'That is over 10 m.' : null)}
+            refuse={lengthWithin(document.display, -GREATEST_LEVEL_MM, GREATEST_LEVEL_MM)}
             onLength={(mm) => change({ level: mm })}
           />
         </div>

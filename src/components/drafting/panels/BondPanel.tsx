@@ -7,6 +7,7 @@ import { Segmented } from '../../ui/Segmented';
 import { PLAIN_AGGREGATE } from '../../ui/drawing-colours';
 import { BondPicture } from '../BondPicture';
 import { CatalogueChoice } from '../CatalogueChoice';
+import { gapRefused } from '../field-limits';
 import { FloorFigures } from '../FloorFigures';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 import { CustomBond } from './CustomBond';
@@ -107,7 +108,6 @@ function BondFields() {
     table
       .getState()
       .edit((now) => ({ ...now, bond: { ...now.bond, ...part } as LayoutDocument['bond'] }));
-  const jointRefused = (mm: number) => (mm < 0 || mm > 10_000 ? 'Between nothing and 10 m.' : null);
 
   if (bond.kind === 'custom') return <CustomBond bond={bond} />;
   const unit = documentUnit(document, bond.unit);
@@ -124,11 +124,7 @@ function BondFields() {
                 mm={bond.pitch[axis] - side}
                 display={display}
                 refuse={(mm) =>
-                  mm <= 0
-                    ? 'Stepping units must not touch.'
-                    : side + mm > 10_000
-                      ? 'That is over 10 m.'
-                      : null
+                  mm <= 0 ? 'Stepping units must not touch.' : gapRefused(display)(side + mm)
                 }
                 onLength={(mm) =>
                   edit({
@@ -144,7 +140,7 @@ function BondFields() {
           label="Joint"
           mm={bond.joint}
           display={display}
-          refuse={jointRefused}
+          refuse={gapRefused(display)}
           onLength={(joint) => edit({ joint })}
         />
       )}

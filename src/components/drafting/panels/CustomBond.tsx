@@ -4,7 +4,7 @@ import type { Bond, MotifEntry } from '@/paving/layout-document';
 import { LengthField } from '../../ui/LengthField';
 import { NumberField } from '../../ui/NumberField';
 import { BondCanvas } from '../BondCanvas';
-import { lengthRefused } from '../field-limits';
+import { gapRefused, stepRefused } from '../field-limits';
 import { useShownFloor, useTableStore } from '../table-context';
 
 type Custom = Extract<Bond, { kind: 'custom' }>;
@@ -34,7 +34,7 @@ export function CustomBond({ bond }: { bond: Custom }) {
               <LengthField
                 key={axis}
                 label={`Step ${name}, ${axis === 0 ? 'across' : 'up'}`}
-                refuse={lengthRefused}
+                refuse={stepRefused(display)}
                 mm={bond[name][axis]}
                 display={display}
                 onLength={(mm) =>
@@ -68,7 +68,7 @@ export function CustomBond({ bond }: { bond: Custom }) {
             <LengthField
               label={`Unit ${index + 1} across`}
               hideLabel
-              refuse={lengthRefused}
+              refuse={stepRefused(display)}
               mm={m.at[0]}
               display={display}
               onLength={(mm) => entry(index, { at: [mm, m.at[1]] })}
@@ -76,7 +76,7 @@ export function CustomBond({ bond }: { bond: Custom }) {
             <LengthField
               label={`Unit ${index + 1} up`}
               hideLabel
-              refuse={lengthRefused}
+              refuse={stepRefused(display)}
               mm={m.at[1]}
               display={display}
               onLength={(mm) => entry(index, { at: [m.at[0], mm] })}
@@ -122,7 +122,7 @@ export function CustomBond({ bond }: { bond: Custom }) {
         label="Joint, for reading the gaps"
         mm={bond.joint ?? 0}
         display={display}
-        refuse={(mm) => (mm < 0 ? 'Nothing or more.' : null)}
+        refuse={gapRefused(display)}
         onLength={(joint) => edit({ joint })}
       />
     </section>

@@ -20,7 +20,7 @@ import { formatLength } from '@/paving/length';
 import { LengthField } from '../../ui/LengthField';
 import { NumberField } from '../../ui/NumberField';
 import { Segmented } from '../../ui/Segmented';
-import { coordinateRefused, edgeRefused } from '../field-limits';
+import { coordinateRefused, edgeRefused, gapRefused } from '../field-limits';
 import { FloorProblems } from '../FloorFigures';
 import { groundKeptInView } from '../FloorStage';
 import {
@@ -321,7 +321,7 @@ export function GroundPanel() {
           label="Clearance: least gap to the edge and keep-outs"
           mm={document.clearance}
           display={document.display}
-          refuse={(mm) => (mm < 0 || mm > 10_000 ? 'Between nothing and 10 m.' : null)}
+          refuse={gapRefused(document.display)}
           onLength={(mm) => table.getState().edit((now) => ({ ...now, clearance: mm }))}
         />
         <label className="flex min-h-11 items-center gap-2">

@@ -1,13 +1,14 @@
 import { useState } from 'react';
 import type { CatalogueItem } from '@/api-types/catalogue';
 import { unitChanged, mainUnitId } from '@/paving/bond-edits';
-import type { LayoutDocument, Unit } from '@/paving/layout-document';
-import { formatLength, formatSize } from '@/paving/length';
+import { GREATEST_UNIT_MM, type LayoutDocument, type Unit } from '@/paving/layout-document';
+import { formatLength, formatSize, type Display } from '@/paving/length';
 import { STARTER_CATALOGUE, type CatalogueUnit } from '@/paving/starter-catalogue';
 import { LengthField } from '../../ui/LengthField';
 import { Segmented } from '../../ui/Segmented';
 import { PLAIN_UNIT } from '../../ui/drawing-colours';
 import { CatalogueChoice } from '../CatalogueChoice';
+import { lengthWithin } from '../field-limits';
 import { FloorFigures } from '../FloorFigures';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 
@@ -32,8 +33,8 @@ function UnitPicture({ unit }: { unit: Pick<Unit, 'length' | 'width' | 'colour'>
   );
 }
 
-const sizeRefused = (mm: number) =>
-  mm <= 0 ? 'Must be more than nothing.' : mm > 10_000 ? 'That is over 10 m.' : null;
+const sizeRefused = (display: Display) => (mm: number) =>
+  mm <= 0 ? 'Must be more than 0.' : lengthWithin(display, 0, GREATEST_UNIT_MM)(mm);
 
 export function UnitPanel() {
   const table = useTableStore();
@@ -188,7 +189,7 @@ function UnitFields({
             label={{ length: 'Length', width: 'Width', thickness: 'Thickness' }[side]}
             mm={unit[side]}
             display={display}
-            refuse={sizeRefused}
+            refuse={sizeRefused(display)}
             onLength={(mm) => {
               const next = unitChanged(document, unit.id, { [side]: mm }).document.units.find(
                 (other) => other.id === unit.id,

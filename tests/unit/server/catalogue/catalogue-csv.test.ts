@@ -65,7 +65,7 @@ describe('a file that can be read', () => {
     expect(items[0].price).toEqual({ costMinor: 200, from });
   });
 
-  test('asks for a day that could be two, and says of a number below nothing that it is', () => {
+  test('asks for a day that could be two, and says of a number less than 0 that it is', () => {
     const { problems } = planned(
       'Kind,Name,Pack holds,Price,Price from\nsundry,Pegs,1,2,01/12/2026\nsundry,String,-3,2,\n',
     );
@@ -75,7 +75,7 @@ describe('a file that can be read', () => {
         column: 'Price from',
         message: '“01/12/2026” could be 2026-12-01 or 2026-01-12. Write it like one of these.',
       },
-      { line: 3, column: 'Pack holds', message: '“-3” is below nothing. Write one such as 12.5.' },
+      { line: 3, column: 'Pack holds', message: '“-3” is less than 0. Write one such as 12.5.' },
     ]);
   });
 
@@ -157,9 +157,9 @@ describe('rows that are wrong are listed with line, column and reason', () => {
     ['sundry,,,,,,,,,,', 'Name', /Give it a name/],
     ['sundry,Pegs,lots,,,,,,,,', 'Pack holds', /“lots” is not a number/],
     ['sundry,Pegs,"1,500",,,,,,,,', 'Pack holds', /could be 1500 or 1.500/],
-    ['sundry,Pegs,0,,,,,,,,', 'Pack holds', /more than nothing/],
+    ['sundry,Pegs,0,,,,,,,,', 'Pack holds', /more than 0/],
     ['sundry,Pegs,,12.345,,,,,,,', 'Price', /“12.345” is not a price/],
-    ['sundry,Pegs,,-3,,,,,,,', 'Price', /below nothing|not a price/],
+    ['sundry,Pegs,,-3,,,,,,,', 'Price', /less than 0|not a price/],
     ['sundry,Pegs,,3,2026-02-30,,,,,,', 'Price from', /not a day/],
     ['sundry,Pegs,,,2026-02-01,,,,,,', 'Price from', /has no price/],
     ['unit,Slab,,,,450,,50,,,', 'Width', /A unit needs its width/],
