@@ -160,6 +160,6 @@ export function parseMoney(text: string, currency: string): ParsedMoney {
   const minor = Number(
     `${match[2] === '' ? '0' : match[2]}${part.slice(0, exponent).padEnd(exponent, '0')}`,
   );
-  if (!Number.isSafeInteger(minor)) return fail('That is more money than can be reckoned with.');
+  if (!Number.isSafeInteger(minor)) return fail('That is more money than Evenlay can work with.');
   return { ok: true, minor: match[1] && minor !== 0 ? -minor : minor };
 }

@@ -3,11 +3,16 @@ import { useEffect, useRef, useState } from 'react';
 import type { JointFit } from '@/paving/fit/joint-range';
 import { formatLength } from '@/paving/length';
 import { LengthField } from '../../ui/LengthField';
+import { lengthWithin } from '../field-limits';
 import { useTable, useTableStore } from '../table-context';
 import { newHand, dismissed, type Hand } from './fit-hand';
 
 /** Joints that the trade allows for blocks: 2 to 5 mm (construction tolerances for interlocking pavements, ICPI). */
 const FIRST_RANGE = { from: 2, to: 5, step: 0.25 };
+
+/** Bounds of what may be typed: wider than this is no joint, finer steps than that nobody can lay. */
+const GREATEST_JOINT_MM = 500;
+const LEAST_STEP_MM = 0.01;
 
 /** Seeks the joint, within a range, at which one more row closes or the field ends evenly. */
 export function JointRange() {
@@ -66,7 +71,9 @@ export function JointRange() {
             display={display}
             decimals={2}
             refuse={(mm) =>
-              mm < 0 || mm > 500 || (part === 'step' && mm < 0.01) ? 'Not a joint.' : null
+              part === 'step' && mm < LEAST_STEP_MM
+                ? 'That step is too fine to be laid.'
+                : lengthWithin(display, 0, GREATEST_JOINT_MM)(mm)
             }
             onLength={(mm) => setRange({ ...range, [part]: mm })}
           />
