@@ -105,14 +105,21 @@ export function moneyAllotted(total: number, weights: readonly number[]): number
   return total < 0 ? parts.map((part) => (part === 0 ? 0 : -part)) : parts;
 }
 
+/** Symbols that were asked of Intl before: to ask takes longer than all else of writing an amount. */
+const SYMBOLS = new Map<string, string>();
+
 /** `£`, `$`, `KWD`: before the figures. */
 export function currencySymbol(currency: string): string {
+  const known = SYMBOLS.get(currency);
+  if (known !== undefined) return known;
   const parts = new Intl.NumberFormat('en', {
     style: 'currency',
     currency,
     currencyDisplay: 'narrowSymbol',
   }).formatToParts(0);
-  return parts.find(({ type }) => type === 'currency')?.value ?? currency;
+  const symbol = parts.find(({ type }) => type === 'currency')?.value ?? currency;
+  SYMBOLS.set(currency, symbol);
+  return symbol;
 }
 
 /** `£1 234.50`, `¥980`, `KWD 3.125`, `−$0.05`. */
@@ -132,7 +139,7 @@ export type ParsedMoney =
 /** Reads `1,234.50`, `£12`, `12,5`: minor units, or what would do. */
 export function parseMoney(text: string, currency: string): ParsedMoney {
   const exponent = currencyExponent(currency);
-  const example = `${(1234).toLocaleString('en')}${exponent > 0 ? `.${'50'.padEnd(exponent, '0').slice(0, exponent)}` : ''}`;
+  const example = `1,234${exponent > 0 ? `.${'50'.padEnd(exponent, '0').slice(0, exponent)}` : ''}`;
   const fail = (message = `Type an amount such as ${example}.`): ParsedMoney => ({
     ok: false,
     message,

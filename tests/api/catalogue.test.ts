@@ -260,6 +260,16 @@ describe('ten thousand items', () => {
     expect((await imported(firm, 'take', csv(25))).body).toMatchObject({ taken: true, changed: COUNT }); // prettier-ignore
   }, 120_000);
 
+  test('are planned anew when the catalogue was changed meanwhile: two at a time add each once', async () => {
+    const other = await newFirm();
+    const file = `Kind,Name\n${Array.from({ length: 3000 }, (_, n) => `sundry,Thing ${n}`).join('\n')}`;
+    const both = await Promise.all([imported(other, 'take', file), imported(other, 'take', file)]);
+    expect(both.map(({ body }) => [body.taken, body.added, body.same]).sort()).toEqual([
+      [true, 0, 3000],
+      [true, 3000, 0],
+    ]);
+  }, 120_000);
+
   test('are paged by key, none twice and none left out, and found by beginnings of words', async () => {
     const names = (await everything(firm)).map(({ name }) => name);
     expect(names).toHaveLength(COUNT);

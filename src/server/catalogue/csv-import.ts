@@ -1,4 +1,4 @@
-import { asc, eq, sql } from 'drizzle-orm';
+import { and, asc, eq, gt, sql } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { ImportOutlook, ImportProblem, importQuerySchema } from '@/api-types/catalogue';
 import { catalogueItems, cataloguePrices, suppliers } from '@/db/schema';
@@ -8,29 +8,83 @@ import { newId } from '../ids';
 import { done, type Outcome } from '../outcomes';
 import { refuseUnlessPricing, type Actor } from '../permissions';
 import { isUniqueViolation } from '../postgres-errors';
+import { rowsInserted } from '../rows-inserted';
+import { rest, stepsWithRests } from '../steps';
 import { today } from '../today';
 import { lockCatalogue } from './catalogue-lock';
-import { catalogueFileRead } from './csv-reading';
-import { importPlan, type ImportPlan, type KnownCatalogue, type PlannedItem } from './import-plan';
+import { catalogueFileSteps } from './csv-reading';
+import { importSteps, type ImportPlan, type KnownCatalogue, type PlannedItem } from './import-plan';
 import { fieldsOf } from './item-rows';
 import { currencyOf } from './pricing-settings';
 
-/** Rows put in at a time: PostgreSQL takes at most 65,535 values a statement. */
-const ROWS_AT_ONCE = 500;
+/** Rows put in and read at a time: after so many, others have their turn on the thread. */
+const ROWS_AT_ONCE = 250;
+const ROWS_READ_AT_ONCE = 1000;
 /** Rows and problems that are shown; the counts are of all. */
 const SHOWN = 300;
 
-const knownCatalogue = async (db: Db, firmId: string, from: string): Promise<KnownCatalogue> => {
-  const rows = await db.select().from(catalogueItems).where(eq(catalogueItems.firmId, firmId));
-  const prices = await db
+/** Of everything that an import is planned by: another one says that something was changed. */
+const catalogueStamp = async (db: Db, firmId: string): Promise<string> => {
+  const [{ items }] = await db
     .select({
-      itemId: cataloguePrices.itemId,
-      costMinor: cataloguePrices.costMinor,
-      from: cataloguePrices.fromDay,
+      items: sql<string>`concat(count(*), ' ', sum(${catalogueItems.revision}), ' ', max(${catalogueItems.updatedAt}))`,
     })
+    .from(catalogueItems)
+    .where(eq(catalogueItems.firmId, firmId));
+  const [{ prices }] = await db
+    .select({ prices: sql<string>`concat(count(*), ' ', max(${cataloguePrices.at}))` })
     .from(cataloguePrices)
-    .where(eq(cataloguePrices.firmId, firmId))
-    .orderBy(asc(cataloguePrices.fromDay), asc(cataloguePrices.place));
+    .where(eq(cataloguePrices.firmId, firmId));
+  const [{ sellers }] = await db
+    .select({
+      sellers: sql<string>`concat(count(*), ' ', sum(${suppliers.revision}), ' ', max(${suppliers.createdAt}))`,
+    })
+    .from(suppliers)
+    .where(eq(suppliers.firmId, firmId));
+  return [items, prices, sellers, await currencyOf(db, firmId)].join(', ');
+};
+
+/** All rows of a table by id, some at a time. */
+const everyRow = async <T extends { readonly id: string }>(
+  some: (after: string) => Promise<T[]>,
+): Promise<T[]> => {
+  const all: T[] = [];
+  for (;;) {
+    const rows = await some(all.at(-1)?.id ?? '');
+    all.push(...rows);
+    if (rows.length < ROWS_READ_AT_ONCE) return all;
+    await rest();
+  }
+};
+
+const knownCatalogue = async (db: Db, firmId: string, from: string): Promise<KnownCatalogue> => {
+  const rows = await everyRow((after) =>
+    db
+      .select()
+      .from(catalogueItems)
+      .where(and(eq(catalogueItems.firmId, firmId), gt(catalogueItems.id, after)))
+      .orderBy(asc(catalogueItems.id))
+      .limit(ROWS_READ_AT_ONCE),
+  );
+  const entered = await everyRow((after) =>
+    db
+      .select({
+        id: cataloguePrices.id,
+        itemId: cataloguePrices.itemId,
+        costMinor: cataloguePrices.costMinor,
+        from: cataloguePrices.fromDay,
+        place: cataloguePrices.place,
+      })
+      .from(cataloguePrices)
+      .where(and(eq(cataloguePrices.firmId, firmId), gt(cataloguePrices.id, after)))
+      .orderBy(asc(cataloguePrices.id))
+      .limit(ROWS_READ_AT_ONCE),
+  );
+  const prices = entered
+    .sort((one, other) =>
+      one.from === other.from ? one.place - other.place : one.from < other.from ? -1 : 1,
+    )
+    .map(({ itemId, costMinor, from: day }) => ({ itemId, costMinor, from: day }));
   const ofItem = new Map<string, typeof prices>();
   for (const price of prices) {
     const own = ofItem.get(price.itemId);
@@ -76,6 +130,7 @@ const outlookOf = (
 const inParts = async <T>(all: readonly T[], put: (part: T[]) => Promise<unknown>) => {
   for (let from = 0; from < all.length; from += ROWS_AT_ONCE) {
     await put(all.slice(from, from + ROWS_AT_ONCE));
+    await rest();
   }
 };
 
@@ -85,30 +140,41 @@ const addSuppliers = async (tx: Db, firmId: string, names: readonly string[]) =>
   return added;
 };
 
-/** What an import writes over in an item that is there already. */
-const WRITTEN = {
-  kind: sql`excluded.kind`,
-  name: sql`excluded.name`,
-  code: sql`excluded.code`,
-  supplierId: sql`excluded.supplier_id`,
-  packName: sql`excluded.pack_name`,
-  packHolds: sql`excluded.pack_holds`,
-  packMeasure: sql`excluded.pack_measure`,
-  packWhole: sql`excluded.pack_whole`,
-  length: sql`excluded.length`,
-  width: sql`excluded.width`,
-  thickness: sql`excluded.thickness`,
-  tolerance: sql`excluded.tolerance`,
-  massKg: sql`excluded.mass_kg`,
-  colour: sql`excluded.colour`,
-  looseDensity: sql`excluded.loose_density`,
-  stoneLeast: sql`excluded.stone_least`,
-  stoneGreatest: sql`excluded.stone_greatest`,
-  note: sql`excluded.note`,
-  revision: sql`excluded.revision`,
-  retiredAt: sql`case when excluded.retired_at is null then null
-    else coalesce(${catalogueItems.retiredAt}, excluded.retired_at) end`,
-  updatedAt: sql`excluded.updated_at`,
+/** What an import writes of an item. */
+const WRITTEN = [
+  'kind',
+  'name',
+  'code',
+  'supplierId',
+  'packName',
+  'packHolds',
+  'packMeasure',
+  'packWhole',
+  'length',
+  'width',
+  'thickness',
+  'tolerance',
+  'massKg',
+  'colour',
+  'looseDensity',
+  'stoneLeast',
+  'stoneGreatest',
+  'note',
+  'revision',
+  'updatedAt',
+] as const satisfies readonly (keyof typeof catalogueItems.$inferInsert)[];
+
+/** Puts items in, those that are there already over what was there; `retiredAt` stays where it was. */
+const itemsPut = (tx: Db, rows: readonly (typeof catalogueItems.$inferInsert)[]) => {
+  const names = ['id', 'firmId', ...WRITTEN, 'retiredAt'] as const;
+  const over = WRITTEN.map((name) => {
+    const column = sql.identifier(catalogueItems[name].name);
+    return sql`${column} = excluded.${column}`;
+  });
+  return tx.execute(sql`${rowsInserted(catalogueItems, names, rows)}
+    on conflict (id) do update set ${sql.join(over, sql`, `)},
+    retired_at = case when excluded.retired_at is null then null
+      else coalesce(${catalogueItems.retiredAt}, excluded.retired_at) end`);
 };
 
 const putIn = async (tx: Db, actor: Actor, plan: ImportPlan, known: KnownCatalogue) => {
@@ -128,12 +194,7 @@ const putIn = async (tx: Db, actor: Actor, plan: ImportPlan, known: KnownCatalog
     retiredAt: retired ? now : null,
     updatedAt: now,
   });
-  await inParts(written, (part) =>
-    tx
-      .insert(catalogueItems)
-      .values(part.map(row))
-      .onConflictDoUpdate({ target: catalogueItems.id, set: WRITTEN }),
-  );
+  await inParts(written, (part) => itemsPut(tx, part.map(row)));
   const last = new Map(known.items.map(({ id, prices }) => [id, prices.length]));
   const prices = written.flatMap(({ id, price }) =>
     price
@@ -151,7 +212,8 @@ const putIn = async (tx: Db, actor: Actor, plan: ImportPlan, known: KnownCatalog
         ]
       : [],
   );
-  await inParts(prices, (part) => tx.insert(cataloguePrices).values(part));
+  const priceNames = ['id', 'firmId', 'itemId', 'fromDay', 'place', 'costMinor', 'setBy', 'at'] as const; // prettier-ignore
+  await inParts(prices, (part) => tx.execute(rowsInserted(cataloguePrices, priceNames, part)));
 };
 
 /** Spreadsheets write UTF-8, UTF-16 with its mark, or Windows' own letters. */
@@ -182,24 +244,26 @@ export const importCatalogue = async (
   if (refusal) return refusal;
   const text = fileText(file);
   const planned = async (tx: Db) => {
+    const stamp = await catalogueStamp(tx, actor.firmId);
     const known = await knownCatalogue(tx, actor.firmId, from);
-    const read = catalogueFileRead(text, known.currency);
-    const plan = importPlan(read.rows, known);
+    const read = await stepsWithRests(catalogueFileSteps(text, known.currency));
+    const plan = await stepsWithRests(importSteps(read.rows, known));
     return {
+      stamp,
       known,
       unknownColumns: read.unknownColumns,
       plan: { ...plan, problems: [...read.problems, ...plan.problems] },
     };
   };
-  if (how === 'look') {
-    const { plan, unknownColumns } = await planned(db);
-    return done(outlookOf(plan, unknownColumns, false));
-  }
+  // Before the lock, so that nobody waits for it meanwhile; under the lock it is asked whether it still holds.
+  const before = await planned(db);
+  if (how === 'look') return done(outlookOf(before.plan, before.unknownColumns, false));
   let clashed: ImportOutlook | undefined;
   try {
     return await db.transaction(async (tx): Promise<Outcome<ImportOutlook>> => {
       await lockCatalogue(tx, actor.firmId);
-      const { known, plan, unknownColumns } = await planned(tx);
+      const holds = (await catalogueStamp(tx, actor.firmId)) === before.stamp;
+      const { known, plan, unknownColumns } = holds ? before : await planned(tx);
       if (plan.problems.length > 0) return done(outlookOf(plan, unknownColumns, false));
       clashed = outlookOf({ ...plan, problems: [clash] }, unknownColumns, false);
       await putIn(tx, actor, plan, known);

@@ -1,5 +1,6 @@
 import Papa from 'papaparse';
 import type { ImportProblem } from '@/api-types/catalogue';
+import { stepsRun, type Steps } from '../steps';
 import { cellText, columnNamed, type Column, type Field } from './csv-columns';
 
 /** A row of a file that could be read cell by cell; what the file has no column for is not in `values`. */
@@ -52,8 +53,13 @@ const delimiterOf = (csv: string): string => {
 };
 
 /** Takes a catalogue's file apart: commas, semicolons or tabs between cells, headings in the first line. */
-export const catalogueFileRead = (csv: string, currency: string): ReadFile => {
+export const catalogueFileRead = (csv: string, currency: string): ReadFile =>
+  stepsRun(catalogueFileSteps(csv, currency));
+
+/** The same, a row a step. */
+export function* catalogueFileSteps(csv: string, currency: string): Steps<ReadFile> {
   const text = csv.replace(/^\ufeff/, '');
+  yield;
   const parsed = Papa.parse<string[]>(text, { delimiter: delimiterOf(text) });
   const lined = linedRows(parsed.data);
   const broken = parsed.errors.find(({ type }) => type === 'Quotes');
@@ -75,12 +81,17 @@ export const catalogueFileRead = (csv: string, currency: string): ReadFile => {
   }
   const twice = columns.find((column, n) => column && columns.indexOf(column) !== n);
   if (twice) return fileWrong(head.line, `There are two columns for “${twice.heading}”.`);
+  const rows: ReadRow[] = [];
+  for (const { line, cells } of body) {
+    rows.push(rowRead(line, cells, columns, currency));
+    yield;
+  }
   return {
-    rows: body.map(({ line, cells }) => rowRead(line, cells, columns, currency)),
+    rows,
     problems: [],
     unknownColumns: head.cells.filter((heading, n) => !columns[n] && heading.trim() !== ''),
   };
-};
+}
 
 const rowRead = (
   line: number,

@@ -8,6 +8,7 @@ import {
 } from '@/api-types/catalogue';
 import { dayText } from '@/takeoff/day-text';
 import { formatMoney } from '@/takeoff/money';
+import { stepsRun, type Steps } from '../steps';
 import { COLUMNS, type Field } from './csv-columns';
 import type { ReadRow } from './csv-reading';
 
@@ -67,7 +68,11 @@ const ITEM_FIELDS = COLUMNS.map(({ field }) => field).filter(
  * What a file would do, row by row, without doing it. A row is of an item that its reference names, else of the one offered
  * under its name by its supplier, else new. Columns that the file lacks leave an item as it is.
  */
-export const importPlan = (rows: readonly ReadRow[], known: KnownCatalogue): ImportPlan => {
+export const importPlan = (rows: readonly ReadRow[], known: KnownCatalogue): ImportPlan =>
+  stepsRun(importSteps(rows, known));
+
+/** The same, a row a step. */
+export function* importSteps(rows: readonly ReadRow[], known: KnownCatalogue): Steps<ImportPlan> {
   const byId = new Map(known.items.map((item) => [item.id, item]));
   const supplierNames = new Map(known.suppliers.map(({ id, name }) => [id, name]));
   const nameOf = (id: string | null) => (id === null ? '' : (supplierNames.get(id) ?? ''));
@@ -173,9 +178,10 @@ export const importPlan = (rows: readonly ReadRow[], known: KnownCatalogue): Imp
       }
     }
     problems.push(...own);
+    yield;
   }
   return { items, problems, newSuppliers: [...newSuppliers.values()] };
-};
+}
 
 const changesOf = (
   item: KnownItem | undefined,
