@@ -16,8 +16,11 @@ const body = z
 export const newCommentSchema = z.object({ body, pin: spotSchema.nullable().default(null) });
 export type NewComment = z.input<typeof newCommentSchema>;
 
-/** POST /api/threads/{id}/replies. 201 → `Thread`. A reply to a resolved thread opens it again. */
-export const newReplySchema = z.object({ body });
+/**
+ * POST /api/threads/{id}/replies. 201 → `Thread`. A reply to a resolved thread opens it again. Who replies has read the
+ * thread up to the comment `upTo`, the last that was shown; all of it, if that is left out.
+ */
+export const newReplySchema = z.object({ body, upTo: z.string().max(64).optional() });
 export type NewReply = z.input<typeof newReplySchema>;
 
 /** PATCH /api/threads/{id}: by who began it, or by the firm’s owner and designers. 200 → `Thread`. */
@@ -62,7 +65,7 @@ export interface Threads {
   readonly threads: readonly Thread[];
 }
 
-/** GET /api/versions/{id}/mentionable → `{ people: Mentionable[] }`: who sees this version, by name. */
+/** GET /api/versions/{id}/mentionable → `{ people: Mentionable[] }`: who else sees this version, by name. */
 export interface Mentionable extends PersonName {
   readonly role: Role;
 }

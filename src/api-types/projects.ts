@@ -55,8 +55,19 @@ export type ProjectQuery = z.input<typeof projectQuerySchema>;
 
 export interface ProjectPage {
   readonly projects: readonly ProjectSummary[];
+  /** How many there are on all pages together, counted with the first page; null with those after it. */
+  readonly total: ProjectTotal | null;
   /** Ask for the next page `after` this; null at the end. */
   readonly next: string | null;
+}
+
+/** No more than these are counted: counting must not grow with a firm. */
+export const MOST_COUNTED = 1000;
+
+export interface ProjectTotal {
+  readonly count: number;
+  /** Whether there are more than `count`. */
+  readonly more: boolean;
 }
 
 /** A project in a list. */

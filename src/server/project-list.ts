@@ -1,10 +1,12 @@
-import { and, asc, desc, eq, sql } from 'drizzle-orm';
+import { and, asc, count, desc, eq, sql } from 'drizzle-orm';
 import type { z } from 'zod';
 import {
+  MOST_COUNTED,
   projectStages,
   type ProjectPage,
   type projectQuerySchema,
   type ProjectSummary,
+  type ProjectTotal,
 } from '@/api-types/projects';
 import { projects } from '@/db/schema';
 import type { Db } from './database';
@@ -38,6 +40,15 @@ const ARCHIVED = {
   all: undefined,
 } as const;
 
+/** Of `projects` rows: those that the list asks for, and that the actor sees. */
+const asked = (actor: Actor, query: Query, stage: Stage | undefined) =>
+  and(
+    projectSeen(actor),
+    ARCHIVED[query.archived],
+    stage === undefined ? undefined : eq(seenStage(actor), stage),
+    wordsMatch(projects.words, query.search),
+  );
+
 const rowsOf = async (
   db: Db,
   actor: Actor,
@@ -56,15 +67,7 @@ const rowsOf = async (
   return db
     .select({ project: projects, key: exactly(sql`${by}`) })
     .from(projects)
-    .where(
-      and(
-        projectSeen(actor),
-        ARCHIVED[query.archived],
-        stage === undefined ? undefined : eq(seenStage(actor), stage),
-        wordsMatch(projects.words, query.search),
-        after ?? undefined,
-      ),
-    )
+    .where(and(asked(actor, query, stage), after ?? undefined))
     .orderBy(direction(by), direction(projects.id))
     .limit(limit);
 };
@@ -75,6 +78,20 @@ const readKey = (query: Query): { stage: Stage | undefined; key: Key | null } =>
   const key = keyRead(row);
   const fits = key !== null && (!ORDERS[orderOf(query)].moment || MOMENT.test(key.at));
   return { stage: projectStages.find((known) => known === stage), key: fits ? key : null };
+};
+
+/** Counts no further than to `MOST_COUNTED`, in the order of an index of all. */
+const totalOf = async (db: Db, actor: Actor, query: Query): Promise<ProjectTotal> => {
+  const { by, moment } = ORDERS[orderOf(query)];
+  const some = db
+    .select({ id: projects.id })
+    .from(projects)
+    .where(asked(actor, query, query.stage))
+    .orderBy(moment ? desc(by) : asc(by))
+    .limit(MOST_COUNTED + 1)
+    .as('some');
+  const [{ found }] = await db.select({ found: count() }).from(some);
+  return { count: Math.min(found, MOST_COUNTED), more: found > MOST_COUNTED };
 };
 
 /** One page of the projects that the actor sees. */
@@ -102,6 +119,7 @@ export const projectPage = async (db: Db, actor: Actor, query: Query): Promise<P
       actor,
       page.map(({ project }) => project),
     ),
+    total: from.key ? null : await totalOf(db, actor, query),
     next:
       rows.length > query.size && last
         ? `${last.stage ?? ''}.${keyWritten({ at: last.key, id: last.project.id })}`

@@ -137,7 +137,7 @@ export const layoutThreads = async (
   return done({ threads: await threadsWhere(db, actor, eq(comments.layoutId, layoutId)) });
 };
 
-/** Who can be mentioned in comments on a version: everybody who sees it. */
+/** Whom the actor can mention in comments on a version: everybody else who sees it. */
 export const mentionable = async (
   db: Db,
   actor: Actor,
@@ -145,7 +145,7 @@ export const mentionable = async (
 ): Promise<Outcome<{ people: Mentionable[] }>> => {
   const version = await seenVersion(db, actor, versionId);
   if (!version) return notFound('version');
-  const people = await onlookersOf(db, version);
+  const people = await onlookersOf(db, version, actor.personId);
   return done({ people: people.map(({ id, name, role }) => ({ id, name, role })) });
 };
 
@@ -268,11 +268,19 @@ const lockThread = async (tx: Db, actor: Actor, id: string): Promise<Date> => {
   return new Date(Math.max(Date.now(), last.getTime() + 1));
 };
 
+/** Notes a thread as read up to one of its comments; never back again. */
+const noteRead = (db: Db, actor: Actor, threadId: string, upTo: string) =>
+  db.execute(sql`insert into ${commentReads} (firm_id, thread_id, person_id, read_at)
+    select ${actor.firmId}, ${threadId}, ${actor.personId}, ${comments.at} from ${comments}
+    where ${comments.firmId} = ${actor.firmId} and ${comments.threadId} = ${threadId} and ${comments.id} = ${upTo}
+    on conflict (firm_id, person_id, thread_id)
+    do update set read_at = greatest(${commentReads.readAt}, excluded.read_at)`);
+
 export const reply = async (
   db: Db,
   actor: Actor,
   threadId: string,
-  { body }: z.output<typeof newReplySchema>,
+  { body, upTo }: z.output<typeof newReplySchema>,
 ): Promise<Outcome<Thread>> => {
   const seen = await seenThread(db, actor, threadId);
   if (!seen) return notFound('comment');
@@ -293,6 +301,7 @@ export const reply = async (
       body,
       at,
     });
+    await noteRead(tx, actor, threadId, upTo ?? id);
     await noteMentions(tx, actor, version, id, body);
     await settle(tx, actor, threadId, false);
     await recordAudit(
@@ -346,7 +355,7 @@ export const changeThread = async (
   return readThread(db, actor, id);
 };
 
-/** Marks what is in a thread as read, up to the comment that was shown last; never back again. */
+/** Marks what is in a thread as read, up to the comment that was shown last. */
 export const markThreadRead = async (
   db: Db,
   actor: Actor,
@@ -355,10 +364,6 @@ export const markThreadRead = async (
 ): Promise<Outcome<Thread>> => {
   const seen = await seenThread(db, actor, id);
   if (!seen) return notFound('comment');
-  await db.execute(sql`insert into ${commentReads} (firm_id, thread_id, person_id, read_at)
-    select ${actor.firmId}, ${id}, ${actor.personId}, ${comments.at} from ${comments}
-    where ${comments.firmId} = ${actor.firmId} and ${comments.threadId} = ${id} and ${comments.id} = ${upTo}
-    on conflict (firm_id, person_id, thread_id)
-    do update set read_at = greatest(${commentReads.readAt}, excluded.read_at)`);
+  await noteRead(db, actor, id, upTo);
   return readThread(db, actor, id);
 };

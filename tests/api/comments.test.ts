@@ -39,6 +39,27 @@ test('a pin stays at its spot of the ground, and an unpinned comment has none', 
   expect(ofLayout.body.threads).toEqual(threads);
 });
 
+test('who replies has read what they reply to, and no more than was shown', async () => {
+  const office = await newOffice();
+  const id = await versionThatIs(office, 'shared');
+  const thread = await say(office.client, id, 'Why here?');
+  const [mine, theirs] = [office.designer, office.owner];
+  await answerTo(mine, thread, 'For the drain');
+  expect((await threadsOf(mine, id))[0].unread).toBe(0);
+  expect((await mine.visitor.get('/api/unread')).body.threads).toEqual([]);
+  // The owner's page shows the first comment alone, since the answer has come meanwhile.
+  const late = await theirs.visitor.post(`/api/threads/${thread.id}/replies`, {
+    body: 'Because of the drain',
+    upTo: thread.id,
+  });
+  expect(late.body.unread).toBe(1);
+  expect(late.body.comments.map(({ unread }: { unread: boolean }) => unread)).toEqual([
+    false,
+    true,
+    false,
+  ]);
+});
+
 test.each([
   ['nothing', { body: '  ' }],
   ['half a pin', { body: 'x', pin: [1] }],
@@ -132,11 +153,8 @@ describe('mentions', () => {
     expect(written[0].text).toContain('look');
     const offered = (await office.client.visitor.get(`/api/versions/${id}/mentionable`)).body
       .people;
-    expect(offered.map(({ role }: { role: string }) => role).sort()).toEqual([
-      'client',
-      'designer',
-      'owner',
-    ]);
+    // Everybody else who sees the version: nobody calls themselves.
+    expect(offered.map(({ role }: { role: string }) => role).sort()).toEqual(['designer', 'owner']);
   });
 });
 

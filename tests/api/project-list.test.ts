@@ -74,6 +74,16 @@ describe('what lists hold', () => {
     expect(touched).toEqual([...touched].sort().reverse());
   });
 
+  test('the first page says how many there are in all, of what is asked and seen', async () => {
+    const total = async (who: Signed, query: string) => (await page(who, query)).total;
+    expect(await total(owner, 'size=2')).toEqual({ count: NAMES.length, more: false });
+    expect(await total(owner, 'size=2&archived=only')).toEqual({ count: 1, more: false });
+    expect(await total(owner, 'size=1&search=court')).toEqual({ count: 2, more: false });
+    expect((await total(client, 'size=1'))?.count).toBe((await page(client, '')).projects.length);
+    const { next } = await page(owner, 'size=2');
+    expect((await page(owner, `size=2&after=${next}`)).total).toBeNull();
+  });
+
   test('page by page every project comes once, in the same order, whatever the list and the page', async () => {
     await fc.assert(
       fc.asyncProperty(

@@ -89,7 +89,7 @@ export function ThreadView({ thread, number, people, actions, picked, onPick }: 
             autoFocus
             onCancel={() => setReplying(false)}
             onSend={async (body) => {
-              await actions.reply.mutateAsync({ id: thread.id, body });
+              await actions.reply.mutateAsync({ id: thread.id, body, upTo });
               setReplying(false);
             }}
           />

@@ -14,7 +14,7 @@ import { Segmented } from '../ui/Segmented';
 import { SelectField } from '../ui/SelectField';
 import { STATE_WORDS } from '../ui/version-words';
 import { Wrong } from '../ui/Wrong';
-import { isNarrowed, lookAsked, lookWritten, type ListLook } from './list-query';
+import { isNarrowed, lookAsked, lookWritten, shownWords, type ListLook } from './list-query';
 import { ProjectGrid } from './ProjectGrid';
 import { ProjectTable } from './ProjectTable';
 import { UnreadComments } from './UnreadComments';
@@ -68,6 +68,7 @@ function List({ look: firstLook, first, role, any }: Props) {
     placeholderData: (before) => before,
   });
   const projects = list.data?.pages.flatMap((page) => page.projects) ?? [];
+  const total = list.data?.pages[0]?.total ?? null;
   const change = (part: Partial<ListLook>) => setLook((now) => ({ ...now, ...part }));
 
   if (!any) return <NothingYet role={role} />;
@@ -81,10 +82,10 @@ function List({ look: firstLook, first, role, any }: Props) {
         onChange={change}
         drafting={drafting}
       />
-      <p role="status" className="sr-only">
-        {list.isFetching
-          ? 'Reading the list'
-          : `${projects.length} ${projects.length === 1 ? 'project' : 'projects'} shown`}
+      <p role="status" className="mt-4 min-h-6 text-slate" data-testid="shown">
+        {list.isPlaceholderData || !list.data
+          ? 'Reading the list …'
+          : projects.length > 0 && shownWords(projects.length, total)}
       </p>
       <Wrong error={list.error} again={() => void list.refetch()} className="mt-4" />
       <div className={list.isPlaceholderData ? 'opacity-60' : ''}>
@@ -112,14 +113,17 @@ function List({ look: firstLook, first, role, any }: Props) {
         />
       )}
       {list.hasNextPage && (
-        <button
-          type="button"
-          className="button mt-8"
-          disabled={list.isFetchingNextPage}
-          onClick={() => void list.fetchNextPage()}
-        >
-          {list.isFetchingNextPage ? 'Reading …' : 'Show more'}
-        </button>
+        <div className="mt-8 flex flex-wrap items-center gap-4">
+          <button
+            type="button"
+            className="button"
+            disabled={list.isFetchingNextPage}
+            onClick={() => void list.fetchNextPage()}
+          >
+            {list.isFetchingNextPage ? 'Reading …' : 'Show more'}
+          </button>
+          <span className="text-slate">{shownWords(projects.length, total)}</span>
+        </div>
       )}
     </>
   );

@@ -3,7 +3,9 @@ import {
   projectStages,
   type ProjectQuery,
   type ProjectSort,
+  type ProjectTotal,
 } from '@/api-types/projects';
+import { formatCount } from '@/paving/count';
 
 /** What a list of projects shows; kept in the page's address, so that a list can be gone back to and sent. */
 export interface ListLook {
@@ -63,3 +65,12 @@ export function lookAsked(look: ListLook, after: string): ProjectQuery {
 
 export const isNarrowed = (look: ListLook): boolean =>
   look.search.trim() !== '' || look.stage !== '';
+
+/** How far down the list one is: `48 of 137 projects`. */
+export function shownWords(shown: number, total: ProjectTotal | null): string {
+  const all = total?.count ?? shown;
+  const projects = (count: number) =>
+    `${formatCount(count)} ${count === 1 ? 'project' : 'projects'}`;
+  if (total?.more) return `${formatCount(shown)} of more than ${projects(all)}`;
+  return shown < all ? `${formatCount(shown)} of ${projects(all)}` : projects(shown);
+}

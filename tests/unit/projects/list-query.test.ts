@@ -1,6 +1,12 @@
 import { describe, expect, it } from 'vitest';
 import { projectQuerySchema } from '@/api-types/projects';
-import { lookAsked, lookRead, lookWritten, PLAIN_LOOK } from '@/components/projects/list-query';
+import {
+  lookAsked,
+  lookRead,
+  lookWritten,
+  PLAIN_LOOK,
+  shownWords,
+} from '@/components/projects/list-query';
 
 describe('the look of the list in its address', () => {
   it('comes back from the address as it went into it', () => {
@@ -22,5 +28,18 @@ describe('the look of the list in its address', () => {
     );
     expect(wild).toEqual({ ...PLAIN_LOOK, search: 'x'.repeat(120) });
     expect(projectQuerySchema.safeParse(lookAsked(wild, '')).success).toBe(true);
+  });
+});
+
+describe('how far down the list one is', () => {
+  it('is said with the total, where there is more than is shown', () => {
+    expect(shownWords(24, { count: 137, more: false })).toBe('24 of 137 projects');
+    expect(shownWords(1, { count: 1, more: false })).toBe('1 project');
+    expect(shownWords(48, { count: 1000, more: true })).toBe('48 of more than 1 000 projects');
+  });
+
+  it('never says less than is shown, when projects came meanwhile', () => {
+    expect(shownWords(9, { count: 8, more: false })).toBe('9 projects');
+    expect(shownWords(9, null)).toBe('9 projects');
   });
 });
