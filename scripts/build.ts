@@ -22,7 +22,7 @@ const newest = (file: string): number => {
 };
 
 /** Whether `dist/` is missing or older than what it is built from. */
-export const buildIsStale = (): boolean =>
+const buildIsStale = (): boolean =>
   !existsSync(STAMP) ||
   statSync(STAMP).mtimeMs < Math.max(...SOURCES.map((name) => newest(path.join(ROOT, name))));
 
@@ -33,7 +33,7 @@ const environmentOfBuild = (): NodeJS.ProcessEnv =>
   Object.fromEntries(Object.entries(process.env).filter(([name]) => !FLAGS.includes(name)));
 
 /** Runs Astro's command line in this project and waits for it; throws when it fails. */
-export const runAstro = (...args: string[]): Promise<void> =>
+const runAstro = (...args: string[]): Promise<void> =>
   new Promise((resolve, reject) => {
     const astro = path.join(ROOT, 'node_modules', 'astro', 'astro.js');
     const child = spawn(process.execPath, [astro, ...args], {

@@ -28,7 +28,7 @@ export const daySchema = z
   .refine((day) => day >= '1990-01-01' && day < '2200-01-01', 'Give a day from 1990 to 2199');
 
 /** Ten thousand million of the smallest coin, far from where whole numbers end in a double. */
-export const GREATEST_MINOR = 10_000_000_000;
+const GREATEST_MINOR = 10_000_000_000;
 
 /** Money in whole minor units of the firm's currency. */
 export const minorSchema = z
@@ -175,7 +175,7 @@ export interface CatalogueItem extends ItemFields {
   readonly updatedAt: string;
 }
 
-export const itemSorts = ['name', 'updated'] as const;
+const itemSorts = ['name', 'updated'] as const;
 export type ItemSort = (typeof itemSorts)[number];
 
 /** GET /api/catalogue?search=…&kind=…&supplier=…&retired=…&sort=…&size=…&after=… → `CataloguePage`. */

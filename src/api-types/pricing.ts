@@ -20,7 +20,7 @@ export const taxBasisPoints = basisPoints('the tax rate', 10_000);
 export const marginBasisPoints = basisPoints('the margin', 100_000);
 
 /** A currency that this machine knows, ISO 4217. */
-export const currencySchema = z
+const currencySchema = z
   .string({ error: 'Choose a currency' })
   .regex(/^[A-Z]{3}$/, 'A currency is three capital letters, such as EUR')
   .refine(

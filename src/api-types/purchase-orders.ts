@@ -4,7 +4,7 @@ import { daySchema, minorSchema, packMeasures } from './catalogue';
 import type { PersonName } from './people';
 import type { FirmOnPaper, VersionOnPaper } from './quotes';
 
-export const purchaseLineSchema = z.object({
+const purchaseLineSchema = z.object({
   /** Of the take-off's order that it serves, or one of its own. */
   id: z.string().min(1).max(200),
   /** The catalogue's entry; null for a line written by hand. */

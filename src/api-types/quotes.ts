@@ -22,7 +22,7 @@ const amount = z
   .min(0, 'An amount cannot be less than 0')
   .max(10_000_000, 'That is over ten million');
 
-export const quoteLineSchema = z.object({
+const quoteLineSchema = z.object({
   id: z.string().min(1).max(200),
   group: z.enum(quoteGroups, { error: 'Choose materials, labour or other' }),
   name: z

@@ -53,7 +53,7 @@ export const photoQuerySchema = entryFields.extend({
 export type PhotoQuery = z.input<typeof photoQuerySchema>;
 
 /** GET /api/site-photos/{id}?size=… → the image, as JPEG without anything but its pixels. */
-export const photoSizes = ['phone', 'full'] as const;
+const photoSizes = ['phone', 'full'] as const;
 export type PhotoSize = (typeof photoSizes)[number];
 export const photoSizeQuerySchema = z.object({ size: z.enum(photoSizes).default('full') });
 

@@ -4,15 +4,8 @@ import type { Figures } from '@/paving/figure-comparison';
 import type { Report } from '@/paving/report';
 import type { PersonName } from './people';
 
-export const versionEventKinds = [
-  'saved',
-  'shared',
-  'accepted',
-  'change_asked',
-  'issued',
-  'superseded',
-] as const;
-export type VersionEventKind = (typeof versionEventKinds)[number];
+export type VersionEventKind =
+  'saved' | 'shared' | 'accepted' | 'change_asked' | 'issued' | 'superseded';
 
 /** Where a version stands: the kind of the last event that changed it. */
 export type VersionState = VersionEventKind;

@@ -30,10 +30,7 @@ export function ringInHalfPlane(ring: readonly Point[], side: HalfPlane): readon
 }
 
 /** The ring's part in every one of the half planes. */
-export const ringInSides = (
-  ring: readonly Point[],
-  sides: readonly HalfPlane[],
-): readonly Point[] =>
+const ringInSides = (ring: readonly Point[], sides: readonly HalfPlane[]): readonly Point[] =>
   sides.reduce((part, side) => (part.length === 0 ? part : ringInHalfPlane(part, side)), ring);
 
 export interface PieceBox {

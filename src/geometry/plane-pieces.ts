@@ -75,7 +75,7 @@ const depth = ({ sides }: PlanePiece, point: Point): number =>
   );
 
 /** The piece that `point` lies in; on a border any of those that meet there. */
-export function pieceAt(surface: PieceSurface, point: Point): PlanePiece {
+function pieceAt(surface: PieceSurface, point: Point): PlanePiece {
   let best = surface[0];
   let deepest = -Infinity;
   for (const piece of surface) {

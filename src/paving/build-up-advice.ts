@@ -20,7 +20,7 @@ export const SOURCES = {
 } as const;
 
 /** Least thickness of the compacted base by use, mm: 4 in and 6 in (source: tolerances). */
-export const LEAST_BASE_MM: Readonly<Record<BuildUp['use'], number>> = { foot: 100, driveway: 150 };
+const LEAST_BASE_MM: Readonly<Record<BuildUp['use'], number>> = { foot: 100, driveway: 150 };
 /** The same as the source prints it for inches: 4 in and 6 in, not what 100 and 150 mm come to. */
 const LEAST_BASE_INCHES: Readonly<Record<BuildUp['use'], number>> = { foot: 4, driveway: 6 };
 
@@ -34,16 +34,16 @@ export const leastBaseWords = (use: BuildUp['use'], display: Display): string =>
 /** Nominal bedding, mm: 1 in (source: tolerances). */
 export const NOMINAL_BEDDING_MM = 25;
 /** Least thickness of a paver for feet or a driveway, mm: 2 3/8 in (source: tolerances). */
-export const LEAST_PAVER_MM = 60;
+const LEAST_PAVER_MM = 60;
 /** Length over thickness of a paver is at most this; what is longer is a slab (source: tolerances). */
-export const GREATEST_ASPECT = 4;
+const GREATEST_ASPECT = 4;
 /** Least thickness of a slab, mm: 1.2 in (source: slabs). */
-export const LEAST_SLAB_MM = 30;
+const LEAST_SLAB_MM = 30;
 /** Least fall for drainage, per cent (source: tolerances). */
-export const LEAST_FALL_PERCENT = 2;
+const LEAST_FALL_PERCENT = 2;
 /** Greatest fall across a way for wheelchairs, per cent: 1 in 48; and along it: 1 in 20 (source: ada). */
-export const GREATEST_CROSS_PERCENT = 100 / 48;
-export const GREATEST_RUNNING_PERCENT = 5;
+const GREATEST_CROSS_PERCENT = 100 / 48;
+const GREATEST_RUNNING_PERCENT = 5;
 
 export interface Advice {
   readonly kind:

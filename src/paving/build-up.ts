@@ -31,7 +31,7 @@ export const buildUpSchema = z.object({
 export type BuildUp = z.infer<typeof buildUpSchema>;
 
 /** What a document without a build-up is reckoned with: a foot-traffic floor. */
-export const PLAIN_BUILD_UP: BuildUp = buildUpSchema.parse({});
+const PLAIN_BUILD_UP: BuildUp = buildUpSchema.parse({});
 
 export const documentBuildUp = (document: { readonly buildUp?: BuildUp }): BuildUp =>
   document.buildUp ?? PLAIN_BUILD_UP;

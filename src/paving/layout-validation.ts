@@ -13,7 +13,7 @@ import { choiceTurned, datumProblems } from './set-out/datum-choice';
 export type { DocumentProblem } from './document-problem';
 
 /** A floor of more candidate units than this is refused. */
-export const GREATEST_CANDIDATES = 2_000_000;
+const GREATEST_CANDIDATES = 2_000_000;
 /** Addresses are kept as 32-bit whole numbers. */
 const GREATEST_ADDRESS = 2 ** 31 - 1;
 
@@ -73,7 +73,7 @@ const shownCount = (count: number) =>
  * How many units may have to be looked at, whatever the turn and the start: those that the
  * ground's area holds and those along its edges.
  */
-export function candidateUnits(document: LayoutDocument): number {
+function candidateUnits(document: LayoutDocument): number {
   const pattern = bondPattern(document);
   const cell = Math.abs(latticeCell(pattern));
   const rings = [document.ground.perimeter, ...document.ground.keepOuts.map(({ ring }) => ring)];

@@ -38,7 +38,7 @@ const at = z.tuple([place, place]);
 
 const direction = z.number({ error: 'must be a number of degrees' }).min(-3600).max(3600);
 
-export const fallSchema = z.discriminatedUnion(
+const fallSchema = z.discriminatedUnion(
   'kind',
   [
     z.object({ kind: z.literal('none') }),
@@ -81,7 +81,7 @@ export type Spot = z.infer<typeof spotSchema>;
 export type Levels = z.infer<typeof levelsSchema>;
 
 /** What a document without levels stands for: a flat floor flush with the edge, no spots taken. */
-export const PLAIN_LEVELS: Levels = levelsSchema.parse({});
+const PLAIN_LEVELS: Levels = levelsSchema.parse({});
 
 export const documentLevels = (document: { readonly levels?: Levels }): Levels =>
   document.levels ?? PLAIN_LEVELS;

@@ -110,7 +110,7 @@ export const materialsSchema = z.object({
     .optional(),
 });
 
-export const ORDER_WAYS = ['pack', 'each', 'volume', 'mass', 'bag', 'bulkBag', 'load', 'length', 'area'] as const; // prettier-ignore
+const ORDER_WAYS = ['pack', 'each', 'volume', 'mass', 'bag', 'bulkBag', 'load', 'length', 'area'] as const; // prettier-ignore
 /** How a thing is ordered. */
 export type OrderWay = (typeof ORDER_WAYS)[number];
 

@@ -16,7 +16,7 @@ import { groundRing, ringEdges, type GroundRing } from './ground';
 import type { LayoutDocument, Vertex } from './layout-document';
 
 /** The ground of one document may come to this many chords, arcs flattened. */
-export const GREATEST_CHORDS = 50_000;
+const GREATEST_CHORDS = 50_000;
 
 /** Area inside a ring with its arcs, mm², positive when it runs anticlockwise. */
 export function vertexRingArea(ring: readonly Vertex[]): number {

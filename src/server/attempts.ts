@@ -15,13 +15,13 @@ interface Limit {
 /** One person's password, tried from one address. */
 export const SIGN_IN_PAIR: Limit = { attempts: 8, windowMinutes: 15 };
 /** Any passwords, tried from one address. */
-export const SIGN_IN_ADDRESS: Limit = { attempts: 100, windowMinutes: 15 };
+const SIGN_IN_ADDRESS: Limit = { attempts: 100, windowMinutes: 15 };
 /** Firms made from one address. */
-export const SIGN_UP_ADDRESS: Limit = { attempts: 30, windowMinutes: 60 };
+const SIGN_UP_ADDRESS: Limit = { attempts: 30, windowMinutes: 60 };
 
 /** Letters for a new password asked for one person, and for anybody, from one address. */
 export const RESET_PAIR: Limit = { attempts: 4, windowMinutes: 60 };
-export const RESET_ADDRESS: Limit = { attempts: 30, windowMinutes: 60 };
+const RESET_ADDRESS: Limit = { attempts: 30, windowMinutes: 60 };
 
 type Kind = 'sign-in' | 'sign-up' | 'reset';
 

@@ -22,7 +22,7 @@ export const fingerprintOf = (document: unknown): string =>
   createHash('sha256').update(canonicalJson(document), 'utf8').digest('hex');
 
 /** As many digits as are printed on sheets: enough to tell a firm's versions apart by eye. */
-export const SHORT_FINGERPRINT_DIGITS = 10;
+const SHORT_FINGERPRINT_DIGITS = 10;
 
 export const shortFingerprint = (fingerprint: string): string =>
   fingerprint.slice(0, SHORT_FINGERPRINT_DIGITS);

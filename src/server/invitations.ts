@@ -14,7 +14,7 @@ import { newToken, tokenHash } from './tokens';
 const DAY_MS = 24 * 60 * 60_000;
 
 /** How long an invitation is open, days. */
-export const INVITATION_DAYS = 14;
+const INVITATION_DAYS = 14;
 
 /** Invitations that a firm may send in an hour: enough for any firm, and too few to send the world letters. */
 export const INVITATIONS_AN_HOUR = 60;

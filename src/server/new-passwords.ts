@@ -19,7 +19,7 @@ import { newToken, tokenHash } from './tokens';
 type Nothing = Record<string, never>;
 
 /** How long the link of a letter for a new password works, minutes. */
-export const RESET_MINUTES = 60;
+const RESET_MINUTES = 60;
 
 /** Sends a letter for a new password, if there is such an account. The answer does not tell. */
 export const forgottenPassword = async (

@@ -54,7 +54,7 @@ const textFaults = (value: unknown, path: (string | number)[] = []): FieldProble
 };
 
 /** What zod found wrong, as the field problems of a `Problem`. */
-export const fieldProblems = (error: z.ZodError): FieldProblem[] =>
+const fieldProblems = (error: z.ZodError): FieldProblem[] =>
   error.issues.map((issue) => ({
     path: issue.path.map((step) => (typeof step === 'symbol' ? String(step) : step)),
     message: issue.message,

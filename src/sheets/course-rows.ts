@@ -123,7 +123,7 @@ function headRow(title: string, words: string, width: number): PanelRow {
 }
 
 /** Which of a run's units have their running length given. */
-export const givenTicks = ({ ticks }: CourseRun, every: number): readonly number[] =>
+const givenTicks = ({ ticks }: CourseRun, every: number): readonly number[] =>
   ticks.map((_, n) => n).filter((n) => n === 0 || n === ticks.length - 1 || (n + 1) % every === 0);
 
 /** Boxes to tick in columns of one width, a few lines of them. */

@@ -17,7 +17,7 @@ import { paperFromGround, paperRing, type PlanView } from './plan-view';
 import { LETTERING, lineCorners, sheetText, textWidth } from './text-measure';
 
 /** The level map's own pens: black alone tells everything apart. */
-export const MAP_STROKES = {
+const MAP_STROKES = {
   cut: { width: PENS.fine, colour: SECOND_INK },
   fill: { width: PENS.fine, colour: INK },
   contour: { width: PENS.thin, colour: INK },

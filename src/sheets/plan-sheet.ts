@@ -31,7 +31,7 @@ const SOME_PARTS: readonly PlanPart[] = ['A1', 'C3'].map((name) => ({
   below: null,
 }));
 /** A smaller unit on paper than this, mm, asks for a larger sheet where one would be to a larger scale. */
-export const READABLE_UNIT = 3;
+const READABLE_UNIT = 3;
 
 /**
  * The plan of a version on the paper asked for, or with `auto` on the smallest of its family (A4 and A3;
@@ -102,5 +102,5 @@ function arrangementChosen(content: FiguredContent, { laying, paper }: PlanInput
   return enough ? small : large;
 }
 
-export const leastUnitSide = (laying: Laying): number =>
+const leastUnitSide = (laying: Laying): number =>
   Math.min(...laying.motif.map(({ unit }) => Math.min(unit.length, unit.width)));

@@ -90,7 +90,7 @@ export function paperChords(view: PlanView, edge: RingEdge): readonly PaperPoint
 }
 
 /** An arc on the paper; angles in radians, anticlockwise as seen. */
-export function arcOf(
+function arcOf(
   from: PaperPoint,
   to: PaperPoint,
   bulge: number,

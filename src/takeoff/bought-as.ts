@@ -1,7 +1,7 @@
 import { amountText } from './amount-text';
 import type { PackMeasure, PriceItem } from './price-list';
 
-export const MEASURE_SIGNS: Readonly<Record<PackMeasure, string>> = {
+const MEASURE_SIGNS: Readonly<Record<PackMeasure, string>> = {
   each: 'pieces',
   m: 'm',
   m2: 'm²',

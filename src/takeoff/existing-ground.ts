@@ -34,7 +34,7 @@ export interface ExistingGround {
 }
 
 /** The level that ground without spots is reckoned at: the datum's. */
-export const ASSUMED_GROUND_MM = 0;
+const ASSUMED_GROUND_MM = 0;
 
 /** Spots are joined on a grid of whole micrometres, on which spots in one line are exactly so. */
 const GRID_PER_MM = 1000;

@@ -30,7 +30,7 @@ export interface MaterialDefaults {
   readonly open: boolean;
 }
 
-export const COMMON_PRACTICE = 'common practice';
+const COMMON_PRACTICE = 'common practice';
 const HUD = 'HUD, Residential Structural Design Guide (2000), table 3.3';
 const EPA = 'US EPA, Standard Volume-to-Weight Conversion Factors (2006)';
 const NAVY = 'Navy Engineering Aid, table 10-1, the row for sand';

@@ -17,8 +17,8 @@ export const KG_PER_SHORT_TON = 907.18474;
 export const KG_PER_TONNE = 1000;
 /** 1 lb/ft³ in kg/m³. */
 export const POUNDS_PER_CUBIC_FOOT = KG_PER_POUND / M3_PER_CUBIC_FOOT;
-export const CUBIC_FEET_PER_CUBIC_YARD = 27;
-export const POUNDS_PER_SHORT_TON = 2000;
+const CUBIC_FEET_PER_CUBIC_YARD = 27;
+const POUNDS_PER_SHORT_TON = 2000;
 
 const THIN = '\u202f';
 

@@ -49,7 +49,7 @@ export function loadHolds(document: Pick<LayoutDocument, 'display' | 'order'>) {
 }
 
 /** Parts of a measure that are sold are not finer than this share of it. */
-export const MEASURE_STEP = 0.1;
+const MEASURE_STEP = 0.1;
 
 const HOLDER_NAMES: Readonly<Record<Holder, string>> = {
   bag: 'bag',

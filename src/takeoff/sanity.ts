@@ -13,11 +13,11 @@ import type { OrderLine, TakeOffLine, TakeOffWarning } from './take-off-line';
 import { bondUnits, unitMass } from './unit-lines';
 
 /** Heavier than this is a two-person or machine lift, kg: the load constant of NIOSH, 51 lb. */
-export const LIFT_KG = 23;
+const LIFT_KG = 23;
 const NIOSH =
   'NIOSH publication 94-110: 23\u202fkg (51\u202flb) is the most in the best of circumstances';
 /** A stone goes into a gap that is at least twice as wide. */
-export const STONE_SHARE = 1 / 2;
+const STONE_SHARE = 1 / 2;
 const HALF = 'common practice: a stone goes where the gap is twice as wide';
 const CMHA = 'CMHA, “Proper concrete paver base and depth”';
 /** Openings wider than this, mm, are none on an accessible route. */

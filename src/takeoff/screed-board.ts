@@ -31,7 +31,7 @@ export interface ScreedBoard {
 /** A board is cut so much shorter than the clear width, so that it can be worked from side to side, mm; common practice. */
 export const BOARD_SHORTER_MM = 300;
 /** The longest board that two people pull, mm; common practice. */
-export const LONGEST_BOARD_MM = 3000;
+const LONGEST_BOARD_MM = 3000;
 /** Each ear rests on the edge or rail by so much, mm; common practice. */
 const EAR_MM = 100;
 

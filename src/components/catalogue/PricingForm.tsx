@@ -47,7 +47,7 @@ const entryOf = (firm: FirmPricing): Entry => ({
 });
 
 /** A share typed in per cent as whole hundredths of one; null for what is no such number. */
-export const basisPointsRead = (text: string): number | null => {
+const basisPointsRead = (text: string): number | null => {
   const match = /^\s*(\d{1,4})(?:[.,](\d{1,2}))?\s*%?\s*$/.exec(text);
   return match ? Number(match[1]) * 100 + Number((match[2] ?? '').padEnd(2, '0')) : null;
 };

@@ -69,7 +69,7 @@ function hatching(
   return pattern ?? colour;
 }
 
-export const fateColour = (fate: Fate, colours: DrawingColours): string =>
+const fateColour = (fate: Fate, colours: DrawingColours): string =>
   fate === 'gone'
     ? colours.brick
     : fate === 'new'
@@ -271,5 +271,5 @@ export function paintOverlaid(
   paintGroundLines(picture, nearer);
 }
 
-export const sameGround = (a: Laying, b: Laying): boolean =>
+const sameGround = (a: Laying, b: Laying): boolean =>
   JSON.stringify(a.document.ground) === JSON.stringify(b.document.ground);

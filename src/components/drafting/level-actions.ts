@@ -17,7 +17,7 @@ const levelSoFar = (table: TableStore, at: Point): number =>
   );
 
 /** Puts a spot down and picks it; a spot that is there already is picked instead. */
-export function spotPlaced(table: TableStore, at: Point): void {
+function spotPlaced(table: TableStore, at: Point): void {
   const { document, edit, set, settleShown } = table.getState();
   settleShown();
   const { spots } = documentLevels(document);

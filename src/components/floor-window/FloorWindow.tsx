@@ -24,7 +24,7 @@ export interface Picture {
 /** Paints one frame; `again` asks for another, when a sharper picture is due. */
 export type Painter = (picture: Picture, again: () => void) => void;
 
-export const BUTTON_STEP = 1.25;
+const BUTTON_STEP = 1.25;
 const BORDER_PX = 22;
 /** Below this width the border gives way to the floor, px. */
 const NARROW_PX = 480;

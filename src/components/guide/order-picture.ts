@@ -32,7 +32,7 @@ export function orderBars(): readonly OrderBar[] {
   return made;
 }
 
-export function orderBarsOf(document: LayoutDocument): readonly OrderBar[] {
+function orderBarsOf(document: LayoutDocument): readonly OrderBar[] {
   const laying = layFloor(document);
   const { lines, orders } = takeOff(laying, floorReport(laying), null);
   const counted = lines.filter(({ volume }) => volume !== null);

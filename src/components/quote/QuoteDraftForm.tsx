@@ -18,7 +18,7 @@ import { SaveNote } from './SaveNote';
 import { AmountField, MoneyField, ShareField } from './typed-figures';
 import { useSavedDraft } from './use-saved-draft';
 
-export const GROUP_WORDS: Readonly<Record<QuoteGroup, string>> = {
+const GROUP_WORDS: Readonly<Record<QuoteGroup, string>> = {
   materials: 'Materials',
   labour: 'Work',
   other: 'Other',

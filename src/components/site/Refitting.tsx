@@ -187,7 +187,7 @@ function Figure({
 }
 
 /** "1 to 4, 7": numbers that run on as ranges. */
-export const rangeWords = (numbers: readonly number[]): string => {
+const rangeWords = (numbers: readonly number[]): string => {
   const runs: [number, number][] = [];
   for (const number of numbers) {
     const last = runs.at(-1);

@@ -4,7 +4,7 @@ import { refreshNow, useSite, type SiteState } from './site-state';
 import { takeNewer, useProgram } from './site-worker';
 
 /** What is kept and what is still to be sent, plainly. */
-export const syncWords = ({
+const syncWords = ({
   waiting,
   heard,
   busy,

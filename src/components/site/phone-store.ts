@@ -68,7 +68,7 @@ interface PhoneSchema extends DBSchema {
 
 export type PhoneStore = IDBPDatabase<PhoneSchema>;
 
-export const PHONE_STORE = 'evenlay-site';
+const PHONE_STORE = 'evenlay-site';
 
 export const whoOf = ({ id, firm }: Pick<Account, 'id' | 'firm'>): string => `${firm.id}:${id}`;
 

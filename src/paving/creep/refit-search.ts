@@ -28,7 +28,7 @@ export interface SearchResult {
 }
 
 /** Gaps this near to the best are as good, mm. */
-export const GAP_FINENESS_MM = 0.05;
+const GAP_FINENESS_MM = 0.05;
 /** Values are given in these where the least gap loses no more than that by it, mm. */
 const FIGURE_MM = 0.1;
 const GAP_GIVEN_UP_MM = 0.2;

@@ -10,7 +10,7 @@ const MOST_NAMES = 8;
 const LONG_TAPE_MM = 30_000;
 
 /** `A, B and C`, or `A, B, C and 12 more`. */
-export function nameList(names: readonly string[]): string {
+function nameList(names: readonly string[]): string {
   if (names.length === 0) return '';
   if (names.length === 1) return names[0];
   if (names.length > MOST_NAMES)

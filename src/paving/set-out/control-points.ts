@@ -10,7 +10,7 @@ const ON_BASELINE_MM = 5;
 const MOST_SECOND_PAIRS = 3;
 
 /** Two measures square to each other, each read to ±2 mm: the farthest corner of the square of errors, mm. */
-export const OFFSETS_DOUBT_MM = Math.hypot(TAPE_READING_MM, TAPE_READING_MM);
+const OFFSETS_DOUBT_MM = Math.hypot(TAPE_READING_MM, TAPE_READING_MM);
 
 /** How each mark is set out from the pair: by its tapes, or what is better where they meet badly. */
 export function controlPoints(

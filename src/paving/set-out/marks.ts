@@ -41,7 +41,7 @@ export function cornerTurns({ edges }: Pick<GroundRing, 'edges'>): number[] {
 }
 
 /** The point that far along an arc, `share` from 0 to 1. */
-export function arcPoint({ start, end, bulge }: GroundEdge, share: number): Point {
+function arcPoint({ start, end, bulge }: GroundEdge, share: number): Point {
   const sweep = 4 * Math.atan(bulge);
   const chord = Math.hypot(end[0] - start[0], end[1] - start[1]);
   const heading = Math.atan2(end[1] - start[1], end[0] - start[0]) - sweep / 2;

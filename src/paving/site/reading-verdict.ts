@@ -2,7 +2,7 @@ import { formatLength, MM_PER_INCH, type Display } from '../length';
 import type { Check, CheckKind } from '../set-out/set-out-types';
 
 /** Readings are compared with limits to this, mm: a limit that prints as 3.2 mm is met by a tape that reads 3.2 mm. */
-export const READING_TOLERANCE_MM = 0.05;
+const READING_TOLERANCE_MM = 0.05;
 
 const SIXTEENTH_MM = MM_PER_INCH / 16;
 /** What a reading may differ from whole sixteenths through binary arithmetic, in sixteenths. */

@@ -14,32 +14,32 @@ const words = (most: number, what: string) =>
     .max(most, `Keep ${what} to ${formatCount(most)} characters`);
 
 /** A course of the set-out is laid, or is not after all. */
-export const courseEntrySchema = z.object({
+const courseEntrySchema = z.object({
   kind: z.literal('course'),
   course: z.number().int().min(1).max(1_000_000),
   laid: z.boolean(),
 });
 
 /** A reading of one of the set-out's checks, mm; null takes the reading back. */
-export const checkEntrySchema = z.object({
+const checkEntrySchema = z.object({
   kind: z.literal('check'),
   check: z.string().min(1).max(80),
   measured: z.number().min(0, 'A tape reads nothing less than 0.').max(1e8).nullable(),
 });
 
-export const noteEntrySchema = z.object({
+const noteEntrySchema = z.object({
   kind: z.literal('note'),
   text: words(2000, 'the note').min(1, 'Write something first'),
 });
 
 /** The photo itself goes beside the entry, under the entry's id. */
-export const photoEntrySchema = z.object({
+const photoEntrySchema = z.object({
   kind: z.literal('photo'),
   caption: words(300, 'the line under the photo').default(''),
 });
 
 /** A floor that the crew proposes for what is not laid yet; the designer may take it as a draft. */
-export const proposalEntrySchema = z.object({
+const proposalEntrySchema = z.object({
   kind: z.literal('proposal'),
   /** What was found and what would do, in the words that the phone showed. */
   text: words(4000, 'the proposal').min(1, 'Say what is proposed'),

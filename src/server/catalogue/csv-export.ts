@@ -9,7 +9,7 @@ import { COLUMNS, type CatalogueRow } from './csv-columns';
 import { fieldsOf, itemsOn, type ItemRow } from './item-rows';
 import { currencyOf } from './pricing-settings';
 
-export const rowOfItem = ({ item, supplierName, price }: ItemRow): CatalogueRow => ({
+const rowOfItem = ({ item, supplierName, price }: ItemRow): CatalogueRow => ({
   ...fieldsOf(item),
   reference: item.id,
   supplier: supplierName ?? '',

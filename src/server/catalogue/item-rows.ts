@@ -14,7 +14,7 @@ const priceWhere = (condition: SQL, order: SQL) =>
     order by ${order} limit 1)`.mapWith((value) => jsonRead<CataloguePrice | null>(value));
 
 /** The price that holds on a day: of the newest day not after it, what was entered last. */
-export const priceOn = (day: string) =>
+const priceOn = (day: string) =>
   priceWhere(
     sql`${cataloguePrices.fromDay} <= ${day}`,
     sql`${cataloguePrices.fromDay} desc, ${cataloguePrices.place} desc`,

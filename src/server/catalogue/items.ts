@@ -39,7 +39,7 @@ export const openItem = async (
 };
 
 /** Adds to an item's price history; the price that it had before is kept. */
-export const addPrice = async (
+const addPrice = async (
   tx: Db,
   actor: Actor,
   itemId: string,

@@ -49,7 +49,7 @@ export const orderAsSent = async (
   };
 };
 
-export const orderPaper = (order: OnPaper): OrderPaper => {
+const orderPaper = (order: OnPaper): OrderPaper => {
   const { firm } = order;
   return {
     size: order.paper,

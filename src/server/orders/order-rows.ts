@@ -28,7 +28,7 @@ export const orderRows = (db: Db) =>
 export type OrderRow = Awaited<ReturnType<typeof orderRows>>[number];
 
 /** Of the lines that have a cost, minor units. */
-export const linesCost = (lines: readonly PurchaseLine[]): number =>
+const linesCost = (lines: readonly PurchaseLine[]): number =>
   lines.reduce(
     (sum, { amount, costMinor }) =>
       sum + (costMinor === null ? 0 : moneyTimes(amount, costMinor, PLAIN_ROUNDING.rule)),

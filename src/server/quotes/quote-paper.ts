@@ -18,9 +18,7 @@ const GROUP_NAMES: Readonly<Record<QuoteGroup, string>> = {
 };
 
 /** What the client reads of a quote: each group's lines and sum. Lines of nothing are left out. */
-export const quotePaper = (
-  sent: Omit<SentQuote, 'number'> & { number: string | null },
-): QuotePaper => {
+const quotePaper = (sent: Omit<SentQuote, 'number'> & { number: string | null }): QuotePaper => {
   const { firm, version, quote, tax } = sent;
   const lines = quote.lines.filter(({ amount }) => amount > 0);
   const reach = [firm.phone, firm.email].filter(Boolean);

@@ -3,8 +3,7 @@ import { projects, quotes } from '@/db/schema';
 import type { Db } from '../database';
 import type { SeenVersion } from '../seen-version';
 
-export const ofQuote = (firmId: string, id: string) =>
-  and(eq(quotes.firmId, firmId), eq(quotes.id, id));
+const ofQuote = (firmId: string, id: string) => and(eq(quotes.firmId, firmId), eq(quotes.id, id));
 
 export const quoteRow = async (db: Db, firmId: string, id: string) =>
   (await db.select().from(quotes).where(ofQuote(firmId, id))).at(0);

@@ -8,7 +8,7 @@ import { permissions, type Actor } from '../permissions';
 import { seenVersion, type SeenVersion } from '../seen-version';
 import { versionState } from '../version-rows';
 
-export const mayEnter = ({ role }: Actor): boolean =>
+const mayEnter = ({ role }: Actor): boolean =>
   permissions['check measurements, course progress'][role] === 'enter';
 
 /** The kinds of entries that an actor is shown: clients see how it goes, not the crew's words and photos. */
@@ -30,11 +30,7 @@ export interface Issue {
 }
 
 /** When a version was issued, by whom; undefined when it never was. */
-export const issueOf = async (
-  db: Db,
-  actor: Actor,
-  versionId: string,
-): Promise<Issue | undefined> =>
+const issueOf = async (db: Db, actor: Actor, versionId: string): Promise<Issue | undefined> =>
   (
     await db
       .select({

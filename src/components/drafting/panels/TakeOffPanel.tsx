@@ -14,7 +14,7 @@ import { TakeOffBars } from '../takeoff/TakeOffBars';
 import { TakeOffWarnings } from '../takeoff/TakeOffWarnings';
 import { useTakeOff } from '../takeoff/use-take-off';
 
-export const usePriceList = () =>
+const usePriceList = () =>
   useQuery({
     queryKey: ['price-list'],
     queryFn: () => api<PriceList>('GET', '/api/catalogue/price-list'),

@@ -6,7 +6,7 @@ import { Length } from '../../ui/Length';
 import { useShownFloor } from '../table-context';
 
 /** What will do, in words: `2 mm to 5 mm`, `at least 6 mm`. */
-export function checkLimits({ least, greatest }: Check, display: Display): string {
+function checkLimits({ least, greatest }: Check, display: Display): string {
   const shown = (mm: number) => formatLength(mm, display, { decimals: 1 });
   if (least !== null && greatest !== null)
     return least === 0 ? `up to ${shown(greatest)}` : `${shown(least)} to ${shown(greatest)}`;

@@ -14,7 +14,7 @@ import { edgeNearest } from './edit-ring';
 import { reachPx, type Tool } from './tool';
 
 /** The document with the pattern turned along an edge, and a row started along it; null for an arc. */
-export function alignedToEdge(
+function alignedToEdge(
   document: LayoutDocument,
   ring: number,
   edge: number,

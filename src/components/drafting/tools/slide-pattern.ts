@@ -12,7 +12,7 @@ import type { TableState, TableStore } from '../table-store';
 import { CLICK_SLACK_PX, reachPx, screenDistance, type TablePointer, type Tool } from './tool';
 
 /** How far from its pivot the turn handle stands, px. */
-export const TURN_HANDLE_PX = 84;
+const TURN_HANDLE_PX = 84;
 /** A turn snaps to whole fifteens and to the edges within this, degrees. */
 const TURN_SNAP_DEG = 1.5;
 

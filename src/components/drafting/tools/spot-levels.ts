@@ -9,7 +9,7 @@ import type { TableStore } from '../table-store';
 import { CLICK_SLACK_PX, reachPx, screenDistance, type TablePointer, type Tool } from './tool';
 
 /** The place that the hand means: a corner of the ground near by, else the grid; just there while snapping is off. */
-export function placeMeant(table: TableStore, pointer: TablePointer): Point {
+function placeMeant(table: TableStore, pointer: TablePointer): Point {
   const { document, camera, size, snap } = table.getState();
   if (!camera || !snap || pointer.free) return pointer.ground.map(Math.round) as unknown as Point;
   for (const [x, y] of document.ground.perimeter)
