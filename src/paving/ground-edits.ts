@@ -12,7 +12,8 @@ export type Ring = readonly Vertex[];
 export const vertexPoint = (vertex: Vertex): Point => [vertex[0], vertex[1]];
 export const vertexBulge = (vertex: Vertex): number => vertex[2] ?? 0;
 
-const vertexOf = ([x, y]: Point, bulge: number): Vertex => (bulge === 0 ? [x, y] : [x, y, bulge]);
+/** A corner, with its bulge where it has one. */
+export const vertexOf = ([x, y]: Point, bulge: number): Vertex => (bulge === 0 ? [x, y] : [x, y, bulge]);
 
 export function documentRing(document: LayoutDocument, ring: number): Ring {
   return ring === 0 ? document.ground.perimeter : document.ground.keepOuts[ring - 1].ring;

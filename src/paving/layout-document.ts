@@ -3,6 +3,7 @@ import { buildUpSchema } from './build-up';
 import { levelsSchema } from './levels';
 import { materialsSchema, orderSchema } from './materials';
 import { setOutChoiceSchema } from './set-out/datum-choice';
+import { surveySchema } from './survey/survey';
 
 /**
  * The layout document: all that is needed to lay a floor. It is what the table edits, what a
@@ -164,6 +165,8 @@ export const layoutDocumentSchema = z.object({
   levels: levelsSchema.optional(),
   /** The two corners to set out from; without it the program picks them. */
   setOut: setOutChoiceSchema.optional(),
+  /** Tapes between the corners, from which the ground was taken. */
+  survey: surveySchema.optional(),
   notes: z.string().max(10_000).optional(),
 });
 

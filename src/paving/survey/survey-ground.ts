@@ -1,0 +1,74 @@
+import type { Point } from '@/geometry/point';
+import { vertexOf } from '../ground-edits';
+import type { KeepOut, LayoutDocument, Vertex } from '../layout-document';
+import { ringStarts, type Survey } from './survey';
+import type { SurveyAnswer } from './survey-answer';
+
+/** Corners are put on a grid finer than tapes read, mm. */
+const GRID_MM = 0.1;
+const onGrid = (mm: number) => Number((Math.round(mm / GRID_MM) * GRID_MM).toFixed(1));
+
+/**
+ * The ground as surveyed; null while a corner of it is not fixed. It lies where the sketch lay, and the
+ * longest side that the sketch had level or upright is exactly so. Keep-outs that were not taped stay as they were.
+ */
+export function surveyedGround(
+  survey: Survey,
+  { places }: Pick<SurveyAnswer, 'places'>,
+  before: LayoutDocument['ground'],
+): LayoutDocument['ground'] | null {
+  const starts = ringStarts(survey);
+  const corners = places.slice(0, starts[survey.rings.length]);
+  if (corners.some((place) => place === null)) return null;
+  const levelled = placesLevelled(corners as Point[], survey);
+  const rings = survey.rings.map(({ corners: count }, ring) =>
+    Array.from({ length: count }, (_, edge): Vertex => {
+      const [x, y] = levelled[starts[ring] + edge];
+      const [toX, toY] = levelled[starts[ring] + ((edge + 1) % count)];
+      const rise = survey.arcs.find((arc) => arc.ring === ring && arc.edge === edge)?.rise ?? 0;
+      const chord = Math.hypot(toX - x, toY - y);
+      return vertexOf([onGrid(x), onGrid(y)], chord > 0 ? (2 * rise) / chord : 0);
+    }),
+  );
+  const taped = survey.rings
+    .slice(1)
+    .map(({ name = 'Keep-out' }, n): KeepOut => ({ name, ring: rings[n + 1] }));
+  const names = new Set(taped.map(({ name }) => name));
+  return {
+    perimeter: rings[0],
+    keepOuts: [...taped, ...before.keepOuts.filter(({ name }) => !names.has(name))],
+  };
+}
+
+/** The places turned so that the longest side that is level or upright in the sketch is so. */
+function placesLevelled(places: readonly Point[], { sketch, rings }: Survey): readonly Point[] {
+  const { corners } = rings[0];
+  let longest = 0;
+  let turn = 0;
+  for (let n = 0; n < corners; n++) {
+    const next = (n + 1) % corners;
+    const [sx, sy] = [sketch[next][0] - sketch[n][0], sketch[next][1] - sketch[n][1]];
+    if (sx !== 0 && sy !== 0) continue;
+    const [dx, dy] = [places[next][0] - places[n][0], places[next][1] - places[n][1]];
+    if (Math.hypot(dx, dy) <= longest) continue;
+    longest = Math.hypot(dx, dy);
+    turn = Math.atan2(sy, sx) - Math.atan2(dy, dx);
+  }
+  if (longest === 0) return places;
+  const [cos, sin] = [Math.cos(turn), Math.sin(turn)];
+  const [ox, oy] = places[0];
+  return places.map(([x, y]) => [
+    ox + cos * (x - ox) - sin * (y - oy),
+    oy + sin * (x - ox) + cos * (y - oy),
+  ]);
+}
+
+/** True when the perimeter is still as the survey has it: nothing was moved since it was taken. */
+export function groundIsSurveyed(
+  survey: Survey,
+  answer: Pick<SurveyAnswer, 'places'>,
+  ground: LayoutDocument['ground'],
+): boolean {
+  const taped = surveyedGround(survey, answer, ground);
+  return taped !== null && JSON.stringify(taped.perimeter) === JSON.stringify(ground.perimeter);
+}
