@@ -26,6 +26,8 @@ export interface UnitMatching {
   readonly added: number;
   /** How far the corner that moved furthest came, mm, of all kept and moved units; 0 when there are none. */
   readonly furthest: number;
+  /** Whether what lies near a unit tells nothing of it, as after a large turn: then none counts as moved. */
+  readonly anew: boolean;
 }
 
 /** A unit's kind, by its sizes alone: two documents may give one slab different ids and names. */
@@ -243,6 +245,42 @@ const unmatched = (partners: Int32Array): Int32Array => {
   return left.subarray(0, count);
 };
 
+/** Of the pairs found, at least so many must tell something, or the floor is laid anew. */
+const TELLING_SHARE = 0.5;
+/** A unit that stays within this part of its own width is taken for the same one. */
+const STAYING_PART = 0.25;
+/** Moves that agree to this are one and the same move, mm. */
+const SAME_MOVE_MM = 2;
+/** Moves are shorter than a unit, so than so many steps of `SAME_MOVE_MM` either way. */
+const MOST_STEPS = 1e5;
+
+/**
+ * How many moved pairs tell something: the unit stays within a quarter of its width, or goes the very way that most go.
+ * After a large turn neither holds of more than a chance few, whatever was matched with whatever lies near.
+ */
+function tellingPairs(a: Laying, b: Laying, partnerOfA: Int32Array, fateOfA: Uint8Array): number {
+  const staying = a.motif.map(
+    ({ unit }) => (STAYING_PART * Math.min(unit.length, unit.width)) ** 2,
+  );
+  const step = (mm: number) => Math.sign(mm) * Math.round(Math.abs(mm) / SAME_MOVE_MM + 0.317);
+  const ways = new Map<number, number>();
+  let stays = 0;
+  let commonest = 0;
+  for (let n = 0; n < partnerOfA.length; n++) {
+    if (fateOfA[n] !== UNIT_FATE.moved) continue;
+    const dx = b.laid.x[partnerOfA[n]] - a.laid.x[n];
+    const dy = b.laid.y[partnerOfA[n]] - a.laid.y[n];
+    if (dx * dx + dy * dy <= staying[a.laid.k[n]]) stays++;
+    else {
+      const way = step(dx) * MOST_STEPS + step(dy);
+      const alike = (ways.get(way) ?? 0) + 1;
+      ways.set(way, alike);
+      commonest = Math.max(commonest, alike);
+    }
+  }
+  return stays + commonest;
+}
+
 /**
  * Matches the laid units of two floors that share a ground's coordinates.
  *
@@ -251,7 +289,8 @@ const unmatched = (partners: Int32Array): Int32Array => {
  * **moved** to one of its kind whose centre lies within half its diagonal, the unit that moved least being
  * matched first; a unit turned where it stands has moved too. What then stands alone is gone or new. So
  * a field pushed along by less than half a unit has moved, one pushed by a whole pitch is kept but for its
- * borders, and after a change of bond each unit is told by what lies where it lay.
+ * borders, and after a change of bond each unit is told by what lies where it lay. Where that tells nothing of most
+ * (`tellingPairs`), the floor is laid **anew**, and none counts as moved.
  *
  * No unit is matched twice, and matching B with A gives the same pairs. Work grows with the units.
  */
@@ -285,7 +324,21 @@ export function unitsMatched(a: Laying, b: Laying): UnitMatching {
     matchInto(a, b, pairs, partnerOfA, partnerOfB, note(fate));
   };
   match(() => stillOff, stillOff, UNIT_FATE.kept);
+  const furthestKept = furthest;
   match(({ unit }) => Math.hypot(unit.length, unit.width) / 2, Infinity, UNIT_FATE.moved);
+  const anew =
+    moved > 0 && kept + tellingPairs(a, b, partnerOfA, fateOfA) < TELLING_SHARE * (kept + moved);
+  if (anew) {
+    for (let n = 0; n < partnerOfA.length; n++) {
+      if (fateOfA[n] !== UNIT_FATE.moved) continue;
+      fateOfA[n] = UNIT_FATE.single;
+      fateOfB[partnerOfA[n]] = UNIT_FATE.single;
+      partnerOfB[partnerOfA[n]] = -1;
+      partnerOfA[n] = -1;
+    }
+    moved = 0;
+    furthest = furthestKept;
+  }
   const paired = kept + moved;
   return {
     partnerOfA,
@@ -297,5 +350,6 @@ export function unitsMatched(a: Laying, b: Laying): UnitMatching {
     gone: a.laid.count - paired,
     added: b.laid.count - paired,
     furthest,
+    anew,
   };
 }

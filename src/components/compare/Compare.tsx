@@ -58,6 +58,7 @@ function Comparing({ a: firstA, b: firstB, layouts, view: firstView, role }: Pro
     window.history.replaceState(null, '', compareLink(ids.from, ids.to, view));
   }, [ids, view]);
   const both = a.data && b.data ? { a: a.data, b: b.data } : null;
+  useStripFollows(a.data, b.data);
   return (
     <div className="mx-auto flex max-w-[96rem] flex-col gap-7 px-5 py-6 lg:px-12">
       {both ? (
@@ -99,6 +100,19 @@ const useVersion = (id: string, first: VersionDetail) =>
     initialData: id === first.id ? first : undefined,
     staleTime: Infinity,
   });
+
+/** The strip over the page and the window's title are the page's own; they must name what is compared now. */
+function useStripFollows(a: VersionDetail | undefined, b: VersionDetail | undefined) {
+  useEffect(() => {
+    const cell = document.querySelector('[data-cell=layout]');
+    if (!cell || !a || !b) return;
+    const one = a.layoutId === b.layoutId;
+    cell.textContent = one ? a.layoutName : `${a.layoutName}, ${b.layoutName}`;
+    if (cell.previousElementSibling)
+      cell.previousElementSibling.textContent = one ? 'Layout' : 'Layouts';
+    document.title = `Compare ${a.number} and ${b.number}, ${a.projectName} · Evenlay`;
+  }, [a, b]);
+}
 
 interface BothProps {
   readonly a: VersionDetail;

@@ -19,7 +19,7 @@ const COLOURS: Record<Fate, string> = {
 export function FateKey({ units, from, to }: { units: UnitCounts; from: string; to: string }) {
   const entries: readonly (readonly [Fate, number, string])[] = [
     ['kept', units.kept, 'kept'],
-    ['moved', units.moved, 'moved'],
+    ...(units.anew ? [] : ([['moved', units.moved, 'moved']] as const)),
     ['gone', units.gone, `only in ${from}`],
     ['new', units.added, `only in ${to}`],
   ];

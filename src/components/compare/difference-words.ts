@@ -20,6 +20,8 @@ export interface UnitCounts {
   readonly added: number;
   /** How far the corner that moved furthest came, mm. */
   readonly furthest: number;
+  /** Whether what lies near a unit tells nothing of it. */
+  readonly anew: boolean;
 }
 
 const same = (p: unknown, q: unknown) => JSON.stringify(p) === JSON.stringify(q);
@@ -87,6 +89,8 @@ export function differenceSentence(
     parts.push(`takes units of ${unitsUsed(b.document)} instead of ${unitsUsed(a.document)}`);
   if (a.document.bond.kind !== b.document.bond.kind)
     parts.push(`changes the bond from ${bondWords(a.document)} to ${bondWords(b.document)}`);
+  if (units.anew)
+    parts.push(units.kept > 0 ? 'lays nearly all of its units anew' : 'lays all of its units anew');
   const more = figures.wholeUnits.change ?? 0;
   parts.push(
     more === 0

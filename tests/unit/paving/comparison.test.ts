@@ -209,6 +209,38 @@ describe('cases worked by hand', () => {
     }
   });
 
+  // What lies within half a diagonal of a slab after an eighth of a turn is chance: no slab of a hundred is "the same, moved".
+  test('a field turned by an eighth is laid anew: none has moved', () => {
+    const comparison = floorComparison(
+      tenByTen(),
+      tenByTen({ placement: { origin: [228.5, 228.5], turn: 45 } }),
+    );
+    expect(comparison.anew).toBe(true);
+    expect([comparison.kept, comparison.moved]).toEqual([0, 0]);
+    expect([comparison.gone, comparison.added]).toEqual([
+      comparison.fateOfA.length,
+      comparison.fateOfB.length,
+    ]);
+    expect(new Set([...comparison.partnerOfA, ...comparison.partnerOfB])).toEqual(new Set([-1]));
+    expect(comparison.furthest).toBe(0);
+  });
+
+  // At 5 m from the pivot a turn of 0.5° moves a slab by 44 mm, a tenth of its width.
+  test('a field turned by half a degree has moved', () => {
+    const comparison = floorComparison(
+      tenByTen(),
+      tenByTen({ placement: { origin: [228.5, 228.5], turn: 0.5 } }),
+    );
+    expect(comparison.anew).toBe(false);
+    expect(comparison.moved).toBe(comparison.fateOfB.length);
+  });
+
+  test('a field pushed aslant by nearly half a pitch both ways has moved: all go the same way', () => {
+    const one = tenByTen();
+    const comparison = floorComparison(one, pushed(one, 200, -200));
+    expect([comparison.anew, comparison.moved]).toEqual([false, 100]);
+  });
+
   test('a slab lifted is gone, and nothing else changes', () => {
     expect(counts(floorComparison(tenByTen(), tenByTen({ lifted: [[4, 5, 0]] })))).toEqual({
       kept: 99,
