@@ -37,6 +37,20 @@ const callOf = async (context: APIContext): Promise<Call | null> => {
 
 const signIn = () => problemResponse('signed-out', 'Sign in to go on.');
 
+/** Who calls and what the query says, or the answer to give in place of the service's. */
+const queriedWith = async <S extends z.ZodType>(
+  schema: S,
+  context: APIContext,
+): Promise<
+  | { readonly ok: true; readonly call: Call; readonly query: z.output<S> }
+  | { readonly ok: false; readonly response: Response }
+> => {
+  const call = await callOf(context);
+  if (!call) return { ok: false, response: signIn() };
+  const query = parsedWith(schema, Object.fromEntries(context.url.searchParams));
+  return query.ok ? { ok: true, call, query: query.value } : query;
+};
+
 /** An endpoint that takes no body (GET, DELETE): one service call, its outcome as JSON. */
 export const reading =
   (run: (call: Call) => Promise<Outcome<unknown>>): APIRoute =>
@@ -68,11 +82,9 @@ export const streaming =
     headers: Readonly<Record<string, string>> = {},
   ): APIRoute =>
   async (context) => {
-    const call = await callOf(context);
-    if (!call) return signIn();
-    const query = parsedWith(schema, Object.fromEntries(context.url.searchParams));
-    if (!query.ok) return query.response;
-    const outcome = await run(call, query.value);
+    const asked = await queriedWith(schema, context);
+    if (!asked.ok) return asked.response;
+    const outcome = await run(asked.call, asked.query);
     if (!outcome.ok) return refusalResponse(outcome);
     return new Response(outcome.value, {
       headers: {
@@ -108,13 +120,11 @@ export const receiving =
     status = 201,
   ): APIRoute =>
   async (context) => {
-    const call = await callOf(context);
-    if (!call) return signIn();
-    const query = parsedWith(schema, Object.fromEntries(context.url.searchParams));
-    if (!query.ok) return query.response;
+    const asked = await queriedWith(schema, context);
+    if (!asked.ok) return asked.response;
     const bytes = await boundedBytes(context.request, limit.bytes);
     if (!bytes) return problemResponse('too-large', limit.words);
-    return answer(await run(call, query.value, bytes), status);
+    return answer(await run(asked.call, asked.query, bytes), status);
   };
 
 /** A GET endpoint with a query that answers with a file. Browsers keep no copy: the next to use one must not find it. */
@@ -125,11 +135,9 @@ export const fetching =
     run: (call: Call, query: z.output<S>) => Promise<Outcome<Uint8Array>>,
   ): APIRoute =>
   async (context) => {
-    const call = await callOf(context);
-    if (!call) return signIn();
-    const query = parsedWith(schema, Object.fromEntries(context.url.searchParams));
-    if (!query.ok) return query.response;
-    const outcome = await run(call, query.value);
+    const asked = await queriedWith(schema, context);
+    if (!asked.ok) return asked.response;
+    const outcome = await run(asked.call, asked.query);
     if (!outcome.ok) return refusalResponse(outcome);
     return new Response(new Uint8Array(outcome.value), {
       headers: {

@@ -11,7 +11,12 @@ import { projectSeen } from './visibility';
 
 type OnProject = readonly (PersonName & { readonly role: Role })[];
 
-const onProject = async (db: Db, firmId: string, projectId: string): Promise<OnProject> =>
+/** The people put on a project, by name. */
+export const peopleOnProject = async (
+  db: Db,
+  firmId: string,
+  projectId: string,
+): Promise<OnProject> =>
   db
     .select({ id: people.id, name: people.name, role: memberships.role })
     .from(projectPeople)
@@ -45,7 +50,7 @@ export const projectPeopleOf = async (
 ): Promise<Outcome<{ people: OnProject; others: OnProject }>> => {
   const project = await projectFor(db, actor, projectId);
   if (!project.ok) return project;
-  const put = await onProject(db, actor.firmId, projectId);
+  const put = await peopleOnProject(db, actor.firmId, projectId);
   const all = await db
     .select({ id: people.id, name: people.name, role: memberships.role })
     .from(memberships)
@@ -102,7 +107,7 @@ export const addToProject = async (
       detail: { project: project.value.name, personId, name: member.name },
     });
   });
-  return done({ people: await onProject(db, firmId, projectId) });
+  return done({ people: await peopleOnProject(db, firmId, projectId) });
 };
 
 /** Takes somebody off a project; they stay of the firm. */
@@ -137,7 +142,7 @@ export const removeFromProject = async (
       detail: { project: project.value.name, personId, name: person.name },
     });
   });
-  return done({ people: await onProject(db, firmId, projectId) });
+  return done({ people: await peopleOnProject(db, firmId, projectId) });
 };
 
 /** How many projects a form offers to choose from: those last worked on. */

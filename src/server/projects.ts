@@ -1,4 +1,4 @@
-import { and, asc, eq, inArray, sql, type SQL } from 'drizzle-orm';
+import { and, eq, inArray, sql, type SQL } from 'drizzle-orm';
 import type { z } from 'zod';
 import type { LayoutSummary } from '@/api-types/layouts';
 import {
@@ -8,16 +8,7 @@ import {
   type ProjectDetail,
   type ProjectSummary,
 } from '@/api-types/projects';
-import {
-  drafts,
-  firms,
-  layouts,
-  memberships,
-  people,
-  projectPeople,
-  projects,
-  versions,
-} from '@/db/schema';
+import { drafts, firms, layouts, projectPeople, projects, versions } from '@/db/schema';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { recordAudit, type Subject } from './audit';
 import type { Db } from './database';
@@ -25,6 +16,7 @@ import { newId } from './ids';
 import { layoutSummaries } from './layouts';
 import { done, notFound, type Outcome } from './outcomes';
 import { mayDraft, permissions, refuseUnlessDrafting, type Actor } from './permissions';
+import { peopleOnProject } from './project-people';
 import { projectSeen, versionSeen } from './visibility';
 import { versionState } from './version-rows';
 
@@ -153,19 +145,7 @@ export const openProject = async (
   if (!row) return notFound('project');
   const own = await layoutSummaries(db, actor, [id]);
   const [summary] = await projectSummaries(db, actor, [row]);
-  const put = await db
-    .select({ id: people.id, name: people.name, role: memberships.role })
-    .from(projectPeople)
-    .innerJoin(
-      memberships,
-      and(
-        eq(memberships.firmId, projectPeople.firmId),
-        eq(memberships.personId, projectPeople.personId),
-      ),
-    )
-    .innerJoin(people, eq(people.id, projectPeople.personId))
-    .where(and(eq(projectPeople.firmId, actor.firmId), eq(projectPeople.projectId, id)))
-    .orderBy(asc(people.name));
+  const put = await peopleOnProject(db, actor.firmId, id);
   return done({ ...summary, layouts: own, people: put });
 };
 
