@@ -12,12 +12,14 @@ export function YourChoices({ projectId }: { projectId: string }) {
   if (choices.error && !choices.data)
     return <Wrong error={choices.error} again={() => void choices.refetch()} className="mb-8" />;
   const versions = choices.data?.versions ?? [];
-  if (versions.length < 2) return null;
+  const picked = choices.data?.picked ?? null;
+  // One version that nobody picked is no choice: it stands with its layout.
+  if (versions.length < (picked ? 1 : 2)) return null;
   return (
     <section aria-label="Your choices" className="border-t-2 border-graphite pt-4">
-      <h2>Your choices</h2>
-      {choices.data?.picked?.note && (
-        <p className="mt-1 max-w-2xl whitespace-pre-line">{choices.data.picked.note}</p>
+      <h2>{versions.length === 1 ? 'The floor put before you' : 'Your choices'}</h2>
+      {picked?.note && (
+        <p className="mt-1 max-w-2xl whitespace-pre-line">{picked.note}</p>
       )}
       <ol className="mt-3 grid gap-x-6 gap-y-8 sm:grid-cols-2 lg:grid-cols-3">
         {versions.map((version, n) => (
