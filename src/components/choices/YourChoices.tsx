@@ -18,9 +18,7 @@ export function YourChoices({ projectId }: { projectId: string }) {
   return (
     <section aria-label="Your choices" className="border-t-2 border-graphite pt-4">
       <h2>{versions.length === 1 ? 'The floor put before you' : 'Your choices'}</h2>
-      {picked?.note && (
-        <p className="mt-1 max-w-2xl whitespace-pre-line">{picked.note}</p>
-      )}
+      {picked?.note && <p className="mt-1 max-w-2xl whitespace-pre-line">{picked.note}</p>}
       <ol className="mt-3 grid gap-x-6 gap-y-8 sm:grid-cols-2 lg:grid-cols-3">
         {versions.map((version, n) => (
           <li key={version.id} className="min-w-0" data-testid="your-choice">
