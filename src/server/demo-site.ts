@@ -26,9 +26,9 @@ export const writeDemoSiteRecord = (
       check: id,
       measured: Math.round(expected),
     })),
-    ...courses.slice(0, LAID).map(({ number }): SiteEntryContent => ({
+    ...courses.slice(0, LAID).map(({ row }): SiteEntryContent => ({
       kind: 'course',
-      course: number,
+      course: row,
       laid: true,
     })),
     { kind: 'note', text: 'Steel edge is true all round. Barrowed in the next two pallets.' },

@@ -2,6 +2,7 @@ import { courseRows, ticksEvery } from './course-rows';
 import type { FiguredContent } from './figured-sheet';
 import { figuredAndTabled } from './figured-sheet';
 import { formatCount } from '@/paving/count';
+import { workSide } from '@/paving/set-out/course-numbers';
 import { lengthText } from './figures';
 import { markRows } from './mark-row';
 import type { PanelRow } from './panel';
@@ -66,13 +67,16 @@ function coursesPanel(input: SetOutInput, scale: number, width: number): readonl
       ? [
           headingRow('First unit', width),
           ...textRows(
-            `In course ${first.course}, unit ${first.place} from the string’s start: drawn heavy. Its corners are U1 to U4 of the control points.`,
+            `In course ${first.course}, unit ${first.place} from the string’s start: drawn heavy. Its corners are U1 to U4 of the control points.${courses.length > 1 ? ` Go on from there: each further string lies to the ${workSide(courses) === 1 ? 'left' : 'right'} of the one before, as you look from its point a to its point b.` : ''}`,
             width,
           ),
         ]
       : []),
     headingRow('How to lay a course', width),
-    itemRow('Stretch the string from point a to point b of the course, and pull it tight.', width),
+    itemRow(
+      'Stretch the string from point a to point b of the course, and pull it tight. The units stand to its left as you look along it.',
+      width,
+    ),
     itemRow(
       'Hold the tape’s end at the string’s start. Each unit has two running lengths: its near and its far edge.',
       width,

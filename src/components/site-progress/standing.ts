@@ -1,8 +1,9 @@
 import { useQuery } from '@tanstack/react-query';
 import type { PersonName } from '@/api-types/people';
 import type { SiteStanding } from '@/api-types/site';
-import { layFloor } from '@/paving/laying';
+import { layFloor, type Laying } from '@/paving/laying';
 import type { LayoutDocument } from '@/paving/layout-document';
+import { checksWithReadings } from '@/paving/set-out/checks';
 import { setOut, type Check, type Course } from '@/paving/set-out/set-out';
 import { readingVerdict } from '@/paving/site/reading-verdict';
 import { siteRecord, type RecordedEntry, type SiteRecord } from '@/paving/site/site-record';
@@ -15,16 +16,20 @@ export const useSiteStanding = (versionId: string) =>
     queryFn: () => api<SiteStanding>('GET', `/api/versions/${versionId}/site-entries`),
   });
 
-const plans = new WeakMap<
-  LayoutDocument,
-  { courses: readonly Course[]; checks: readonly Check[] }
->();
+interface Plan {
+  readonly laying: Laying;
+  readonly courses: readonly Course[];
+  readonly checks: readonly Check[];
+}
+
+const plans = new WeakMap<LayoutDocument, Plan>();
 
 const planOf = (document: LayoutDocument) => {
   let plan = plans.get(document);
   if (!plan) {
-    const { courses, checks } = setOut(layFloor(document));
-    plan = { courses, checks };
+    const laying = layFloor(document);
+    const { courses, checks } = setOut(laying);
+    plan = { laying, courses, checks };
     plans.set(document, plan);
   }
   return plan;
@@ -56,8 +61,10 @@ export const progressOf = (
   document: LayoutDocument,
   entries: readonly StandingEntry[],
 ): Progress => {
-  const { courses, checks } = planOf(document);
+  const plan = planOf(document);
+  const { courses } = plan;
   const { laid, readings, notes } = siteRecord<PersonName>(entries);
+  const checks = checksWithReadings(plan.laying, plan, readings.keys());
   const read = checks.flatMap((check) => {
     const reading = readings.get(check.id);
     return reading ? [{ check, reading }] : [];
@@ -67,8 +74,8 @@ export const progressOf = (
     null,
   );
   return {
-    courses: courses.map(({ number }) => ({ number, laid: laid.has(number) })),
-    laid: courses.filter(({ number }) => laid.has(number)).length,
+    courses: courses.map(({ number, row }) => ({ number, laid: laid.has(row) })),
+    laid: courses.filter(({ row }) => laid.has(row)).length,
     checks: checks.length,
     measured: read.length,
     wrong: read.filter(({ check, reading }) => !readingVerdict(check, reading.measured).within),

@@ -1,5 +1,6 @@
 import { Check as CheckMark, TriangleAlert } from 'lucide-react';
 import { useRef } from 'react';
+import { checksWithReadings } from '@/paving/set-out/checks';
 import type { Check } from '@/paving/set-out/set-out';
 import {
   allowedWords,
@@ -25,7 +26,7 @@ const GROUPS: readonly { readonly title: string; readonly kinds: readonly Check[
 
 /** What to measure, each reading judged at once. */
 export function ChecksTab({ kept, floor, record, display }: TabProps) {
-  const { checks } = floor.setOut;
+  const checks = checksWithReadings(floor.laying, floor.setOut, record.readings.keys());
   const measured = checks.filter(({ id }) => record.readings.has(id));
   const wrong = measured.filter(
     (check) => !readingVerdict(check, record.readings.get(check.id)!.measured).within,

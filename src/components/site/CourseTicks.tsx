@@ -15,7 +15,16 @@ const WIDTH = 1000;
 const MOST_DRAWN = 120;
 
 /** A course along its string: where each unit begins and ends, as running lengths to tick off one tape. */
-export function CourseTicks({ course, display }: { course: Course; display: Display }) {
+export function CourseTicks({
+  course,
+  side,
+  display,
+}: {
+  course: Course;
+  /** Where each further string lies of the one before. */
+  side: 'left' | 'right';
+  display: Display;
+}) {
   return (
     <>
       <Strip course={course} />
@@ -31,7 +40,7 @@ export function CourseTicks({ course, display }: { course: Course; display: Disp
           <strong>
             <Length mm={course.step} display={display} decimals={1} />
           </strong>{' '}
-          square from the one before.
+          square from the one before, to its {side} as you look from a to b.
         </p>
       )}
       {course.runs.map((run, n) => (

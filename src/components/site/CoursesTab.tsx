@@ -1,6 +1,7 @@
 import { Check, ChevronDown } from 'lucide-react';
 import { useEffect, useRef, useState } from 'react';
 import type { PersonName } from '@/api-types/people';
+import { workSide } from '@/paving/set-out/course-numbers';
 import type { Course } from '@/paving/set-out/set-out';
 import type { RecordedEntry } from '@/paving/site/site-record';
 import { Length } from '../ui/Length';
@@ -13,7 +14,7 @@ import { enter } from './site-state';
 /** The courses as pegs on the string, in the order in which they are laid; the next one is the live one. */
 export function CoursesTab({ kept, floor, record, display }: TabProps) {
   const { courses } = floor.setOut;
-  const next = courses.find(({ number }) => !record.laid.has(number))?.number ?? null;
+  const next = courses.find(({ row }) => !record.laid.has(row))?.number ?? null;
   const [open, setOpen] = useState<number | null>(next);
   const [seen, setSeen] = useState(next);
   // When the live course is ticked, the string goes on to the next.
@@ -30,15 +31,16 @@ export function CoursesTab({ kept, floor, record, display }: TabProps) {
     live?.scrollIntoView({ block: far ? 'center' : 'nearest' });
     first.current = false;
   }, [next]);
-  const tick = (numbers: readonly number[], laid: boolean) =>
+  const tick = (ticked: readonly Course[], laid: boolean) =>
     void enter(
       kept.versionId,
-      numbers.map((course) => ({ content: { kind: 'course', course, laid } })),
+      ticked.map(({ row }) => ({ content: { kind: 'course', course: row, laid } })),
     );
   if (courses.length === 0) {
     return <p>Nothing is laid on this floor, so there are no courses to tick.</p>;
   }
-  const laid = courses.filter(({ number }) => record.laid.has(number));
+  const side = workSide(courses) === 1 ? 'left' : 'right';
+  const laid = courses.filter(({ row }) => record.laid.has(row));
   const units = (of: readonly Course[]) => of.reduce((sum, course) => sum + course.units, 0);
   return (
     <section aria-label="Courses">
@@ -53,20 +55,21 @@ export function CoursesTab({ kept, floor, record, display }: TabProps) {
           <CourseRow
             key={course.number}
             course={course}
+            side={side}
             live={course.number === next}
-            entry={record.laid.get(course.number)}
+            entry={record.laid.get(course.row)}
             open={open === course.number}
             display={display}
             onOpen={() => setOpen(open === course.number ? null : course.number)}
-            onTick={(is) => tick([course.number], is)}
+            onTick={(is) => tick([course], is)}
             before={
-              record.laid.has(course.number)
+              record.laid.has(course.row)
                 ? []
-                : courses
-                    .filter(({ number }) => number < course.number && !record.laid.has(number))
-                    .map(({ number }) => number)
+                : courses.filter(
+                    ({ number, row }) => number < course.number && !record.laid.has(row),
+                  )
             }
-            onTickAll={(numbers) => tick(numbers, true)}
+            onTickAll={(ticked) => tick(ticked, true)}
           />
         ))}
       </ol>
@@ -81,6 +84,7 @@ export function CoursesTab({ kept, floor, record, display }: TabProps) {
 
 function CourseRow({
   course,
+  side,
   live,
   entry,
   open,
@@ -91,15 +95,16 @@ function CourseRow({
   onTickAll,
 }: {
   course: Course;
+  side: 'left' | 'right';
   live: boolean;
   entry: RecordedEntry<PersonName> | undefined;
   open: boolean;
   display: TabProps['display'];
   /** Courses before this one that are not ticked. */
-  before: readonly number[];
+  before: readonly Course[];
   onOpen: () => void;
   onTick: (laid: boolean) => void;
-  onTickAll: (numbers: readonly number[]) => void;
+  onTickAll: (ticked: readonly Course[]) => void;
 }) {
   const laid = entry !== undefined;
   return (
@@ -157,7 +162,7 @@ function CourseRow({
       </div>
       {open && (
         <div className="relative pb-4 pl-7">
-          <CourseTicks course={course} display={display} />
+          <CourseTicks course={course} side={side} display={display} />
           {entry && (
             <p className="mt-3 text-sm text-slate">
               Ticked by {entry.by.name}, <Moment iso={entry.madeAt} />
@@ -167,7 +172,7 @@ function CourseRow({
             <button
               type="button"
               className="button mt-3"
-              onClick={() => onTickAll([...before, course.number])}
+              onClick={() => onTickAll([...before, course])}
             >
               Tick this one and {before.length === 1 ? 'the one' : `the ${before.length}`} before it
             </button>

@@ -43,11 +43,7 @@ export function NotesTab({ kept, floor, entries, display }: TabProps) {
   };
   const all = [...entriesInOrder(entries)].reverse();
   const item = (entry: (typeof all)[number]) => (
-    <EntryItem
-      key={entry.id}
-      entry={entry}
-      words={entryWords(entry.content, floor.setOut.checks, display)}
-    />
+    <EntryItem key={entry.id} entry={entry} words={entryWords(entry.content, floor, display)} />
   );
   return (
     <section aria-label="Notes and photos">

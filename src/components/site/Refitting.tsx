@@ -6,6 +6,7 @@ import { formatLength } from '@/paving/length';
 import { Length } from '../ui/Length';
 import { LengthField } from '../ui/LengthField';
 import type { TabProps } from './PackView';
+import { laidNumbers } from './pack-floor';
 import { RefitPlan } from './RefitPlan';
 import { enter } from './site-state';
 
@@ -18,7 +19,7 @@ export function Refitting({
   laying,
   measures,
 }: TabProps & { laying: Laying; measures: readonly UnitMeasure[] }) {
-  const laid = [...record.laid.keys()].sort((a, b) => a - b);
+  const laid = laidNumbers(floor, record);
   const [offset, setOffset] = useState(0);
   const [found, setFound] = useState<Refit | null>(null);
   const [wrong, setWrong] = useState<string | null>(null);
@@ -27,7 +28,9 @@ export function Refitting({
   const now = JSON.stringify([measures, laid, offset]);
   const stale = found !== null && asked !== now;
   const workOut = () => {
-    const result = refit(laying, { measures, laid, offset });
+    // Past its place is away from what lies behind it: towards higher numbers where the work goes up from course 1.
+    const past = laid.length === 0 || laid.includes(1) ? offset : -offset;
+    const result = refit(laying, { measures, laid, offset: past }, floor.setOut);
     setSent(false);
     setAsked(now);
     setFound(result.ok ? result.refit : null);

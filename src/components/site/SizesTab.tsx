@@ -7,6 +7,7 @@ import { LengthField } from '../ui/LengthField';
 import { NumberField } from '../ui/NumberField';
 import { CreepFigures } from './CreepFigures';
 import type { TabProps } from './PackView';
+import { laidNumbers } from './pack-floor';
 import { Refitting } from './Refitting';
 import { useMeasures, type Measured } from './measures';
 
@@ -25,7 +26,7 @@ export function SizesTab(props: TabProps) {
   const found = useMemo(
     (): Creep | null =>
       measures.length > 0 && wrong === null
-        ? creep(laying, { measures, laid: [...record.laid.keys()] }, floor.setOut)
+        ? creep(laying, { measures, laid: laidNumbers(floor, record) }, floor.setOut)
         : null,
     // The measures are made anew at each drawing; what they were made from is not.
     [laying, floor, record, measured, wrong],

@@ -1,22 +1,24 @@
 import { figuredText } from '@/paving/figured-words';
 import { formatLength, type Display } from '@/paving/length';
-import type { Check } from '@/paving/set-out/set-out';
+import { checkById } from '@/paving/set-out/checks';
+import { courseOfRow } from '@/paving/set-out/course-numbers';
 import type { SiteEntryContent } from '@/paving/site/site-entry';
+import type { PackFloor } from './pack-floor';
 
-/** What was written down, in a line; readings with what was to be measured. */
+/** What was written down, in a line; courses by the sheets' numbers, readings with what was to be measured. */
 export const entryWords = (
   content: SiteEntryContent,
-  checks: readonly Pick<Check, 'id' | 'what'>[],
+  { laying, setOut }: PackFloor,
   display: Display,
 ): string => {
   switch (content.kind) {
-    case 'course':
-      return content.laid
-        ? `Course ${content.course} is laid.`
-        : `Course ${content.course} is not laid after all.`;
+    case 'course': {
+      const number = courseOfRow(setOut.courses, content.course)?.number ?? content.course;
+      return content.laid ? `Course ${number} is laid.` : `Course ${number} is not laid after all.`;
+    }
     case 'check': {
       const what = figuredText(
-        checks.find(({ id }) => id === content.check)?.what ?? content.check,
+        checkById(laying, setOut, content.check)?.what ?? content.check,
         display,
       );
       return content.measured === null

@@ -29,6 +29,10 @@ export const packFloor = (versionId: string, read: LayoutDocument): PackFloor =>
   return floor;
 };
 
+/** The courses laid, by the numbers that the sheets give them, in their order. */
+export const laidNumbers = ({ setOut: plan }: PackFloor, record: SiteRecord): readonly number[] =>
+  plan.courses.filter(({ row }) => record.laid.has(row)).map(({ number }) => number);
+
 export type PackEntry = RecordedEntry<PersonName> & {
   /** Null: the server has it. */
   readonly standing: 'waiting' | 'refused' | null;

@@ -14,6 +14,7 @@ export interface Joints {
  */
 export type JointFreedom = 'both' | 'one' | 'across' | 'none';
 
+/** Which joints of a bond can be changed on site. */
 export function jointFreedom({ kind }: Bond): JointFreedom {
   switch (kind) {
     case 'stack':

@@ -139,7 +139,10 @@ export interface Refit {
   /** Of the units still to lay; null when none is left. */
   readonly leastGap: number | null;
   readonly clearance: number;
-  /** Lines of the courses still to lay: from the string of the last course laid, square to it, and where the first unit starts on it. */
+  /**
+   * Lines of the courses still to lay: from the string of the last course laid, square to it and positive towards higher
+   * numbers, and where the first unit starts on it.
+   */
   readonly courses: readonly {
     readonly number: number;
     readonly fromLaid: number;

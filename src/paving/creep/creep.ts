@@ -5,6 +5,7 @@ import { layFloor, unitCorners, type Laying } from '../laying';
 import type { LayoutDocument } from '../layout-document';
 import { parseLayoutDocument } from '../layout-validation';
 import { LENGTH_TOLERANCE_MM } from '@/geometry/tolerance';
+import { workSide } from '../set-out/course-numbers';
 import { setOut, type Course, type SetOut } from '../set-out/set-out';
 import { stringStretches } from '../set-out/string-crossings';
 import { unitFind } from '../unit-rows';
@@ -134,8 +135,9 @@ export function creep(laying: Laying, input: CreepInput, plan: SetOut = setOut(l
   const longest = members.reduce((most, all) => (all.length > most.length ? all : most));
   const firstOf = members[0][0];
   const lastOf = members[members.length - 1][0];
+  const side = workSide(plan.courses);
   const height = (floor: UnitPlaces) =>
-    unitTouch(floor, lastOf, floor.origin).v - unitTouch(floor, firstOf, floor.origin).v;
+    side * (unitTouch(floor, lastOf, floor.origin).v - unitTouch(floor, firstOf, floor.origin).v);
   const acrossNow = height(floors.coming);
   const acrossGrowth = acrossNow - height(floors.planned);
   const acrossGain = height(floors.across) - acrossNow;
@@ -203,7 +205,7 @@ function heldCorner(
   const { direction, normal } = unitPlaces(document, ground).strings;
   const corners = unitCorners(motif[laid.k[unit]], laid.x[unit], laid.y[unit]);
   const off = ([x, y]: Point, [dx, dy]: Point) => x * dx + y * dy;
-  const out = (at: Point) => (fromFirst ? 1 : -1) * off(at, normal);
+  const out = (at: Point) => (fromFirst ? 1 : -1) * workSide(courses) * off(at, normal);
   const corner = [0, 1, 2, 3].reduce((best, n) => {
     const outer = out(corners[n]) - out(corners[best]);
     const level = Math.abs(outer) <= LENGTH_TOLERANCE_MM;

@@ -4,7 +4,7 @@ import type { LayoutDocument } from '../layout-document';
 import { parseLayoutDocument } from '../layout-validation';
 import { layFloor, type Laying } from '../laying';
 import { formatLength } from '../length';
-import { layingCourses } from '../set-out/courses';
+import { setOut } from '../set-out/set-out';
 import { actualDocument, jointFreedom, keptJoints } from './actual-pattern';
 import type { ActualUnit, JointLimits, Refit } from './creep-types';
 
@@ -63,7 +63,7 @@ export function freshFit(
   if (!best) throw new Error('no joint within the limits gives a pattern that can be laid');
   const planned = laying.laid.count + laying.lifted.count;
   const shown = (mm: number) => formatLength(mm, document.display, { decimals: 1 });
-  const { courses } = layingCourses(layFloor(best.document, ground));
+  const { courses } = setOut(layFloor(best.document, ground));
   let height = 0;
   return {
     keepsAll: best.count >= planned,

@@ -150,7 +150,7 @@ function restCourses(
       );
       return {
         number,
-        fromLaid: v,
+        fromLaid: floor.side * v,
         from: onGround(start, v),
         to: onGround(end, v),
         units,

@@ -1,6 +1,7 @@
 import type { Point } from '@/geometry/point';
 import type { Laying } from '../laying';
 import type { LayoutDocument } from '../layout-document';
+import { workSide } from '../set-out/course-numbers';
 import type { Course } from '../set-out/set-out-types';
 import { actualDocument, type Joints } from './actual-pattern';
 import type { ActualUnit, RefitInput } from './creep-types';
@@ -22,6 +23,8 @@ export interface RefitFloor {
   readonly left: readonly Course[];
   readonly rest: readonly UnitAddress[];
   readonly direction: Point;
+  /** 1 where courses of higher numbers lie left of the strings, -1 where they lie right. */
+  readonly side: 1 | -1;
 }
 
 export function refitFloor(
@@ -30,8 +33,8 @@ export function refitFloor(
   { laid: numbers, offset, along = 0 }: RefitInput,
 ): RefitFloor {
   const { laid, document, ground } = laying;
-  const upwards = numbers.includes(1);
-  const edge = upwards ? Math.max(...numbers) : Math.min(...numbers);
+  const onwards = numbers.includes(1);
+  const edge = onwards ? Math.max(...numbers) : Math.min(...numbers);
   const done = new Set(numbers);
   const last = courses[edge - 1];
   const left = courses.filter(({ number }) => !done.has(number));
@@ -39,6 +42,7 @@ export function refitFloor(
   const places = unitPlaces(document, ground);
   const anchor = addressOf(last.runs[0].laid[0]);
   const { direction, normal } = places.strings;
+  const side = workSide(courses);
   // The corner that touches the string first.
   const touch = unitTouch(places, anchor, document.placement.origin);
   const start: Point = [
@@ -51,13 +55,14 @@ export function refitFloor(
     anchor,
     corner: distances.indexOf(Math.min(...distances)),
     at: [
-      start[0] + along * direction[0] + offset * normal[0],
-      start[1] + along * direction[1] + offset * normal[1],
+      start[0] + along * direction[0] + side * offset * normal[0],
+      start[1] + along * direction[1] + side * offset * normal[1],
     ],
     last,
     left,
     rest: left.flatMap(({ runs }) => runs.flatMap((run) => run.laid.map(addressOf))),
     direction,
+    side,
   };
 }
 

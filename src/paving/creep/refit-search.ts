@@ -11,6 +11,7 @@ export interface Freedom {
   readonly to: number;
 }
 
+/** One unit still to lay, as the search asks about it; `values` are joints and shifts, mm. */
 export interface SearchUnit {
   /** Its distance to the edge at these values, mm; 0 where it is not in the ground. */
   readonly gap: (values: readonly number[]) => number;
@@ -18,6 +19,7 @@ export interface SearchUnit {
   readonly most: (middle: readonly number[], corners: readonly (readonly number[])[]) => number;
 }
 
+/** The values that keep most units, and of those the most gap, mm. */
 export interface SearchResult {
   readonly values: readonly number[];
   readonly kept: number;
@@ -44,6 +46,7 @@ interface Box {
   readonly gap: number;
 }
 
+/** The values that keep most units, and of those the widest least gap: branch and bound over boxes of joints and shifts, up to MOST_BOXES. */
 export function bestValues(
   units: readonly SearchUnit[],
   freedoms: readonly Freedom[],

@@ -1,6 +1,6 @@
 import type { Laying } from '../laying';
 import type { LayoutDocument } from '../layout-document';
-import { layingCourses } from '../set-out/courses';
+import { setOut, type SetOut } from '../set-out/set-out';
 import { keptJoints } from './actual-pattern';
 import { actualUnits } from './actual-units';
 import type { ActualUnit, RefitInput, RefitResult } from './creep-types';
@@ -21,9 +21,12 @@ export type * from './creep-types';
  * the courses is left as it was laid, so that joints stay in line; only where that loses units is it changed too. The answer is
  * laid by the ordinary laying before it is given; a disagreement throws, with the place.
  */
-export function refit(laying: Laying, input: RefitInput): RefitResult {
+export function refit(
+  laying: Laying,
+  input: RefitInput,
+  { courses }: Pick<SetOut, 'courses'> = setOut(laying),
+): RefitResult {
   const { document } = laying;
-  const { courses } = layingCourses(laying);
   const problem = refitProblem(document, courses, input);
   if (problem) return { ok: false, message: problem };
   const units = actualUnits(document, input.measures);

@@ -75,6 +75,7 @@ export function nearestChord(
   return { chord, distance };
 }
 
+/** Whether a point lies inside the perimeter and outside every keep-out. */
 export const inGround = ({ rings }: Ground, at: Point): boolean =>
   rings.every(({ ring, outline }) => ringHolds(outline, at) === (ring === 0));
 

@@ -15,6 +15,7 @@ export interface UnitPlaces {
 
 export type UnitAddress = readonly [i: number, j: number, k: number];
 
+/** How the addresses of a floor become places, also of units that are not laid. */
 export function unitPlaces(document: LayoutDocument, ground: Ground): UnitPlaces {
   const { lattice, motif, centres } = patternRows(document, ground);
   return {
@@ -26,6 +27,7 @@ export function unitPlaces(document: LayoutDocument, ground: Ground): UnitPlaces
   };
 }
 
+/** Centre of the unit of an address, mm. */
 export function unitPlace(
   { origin, lattice: { a, b }, centres }: UnitPlaces,
   [i, j, k]: UnitAddress,
@@ -36,6 +38,7 @@ export function unitPlace(
   ];
 }
 
+/** Corners of the unit of an address, anticlockwise, mm. */
 export function placedCorners(places: UnitPlaces, address: UnitAddress) {
   const [x, y] = unitPlace(places, address);
   return unitCorners(places.motif[address[2]], x, y);

@@ -4,9 +4,9 @@ import type { GroundEdge } from '../ground';
 import type { Laying } from '../laying';
 import { figured } from '../figured-words';
 import { MM_PER_FOOT } from '../length';
-import type { Report } from '../report';
+import { wholeReport, type Report } from '../report';
 import { cornerLabel, cornerTurns } from './marks';
-import type { Check, Course, Diagonal } from './set-out-types';
+import type { Check, Course, Diagonal, SetOut } from './set-out-types';
 import { TAPE_READING_MM } from './tape-cross';
 
 /** Published by the trade's institute for interlocking concrete pavements, on one sheet; in mm where it has inches and mm. */
@@ -158,32 +158,85 @@ function gapChecks({ laying, report }: Floor): Check[] {
     });
 }
 
+const rowsId = (from: Course, to: Course) => `rows-${from.row}-${to.row}`;
+
+/** From one string to another; `span` is from the first string to the last, mm. */
+function rowCheck(report: Report, from: Course, to: Course, apart: number, span: number): Check {
+  const limit = lengthLimit(report, apart / span);
+  return {
+    id: rowsId(from, to),
+    kind: 'rows',
+    what: `From the string of course ${from.number} to that of course ${to.number}, square to them`,
+    from: String(from.number),
+    to: String(to.number),
+    ...around(apart, limit.off),
+    source: limit.source,
+  };
+}
+
+/** How far each course's string is from the first one's, mm. */
+const stringHeights = (courses: readonly Course[]): readonly number[] => {
+  let height = 0;
+  return courses.map(({ step }) => (height += step ?? 0));
+};
+
 function rowChecks({ report, courses }: Floor): Check[] {
   if (courses.length < 2) return [];
-  const heights = courses.reduce<number[]>(
-    (sums, { step }) => [...sums, (sums[sums.length - 1] ?? 0) + (step ?? 0)],
-    [],
-  );
+  const heights = stringHeights(courses);
   const all = heights[heights.length - 1];
   const every = Math.max(ROWS_EVERY_MM, all / MOST_OF_A_KIND);
   const checks: Check[] = [];
   let last = 0;
-  courses.forEach(({ number }, n) => {
+  courses.forEach((course, n) => {
     const final = n === courses.length - 1;
     if (n === 0 || (heights[n] - last < every && !final)) return;
     last = heights[n];
-    const limit = lengthLimit(report, heights[n] / all);
-    checks.push({
-      id: `rows-1-${number}`,
-      kind: 'rows',
-      what: `From the string of course 1 to that of course ${number}, square to them`,
-      from: '1',
-      to: String(number),
-      ...around(heights[n], limit.off),
-      source: limit.source,
-    });
+    checks.push(rowCheck(report, courses[0], course, heights[n], all));
   });
   return checks;
+}
+
+/** Whether an id is that of a check between two of so many rows, listed or not. */
+export function isRowsCheck(id: string, rows: number): boolean {
+  const [, from, to] = /^rows-([1-9]\d*)-([1-9]\d*)$/.exec(id) ?? [];
+  return from !== undefined && from !== to && Number(from) <= rows && Number(to) <= rows;
+}
+
+/**
+ * The check that a reading is of: one of the list, or, of strings that were measured from another start of the work than
+ * the one of today, that of those two strings. Null when there is no such check on the floor.
+ */
+export function checkById(
+  laying: Laying,
+  { checks, courses }: Pick<SetOut, 'checks' | 'courses'>,
+  id: string,
+): Check | null {
+  const listed = checks.find((check) => check.id === id);
+  if (listed) return listed;
+  if (!isRowsCheck(id, courses.length)) return null;
+  const [from, to] = id
+    .split('-')
+    .slice(1)
+    .map((row) => courses.findIndex((course) => course.row === Number(row)));
+  const heights = stringHeights(courses);
+  return rowCheck(
+    wholeReport(laying),
+    courses[from],
+    courses[to],
+    Math.abs(heights[to] - heights[from]),
+    heights[heights.length - 1],
+  );
+}
+
+/** The list, and after it what else there are readings of. */
+export function checksWithReadings(
+  laying: Laying,
+  plan: Pick<SetOut, 'checks' | 'courses'>,
+  readings: Iterable<string>,
+): readonly Check[] {
+  const listed = new Set(plan.checks.map(({ id }) => id));
+  const others = [...readings].filter((id) => !listed.has(id));
+  return [...plan.checks, ...others.flatMap((id) => checkById(laying, plan, id) ?? [])];
 }
 
 function runChecks({ laying, report, courses }: Floor): Check[] {

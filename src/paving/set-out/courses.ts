@@ -16,7 +16,7 @@ interface CourseUnits {
   readonly units: number[];
 }
 
-/** Which course each laid unit is in, by its number less one; -1 for none. */
+/** The courses by rows, numbered alike; and which of them each laid unit is in, by its row less one, -1 for none. */
 export interface CourseIndex {
   readonly courses: readonly Course[];
   readonly courseOf: Int32Array;
@@ -168,6 +168,7 @@ export function layingCourses(laying: Laying): CourseIndex {
 
     return {
       number: n + 1,
+      row: n + 1,
       from: onGround(start, v),
       to: onGround(end, v),
       length: end - start,

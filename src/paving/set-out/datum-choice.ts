@@ -9,6 +9,7 @@ const corner = z.tuple([z.number().int().min(0), z.number().int().min(0)], {
   error: 'must be a corner [ring, vertex], such as [0, 2]',
 });
 
+/** The corners that a person chose to tape from. */
 export const setOutChoiceSchema = z.object({
   /** Ring (0 the perimeter, 1 the first keep-out …) and vertex of each; left out, the program picks. */
   datums: z.tuple([corner, corner], { error: 'must be two corners, each [ring, vertex]' }),

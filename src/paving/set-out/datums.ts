@@ -5,10 +5,9 @@ import type { Ground } from '../ground';
 import { LEAST_BASELINE_MM } from './datum-choice';
 import { cornerLabel, cornerTurns, LEAST_CORNER_DEG, type Mark } from './marks';
 import type { CornerAddress, Datum } from './set-out-types';
-import { crossingIsClean, crossingAngle, runningOffsets, tapeUncertainty } from './tape-cross';
+import { runningOffsets, tapesMeetCleanly, tapeUncertainty } from './tape-cross';
+import { tapedMarks } from './taped-marks';
 
-/** More corners than this are not tried two by two: of an outline with more, those that lie farthest apart. */
-const MOST_CORNERS = 40;
 /** Pairs whose worst points differ by less than this, mm, are as good. */
 const SAME_MM = 0.05;
 
@@ -76,25 +75,6 @@ export function sightBetween({ rings }: Ground, a: Point, b: Point): Sight {
   return { inside, crosses };
 }
 
-/** The corners to try: all of a plain outline, of a fine one those farthest from each other. */
-function candidates(ground: Ground): number[] {
-  const { edges } = ground.rings[0];
-  if (edges.length <= MOST_CORNERS) return edges.map((_, n) => n);
-  const chosen: number[] = [0];
-  const near = edges.map(() => Infinity);
-  while (chosen.length < MOST_CORNERS) {
-    const last = edges[chosen[chosen.length - 1]].start;
-    let farthest = 0;
-    edges.forEach(({ start }, n) => {
-      near[n] = Math.min(near[n], Math.hypot(start[0] - last[0], start[1] - last[1]));
-      if (near[n] > near[farthest]) farthest = n;
-    });
-    if (near[farthest] === 0) break;
-    chosen.push(farthest);
-  }
-  return chosen.sort((one, other) => one - other);
-}
-
 const sameCorner = (mark: Mark, { ring, vertex }: Datum) =>
   mark.corner !== null && mark.corner[0] === ring && mark.corner[1] === vertex;
 
@@ -106,7 +86,7 @@ export function datumPair(
 ): DatumPair {
   const turns = ground.rings.map(cornerTurns);
   const [a, b] = datums;
-  const { failing, worst } = marksFrom(marks, a, b, Infinity);
+  const { failing, worst } = marksFrom(marks, a, b);
   return {
     datums,
     failing,
@@ -117,46 +97,52 @@ export function datumPair(
   };
 }
 
-/** Marks that fail from a and b, left off when they are more than `most`; and the worst of the others. */
-function marksFrom(marks: readonly Mark[], a: Datum, b: Datum, most: number) {
+/** Marks that fail from a and b, and the uncertainty of the worst of the others. */
+function marksFrom(marks: readonly Mark[], a: Datum, b: Datum) {
   const failing: number[] = [];
   const baseline = Math.hypot(b.at[0] - a.at[0], b.at[1] - a.at[1]);
   let worst = 0;
-  for (let n = 0; n < marks.length && failing.length <= most; n++) {
-    const mark = marks[n];
-    if (sameCorner(mark, a) || sameCorner(mark, b)) continue;
-    if (!crossingIsClean(crossingAngle(a.at, b.at, mark.at))) {
-      failing.push(n);
-      continue;
-    }
-    const [along, square] = runningOffsets(a.at, b.at, mark.at);
-    const uncertainty = tapeUncertainty(baseline, along, square);
+  marks.forEach((mark, n) => {
+    if (sameCorner(mark, a) || sameCorner(mark, b)) return;
+    const uncertainty = tapesMeetCleanly(a.at, b.at, mark.at)
+      ? tapeUncertainty(baseline, ...runningOffsets(a.at, b.at, mark.at))
+      : null;
     if (uncertainty === null) failing.push(n);
     else worst = Math.max(worst, uncertainty);
-  }
+  });
   return { failing, worst };
 }
+
+const perimeterCorners = (ground: Ground): readonly Datum[] =>
+  ground.rings[0].edges.map((_, n) => datumAt(ground, [0, n]));
+
+const isBaseline = (a: Datum, b: Datum) =>
+  Math.hypot(b.at[0] - a.at[0], b.at[1] - a.at[1]) >= LEAST_BASELINE_MM;
 
 /**
  * Of all pairs of the perimeter's corners the one from which the fewest marks fail to be taped cleanly; of
  * those, corners that can be seen, then a baseline over the ground and clear of keep-outs, then the smallest worst uncertainty. `more` gives marks that
- * hang on the pair themselves.
+ * hang on the pair themselves. Every pair is tried, but no further than it takes to know that another one is better.
  */
 export function bestDatums(
   ground: Ground,
   marks: readonly Mark[],
   more: (a: Datum, b: Datum) => readonly Mark[],
 ): DatumPair {
-  const corners = candidates(ground).map((vertex) => datumAt(ground, [0, vertex]));
+  const corners = perimeterCorners(ground);
+  const turns = cornerTurns(ground.rings[0]);
+  const view = tapedMarks(marks);
   let fewest = Infinity;
   let found: (readonly [Datum, Datum])[] = [];
   corners.forEach((a, n) => {
     for (const b of corners.slice(n + 1)) {
-      if (Math.hypot(b.at[0] - a.at[0], b.at[1] - a.at[1]) < LEAST_BASELINE_MM) continue;
-      const { failing } = marksFrom([...more(a, b), ...marks], a, b, fewest);
-      if (failing.length > fewest) continue;
-      if (failing.length < fewest) found = [];
-      fewest = failing.length;
+      if (!isBaseline(a, b)) continue;
+      const fixed = view.failures(a, b, fewest);
+      if (fixed > fewest) continue;
+      const failing = fixed + marksFrom(more(a, b), a, b).failing.length;
+      if (failing > fewest) continue;
+      if (failing < fewest) found = [];
+      fewest = failing;
       found.push([a, b]);
     }
   });
@@ -164,18 +150,34 @@ export function bestDatums(
     // A ground smaller than a baseline: its two farthest corners.
     found = [farthestCorners(corners)];
   }
-  const blocked = ({ sight }: DatumPair) => (sight.inside && sight.crosses.length === 0 ? 0 : 1);
-  return found
-    .map((pair) => datumPair(ground, [...marks, ...more(...pair)], pair))
-    .reduce((best, pair) => {
-      const order =
-        best.unseen - pair.unseen || blocked(best) - blocked(pair) || best.worst - pair.worst;
-      const better =
-        best.unseen !== pair.unseen || blocked(best) !== blocked(pair)
-          ? order > 0
-          : order > SAME_MM;
-      return better ? pair : best;
-    });
+  const [first, ...others] = found;
+  let best = judged(first);
+  for (const pair of others) {
+    const unseen = unseenOf(pair);
+    if (unseen > best.unseen) continue;
+    if (unseen === best.unseen) {
+      const limit = best.worst - SAME_MM;
+      const finer =
+        marksFrom(more(...pair), ...pair).worst < limit && view.worstUnder(...pair, limit);
+      if (!finer && !best.blocked) continue;
+      const blocked = isBlocked(pair);
+      if (blocked ? !best.blocked || !finer : best.blocked ? false : !finer) continue;
+    }
+    best = judged(pair);
+  }
+  return datumPair(ground, [...marks, ...more(...best.pair)], best.pair);
+
+  function unseenOf(pair: readonly [Datum, Datum]): number {
+    return pair.filter(({ vertex }) => Math.abs(turns[vertex]) < LEAST_CORNER_DEG).length;
+  }
+  function isBlocked([a, b]: readonly [Datum, Datum]): boolean {
+    const sight = sightBetween(ground, a.at, b.at);
+    return !sight.inside || sight.crosses.length > 0;
+  }
+  function judged(pair: readonly [Datum, Datum]) {
+    const { worst } = marksFrom([...marks, ...more(...pair)], ...pair);
+    return { pair, unseen: unseenOf(pair), blocked: isBlocked(pair), worst };
+  }
 }
 
 function farthestCorners(corners: readonly Datum[]): readonly [Datum, Datum] {
@@ -195,29 +197,35 @@ export function secondPairs(
   failing: readonly number[],
   most: number,
 ): ReadonlyMap<number, readonly [Datum, Datum]> {
-  const corners = candidates(ground).map((vertex) => datumAt(ground, [0, vertex]));
+  const corners = perimeterCorners(ground);
   const taken = new Map<number, readonly [Datum, Datum]>();
   let left = [...failing];
   for (let round = 0; round < most && left.length > 0; round++) {
-    let best: { pair: readonly [Datum, Datum]; does: number[]; worst: number } | null = null;
+    const subset = left.map((at) => marks[at]);
+    const view = tapedMarks(subset);
+    let best: { pair: readonly [Datum, Datum]; does: number; worst: number } | null = null;
     corners.forEach((a, n) => {
       for (const b of corners.slice(n + 1)) {
-        if (Math.hypot(b.at[0] - a.at[0], b.at[1] - a.at[1]) < LEAST_BASELINE_MM) continue;
-        const subset = left.map((at) => marks[at]);
-        const { failing: still, worst } = marksFrom(subset, a, b, Infinity);
-        const out = new Set(still);
-        const does = left.filter(
-          (at, m) => !out.has(m) && !sameCorner(marks[at], a) && !sameCorner(marks[at], b),
-        );
-        const more = does.length - (best?.does.length ?? 0);
-        if (more > 0 || (more === 0 && best && worst < best.worst - SAME_MM))
-          best = { pair: [a, b], does, worst };
+        if (!isBaseline(a, b)) continue;
+        const own = view.cornersAmong(a, b);
+        const needed = Math.max(1, best?.does ?? 1);
+        const failed = view.failures(a, b, left.length - own - needed);
+        const does = left.length - own - failed;
+        if (does < needed) continue;
+        const more = best === null || does > best.does;
+        if (!more && !view.worstUnder(a, b, best!.worst - SAME_MM)) continue;
+        best = { pair: [a, b], does, worst: marksFrom(subset, a, b).worst };
       }
     });
-    const found = best as { pair: readonly [Datum, Datum]; does: number[] } | null;
+    const found = best as { pair: readonly [Datum, Datum] } | null;
     if (!found) break;
-    for (const at of found.does) taken.set(at, found.pair);
-    const done = new Set(found.does);
+    const [a, b] = found.pair;
+    const still = new Set(marksFrom(subset, a, b).failing);
+    const does = left.filter(
+      (_, m) => !still.has(m) && !sameCorner(subset[m], a) && !sameCorner(subset[m], b),
+    );
+    for (const at of does) taken.set(at, found.pair);
+    const done = new Set(does);
     left = left.filter((at) => !done.has(at));
   }
   return taken;

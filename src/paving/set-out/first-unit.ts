@@ -1,8 +1,9 @@
 import type { Point } from '@/geometry/point';
 import { LENGTH_TOLERANCE_MM } from '@/geometry/tolerance';
 import { unitCorners, type Laying } from '../laying';
+import type { WorkStart } from './course-numbers';
 import type { CourseIndex } from './courses';
-import type { FirstUnit } from './set-out-types';
+import type { Course, FirstUnit } from './set-out-types';
 
 /** A corner of a laid unit; `nearest` is which of its four. */
 export interface UnitCorner {
@@ -11,23 +12,31 @@ export interface UnitCorner {
   readonly at: Point;
 }
 
-/** The laid units' corners that are nearest to a point: one, or several that are as near to 0.01 mm. */
-export function nearestCorners({ laid, motif }: Laying, [px, py]: Point): UnitCorner[] {
-  // Corners lie within half a diagonal of the centre: few units need theirs looked at.
-  const far = new Float64Array(laid.count);
-  let centre = Infinity;
-  for (let n = 0; n < laid.count; n++) {
-    far[n] = Math.hypot(laid.x[n] - px, laid.y[n] - py);
-    centre = Math.min(centre, far[n]);
-  }
-  const reach = Math.max(0, ...motif.map(({ unit }) => Math.hypot(unit.length, unit.width)));
-  const found: (UnitCorner & { distance: number })[] = [];
-  for (let n = 0; n < laid.count; n++) {
-    if (far[n] > centre + reach) continue;
-    unitCorners(motif[laid.k[n]], laid.x[n], laid.y[n]).forEach((at, nearest) => {
-      found.push({ unit: n, nearest, at, distance: Math.hypot(at[0] - px, at[1] - py) });
-    });
-  }
+const courseUnits = ({ runs }: Course) => runs.flatMap((run) => run.laid);
+
+/**
+ * The units that work may start with: those of the two outermost courses, so that it goes through the floor one way.
+ */
+export function outermostUnits({ courses }: CourseIndex): readonly number[] {
+  if (courses.length === 0) return [];
+  const last = courses.length > 1 ? courseUnits(courses[courses.length - 1]) : [];
+  return [...courseUnits(courses[0]), ...last];
+}
+
+/** Of those units' corners the nearest to a point: one, or several that are as near to 0.01 mm. */
+export function nearestCorners(
+  { laid, motif }: Laying,
+  units: readonly number[],
+  [px, py]: Point,
+): UnitCorner[] {
+  const found = units.flatMap((unit) =>
+    unitCorners(motif[laid.k[unit]], laid.x[unit], laid.y[unit]).map((at, nearest) => ({
+      unit,
+      nearest,
+      at,
+      distance: Math.hypot(at[0] - px, at[1] - py),
+    })),
+  );
   const least = found.reduce((min, { distance }) => Math.min(min, distance), Infinity);
   return found
     .filter(({ distance }) => distance <= least + LENGTH_TOLERANCE_MM)
@@ -48,29 +57,32 @@ export function cornerChosen(
   );
 }
 
-/**
- * The unit to lay first: that with the corner nearest to the first datum, in a tie the one further along
- * the baseline. Null when nothing is laid.
- */
+/** The outermost course that the corner's unit is in. */
+export const workStart = (
+  { courses, courseOf }: CourseIndex,
+  corner: UnitCorner | null,
+): WorkStart =>
+  corner && courseOf[corner.unit] === courses.length - 1 && courses.length > 1
+    ? 'last-row'
+    : 'first-row';
+
+/** The unit to lay first, given its corner nearest to the first datum and the courses in the order of the work. */
 export function firstUnit(
   laying: Laying,
-  { courses, courseOf }: CourseIndex,
+  courses: readonly Course[],
+  { unit, nearest }: UnitCorner,
   first: Point,
   second: Point,
-): FirstUnit | null {
+): FirstUnit {
   const { laid, motif } = laying;
-  const chosen = cornerChosen(nearestCorners(laying, first), first, second);
-  if (!chosen) return null;
-  const { unit, nearest } = chosen;
-  const course = courses[courseOf[unit]];
+  const [course] = courses;
   const bearing = (from: Point, to: Point) => Math.atan2(to[1] - from[1], to[0] - from[0]);
   const turn = ((bearing(course.from, course.to) - bearing(first, second)) * 180) / Math.PI;
-  const members = course.runs.flatMap((run) => run.laid);
   return {
     unit,
     unitId: motif[laid.k[unit]].unit.id,
     course: course.number,
-    place: members.indexOf(unit) + 1,
+    place: courseUnits(course).indexOf(unit) + 1,
     corners: unitCorners(motif[laid.k[unit]], laid.x[unit], laid.y[unit]),
     nearest,
     turnDeg: 90 - ((((90 - turn) % 180) + 180) % 180),

@@ -98,6 +98,10 @@ export interface Diagonal {
   readonly sameAs: readonly [string, string] | null;
 }
 
+/**
+ * The unit that work starts from, in course 1: of the two outermost courses the one that comes nearer to the first datum,
+ * and of it the unit that does.
+ */
 export interface FirstUnit {
   /** Index into the laid units. */
   readonly unit: number;
@@ -115,11 +119,17 @@ export interface FirstUnit {
 
 /**
  * One course: the units that touch its string with their near side, or with a corner where no side is
- * parallel to it. Strings run from left to right on the plan (upwards where upright), courses are numbered from 1 away
- * from the string's right hand. Running lengths are measured along the string from its start.
+ * parallel to it. Strings run from left to right on the plan (upwards where upright), and the units stand on their left.
+ * Running lengths are measured along the string from its start.
  */
 export interface Course {
+  /** In the order of the work, from 1: the course of the first unit, then on to the other side of the floor. */
   readonly number: number;
+  /**
+   * Its place among the strings, from 1 at their right hand to their left. It hangs on the floor alone, not on where
+   * the work starts: records of what is laid hold on to it.
+   */
+  readonly row: number;
   /** The string's ends: where its line meets the edge before its first unit and after its last. */
   readonly from: Point;
   readonly to: Point;
@@ -129,7 +139,7 @@ export interface Course {
   /** Along the string from its start to the first unit, and from the last unit to its end. */
   readonly startGap: number;
   readonly endGap: number;
-  /** From the string of the course before, square to it; null for the first. */
+  /** How far its string is from that of the course before, square to it; null for the first. */
   readonly step: number | null;
   /** Units one after another as the bond has them, without one missing between. */
   readonly runs: readonly CourseRun[];
@@ -172,7 +182,7 @@ export type CheckKind =
 
 /** Something to measure once it is laid or pegged. */
 export interface Check {
-  /** The same for the same floor and datums: `edge-AB`, `square-A`, `rows-1-10`. */
+  /** The same for the same floor and datums: `edge-AB`, `square-A`, `rows-1-10` (rows, not the courses' numbers). */
   readonly id: string;
   readonly kind: CheckKind;
   /** An instruction: "Measure edge AB". Its lengths are written by whoever shows it. */

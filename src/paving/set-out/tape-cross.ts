@@ -6,7 +6,6 @@ import type { Side, TapeCross } from './set-out-types';
 export const TAPE_READING_MM = 2;
 /** Tapes that meet flatter or sharper than this do not fix a point well, degrees. */
 export const LEAST_CROSSING_DEG = 30;
-export const GREATEST_CROSSING_DEG = 150;
 
 /** Rounding of an angle that is just 30° or 150°, degrees. */
 const ANGLE_ROUNDING_DEG = 1e-7;
@@ -83,10 +82,22 @@ export function tapeCross(first: Point, second: Point, at: Point): TapeCross {
     crossingDeg,
     side,
     uncertainty,
-    clean: uncertainty !== null && crossingIsClean(crossingDeg),
+    clean: uncertainty !== null && tapesMeetCleanly(first, second, at),
   };
 }
 
-export const crossingIsClean = (crossingDeg: number): boolean =>
-  crossingDeg >= LEAST_CROSSING_DEG - ANGLE_ROUNDING_DEG &&
-  crossingDeg <= GREATEST_CROSSING_DEG + ANGLE_ROUNDING_DEG;
+/** Across over along where two tapes meet at 30°. */
+export const CLEAN_SLOPE = Math.tan(((LEAST_CROSSING_DEG - ANGLE_ROUNDING_DEG) * Math.PI) / 180);
+
+/**
+ * Tapes from there meet at `at` between 30° and 150°. The cross product of the ways back is |p||q| sin γ, the dot product
+ * |p||q| cos γ, and 150° is 30° the other way: a comparison of the two, without an angle.
+ */
+export function tapesMeetCleanly(first: Point, second: Point, at: Point): boolean {
+  const ax = first[0] - at[0];
+  const ay = first[1] - at[1];
+  const bx = second[0] - at[0];
+  const by = second[1] - at[1];
+  const across = Math.abs(ax * by - ay * bx);
+  return across > 0 && across >= CLEAN_SLOPE * Math.abs(ax * bx + ay * by);
+}

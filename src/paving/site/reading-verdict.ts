@@ -29,6 +29,7 @@ export interface Verdict {
   readonly past: number;
 }
 
+/** How a reading stands to what a check allows, all in the measure of the check, mm. */
 export const readingVerdict = (
   { expected, least, greatest }: Pick<Check, 'expected' | 'least' | 'greatest'>,
   measured: number,
@@ -79,6 +80,7 @@ const REMEDIES: Readonly<Record<CheckKind, (long: boolean) => string>> = {
       : 'Too thin here. Add material, compact again and measure again.',
 };
 
+/** What to do about a reading that is out of its limits; null within them. */
 export const readingRemedy = (check: Pick<Check, 'kind'>, verdict: Verdict): string | null =>
   verdict.within ? null : REMEDIES[check.kind](verdict.off > 0);
 

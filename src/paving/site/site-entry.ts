@@ -13,7 +13,7 @@ const words = (most: number, what: string) =>
     .trim()
     .max(most, `Keep ${what} to ${formatCount(most)} characters`);
 
-/** A course of the set-out is laid, or is not after all. */
+/** A course of the set-out is laid, or is not after all: by its row, which stays whatever number the sheets give it. */
 const courseEntrySchema = z.object({
   kind: z.literal('course'),
   course: z.number().int().min(1).max(1_000_000),

@@ -16,7 +16,7 @@ export interface RecordedEntry<By = unknown> {
 
 /** How the ground stands by the entries: the last word on each course and each check. */
 export interface SiteRecord<By = unknown> {
-  /** Courses laid, by number. */
+  /** Courses laid, by row. */
   readonly laid: ReadonlyMap<number, RecordedEntry<By>>;
   /** Readings that stand, by the check's id. */
   readonly readings: ReadonlyMap<string, RecordedEntry<By> & { readonly measured: number }>;

@@ -12,6 +12,7 @@ const SIZES = {
 /** What a camera or a phone makes. Drawings that run programs or reach for other files, such as SVG, are none of these. */
 const KINDS: ReadonlySet<string> = new Set(['jpeg', 'png', 'webp', 'heif']);
 
+/** A photo drawn anew as JPEG, whole and for phones; size of the whole one in pixels. */
 export interface EncodedPhoto {
   readonly width: number;
   readonly height: number;

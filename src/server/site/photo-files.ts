@@ -2,6 +2,7 @@ import { asc, eq } from 'drizzle-orm';
 import { sitePhotos } from '@/db/schema';
 import type { Db } from '../database';
 
+/** Every photo is kept as this, whatever it came as. */
 export const PHOTO_TYPE = 'image/jpeg';
 
 /** The name of a photo's file, by the SHA-256 of its bytes: a file is never altered, only joined by another. */

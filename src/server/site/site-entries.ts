@@ -46,7 +46,7 @@ const faultOf = (
         : `There is no course ${content.course} on this floor; it has ${courses}.`;
     }
     case 'check':
-      return versionSetOut(versionId, document).checks.has(content.check)
+      return versionSetOut(versionId, document).hasCheck(content.check)
         ? null
         : 'This check is not on the list of this version.';
     case 'photo':

@@ -23,6 +23,7 @@ export const refuseUnlessEntering = (actor: Actor): Refusal | null =>
         'Only the crew and the firm write down what is done on site. You see how it goes.',
       );
 
+/** When, by whom and with what words a version was issued. */
 export interface Issue {
   readonly at: Date;
   readonly note: string;

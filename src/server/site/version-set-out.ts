@@ -1,11 +1,12 @@
 import { layFloor } from '@/paving/laying';
 import type { LayoutDocument } from '@/paving/layout-document';
+import { isRowsCheck } from '@/paving/set-out/checks';
 import { setOut } from '@/paving/set-out/set-out';
 
 /** What entries of a version may be about. */
 export interface SetOutNames {
   readonly courses: number;
-  readonly checks: ReadonlySet<string>;
+  readonly hasCheck: (id: string) => boolean;
 }
 
 /** Versions whose set-out is kept in memory: a batch of entries comes in for the same few versions all day. */
@@ -18,9 +19,10 @@ export const versionSetOut = (versionId: string, document: LayoutDocument): SetO
   const known = kept.get(versionId);
   if (known) return known;
   const { courses, checks } = setOut(layFloor(document));
+  const ids = new Set(checks.map(({ id }) => id));
   const names = {
     courses: courses.length,
-    checks: new Set(checks.map(({ id }) => id)),
+    hasCheck: (id: string) => ids.has(id) || isRowsCheck(id, courses.length),
   };
   if (kept.size >= MOST_KEPT) kept.delete(kept.keys().next().value!);
   kept.set(versionId, names);

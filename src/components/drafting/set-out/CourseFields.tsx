@@ -1,5 +1,6 @@
 import { ChevronLeft, ChevronRight } from 'lucide-react';
 import { formatCount } from '@/paving/count';
+import { workSide } from '@/paving/set-out/course-numbers';
 import type { Course, CourseRun, SetOut } from '@/paving/set-out/set-out';
 import { Length } from '../../ui/Length';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
@@ -67,6 +68,7 @@ export function CourseFields({ setOut }: { setOut: SetOut }) {
   if (courses.length === 0) return null;
   const number = pointShown(setOut, { point, pointed: null })?.course ?? 1;
   const course = courses[number - 1];
+  const side = workSide(courses) === 1 ? 'left' : 'right';
   const length = (mm: number) => <Length mm={mm} display={document.display} decimals={1} />;
   const figure = (mm: number) => (
     <Length
@@ -113,7 +115,12 @@ export function CourseFields({ setOut }: { setOut: SetOut }) {
         <b>{course.units === 1 ? '1 unit' : `${formatCount(course.units)} units`}</b> on a string of{' '}
         {length(course.length)}: {length(course.startGap)} to the first, {length(course.endGap)}{' '}
         after the last.
-        {course.step !== null && <> {length(course.step)} up from the string before.</>}
+        {course.step !== null && (
+          <>
+            {' '}
+            {length(course.step)} from the string before, to its {side}.
+          </>
+        )}
       </p>
       <div className="mt-2 max-h-72 overflow-y-auto">
         <table className="w-full text-right text-[0.93rem]">

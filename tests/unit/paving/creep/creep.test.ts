@@ -5,7 +5,6 @@ import { refit } from '@/paving/creep/refit';
 import { layFloor, unitCorners, type Laying } from '@/paving/laying';
 import type { LayoutDocument, Vertex } from '@/paving/layout-document';
 import { floorReport } from '@/paving/report';
-import { layingCourses } from '@/paving/set-out/courses';
 import { setOut } from '@/paving/set-out/set-out';
 import { unitFind } from '@/paving/unit-rows';
 import { anyDocument, documentOf, parsed, real, unitOf } from '../../../oracle/documents';
@@ -71,7 +70,7 @@ describe('units that run large or small', () => {
   });
 
   test('edges: with courses laid the outermost of them stays, wherever the first unit is', () => {
-    // Taped from C and D: the first unit is at the far corner.
+    // Taped from C and D: the first unit is at the far corner, and the courses count down from there.
     const far = field({
       setOut: {
         datums: [
@@ -87,8 +86,8 @@ describe('units that run large or small', () => {
     };
     const gaps = (...all: number[]) => all.map((gap) => gap.toFixed(6));
     expect(coming([])).toEqual([null, ...gaps(40 - 9, 60, 60, 40 - 9)]);
-    expect(coming([1, 2, 3])).toEqual([1, ...gaps(40, 60 - 9, 60 - 9, 40)]);
-    expect(coming([10, 9])).toEqual([10, ...gaps(40 - 9, 60 - 9, 60, 40)]);
+    expect(coming([1, 2, 3])).toEqual([1, ...gaps(40 - 9, 60 - 9, 60, 40)]);
+    expect(coming([10, 9])).toEqual([10, ...gaps(40, 60 - 9, 60 - 9, 40)]);
   });
 
   test('more growth than the gap: a row of ten and a column of ten are lost', () => {
@@ -303,7 +302,8 @@ describe('re-fit', () => {
         real(0.2, 0.8),
         (document, growth, offset, share) => {
           const laying = layFloor(document);
-          const { courses } = layingCourses(laying);
+          const plan = setOut(laying);
+          const { courses } = plan;
           fc.pre(courses.length >= 3 && laying.laid.count < 150);
           fc.pre(document.bond.kind !== 'custom');
           const done = Math.max(1, Math.floor(courses.length * share));
@@ -317,7 +317,7 @@ describe('re-fit', () => {
           );
           const input = { measures, laid: Array.from({ length: done }, (_, n) => n + 1), offset };
           const at = (joints?: { least: number; greatest: number }) => {
-            const result = refit(laying, joints ? { ...input, joints } : input);
+            const result = refit(laying, joints ? { ...input, joints } : input, plan);
             if (!result.ok) throw new Error(result.message);
             return result.refit;
           };
@@ -384,11 +384,45 @@ describe('re-fit', () => {
 
   test('with all laid there is nothing to fit', () => {
     const laying = field();
-    const all = layingCourses(laying).courses.map(({ number }) => number);
+    const all = setOut(laying).courses.map(({ number }) => number);
     const result = refit(laying, { measures: [], laid: all, offset: 0 });
     expect(result).toMatchObject({
       ok: true,
       refit: { toLay: 0, kept: 0, leastGap: null, courses: [] },
+    });
+  });
+
+  test('numbered from the far side, the rest is the same floor the other way up', () => {
+    const upright = field();
+    const from = (datums: [[number, number], [number, number]]) =>
+      field({
+        // The same gaps all round: seen from C it is the floor that is seen from A.
+        ground: { perimeter: rectangle(4627, 4627), keepOuts: [] },
+        placement: { origin: [50 + 225, 50 + 225], turn: 0 },
+        setOut: { datums },
+      });
+    expect(upright.laid.count).toBe(100);
+    const at = (datums: [[number, number], [number, number]]) => {
+      const laying = from(datums);
+      const result = refit(laying, { measures: [], laid: [1, 2, 3], offset: 6 });
+      if (!result.ok) throw new Error(result.message);
+      const { courses, keepsAll, jointAcross, leastGap } = result.refit;
+      return { keepsAll, jointAcross, leastGap, rest: courses.map((c) => [c.number, c.fromLaid]) };
+    };
+    const near = at([
+      [0, 0],
+      [0, 1],
+    ]);
+    const far = at([
+      [0, 2],
+      [0, 3],
+    ]);
+    expect(far.keepsAll).toBe(near.keepsAll);
+    expect(far.jointAcross).toBeCloseTo(near.jointAcross, 6);
+    expect(far.rest.map(([number]) => number)).toEqual([4, 5, 6, 7, 8, 9, 10]);
+    far.rest.forEach(([, fromLaid], n) => {
+      expect(fromLaid).toBeCloseTo(near.rest[n][1], 6);
+      expect(fromLaid).toBeGreaterThan(0);
     });
   });
 

@@ -413,10 +413,12 @@ test('the first unit is the one at the first datum', () => {
     },
   });
   // From C, the upper right corner, looking along the upper side to the left.
-  const last = courses.at(-1)!;
+  const [first, second] = courses;
+  expect(first.row).toBe(courses.length);
+  expect(second.from[1]).toBeLessThan(first.from[1]);
   expect(firstUnit).toMatchObject({
-    course: last.number,
-    place: last.units,
+    course: 1,
+    place: first.units,
     nearest: 2,
     turnDeg: 0,
   });
