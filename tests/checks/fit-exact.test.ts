@@ -167,13 +167,10 @@ test('squares in a rectangle turned by t and by −t or 90° − t are mirror im
   // Plane geometry: the rectangle is its own mirror image, and so is a stack of squares. The best starts
   // of such a floor make one long face that leaves the lattice cell on one side or the other.
   const bond = { kind: 'stack', unit: 'a', joint: 5 } as const;
-  const document = parsed(
-    documentOf({
-      ground: { perimeter: rectangle(4800, 3600), keepOuts: [] },
-      units: [unitOf('a', 450)],
-      bond,
-      clearance: 6,
-    }),
+  const document = exactFloor(
+    { units: [unitOf('a', 450)], bond, clearance: 6 },
+    rectangle(4800, 3600),
+    { turn: 0, by: [0, 0] },
   );
   const at = (turn: number) =>
     fit({ ...document, placement: { origin: [0, 0], turn } }, { choices: false });

@@ -5,6 +5,7 @@ import type { LayoutDocument } from '@/paving/layout-document';
 import type { DocumentProblem } from '@/paving/layout-validation';
 import type { Report } from '@/paving/report';
 import { Length } from '../ui/Length';
+import { PlaySentence } from './PlaySentence';
 import { useSettledFloor, useShownFloor } from './table-context';
 
 function Figure({ name, now, before }: { name: string; now: ReactNode; before: ReactNode | null }) {
@@ -30,20 +31,6 @@ function Row({ name, now, before }: { name: string; now: ReactNode; before: Reac
         {now}
       </dd>
     </div>
-  );
-}
-
-/** What a client makes of the play. */
-function playSentence(report: Report, play: ReactNode): ReactNode {
-  if (report.play === null)
-    return 'No unit lies whole inside the edge. Slide or turn the pattern, or take a smaller unit.';
-  if (report.play < 0.5)
-    return 'There is next to no play: the pattern must start exactly here, or a unit would have to be cut.';
-  return (
-    <>
-      The whole floor may drift {play} in any direction while it is laid before a unit would come
-      too near the edge.
-    </>
   );
 }
 
@@ -96,7 +83,7 @@ export function FloorFigures({ brief = false }: { brief?: boolean }) {
       {!brief && (
         <>
           <p className="mt-2 text-sm text-slate">
-            {playSentence(report, length(report.play === null ? null : Math.max(0, report.play)))}
+            <PlaySentence />
           </p>
           <dl className="mt-3 hairlines text-[0.95rem]">
             <Row

@@ -1,17 +1,17 @@
 import { useEffect, useState } from 'react';
-import { documentEdgeName } from '@/paving/edge-names';
 import type { Point } from '@/geometry/point';
 import type { LayoutDocument } from '@/paving/layout-document';
-import { formatLength } from '@/paving/length';
 import { placementSlid } from '@/paving/placement-edits';
 import { keepFloor } from '../ui/kept-floor';
 import { BestStart } from './fit/BestStart';
 import { createFitService } from './fit/fit-service';
+import { shiftHands } from './fit/shift-hands';
 import { ShiftMapPicture } from './fit/ShiftMapPicture';
 import { useFit } from './fit/use-fit';
 import { FloorFigures } from './FloorFigures';
 import FloorStage from './FloorStage';
 import { GapRibbon } from './GapRibbon';
+import { PlaySentence } from './PlaySentence';
 import { TableProvider, useShownFloor, useTableStore } from './table-context';
 import { createTableStore } from './table-store';
 import { nudge } from './nudge';
@@ -42,13 +42,8 @@ function Sample() {
   const [fit] = useState(() => createFitService(table, { sweeps: false }));
   useEffect(() => fit.start(), [fit]);
   const { map, face, result, current } = useFit(fit);
-  const { document, report, leastGap } = useShownFloor();
+  const { document, report } = useShownFloor();
   const best = result?.choices[0];
-  const shifted = (by: Point) => {
-    const { show, document: now, preview } = table.getState();
-    const from = preview ?? now;
-    show({ ...from, placement: placementSlid(from.placement, by) });
-  };
   return (
     <div className="border border-graphite">
       <div
@@ -74,16 +69,17 @@ function Sample() {
       <div className="grid gap-5 border-t border-stone-300 p-4 sm:grid-cols-[1fr_1.15fr]">
         <div>
           {map && (
-            <ShiftMapPicture
-              map={map}
-              face={current ? face : null}
-              origin={document.placement.origin}
-              best={best && current ? { origin: best.placement.origin, play: best.play } : null}
-              countHere={report?.wholeUnits ?? null}
-              most={Math.max(map.most, current ? (face?.most ?? 0) : 0)}
-              onShift={shifted}
-              onSettle={() => table.getState().settleShown()}
-            />
+            <div className="max-sm:max-w-60">
+              <ShiftMapPicture
+                map={map}
+                face={current ? face : null}
+                origin={document.placement.origin}
+                best={best && current ? { origin: best.placement.origin, play: best.play } : null}
+                countHere={report?.wholeUnits ?? null}
+                most={Math.max(map.most, current ? (face?.most ?? 0) : 0)}
+                {...shiftHands(table)}
+              />
+            </div>
           )}
           <p className="mt-1 text-sm text-slate">
             Every place where the pattern can start; darker lays more. Drag the dot, or the floor.
@@ -91,17 +87,15 @@ function Sample() {
         </div>
         <div className="space-y-3">
           <FloorFigures brief />
-          {leastGap && (
-            <p className="text-sm text-slate">
-              The closest unit is {formatLength(leastGap.gap, document.display)} from{' '}
-              {documentEdgeName(document, leastGap.ring, leastGap.edge)}.
-            </p>
-          )}
+          <p className="text-sm text-slate">
+            <PlaySentence />
+          </p>
           <BestStart fit={fit} />
           <button
             type="button"
             className="button w-full"
             onClick={() => {
+              table.getState().settleShown();
               const { document: floor } = table.getState();
               location.assign(keepFloor(floor) ? '/sign-up?next=/keep' : '/sign-up');
             }}

@@ -9,6 +9,7 @@ import {
   vertexPoint,
 } from '@/paving/ground-edits';
 import { keepOutName } from '@/paving/edge-names';
+import type { EdgeAddress } from '@/paving/fit/fit';
 import { formatLength } from '@/paving/length';
 import { unitCorners } from '@/paving/laying';
 import type { DrawingColours } from '../ui/drawing-colours';
@@ -237,6 +238,23 @@ function paintProblems(ink: Ink, floor: Floor) {
   }
 }
 
+/** The edges that the start is held to; of two that are being pointed at, the first is live. */
+function paintHolds(ink: Ink, { hold, holding }: TableState) {
+  const { ctx, document, colours } = ink;
+  const along = ([ring, edge]: EdgeAddress, colour: string) => {
+    if (ring >= documentRingCount(document)) return;
+    const corners = documentRing(document, ring);
+    if (edge >= corners.length) return;
+    path(ink, edgeOutline(corners, edge), false);
+    ctx.strokeStyle = colour;
+    ctx.lineWidth = 4.5;
+    ctx.stroke();
+  };
+  for (const one of hold)
+    for (const edge of 'edge' in one ? [one.edge] : one.between) along(edge, colours.vial);
+  if (holding?.first) along(holding.first, colours.line);
+}
+
 /** The unit that would go first, and the gap that would close. */
 function paintLeastGap(ink: Ink, floor: Floor) {
   const { laying, leastGap } = floor;
@@ -392,7 +410,8 @@ export function paintOverlay(
     paintDimensions(ink, ring, editing ? state.pick : null, taken);
   paintLetters(ink);
   ctx.globalAlpha = 1;
-  if (state.step === 'fit' && !state.preview && state.tool !== 'align' && state.tool !== 'hold')
+  if (state.step === 'fit') paintHolds(ink, state);
+  if (state.step === 'fit' && state.tool !== 'align' && state.tool !== 'hold')
     paintLeastGap(ink, floor);
   if (levelling) paintLevelMarks(ink, state, floor);
   if (state.step === 'setOut') paintSetOut(ink, state, floor);

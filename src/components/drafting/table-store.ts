@@ -6,6 +6,7 @@ import type { Address, LayoutDocument } from '@/paving/layout-document';
 import { choiceKept } from '@/paving/set-out/datum-choice';
 import type { CornerAddress } from '@/paving/set-out/set-out-types';
 import type { Camera, ScreenSize } from './camera';
+import { holdsKept } from './holds-kept';
 
 export const STEPS = [
   'ground',
@@ -124,7 +125,7 @@ const FIRST_TOOL: Record<Step, ToolName> = {
 };
 
 export function createTableStore(document: LayoutDocument) {
-  return createStore<TableState>()(
+  const store = createStore<TableState>()(
     temporal(
       (set, get) => ({
         document,
@@ -187,6 +188,15 @@ export function createTableStore(document: LayoutDocument) {
       },
     ),
   );
+  // Holds are not of the document, and go with its edges all the same: also when a change is undone.
+  store.subscribe((now, before) => {
+    const hold = holdsKept(before.document.ground, now.document.ground, now.hold);
+    if (hold !== now.hold) now.set({ hold });
+    // What is half pointed at begins again: its first edge may be gone.
+    if (now.holding?.first && before.document.ground !== now.document.ground)
+      now.set({ holding: { kind: now.holding.kind, first: null } });
+  });
+  return store;
 }
 
 export type TableStore = ReturnType<typeof createTableStore>;

@@ -1,7 +1,7 @@
 import { formatCount } from '@/paving/count';
 import { documentEdgeName } from '@/paving/edge-names';
-import type { FitChoice } from '@/paving/fit/fit';
-import { sameStart } from '@/paving/placement-edits';
+import { fitRefusal, type FitChoice, type HoldRefusal } from '@/paving/fit/fit';
+import { sameStart, turnNormal } from '@/paving/placement-edits';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 import type { TableStore } from '../table-store';
 import { holdWords } from '../tools/hold-edge';
@@ -17,19 +17,55 @@ export function placementTaken(
   table.getState().set({ said: `${formatCount(choice.wholeUnits)} whole units from this start.` });
 }
 
+/** Why a hold cannot be kept, with what would do: a turn, or letting go of it. */
+function HoldRefused({ refusal, fit }: { refusal: HoldRefusal; fit: FitService }) {
+  const table = useTableStore();
+  const { document } = useShownFloor();
+  const hold = useTable((state) => state.hold);
+  const refused = hold[refusal.hold];
+  return (
+    <div role="alert" className="space-y-2" data-testid="hold-refused">
+      <p className="text-brick first-letter:uppercase">{refusal.message}.</p>
+      <div className="flex flex-wrap gap-2">
+        {refusal.turns.map((turn) => (
+          <button
+            key={turn}
+            type="button"
+            className="button px-2"
+            onClick={() => void fit.takeTurn(turn)}
+          >
+            Turn to {Number(turnNormal(turn).toFixed(2))}°
+          </button>
+        ))}
+        {refused && (
+          <button
+            type="button"
+            className="button px-2"
+            onClick={() => table.getState().set({ hold: hold.filter((one) => one !== refused) })}
+          >
+            Let go of {holdWords(refused, (ring, edge) => documentEdgeName(document, ring, edge))}
+          </button>
+        )}
+      </div>
+    </div>
+  );
+}
+
 /** Says what is proven of this floor, and takes the best start. */
 export function BestStart({ fit }: { fit: FitService }) {
   const table = useTableStore();
   const { document, report, laying } = useShownFloor();
   const hold = useTable((state) => state.hold);
   const { result, current, failure } = useFit(fit);
+  if (!laying) return null;
+  const refusal = fitRefusal(document, { hold });
+  if (refusal) return <HoldRefused refusal={refusal} fit={fit} />;
   if (failure && current)
     return (
       <p role="alert" className="text-brick">
-        {failure}
+        The best start could not be found: {failure}. Slide the pattern by hand meanwhile.
       </p>
     );
-  if (!laying) return null;
   if (!result || !current)
     return <p className="min-h-12 text-slate">Looking for the best start …</p>;
 
@@ -51,7 +87,10 @@ export function BestStart({ fit }: { fit: FitService }) {
     <div className="space-y-2" data-testid="best-start">
       <p>
         No start lays more than <b>{formatCount(result.wholeUnits)}</b> whole units at {under}.
-        {reached && ' This is it, with the most play that they can have.'}
+        {reached &&
+          ((result.play ?? 0) > PLAY_REACHED_MM
+            ? ' This is it, with the most play that they can have.'
+            : ' This is it.')}
         {!reached && hold.length > 0 && ' The floor does not stand there yet.'}
         {!reached &&
           hold.length === 0 &&

@@ -1,11 +1,10 @@
-import type { Point } from '@/geometry/point';
 import { formatCount } from '@/paving/count';
 import { formatLength } from '@/paving/length';
-import { placementSlid } from '@/paving/placement-edits';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 import { placementTaken } from './BestStart';
 import { Choices } from './Choices';
-import type { FitService } from './fit-service';
+import { SWEEP, type FitService } from './fit-service';
+import { shiftHands } from './shift-hands';
 import { ShiftMapPicture } from './ShiftMapPicture';
 import { TurnCurve } from './TurnCurve';
 import { useFit } from './use-fit';
@@ -24,7 +23,7 @@ export function FitPictures({ fit }: { fit: FitService }) {
   const table = useTableStore();
   const floor = useShownFloor();
   const hold = useTable((state) => state.hold);
-  const { result, map, face, current, turns, sweeping, swept } = useFit(fit);
+  const { result, map, face, current, turns, sweeping, sweepFailure, swept } = useFit(fit);
   const { document, report } = floor;
   const { placement, display } = document;
   const length = (mm: number) => formatLength(mm, display, { decimals: mm < 10 ? 1 : 0 });
@@ -38,15 +37,7 @@ export function FitPictures({ fit }: { fit: FitService }) {
         Math.abs(choice.play - report.play) < 0.05,
     ) ?? null;
 
-  const top = Math.max(map?.most ?? 0, current ? (face?.most ?? 0) : 0);
-
-  const shifted = (by: Point, settled: boolean) => {
-    const { show, edit, document: now, preview } = table.getState();
-    const from = preview ?? now;
-    const next = { ...from, placement: placementSlid(from.placement, by) };
-    if (settled) edit(() => next);
-    else show(next);
-  };
+  const top = Math.max(map?.most ?? 0, current ? (face?.most ?? 0) : 0, count ?? 0);
 
   return (
     <>
@@ -70,8 +61,7 @@ export function FitPictures({ fit }: { fit: FitService }) {
                   best={most && current ? { origin: most.placement.origin, play: most.play } : null}
                   countHere={count}
                   most={top}
-                  onShift={shifted}
-                  onSettle={() => table.getState().settleShown()}
+                  {...shiftHands(table)}
                 />
               </div>
               <div className="flex min-h-20 gap-2 text-sm text-slate">
@@ -94,18 +84,31 @@ export function FitPictures({ fit }: { fit: FitService }) {
               </div>
             </div>
             <p className="mt-1 text-sm text-slate">
-              Drag the dot: the floor follows. Outlined is where the most lie whole
-              {most && <>; the dashed circle is their play, ±{length(most.play)}</>}.
+              {top === 0 ? (
+                'No start in this cell lays a whole unit.'
+              ) : (
+                <>
+                  Drag the dot: the floor follows. Outlined is where the most lie whole
+                  {most && most.play > 0 && (
+                    <>; the dashed circle is their play, ±{length(most.play)}</>
+                  )}
+                  .
+                </>
+              )}
             </p>
           </>
         )}
       </section>
 
       <section aria-label="Turn curve">
-        <Heading title="Turn curve" note="whole units at each turn" />
+        <Heading
+          title="Turn curve"
+          note={hold.length > 0 ? 'most at each turn, not held' : 'most at each turn'}
+        />
         {turns.length > 1 ? (
           <TurnCurve
             turns={turns}
+            range={SWEEP}
             turn={placement.turn}
             display={display}
             onTurn={(turn) => void fit.takeTurn(turn)}
@@ -118,6 +121,9 @@ export function FitPictures({ fit }: { fit: FitService }) {
         <div className="mt-1 flex items-center justify-between text-sm text-slate">
           <span aria-live="polite">
             {sweeping && `Sweeping the turns: ${Math.round(swept * 100)} %`}
+            {sweepFailure && (
+              <span className="text-brick">The sweep could not go on: {sweepFailure}.</span>
+            )}
           </span>
           <button
             type="button"

@@ -1,11 +1,13 @@
 import { proxy } from 'comlink';
 import { useEffect, useRef, useState } from 'react';
+import { formatCount } from '@/paving/count';
 import type { JointFit } from '@/paving/fit/joint-range';
 import { formatLength } from '@/paving/length';
 import { LengthField } from '../../ui/LengthField';
 import { lengthWithin } from '../field-limits';
 import { useTable, useTableStore } from '../table-context';
 import { newHand, dismissed, type Hand } from './fit-hand';
+import { fitKey } from './fit-service';
 
 /** Joints that the trade allows for blocks: 2 to 5 mm (construction tolerances for interlocking pavements, ICPI). */
 const FIRST_RANGE = { from: 2, to: 5, step: 0.25 };
@@ -13,6 +15,19 @@ const FIRST_RANGE = { from: 2, to: 5, step: 0.25 };
 /** Bounds of what may be typed: wider than this is no joint, finer steps than that nobody can lay. */
 const GREATEST_JOINT_MM = 500;
 const LEAST_STEP_MM = 0.01;
+
+/** What a range of joints comes to, in a sentence. */
+function jointsTold(found: readonly JointFit[], length: (mm: number) => string): string {
+  const counts = found.map((joint) => joint.wholeUnits);
+  const most = Math.max(...counts);
+  if (Math.min(...counts) === most)
+    return `Every joint of this range lays ${formatCount(most)} whole, so none of them lets one more row close.`;
+  const widest = found.filter((joint) => joint.wholeUnits === most).at(-1)!;
+  const wider = counts.slice(found.indexOf(widest) + 1);
+  if (wider.length === 0)
+    return `The most, ${formatCount(most)} whole, lie with joints of ${length(widest.joint)}.`;
+  return `The most, ${formatCount(most)} whole, still close with joints of ${length(widest.joint)}; wider ones lay ${formatCount(Math.max(...wider))} or fewer.`;
+}
 
 /** Seeks the joint, within a range, at which one more row closes or the field ends evenly. */
 export function JointRange() {
@@ -29,15 +44,26 @@ export function JointRange() {
     setShare(null);
   };
   useEffect(() => stop, []);
+  const hold = useTable((state) => state.hold);
+  // What was found stands for any joint, and falls with anything else.
+  const key = fitKey({ ...document, bond: { ...bond, joint: 0 } as typeof bond }, hold);
   useEffect(() => {
+    stop();
     setFound(null);
     setFailure(null);
-  }, [document.ground, document.units, bond.kind, document.placement.turn, document.clearance]);
+  }, [key]);
 
+  const length = (mm: number) => formatLength(mm, display, { decimals: 2 });
   const seek = async () => {
     stop();
     setFailure(null);
     setFound(null);
+    if (range.from > range.to) {
+      setFailure(
+        `From ${length(range.from)} to ${length(range.to)} runs backwards: the narrower joint comes first.`,
+      );
+      return;
+    }
     setShare(0);
     const mine = newHand();
     hand.current = mine;
@@ -45,7 +71,7 @@ export function JointRange() {
       const answer = await mine.remote.joints(
         document,
         range,
-        table.getState().hold,
+        hold,
         proxy((done: number) => hand.current === mine && setShare(done)),
       );
       if (hand.current !== mine) return;
@@ -57,7 +83,6 @@ export function JointRange() {
     if (hand.current === mine) stop();
   };
 
-  const length = (mm: number) => formatLength(mm, display, { decimals: 2 });
   const most = found ? Math.max(...found.map((joint) => joint.wholeUnits)) : 0;
   return (
     <section aria-label="Joint range">
@@ -91,6 +116,11 @@ export function JointRange() {
           {failure}
         </p>
       )}
+      {found && found.length > 0 && (
+        <p className="mt-2 text-sm" data-testid="joints-told">
+          {jointsTold(found, length)}
+        </p>
+      )}
       {found && (
         <ul className="mt-2 hairlines">
           {found.map((joint) => (
@@ -106,12 +136,12 @@ export function JointRange() {
                   }));
                   table
                     .getState()
-                    .set({ said: `${joint.wholeUnits} whole units with this joint.` });
+                    .set({ said: `${formatCount(joint.wholeUnits)} whole units with this joint.` });
                 }}
               >
                 <span>{length(joint.joint)}</span>
                 <span>
-                  {joint.wholeUnits} whole{joint.closes && ', just closes'}
+                  {formatCount(joint.wholeUnits)} whole{joint.closes && ', just closes'}
                 </span>
                 <span className="text-slate">
                   {joint.play === null ? '–' : `±${length(joint.play)}`}

@@ -1,5 +1,6 @@
 import { useEffect, useRef, type KeyboardEvent, type PointerEvent } from 'react';
 import type { Point } from '@/geometry/point';
+import { formatCount } from '@/paving/count';
 import type { BestFace } from '@/paving/fit/best-face';
 import type { ShiftMap } from '@/paving/fit/shift-map';
 import { shiftMapPlace, shiftMapShift } from '@/paving/fit/shift-map';
@@ -14,8 +15,11 @@ interface Props {
   /** The most that any start gives, proven; a face too thin for the map's grain is not lost. */
   readonly most: number;
   /** The dot is dragged: the origin moves by this much on the ground, mm. */
-  readonly onShift: (by: Point, settled: boolean) => void;
-  readonly onSettle: () => void;
+  readonly onDrag: (by: Point) => void;
+  /** The dot is let go. */
+  readonly onLetGo: () => void;
+  /** A key moves the origin by this much on the ground, mm. */
+  readonly onNudge: (by: Point) => void;
 }
 
 /** The page's ink for the fewest and the most units, as grey levels: light is few, dark is many. */
@@ -38,15 +42,19 @@ function greyImage(map: ShiftMap): ImageData {
   return image;
 }
 
-/** Every start in one lattice cell as a picture: drag the dot, and the floor follows. */
+/**
+ * Every start in one lattice cell as a picture: drag the dot, and the floor follows. Lines on it are drawn in both
+ * of the theme's inks, one over the other, so that they show on any grey.
+ */
 export function ShiftMapPicture({
   map,
   face,
   origin,
   best,
   countHere,
-  onShift,
-  onSettle,
+  onDrag,
+  onLetGo,
+  onNudge,
   most,
 }: Props) {
   const canvas = useRef<HTMLCanvasElement>(null);
@@ -73,7 +81,7 @@ export function ShiftMapPicture({
     ];
     const from = first ? shiftMapPlace(map, origin) : last.current;
     last.current = now;
-    if (from) onShift(shiftMapShift(map, [now[0] - from[0], now[1] - from[1]]), false);
+    if (from) onDrag(shiftMapShift(map, [now[0] - from[0], now[1] - from[1]]));
   };
   const key = (event: KeyboardEvent) => {
     const step = event.shiftKey ? 10 : 1;
@@ -87,7 +95,7 @@ export function ShiftMapPicture({
     if (!shift) return;
     event.preventDefault();
     event.stopPropagation();
-    onShift(shiftMapShift(map, shift), true);
+    onNudge(shiftMapShift(map, shift));
   };
 
   return (
@@ -99,22 +107,23 @@ export function ShiftMapPicture({
       aria-valuemin={map.least}
       aria-valuemax={most}
       aria-valuenow={countHere ?? 0}
-      aria-valuetext={`${countHere ?? 0} whole units from this start; the most is ${most}. Arrows move the start.`}
+      aria-valuetext={`${formatCount(countHere ?? 0)} whole units from this start; the most is ${formatCount(most)}. Arrows move the start.`}
       data-testid="shift-map"
       className="relative cursor-crosshair touch-none overflow-hidden border border-graphite"
       style={{ aspectRatio: `${map.pitch} / ${map.rise}` }}
       onPointerDown={(event) => {
+        if (event.button !== 0) return;
         event.currentTarget.setPointerCapture(event.pointerId);
         drag(event, true);
       }}
       onPointerMove={(event) => event.buttons > 0 && last.current && drag(event, false)}
       onPointerUp={() => {
         last.current = null;
-        onSettle();
+        onLetGo();
       }}
       onPointerCancel={() => {
         last.current = null;
-        onSettle();
+        onLetGo();
       }}
       onKeyDown={key}
     >
@@ -130,18 +139,24 @@ export function ShiftMapPicture({
         className="absolute inset-0 size-full overflow-visible"
         aria-hidden="true"
       >
-        <g fill="none" stroke="var(--graphite)" strokeWidth="1.6">
-          <path d={facePath(map, face)} vectorEffect="non-scaling-stroke" />
-          {best && bestAt && (
-            <circle
-              cx={bestAt[0] * map.pitch}
-              cy={bestAt[1] * map.rise}
-              r={Math.max(0, best.play)}
-              strokeDasharray="3 2"
-              vectorEffect="non-scaling-stroke"
-            />
-          )}
-        </g>
+        {(['stone-50', 'graphite'] as const).map((ink, over) => (
+          <g key={ink} fill="none" stroke={`var(--${ink})`} strokeWidth={over ? 1.6 : 4}>
+            <path d={facePath(map, face)} vectorEffect="non-scaling-stroke" />
+            {best &&
+              bestAt &&
+              best.play > 0 &&
+              cellCopies(map).map(([du, dv]) => (
+                <circle
+                  key={`${du} ${dv}`}
+                  cx={bestAt[0] * map.pitch + du}
+                  cy={bestAt[1] * map.rise - dv}
+                  r={best.play}
+                  strokeDasharray={over ? '4 3' : undefined}
+                  vectorEffect="non-scaling-stroke"
+                />
+              ))}
+          </g>
+        ))}
       </svg>
       {bestAt && (
         <span
@@ -159,17 +174,18 @@ export function ShiftMapPicture({
   );
 }
 
-/** The best face to its true edge, drawn again a lattice step over where it runs out of the map; else at the map's grain. */
+/** The best face to its true edge, drawn again a lattice step over where it runs out of the map; else at the map’s grain. */
 function facePath({ outline, pitch, rise, shift }: ShiftMap, face: BestFace | null): string {
   if (!face?.outline)
     return outline.map(([a, b]) => `M${a[0]} ${rise - a[1]}L${b[0]} ${rise - b[1]}`).join('');
   const ring = face.outline;
-  return [-1, 0, 1]
-    .flatMap((row) =>
-      [-1, 0, 1].map((step) => {
-        const [du, dv] = [step * pitch + row * shift, row * rise];
-        return `M${ring.map(([u, v]) => `${u + du} ${rise - v - dv}`).join('L')}Z`;
-      }),
-    )
+  return cellCopies({ pitch, rise, shift })
+    .map(([du, dv]) => `M${ring.map(([u, v]) => `${u + du} ${rise - v - dv}`).join('L')}Z`)
     .join('');
 }
+
+/** How far the map's own picture and those about it lie off, mm: what runs out on one side comes in on the other. */
+const cellCopies = ({ pitch, rise, shift }: Pick<ShiftMap, 'pitch' | 'rise' | 'shift'>): Point[] =>
+  [-1, 0, 1].flatMap((row) =>
+    [-1, 0, 1].map((step): Point => [step * pitch + row * shift, row * rise]),
+  );

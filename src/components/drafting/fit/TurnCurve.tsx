@@ -1,9 +1,12 @@
 import { useRef, type KeyboardEvent, type PointerEvent } from 'react';
-import type { FitTurn } from '@/paving/fit/fit';
+import { formatCount } from '@/paving/count';
+import type { FitTurn, TurnRange } from '@/paving/fit/fit';
 import { formatLength, type Display } from '@/paving/length';
 
 interface Props {
   readonly turns: readonly FitTurn[];
+  /** What is swept: the picture has this width from the first turn on, and fills in. */
+  readonly range: TurnRange;
   readonly turn: number;
   readonly display: Display;
   readonly onTurn: (turn: number) => void;
@@ -11,10 +14,10 @@ interface Props {
 
 const WIDTH = 288;
 const HEIGHT = 92;
-/** The curve repeats after this turn for every unit with square corners and a bond of half-turn symmetry, degrees. */
-const SPAN_DEG = 90;
 /** A press of an arrow goes this much at least, degrees. */
 const KEY_STEP_DEG = 0.5;
+
+const degrees = (turn: number) => `${Number(turn.toFixed(2))}°`;
 
 const nearestTurn = (turns: readonly FitTurn[], turn: number): FitTurn | undefined =>
   turns.reduce<FitTurn | undefined>(
@@ -23,17 +26,22 @@ const nearestTurn = (turns: readonly FitTurn[], turn: number): FitTurn | undefin
   );
 
 /** Whole units against turn: click or press arrows to take one. */
-export function TurnCurve({ turns, turn, display, onTurn }: Props) {
+export function TurnCurve({ turns, range, turn, display, onTurn }: Props) {
   const frame = useRef<SVGSVGElement>(null);
-  const from = turns[0]?.turn ?? 0;
-  const to = Math.max(turns.at(-1)?.turn ?? SPAN_DEG, from + 1);
+  const { from, to } = range;
   const counts = turns.map((t) => t.wholeUnits);
   const least = Math.min(...counts);
   const most = Math.max(...counts);
+  // Of the turns with the most units, the one with the most play.
+  const best = turns
+    .filter((t) => t.wholeUnits === most)
+    .reduce<FitTurn | null>((p, t) => (!p || (t.play ?? 0) > (p.play ?? 0) ? t : p), null);
   const x = (deg: number) => ((deg - from) / (to - from)) * WIDTH;
   const y = (count: number) => 8 + ((most - count) / Math.max(most - least, 1)) * (HEIGHT - 16);
   const shown = from + ((((turn - from) % (to - from)) + (to - from)) % (to - from));
-  const here = nearestTurn(turns, shown);
+  const nearest = nearestTurn(turns, shown);
+  // While the curve fills in, the present turn may lie beyond what is known.
+  const here = nearest && Math.abs(nearest.turn - shown) <= range.step ? nearest : undefined;
 
   const take = (event: PointerEvent) => {
     const box = frame.current!.getBoundingClientRect();
@@ -42,11 +50,11 @@ export function TurnCurve({ turns, turn, display, onTurn }: Props) {
   };
   const key = (event: KeyboardEvent) => {
     const by = event.key === 'ArrowRight' ? 1 : event.key === 'ArrowLeft' ? -1 : 0;
-    if (!by || !here) return;
+    if (!by || !nearest) return;
     event.preventDefault();
     event.stopPropagation();
     // The sweep looks closer about its best turns; the keys go by whole steps all the same.
-    const beyond = turns.filter((t) => (t.turn - here.turn) * by >= KEY_STEP_DEG - 1e-6);
+    const beyond = turns.filter((t) => (t.turn - nearest.turn) * by >= KEY_STEP_DEG - 1e-6);
     const next = by > 0 ? (beyond[0] ?? turns[0]) : (beyond.at(-1) ?? turns[turns.length - 1]);
     onTurn(next.turn);
   };
@@ -64,8 +72,8 @@ export function TurnCurve({ turns, turn, display, onTurn }: Props) {
         aria-valuenow={Number(shown.toFixed(2))}
         aria-valuetext={
           here
-            ? `${here.turn}°, ${here.wholeUnits} whole units, play ${here.play === null ? 'none' : formatLength(here.play, display)}`
-            : undefined
+            ? `${degrees(here.turn)}, ${formatCount(here.wholeUnits)} whole units, play ${here.play === null ? 'none' : formatLength(here.play, display)}`
+            : degrees(shown)
         }
         data-testid="turn-curve"
         onPointerDown={take}
@@ -89,14 +97,12 @@ export function TurnCurve({ turns, turn, display, onTurn }: Props) {
       </div>
       {turns.length > 1 && (
         <p className="mt-1 text-sm text-slate">
-          From {least} to {most} whole units.{' '}
-          {most > (here?.wholeUnits ?? most) && (
-            <button
-              type="button"
-              className="link"
-              onClick={() => onTurn(turns.find((t) => t.wholeUnits === most)!.turn)}
-            >
-              Take the turn with {most}
+          {most === 0
+            ? 'No turn lays a whole unit.'
+            : `From ${formatCount(least)} to ${formatCount(most)} whole units.`}{' '}
+          {best && most > (here?.wholeUnits ?? most) && (
+            <button type="button" className="link" onClick={() => onTurn(best.turn)}>
+              Take {degrees(best.turn)}, with {formatCount(most)}
             </button>
           )}
         </p>

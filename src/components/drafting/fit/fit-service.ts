@@ -1,6 +1,6 @@
 import { proxy } from 'comlink';
 import { createStore, type StoreApi } from 'zustand/vanilla';
-import type { FitHold, FitResult, FitTurn } from '@/paving/fit/fit';
+import { fitRefusal, type FitHold, type FitResult, type FitTurn } from '@/paving/fit/fit';
 import type { BestFace } from '@/paving/fit/best-face';
 import type { ShiftMap } from '@/paving/fit/shift-map';
 import type { LayoutDocument } from '@/paving/layout-document';
@@ -23,6 +23,8 @@ export interface FitState {
   readonly turns: readonly FitTurn[];
   readonly turnsKey: string | null;
   readonly sweeping: boolean;
+  /** Why the sweep ended before its end. */
+  readonly sweepFailure: string | null;
   /** How much of the sweep is done, 0 to 1. */
   readonly swept: number;
 }
@@ -33,7 +35,7 @@ export interface FitService {
   start(): () => void;
   sweep(): void;
   stopSweep(): void;
-  /** Turns the pattern, and puts it at the best start of that turn: one undo step. */
+  /** Turns the pattern, and puts it at the best start of that turn, as held where that can be kept: one undo step. */
   takeTurn(turn: number): Promise<void>;
 }
 
@@ -72,6 +74,7 @@ export function createFitService(
     turns: [],
     turnsKey: null,
     sweeping: false,
+    sweepFailure: null,
     swept: 0,
   }));
   let hand: Hand | null = null;
@@ -98,10 +101,18 @@ export function createFitService(
     state.setState({ working: true });
     try {
       hand ??= newHand();
-      const [{ result, face }, map] = await Promise.all([
+      const [begun, mapped] = await Promise.allSettled([
         hand.remote.begin(document, now.hold),
         hand.remote.map(document, MAP_ACROSS),
       ]);
+      if (mapped.status === 'rejected') throw mapped.reason;
+      const map = mapped.value;
+      if (begun.status === 'rejected') {
+        // The map is the floor's own, also where a hold cannot be kept.
+        state.setState({ map, face: null });
+        throw begun.reason;
+      }
+      const { result, face } = begun.value;
       state.setState({ key, result, map, face, failure: null });
       // The most and the start that gives it come first; the trade-off takes longer and follows.
       if (!due) state.setState({ result: (await hand.remote.whole()) ?? result });
@@ -134,7 +145,7 @@ export function createFitService(
     sweeper = newHand();
     const mine = sweeper;
     const found: FitTurn[] = [];
-    state.setState({ sweeping: true, swept: 0, turns: [], turnsKey: key });
+    state.setState({ sweeping: true, sweepFailure: null, swept: 0, turns: [], turnsKey: key });
     const told = proxy((turn: FitTurn, share: number) => {
       found.push(turn);
       if (sweeper === mine)
@@ -146,7 +157,11 @@ export function createFitService(
         if (result?.turns) state.setState({ turns: result.turns });
         stopSweep();
       },
-      () => sweeper === mine && stopSweep(),
+      (error: unknown) => {
+        if (sweeper !== mine) return;
+        stopSweep();
+        state.setState({ sweepFailure: error instanceof Error ? error.message : String(error) });
+      },
     );
   };
 
@@ -173,7 +188,9 @@ export function createFitService(
       };
       show(turned);
       hand ??= newHand();
-      const found = await hand.remote.start(turned).catch(() => null);
+      const { hold } = table.getState();
+      const kept = fitRefusal(turned, { hold }) ? [] : hold;
+      const found = await hand.remote.start(turned, kept).catch(() => null);
       // Somebody else's hand may be on the floor by now.
       if (table.getState().preview !== turned) return;
       if (found && found.wholeUnits > 0) show({ ...turned, placement: found.placement });

@@ -32,7 +32,8 @@ const fitWorker = {
   whole: (): FitResult | null => begun?.whole() ?? null,
 
   /** The best start alone. */
-  start: (document: LayoutDocument): FitResult => fit(document, { choices: false }),
+  start: (document: LayoutDocument, hold: readonly FitHold[]): FitResult =>
+    fit(document, { hold, choices: false }),
 
   /** The shift map, about `across` counts wide. */
   map: (document: LayoutDocument, across: number): ShiftMap => {

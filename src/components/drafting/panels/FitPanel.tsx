@@ -52,7 +52,6 @@ export function FitPanel({ fit }: { fit: FitService }) {
       <FitPictures fit={fit} />
       <HoldFields fit={fit} />
       <JointRange />
-      <CuttingChoice />
       <section aria-label="By hand">
         <h3 className="mb-2 border-b border-graphite pb-1">By hand</h3>
         <div className="grid grid-cols-3 gap-2">
@@ -143,6 +142,7 @@ export function FitPanel({ fit }: { fit: FitService }) {
         />
       </section>
       <EdgeGaps />
+      <CuttingChoice />
     </div>
   );
 }

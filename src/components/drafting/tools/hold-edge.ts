@@ -31,18 +31,25 @@ export function holdPointed(table: TableStore, ring: number, edge: number): void
   const made: FitHold = holding.first
     ? { between: [[...holding.first], [ring, edge]] }
     : { edge: [ring, edge] };
-  // Two freedoms at most: the oldest hold gives way to a third.
-  const next = [...hold, made].slice(-2);
   const name = (r: number, e: number) => documentEdgeName(document, r, e);
-  if (
-    fitRefusal(document, { hold: next }) &&
-    !next.some((one) => fitRefusal(document, { hold: [one] }))
-  ) {
-    const refused = `${holdWords(made, name)} and ${holdWords(next[0], name)} run the same way, so both cannot be kept. Point at an edge that runs another way, or leave it free and let go of the first.`;
+  const alone = (one: FitHold) => !fitRefusal(document, { hold: [one] });
+  const clashes = (one: FitHold) =>
+    alone(one) && alone(made) && fitRefusal(document, { hold: [one, made] }) !== null;
+  // Two freedoms at most: to a third hold the one that runs the same way gives way, else the older.
+  const [older, newer] = hold;
+  const stay = newer ? [clashes(newer) ? older : newer] : hold;
+  const clash = stay.find(clashes);
+  if (clash) {
+    const refused = `${holdWords(made, name)} and ${holdWords(clash, name)} run the same way, so both cannot be kept. Point at an edge that runs another way, or leave it free and let go of the first.`;
     set({ holding: { kind: holding.kind, first: null, refused } });
     return;
   }
-  set({ hold: next, tool: 'slide', holding: null, hover: null });
+  const left = hold.filter((one) => !stay.includes(one));
+  set({ hold: [...stay, made], tool: 'slide', holding: null, hover: null });
+  if (left.length > 0)
+    set({
+      said: `Two holds are all that a floor can keep: ${holdWords(left[0], name)} is let go.`,
+    });
 }
 
 /** The hold in words: `a row along AB`, `the pattern centred between BC and FA`. */
