@@ -11,6 +11,7 @@ export * from './schema/drafts';
 export * from './schema/entering';
 export * from './schema/firm-pricing';
 export * from './schema/firms';
+export * from './schema/layout-prices';
 export * from './schema/layouts';
 export * from './schema/outbox';
 export * from './schema/projects';

@@ -8,6 +8,7 @@ import { draftingLayout, ofDraft } from './drafts';
 import { createLayout } from './layouts';
 import { notFound, type Outcome } from './outcomes';
 import type { Actor } from './permissions';
+import { copyLayoutPrices } from './pricing/layout-prices';
 
 /** As long as a layout's name may be. */
 const NAME_LIMIT = 80;
@@ -47,8 +48,10 @@ export const duplicateLayout = async (
   if (!layout.ok) return layout;
   const document = await documentToCopy(db, actor, layoutId, versionId);
   if (!document) return notFound('version');
-  return createLayout(db, actor, projectId ?? layout.value.project.id, {
+  const copied = await createLayout(db, actor, projectId ?? layout.value.project.id, {
     name: name ?? copyName(layout.value.name),
     document,
   });
+  if (copied.ok) await copyLayoutPrices(db, actor, layoutId, copied.value.id);
+  return copied;
 };

@@ -138,7 +138,7 @@ export const saveVersion = async (
   const reported = reportOn(draft.document);
   if (!reported.ok) return reported;
   const { document, report } = reported.value;
-  const priced = await pricedFloor(db, actor.firmId, reported.value);
+  const priced = await pricedFloor(db, actor.firmId, layoutId, reported.value);
 
   const saved = await db.transaction(async (tx): Promise<Outcome<string>> => {
     const locked = await lockDraft(tx, actor, layoutId);

@@ -17,6 +17,8 @@ const USUAL_EXTRA = 5;
 /** Up to so many kg a thing comes in bags, up to so many in bulk bags: both common practice. */
 const GREATEST_IN_BAGS_KG = 300;
 const GREATEST_IN_BULK_BAGS_KG = 4000;
+/** Packs that hold the same to this share are one: a pound and a kilogram come back rounded. */
+const SAME_HOLDS = 1e-6;
 /** Joints wider than this, mm, are no part of what a pack of so many square metres is reckoned to cover. */
 const GREATEST_COVERING_JOINT_MM = 10;
 
@@ -222,7 +224,17 @@ function packCost(need: Need, pack: Pack): number | null {
   return moneyTimes(packs, item.costMinor, 'halfUp');
 }
 
-/** What is bought, in the ways that the document chose. */
+/** What somebody typed for one such pack, minor units. */
+function typedCost(prices: PriceList | null, orderId: string, pack: Pack): number | null {
+  const typed = prices?.typed?.find((price) => price.orderId === orderId);
+  const same =
+    typed &&
+    typed.pack.measure === pack.measure &&
+    Math.abs(typed.pack.holds - pack.holds) <= SAME_HOLDS * pack.holds;
+  return same ? typed.costMinor : null;
+}
+
+/** What is bought, in the ways that the document chose. The catalogue's price goes before one that was typed. */
 export function orderLines(
   laying: Laying,
   lines: readonly TakeOffLine[],
@@ -263,7 +275,9 @@ export function orderLines(
             },
           ]
         : [];
-    const packCostMinor = packCost(need, pack);
+    const listed = packCost(need, pack);
+    const typed = listed === null ? typedCost(prices, need.id, pack) : null;
+    const packCostMinor = listed ?? typed;
     const kgEach = need.each('kg');
     const inPack = need.each(pack.measure);
     const words = packWords(amount, pack, display);
@@ -292,9 +306,11 @@ export function orderLines(
         id: need.item.id,
         supplier: need.item.supplier,
         from: need.item.from,
+        ...(need.item.retired ? { retired: true as const } : {}),
       },
       packCostMinor,
       costMinor: packCostMinor === null ? null : moneyTimes(amount, packCostMinor, 'halfUp'),
+      ...(typed === null ? {} : { priceTyped: true as const }),
     };
   });
 }

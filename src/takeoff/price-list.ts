@@ -36,6 +36,17 @@ export interface PriceItem {
   readonly stone: readonly [number, number] | null;
   /** Length, width and thickness of a unit, mm; left out where the catalogue does not give all three. */
   readonly size?: readonly [number, number, number];
+  /** No longer offered; in the list because a floor was drawn with it. */
+  readonly retired?: true;
+}
+
+/** A price that somebody typed for an order that the catalogue has none for. */
+export interface TypedPrice {
+  readonly orderId: string;
+  /** For one pack, without tax, in minor units. */
+  readonly costMinor: number;
+  /** The pack that it is for; it says nothing of another. */
+  readonly pack: { readonly holds: number; readonly measure: PackMeasure };
 }
 
 export interface PriceList {
@@ -44,6 +55,8 @@ export interface PriceList {
   /** The day that it was drawn up for, `2026-03-01`. */
   readonly on: string;
   readonly items: readonly PriceItem[];
+  /** For one layout's orders; left out where there are none. */
+  readonly typed?: readonly TypedPrice[];
 }
 
 /** Sides this near to each other, mm, are the same: inches and millimetres of one stone differ by rounding. */

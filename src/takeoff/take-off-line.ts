@@ -79,10 +79,18 @@ export interface OrderLine {
   readonly assumptions: readonly Assumption[];
   readonly massKg: number | null;
   /** The entry of the price list that it is bought by; null where none was chosen or found. */
-  readonly item: { readonly id: string; readonly supplier: string; readonly from: string } | null;
+  readonly item: {
+    readonly id: string;
+    readonly supplier: string;
+    readonly from: string;
+    /** No longer offered. */
+    readonly retired?: true;
+  } | null;
   /** For one pack and for all, without tax, minor units; null without a price. */
   readonly packCostMinor: number | null;
   readonly costMinor: number | null;
+  /** True where somebody typed the price, for the catalogue has none. */
+  readonly priceTyped?: true;
 }
 
 /** Something that a careful person would look at before ordering. */

@@ -38,6 +38,67 @@ const sent = async (office: PricedOffice, version: string): Promise<QuoteDetail>
 const quotesFor = async ({ visitor }: Signed, version: string): Promise<VersionQuotes> =>
   (await visitor.get(`/api/versions/${version}/quotes`)).body;
 
+describe('a price typed on the table', () => {
+  const pack = { holds: 1, measure: 'm2' } as const;
+
+  test('is kept beside the layout, goes into versions and quotes saved after it, and nobody without costs sees it', async () => {
+    const office = await newPricedOffice();
+    const { designer, owner, client, installer, layoutId } = office;
+    const at = `/api/layouts/${layoutId}/price-list`;
+    const before = (await designer.visitor.get(at)).body;
+    expect(before).toMatchObject({ currency: 'GBP', typed: [] });
+    const { takeOff } = (await owner.visitor.get(`/api/versions/${(await newVersion(designer.visitor, layoutId)).id}/pricing`)).body; // prettier-ignore
+    const bare = takeOff.orders.find(({ packCostMinor }: { packCostMinor: number | null }) => packCostMinor === null); // prettier-ignore
+    const price = { costMinor: 1234, pack: { holds: bare.pack.holds, measure: bare.pack.measure } };
+    const set = await designer.visitor.call('PUT', at, { orderId: bare.id, price });
+    expect(set).toMatchObject({ status: 200, body: { typed: [{ orderId: bare.id, ...price }] } });
+    const version = await sharedVersion(office);
+    const priced = (await owner.visitor.get(`/api/versions/${version}/pricing`)).body;
+    expect(priced.takeOff.orders.find(({ id }: { id: string }) => id === bare.id)).toMatchObject({
+      packCostMinor: 1234,
+      priceTyped: true,
+    });
+    const quote = await begun(office, version);
+    expect(quote.draft.lines.find(({ id }) => id === bare.id)).toMatchObject({ costMinor: 1234 });
+    // Taken away it holds for what was saved with it, and for nothing after.
+    await designer.visitor.call('PUT', at, { orderId: bare.id, price: null });
+    expect((await designer.visitor.get(at)).body.typed).toEqual([]);
+    expect((await owner.visitor.get(`/api/versions/${version}/pricing`)).body).toEqual(priced);
+    for (const { visitor } of [client, installer]) {
+      expect((await visitor.get(at)).status).toBeGreaterThanOrEqual(403);
+      expect(JSON.stringify((await visitor.get(`/api/versions/${version}`)).body)).not.toContain('1234'); // prettier-ignore
+    }
+  });
+
+  test('goes with a copy of the layout, and a retired item stays in the list of what was drawn with it', async () => {
+    const office = await newPricedOffice();
+    const { designer, owner, layoutId, slab } = office;
+    const price = { costMinor: 90, pack };
+    await designer.visitor.call('PUT', `/api/layouts/${layoutId}/price-list`, { orderId: 'geotextile', price }); // prettier-ignore
+    const copy = await designer.visitor.post(`/api/layouts/${layoutId}/duplicate`, {});
+    await owner.visitor.patch(`/api/catalogue/${slab}`, { revision: 1, retired: true });
+    const list = (await designer.visitor.get(`/api/layouts/${copy.body.id}/price-list`)).body;
+    expect(list.typed).toEqual([{ orderId: 'geotextile', ...price }]);
+    expect(list.items.find(({ id }: { id: string }) => id === slab)).toMatchObject({
+      retired: true,
+    });
+    const { layoutId: other } = await newProject(designer.visitor);
+    const plain = (await designer.visitor.get(`/api/layouts/${other}/price-list`)).body;
+    expect(plain.items.map(({ id }: { id: string }) => id)).not.toContain(slab);
+  });
+
+  test.each([
+    [{ orderId: '', price: null }],
+    [{ orderId: 'base', price: { costMinor: -1, pack } }],
+    [{ orderId: 'base', price: { costMinor: 1.5, pack } }],
+    [{ orderId: 'base', price: { costMinor: 1, pack: { holds: 0, measure: 'm2' } } }],
+  ])('is refused where it is none: %j', async (body) => {
+    const office = await newPricedOffice();
+    const answer = await office.designer.visitor.call('PUT', `/api/layouts/${office.layoutId}/price-list`, body); // prettier-ignore
+    expect(answer.status).toBe(422);
+  });
+});
+
 describe('a version', () => {
   test('keeps the prices that it was saved with, whatever the catalogue says later', async () => {
     const office = await newPricedOffice();

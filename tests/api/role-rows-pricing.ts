@@ -97,6 +97,22 @@ export const pricingRows: readonly Row[] = [
   { row: COSTS, endpoint: 'DELETE /api/catalogue/[id]', id: newItem, expected: costs(200) },
   { row: COSTS, endpoint: 'GET /api/catalogue/[id]/prices', id: newItem, expected: costs(200) },
   { row: COSTS, endpoint: 'GET /api/catalogue/price-list', expected: costs(200, 200) },
+  {
+    row: COSTS,
+    endpoint: 'GET /api/layouts/[id]/price-list',
+    id: ({ layout }) => layout,
+    expected: onVersion(200),
+  },
+  {
+    row: COSTS,
+    endpoint: 'PUT /api/layouts/[id]/price-list',
+    id: ({ layout }) => layout,
+    body: () => ({
+      orderId: 'geotextile',
+      price: { costMinor: 120, pack: { holds: 1, measure: 'm2' } },
+    }),
+    expected: onVersion(200),
+  },
   { row: COSTS, endpoint: 'GET /api/catalogue/export', expected: costs(200, 200) },
   {
     row: COSTS,

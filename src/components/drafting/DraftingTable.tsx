@@ -78,7 +78,7 @@ function Table({ draft, personId }: Props) {
   }, [sync]);
 
   return (
-    <TableProvider store={table}>
+    <TableProvider store={table} layoutId={draft.layoutId}>
       <Board draft={draft} personId={personId} sync={sync} ready={ready} />
     </TableProvider>
   );

@@ -4,10 +4,27 @@ import { floorOf, type Floor } from './floor';
 import { shownDocument, type TableState, type TableStore } from './table-store';
 
 const TableContext = createContext<TableStore | null>(null);
+const LayoutContext = createContext<string | null>(null);
 
-export function TableProvider({ store, children }: { store: TableStore; children: ReactNode }) {
-  return <TableContext value={store}>{children}</TableContext>;
+export function TableProvider({
+  store,
+  layoutId = null,
+  children,
+}: {
+  store: TableStore;
+  /** Left out where the floor on the table is kept nowhere. */
+  layoutId?: string | null;
+  children: ReactNode;
+}) {
+  return (
+    <LayoutContext value={layoutId}>
+      <TableContext value={store}>{children}</TableContext>
+    </LayoutContext>
+  );
 }
+
+/** The layout that is on the table; null where the floor is kept nowhere. */
+export const useLayoutId = (): string | null => use(LayoutContext);
 
 export function useTableStore(): TableStore {
   const store = use(TableContext);

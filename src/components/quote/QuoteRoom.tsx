@@ -93,6 +93,12 @@ function Costs({ pricing: { takeOff, priceList, at } }: { pricing: VersionPricin
                   {order.item?.supplier && (
                     <span className="block text-sm text-slate">{order.item.supplier}</span>
                   )}
+                  {order.item?.retired && (
+                    <span className="block text-sm text-amber">no longer in the catalogue</span>
+                  )}
+                  {order.priceTyped && (
+                    <span className="block text-sm text-slate">price typed on the table</span>
+                  )}
                 </th>
                 <td className="py-1.5 text-right">{order.words}</td>
                 <td className="py-1.5 pl-3 text-right whitespace-nowrap">
@@ -111,7 +117,7 @@ function Costs({ pricing: { takeOff, priceList, at } }: { pricing: VersionPricin
         Frozen with the version on <Moment iso={at} day />, at the prices of {dayText(priceList.on)}
         . What the catalogue asks later changes nothing here.
         {unpriced.length > 0 &&
-          ' To price what has none, take it from the catalogue on the drafting table and save another version, or type its cost into the quote.'}
+          ' To price what has none, take it from the catalogue or type its price on the drafting table, at Take-off, and save another version; or type its cost into the quote.'}
       </p>
     </section>
   );

@@ -27,6 +27,7 @@ export const ARCHIVED_TABLES: readonly ArchivedTable[] = [
   { name: 'catalogue-prices', table: schema.cataloguePrices },
   { name: 'invitations', table: schema.invitations, without: ['tokenHash'] },
   { name: 'layouts', table: schema.layouts },
+  { name: 'layout-prices', table: schema.layoutPrices },
   { name: 'versions', table: schema.versions, fileBy: 'id' },
   { name: 'version-events', table: schema.versionEvents },
   { name: 'version-pricings', table: schema.versionPricings, fileBy: 'versionId' },

@@ -31,6 +31,7 @@ const priceItem = ({ item, supplierName, price }: ItemRow): PriceItem | null =>
     ...(item.length !== null && item.width !== null && item.thickness !== null
       ? { size: [item.length, item.width, item.thickness] as const }
       : {}),
+    ...(item.retiredAt ? { retired: true as const } : {}),
   };
 
 /**
@@ -59,6 +60,24 @@ export const priceListOn = async (
     on: day,
     items: rows.flatMap((row) => priceItem(row) ?? []),
   };
+};
+
+/** All that the catalogue offers today, and what of the named it offers no longer. */
+export const priceListFor = async (
+  db: Db,
+  firmId: string,
+  named: readonly string[],
+): Promise<PriceList> => {
+  const day = today();
+  const offered = await priceListOn(db, firmId, day);
+  const have = new Set(offered.items.map(({ id }) => id));
+  const gone = await priceListOn(
+    db,
+    firmId,
+    day,
+    named.filter((id) => !have.has(id)),
+  );
+  return { ...offered, items: [...offered.items, ...gone.items] };
 };
 
 /** The firm's price list of a day, for those who see costs. */

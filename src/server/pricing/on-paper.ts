@@ -13,6 +13,7 @@ export const firmOnPaper = async (db: Db, firmId: string): Promise<FirmOnPaper> 
   return { name, address, phone, email, registration };
 };
 
+/** A version as papers name it. */
 export const versionOnPaper = (version: SeenVersion): VersionOnPaper => ({
   projectName: version.projectName,
   layoutName: version.layoutName,
@@ -25,5 +26,6 @@ export const versionOnPaper = (version: SeenVersion): VersionOnPaper => ({
 export const personEmail = async (db: Db, id: string): Promise<string> =>
   (await db.select({ email: people.email }).from(people).where(eq(people.id, id)))[0].email;
 
+/** The name of a person who is known to be there. */
 export const personName = async (db: Db, id: string): Promise<string> =>
   (await db.select({ name: people.name }).from(people).where(eq(people.id, id)))[0].name;

@@ -12,33 +12,33 @@ import { done, notFound, type Outcome } from '../outcomes';
 import { refuseUnlessPricing, type Actor } from '../permissions';
 import { seenVersion } from '../seen-version';
 import { today } from '../today';
-
-/** Every entry of the catalogue that a document names: of its units, its aggregate and its materials. */
-const namedItems = (part: unknown): string[] => {
-  if (Array.isArray(part)) return part.flatMap(namedItems);
-  if (part === null || typeof part !== 'object') return [];
-  return Object.entries(part).flatMap(([name, value]) =>
-    name === 'catalogueId' && typeof value === 'string' ? [value] : namedItems(value),
-  );
-};
+import { namedItems, typedPrices } from './layout-prices';
 
 export interface Priced {
   readonly takeOff: TakeOff;
   readonly priceList: PriceList;
 }
 
-/** A floor's take-off at today's prices, and of the list what it is priced by. */
+/** A floor's take-off at today's prices, the catalogue's and those typed for its layout, and of the list what it is priced by. */
 export const pricedFloor = async (
   db: Db,
   firmId: string,
+  layoutId: string,
   floor: { readonly document: LayoutDocument; readonly laying: Laying; readonly report: Report },
 ): Promise<Priced> => {
-  const list = await priceListOn(db, firmId, today(), namedItems(floor.document));
+  const listed = await priceListOn(db, firmId, today(), namedItems(floor.document));
+  const list = { ...listed, typed: await typedPrices(db, firmId, layoutId) };
   const taken = takeOff(floor.laying, floor.report, list);
   const used = new Set(taken.orders.flatMap(({ item }) => (item ? [item.id] : [])));
   return {
     takeOff: taken,
-    priceList: { ...list, items: list.items.filter(({ id }) => used.has(id)) },
+    priceList: {
+      ...list,
+      items: list.items.filter(({ id }) => used.has(id)),
+      typed: list.typed.filter(({ orderId }) =>
+        taken.orders.some(({ id, priceTyped }) => id === orderId && priceTyped),
+      ),
+    },
   };
 };
 

@@ -1,10 +1,11 @@
-import { fireEvent, render, screen, within } from '@testing-library/react';
-import { beforeEach, describe, expect, it } from 'vitest';
+import { cleanup, fireEvent, render, screen, within } from '@testing-library/react';
+import { beforeEach, describe, expect, it, vi } from 'vitest';
 import { Beyond } from '@/components/drafting/takeoff/Beyond';
 import { OrderList } from '@/components/drafting/takeoff/OrderList';
 import { QuantityList } from '@/components/drafting/takeoff/QuantityList';
 import { TakeOffBars } from '@/components/drafting/takeoff/TakeOffBars';
 import { TableProvider, useSettledFloor } from '@/components/drafting/table-context';
+import { Queries } from '@/components/ui/Queries';
 import { createTableStore, type TableStore } from '@/components/drafting/table-store';
 import type { PriceList } from '@/takeoff/price-list';
 import { takeOff } from '@/takeoff/take-off';
@@ -53,9 +54,11 @@ let table: TableStore;
 const shown = (prices: PriceList | null = null) => {
   table = createTableStore(COURT);
   render(
-    <TableProvider store={table}>
-      <Lists prices={prices} />
-    </TableProvider>,
+    <Queries>
+      <TableProvider store={table} layoutId="court">
+        <Lists prices={prices} />
+      </TableProvider>
+    </Queries>,
   );
 };
 const past = () => table.temporal.getState().pastStates.length;
@@ -122,6 +125,47 @@ describe('an order', () => {
       units().getByText(/£120.00 a pallet without tax, price of 1 February 2026/),
     ).toBeTruthy();
     expect(screen.getByRole('radio', { name: 'Cost' })).toBeTruthy();
+  });
+
+  it('takes a typed price where the catalogue has none, for the pack that is shown', async () => {
+    const asked = vi.fn(async (_path: string, _init: RequestInit) => Response.json({ typed: [] }));
+    vi.stubGlobal('fetch', asked);
+    shown(LIST);
+    const units = () => line('To order', /^Unit a/);
+    finish(units().getByLabelText(/^Price of a /), '4.20');
+    await vi.waitFor(() => expect(asked).toHaveBeenCalled());
+    const [path, init] = asked.mock.calls[0];
+    expect([path, init.method]).toEqual(['/api/layouts/court/price-list', 'PUT']);
+    expect(JSON.parse(String(init.body))).toEqual({
+      orderId: 'units:a:first-tone',
+      price: { costMinor: 420, pack: { holds: 1, measure: 'each' } },
+    });
+    // It is the firm's, beside the document: nothing to undo.
+    expect(past()).toBe(0);
+    vi.unstubAllGlobals();
+  });
+
+  it('shows a typed price as such, and what is retired as that, with its last price', () => {
+    const typed = [
+      { orderId: 'units:a:first-tone', costMinor: 420, pack: { holds: 1, measure: 'each' } },
+    ] as const;
+    shown({ ...LIST, typed });
+    const units = () => line('To order', /^Unit a/);
+    expect(units().getByText(/Typed here, for this layout/)).toBeTruthy();
+    cleanup();
+    const retired = LIST.items.map((item) => ({ ...item, retired: true as const }));
+    table = createTableStore({ ...COURT, units: [{ ...COURT.units[0], catalogueId: 'pallet' }] });
+    render(
+      <Queries>
+        <TableProvider store={table} layoutId="court">
+          <Lists prices={{ ...LIST, items: retired }} />
+        </TableProvider>
+      </Queries>,
+    );
+    expect(units().getByText('retired')).toBeTruthy();
+    expect(units().getByText(/its last price still counts/)).toBeTruthy();
+    expect(units().getByText(/£120.00 a pallet without tax/)).toBeTruthy();
+    expect(units().getByRole('option', { name: /Slab 300.*\(retired\)/ })).toBeTruthy();
   });
 
   it('without a list says nothing of prices', () => {

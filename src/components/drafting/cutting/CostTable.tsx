@@ -104,7 +104,7 @@ export function CostTable({
       )}
       {currency !== null && unpriced.length > 0 && (
         <p className="mt-1 text-sm text-slate">
-          Without a price in the catalogue: {unpriced.join(', ')}.
+          Without a price yet: {unpriced.join(', ')}. Prices are chosen or typed at Take-off.
         </p>
       )}
       {currency !== null && unpriced.length === 0 && (

@@ -4,10 +4,10 @@ import { formatCount } from '@/paving/count';
 import type { FirmPricing } from '@/api-types/pricing';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { cuttingCautions } from '@/takeoff/cutting-cautions';
-import type { PriceList } from '@/takeoff/price-list';
 import { api } from '../../ui/api';
 import { FloorDrawing } from '../../ui/FloorDrawing';
 import { Segmented } from '../../ui/Segmented';
+import { usePriceList } from '../takeoff/use-price-list';
 import { useSettledFloor, useTableStore } from '../table-context';
 import { CostTable } from './CostTable';
 import { CautionList } from './CautionList';
@@ -33,12 +33,7 @@ export const CuttingChoice = memo(function CuttingChoice() {
   const table = useTableStore();
   const { document, laying } = useSettledFloor();
   const [terms, setTerms] = useState(keptSawTerms);
-  const prices = useQuery({
-    queryKey: ['price-list'],
-    queryFn: () => api<PriceList>('GET', '/api/catalogue/price-list'),
-    staleTime: 60_000,
-    retry: false,
-  });
+  const prices = usePriceList();
   const firm = useQuery({
     queryKey: ['firm-pricing'],
     queryFn: () => api<FirmPricing>('GET', '/api/firm/pricing'),
@@ -51,7 +46,8 @@ export const CuttingChoice = memo(function CuttingChoice() {
     () => ({ ...terms, hourMinor: terms.hourMinor ?? firmHour }),
     [terms, firmHour],
   );
-  const list = prices.data && prices.data.items.length > 0 ? prices.data : null;
+  const priced = prices.data && prices.data.items.length + (prices.data.typed?.length ?? 0) > 0;
+  const list = priced ? prices.data! : null;
   const { floor, working, failure } = useCutFloor(laying ? document : null, list, reckoned);
   const both = useMemo(
     () => [

@@ -1,10 +1,7 @@
-import { useQuery } from '@tanstack/react-query';
 import { dayText } from '@/takeoff/day-text';
 import { formatMass } from '@/takeoff/measures';
 import { formatMoney } from '@/takeoff/money';
-import type { PriceList } from '@/takeoff/price-list';
 import type { TakeOff } from '@/takeoff/take-off';
-import { api } from '../../ui/api';
 import { FloorProblems } from '../FloorFigures';
 import { useSettledFloor, useTable } from '../table-context';
 import { Beyond } from '../takeoff/Beyond';
@@ -12,13 +9,8 @@ import { OrderList } from '../takeoff/OrderList';
 import { QuantityList } from '../takeoff/QuantityList';
 import { TakeOffBars } from '../takeoff/TakeOffBars';
 import { TakeOffWarnings } from '../takeoff/TakeOffWarnings';
+import { usePriceList } from '../takeoff/use-price-list';
 import { useTakeOff } from '../takeoff/use-take-off';
-
-const usePriceList = () =>
-  useQuery({
-    queryKey: ['price-list'],
-    queryFn: () => api<PriceList>('GET', '/api/catalogue/price-list'),
-  });
 
 /** Quantities, orders and cost of the floor as it stands. */
 export function TakeOffPanel() {
@@ -104,14 +96,14 @@ function Prices({ list, takeOff }: { list: ReturnType<typeof usePriceList>; take
         </button>
       </p>
     );
-  if (list.data.items.length === 0)
+  if (list.data.items.length === 0 && !list.data.typed?.length)
     return (
       <p className="text-sm text-slate">
         Your catalogue has no prices yet. Put in what your suppliers ask in the{' '}
         <a className="link" href="/catalogue">
           catalogue
         </a>
-        , and costs appear here.
+        , or open a thing under “To order” and type its price, and costs appear here.
       </p>
     );
   const { unpriced, orders } = takeOff;
@@ -127,7 +119,7 @@ function Prices({ list, takeOff }: { list: ReturnType<typeof usePriceList>; take
       <b className="text-amber">
         {unpriced.length} of {orders.length} things have no price.
       </b>{' '}
-      Open one under “To order” and choose it from your catalogue.
+      Open one under “To order” and choose it from your catalogue, or type its price there.
     </p>
   );
 }

@@ -8,6 +8,7 @@ import type { OrderLine, TakeOff } from '@/takeoff/take-off';
 import { useTable, useTableStore } from '../table-context';
 import { AssumptionRow } from './AssumptionRow';
 import { Opening } from './Opening';
+import { TypedPrice } from './TypedPrice';
 
 const WAY_WORDS: Readonly<Record<OrderWay, string>> = {
   pack: 'By the catalogue’s pack',
@@ -37,9 +38,13 @@ function Order({
   const unit = units.find(({ id }) => id === unitId);
   // What is another size is no choice; what was chosen stays in the list, to be seen and left.
   const fits = (item: PriceItem) => !unit || item.id === order.item?.id || itemFits(item, unit);
-  const offered = prices?.items.filter((item) => item.kind === order.kind && fits(item)) ?? [];
+  const offered =
+    prices?.items.filter(
+      (item) =>
+        item.kind === order.kind && fits(item) && (!item.retired || item.id === order.item?.id),
+    ) ?? [];
   const cost =
-    currency === null || prices?.items.length === 0
+    currency === null || (prices?.items.length === 0 && order.costMinor === null)
       ? null
       : order.costMinor === null
         ? 'no price'
@@ -51,6 +56,7 @@ function Order({
       under={
         <>
           {order.massKg !== null && <span>{formatMass(order.massKg, display)}</span>}
+          {order.item?.retired && <span className="text-amber">retired</span>}
           {cost && (
             <span className={order.costMinor === null ? 'text-amber' : 'font-semibold'}>
               {cost}
@@ -93,24 +99,34 @@ function Order({
             }
           >
             <option value="">Nothing chosen</option>
-            {offered.map(({ id, name, supplier }) => (
+            {offered.map(({ id, name, supplier, retired }) => (
               <option key={id} value={id}>
                 {supplier ? `${name}, ${supplier}` : name}
+                {retired ? ' (retired)' : ''}
               </option>
             ))}
           </select>
         </label>
       )}
-      {order.item && order.packCostMinor !== null && currency && (
+      {order.item?.retired && (
+        <p className="mt-1 text-[0.82rem] text-amber">
+          Your catalogue no longer offers this; its last price still counts. Choose another, or ask
+          whether it can still be had.
+        </p>
+      )}
+      {order.item && order.packCostMinor !== null && !order.priceTyped && currency && (
         <p className="mt-1 text-[0.82rem] text-slate">
           {formatMoney(order.packCostMinor, currency)} a {order.pack.name} without tax, price of{' '}
           {dayText(order.item.from)}.
         </p>
       )}
-      {order.item && order.packCostMinor === null && (
+      {order.item && (order.packCostMinor === null || order.priceTyped) && (
         <p className="mt-1 text-[0.82rem] text-amber">
           The catalogue’s price is for whole packs, so it says nothing of this way of ordering.
         </p>
+      )}
+      {currency !== null && (order.packCostMinor === null || order.priceTyped) && (
+        <TypedPrice order={order} currency={currency} />
       )}
       <ul className="mt-1 hairlines">
         {order.assumptions.map((assumption) => (
