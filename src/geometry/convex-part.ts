@@ -33,11 +33,13 @@ export function ringInHalfPlane(ring: readonly Point[], side: HalfPlane): readon
 const ringInSides = (ring: readonly Point[], sides: readonly HalfPlane[]): readonly Point[] =>
   sides.reduce((part, side) => (part.length === 0 ? part : ringInHalfPlane(part, side)), ring);
 
+/** The box about a piece, parallel to the axes, mm. */
 export interface PieceBox {
   readonly min: Point;
   readonly max: Point;
 }
 
+/** The least box that holds the points; upside down, from Infinity to -Infinity, without any. */
 export function pointsBox(points: readonly Point[]): PieceBox {
   const min: [number, number] = [Infinity, Infinity];
   const max: [number, number] = [-Infinity, -Infinity];
@@ -110,6 +112,7 @@ export function convexPart(region: SignedRings, { outline, sides }: ConvexPiece)
   return part;
 }
 
+/** What a plane comes to over a ring. */
 export interface PlaneIntegral {
   /** Signed, mm². */
   readonly area: number;

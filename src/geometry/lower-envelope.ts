@@ -7,6 +7,7 @@ export interface EnvelopePieces {
   readonly owner: number[];
 }
 
+/** No pieces yet, to be filled. */
 export function envelopePieces(): EnvelopePieces {
   return { s0: [], t0: [], s1: [], t1: [], owner: [] };
 }

@@ -13,6 +13,7 @@ export interface PlaneEnvelope {
   y: number;
 }
 
+/** Room for so many planes. */
 export function planeEnvelope(most: number): PlaneEnvelope {
   return {
     count: 0,

@@ -23,6 +23,7 @@ export interface PlanePiece {
 /** A height everywhere: pieces that cover the whole plane and meet along their sides. */
 export type PieceSurface = readonly PlanePiece[];
 
+/** Height of a plane over a point, mm. */
 export const planeHeight = ({ a, b, at, height }: Plane, [x, y]: Point): number =>
   height + a * (x - at[0]) + b * (y - at[1]);
 

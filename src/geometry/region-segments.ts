@@ -2,6 +2,7 @@ import type { ConvexPiece, SignedRings } from './convex-part';
 import { planeHeight, type Plane } from './plane-pieces';
 import type { Point } from './point';
 
+/** A straight piece, mm. */
 export interface Segment {
   readonly from: Point;
   readonly to: Point;

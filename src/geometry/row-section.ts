@@ -15,6 +15,7 @@ export interface SweptSegment {
   greatest: number;
 }
 
+/** Room for one swept segment: six corners at the most. */
 export function sweptSegmentRoom(): SweptSegment {
   return {
     u: new Float64Array(6),

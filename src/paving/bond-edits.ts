@@ -15,6 +15,7 @@ export const BOND_KINDS: readonly BondKind[] = [
   'custom',
 ];
 
+/** Bonds as they are called on the screen. */
 export const BOND_NAMES: Readonly<Record<BondKind, string>> = {
   stack: 'Stack',
   running: 'Running',
@@ -37,6 +38,7 @@ const SAME_SIZE_MM = 0.01;
 export const mainUnitId = (bond: Bond): string =>
   bond.kind === 'custom' ? bond.motif[0].unit : bond.unit;
 
+/** The unit that the bond is named for: of a pinwheel the larger, of a custom bond the first. */
 export const mainUnit = (document: LayoutDocument): Unit =>
   documentUnit(document, mainUnitId(document.bond));
 
@@ -152,6 +154,7 @@ function sidesTogether(
   return change;
 }
 
+/** A document with another unit. */
 export interface UnitChange {
   readonly document: LayoutDocument;
   /** What else had to change with the unit, said to the person; null when nothing had to. */

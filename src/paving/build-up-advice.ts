@@ -45,6 +45,7 @@ const LEAST_FALL_PERCENT = 2;
 const GREATEST_CROSS_PERCENT = 100 / 48;
 const GREATEST_RUNNING_PERCENT = 5;
 
+/** One remark on layers, falls or use, with who published what it rests on. */
 export interface Advice {
   readonly kind:
     | 'thinBase'

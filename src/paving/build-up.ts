@@ -13,6 +13,7 @@ const layer = z
   .min(0, 'must be 0 mm or more')
   .max(GREATEST_LAYER_MM, 'is over 2 m; thicknesses are in millimetres');
 
+/** Layers under the units, and what decides them. */
 export const buildUpSchema = z.object({
   /** What goes over the floor: decides the least thicknesses that are advised. */
   use: z.enum(['foot', 'driveway']).default('foot'),
@@ -33,5 +34,6 @@ export type BuildUp = z.infer<typeof buildUpSchema>;
 /** What a document without a build-up is reckoned with: a foot-traffic floor. */
 const PLAIN_BUILD_UP: BuildUp = buildUpSchema.parse({});
 
+/** The build-up of a document, or what stands for one that says nothing. */
 export const documentBuildUp = (document: { readonly buildUp?: BuildUp }): BuildUp =>
   document.buildUp ?? PLAIN_BUILD_UP;

@@ -24,5 +24,6 @@ export function edgeName(ring: number, edge: number, corners: number): string {
   return ring === 0 ? pair : `${keepOutName(ring)} ${pair}`;
 }
 
+/** An edge by the letters of its corners, such as `AB`, or `K1 ab` on a keep-out. */
 export const documentEdgeName = (document: LayoutDocument, ring: number, edge: number): string =>
   edgeName(ring, edge, documentRing(document, ring).length);

@@ -9,16 +9,21 @@ import type { LayoutDocument, Vertex } from './layout-document';
 
 export type Ring = readonly Vertex[];
 
+/** Where a corner lies, mm. */
 export const vertexPoint = (vertex: Vertex): Point => [vertex[0], vertex[1]];
+/** Bulge of the edge that leaves a corner: tan(sweep / 4), positive anticlockwise; 0 on a straight one. */
 export const vertexBulge = (vertex: Vertex): number => vertex[2] ?? 0;
 
 /** A corner, with its bulge where it has one. */
-export const vertexOf = ([x, y]: Point, bulge: number): Vertex => (bulge === 0 ? [x, y] : [x, y, bulge]);
+export const vertexOf = ([x, y]: Point, bulge: number): Vertex =>
+  bulge === 0 ? [x, y] : [x, y, bulge];
 
+/** Ring 0 is the perimeter, rings 1, 2 … the keep-outs. */
 export function documentRing(document: LayoutDocument, ring: number): Ring {
   return ring === 0 ? document.ground.perimeter : document.ground.keepOuts[ring - 1].ring;
 }
 
+/** The perimeter and the keep-outs. */
 export function documentRingCount(document: LayoutDocument): number {
   return 1 + document.ground.keepOuts.length;
 }
@@ -44,6 +49,7 @@ export function ringReplaced(
   };
 }
 
+/** The ring with one corner elsewhere; bulges stay. */
 export const vertexMoved = (ring: Ring, vertex: number, to: Point): Ring =>
   ring.map((v, index) => (index === vertex ? vertexOf(to, vertexBulge(v)) : v));
 
@@ -55,6 +61,7 @@ export function edgeMoved(ring: Ring, edge: number, by: Point): Ring {
   );
 }
 
+/** The ring shifted as a whole, mm. */
 export const ringMoved = (ring: Ring, by: Point): Ring =>
   ring.map((v) => vertexOf([v[0] + by[0], v[1] + by[1]], vertexBulge(v)));
 

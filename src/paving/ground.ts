@@ -17,6 +17,7 @@ export interface GroundEdge {
   readonly length: number;
 }
 
+/** One ring of the ground with its edges, anticlockwise, and the chords that stand for its arcs. */
 export interface GroundRing {
   readonly ring: number;
   readonly name: string | null;

@@ -10,6 +10,7 @@ export type Display = LayoutDocument['display'];
 
 /** Exact by definition: the international inch and foot (NIST SP 811, B.8). */
 export const MM_PER_INCH = 25.4;
+/** Exact: the international foot of 1959. */
 export const MM_PER_FOOT = 304.8;
 
 /** Thin space between thousands and before a unit; it does not break across lines. */

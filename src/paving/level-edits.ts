@@ -10,6 +10,7 @@ export const levelsChanged = (document: LayoutDocument, part: Partial<Levels>): 
   levels: { ...documentLevels(document), ...part },
 });
 
+/** The document with some of its layers changed. */
 export const buildUpChanged = (
   document: LayoutDocument,
   part: Partial<BuildUp>,
@@ -21,9 +22,11 @@ export const spotAt = (spots: readonly Spot[], [x, y]: Point, except = -1): numb
     ({ at }, n) => n !== except && Math.hypot(at[0] - x, at[1] - y) < SPOT_SPACING_MM,
   );
 
+/** The document with one spot more, at the end of the list. */
 export const spotAdded = (document: LayoutDocument, spot: Spot): LayoutDocument =>
   levelsChanged(document, { spots: [...documentLevels(document).spots, spot] });
 
+/** The document with a spot moved, renamed or measured anew. */
 export const spotChanged = (
   document: LayoutDocument,
   index: number,
@@ -37,6 +40,7 @@ export const spotChanged = (
     }),
   });
 
+/** The document without a spot. */
 export const spotRemoved = (document: LayoutDocument, index: number): LayoutDocument =>
   levelsChanged(document, {
     spots: documentLevels(document).spots.filter((_, n) => n !== index),

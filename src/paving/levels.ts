@@ -55,6 +55,7 @@ const fallSchema = z.discriminatedUnion(
   { error: 'must be one of none, oneWay, toPoint or toLine' },
 );
 
+/** A place where the existing ground was measured. */
 export const spotSchema = z.object({
   name: z.string().trim().min(1).max(40).optional(),
   at,
@@ -62,6 +63,7 @@ export const spotSchema = z.object({
   level,
 });
 
+/** Finish, fall and the ground as it is. */
 export const levelsSchema = z.object({
   /** Of the finished floor where it is highest; 0 is flush with the edge's top. */
   finish: level.default(0),
@@ -83,6 +85,7 @@ export type Levels = z.infer<typeof levelsSchema>;
 /** What a document without levels stands for: a flat floor flush with the edge, no spots taken. */
 const PLAIN_LEVELS: Levels = levelsSchema.parse({});
 
+/** The levels of a document, or what stands for one that says nothing. */
 export const documentLevels = (document: { readonly levels?: Levels }): Levels =>
   document.levels ?? PLAIN_LEVELS;
 

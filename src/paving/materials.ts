@@ -72,6 +72,7 @@ const fill = z.object({
 });
 const layer = z.object(material);
 
+/** What joints, voids, margin and layers are of; what is left out is chosen by the take-off. */
 export const materialsSchema = z.object({
   joints: fill.optional(),
   voids: fill.optional(),
@@ -117,6 +118,7 @@ export type OrderWay = (typeof ORDER_WAYS)[number];
 /** Orders of which a document may keep a choice. */
 const GREATEST_CHOICES = 200;
 
+/** How things are ordered, and what is bought beyond what is laid. */
 export const orderSchema = z.object({
   /** Units beyond those laid: per cent of each kind, or so many of each. */
   spares: z

@@ -25,6 +25,7 @@ export interface PlaceStep {
   readonly j: number;
 }
 
+/** A rectangle of open ground of the endless pattern, mm. */
 export interface PatternPiece {
   /** Centre in the frame that is turned by `turn` against the pattern's, mm. */
   readonly centre: Point;
@@ -34,6 +35,7 @@ export interface PatternPiece {
   readonly against: readonly PlaceStep[];
 }
 
+/** All open ground of one repeat of the pattern, parted into rectangles. */
 export interface PatternPieces {
   /** The turn of all places against the pattern's frame, within a right angle, degrees. */
   readonly turn: number;

@@ -1,6 +1,7 @@
 import type { Point } from '@/geometry/point';
 import type { GroundRing } from './ground';
 
+/** Centre and radius, mm. */
 export interface Circle {
   readonly centre: Point;
   readonly radius: number;

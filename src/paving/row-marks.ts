@@ -24,6 +24,7 @@ export interface ChordFrame {
   readonly v1: Float64Array;
 }
 
+/** The chords of the ground in the frame of the rows: u along a row, v square to it, mm. */
 export function chordFrame({ chords }: Ground, rows: UnitRows): ChordFrame {
   const { count } = chords;
   const frame = {

@@ -14,6 +14,7 @@ const MM_PER: Readonly<Record<BareUnit, number>> = {
   ft: MM_PER_FOOT,
 };
 
+/** How a pasted list of spots is to be read. */
 export interface SpotListOptions {
   readonly display: Display;
   readonly bare: BareUnit;
@@ -21,6 +22,7 @@ export interface SpotListOptions {
   readonly datum: number;
 }
 
+/** A line that could not be read, and why. */
 export interface SpotListProblem {
   /** Of the text, from 1. */
   readonly line: number;

@@ -36,6 +36,7 @@ const inches = (
   colour,
 });
 
+/** Common sizes of paving units, to begin with: common practice, no maker’s list. Sizes as they come, without a joint. */
 export const STARTER_CATALOGUE: readonly CatalogueUnit[] = [
   metric('Block 200 × 100', 200, 100, 60, '#b5755c'),
   metric('Block 200 × 100, thick', 200, 100, 80, '#a86a55'),

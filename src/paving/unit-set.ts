@@ -14,6 +14,7 @@ export interface UnitSetRoom {
   along: Int32Array;
 }
 
+/** Room for so many units, to be filled row by row. */
 export function unitSetRoom(capacity: number, alongIsI: boolean): UnitSetRoom {
   const i = new Int32Array(capacity);
   return {

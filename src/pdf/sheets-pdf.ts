@@ -5,6 +5,7 @@ import type { Sheet } from '@/sheets/sheet';
 import { drawingSvg } from '@/sheets/svg-sink';
 import { textStarted } from '@/sheets/text-measure';
 
+/** The weights of Nunito Sans that sheets are lettered in. */
 export const FONT_WEIGHTS = [400, 600, 700] as const;
 /** Nunito Sans as a TrueType file. */
 export interface FontFile {
@@ -20,6 +21,7 @@ export interface PdfMeans {
   readonly svg2pdf: typeof svg2pdf;
 }
 
+/** What the PDF says of itself. */
 export interface PdfAbout {
   readonly title: string;
   readonly author: string;

@@ -201,6 +201,7 @@ export const acceptVersion = async (
   return accepted.ok ? openAcceptance(db, actor, id) : accepted;
 };
 
+/** The record of acceptance of a version. Not found: no such version, or nobody accepted it. */
 export const openAcceptance = async (
   db: Db,
   actor: Actor,

@@ -31,6 +31,7 @@ const LIMITS: Readonly<Record<Kind, { readonly pair?: Limit; readonly address: L
   reset: { pair: RESET_PAIR, address: RESET_ADDRESS },
 };
 
+/** Who tries what, from where. */
 export interface Attempt {
   readonly kind: Kind;
   readonly email: string;

@@ -29,6 +29,7 @@ const SUBJECT_TYPES = [
   'order',
 ] as const;
 
+/** What a line of the audit is about. */
 export interface Subject {
   readonly type: (typeof SUBJECT_TYPES)[number];
   readonly id: string;

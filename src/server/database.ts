@@ -19,6 +19,7 @@ export const theDatabase = (): Promise<OpenDatabase> => {
   return place.evenlayDatabase;
 };
 
+/** The database of this process, opened and migrated at the first call. */
 export const database = async (): Promise<Db> => (await theDatabase()).db;
 
 /** Puts a database in the place of the process's own, for tests. */

@@ -87,15 +87,18 @@ export const COURT_SQUARE = courtPlan(
   { kind: 'stack', unit: 'slab', joint: 5 },
   { origin: [295, 3.4], turn: 0 },
 );
+/** Chequer started at a corner: what looking for the start is measured against. */
 export const COURT_FIRST_CHEQUER = courtPlan(
   { kind: 'chequer', unit: 'slab', joint: 3 },
   { origin: [0, 0], turn: 45 },
 );
+/** Chequer from the start with most whole units. */
 export const COURT_CHEQUER = courtPlan(
   { kind: 'chequer', unit: 'slab', joint: 3 },
   { origin: [396.8, 515.7], turn: 45 },
 );
 
+/** A round terrace in herringbone about a fire bowl. */
 export const ROUND_TERRACE: LayoutDocument = {
   schema: 'evenlay/layout@1',
   display: 'metric',
@@ -139,6 +142,7 @@ export const ROUND_TERRACE: LayoutDocument = {
   notes: 'Edge: steel strip rolled to a radius of 2.3 m. The fire bowl stands on its own pad.',
 };
 
+/** A long side yard in running bond, with a gully and a gate post. */
 export const SIDE_YARD: LayoutDocument = {
   schema: 'evenlay/layout@1',
   display: 'metric',

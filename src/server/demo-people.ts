@@ -1,5 +1,6 @@
 import type { Role } from '@/api-types/people';
 
+/** Invented, like its people. */
 export const DEMO_FIRM = 'Larkmoss Dry Floors';
 
 /** For all of them: the demo is there to be walked into. */

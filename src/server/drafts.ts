@@ -18,6 +18,7 @@ import { touchProject } from './projects';
 import { setAside } from './set-aside';
 import { versionSeen } from './visibility';
 
+/** The draft of a layout, in the actor’s firm. */
 export const ofDraft = (actor: Actor, layoutId: string) =>
   and(eq(drafts.firmId, actor.firmId), eq(drafts.layoutId, layoutId));
 
@@ -36,6 +37,7 @@ export const draftingLayout = async (
   return refuseUnlessDrafting(actor) ?? done(layout);
 };
 
+/** The draft as it is stored, with its revision. Not found: no such layout, or not theirs to see. Not allowed: who does not draft. */
 export const openDraft = async (
   db: Db,
   actor: Actor,

@@ -15,12 +15,14 @@ export interface Call {
   readonly context: APIContext;
 }
 
+/** A value as JSON that nothing keeps. */
 export const jsonResponse = (value: unknown, status = 200): Response =>
   new Response(JSON.stringify(value), {
     status,
     headers: { 'content-type': 'application/json; charset=utf-8', 'cache-control': 'no-store' },
   });
 
+/** An outcome as a response: its value as JSON, or its refusal as a problem. */
 export const answer = (outcome: Outcome<unknown>, status = 200): Response =>
   outcome.ok ? jsonResponse(outcome.value, status) : refusalResponse(outcome);
 

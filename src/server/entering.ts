@@ -7,6 +7,7 @@ import { readBody } from './request-body';
 import { sendSession, sessionIdOf } from './session-cookie';
 import type { SignedIn, Visit } from './sessions';
 
+/** What a request tells of whoever knocks. */
 export const visitOf = (context: APIContext): Visit => ({
   address: context.clientAddress,
   userAgent: context.request.headers.get('user-agent') ?? '',

@@ -94,6 +94,7 @@ const s3Of = (value: Parsed): S3Settings | undefined =>
       }
     : undefined;
 
+/** The settings as the program uses them. */
 export interface Environment {
   readonly host: string;
   readonly port: number;

@@ -24,5 +24,6 @@ export const fingerprintOf = (document: unknown): string =>
 /** As many digits as are printed on sheets: enough to tell a firm's versions apart by eye. */
 const SHORT_FINGERPRINT_DIGITS = 10;
 
+/** The beginning of a fingerprint, as it is printed. */
 export const shortFingerprint = (fingerprint: string): string =>
   fingerprint.slice(0, SHORT_FINGERPRINT_DIGITS);

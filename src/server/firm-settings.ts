@@ -9,6 +9,7 @@ import { refuseUnlessManaging, type Actor } from './permissions';
 
 const columns = { id: firms.id, name: firms.name, terms: firms.terms };
 
+/** Name, terms and the like. Not allowed: who is not an owner. */
 export const openFirm = async (db: Db, actor: Actor): Promise<Outcome<Firm>> => {
   const refusal = refuseUnlessManaging(actor);
   if (refusal) return refusal;

@@ -61,6 +61,7 @@ const invitationOf = ({ invitation, inviter, project, letter }: Row): Invitation
 const openInvitation = async (db: Db, actor: Actor, id: string): Promise<Invitation> =>
   invitationOf((await selected(db).where(ofFirm(actor, id)))[0]);
 
+/** Those still open, newest first. Not allowed: who is not an owner. */
 export const listInvitations = async (db: Db, actor: Actor): Promise<Outcome<Invitation[]>> => {
   const refusal = refuseUnlessManaging(actor);
   if (refusal) return refusal;
@@ -192,6 +193,7 @@ export const inviteAgain = async (
   return send(db, actor, { ...row, projectId: row.projectId ?? undefined });
 };
 
+/** Its letter’s link lets nobody in from then on. Not allowed: who is not an owner. Not found: no open one of the firm. */
 export const withdrawInvitation = async (
   db: Db,
   actor: Actor,

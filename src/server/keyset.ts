@@ -12,6 +12,7 @@ export interface Key {
 /** A moment as the database writes it, for a key. */
 export const exactly = (column: AnyColumn | SQL): SQL<string> => sql<string>`${column}::text`;
 
+/** Where a page ended, to be handed back for the next. */
 export const keyWritten = ({ at, id }: Key): string =>
   Buffer.from(JSON.stringify([at, id])).toString('base64url');
 
@@ -31,6 +32,7 @@ export const keyRead = (after: string | undefined): Key | null => {
 /** A moment as PostgreSQL writes one: what is not one is not asked for. */
 export const MOMENT = /^\d{4,6}-\d\d-\d\d \d\d:\d\d:\d\d(\.\d{1,6})?[+-]\d\d(:\d\d){0,2}$/;
 
+/** A key by time; null for none, or for one that was not written here. */
 export const momentKeyRead = (after: string | undefined): Key | null => {
   const key = keyRead(after);
   return key && MOMENT.test(key.at) ? key : null;

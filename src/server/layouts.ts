@@ -111,6 +111,7 @@ export const seenLayout = async (db: Db, actor: Actor, id: string) =>
       .where(and(layoutSeen(actor), projectSeen(actor), eq(layouts.id, id)))
   )[0];
 
+/** A layout with its versions in short. Not found: no such one, or not theirs to see. */
 export const openLayout = async (
   db: Db,
   actor: Actor,

@@ -14,6 +14,7 @@ const columns = {
 export const mailPreferencesOf = async (db: Db, personId: string): Promise<MailPreferences> =>
   (await db.select(columns).from(people).where(eq(people.id, personId)))[0];
 
+/** Changes what is given, and answers with all of it. */
 export const changeMailPreferences = async (
   db: Db,
   personId: string,

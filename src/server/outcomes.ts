@@ -25,6 +25,7 @@ export type Refusal =
       readonly retryAfterSeconds: number;
     };
 
+/** The value that a service came to. */
 export interface Done<T> {
   readonly ok: true;
   readonly value: T;
@@ -33,8 +34,10 @@ export interface Done<T> {
 /** What every service answers: a value, or why not. */
 export type Outcome<T> = Done<T> | Refusal;
 
+/** It worked. */
 export const done = <T>(value: T): Done<T> => ({ ok: true, value });
 
+/** Nobody is signed in, or not with these words. */
 export const signedOut = (detail = 'Sign in to go on.'): Refusal => ({
   ok: false,
   kind: 'signed-out',
@@ -48,13 +51,16 @@ export const notFound = (what: string): Refusal => ({
   detail: `There is no such ${what}, or it is not yours to see.`,
 });
 
+/** Seen, but not for this person to do. */
 export const notAllowed = (detail: string): Refusal => ({ ok: false, kind: 'not-allowed', detail });
 
+/** Somebody was quicker; `sides` goes into the answer, so that both can be looked at. */
 export const changedMeanwhile = (
   detail: string,
   sides?: Readonly<Record<string, unknown>>,
 ): Refusal => ({ ok: false, kind: 'changed', detail, ...(sides ? { sides } : {}) });
 
+/** Something sent will not do: `errors` says what, by the path of its field. */
 export const invalid = (detail: string, errors: readonly FieldProblem[]): Refusal => ({
   ok: false,
   kind: 'invalid',
@@ -62,6 +68,7 @@ export const invalid = (detail: string, errors: readonly FieldProblem[]): Refusa
   errors,
 });
 
+/** Tried too often; again after so many seconds. */
 export const tooMany = (detail: string, retryAfterSeconds: number): Refusal => ({
   ok: false,
   kind: 'too-many',

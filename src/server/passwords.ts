@@ -3,6 +3,7 @@ import { hash, verify } from '@node-rs/argon2';
 /** Argon2id with OWASP's second recommended setting (Password Storage Cheat Sheet): 19 MiB, 2 passes, 1 lane. */
 const ARGON2ID = { algorithm: 2, memoryCost: 19_456, timeCost: 2, parallelism: 1 } as const;
 
+/** Argon2id, with its salt and settings in the text. */
 export const passwordHash = (password: string): Promise<string> => hash(password, ARGON2ID);
 
 let nobody: Promise<string> | undefined;

@@ -16,6 +16,7 @@ import { passwordFits, passwordHash } from './passwords';
 import { isUniqueViolation } from './postgres-errors';
 import { startSession, type SignedIn, type Visit } from './sessions';
 
+/** Somebody who makes an account. */
 export interface NewPerson {
   readonly name: string;
   readonly email: string;
@@ -108,6 +109,7 @@ export const signIn = async (
   return done(await startSession(db, person.id, person.firmId, visit));
 };
 
+/** Changes name or display, and answers with the account as it is then. */
 export const changeAccount = async (
   db: Db,
   account: Account,

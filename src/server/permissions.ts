@@ -44,6 +44,7 @@ export const permissions = {
   'cost and margin': { owner: true, designer: true, installer: false, client: false },
 } as const satisfies Record<string, Record<Role, boolean | string>>;
 
+/** Whether a role draws up projects, drafts and versions. */
 export const mayDraft = (role: Role): boolean =>
   permissions['projects, drafts, saving and sharing versions'][role];
 
@@ -62,6 +63,7 @@ export const refuseUnlessManaging = (actor: Actor): Refusal | null =>
 /** What things cost the firm, and what it earns on them, is its owners' and designers' alone. */
 export const seesCosts = (role: Role): boolean => permissions['catalogue and cost prices'][role];
 
+/** Null for who sees the catalogue, costs and orders. */
 export const refuseUnlessPricing = (actor: Actor): Refusal | null =>
   seesCosts(actor.role)
     ? null

@@ -8,6 +8,7 @@ interface DriverError {
   readonly constraint_name?: unknown;
 }
 
+/** Whether the error is that of one unique constraint, from PGlite or a server. */
 export const isUniqueViolation = (error: unknown, constraint: string): boolean => {
   const cause = (error instanceof Error && error.cause ? error.cause : error) as DriverError;
   return (

@@ -14,6 +14,7 @@ export const EDITING_FOR_S = 60;
 
 const secondsAgo = (seconds: number): Date => new Date(Date.now() - seconds * 1000);
 
+/** Who is present, and where. */
 export interface PresentAt extends Present {
   readonly layoutId: string;
 }

@@ -45,6 +45,7 @@ export const problemResponse = (
   });
 };
 
+/** A refusal as application/problem+json, with its status. */
 export const refusalResponse = (refusal: Refusal): Response => {
   switch (refusal.kind) {
     case 'invalid':

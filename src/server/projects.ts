@@ -136,6 +136,7 @@ const seenProject = async (db: Db, actor: Actor, id: string): Promise<ProjectRow
       .where(and(projectSeen(actor), eq(projects.id, id)))
   )[0];
 
+/** A project with its layouts and people. Not found: no such one, or not theirs to see. */
 export const openProject = async (
   db: Db,
   actor: Actor,
@@ -149,6 +150,7 @@ export const openProject = async (
   return done({ ...summary, layouts: own, people: put });
 };
 
+/** Not allowed: who does not draft. */
 export const createProject = async (
   db: Db,
   actor: Actor,
@@ -167,6 +169,7 @@ export const createProject = async (
   return done({ ...baseOf(row), layouts: 0, stage: 'draft', document: null });
 };
 
+/** Not found: no such one, or not theirs. Not allowed: who does not draft. */
 export const changeProject = async (
   db: Db,
   actor: Actor,

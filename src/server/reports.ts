@@ -5,6 +5,7 @@ import { parseLayoutDocument } from '@/paving/layout-validation';
 import { floorReport, type Report } from '@/paving/report';
 import { done, invalid, type Outcome } from './outcomes';
 
+/** A document that was laid and reported by the server itself. */
 export interface ReportedFloor {
   /** As parsed: with defaults filled in and rings anticlockwise. */
   readonly document: LayoutDocument;

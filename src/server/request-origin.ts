@@ -11,6 +11,7 @@ export const cameOverTls = (request: Request, settings: Environment): boolean =>
     : new URL(request.url).protocol === 'https:';
 };
 
+/** Whether cookies of this answer are for TLS only. */
 export const cookiesAreSecure = (request: Request, settings: Environment): boolean =>
   settings.secureCookies === 'auto'
     ? cameOverTls(request, settings)

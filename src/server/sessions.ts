@@ -14,6 +14,7 @@ declare module 'lucia' {
   }
 }
 
+/** Name of the cookie. */
 export const SESSION_COOKIE = 'evenlay_session';
 
 /** What stands for a session where its id must not be shown: its hash, which signs nobody in. */
@@ -40,6 +41,7 @@ const luciaOn = (db: Db) =>
     getSessionAttributes: ({ firmId, lastSeenAt }) => ({ firmId, lastSeenAt }),
   });
 
+/** A session that holds, and whose it is. */
 export interface SignedIn {
   readonly account: Account;
   readonly session: { readonly id: string; readonly expiresAt: Date };
@@ -114,5 +116,6 @@ export const signedInBy = async (db: Db, sessionId: string): Promise<SignedIn | 
   return account && { account, session, prolonged: session.fresh };
 };
 
+/** Signs out that one session. */
 export const endSession = (db: Db, sessionId: string): Promise<void> =>
   luciaOn(db).invalidateSession(sessionId);

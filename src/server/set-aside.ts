@@ -79,6 +79,7 @@ export const listSetAside = async (
   return done(rows.map(summaryOf));
 };
 
+/** A draft that was set aside, with its document. Not found: no such one, or not theirs. */
 export const openSetAside = async (
   db: Db,
   actor: Actor,

@@ -10,6 +10,7 @@ const HOLD_MS = 20;
 /** Lets whatever waits for the thread have its turn. */
 export const rest = (): Promise<void> => new Promise((resolve) => setImmediate(resolve));
 
+/** Runs steps to their end at once. */
 export const stepsRun = <T>(steps: Steps<T>): T => {
   for (;;) {
     const { done, value } = steps.next();
@@ -17,6 +18,7 @@ export const stepsRun = <T>(steps: Steps<T>): T => {
   }
 };
 
+/** Runs steps to their end, letting others have a turn now and then. */
 export const stepsWithRests = async <T>(steps: Steps<T>): Promise<T> => {
   let since = performance.now();
   for (;;) {

@@ -130,6 +130,7 @@ export const projectTimeline = async (
   return done(await timelineWhere(db, actor, eq(layouts.projectId, projectId), query));
 };
 
+/** What happened to a layout, newest first, page by page. Not found: no such one, or not theirs to see. */
 export const layoutTimeline = async (
   db: Db,
   actor: Actor,

@@ -78,6 +78,7 @@ export const unreadComments = (db: Db, actor: Actor) => {
     .orderBy(desc(newest.at), desc(newest.id));
 };
 
+/** Threads with comments that the actor has not read, the newest of each with it; so many threads at the most. */
 export const unreadThreads = async (db: Db, actor: Actor): Promise<Unread> => {
   const threads = new Map<string, Unread['threads'][number]>();
   for (const { threadId, id: _id, person, body, at, ...where } of await unreadComments(db, actor)) {

@@ -25,6 +25,7 @@ export const summaryColumns = {
   ),
 };
 
+/** Who saved a version. */
 export const byCreator = eq(people.id, versions.createdBy);
 
 export interface SummaryRow {
@@ -41,6 +42,7 @@ export interface SummaryRow {
   readonly figures: VersionSummary['figures'];
 }
 
+/** A version in short, as the browser gets it. */
 export const summaryOf = (row: SummaryRow): VersionSummary => ({
   id: row.id,
   layoutId: row.layoutId,

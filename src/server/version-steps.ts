@@ -75,6 +75,7 @@ export const stepNotNow = (step: Step, state: VersionState): string | null => {
   return NOT_NOW[step][state] ?? 'This step does not follow on where the version stands.';
 };
 
+/** Whether a role may take a step now, and if not, why. */
 export const stepStanding = (step: Step, role: Role, state: VersionState): StepStanding => {
   const why = stepNotTheirs(step, role) ?? stepNotNow(step, state);
   return { may: why === null, why };

@@ -32,6 +32,7 @@ export type PaperPart =
   | { readonly kind: 'table'; readonly table: PaperTable }
   | { readonly kind: 'sums'; readonly sums: readonly PaperSum[] };
 
+/** A table of a paper. */
 export interface PaperTable {
   /** The first column takes what the others leave, and its words wrap; the others are figures or short words. */
   readonly headings: readonly string[];
@@ -39,6 +40,7 @@ export interface PaperTable {
   readonly rows: readonly (readonly string[])[];
 }
 
+/** A line of the sums under a table. */
 export interface PaperSum {
   readonly name: string;
   readonly figure: string;

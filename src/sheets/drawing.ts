@@ -18,6 +18,7 @@ export interface PaperBox {
 /** Line widths of ISO 128-2, mm. */
 export const PENS = { fine: 0.18, thin: 0.25, medium: 0.35, thick: 0.5 } as const;
 
+/** How a line is drawn; width and dashes in paper mm. */
 export interface Stroke {
   readonly width: number;
   readonly colour: string;
@@ -38,6 +39,7 @@ export interface PathRing {
 export type FontWeight = 400 | 600 | 700;
 export type TextAnchor = 'start' | 'middle' | 'end';
 
+/** One line of text. */
 export interface TextCommand {
   readonly kind: 'text';
   /** Where the baseline is anchored. */
@@ -83,15 +85,19 @@ export interface Layer {
   readonly commands: readonly DrawCommand[];
 }
 
+/** Layers of commands on an area of paper, mm, y down. */
 export interface Drawing {
   readonly width: number;
   readonly height: number;
   readonly layers: readonly Layer[];
 }
 
+/** mm. */
 export const boxWidth = (box: PaperBox): number => box.right - box.left;
+/** mm. */
 export const boxHeight = (box: PaperBox): number => box.bottom - box.top;
 
+/** A box smaller by so many mm on each side. */
 export function boxInset(box: PaperBox, by: number): PaperBox {
   return {
     left: box.left + by,
@@ -101,6 +107,7 @@ export function boxInset(box: PaperBox, by: number): PaperBox {
   };
 }
 
+/** The outline of a box, closed. */
 export function boxRing(box: PaperBox): PathRing {
   const { left, top, right, bottom } = box;
   return {

@@ -26,6 +26,7 @@ export interface Outline {
   readonly segments: readonly Segment[];
 }
 
+/** Dimensions that found room, and the room that is left. */
 export interface PlacedDimensions {
   readonly commands: readonly DrawCommand[];
   readonly space: LabelSpace;
@@ -321,6 +322,7 @@ function lineStretches(
   ];
 }
 
+/** Whether a line runs clear of every figure placed so far. */
 export function lineAvoidsTexts(line: Segment, space: LabelSpace): boolean {
   return isFree({ ...space, lines: [] }, [line.from, line.to]);
 }

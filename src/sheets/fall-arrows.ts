@@ -17,6 +17,7 @@ const STROKE: Stroke = { width: PENS.medium, colour: INK };
 /** Long dashes and short: what is not built but measured to. */
 const LINE_STROKE: Stroke = { width: PENS.medium, colour: INK, dash: [6, 1.2, 1.2, 1.2] };
 
+/** Arrows down the falls, and how steep they are. */
 export interface FallArrows {
   readonly commands: readonly DrawCommand[];
   /** What no figure may stand on. */

@@ -33,7 +33,9 @@ export interface FiguredContent {
 
 /** White space round the ground for a line of dimensions and the corners' letters, mm. */
 const DIMENSION_MARGIN = 15;
+/** Of a column of the panel, paper mm. */
 export const COLUMN_WIDTH = 66;
+/** Between a column’s edge and its words, paper mm. */
 export const COLUMN_INSET = 3;
 /** A portrait sheet's band of columns may take at most this share of the frame where it holds all. */
 const GREATEST_BAND = 0.55;
@@ -41,6 +43,7 @@ const GREATEST_BAND = 0.55;
 const LEAST_BAND = 40;
 /** A plan that fills less of its paper than this, along both sides, is worth a further sheet for its tables if that enlarges it. */
 const WELL_FILLED = 0.5;
+/** Where drawing, title and panel stand on a paper, mm. */
 export interface Arrangement {
   readonly paper: Paper;
   readonly scale: number;

@@ -9,6 +9,7 @@ import type { PlanView } from './plan-view';
 import { paperChords, paperRing } from './plan-view';
 import { aggregateColour, courseCommands, unitCommands } from './unit-drawing';
 
+/** How a floor is drawn; lengths in paper mm. */
 export interface FloorStyle {
   /** Above this many laid units, or below this least side on the drawing, courses are drawn instead. */
   readonly mostUnits: number;
@@ -22,6 +23,7 @@ export interface FloorStyle {
   readonly grain: { readonly spacing: number; readonly size: number };
 }
 
+/** A floor as commands, in the order in which they lie on each other. */
 export interface FloorDrawing {
   readonly fill: readonly DrawCommand[];
   readonly units: readonly DrawCommand[];
@@ -77,6 +79,7 @@ export function floorDrawing(laying: Laying, view: PlanView, style: FloorStyle):
   };
 }
 
+/** A closed outline through points. */
 export function outlineOf(points: readonly PaperPoint[]): Outline {
   return {
     points,

@@ -1,10 +1,14 @@
 /** The tokens of the screen, as colours that paper and PDF take. */
 export const INK = '#1f2527';
+/** For what explains, beside what is drawn. */
 export const SECOND_INK = '#566062';
+/** The sheet itself. */
 export const PAPER = '#ffffff';
 /** Used where the document names no colour. */
 export const UNIT_COLOUR = '#efebe1';
+/** Where the document names no colour of its own. */
 export const AGGREGATE_COLOUR = '#d9c7a0';
+/** Nothing is laid there. */
 export const KEEP_OUT_COLOUR = '#ffffff';
 
 const channels = (colour: string): readonly number[] =>

@@ -37,6 +37,7 @@ const LEAST_ANGLE = Math.PI / 6;
 /** Two edges square to each other within 10° are taken before others: their tapes are easiest to hold. */
 const NEARLY_SQUARE = (80 * Math.PI) / 180;
 
+/** Where a keep-out is measured from: of its corners, or the middle of a round one, that with two edges nearest to it. */
 export function keepOutPlace(ground: Ground, ring: GroundRing): KeepOutPlace {
   const circle = ringCircle(ring);
   const points = circle

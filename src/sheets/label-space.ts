@@ -7,6 +7,7 @@ export interface LabelSpace {
   readonly lines: readonly Segment[];
 }
 
+/** A straight line on the paper. */
 export interface Segment {
   readonly from: PaperPoint;
   readonly to: PaperPoint;
@@ -17,6 +18,7 @@ const TEXT_CLEARANCE = 0.6;
 /** Least white space between a text and a line, mm. */
 const LINE_CLEARANCE = 0.35;
 
+/** The room that is left when these stand too. */
 export function withLabels(
   space: LabelSpace,
   outlines: readonly (readonly PaperPoint[])[],
@@ -29,6 +31,7 @@ export function withLabels(
   };
 }
 
+/** Whether all points lie in a box, its edges included. */
 export const insideBox = (box: PaperBox, points: readonly PaperPoint[]): boolean =>
   points.every(([x, y]) => x >= box.left && x <= box.right && y >= box.top && y <= box.bottom);
 
@@ -83,6 +86,7 @@ function span(points: readonly PaperPoint[], [ax, ay]: PaperPoint): readonly [nu
   return [low, high];
 }
 
+/** The least distance between two lines, mm. */
 export const segmentGap = (p: Segment, q: Segment): number =>
   convexGap([p.from, p.to], [q.from, q.to]);
 

@@ -1,6 +1,7 @@
 import type { PlanInput } from './plan-input';
 import { charactersLacked } from './text-measure';
 
+/** A text with characters that the typeface lacks. */
 export interface LetteringGap {
   /** The text by its name in a sentence: `the project’s name`. */
   readonly of: string;

@@ -28,6 +28,7 @@ const MAP_STROKES = {
 /** Of a spot's ring, paper mm. */
 const SPOT_RADIUS = 0.8;
 
+/** The level map as commands. */
 export interface LevelMapPicture {
   readonly commands: readonly DrawCommand[];
   /** Figures of pegs and spots that found no room; a contour's neighbours tell its level. */

@@ -17,6 +17,7 @@ export interface PackInput extends SetOutInput {
   readonly takeOff: TakeOffWithoutCosts;
 }
 
+/** What the pack is drawn from: the plan’s input, set out. */
 export const packInput = (input: PlanInput, takeOff: TakeOffWithoutCosts): PackInput => ({
   ...input,
   setOut: setOut(input.laying, input.report),

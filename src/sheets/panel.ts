@@ -20,11 +20,13 @@ export const keptTogether = (
     n < rows.length - 1 ? { ...row, keepsNext: row.keepsNext ?? keepsNext } : row,
   );
 
+/** A column of rows, and the frame that its texts must stay in. */
 export interface PanelColumn {
   readonly box: PaperBox;
   readonly frame: string;
 }
 
+/** Rows flowed into columns. */
 export interface FlowedPanel {
   readonly commands: readonly DrawCommand[];
   /** Rows that found no room. */
@@ -82,6 +84,7 @@ function columnsFilled(
   return { commands, rest: rows.slice(next) };
 }
 
+/** A line of text of the panel; small and plain unless told. */
 export function panelText(
   at: PaperPoint,
   text: string,
@@ -115,6 +118,7 @@ export function headingRow(text: string, width: number): PanelRow {
 
 const baseline = (y: number, line = 0): number => y + 0.65 + LETTERING.small + line * LINE_PITCH;
 
+/** Words broken to a width, mm, a row a line. */
 export function textRows(text: string, width: number): readonly PanelRow[] {
   return textLines(text, width, LETTERING.small).map((line) => ({
     height: LINE_PITCH,

@@ -1,5 +1,6 @@
 import type { PaperBox } from './drawing';
 
+/** ISO 216 and ANSI sizes that printers at home and in offices take. */
 export const PAPER_NAMES = ['A4', 'A3', 'Letter', 'Tabloid'] as const;
 export type PaperName = (typeof PAPER_NAMES)[number];
 export type Orientation = 'portrait' | 'landscape';
@@ -16,6 +17,7 @@ const PORTRAIT: Readonly<Record<PaperName, readonly [number, number]>> = {
 const FILING_BORDER = 20;
 const BORDER = 10;
 
+/** A sheet of paper, mm. */
 export interface Paper {
   readonly name: PaperName;
   readonly orientation: Orientation;
@@ -25,6 +27,7 @@ export interface Paper {
   readonly frame: PaperBox;
 }
 
+/** A size laid upright or across. */
 export function paperOf(name: PaperName, orientation: Orientation): Paper {
   const [short, long] = PORTRAIT[name];
   const [width, height] = orientation === 'portrait' ? [short, long] : [long, short];

@@ -27,6 +27,7 @@ export interface NamedPoint {
   readonly at: readonly [number, number];
 }
 
+/** What all parts of a plan share. */
 export interface PartFacts {
   readonly laying: Laying;
   readonly start: StartPoint | null;

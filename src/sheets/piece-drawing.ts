@@ -10,6 +10,7 @@ import type { PlanView } from './plan-view';
 import { paperFromGround } from './plan-view';
 import { firstTone } from './unit-drawing';
 
+/** How pieces cut at the edge are drawn; lengths in paper mm. */
 export interface PieceStyle {
   readonly stroke: Stroke;
   /** The sawn edges; dashed on a plan. */

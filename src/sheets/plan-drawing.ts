@@ -28,6 +28,7 @@ const LEAST_SIDE = 0.7;
 /** Smaller units on paper than this are outlined lighter, mm, or their lines would darken the whole floor. */
 const SMALL_SIDE = 2;
 
+/** The figured floor as layers. */
 export interface PlanDrawing {
   readonly layers: readonly Layer[];
   readonly asCourses: boolean;

@@ -37,6 +37,7 @@ export interface PlanInput {
   readonly paper: PaperName | 'auto';
 }
 
+/** Where a version stands, as sheets say it. */
 export const STATE_NAMES: Readonly<Record<SheetState, string>> = {
   saved: 'Saved',
   shared: 'Shared',

@@ -7,6 +7,7 @@ import type { LabelSpace, Segment } from './label-space';
 import { isFree, withLabels } from './label-space';
 import { LETTERING, lineCorners, textWidth } from './text-measure';
 
+/** Labels that found room, and the room that is left. */
 export interface PlacedLabels {
   readonly commands: readonly DrawCommand[];
   readonly space: LabelSpace;
@@ -19,6 +20,7 @@ export interface WantedLabel {
   readonly places: readonly LabelPlace[];
 }
 
+/** One of the places where a label may stand. */
 export interface LabelPlace {
   /** Where the middle of its capitals stands. */
   readonly middle: PaperPoint;
@@ -44,6 +46,7 @@ export function labelsPlaced(labels: readonly WantedLabel[], start: LabelSpace):
   return { commands, space };
 }
 
+/** The label at the first of its places that is free; null where none is. */
 export function labelPlaced(label: WantedLabel, space: LabelSpace): PlacedLabels | null {
   const height = LETTERING.small;
   const weight = label.weight ?? 400;

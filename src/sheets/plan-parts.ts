@@ -21,6 +21,7 @@ export interface PlanPart {
   readonly below: string | null;
 }
 
+/** A large plan parted: one paper and one scale for all parts. */
 export interface PlanParts {
   readonly paper: Paper;
   readonly scale: number;

@@ -17,6 +17,7 @@ export interface RingEdge {
   readonly bulge: number;
 }
 
+/** A place of the ground, mm, on the paper, mm; y turns over here. */
 export function paperFromGround(view: PlanView, [x, y]: Point): PaperPoint {
   return [
     view.at[0] + (x - view.ground[0]) / view.scale,
@@ -24,6 +25,7 @@ export function paperFromGround(view: PlanView, [x, y]: Point): PaperPoint {
   ];
 }
 
+/** A place on the paper, mm, back on the ground, mm. */
 export function groundFromPaper(view: PlanView, [x, y]: PaperPoint): Point {
   return [
     view.ground[0] + (x - view.at[0]) * view.scale,
@@ -31,11 +33,13 @@ export function groundFromPaper(view: PlanView, [x, y]: PaperPoint): Point {
   ];
 }
 
+/** Left and low, right and high, mm on the ground. */
 export interface GroundBounds {
   readonly least: Point;
   readonly greatest: Point;
 }
 
+/** The least bounds that hold the points. */
 export function pointsBounds(points: readonly Point[]): GroundBounds {
   let [left, low, right, high] = [Infinity, Infinity, -Infinity, -Infinity];
   for (const [x, y] of points) {

@@ -5,6 +5,7 @@ import type { PanelRow } from './panel';
 import { LINE_PITCH, panelText } from './panel';
 import { LETTERING, sheetText, textLines, textWidth } from './text-measure';
 
+/** A column of a table. */
 export interface TableColumn {
   readonly title: string;
   readonly align: TextAnchor;
@@ -16,6 +17,7 @@ export interface TableColumn {
 /** What stands in a cell: words, a small box to tick, or room to write in. */
 export type TableCell = string | { readonly tick: true } | { readonly write: true };
 
+/** A table as rows of a panel. */
 export interface RuledTable {
   /** The titles over a line, for the head of every sheet. */
   readonly header: PanelRow;

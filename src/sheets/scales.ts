@@ -16,4 +16,5 @@ export function scaleFitting(
   return PREFERRED_SCALES.find(fits) ?? PREFERRED_SCALES[PREFERRED_SCALES.length - 1];
 }
 
+/** A scale as it is written, `1:20`. */
 export const scaleName = (denominator: number): string => `1:${formatCount(denominator)}`;

@@ -17,6 +17,7 @@ export type SetOutFigures = 'points' | 'courses';
 
 const MOST_UNITS = 30_000;
 const LEAST_SIDE = 0.7;
+/** Strings of courses. */
 export const STRING_STROKE: Stroke = { width: PENS.thin, colour: INK };
 /** Long and short dashes, as for the centre lines of ISO 128: it is measured from. */
 export const BASELINE_STROKE: Stroke = { width: PENS.thin, colour: INK, dash: [6, 1.2, 1.2, 1.2] };

@@ -44,6 +44,7 @@ export const footStrip = ({ frame }: Paper): PaperBox => ({
   top: frame.bottom - TITLE_STRIP_HEIGHT,
 });
 
+/** A ruled line between two places, paper mm. */
 export const rule = (
   from: readonly [number, number],
   to: readonly [number, number],

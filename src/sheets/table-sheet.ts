@@ -14,6 +14,7 @@ export interface TableSection {
   readonly rows: readonly PanelRow[];
 }
 
+/** What a sheet of tables holds. */
 export interface TableContent {
   readonly kind: SheetKind;
   readonly type: string;

@@ -81,6 +81,7 @@ export function textCorners(command: TextCommand): readonly PaperPoint[] {
   return lineCorners(command, textWidth(command.text, command.height, command.weight));
 }
 
+/** Corners of the box about a line of text of this width, mm, its descenders included, turned as the line is. */
 export function lineCorners(
   line: {
     readonly at: PaperPoint;

@@ -29,6 +29,7 @@ export interface TitleFields {
 }
 
 const ROW = 8.5;
+/** Of the title block, paper mm. */
 export const TITLE_STRIP_HEIGHT = 4 * ROW;
 /** The narrowest that its fields are set for, as in ISO 7200. */
 export const TITLE_STRIP_WIDTH = 180;
@@ -90,6 +91,7 @@ function titleCells(fields: TitleFields, box: PaperBox): readonly Cell[] {
   });
 }
 
+/** The title block after ISO 7200, in a box. */
 export function titleStrip(fields: TitleFields, box: PaperBox): readonly DrawCommand[] {
   const thin = { width: PENS.thin, colour: INK };
   const edge = (from: PaperPoint, to: PaperPoint): DrawCommand => ({

@@ -8,15 +8,18 @@ import { AGGREGATE_COLOUR, PAPER, UNIT_COLOUR, inkMix } from './inks';
 import type { PlanView } from './plan-view';
 import { paperFromGround } from './plan-view';
 
+/** How units are drawn. */
 export interface UnitStyle {
   readonly stroke: Stroke;
   /** Marks units of the second tone with a stroke across, so that tones are told apart in black and white. */
   readonly markTone: boolean;
 }
 
+/** Colour of the aggregate, the document’s own if it has one. */
 export const aggregateColour = (laying: Laying): string =>
   laying.document.aggregate?.colour ?? AGGREGATE_COLOUR;
 
+/** Colour of a unit, the document’s own if it has one. */
 export const firstTone = (unit: Unit): string => unit.colour ?? UNIT_COLOUR;
 
 /** How far the screen's colours are lightened for paper; units more, so that they part from aggregate in grey. */

@@ -22,12 +22,14 @@ export interface ChosenMaterial {
   readonly assumptions: readonly Assumption[];
 }
 
+/** The source of a figure that a person typed. */
 export const TYPED_IN = 'typed in';
 const CATALOGUE = 'the catalogue';
 
 /** What a document without an aggregate is drawn with. */
 const PLAIN_AGGREGATE_NAME = 'Golden gravel';
 
+/** The entry of the price list with this id; null without one. */
 export const priceItem = (prices: PriceList | null, id: string | undefined): PriceItem | null =>
   (id !== undefined && prices?.items.find((item) => item.id === id)) || null;
 

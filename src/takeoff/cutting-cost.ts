@@ -62,6 +62,7 @@ export interface FloorCost {
   readonly labourMinor: number | null;
 }
 
+/** The same floor whole and cut, side by side. */
 export interface CuttingComparison {
   readonly whole: FloorCost;
   readonly cut: FloorCost;

@@ -14,6 +14,7 @@ export interface LevelsReport {
   readonly advice: readonly Advice[];
 }
 
+/** Volumes, levels at pegs, the board and the advice about a document. */
 export function levelsReport(document: LayoutDocument): LevelsReport {
   const laying = layFloor(document);
   const model = earthModel(document, laying.ground);

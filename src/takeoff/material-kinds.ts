@@ -13,6 +13,7 @@ export interface Sourced {
   readonly source: string;
 }
 
+/** What a kind of stone or sand is taken to be, until somebody types better. */
 export interface MaterialDefaults {
   readonly name: string;
   /** Smallest and largest stone, mm. */
@@ -64,6 +65,7 @@ const STONE_COMPACTED: Sourced = {
 /** Stone of one size settles little. */
 const SETTLES: Sourced = { value: 1.1, source: `${COMMON_PRACTICE}: stone of few sizes settles by about a tenth` }; // prettier-ignore
 
+/** Stone and sand, by kind. */
 export const MATERIAL_DEFAULTS: Readonly<Record<MaterialKind, MaterialDefaults>> = {
   jointingSand: {
     name: 'Fine jointing sand',
@@ -157,6 +159,7 @@ export const MATERIAL_DEFAULTS: Readonly<Record<MaterialKind, MaterialDefaults>>
   },
 };
 
+/** What a kind of ground is taken to be once it is dug. */
 export interface GroundDefaults {
   readonly name: string;
   /** Loose volume for one as it lies. */
@@ -168,6 +171,7 @@ export interface GroundDefaults {
 /** Earth once dug is heavier wet than dry; the figure is for judging loads. */
 const LOOSE_EARTH: Sourced = { value: 1250, source: `${COMMON_PRACTICE}: moist earth, tipped loose` }; // prettier-ignore
 
+/** The ground that is dug, by kind. */
 export const GROUND_DEFAULTS: Readonly<Record<GroundKind, GroundDefaults>> = {
   sand: {
     name: 'Sand',

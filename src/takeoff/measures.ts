@@ -10,10 +10,14 @@ import { M3_PER_CUBIC_YARD } from '@/paving/volume';
  */
 
 export const M_PER_FOOT = MM_PER_FOOT / 1000;
+/** Exact: 0.3048³. */
 export const M3_PER_CUBIC_FOOT = 0.028316846592;
 export { M3_PER_CUBIC_YARD };
+/** Exact: the international pound of 1959. */
 export const KG_PER_POUND = 0.45359237;
+/** Exact: 2,000 lb. */
 export const KG_PER_SHORT_TON = 907.18474;
+/** Exact. */
 export const KG_PER_TONNE = 1000;
 /** 1 lb/ft³ in kg/m³. */
 export const POUNDS_PER_CUBIC_FOOT = KG_PER_POUND / M3_PER_CUBIC_FOOT;

@@ -42,6 +42,7 @@ export function holderKg(
   return { kg: typed ?? USUAL_KG[document.display][holder], own: typed !== undefined };
 }
 
+/** What one lorry load holds: kg, and in words. */
 export function loadHolds(document: Pick<LayoutDocument, 'display' | 'order'>) {
   const { kg } = holderKg(document, 'load');
   const pack = wayPack(document, 'load', null);

@@ -23,6 +23,7 @@ export interface QuoteLineInput {
 /** A share as whole hundredths of a per cent: 2 000 is 20 %. */
 export type BasisPoints = number;
 
+/** The terms that a quote is worked out by. */
 export interface QuoteTerms {
   /** ISO 4217. */
   readonly currency: string;
@@ -40,6 +41,7 @@ export interface QuoteTerms {
   readonly validDays: number;
 }
 
+/** A line with its sums, minor units. */
 export interface QuoteLine extends QuoteLineInput {
   /** Amount × cost, rounded. */
   readonly lineCostMinor: number;

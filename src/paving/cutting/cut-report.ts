@@ -49,6 +49,7 @@ export interface CutFigures {
   readonly failed: readonly Address[];
 }
 
+/** What cutting comes to, piece by piece. */
 export interface CutReport extends CutFigures {
   readonly pieces: readonly ReportedPiece[];
 }

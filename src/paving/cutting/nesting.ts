@@ -12,6 +12,7 @@ export interface SawnUnit {
   readonly places: readonly Place[];
 }
 
+/** The whole units to saw, and the pieces that come out of each. */
 export interface Nesting {
   readonly units: readonly SawnUnit[];
   /** No nesting takes fewer units: how far this one can be from the best is `units.length` less this. */

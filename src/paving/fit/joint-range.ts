@@ -13,6 +13,7 @@ export interface JointFit {
   readonly closes: boolean;
 }
 
+/** Joints to be tried, mm: from one to another by a step. */
 export interface JointRange {
   readonly from: number;
   readonly to: number;

@@ -15,6 +15,7 @@ import {
   type ArchivedTable,
 } from './tables';
 
+/** What an archive says that it is. */
 export const ARCHIVE_SCHEMA = 'evenlay/firm@1';
 
 /** Where photos lie in an archive, each named by the SHA-256 of its bytes. */

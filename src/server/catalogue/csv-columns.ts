@@ -23,6 +23,7 @@ export type Field = Exclude<keyof CatalogueRow, 'supplierId' | 'price'> | 'cost'
 type Cell =
   { readonly ok: true; readonly value: unknown } | { readonly ok: false; readonly message: string };
 
+/** A column of the catalogue’s file: how its cells are read and written. */
 export interface Column {
   /** As the file's first line calls it. */
   readonly heading: string;
@@ -110,6 +111,7 @@ const number = (field: Numbers, read: (cell: string) => Cell = numberRead) => ({
   write: (row: CatalogueRow) => (row[field] === null ? '' : String(row[field])),
 });
 
+/** Every column, in the order in which they are written. */
 export const COLUMNS: readonly Column[] = [
   {
     heading: 'Kind',
@@ -202,4 +204,5 @@ export const columnNamed = (heading: string): Column | undefined => {
   );
 };
 
+/** A cell’s words, without what was put before them for spreadsheets. */
 export const cellText = (cell: string): string => textCellRead(cell.trim());

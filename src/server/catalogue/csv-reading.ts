@@ -12,6 +12,7 @@ export interface ReadRow {
   readonly problems: readonly ImportProblem[];
 }
 
+/** A file as it was read, row by row. */
 export interface ReadFile {
   readonly rows: readonly ReadRow[];
   /** Of the file as a whole: with any, there are no rows. */

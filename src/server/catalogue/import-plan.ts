@@ -35,12 +35,14 @@ export interface PlannedItem {
   readonly row: ImportRow;
 }
 
+/** What reading a file in would do, or why it cannot be. */
 export interface ImportPlan {
   readonly items: readonly PlannedItem[];
   readonly problems: readonly ImportProblem[];
   readonly newSuppliers: readonly string[];
 }
 
+/** The catalogue that a file is read into. */
 export interface KnownCatalogue {
   readonly items: readonly KnownItem[];
   readonly suppliers: readonly { readonly id: string; readonly name: string }[];

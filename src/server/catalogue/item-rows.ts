@@ -69,6 +69,7 @@ export const fieldsOf = (item: typeof catalogueItems.$inferSelect): ItemFields =
   note: item.note,
 });
 
+/** An item as the browser gets it. */
 export const itemOf = ({ item, supplierName, price, nextPrice }: ItemRow): CatalogueItem => ({
   id: item.id,
   ...fieldsOf(item),

@@ -27,6 +27,7 @@ const itemOr = async (db: Db, actor: Actor, id: string): Promise<CatalogueItem |
   return row ? itemOf(row) : null;
 };
 
+/** One item with its price of today. Not allowed: who does not see costs. */
 export const openItem = async (
   db: Db,
   actor: Actor,
@@ -94,6 +95,10 @@ const unlessTaken = async (
   }
 };
 
+/**
+ * Adds an item, with its first price if it has one. Not allowed: who does not see costs. Invalid: a name that its
+ * supplier has already, a supplier of nobody.
+ */
 export const addItem = async (
   db: Db,
   actor: Actor,

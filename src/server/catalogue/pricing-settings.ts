@@ -39,6 +39,7 @@ export const pricingOf = async (db: Db, firmId: string): Promise<typeof BEGINNIN
   return settings;
 };
 
+/** Currency of a firm’s prices, ISO 4217. */
 export const currencyOf = async (db: Db, firmId: string): Promise<string> =>
   (await pricingOf(db, firmId)).currency;
 
@@ -66,6 +67,7 @@ const settingsOf = async (db: Db, firmId: string): Promise<FirmPricing> => ({
   currencyOpen: !(await hasPrices(db, firmId)),
 });
 
+/** What quotes and orders begin with. Not allowed: who does not see costs. */
 export const openPricing = async (db: Db, actor: Actor): Promise<Outcome<FirmPricing>> =>
   refuseUnlessPricing(actor) ?? done(await settingsOf(db, actor.firmId));
 

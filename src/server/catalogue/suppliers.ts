@@ -42,6 +42,7 @@ const supplierOr = async (db: Db, firmId: string, id: string): Promise<Supplier 
   return row ? supplierOf(row) : null;
 };
 
+/** All suppliers by name, retired ones among them. Not allowed: who does not see costs. */
 export const listSuppliers = async (
   db: Db,
   actor: Actor,
@@ -69,6 +70,7 @@ const unlessTaken = async (
   }
 };
 
+/** Adds a supplier. Not allowed: who does not see costs. Invalid: a name that another has. */
 export const addSupplier = async (
   db: Db,
   actor: Actor,

@@ -6,6 +6,7 @@ import S3rver from 's3rver';
 import accounts from 's3rver/lib/models/account.js';
 import type { S3Settings } from './s3-store';
 
+/** An S3 server in this process, on this machine’s folder. */
 export interface LocalS3 {
   readonly settings: S3Settings;
   readonly close: () => Promise<void>;

@@ -1,6 +1,7 @@
 import { GetObjectCommand, NoSuchKey, PutObjectCommand, S3Client } from '@aws-sdk/client-s3';
 import { checkedName, type FileStore } from './file-store';
 
+/** Where files are kept. */
 export interface S3Settings {
   /** Address of the service; without one the SDK's own for the region. */
   readonly endpoint: string | undefined;

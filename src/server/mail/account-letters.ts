@@ -8,6 +8,7 @@ const IN_THE_ROLE: Readonly<Record<Role, string>> = {
   client: 'to look at your floor, say what you think of it and accept it',
 };
 
+/** What an invitation tells; `days` is how long it holds. */
 export interface InvitationTold {
   readonly firm: string;
   readonly inviter: string;
@@ -19,6 +20,7 @@ export interface InvitationTold {
 
 const link = (page: string, token: string) => `/${page}?token=${encodeURIComponent(token)}`;
 
+/** To somebody who is invited, known here or not. */
 export const invitationLetter = (told: InvitationTold): Letter => ({
   kind: 'invitation',
   subject: told.project
@@ -65,6 +67,7 @@ export const putOnProjectLetter = (told: {
   why: `You get this letter because you work with ${told.firm} in Evenlay.`,
 });
 
+/** With the link that chooses a new password. */
 export const newPasswordLetter = (told: {
   readonly name: string;
   readonly token: string;
@@ -87,6 +90,7 @@ export const newPasswordLetter = (told: {
   why: 'If it was not you, leave it be: your password stays as it is, and nobody has been let in.',
 });
 
+/** To whom a password belongs, after it was changed. */
 export const passwordChangedLetter = (told: { readonly name: string }): Letter => ({
   kind: 'password-changed',
   subject: 'Your password was changed',
@@ -105,6 +109,7 @@ export const passwordChangedLetter = (told: { readonly name: string }): Letter =
   why: 'You get this letter whenever your password changes; it cannot be turned off.',
 });
 
+/** To somebody who was taken off a firm. */
 export const removedLetter = (told: { readonly name: string; readonly firm: string }): Letter => ({
   kind: 'removed',
   subject: `You no longer work with ${told.firm} in Evenlay`,

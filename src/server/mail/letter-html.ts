@@ -16,6 +16,7 @@ const ENTITIES: Readonly<Record<string, string>> = {
   "'": '&#39;',
 };
 
+/** Text as it may stand in HTML, in words and in attributes. */
 export const escaped = (text: string): string => text.replace(/[&<>"']/g, (sign) => ENTITIES[sign]);
 
 const lines = (text: string): string => escaped(text).replace(/\n/g, '<br>');

@@ -40,6 +40,7 @@ const blockText = (block: LetterBlock, origin: string): string => {
   }
 };
 
+/** A letter as plain text; links begin at `origin`. */
 export const letterText = (letter: Letter, origin: string): string =>
   [
     letter.name ? wrapped(`Hello ${letter.name},`) : 'Hello,',

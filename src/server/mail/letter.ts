@@ -9,6 +9,7 @@ export type LetterBlock =
   | { readonly kind: 'action'; readonly label: string; readonly path: string }
   | { readonly kind: 'list'; readonly items: readonly LetterItem[] };
 
+/** A line of a list in a letter. */
 export interface LetterItem {
   readonly text: string;
   /** Of this site, such as `/versions/…`. */

@@ -32,11 +32,13 @@ export const showsLetters = (
 
 const folder = () => localMailFolder(environment().dataDir);
 
+/** The letters kept on this machine, newest first. Not found: to addresses from outside, and once letters are really sent. */
 export const localLetters = async (
   address: string,
 ): Promise<Outcome<{ letters: LocalLetterSummary[] }>> =>
   showsLetters(address) ? done({ letters: await listLetters(folder()) }) : notFound('page');
 
+/** One of them; not found as the list is. */
 export const localLetter = async (address: string, id: string): Promise<Outcome<LocalLetter>> => {
   if (!showsLetters(address)) return notFound('page');
   const letter = await readLetter(folder(), id);

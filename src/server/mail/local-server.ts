@@ -6,6 +6,7 @@ import { keepLetter } from './local-letters';
 /** No letter of ours comes near it, bytes. */
 const LARGEST = 5_000_000;
 
+/** A mail server in this process that keeps what it takes. */
 export interface LocalMailServer {
   readonly url: string;
   readonly close: () => Promise<void>;

@@ -5,6 +5,7 @@ import { newId } from '../ids';
 import { siteOrigin } from '../site-origin';
 import { letterParts, type Letter } from './letter';
 
+/** To whom a letter goes and what goes with it. */
 export interface Addressed {
   /** The e-mail address. */
   readonly to: string;

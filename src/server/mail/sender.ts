@@ -35,8 +35,10 @@ export interface SenderSettings {
   readonly restMs: number;
 }
 
+/** As the server runs it; tests are quicker. */
 export const SENDER_SETTINGS: SenderSettings = { leaseSeconds: 180, restMs: 1000 };
 
+/** Sends what lies in the outbox. */
 export interface Sender {
   /** Sends what is due, until nothing is. How many letters it had in hand. */
   readonly drain: () => Promise<number>;

@@ -4,11 +4,13 @@ import { catalogueItems } from '@/db/schema';
 import type { OrderLine, TakeOff } from '@/takeoff/take-off';
 import type { Db } from '../database';
 
+/** What one supplier is to deliver. */
 export interface SupplierLines {
   readonly supplierId: string;
   readonly lines: readonly PurchaseLine[];
 }
 
+/** What a take-off orders, parted by supplier. */
 export interface SplitOrders {
   readonly bySupplier: readonly SupplierLines[];
   /** What no supplier of the catalogue sells, by name. */

@@ -75,6 +75,7 @@ const orderPaper = (order: OnPaper): OrderPaper => {
   };
 };
 
+/** The order’s paper; one without a number is a draft. */
 export const orderPdf = (order: OnPaper): Promise<Uint8Array<ArrayBuffer>> =>
   nodePdf(orderSheets(orderPaper(order)), {
     title: order.number === null ? 'Order (draft)' : `Order ${order.number}`,
@@ -140,6 +141,7 @@ export const openOrderPdf = async (
   return order.ok ? done(await orderPdf(order.value)) : order;
 };
 
+/** The order’s lines for a supplier’s own system, UTF-8 with a byte order mark. Not found and not allowed as the order is. */
 export const openOrderCsv = async (
   db: Db,
   actor: Actor,

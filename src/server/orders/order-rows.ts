@@ -4,6 +4,7 @@ import { outbox, people, purchaseOrders, suppliers } from '@/db/schema';
 import { moneyTimes, PLAIN_ROUNDING } from '@/takeoff/money';
 import type { Db } from '../database';
 
+/** One order of a firm. */
 export const ofOrder = (firmId: string, id: string) =>
   and(eq(purchaseOrders.firmId, firmId), eq(purchaseOrders.id, id));
 
@@ -42,6 +43,7 @@ const letterState = ({ order, letter }: OrderRow): PurchaseOrder['letter'] => {
   return letter.refusedAt ? 'refused' : 'waiting';
 };
 
+/** An order as the browser gets it; a sent one as it was sent. */
 export const orderOf = (row: OrderRow, currency: string): PurchaseOrder => {
   const { order, supplier, sender } = row;
   const { sent } = order;

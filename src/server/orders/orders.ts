@@ -108,6 +108,7 @@ export const pricedOrder = async (
   return refuseUnlessPricing(actor) ?? done({ row, version });
 };
 
+/** Not found: no such one. Not allowed: who does not see costs. */
 export const openOrder = async (
   db: Db,
   actor: Actor,
@@ -145,6 +146,7 @@ export const lockedOrder = async (
   return done(row);
 };
 
+/** Changes a draft. Changed meanwhile: another revision, or sent already. */
 export const changeOrder = async (
   db: Db,
   actor: Actor,

@@ -80,6 +80,7 @@ export const asSent = async (
   paper: (await pricingOf(db, actor.firmId)).paper,
 });
 
+/** The quote’s paper; one without a number is a draft. */
 export const quotePdf = (sent: Omit<SentQuote, 'number'> & { number: string | null }) =>
   nodePdf(quoteSheets(quotePaper(sent)), {
     title: sent.number === null ? 'Quote (draft)' : `Quote ${sent.number}`,

@@ -5,9 +5,11 @@ import type { SeenVersion } from '../seen-version';
 
 const ofQuote = (firmId: string, id: string) => and(eq(quotes.firmId, firmId), eq(quotes.id, id));
 
+/** One quote of a firm; undefined where there is none. */
 export const quoteRow = async (db: Db, firmId: string, id: string) =>
   (await db.select().from(quotes).where(ofQuote(firmId, id))).at(0);
 
+/** The client that the version’s project names; empty while none is. */
 export const clientNameOf = async (db: Db, version: SeenVersion): Promise<string> =>
   (
     await db

@@ -116,6 +116,7 @@ export const pricedQuote = async (
   return done({ row, version });
 };
 
+/** Not found: no such one. Not allowed: who does not see costs. */
 export const openQuote = async (
   db: Db,
   actor: Actor,
@@ -206,6 +207,7 @@ export const lockedDraft = async (
   return done(row);
 };
 
+/** Changes a draft. Changed meanwhile: another revision, or sent already. */
 export const changeQuote = async (
   db: Db,
   actor: Actor,
