@@ -48,6 +48,16 @@ const BEST_KNOWN = [0, 0, 8, 21, 40, 65, 97, 135, 180, 229, 286, 350, 419, 495, 
 const ABOUT_CORNER = [0, 0, 4, 16, 32, 60, 88, 120, 164, 216, 276, 332, 392, 476, 556, 648, 732];
 const ABOUT_MIDDLE = [1, 5, 21, 37, 61, 89, 129, 177, 221, 277, 341, 401, 489, 561, 657, 749];
 
+// A136485 and A261849, diameter 1 …: about a corner, and inscribed in a square of n by n squares.
+const CORNER_BY_DIAMETER = [
+  0, 0, 4, 4, 12, 16, 24, 32, 52, 60, 76, 88, 112, 120, 148, 164, 192, 216, 256, 276, 308, 332, 376,
+  392, 440, 476, 524, 556,
+];
+const INSCRIBED = [
+  0, 0, 1, 4, 9, 16, 21, 32, 45, 60, 69, 88, 101, 120, 145, 164, 185, 216, 241, 276, 293, 332, 365,
+  392, 437, 476, 509, 556,
+];
+
 /** Most squares in rows that slide freely, for any radius, by every height of the rows at which a row gains one. */
 function mostInRows(radius: number): number {
   const heights = [0];
@@ -100,6 +110,14 @@ test('a stack in a circle reaches or beats the grid about a corner and about the
     const most = mostInCircle(radius, stack, 17);
     expect(most).toBeGreaterThanOrEqual(ABOUT_CORNER[radius]);
     expect(most).toBeGreaterThanOrEqual(ABOUT_MIDDLE[radius - 1]);
+  }
+});
+
+test('so it does in a circle of any whole diameter, about a corner and in its own square of n by n', () => {
+  for (let diameter = 1; diameter <= 28; diameter++) {
+    const most = mostInCircle(diameter / 2, stack, 31);
+    expect(most).toBeGreaterThanOrEqual(CORNER_BY_DIAMETER[diameter - 1]);
+    expect(most).toBeGreaterThanOrEqual(INSCRIBED[diameter - 1]);
   }
 });
 

@@ -6,6 +6,7 @@ import { unitCount } from '@/paving/fit/count';
 import { fit, type FitResult } from '@/paving/fit/fit';
 import { cellPoint, fitFrame, frameFromGround } from '@/paving/fit/fit-frame';
 import { depthMoved } from '@/paving/fit/most';
+import { shiftMap, shiftMapPlace } from '@/paving/fit/shift-map';
 import { documentGround, type Ground } from '@/paving/ground';
 import { layFloor } from '@/paving/laying';
 import type { LayoutDocument } from '@/paving/layout-document';
@@ -171,6 +172,47 @@ test('at a thousand starts the count is the same by the laying, by the rows and 
       },
     ),
     { numRuns: 44, seed: 9 },
+  );
+  expect(checked).toBeGreaterThan(1000);
+}, 120_000);
+
+test('in the middle of a thousand squares of the shift map the laying counts what the map shows', () => {
+  let checked = 0;
+  fc.assert(
+    fc.property(
+      anyDocument({ arcs: true }),
+      fc.array(fc.nat(), { minLength: 25, maxLength: 25 }),
+      (document, squares) => {
+        const map = shiftMap(document, 48);
+        const ground = documentGround(document);
+        const [dx, dy] = map.direction;
+        for (const any of squares) {
+          const square = any % map.counts.length;
+          const u = (((square % map.width) + 0.5) / map.width) * map.pitch;
+          const v = ((Math.floor(square / map.width) + 0.5) / map.height) * map.rise;
+          const laid = (du: number, dv: number) => {
+            const [x, y] = [u + du, v + dv];
+            const origin: [number, number] = [
+              map.from[0] + x * dx - y * dy,
+              map.from[1] + x * dy + y * dx,
+            ];
+            return sampled(document, ground, origin).count;
+          };
+          // As above: so near to losing or gaining a unit either count will do.
+          const here = laid(0, 0);
+          if (laid(3e-6, 0) !== here || laid(-3e-6, 0) !== here) continue;
+          if (laid(0, 3e-6) !== here || laid(0, -3e-6) !== here) continue;
+          checked++;
+          expect(map.counts[square]).toBe(here);
+          const place = shiftMapPlace(map, [
+            map.from[0] + u * dx - v * dy,
+            map.from[1] + u * dy + v * dx,
+          ]);
+          expect(Math.hypot(place[0] - u, place[1] - v)).toBeLessThan(1e-6);
+        }
+      },
+    ),
+    { numRuns: 44, seed: 12, endOnFailure: true },
   );
   expect(checked).toBeGreaterThan(1000);
 }, 120_000);
