@@ -1,6 +1,6 @@
-import { readFile } from 'node:fs/promises';
 import { importFirm } from '@/server/archive/import';
 import { openDatabase } from '@/db/client';
+import { withFile } from '@/server/archive/zip-file';
 import { environment } from '@/server/environment';
 import { endWith } from './welcome';
 
@@ -8,10 +8,9 @@ import { endWith } from './welcome';
 const run = async (): Promise<void> => {
   const [file] = process.argv.slice(2);
   if (!file) throw new Error('Say which archive: npm run import -- file.zip');
-  const archive = await readFile(file);
   const opened = await openDatabase(environment());
   try {
-    const imported = await importFirm(opened.db, archive);
+    const imported = await withFile(file, (archive) => importFirm(opened.db, archive));
     if (!imported.ok) throw new Error(imported.detail);
     const { counts } = imported.value;
     console.log(

@@ -1,3 +1,7 @@
+import { createHash, randomBytes } from 'node:crypto';
+import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import path from 'node:path';
 import { eq, isTable } from 'drizzle-orm';
 import { strFromU8, strToU8, unzipSync, zipSync } from 'fflate';
 import { describe, expect, test } from 'vitest';
@@ -5,6 +9,7 @@ import * as schema from '@/db/schema';
 import { exportFirm } from '@/server/archive/export';
 import { importFirm } from '@/server/archive/import';
 import { ARCHIVED_TABLES, NOT_ARCHIVED } from '@/server/archive/tables';
+import { bytesInMemory, withFile } from '@/server/archive/zip-file';
 import { useDatabase } from '@/server/database';
 import { startSession } from '@/server/sessions';
 import { court, moved, newVersion } from './firm';
@@ -97,7 +102,7 @@ test('read into an empty instance, an archive gives the very same archive again,
   const projects = (await office.owner.visitor.get('/api/projects')).body;
   const other = await openEmpty();
   try {
-    const imported = await importFirm(other.db, archive);
+    const imported = await importFirm(other.db, bytesInMemory(archive));
     expect(imported).toMatchObject({ ok: true, value: { firmId } });
     expect(Buffer.compare(await archiveOf(firmId, other.db), archive)).toBe(0);
     // It works as before, and nobody gets in with an old password.
@@ -113,7 +118,10 @@ test('read into an empty instance, an archive gives the very same archive again,
     visitor.setCookie(session.id);
     expect((await visitor.get(`/api/layouts/${office.layoutId}/versions`)).body).toEqual(versions);
     expect((await visitor.get('/api/projects')).body).toEqual(projects);
-    expect(await importFirm(other.db, archive)).toMatchObject({ ok: false, kind: 'invalid' });
+    expect(await importFirm(other.db, bytesInMemory(archive))).toMatchObject({
+      ok: false,
+      kind: 'invalid',
+    });
   } finally {
     useDatabase({ db: before, kind: 'pglite', settled: async () => {}, close: async () => {} });
     await other.close();
@@ -197,7 +205,7 @@ describe('what is no archive is refused with a reason, and leaves the database e
     const archive = await make();
     const other = await openEmpty();
     try {
-      const outcome = await importFirm(other.db, archive);
+      const outcome = await importFirm(other.db, bytesInMemory(archive));
       expect(outcome).toMatchObject({
         ok: false,
         kind: 'invalid',
@@ -208,6 +216,44 @@ describe('what is no archive is refused with a reason, and leaves the database e
       await other.close();
     }
   });
+});
+
+test('an archive is read file by file, from a file too: never more at once than its largest file or its list', async () => {
+  const office = await busyOffice();
+  const files = { ...unzipSync(await archiveOf(office.owner.actor.firmId)) };
+  // Photos enough to be most of the archive; the same firm may have hundreds of times as many.
+  for (let n = 0; n < 30; n += 1) {
+    const photo = randomBytes(200_000);
+    files[`photo-files/${createHash('sha256').update(photo).digest('hex')}.jpg`] = photo;
+  }
+  const folder = mkdtempSync(path.join(tmpdir(), 'evenlay-import-'));
+  const other = await openEmpty();
+  try {
+    const zip = path.join(folder, 'firm.zip');
+    writeFileSync(zip, zipSync(files));
+    let most = 0;
+    const kept: string[] = [];
+    const store = { put: async (name: string) => void kept.push(name), get: async () => null };
+    const imported = await withFile(zip, (bytes) =>
+      importFirm(
+        other.db,
+        {
+          ...bytes,
+          read: (at, length) => {
+            most = Math.max(most, length);
+            return bytes.read(at, length);
+          },
+        },
+        store,
+      ),
+    );
+    expect(imported).toMatchObject({ ok: true });
+    expect(kept).toHaveLength(30);
+    expect(most).toBeLessThan(300_000);
+  } finally {
+    rmSync(folder, { recursive: true });
+    await other.close();
+  }
 });
 
 test('an owner gets the archive by the endpoint, as a file, and that is written down', async () => {

@@ -11,6 +11,7 @@ import { setOut } from '@/paving/set-out/set-out';
 import type { SiteEntryContent } from '@/paving/site/site-entry';
 import { exportFirm } from '@/server/archive/export';
 import { importFirm } from '@/server/archive/import';
+import { bytesInMemory } from '@/server/archive/zip-file';
 import { useDatabase } from '@/server/database';
 import { startLocalS3, type LocalS3 } from '@/server/files/local-s3';
 import { s3Store } from '@/server/files/s3-store';
@@ -480,7 +481,7 @@ describe('photos', () => {
     const second = await startLocalS3(elsewhere);
     try {
       const store = s3Store(second.settings);
-      expect(await importFirm(empty.db, first, store)).toMatchObject({ ok: true });
+      expect(await importFirm(empty.db, bytesInMemory(first), store)).toMatchObject({ ok: true });
       expect(Buffer.compare(await archive(empty.db, store), first)).toBe(0);
       useDatabase(empty);
       useFiles(store);

@@ -1,7 +1,6 @@
 import { createHash, randomBytes } from 'node:crypto';
 import { sql } from 'drizzle-orm';
 import type { PgTable } from 'drizzle-orm/pg-core';
-import { unzipSync } from 'fflate';
 import { firms } from '@/db/schema';
 import { layoutDocumentSchema } from '@/paving/layout-document';
 import type { Db } from '../database';
@@ -13,11 +12,15 @@ import { passwordHash } from '../passwords';
 import { PHOTO_TYPE, photoFile } from '../site/photo-files';
 import { ARCHIVE_SCHEMA, PHOTO_FOLDER } from './export';
 import { ARCHIVED_TABLES, archivedColumns, isMoment, type ArchivedTable } from './tables';
+import { BrokenZip, unzipped, zipEntries, type Bytes, type ZipEntry } from './zip-file';
 
 type Row = Readonly<Record<string, unknown>>;
 
 /** Rows put in at a time: PostgreSQL takes at most 65,535 values a statement. */
 const ROWS_AT_ONCE = 500;
+
+/** Documents read at a time. */
+const FILES_AT_ONCE = 200;
 
 /** What takes the place of a secret: nobody has it, so people choose a new password and are invited anew. */
 const replaced: Readonly<Record<string, () => Promise<Row>>> = {
@@ -29,10 +32,34 @@ const replaced: Readonly<Record<string, () => Promise<Row>>> = {
 
 class NotAnArchive extends Error {}
 
-const json = (files: Readonly<Record<string, Uint8Array>>, name: string): unknown => {
-  if (!(name in files)) throw new NotAnArchive(`${name} is missing`);
+/**
+ * The largest file of an archive, unpacked, that is taken in, bytes. Files are read one at a time, and each is a table or a
+ * document; a larger one would not fit into one string.
+ */
+const LARGEST_FILE = 400_000_000;
+
+/** An archive, read file by file: never more of it is in memory than one file and the rows that are put in at a time. */
+interface Archive {
+  readonly zip: Bytes;
+  readonly files: ReadonlyMap<string, ZipEntry>;
+}
+
+const read = async ({ zip, files }: Archive, name: string): Promise<Uint8Array> => {
+  const entry = files.get(name);
+  if (!entry) throw new NotAnArchive(`${name} is missing`);
+  if (entry.size > LARGEST_FILE) {
+    const megabytes = Math.ceil(entry.size / 1e6);
+    throw new NotAnArchive(
+      `${name} is ${megabytes} MB unpacked, and no file of more than ${LARGEST_FILE / 1e6} MB can be read in`,
+    );
+  }
+  return unzipped(zip, entry);
+};
+
+const json = async (archive: Archive, name: string): Promise<unknown> => {
+  const bytes = await read(archive, name);
   try {
-    return JSON.parse(new TextDecoder('utf-8', { fatal: true }).decode(files[name]));
+    return JSON.parse(new TextDecoder('utf-8', { fatal: true }).decode(bytes));
   } catch {
     throw new NotAnArchive(`${name} is not JSON`);
   }
@@ -41,19 +68,18 @@ const json = (files: Readonly<Record<string, Uint8Array>>, name: string): unknow
 const isRow = (value: unknown): value is Row =>
   value !== null && typeof value === 'object' && !Array.isArray(value);
 
-const rowsIn = (files: Readonly<Record<string, Uint8Array>>, archived: ArchivedTable): Row[] => {
-  const { name, fileBy } = archived;
-  const read =
-    fileBy === undefined
-      ? json(files, `${name}.json`)
-      : Object.keys(files)
-          .filter((file) => file.startsWith(`${name}/`))
-          .map((file) => json(files, file));
-  if (!Array.isArray(read) || !read.every(isRow)) {
+/** Names of the files that hold a table's rows. */
+const filesOf = ({ files }: Archive, { name, fileBy }: ArchivedTable): string[] =>
+  fileBy === undefined
+    ? [`${name}.json`]
+    : [...files.keys()].filter((file) => file.startsWith(`${name}/`));
+
+const checked = ({ name, ...archived }: ArchivedTable, rows: unknown): Row[] => {
+  if (!Array.isArray(rows) || !rows.every(isRow)) {
     throw new NotAnArchive(`${name} holds something other than rows`);
   }
-  for (const row of read) {
-    for (const [column] of archivedColumns(archived)) {
+  for (const row of rows) {
+    for (const [column] of archivedColumns({ name, ...archived })) {
       if (!(column in row)) throw new NotAnArchive(`a row of ${name} has no ${column}`);
     }
     if ('document' in row && !layoutDocumentSchema.safeParse(row.document).success) {
@@ -65,9 +91,24 @@ const rowsIn = (files: Readonly<Record<string, Uint8Array>>, archived: ArchivedT
   }
   // The first comment of a thread goes in before its answers, which refer to it.
   return name === 'comments'
-    ? [...read].sort((a, b) => Number(b.id === b.threadId) - Number(a.id === a.threadId))
-    : read;
+    ? [...rows].sort((a, b) => Number(b.id === b.threadId) - Number(a.id === a.threadId))
+    : rows;
 };
+
+/** The rows of a table, checked, some at a time. */
+async function* rowsIn(archive: Archive, archived: ArchivedTable): AsyncGenerator<Row[]> {
+  const names = filesOf(archive, archived);
+  if (archived.fileBy === undefined) {
+    yield checked(archived, await json(archive, names[0]));
+    return;
+  }
+  for (let from = 0; from < names.length; from += FILES_AT_ONCE) {
+    const rows: unknown[] = [];
+    for (const name of names.slice(from, from + FILES_AT_ONCE))
+      rows.push(await json(archive, name));
+    yield checked(archived, rows);
+  }
+}
 
 const putIn = async (tx: Db, archived: ArchivedTable, rows: readonly Row[]): Promise<void> => {
   const columns = archivedColumns(archived);
@@ -88,18 +129,42 @@ const putIn = async (tx: Db, archived: ArchivedTable, rows: readonly Row[]): Pro
   }
 };
 
-/** The photos of an archive by the hash that names them. */
-const photosIn = (files: Readonly<Record<string, Uint8Array>>): Map<string, Uint8Array> =>
-  new Map(
-    Object.entries(files).flatMap(([name, bytes]) => {
-      const hash = new RegExp(`^${PHOTO_FOLDER}/([0-9a-f]{64})\\.jpg$`).exec(name)?.[1];
-      if (!hash) return [];
-      if (createHash('sha256').update(bytes).digest('hex') !== hash) {
-        throw new NotAnArchive(`photo ${hash} is not the one its name says`);
-      }
-      return [[hash, bytes] as const];
-    }),
-  );
+const PHOTO = new RegExp(`^${PHOTO_FOLDER}/([0-9a-f]{64})\\.jpg$`);
+
+/** The hashes that name an archive's photos, each found to be of its photo. */
+const photosIn = async (archive: Archive): Promise<string[]> => {
+  const hashes = [...archive.files.keys()].flatMap((name) => PHOTO.exec(name)?.[1] ?? []);
+  for (const hash of hashes) {
+    const bytes = await read(archive, `${PHOTO_FOLDER}/${hash}.jpg`);
+    if (createHash('sha256').update(bytes).digest('hex') !== hash) {
+      throw new NotAnArchive(`photo ${hash} is not the one its name says`);
+    }
+  }
+  return hashes;
+};
+
+/** What the archive says that it is; that nothing of it is missing is looked up in its list of files. */
+const aboutOf = async (archive: Archive): Promise<{ firmId: string; counts: Row }> => {
+  const about = await json(archive, 'archive.json');
+  if (!isRow(about) || about.schema !== ARCHIVE_SCHEMA || typeof about.firmId !== 'string') {
+    throw new NotAnArchive(`it is not of the kind ${ARCHIVE_SCHEMA}`);
+  }
+  const counts = isRow(about.counts) ? about.counts : {};
+  for (const archived of ARCHIVED_TABLES) {
+    const names = filesOf(archive, archived);
+    if (archived.fileBy === undefined && !archive.files.has(names[0])) {
+      throw new NotAnArchive(`${names[0]} is missing`);
+    }
+    if (archived.fileBy !== undefined) complete(archived.name, counts, names.length);
+  }
+  return { firmId: about.firmId, counts };
+};
+
+const complete = (name: string, counts: Row, found: number): void => {
+  if (name in counts && counts[name] !== found) {
+    throw new NotAnArchive(`some of its ${name} are missing`);
+  }
+};
 
 /**
  * Puts a firm's archive into a database that holds no firm. All of it or nothing: 422 `invalid` when it is no archive, or
@@ -107,45 +172,36 @@ const photosIn = (files: Readonly<Record<string, Uint8Array>>): Map<string, Uint
  */
 export const importFirm = async (
   db: Db,
-  archive: Uint8Array,
+  bytes: Bytes,
   store?: FileStore,
 ): Promise<Outcome<{ firmId: string; counts: Readonly<Record<string, number>> }>> => {
-  const refuse = (why: string) =>
-    invalid(`This archive cannot be read in: ${why}.`, [{ path: [], message: why }]);
-  let tables: { archived: ArchivedTable; rows: Row[] }[];
-  let photos: Map<string, Uint8Array>;
-  let firmId: string;
   try {
-    const files = unzipSync(archive);
-    const about = json(files, 'archive.json');
-    if (!isRow(about) || about.schema !== ARCHIVE_SCHEMA || typeof about.firmId !== 'string') {
-      return refuse(`it is not of the kind ${ARCHIVE_SCHEMA}`);
-    }
-    firmId = about.firmId;
-    photos = photosIn(files);
-    tables = ARCHIVED_TABLES.map((archived) => ({ archived, rows: rowsIn(files, archived) }));
-    for (const { archived, rows } of tables) {
-      if (isRow(about.counts) && about.counts[archived.name] !== rows.length) {
-        return refuse(`some of its ${archived.name} are missing`);
+    const archive: Archive = { zip: bytes, files: await zipEntries(bytes) };
+    const about = await aboutOf(archive);
+    const counts = await db.transaction(async (tx) => {
+      const [any] = await tx.select({ id: firms.id }).from(firms).limit(1);
+      if (any) throw new NotAnArchive('this database holds a firm already, and takes in only one');
+      const found: Record<string, number> = {};
+      for (const archived of ARCHIVED_TABLES) {
+        found[archived.name] = 0;
+        for await (const rows of rowsIn(archive, archived)) {
+          found[archived.name] += rows.length;
+          await putIn(tx, archived, rows);
+        }
+        complete(archived.name, about.counts, found[archived.name]);
+        // Triggers look up what is in already: planned for the tables as they are now, not as when they were empty.
+        await tx.execute(sql`analyze ${archived.table}`);
       }
-    }
+      for (const hash of await photosIn(archive)) {
+        const photo = await read(archive, `${PHOTO_FOLDER}/${hash}.jpg`);
+        await (store ?? (await theFiles())).put(photoFile(about.firmId, hash), photo, PHOTO_TYPE);
+      }
+      return found;
+    });
+    return done({ firmId: about.firmId, counts });
   } catch (error) {
-    return refuse(error instanceof NotAnArchive ? error.message : 'it is no ZIP file, or broken');
+    if (!(error instanceof NotAnArchive) && !(error instanceof BrokenZip)) throw error;
+    const why = error.message;
+    return invalid(`This archive cannot be read in: ${why}.`, [{ path: [], message: why }]);
   }
-  return db.transaction(async (tx) => {
-    const [any] = await tx.select({ id: firms.id }).from(firms).limit(1);
-    if (any) return refuse('this database holds a firm already, and takes in only one');
-    for (const { archived, rows } of tables) {
-      await putIn(tx, archived, rows);
-      // Triggers look up what is in already: planned for the tables as they are now, not as when they were empty.
-      await tx.execute(sql`analyze ${archived.table}`);
-    }
-    for (const [hash, bytes] of photos) {
-      await (store ?? (await theFiles())).put(photoFile(firmId, hash), bytes, PHOTO_TYPE);
-    }
-    const counts = Object.fromEntries(
-      tables.map(({ archived, rows }) => [archived.name, rows.length]),
-    );
-    return done({ firmId, counts });
-  });
 };
