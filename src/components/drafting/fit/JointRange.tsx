@@ -1,20 +1,29 @@
 import { proxy } from 'comlink';
 import { useEffect, useRef, useState } from 'react';
 import { formatCount } from '@/paving/count';
-import type { JointFit } from '@/paving/fit/joint-range';
-import { formatLength } from '@/paving/length';
+import type { JointFit, JointRange as SoughtRange } from '@/paving/fit/joint-range';
+import { formatLength, MM_PER_INCH, type Display } from '@/paving/length';
 import { LengthField } from '../../ui/LengthField';
 import { lengthWithin } from '../field-limits';
 import { useTable, useTableStore } from '../table-context';
 import { newHand, dismissed, type Hand } from './fit-hand';
 import { fitKey } from './fit-service';
 
-/** Joints that the trade allows for blocks: 2 to 5 mm (construction tolerances for interlocking pavements, ICPI). */
-const FIRST_RANGE = { from: 2, to: 5, step: 0.25 };
+/** Joints that the trade allows for blocks: 2 to 5 mm, 1/16 to 3/16 in (construction tolerances for interlocking pavements, ICPI). */
+const FIRST_RANGE: Readonly<Record<Display, SoughtRange>> = {
+  metric: { from: 2, to: 5, step: 0.25 },
+  imperial: { from: MM_PER_INCH / 16, to: (3 * MM_PER_INCH) / 16, step: MM_PER_INCH / 16 },
+};
 
 /** Bounds of what may be typed: wider than this is no joint, finer steps than that nobody can lay. */
 const GREATEST_JOINT_MM = 500;
 const LEAST_STEP_MM = 0.01;
+
+/** A joint to the hundredth of a millimetre, in feet and inches too: a sixteenth too much, and the row does not close. */
+const jointText = (mm: number, display: Display): string => {
+  const metric = formatLength(mm, 'metric', { decimals: 2 });
+  return display === 'metric' ? metric : `${formatLength(mm, display)} (${metric})`;
+};
 
 /** What a range of joints comes to, in a sentence. */
 function jointsTold(found: readonly JointFit[], length: (mm: number) => string): string {
@@ -34,7 +43,8 @@ export function JointRange() {
   const table = useTableStore();
   const document = useTable((state) => state.document);
   const { display, bond } = document;
-  const [range, setRange] = useState(FIRST_RANGE);
+  const [typed, setTyped] = useState<SoughtRange | null>(null);
+  const range = typed ?? FIRST_RANGE[display];
   const [found, setFound] = useState<readonly JointFit[] | null>(null);
   const [failure, setFailure] = useState<string | null>(null);
   const [share, setShare] = useState<number | null>(null);
@@ -60,7 +70,7 @@ export function JointRange() {
     setFound(null);
     if (range.from > range.to) {
       setFailure(
-        `From ${length(range.from)} to ${length(range.to)} runs backwards: the narrower joint comes first.`,
+        `From ${jointText(range.from, display)} to ${jointText(range.to, display)} runs backwards: the narrower joint comes first.`,
       );
       return;
     }
@@ -100,7 +110,7 @@ export function JointRange() {
                 ? 'That step is too fine to be laid.'
                 : lengthWithin(display, 0, GREATEST_JOINT_MM)(mm)
             }
-            onLength={(mm) => setRange({ ...range, [part]: mm })}
+            onLength={(mm) => setTyped({ ...range, [part]: mm })}
           />
         ))}
       </div>
@@ -112,13 +122,13 @@ export function JointRange() {
         {share === null ? 'Try these joints' : `Stop (${Math.round(share * 100)} %)`}
       </button>
       {failure && (
-        <p role="alert" className="mt-2 text-sm text-brick">
+        <p role="alert" className="mt-2 text-sm text-brick first-letter:uppercase">
           {failure}
         </p>
       )}
       {found && found.length > 0 && (
         <p className="mt-2 text-sm" data-testid="joints-told">
-          {jointsTold(found, length)}
+          {jointsTold(found, (mm) => jointText(mm, display))}
         </p>
       )}
       {found && (
@@ -127,7 +137,7 @@ export function JointRange() {
             <li key={joint.joint}>
               <button
                 type="button"
-                className={`flex min-h-11 w-full items-center justify-between gap-2 px-1 text-left hover:bg-stone-100 ${joint.wholeUnits === most ? 'font-semibold' : ''}`}
+                className={`grid min-h-11 w-full grid-cols-[1fr_1fr_auto] items-center gap-2 px-1 text-left hover:bg-stone-100 ${joint.wholeUnits === most ? 'font-semibold' : ''}`}
                 onClick={() => {
                   table.getState().edit((now) => ({
                     ...now,
@@ -139,7 +149,7 @@ export function JointRange() {
                     .set({ said: `${formatCount(joint.wholeUnits)} whole units with this joint.` });
                 }}
               >
-                <span>{length(joint.joint)}</span>
+                <span>{jointText(joint.joint, display)}</span>
                 <span>
                   {formatCount(joint.wholeUnits)} whole{joint.closes && ', just closes'}
                 </span>

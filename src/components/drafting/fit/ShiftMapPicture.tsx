@@ -140,7 +140,7 @@ export function ShiftMapPicture({
         aria-hidden="true"
       >
         {(['stone-50', 'graphite'] as const).map((ink, over) => (
-          <g key={ink} fill="none" stroke={`var(--${ink})`} strokeWidth={over ? 1.6 : 4}>
+          <g key={ink} fill="none" stroke={`var(--${ink})`} strokeWidth={over ? 1.5 : 3.5}>
             <path d={facePath(map, face)} vectorEffect="non-scaling-stroke" />
             {best &&
               bestAt &&
