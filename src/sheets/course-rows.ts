@@ -2,28 +2,24 @@ import type { Course, CourseRun } from '@/paving/set-out/set-out-types';
 import type { Unit } from '@/paving/layout-document';
 import type { Display } from '@/paving/length';
 import { formatCount } from '@/paving/count';
+import { numbersWords, type CourseGroup } from './course-groups';
 import { figureText, lengthText } from './figures';
 import type { PanelRow } from './panel';
 import { LINE_PITCH, panelText, textRows } from './panel';
 import { tickBox } from './ruled-table';
 import { LETTERING, textLines, textWidth } from './text-measure';
 
-/** Of a floor with more units than the first of each, only every so many are given, and a run's first and last. */
-const SPARSER: readonly (readonly [units: number, every: number])[] = [
-  [1500, 1],
-  [8000, 5],
-  [Infinity, 10],
-];
+/** A floor of more units has no box for each of them: a box for each course, and courses that are alike together. */
+const MOST_BOXED = 1500;
 
-/** Every how many units a running length is given. */
-export const ticksEvery = (units: number): number =>
-  SPARSER.find(([most]) => units <= most)?.[1] ?? 1;
+/** Whether a floor of so many units has its courses in compact lists. */
+export const isCompact = (units: number): boolean => units > MOST_BOXED;
 
 export interface CourseWords {
   readonly display: Display;
   readonly units: readonly Unit[];
-  /** Every how many units a running length is given, in courses whose steps repeat. */
-  readonly every: number;
+  /** Lengths in compact columns, without a box for each unit. */
+  readonly compact: boolean;
 }
 
 const AFTER: Readonly<Record<CourseRun['after'], string>> = {
@@ -52,29 +48,48 @@ export function courseSteps({ runs }: Pick<Course, 'runs'>): readonly number[] |
   return null;
 }
 
-/** One course: what it is made of, then the running lengths of its units, each with a box to tick. */
-export function courseRows(course: Course, words: CourseWords, width: number): readonly PanelRow[] {
-  const { display } = words;
+/**
+ * Courses that are alike: what they are made of, then the running lengths of their units, every one of them; each with a
+ * box to tick, or in a compact list.
+ */
+export function courseRows(
+  group: CourseGroup,
+  words: CourseWords,
+  width: number,
+): readonly PanelRow[] {
+  const [course] = group;
+  const { display, compact } = words;
   const figure = (mm: number) => figureText(mm, display);
-  const steps = words.every === 1 ? null : courseSteps(course);
-  // Without a step to go by, every unit has its length.
-  const given = steps === null ? { ...words, every: 1 } : words;
+  const steps = compact ? courseSteps(course) : null;
+  const size = compact ? alikeSize(course) : null;
+  const numbers = group.map(({ number }) => number);
+  const many = group.length > 1;
   const head = [
-    `${formatCount(course.units)} ${course.units === 1 ? 'unit' : 'units'}${kinds(course, words)}`,
-    `string ${course.number}a to ${course.number}b, ${lengthText(course.length, display)} long`,
-    ...(course.step === null
-      ? []
-      : [`${lengthText(course.step, display)} from the string of course ${course.number - 1}`]),
+    `${many ? 'each ' : ''}${formatCount(course.units)} ${course.units === 1 ? 'unit' : 'units'}${kinds(course, words)}`,
+    many
+      ? `strings ${lengthText(course.length, display)} long`
+      : `string ${course.number}a to ${course.number}b, ${lengthText(course.length, display)} long`,
+    ...apartWords(group, display),
     `first unit ${lengthText(course.startGap, display)} from its start`,
     ...(steps === null ? [] : [stepWords(steps, display)]),
+    ...(size === null || size === 0
+      ? []
+      : [`each unit ${lengthText(size, display, 1)} from its near edge to its far edge`]),
     `last unit ${lengthText(course.endGap, display)} from its end`,
   ].join('; ');
   const outside = course.outside.map(
     ({ from, to, over }) => `${figure(from)} to ${figure(to)} is over ${over}`,
   );
-  const title = `Course ${course.number}`;
+  const lengths = (run: CourseRun, before: number) =>
+    compact
+      ? compactRows(run, { display, first: before + 1, nearOnly: size !== null }, width)
+      : tickRows(run, words, width);
+  const before = course.runs.map((_, n) =>
+    course.runs.slice(0, n).reduce((sum, { units }) => sum + units, 0),
+  );
   return [
-    headRow(title, `${head}.`, width),
+    ...headRows(`${many ? 'Courses' : 'Course'} ${numbersWords(numbers)}`, `${head}.`, width),
+    ...(compact ? laidRows(numbers, width) : []),
     ...(outside.length === 0 ? [] : kept(textRows(`On the string, ${outside.join('; ')}.`, width))),
     ...course.runs.flatMap((run, n) => [
       ...(n === 0 || AFTER[run.after] === ''
@@ -85,10 +100,37 @@ export function courseRows(course: Course, words: CourseWords, width: number): r
               width,
             ),
           )),
-      ...tickRows(run, given, width),
+      ...lengths(run, before[n]),
     ]),
     { height: 2, draw: () => [] },
   ];
+}
+
+/** How far the strings are from those before them: once where it is always the same. */
+function apartWords(group: CourseGroup, display: Display): readonly string[] {
+  const after = group.flatMap(({ number, step }) => (step === null ? [] : [{ number, step }]));
+  if (after.length === 0) return [];
+  if (group.length === 1)
+    return [
+      `${lengthText(after[0].step, display)} from the string of course ${after[0].number - 1}`,
+    ];
+  const said = [...new Set(after.map(({ step }) => lengthText(step, display)))];
+  return said.length === 1
+    ? [`${said[0]} from the string of the course before`]
+    : said.map(
+        (step) =>
+          `${step} from the string of the course before: ${numbersWords(
+            after
+              .filter((each) => lengthText(each.step, display) === step)
+              .map((each) => each.number),
+          )}`,
+      );
+}
+
+/** From near to far edge where that is the same of every unit of the course, mm; 0 where strings touch corners. */
+function alikeSize({ runs }: Course): number | null {
+  const sizes = runs.flatMap(({ ticks }) => ticks.map(([near, far]) => far - near));
+  return sizes.every((size) => Math.abs(size - sizes[0]) < SAME_STEP) ? sizes[0] : null;
 }
 
 const stepWords = (steps: readonly number[], display: Display): string =>
@@ -107,39 +149,35 @@ function kinds({ byUnit }: Course, { units }: CourseWords): string {
     : ` (${used.map(({ id, name }) => `${formatCount(byUnit[id])} ${name}`).join(', ')})`;
 }
 
-function headRow(title: string, words: string, width: number): PanelRow {
+/** The course's name before what is said of it; a name too long for that has lines of its own. */
+function headRows(title: string, words: string, width: number): readonly PanelRow[] {
   const indent = 24;
-  const lines = textLines(words, width - indent, LETTERING.small);
-  return {
-    height: Math.max(lines.length * LINE_PITCH, 5) + 0.8,
-    keepsNext: 'needed',
-    draw: ([x, y], _width, frame) => [
-      panelText([x, y + 0.65 + LETTERING.small], title, frame, { weight: 700 }),
-      ...lines.map((line, n) =>
-        panelText([x + indent, y + 0.65 + LETTERING.small + n * LINE_PITCH], line, frame),
-      ),
-    ],
-  };
+  const beside = textWidth(title, LETTERING.small, 700) <= indent - 2;
+  const titles = beside ? [title] : textLines(title, width, LETTERING.small, 700);
+  const lines = textLines(words, beside ? width - indent : width, LETTERING.small);
+  const above = beside ? 0 : titles.length;
+  return [
+    {
+      height: Math.max((above + lines.length) * LINE_PITCH, 5) + 0.8,
+      keepsNext: 'needed',
+      draw: ([x, y], _width, frame) => {
+        const line = (n: number) => y + 0.65 + LETTERING.small + n * LINE_PITCH;
+        return [
+          ...titles.map((text, n) => panelText([x, line(n)], text, frame, { weight: 700 })),
+          ...lines.map((text, n) =>
+            panelText([beside ? x + indent : x, line(above + n)], text, frame),
+          ),
+        ];
+      },
+    },
+  ];
 }
 
-/** Which of a run's units have their running length given. */
-const givenTicks = ({ ticks }: CourseRun, every: number): readonly number[] =>
-  ticks.map((_, n) => n).filter((n) => n === 0 || n === ticks.length - 1 || (n + 1) % every === 0);
+const BOX = 4.6;
+const SPACE = 3;
 
-/** Boxes to tick in columns of one width, a few lines of them. */
-function tickRows(
-  run: CourseRun,
-  { display, every }: CourseWords,
-  width: number,
-): readonly PanelRow[] {
-  const BOX = 4.6;
-  const SPACE = 3;
-  const figure = (mm: number) => figureText(mm, display);
-  const labels = givenTicks(run, every).map((n) => {
-    const [near, far] = run.ticks[n];
-    const length = far - near < 0.5 ? figure(near) : `${figure(near)}–${figure(far)}`;
-    return every === 1 ? length : `${n + 1}: ${length}`;
-  });
+/** Boxes to tick in columns of one width, with what stands beside each. */
+function boxRows(labels: readonly string[], width: number): readonly PanelRow[] {
   const pitch = BOX + SPACE + Math.max(...labels.map((label) => textWidth(label, LETTERING.small)));
   const across = Math.max(1, Math.floor((width + SPACE) / pitch));
   const lines = Array.from({ length: Math.ceil(labels.length / across) }, (_, n) =>
@@ -153,4 +191,68 @@ function tickRows(
         panelText([x + n * pitch + BOX, y + 0.5 + LETTERING.small], label, frame),
       ]),
   }));
+}
+
+/** A run's running lengths: near and far edge of each unit beside a box. */
+const tickRows = (
+  { ticks }: CourseRun,
+  { display }: CourseWords,
+  width: number,
+): readonly PanelRow[] => {
+  const figure = (mm: number) => figureText(mm, display);
+  return boxRows(
+    ticks.map(([near, far]) =>
+      far - near < 0.5 ? figure(near) : `${figure(near)}–${figure(far)}`,
+    ),
+    width,
+  );
+};
+
+/** A box for each of the courses, to tick when it lies. */
+const laidRows = (numbers: readonly number[], width: number): readonly PanelRow[] =>
+  kept(
+    boxRows(
+      numbers.map((number) => `${number} laid`),
+      width,
+    ),
+  );
+
+/** Lengths on a line of a compact list: round numbers, so that a unit's place is found by counting. */
+const ACROSS = [25, 20, 15, 10, 5, 4, 2, 1] as const;
+const NUMBER_SPACE = 3;
+
+/** A run's running lengths in columns, each line with the number of its first unit in the course. */
+function compactRows(
+  { ticks }: CourseRun,
+  { display, first, nearOnly }: { display: Display; first: number; nearOnly: boolean },
+  width: number,
+): readonly PanelRow[] {
+  const figure = (mm: number) => figureText(mm, display);
+  const labels = ticks.map(([near, far]) =>
+    nearOnly || far - near < 0.5 ? figure(near) : `${figure(near)}–${figure(far)}`,
+  );
+  const numbered = (n: number) => `${formatCount(first + n)}:`;
+  const name = NUMBER_SPACE + textWidth(numbered(ticks.length - 1), LETTERING.small, 600);
+  const widest = Math.max(...labels.map((label) => textWidth(label, LETTERING.small)));
+  const room = width - name;
+  const across = ACROSS.find((count) => count * (widest + SPACE) <= room + SPACE) ?? 1;
+  const pitch = Math.min(room / across, widest + 2 * SPACE);
+  return Array.from({ length: Math.ceil(labels.length / across) }, (_, l): PanelRow => {
+    const line = labels.slice(l * across, (l + 1) * across);
+    return {
+      height: LINE_PITCH,
+      draw: ([x, y], _width, frame) => {
+        const at = y + 0.65 + LETTERING.small;
+        return [
+          panelText([x + name - NUMBER_SPACE, at], numbered(l * across), frame, {
+            weight: 600,
+            anchor: 'end',
+          }),
+          ...line.map((label, n) =>
+            panelText([x + name + n * pitch + widest, at], label, frame, { anchor: 'end' }),
+          ),
+        ];
+      },
+    };
+  });
 }

@@ -1,4 +1,5 @@
-import { courseRows, ticksEvery } from './course-rows';
+import { coursesAlike } from './course-groups';
+import { courseRows, isCompact } from './course-rows';
 import type { FiguredContent } from './figured-sheet';
 import { figuredAndTabled } from './figured-sheet';
 import { formatCount } from '@/paving/count';
@@ -30,7 +31,11 @@ export function coursesDrafts(input: SetOutInput, paper: PaperName): readonly Sh
     }),
   };
   const { display, units } = laying.document;
-  const words = { display, units, every: ticksEvery(laying.laid.count) };
+  const compact = isCompact(laying.laid.count);
+  const words = { display, units, compact };
+  const groups = compact
+    ? coursesAlike(setOut.courses, display)
+    : setOut.courses.map((course) => [course]);
   const table: TableContent = {
     kind: 'courses',
     type: 'Courses: running lengths',
@@ -38,7 +43,7 @@ export function coursesDrafts(input: SetOutInput, paper: PaperName): readonly Sh
     sections: (width) => [
       {
         header: null,
-        rows: setOut.courses.flatMap((course) => courseRows(course, words, width)),
+        rows: groups.flatMap((group) => courseRows(group, words, width)),
       },
     ],
   };
@@ -49,7 +54,7 @@ function coursesPanel(input: SetOutInput, scale: number, width: number): readonl
   const { laying, setOut } = input;
   const { display } = laying.document;
   const { firstUnit: first, courses } = setOut;
-  const every = ticksEvery(laying.laid.count);
+  const compact = isCompact(laying.laid.count);
   const turn = first ? Math.round(Math.abs(first.turnDeg) * 100) / 100 : 0;
   const way = first && first.turnDeg > 0 ? 'anticlockwise' : 'clockwise';
   return [
@@ -78,13 +83,21 @@ function coursesPanel(input: SetOutInput, scale: number, width: number): readonl
       width,
     ),
     itemRow(
-      'Hold the tape’s end at the string’s start. Each unit has two running lengths: its near and its far edge.',
+      compact
+        ? 'Hold the tape’s end at the string’s start. The list has the running length of every unit’s near edge; where units differ in size, of both edges.'
+        : 'Hold the tape’s end at the string’s start. Each unit has two running lengths: its near and its far edge.',
       width,
     ),
+    ...(compact
+      ? [
+          itemRow(
+            'Courses that are alike share one list: mark a lath or the tape once, and use it for each of them.',
+            width,
+          ),
+        ]
+      : []),
     itemRow(
-      every === 1
-        ? 'Tick each unit as it goes down. Lengths run from one zero, so that errors do not add up.'
-        : `The floor has many units: of each run the first, every ${every}th and the last have their lengths, numbered from the run’s start. The course’s head says how far on each unit in between begins from the one before. All lengths run from one zero: check every ${every}th, so that errors do not add up.`,
+      `${compact ? 'Tick each course once it lies.' : 'Tick each unit as it goes down.'} Lengths run from one zero, so that errors do not add up.`,
       width,
     ),
     scaleBarRow(scale, display, width),

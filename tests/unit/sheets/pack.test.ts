@@ -6,6 +6,7 @@ import type { LayoutDocument } from '@/paving/layout-document';
 import { parseLayoutDocument } from '@/paving/layout-validation';
 import { setOut } from '@/paving/set-out/set-out';
 import { COURT_CHEQUER, ROUND_TERRACE, SIDE_YARD } from '@/server/demo-layouts';
+import { numbersWords } from '@/sheets/course-groups';
 import { courseSteps } from '@/sheets/course-rows';
 import { drawingCommands, PENS } from '@/sheets/drawing';
 import { packInput, packSheets } from '@/sheets/pack';
@@ -63,6 +64,13 @@ const NAMED: LayoutDocument = {
 
 /** About 20 m by 20 m: 19 900 blocks. */
 const PLAZA = floor(rectangle(0, 0, 20_060, 20_060), {
+  units: [{ id: 'a', name: 'Block 200 × 100', length: 200, width: 100, thickness: 60 }],
+  bond: { kind: 'running', unit: 'a', joint: 0, shift: 0.5 },
+  placement: { origin: [130, 80], turn: 0 },
+});
+
+/** Long and narrow, so that its plan is in parts: 1 600 blocks. */
+const LANE = floor(rectangle(0, 0, 32_060, 1_060), {
   units: [{ id: 'a', name: 'Block 200 × 100', length: 200, width: 100, thickness: 60 }],
   bond: { kind: 'running', unit: 'a', joint: 0, shift: 0.5 },
   placement: { origin: [130, 80], turn: 0 },
@@ -148,12 +156,19 @@ describe('the set-out pack', () => {
   });
 
   it('says “Not for set-out” on every sheet of a version that is not issued, and on none that is', () => {
-    for (const state of ['saved', 'shared', 'accepted', 'change_asked'] as const)
-      for (const document of [COURT, STAR, PLAZA])
-        for (const sheet of pack(document, { state, stamp: { ...stamp, issuedAt: null } })) {
-          expect(words(sheet), sheet.type).toContain('Not for set-out');
-          expect(words(sheet), sheet.type).not.toContain('Issued for set-out');
-        }
+    const unissued = { ...stamp, issuedAt: null };
+    const states = ['saved', 'shared', 'accepted', 'change_asked'] as const;
+    // Every state on one floor; every kind of sheet, parts and compact lists among them, in one state.
+    const lane = pack(LANE, { state: 'saved', stamp: unissued });
+    expect(lane.some(({ type }) => type.includes(', part '))).toBe(true);
+    for (const sheet of [
+      ...states.flatMap((state) => pack(COURT, { state, stamp: unissued })),
+      ...pack(levelled(STAR), { state: 'saved', stamp: unissued }),
+      ...lane,
+    ]) {
+      expect(words(sheet), sheet.type).toContain('Not for set-out');
+      expect(words(sheet), sheet.type).not.toContain('Issued for set-out');
+    }
     for (const sheet of [...pack(COURT), ...pack(STAR)]) {
       expect(words(sheet), sheet.type).toContain('Issued for set-out');
       expect(words(sheet), sheet.type).not.toContain('Not for set-out');
@@ -196,33 +211,80 @@ describe('the set-out pack', () => {
     expect(boxes).toHaveLength(planInput(COURT).laying.laid.count);
   });
 
-  it('gives a crew the step from unit to unit where not every running length is printed', () => {
-    // 2 000 blocks 200 mm long without a joint: each begins 200 mm on from the one before.
+  /** A course's list read back: what it says of the course, and the near edges by the unit's number. */
+  const courseLists = (document: LayoutDocument) =>
+    pack(document)
+      .filter(({ type }) => type === 'Courses: running lengths')
+      .flatMap(words)
+      .join(' | ')
+      .replace(/(?<=\d)[\u202f\u2009](?=\d)/g, '')
+      .split(/(?=Courses? \d)/)
+      .filter((text) => / units?; strings? | units? \(/.test(text));
+
+  it('prints every running length of a large floor, courses that are alike together', () => {
+    // 2 000 blocks 200 mm long without a joint, in 50 courses, every second one half a block on: two ways to mark a string.
     const blocks = floor(rectangle(0, 0, 8_060, 5_030), {
       units: [{ id: 'a', name: 'Block 200 × 100', length: 200, width: 100, thickness: 60 }],
       bond: { kind: 'running', unit: 'a', joint: 0, shift: 0.5 },
-      placement: { origin: [30, 20], turn: 0 },
+      placement: { origin: [130, 70], turn: 0 },
     });
     const { courses } = setOut(planInput(blocks).laying);
-    const said = pack(blocks)
-      .filter(({ type }) => type === 'Courses: running lengths')
-      .flatMap(words)
-      .join(' ')
-      .split(/(?=Course \d+ )/)
-      .filter((text) => text.startsWith('Course '));
-    const whole = said.filter((text) => text.includes(' units; string '));
-    expect(whole).toHaveLength(courses.length);
-    for (const text of whole) {
-      const flat = text.replace(/\s/g, '');
-      expect(flat).toContain('thenaunitevery200mm');
-      const first = Number(/firstunit(\d+)mmfromitsstart/.exec(flat)![1]);
-      const ticks = [...text.replace(/[\u00a0\u2009]/g, '').matchAll(/(\d+): (\d+)–(\d+)/g)];
-      expect(ticks.length).toBeGreaterThan(5);
-      for (const [, number, near, far] of ticks) {
-        expect(Number(near)).toBe(first + (Number(number) - 1) * 200);
-        expect(Number(far)).toBe(Number(near) + 200);
-      }
+    expect(courses).toHaveLength(50);
+    const lists = courseLists(blocks);
+    expect(lists).toHaveLength(2);
+    lists.forEach((text, n) => {
+      expect(text).toContain(`Courses ${n + 1} to ${49 + n} every second`);
+      const first = n === 0 ? courses[0].startGap : courses[1].startGap;
+      const all = [
+        ...text
+          .split(' laid |')
+          .at(-1)!
+          .matchAll(/(?<![\d:])(\d+)(?= \||$)/g),
+      ];
+      // After the list comes the title strip of its sheet.
+      expect(all.slice(0, courses[n].units).map(([, mm]) => Number(mm))).toEqual(
+        Array.from({ length: courses[n].units }, (_, unit) => Math.round(first + 200 * unit)),
+      );
+      const boxes = [...text.matchAll(/(\d+) laid/g)].map(([, number]) => Number(number));
+      expect(boxes).toEqual(Array.from({ length: 25 }, (_, m) => n + 1 + 2 * m));
+    });
+  });
+
+  it('has the length of every unit of a large floor whose courses all differ', () => {
+    const round = floor(
+      [
+        [3600, 0, Math.SQRT2 - 1],
+        [0, 3600, Math.SQRT2 - 1],
+        [-3600, 0, Math.SQRT2 - 1],
+        [0, -3600, Math.SQRT2 - 1],
+      ],
+      {
+        units: [{ id: 'a', name: 'Block 200 × 100', length: 200, width: 100, thickness: 60 }],
+        bond: { kind: 'running', unit: 'a', joint: 0, shift: 0.31 },
+        placement: { origin: [13, 8], turn: 7 },
+      },
+    );
+    const { laying } = planInput(round);
+    expect(laying.laid.count).toBeGreaterThan(1500);
+    const { courses } = setOut(laying);
+    const lists = new Map(
+      courseLists(round).map((text) => [Number(/^Courses? (\d+)/.exec(text)![1]), text]),
+    );
+    expect(lists.size).toBe(courses.length);
+    for (const { number, runs } of courses) {
+      const [, list] = lists.get(number)!.split(' laid |');
+      const said = [...list.matchAll(/(?<![\d:])(\d+)(?= \||$)/g)].map(([, mm]) => Number(mm));
+      for (const [near] of runs.flatMap(({ ticks }) => ticks))
+        expect(said).toContain(Math.round(near));
     }
+  });
+
+  it('says which courses are alike in few words', () => {
+    expect(numbersWords([1])).toBe('1');
+    expect(numbersWords([1, 2])).toBe('1, 2');
+    expect(numbersWords([4, 5, 6, 9])).toBe('4 to 6, 9');
+    expect(numbersWords([1, 3, 5, 7, 8, 9])).toBe('1 to 7 every second, 8, 9');
+    expect(numbersWords([2, 6, 10])).toBe('2 to 10 every 4th');
   });
 
   it('names steps only where they repeat: units of two lengths in turn, and not at random', () => {
