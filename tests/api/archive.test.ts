@@ -256,6 +256,24 @@ test('an archive is read file by file, from a file too: never more at once than 
   }
 });
 
+test('an archive made before there was a table is read in without it', async () => {
+  const office = await newOffice();
+  const files = { ...unzipSync(await archiveOf(office.owner.actor.firmId)) };
+  delete files['choices.json'];
+  delete files['choice-versions.json'];
+  const about = JSON.parse(strFromU8(files['archive.json']));
+  delete about.counts.choices;
+  delete about.counts['choice-versions'];
+  files['archive.json'] = strToU8(JSON.stringify(about));
+  const other = await openEmpty();
+  try {
+    const imported = await importFirm(other.db, bytesInMemory(zipSync(files)));
+    expect(imported).toMatchObject({ ok: true, value: { counts: { choices: 0, layouts: 1 } } });
+  } finally {
+    await other.close();
+  }
+});
+
 test('an owner gets the archive by the endpoint, as a file, and that is written down', async () => {
   const office = await newOffice();
   const response = await serve(office.owner.visitor.request('GET', '/api/firm/export'));

@@ -143,6 +143,10 @@ const photosIn = async (archive: Archive): Promise<string[]> => {
   return hashes;
 };
 
+/** Whether an archive was made before there was a table: then it has no rows of it, and does not count them either. */
+const isOlder = ({ files }: Archive, { name }: ArchivedTable, counts: Row): boolean =>
+  !(name in counts) && !files.has(`${name}.json`);
+
 /** What the archive says that it is; that nothing of it is missing is looked up in its list of files. */
 const aboutOf = async (archive: Archive): Promise<{ firmId: string; counts: Row }> => {
   const about = await json(archive, 'archive.json');
@@ -152,6 +156,7 @@ const aboutOf = async (archive: Archive): Promise<{ firmId: string; counts: Row 
   const counts = isRow(about.counts) ? about.counts : {};
   for (const archived of ARCHIVED_TABLES) {
     const names = filesOf(archive, archived);
+    if (isOlder(archive, archived, counts)) continue;
     if (archived.fileBy === undefined && !archive.files.has(names[0])) {
       throw new NotAnArchive(`${names[0]} is missing`);
     }
@@ -184,6 +189,7 @@ export const importFirm = async (
       const found: Record<string, number> = {};
       for (const archived of ARCHIVED_TABLES) {
         found[archived.name] = 0;
+        if (isOlder(archive, archived, about.counts)) continue;
         for await (const rows of rowsIn(archive, archived)) {
           found[archived.name] += rows.length;
           await putIn(tx, archived, rows);
