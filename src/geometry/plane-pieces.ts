@@ -77,6 +77,9 @@ const depth = ({ sides }: PlanePiece, point: Point): number =>
 
 /** The piece that `point` lies in; on a border any of those that meet there. */
 function pieceAt(surface: PieceSurface, point: Point): PlanePiece {
+  // Nearly every point lies well inside one piece; most others are ruled out by their first side.
+  const around = surface.find(({ sides }) => sides.every((side) => planeHeight(side, point) > 0));
+  if (around) return around;
   let best = surface[0];
   let deepest = -Infinity;
   for (const piece of surface) {

@@ -14,6 +14,7 @@ import {
   planeTurned,
   type Plane,
 } from '@/geometry/plane-pieces';
+import { regionBins, type RegionBins } from '@/geometry/region-bins';
 import { bondPattern, documentUnit } from '@/paving/bond';
 import { documentBuildUp } from '@/paving/build-up';
 import { finishSurface } from '@/paving/finish-level';
@@ -43,6 +44,9 @@ export interface EarthModel {
   readonly floor: SignedRings;
   /** The same with the overdig. */
   readonly dug: SignedRings;
+  /** The chords of `floor` and of `dug`, sorted by place. */
+  readonly floorBins: RegionBins;
+  readonly dugBins: RegionBins;
   /** The overdig could not be worked out, and `dug` is without it. */
   readonly overdigLeftOut: boolean;
   readonly cells: readonly EarthCell[];
@@ -74,6 +78,8 @@ export function earthModel(
   const box = pointsBox(dug.flat());
   const below = buildUpDepth(document);
   const finish = finishSurface(document);
+  const floorBins = regionBins(floor);
+  const dugBins = dug === floor ? floorBins : regionBins(dug);
   const cells: EarthCell[] = [];
   existing.surface.forEach((piece, n) => {
     if (!convexPiece(box, piece.sides)) return;
@@ -90,7 +96,16 @@ export function earthModel(
       });
     }
   });
-  return { ground, existing, floor, dug, overdigLeftOut: joined === null, cells };
+  return {
+    ground,
+    existing,
+    floor,
+    dug,
+    floorBins,
+    dugBins,
+    overdigLeftOut: joined === null,
+    cells,
+  };
 }
 
 /** What one cell holds of a region: areas in mm² and volumes in mm³, cut and fill apart, none negative. */
@@ -105,10 +120,16 @@ export interface CellEarth {
  * Cut and fill of a cell within the region, exactly: the cell is parted along the straight line where
  * ground and formation meet, and each part is clipped to the region and summed by prisms.
  */
-export function cellEarth({ piece, depth }: EarthCell, region: SignedRings): CellEarth {
+export function cellEarth(
+  { piece, depth }: EarthCell,
+  region: SignedRings,
+  bins?: RegionBins,
+): CellEarth {
   const part = (side: Plane) => {
     const within = convexPieceIn(piece, side);
-    return within ? regionIntegral(convexPart(region, within), depth) : { area: 0, volume: 0 };
+    return within
+      ? regionIntegral(convexPart(region, within, bins), depth)
+      : { area: 0, volume: 0 };
   };
   const low = piece.outline.reduce(
     (least, point) => Math.min(least, planeHeight(depth, point)),

@@ -70,13 +70,13 @@ function regionHolds(region: SignedRings, point: Point): boolean {
 }
 
 /** The greatest of `sign` times the depth in the dug region, mm; 0 where there is none. */
-function deepest({ cells, dug }: EarthModel, sign: 1 | -1): number {
+function deepest({ cells, dug, dugBins }: EarthModel, sign: 1 | -1): number {
   let most = 0;
   for (const { piece, depth } of cells) {
     const deeper = (point: Point) => sign * planeHeight(depth, point);
     if (piece.outline.every((point) => deeper(point) <= most)) continue;
     // A part may run back along the cell's side outside the region: only what is in it counts.
-    const found = convexPart(dug, piece)
+    const found = convexPart(dug, piece, dugBins)
       .flat()
       .filter((point) => deeper(point) > most)
       .sort((p, q) => deeper(q) - deeper(p))
@@ -114,7 +114,7 @@ export function earthVolumes(
   const dugArea = regionIntegral(model.dug, levelPlane(0)).area;
   const sum = { cut: 0, fill: 0, cutArea: 0, fillArea: 0, beyond: 0 };
   for (const cell of model.cells) {
-    const earth = cellEarth(cell, model.dug);
+    const earth = cellEarth(cell, model.dug, model.dugBins);
     sum.cut += earth.cut;
     sum.fill += earth.fill;
     sum.cutArea += earth.cutArea;

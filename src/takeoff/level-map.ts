@@ -1,5 +1,5 @@
 import { convexPieceIn, pointsBox } from '@/geometry/convex-part';
-import { planeTurned, surfaceHeight } from '@/geometry/plane-pieces';
+import { planeHeight, planeTurned, type HalfPlane } from '@/geometry/plane-pieces';
 import type { Point } from '@/geometry/point';
 import {
   contourInPiece,
@@ -7,7 +7,6 @@ import {
   segmentParts,
   type Segment,
 } from '@/geometry/region-segments';
-import { ringHolds } from '@/geometry/ring';
 import { MM_PER_INCH, type Display } from '@/paving/length';
 import type { EarthModel } from './earth-cells';
 
@@ -65,7 +64,7 @@ function joined(segments: readonly Segment[]): Segment[] {
  * The hatching of what is dug (`sign` 1), in lines at 45° up, or filled (−1), at 45° down, `apart` mm from one
  * to the next. Each piece is hatched by the lines that cross it; what follows on along a line is one stretch.
  */
-function hatching({ cells, dug }: EarthModel, apart: number, sign: 1 | -1): Segment[] {
+function hatching({ cells, dug, dugBins }: EarthModel, apart: number, sign: 1 | -1): Segment[] {
   const step = apart * Math.SQRT2;
   const lines = new Map<number, Segment[]>();
   for (const { piece, depth } of cells) {
@@ -85,7 +84,7 @@ function hatching({ cells, dug }: EarthModel, apart: number, sign: 1 | -1): Segm
     }
   }
   return [...lines.values()].flatMap((line) =>
-    joined(line).flatMap((stretch) => segmentParts(dug, stretch)),
+    joined(line).flatMap((stretch) => segmentParts(dug, stretch, dugBins)),
   );
 }
 
@@ -103,14 +102,24 @@ function rimSegments({ existing: { spots, rim, shape } }: EarthModel): Segment[]
   }));
 }
 
+/** A corner this near to a cell's border, mm, is in it. */
+const BORDER_MM = 1e-3;
+
+const sideDistance = (side: HalfPlane, point: Point): number =>
+  planeHeight(side, point) / Math.hypot(side.a, side.b);
+
 /** The level map of a floor's earth. */
 export function levelMap(model: EarthModel, display: Display): LevelMap {
-  const { cells, dug, existing, ground } = model;
+  const { cells, dug, floorBins, dugBins, existing } = model;
   const points = dug.flat();
   const { min, max } = pointsBox(points);
-  const heights = points.map((point) => surfaceHeight(existing.surface, point));
-  const { outline } = ground.rings[0];
-  const inside = existing.spots.filter(({ at }) => ringHolds(outline, at));
+  const heights = cells.flatMap(({ piece, existing: plane }) =>
+    dugBins
+      .cornersIn(pointsBox(piece.outline))
+      .filter((point) => piece.sides.every((side) => sideDistance(side, point) >= -BORDER_MM))
+      .map((point) => planeHeight(plane, point)),
+  );
+  const inside = existing.spots.filter(({ at }) => floorBins.holds(0, at));
   const [low, high] = span([...heights, ...inside.map(({ level }) => level)]);
   const interval = contourInterval(high - low, display);
   // Between spots outside, the ground may be higher or lower at the edge than at any corner.
@@ -122,13 +131,13 @@ export function levelMap(model: EarthModel, display: Display): LevelMap {
     const level = n * interval;
     const segments = cells.flatMap(({ piece, existing: plane }) => {
       const across = contourInPiece(piece, plane, level);
-      return across ? segmentParts(dug, across) : [];
+      return across ? segmentParts(dug, across, dugBins) : [];
     });
     if (segments.length > 0) contours.push({ level, segments });
   }
   const meeting = cells.flatMap(({ piece, depth }) => {
     const across = contourInPiece(piece, depth, 0);
-    return across ? segmentParts(dug, across) : [];
+    return across ? segmentParts(dug, across, dugBins) : [];
   });
   const apart = Math.hypot(max[0] - min[0], max[1] - min[1]) * HATCH_SHARE;
   return {
@@ -137,6 +146,6 @@ export function levelMap(model: EarthModel, display: Display): LevelMap {
     meeting,
     cut: hatching(model, apart, 1),
     fill: hatching(model, apart * FILL_CLOSER, -1),
-    rim: rimSegments(model).flatMap((segment) => segmentParts(dug, segment)),
+    rim: rimSegments(model).flatMap((segment) => segmentParts(dug, segment, dugBins)),
   };
 }

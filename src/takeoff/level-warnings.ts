@@ -1,5 +1,4 @@
 import type { Point } from '@/geometry/point';
-import { ringHolds } from '@/geometry/ring';
 import { pointSegmentDistance } from '@/geometry/segment-pairs';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { formatLength } from '@/paving/length';
@@ -49,8 +48,7 @@ function spotsBand(spots: readonly Spot[]): { readonly length: number; readonly 
   return { length, width: Math.max(...across) - Math.min(...across) };
 }
 
-function outsideDistance(outline: readonly Point[], at: Point): number {
-  if (ringHolds(outline, at)) return 0;
+function outlineDistance(outline: readonly Point[], at: Point): number {
   return outline.reduce(
     (least, from, n) =>
       Math.min(least, pointSegmentDistance(at, from, outline[(n + 1) % outline.length])),
@@ -61,7 +59,7 @@ function outsideDistance(outline: readonly Point[], at: Point): number {
 /** @param beyondShare share of the dug area that lies beyond the spots */
 export function levelWarnings(
   document: LayoutDocument,
-  { existing, ground, overdigLeftOut }: EarthModel,
+  { existing, ground, floorBins, overdigLeftOut }: EarthModel,
   beyondShare: number,
 ): LevelWarning[] {
   const { spots } = documentLevels(document);
@@ -117,8 +115,12 @@ export function levelWarnings(
       `Some neighbouring spots are ${shown(farthest)} apart. The ground between them is taken as even. Measure between them where it is not.`,
     );
   }
+  const { outline } = ground.rings[0];
   spots.forEach(({ at }, n) => {
-    const out = outsideDistance(ground.rings[0].outline, at);
+    if (floorBins.holds(0, at)) return;
+    // A corner near by says that it is not far outside.
+    if (outline.some(([x, y]) => Math.hypot(x - at[0], y - at[1]) <= FAR_OUTSIDE_MM)) return;
+    const out = outlineDistance(outline, at);
     if (out > FAR_OUTSIDE_MM) {
       warn(
         'spotFarOutside',

@@ -8,6 +8,7 @@ import { groundMiddle } from '@/paving/placement-edits';
 import { spotName } from '@/takeoff/level-warnings';
 import { letterPlaces } from './corner-letters';
 import { earthOf } from './earth';
+import { figureRoom, type Box } from './figure-room';
 import type { Floor } from './floor';
 import { boxedText, dot, FONT, path, screen, segment, type Ink } from './overlay-ink';
 import { ringOutline } from './ring-outline';
@@ -17,6 +18,8 @@ import type { TableState } from './table-store';
 const VEIL = 0.86;
 /** A contour's figure needs so much of it in sight, px. */
 const FIGURED_FROM_PX = 30;
+/** A mark's figure stands no farther from it, px. */
+const FIGURE_REACH_PX = 60;
 /** Of an arrow that shows a fall, px. */
 const ARROW_PX = 56;
 
@@ -132,10 +135,14 @@ export function paintLevelMarks(ink: Ink, state: TableState, floor: Floor) {
     const stroke = picked ? colours.line : colours.graphite;
     dot(ctx, screen(ink, at), picked ? 6.5 : 4.5, colours.stone50, stroke);
   });
-  const taken: Box[] = [
-    ...letterPlaces(ink).map((at): Box => ({ at, half: [9, 9] })),
-    ...spots.map(({ at }): Box => ({ at: screen(ink, at), half: [4, 4] })),
-  ];
+  const room = figureRoom();
+  const inSight = ([x, y]: Point) =>
+    x >= -FIGURE_REACH_PX &&
+    y >= -FIGURE_REACH_PX &&
+    x <= ink.size.width + FIGURE_REACH_PX &&
+    y <= ink.size.height + FIGURE_REACH_PX;
+  for (const at of letterPlaces(ink)) room.take({ at, half: [9, 9] });
+  for (const { at } of spots) room.take({ at: screen(ink, at), half: [4, 4] });
   const figure = (text: string, places: readonly Point[], style: FigureStyle) => {
     ctx.font = `${style.weight} 12.5px ${FONT}`;
     const half: Point = [ctx.measureText(text).width / 2 + 5, 9];
@@ -144,11 +151,9 @@ export function paintLevelMarks(ink: Ink, state: TableState, floor: Floor) {
       x <= ink.size.width - half[0] &&
       y >= half[1] &&
       y <= ink.size.height - half[1];
-    const at = places.find(
-      (place) => inWindow(place) && !taken.some((box) => overlaps(box, { at: place, half })),
-    );
+    const at = places.find((place) => inWindow(place) && room.free({ at: place, half }));
     if (!at && !style.always) return;
-    taken.push({ at: at ?? places[0], half });
+    room.take({ at: at ?? places[0], half });
     boxedText(ink, text, at ?? places[0], 0, style.colour, style.weight);
   };
   const spotFigure = (n: number) =>
@@ -157,7 +162,7 @@ export function paintLevelMarks(ink: Ink, state: TableState, floor: Floor) {
     const style = { colour: colours.line, weight: 600, always: true };
     figure(spotFigure(state.spot), around(screen(ink, spots[state.spot].at)), style);
   }
-  taken.push(...paintFall(ink, fall));
+  paintFall(ink, fall).forEach(room.take);
   for (const { at, kind, name, finish } of earth?.pegs ?? []) {
     const text =
       kind === 'corner' ? levelFigure(finish, display) : `${name} ${levelFigure(finish, display)}`;
@@ -165,8 +170,9 @@ export function paintLevelMarks(ink: Ink, state: TableState, floor: Floor) {
     figure(text, places, { colour: colours.graphite, weight: 700 });
   }
   spots.forEach(({ at }, n) => {
-    if (n !== state.spot)
-      figure(spotFigure(n), around(screen(ink, at)), { colour: colours.slate, weight: 400 });
+    const here = screen(ink, at);
+    if (n !== state.spot && inSight(here))
+      figure(spotFigure(n), around(here), { colour: colours.slate, weight: 400 });
   });
   for (const { level, segments } of earth?.map.contours ?? []) {
     const longest = segments
@@ -189,16 +195,6 @@ interface FigureStyle {
   /** Shown even where there is no room. */
   readonly always?: boolean;
 }
-
-interface Box {
-  readonly at: Point;
-  readonly half: Point;
-}
-
-const overlaps = (one: Box, other: Box): boolean =>
-  [0, 1].every(
-    (axis) => Math.abs(one.at[axis] - other.at[axis]) < one.half[axis] + other.half[axis],
-  );
 
 /** Places for a figure beside a mark, the best first. */
 const around = ([x, y]: Point): Point[] => [
