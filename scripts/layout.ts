@@ -4,6 +4,7 @@ import { creep, measureProblem } from '@/paving/creep/creep';
 import type { JointLimits, UnitMeasure } from '@/paving/creep/creep-types';
 import { refit } from '@/paving/creep/refit';
 import { fit, fitRefusal, type EdgeAddress, type FitHold, type FitOptions } from '@/paving/fit/fit';
+import { fitJoints, type JointRange } from '@/paving/fit/joint-range';
 import { rangeTurns } from '@/paving/fit/turn-sweep';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { layFloor } from '@/paving/laying';
@@ -13,6 +14,7 @@ import { floorReport } from '@/paving/report';
 import { takeOff } from '@/takeoff/take-off';
 import { setOut } from '@/paving/set-out/set-out';
 import { setOutWritten } from '@/paving/set-out/set-out-written';
+import { surveyPrinted } from '@/paving/survey/survey-printed';
 
 /**
  * The `layout` command: works out a layout document from a file, or from standard input when the
@@ -41,8 +43,9 @@ function edgeAddress(text: string): EdgeAddress {
 /** Turns that one fit may go through from the command line. */
 const GREATEST_TURNS = 10_000;
 
-function fitOptions(options: readonly string[]): FitOptions {
+function fitOptions(options: readonly string[]): FitOptions & { readonly joint?: JointRange } {
   const hold: FitHold[] = [];
+  let joint: JointRange | undefined;
   let turn: FitOptions['turn'] = 'fixed';
   for (let n = 0; n < options.length; n += 2) {
     const [option, value = ''] = [options[n], options[n + 1]];
@@ -64,11 +67,19 @@ function fitOptions(options: readonly string[]): FitOptions {
         throw new Refusal(`"${value}" is not two edges; write RING:EDGE,RING:EDGE`);
       }
       hold.push({ between: [edges[0], edges[1]] });
+    } else if (option === '--joint') {
+      const [from, to, step, ...rest] = value.split(':').map(number);
+      if (rest.length > 0 || ![from, to, step].every(Number.isFinite)) {
+        throw new Refusal(
+          `"${value}" is not a range of joints; write FROM:TO:STEP in mm, such as 2:5:0.25`,
+        );
+      }
+      joint = { from, to, step };
     } else {
       throw new Refusal(`fit takes no option "${option}"`);
     }
   }
-  return { turn, hold };
+  return { turn, hold, joint };
 }
 
 /** `--measure UNIT:SIDE:COUNT:TOTAL`, such as `slab:length:10:4509`; any number of them. */
@@ -161,12 +172,16 @@ const tasks: Readonly<Record<string, Task>> = {
     },
   },
   fit: {
-    usage: 'fit FILE|- [--turn FROM:TO:STEP] [--hold RING:EDGE] [--between RING:EDGE,RING:EDGE]',
+    usage:
+      'fit FILE|- [--turn FROM:TO:STEP] [--hold RING:EDGE] [--between RING:EDGE,RING:EDGE] [--joint FROM:TO:STEP]',
     run: (document, options) => {
-      const asked = fitOptions(options);
+      const { joint, ...asked } = fitOptions(options);
       const refusal = fitRefusal(document, asked);
       if (refusal) throw new Refusal(refusal.message);
-      return fit(document, asked);
+      if (!joint) return fit(document, asked);
+      const sought = fitJoints(document, joint, asked.hold);
+      if (!sought.ok) throw new Refusal(sought.message);
+      return { ...fit(document, asked), joints: sought.joints };
     },
   },
   'set-out': {
@@ -174,6 +189,14 @@ const tasks: Readonly<Record<string, Task>> = {
     run: (document, options) => {
       if (options.length > 0) throw new Refusal(`set-out takes no option "${options[0]}"`);
       return setOutWritten(setOut(layFloor(document)), document.display);
+    },
+  },
+  survey: {
+    usage: 'survey FILE|-',
+    run: (document, options) => {
+      if (options.length > 0) throw new Refusal(`survey takes no option "${options[0]}"`);
+      if (!document.survey) throw new Refusal('the document has no tape survey');
+      return surveyPrinted(document.survey, document.display);
     },
   },
   creep: {

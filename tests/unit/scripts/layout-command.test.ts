@@ -5,6 +5,8 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { afterAll, expect, test } from 'vitest';
 import type { Creep, Refit } from '@/paving/creep/creep-types';
+import { fit } from '@/paving/fit/fit';
+import { fitJoints } from '@/paving/fit/joint-range';
 import { layFloor } from '@/paving/laying';
 import { floorReport } from '@/paving/report';
 import { setOut } from '@/paving/set-out/set-out';
@@ -52,12 +54,83 @@ test('levels prints volumes, pegs, screed board and advice as JSON, and takes no
   expect(layout(['levels', '-', '--loud'], good)).toMatchObject({ status: 2, stdout: '' });
 });
 
+test('survey prints points and tapes by name, and refuses a layout without one', () => {
+  const lengths = [4000, 3000, 4000, 3000, 5000, 5000];
+  const pairs = [
+    [0, 1],
+    [1, 2],
+    [2, 3],
+    [3, 0],
+    [0, 2],
+    [1, 3],
+  ];
+  const survey = {
+    rings: [{ corners: 4 }],
+    sketch: [
+      [0, 0],
+      [1, 0],
+      [1, 1],
+      [0, 1],
+    ],
+    tapes: pairs.map(([from, to], n) => ({ from, to, length: lengths[n] })),
+  };
+  const { status, stdout, stderr } = layout(
+    ['survey', '-'],
+    JSON.stringify({ ...documentOf({}), survey }),
+  );
+  expect({ status, stderr }).toEqual({ status: 0, stderr: '' });
+  // 3, 4 and 5 make a right angle (FAO Training manual 2, ch. 4.1), so both diagonals agree.
+  const printed = JSON.parse(stdout);
+  expect(printed).toMatchObject({ state: 'agrees', spare: 1, doubts: [], telling: null });
+  expect(printed.tapes[4]).toMatchObject({ tape: 'A – C', read: 5000 });
+  expect(Math.abs(printed.tapes[4].off)).toBeLessThan(1e-6);
+  const none = layout(['survey', '-'], good);
+  expect(none).toMatchObject({ status: 2, stdout: '' });
+  expect(none.stderr).toContain('no tape survey');
+});
+
 test('take-off prints the take-off as JSON, without prices', () => {
   const { status, stdout, stderr } = layout(['take-off', '-'], good);
   expect({ status, stderr }).toEqual({ status: 0, stderr: '' });
   const laying = layFloor(parsed(documentOf({})));
   expect(JSON.parse(stdout)).toEqual(JSON.parse(JSON.stringify(takeOff(laying, report, null))));
   expect(layout(['take-off', '-', '--loud'], good)).toMatchObject({ status: 2, stdout: '' });
+});
+
+test('fit prints the fit as JSON, at a turn, over a range of turns, as held, and with joints', () => {
+  const document = parsed(documentOf({}));
+  const printed = (...options: string[]): unknown => {
+    const { status, stdout, stderr } = layout(['fit', '-', ...options], good);
+    expect({ status, stderr }).toEqual({ status: 0, stderr: '' });
+    return JSON.parse(stdout);
+  };
+  expect(printed()).toEqual(fit(document));
+  const turn = { from: 0, to: 90, step: 45 };
+  const between = [
+    [0, 1],
+    [0, 3],
+  ] as const;
+  const hold = [{ edge: [0, 0] as const }, { between }];
+  expect(
+    printed('--turn', '0:90:45', '--hold', '0:0', '--between', '0:1,0:3', '--joint', '2:4:1'),
+  ).toEqual({
+    ...fit(document, { turn, hold }),
+    joints: (fitJoints(document, { from: 2, to: 4, step: 1 }, hold) as { joints: unknown }).joints,
+  });
+});
+
+test.each([
+  ['a range of turns that ends before it begins', ['--turn', '90:0:1'], 'not a range of turns'],
+  ['an edge that is none', ['--hold', 'AB'], 'is not an edge; write RING:EDGE'],
+  ['one edge to be centred between', ['--between', '0:1'], 'is not two edges'],
+  ['holds that run the same way', ['--hold', '0:0', '--hold', '0:2'], 'parallel'],
+  ['joints without a step', ['--joint', '2:5'], 'is not a range of joints'],
+  ['joints that run backwards', ['--joint', '5:2:1'], 'narrower to the wider'],
+  ['another option', ['--best', '1'], 'takes no option "--best"'],
+])('fit refuses %s, says why and exits with 2', (_, options, words) => {
+  const { status, stdout, stderr } = layout(['fit', '-', ...options], good);
+  expect({ status, stdout }).toEqual({ status: 2, stdout: '' });
+  expect(stderr).toContain(words);
 });
 
 test('a document that is not valid prints each error with its path and exits with 2', () => {
