@@ -5,6 +5,9 @@ import react from '@astrojs/react';
 import tailwindcss from '@tailwindcss/vite';
 import { siteProgram } from './pwa.config';
 
+// What Vite calls its own flags. A test runner sets them in the environment, and a build would take them for what it is built for.
+for (const flag of ['DEV', 'PROD', 'MODE', 'SSR', 'BASE_URL']) delete process.env[flag];
+
 export default defineConfig({
   output: 'server',
   adapter: node({ mode: 'standalone' }),

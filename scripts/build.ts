@@ -26,12 +26,6 @@ const buildIsStale = (): boolean =>
   !existsSync(STAMP) ||
   statSync(STAMP).mtimeMs < Math.max(...SOURCES.map((name) => newest(path.join(ROOT, name))));
 
-/** What Vite calls its own flags. A test runner sets them, and a build would take them for what it is built for. */
-const FLAGS = ['DEV', 'PROD', 'MODE', 'SSR', 'BASE_URL'];
-
-const environmentOfBuild = (): NodeJS.ProcessEnv =>
-  Object.fromEntries(Object.entries(process.env).filter(([name]) => !FLAGS.includes(name)));
-
 /** Runs Astro's command line in this project and waits for it; throws when it fails. */
 const runAstro = (...args: string[]): Promise<void> =>
   new Promise((resolve, reject) => {
@@ -39,7 +33,6 @@ const runAstro = (...args: string[]): Promise<void> =>
     const child = spawn(process.execPath, [astro, ...args], {
       cwd: ROOT,
       stdio: 'inherit',
-      env: environmentOfBuild(),
     });
     child.once('error', reject);
     child.once('exit', (code) =>
