@@ -3,7 +3,9 @@ import { levenbergMarquardt } from 'ml-levenberg-marquardt';
 import { describe, expect, test } from 'vitest';
 import type { Point } from '@/geometry/point';
 import { misreading } from '@/paving/survey/misreading';
-import { readTapes, surveyOf, surveyPointName, usualTapes } from '@/paving/survey/survey';
+import { figuredText } from '@/paving/figured-words';
+import { readTapes, surveyOf, surveyPointName, tapeName, usualTapes } from '@/paving/survey/survey';
+import { surveyWords } from '@/paving/survey/survey-words';
 import { MISTAKE, surveyAnswer } from '@/paving/survey/survey-answer';
 import { surveyedGround } from '@/paving/survey/survey-ground';
 import { tapeError, tapesAdjusted } from '@/paving/survey/tape-adjustment';
@@ -318,7 +320,7 @@ describe('shape', () => {
       [3, 0],
       [1, 3],
     ];
-    const { places, others, spare } = surveyAnswer(surveyOfPoints(ring, pairs));
+    const { places, others, spare, telling } = surveyAnswer(surveyOfPoints(ring, pairs));
     expectShape(places, ring, 0.01);
     expect(spare).toBe(0);
     expect(others).toHaveLength(1);
@@ -327,6 +329,8 @@ describe('shape', () => {
         distance(ring[from], ring[to]),
         3,
       );
+    // A to C is the only pair that no tape joins, and it is longer in one shape than in the other.
+    expect(telling).toEqual({ from: 0, to: 2 });
     expect(distance(others[0][0], others[0][2])).toBeLessThan(distance(ring[0], ring[2]) - 1000);
   });
 
@@ -401,6 +405,39 @@ describe('a wrong reading', () => {
     const { doubts, restAgrees } = surveyAnswer(survey);
     expect([...doubts[0].tapes].sort()).toEqual([0, 1, 2, 3, 4, 5]);
     expect(restAgrees).toBe(false);
+  });
+
+  test('among tapes that only check each other is one of these, and a further tape tells which', () => {
+    // The usual tapes of the court: C hangs on B, D and A alone. A – C is read with two digits swapped.
+    const survey = surveyOf(L_COURT);
+    const read = {
+      ...survey,
+      tapes: survey.tapes.map((tape) => {
+        const length = Math.round(distance(L_COURT[tape.from], L_COURT[tape.to]));
+        return { ...tape, length: tape.from === 0 && tape.to === 2 ? 7389 : length };
+      }),
+    };
+    const answer = surveyAnswer(read);
+    const names = answer.doubts[0].tapes.map((tape) => tapeName(read, read.tapes[tape]));
+    expect([...names].sort()).toEqual(['A – C', 'B – C', 'C – D']);
+    const said = surveyWords(read, answer, 'metric').words.map((words) =>
+      figuredText(words, 'metric'),
+    );
+    // √(7200² + 3100²) = 7838.9, worked by hand; read as 7389.
+    expect(said[0]).toContain(
+      'It looks like A – C: it reads 7\u202f389\u202fmm, and 7\u202f839\u202fmm would agree.',
+    );
+    expect(said[0]).toContain('Two digits may have changed places.');
+    const { from, to } = answer.telling!;
+    const told = {
+      ...read,
+      tapes: [...read.tapes, { from, to, length: distance(L_COURT[from], L_COURT[to]) }],
+    };
+    const { doubts, restAgrees } = surveyAnswer(told);
+    expect(
+      doubts.map(({ tapes }) => tapes.map((tape) => tapeName(told, told.tapes[tape]))),
+    ).toEqual([['A – C']]);
+    expect(restAgrees).toBe(true);
   });
 
   test('of the size that reading explains is none', () => {

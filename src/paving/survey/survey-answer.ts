@@ -5,6 +5,7 @@ import { placesAligned, rmsApart } from './places-aligned';
 import { readTapes, ringStarts, surveyPointCount, type ReadTape, type Survey } from './survey';
 import { tapesAdjusted, type TapeAdjustment, type TapeResidual } from './tape-adjustment';
 import { pointsPlaced, type Arrangement } from './tape-placing';
+import { tellingTape } from './telling-tape';
 
 /** Beyond so many of its own standard errors a residual is a mistake, not chance: Baarda's 3.29, one in a thousand. */
 export const MISTAKE = 3.29;
@@ -52,6 +53,8 @@ export interface SurveyAnswer {
   readonly restAgrees: boolean;
   /** Other shapes that the tapes allow as well, every point of each. */
   readonly others: readonly (readonly Point[])[];
+  /** A tape, not read yet, that would tell which of several in doubt is wrong, or which shape is meant. */
+  readonly telling: { readonly from: number; readonly to: number } | null;
 }
 
 /** Tapes left over, with points as they lie; where none was read. */
@@ -67,6 +70,7 @@ function nothingRead(survey: Survey): SurveyAnswer {
     doubts: [],
     restAgrees: true,
     others: [],
+    telling: null,
   };
 }
 
@@ -110,10 +114,12 @@ export function surveyAnswer(survey: Survey): SurveyAnswer {
   const { adjustment } = best;
   const residuals: (TapeResidual | null)[] = survey.tapes.map(() => null);
   for (const residual of adjustment.tapes) residuals[residual.tape] = residual;
-  const { doubts, restAgrees } = tapeDoubts(adjustment, tapes, placing.base);
+  const { doubts, restAgrees, shapes: doubtful } = tapeDoubts(adjustment, tapes, placing.base);
   const known = adjustment.loose.flatMap((is, n) => (is ? [] : [n]));
   const fitted = (places: readonly Point[]) =>
     placesAligned(places, known, (n) => survey.sketch[n]);
+  const others = otherShapes(shapes, known);
+  const open = doubts.length > 0 ? doubtful : [adjustment.places, ...others];
   return {
     places: fitted(adjustment.places).map((place, n) => (adjustment.loose[n] ? null : place)),
     error: adjustment.error,
@@ -123,7 +129,8 @@ export function surveyAnswer(survey: Survey): SurveyAnswer {
     greatest: Math.max(0, ...adjustment.tapes.map(({ residual }) => Math.abs(residual))),
     doubts,
     restAgrees,
-    others: otherShapes(shapes, known).map(fitted),
+    others: others.map(fitted),
+    telling: open.length > 1 ? tellingTape(survey, open) : null,
   };
 }
 
@@ -188,12 +195,15 @@ function tapeDoubts(
   whole: TapeAdjustment,
   tapes: readonly ReadTape[],
   base: readonly [number, number],
-): Pick<SurveyAnswer, 'doubts' | 'restAgrees'> {
+): Pick<SurveyAnswer, 'doubts' | 'restAgrees'> & {
+  /** Where several tapes may be the wrong one, the shape without each. */
+  readonly shapes: readonly (readonly Point[])[];
+} {
   const doubts: TapeDoubt[] = [];
   let now = whole;
   let used = tapes;
   while (!agree(now)) {
-    if (doubts.length === MOST_DOUBTS) return { doubts, restAgrees: false };
+    if (doubts.length === MOST_DOUBTS) return { doubts, restAgrees: false, shapes: [] };
     const without = now.tapes
       .filter(({ standardised }) => Math.abs(standardised) > MISTAKE)
       .sort((one, other) => Math.abs(other.standardised) - Math.abs(one.standardised))
@@ -211,10 +221,13 @@ function tapeDoubts(
         return Math.hypot(places[to][0] - places[from][0], places[to][1] - places[from][1]);
       }),
     });
-    if (culprits.length > 1) return { doubts, restAgrees: false };
+    if (culprits.length > 1) {
+      const shapes = culprits.map(({ adjustment }) => adjustment.places);
+      return { doubts, restAgrees: false, shapes };
+    }
     [{ rest: used, adjustment: now }] = named;
   }
-  return { doubts, restAgrees: true };
+  return { doubts, restAgrees: true, shapes: [] };
 }
 
 /** True when no residual is more than chance explains. */

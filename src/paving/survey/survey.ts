@@ -130,17 +130,6 @@ export const tapeName = (
   { from, to }: Pick<Tape, 'from' | 'to'>,
 ): string => `${surveyPointName(survey, from)} – ${surveyPointName(survey, to)}`;
 
-/** True when the tape lies along a side of one of the rings. */
-export function isSide(survey: Pick<Survey, 'rings'>, { from, to }: Tape): boolean {
-  const starts = ringStarts(survey);
-  return survey.rings.some(({ corners }, ring) => {
-    const a = from - starts[ring];
-    const b = to - starts[ring];
-    if (Math.min(a, b) < 0 || Math.max(a, b) >= corners) return false;
-    return (a + 1) % corners === b || (b + 1) % corners === a;
-  });
-}
-
 /** Corners in a regular ring, anticlockwise from the lower left, as wide as `size` mm or so. */
 export function regularSketch(corners: number, size: number): [number, number][] {
   return Array.from({ length: corners }, (_, n) => {

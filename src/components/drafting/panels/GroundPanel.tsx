@@ -1,4 +1,4 @@
-import { useEffect, useRef } from 'react';
+import { useEffect, useRef, useState } from 'react';
 import { MapPin, Minus, Plus, Trash2 } from 'lucide-react';
 import {
   arcRise,
@@ -23,6 +23,7 @@ import { Segmented } from '../../ui/Segmented';
 import { coordinateRefused, edgeRefused, gapRefused } from '../field-limits';
 import { FloorProblems } from '../FloorFigures';
 import { groundKeptInView } from '../FloorStage';
+import { SurveyDialog } from '../survey/SurveyDialog';
 import {
   cornerAdded,
   cornerRemoved,
@@ -241,6 +242,7 @@ export function GroundPanel() {
   const pick = useTable((state) => state.pick);
   const drawing = useTable((state) => state.drawing);
   const snap = useTable((state) => state.snap);
+  const [taping, setTaping] = useState(false);
   const { document } = floor;
   if (drawing) return <DrawingPanel />;
   const { perimeter, keepOuts } = document.ground;
@@ -259,7 +261,11 @@ export function GroundPanel() {
         <button type="button" className="button" onClick={() => drawKeepOut(table)}>
           Add keep-out
         </button>
+        <button type="button" className="button col-span-2" onClick={() => setTaping(true)}>
+          {document.survey ? 'Go on with the tape survey' : 'Enter a tape survey'}
+        </button>
       </div>
+      <SurveyDialog open={taping} onClose={() => setTaping(false)} />
       {pick?.kind === 'vertex' && <PickedVertex pick={pick} />}
       <section aria-label="Perimeter">
         <div className="flex items-baseline justify-between border-b border-graphite pb-1">
