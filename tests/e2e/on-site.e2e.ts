@@ -7,27 +7,13 @@ import { layFloor } from '@/paving/laying';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { formatLength } from '@/paving/length';
 import { setOut } from '@/paving/set-out/set-out';
-import { base, complaintsOf, launch, openPage, signIn } from './browser';
+import { ask, base, complaintsOf, launch, openPage, signIn } from './browser';
 
 let browser: Browser;
 beforeAll(async () => {
   browser = await launch();
 });
 afterAll(() => browser.close());
-
-/** Asks the server as the page's own scripts do. */
-const ask = <T>(page: Page, method: string, path: string, body?: unknown): Promise<T> =>
-  page.evaluate(
-    async ([how, where, what]) => {
-      const answer = await fetch(where, {
-        method: how,
-        headers: what ? { 'content-type': 'application/json' } : {},
-        body: what ?? undefined,
-      });
-      return { status: answer.status, ...(await answer.json()) };
-    },
-    [method, path, body === undefined ? null : JSON.stringify(body)] as const,
-  ) as Promise<T>;
 
 interface Id {
   readonly id: string;
