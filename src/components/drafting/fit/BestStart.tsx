@@ -96,7 +96,10 @@ export function BestStart({ fit }: { fit: FitService }) {
           hold.length === 0 &&
           laid === result.wholeUnits &&
           ' This start lays as many, with less play.'}
-        {hold.length === 0 && laid < result.wholeUnits && ` This start lays ${formatCount(laid)}.`}
+        {hold.length === 0 && laid < result.wholeUnits && ` This start lays ${formatCount(laid)}.`}{' '}
+        <a className="link text-sm text-slate" href="/guide/best-start" target="_blank">
+          How that is proven
+        </a>
       </p>
       {!reached && (
         <button

@@ -4,6 +4,7 @@ import { formatCount } from '@/paving/count';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { formatLength } from '@/paving/length';
 import { floorThumbnailSvg } from '@/sheets/floor-thumbnail';
+import { choicesShown } from './choices-shown';
 
 interface Props {
   readonly choices: readonly FitChoice[];
@@ -12,7 +13,7 @@ interface Props {
   readonly onChoice: (choice: FitChoice) => void;
 }
 
-/** As many as are told apart at a glance. */
+/** As many as are taken in at a glance. */
 const SHOWN = 6;
 
 /** The trade-off between most units and most play, as a short list with small drawings. */
@@ -20,7 +21,7 @@ export function Choices({ choices, document, chosen, onChoice }: Props) {
   const { ground, units, bond, tones, aggregate, clearance, placement } = document;
   const shown = useMemo(
     () =>
-      choices.slice(0, SHOWN).map((choice) => ({
+      choicesShown(choices, SHOWN).map((choice) => ({
         choice,
         picture: floorThumbnailSvg(
           { ...document, placement: choice.placement, lifted: [], cutting: 'none' },

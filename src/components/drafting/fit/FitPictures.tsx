@@ -127,7 +127,7 @@ export function FitPictures({ fit }: { fit: FitService }) {
           </span>
           <button
             type="button"
-            className="link"
+            className="link pointer-coarse:min-h-11"
             onClick={() => (sweeping ? fit.stopSweep() : fit.sweep())}
           >
             {sweeping ? 'Stop' : 'Sweep again'}

@@ -12,6 +12,8 @@ export function HoldFields({ fit: _fit }: { fit: FitService }) {
   const hold = useTable((state) => state.hold);
   const holding = useTable((state) => state.holding);
   const name = (ring: number, edge: number) => documentEdgeName(document, ring, edge);
+  const lit = (ring: number, edge: number) =>
+    table.getState().set({ hover: { kind: 'edge', ring, edge } });
   const edges = Array.from({ length: documentRingCount(document) }, (_, ring) =>
     documentRing(document, ring).flatMap((vertex, edge) =>
       vertexBulge(vertex) === 0 ? [[ring, edge] as const] : [],
@@ -27,7 +29,7 @@ export function HoldFields({ fit: _fit }: { fit: FitService }) {
               <span className="first-letter:uppercase">{holdWords(h, name)}</span>
               <button
                 type="button"
-                className="button button-quiet"
+                className="button button-quiet min-w-11"
                 aria-label={`Let go: ${holdWords(h, name)}`}
                 onClick={() => table.getState().set({ hold: hold.filter((_, m) => m !== n) })}
               >
@@ -37,7 +39,11 @@ export function HoldFields({ fit: _fit }: { fit: FitService }) {
           ))}
         </ul>
       )}
-      {holding ? (
+      {edges.length === 0 ? (
+        <p className="text-sm text-slate">
+          The start is held to straight edges, and this ground has none.
+        </p>
+      ) : holding ? (
         <div className="border-l-2 border-line pl-3">
           {holding.refused && (
             <p role="alert" className="mb-2 text-brick first-letter:uppercase">
@@ -59,6 +65,10 @@ export function HoldFields({ fit: _fit }: { fit: FitService }) {
                   className="button px-2"
                   disabled={holding.first?.[0] === ring && holding.first[1] === edge}
                   onClick={() => holdPointed(table, ring, edge)}
+                  onPointerEnter={() => lit(ring, edge)}
+                  onPointerLeave={() => table.getState().set({ hover: null })}
+                  onFocus={() => lit(ring, edge)}
+                  onBlur={() => table.getState().set({ hover: null })}
                 >
                   {name(ring, edge)}
                 </button>

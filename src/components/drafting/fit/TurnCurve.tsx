@@ -101,7 +101,11 @@ export function TurnCurve({ turns, range, turn, display, onTurn }: Props) {
             ? 'No turn lays a whole unit.'
             : `From ${formatCount(least)} to ${formatCount(most)} whole units.`}{' '}
           {best && most > (here?.wholeUnits ?? most) && (
-            <button type="button" className="link" onClick={() => onTurn(best.turn)}>
+            <button
+              type="button"
+              className="link pointer-coarse:min-h-11"
+              onClick={() => onTurn(best.turn)}
+            >
               Take {degrees(best.turn)}, with {formatCount(most)}
             </button>
           )}

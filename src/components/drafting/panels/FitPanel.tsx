@@ -98,7 +98,7 @@ export function FitPanel({ fit }: { fit: FitService }) {
       <section aria-label="Turn" className="grid grid-cols-[auto_1fr_auto] items-end gap-2">
         <button
           type="button"
-          className="button px-3"
+          className="button min-w-11 px-3"
           aria-label="Turn 1° anticlockwise"
           onClick={() => turnNudged(table, 1)}
         >
@@ -118,7 +118,7 @@ export function FitPanel({ fit }: { fit: FitService }) {
         />
         <button
           type="button"
-          className="button px-3"
+          className="button min-w-11 px-3"
           aria-label="Turn 1° clockwise"
           onClick={() => turnNudged(table, -1)}
         >
