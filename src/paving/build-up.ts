@@ -34,6 +34,17 @@ export type BuildUp = z.infer<typeof buildUpSchema>;
 /** What a document without a build-up is reckoned with: a foot-traffic floor. */
 const PLAIN_BUILD_UP: BuildUp = buildUpSchema.parse({});
 
+/**
+ * What a new layout in feet and inches begins with, in whole inches: 4 in of base, 1 in of bedding (common practice). It is in
+ * the layout's document, so that how lengths are shown decides nothing but that.
+ */
+export const INCH_BUILD_UP: BuildUp = { ...PLAIN_BUILD_UP, bedding: 25.4, base: 101.6 };
+
+/** Whether somebody said what the layers are: a document that says nothing, or what a new one begins with, has them from nobody. */
+export const buildUpSaid = ({ buildUp }: { readonly buildUp?: BuildUp }): boolean =>
+  buildUp !== undefined &&
+  Object.entries(INCH_BUILD_UP).some(([key, usual]) => buildUp[key as keyof BuildUp] !== usual);
+
 /** The build-up of a document, or what stands for one that says nothing. */
 export const documentBuildUp = (document: { readonly buildUp?: BuildUp }): BuildUp =>
   document.buildUp ?? PLAIN_BUILD_UP;

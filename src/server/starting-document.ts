@@ -1,4 +1,5 @@
 import type { Display } from '@/api-types/people';
+import { INCH_BUILD_UP } from '@/paving/build-up';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { MM_PER_INCH } from '@/paving/length';
 
@@ -38,5 +39,6 @@ export const startingDocument = (display: Display): LayoutDocument => {
     lifted: [],
     cutting: 'none',
     aggregate: { name: 'Gravel 10 mm', colour: '#d8d2c4' },
+    ...(metric ? {} : { buildUp: INCH_BUILD_UP }),
   };
 };

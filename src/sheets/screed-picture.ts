@@ -1,13 +1,13 @@
 import { groundRing } from '@/paving/ground';
 import type { LayoutDocument } from '@/paving/layout-document';
-import { screedBoard, type ScreedBoard } from '@/takeoff/screed-board';
+import { screedBoard, type ScreedBoard, type ScreedRun } from '@/takeoff/screed-board';
 import type { DrawCommand, PaperBox, PaperPoint } from './drawing';
 import { PENS, boxHeight, boxInset, boxRing, boxWidth } from './drawing';
 import { figureText } from './figures';
 import { AGGREGATE_COLOUR, INK, PAPER, SECOND_INK, inkMix } from './inks';
 import { hatch } from './layer-section';
 import { panelText } from './panel';
-import { paperFromGround, paperRing, pointsBounds, viewCentred } from './plan-view';
+import { paperFromGround, paperRing, pointsBounds, viewCentred, type PlanView } from './plan-view';
 import { LETTERING, textFitted, textWidth } from './text-measure';
 
 /** Share of the box's width for the small plan. */
@@ -40,11 +40,7 @@ const line = (from: PaperPoint, to: PaperPoint, width: number, dash?: number[]):
 });
 
 /** The outline, its strips, and in each the board and an arrow along the pull. */
-function stripPlan(
-  document: LayoutDocument,
-  { pullDeg, passes }: ScreedBoard,
-  box: PaperBox,
-): DrawCommand[] {
+function stripPlan(document: LayoutDocument, { limbs }: ScreedBoard, box: PaperBox): DrawCommand[] {
   const { edges, outline } = groundRing(document.ground.perimeter, 0, null);
   const bounds = pointsBounds(outline);
   const inner = boxInset(box, 1);
@@ -53,6 +49,23 @@ function stripPlan(
     (bounds.greatest[1] - bounds.least[1]) / boxHeight(inner),
   );
   const view = viewCentred(bounds, scale, inner);
+  return [
+    {
+      kind: 'path',
+      rings: [paperRing(view, edges)],
+      fill: inkMix(PAPER, INK, 0.06),
+      stroke: { width: PENS.medium, colour: INK },
+    },
+    ...limbs.flatMap((run) => runStrips(run, view, limbs.length > 1)),
+  ];
+}
+
+/** The strips of one limb; where there are several each is outlined. */
+function runStrips(
+  { outline, pullDeg, passes }: ScreedRun,
+  view: PlanView,
+  outlined: boolean,
+): DrawCommand[] {
   const radians = (pullDeg * Math.PI) / 180;
   const along: PaperPoint = [Math.cos(radians), -Math.sin(radians)];
   const across: PaperPoint = [Math.sin(radians), Math.cos(radians)];
@@ -68,14 +81,15 @@ function stripPlan(
     s * along[1] + t * across[1],
   ];
   const bay = (high - low) / passes;
-  const commands: DrawCommand[] = [
-    {
-      kind: 'path',
-      rings: [paperRing(view, edges)],
-      fill: inkMix(PAPER, INK, 0.06),
-      stroke: { width: PENS.medium, colour: INK },
-    },
-  ];
+  const commands: DrawCommand[] = outlined
+    ? [
+        {
+          kind: 'path',
+          rings: [{ points: paper, closed: true }],
+          stroke: { width: PENS.fine, colour: INK, dash: [1.6, 1] },
+        },
+      ]
+    : [];
   const turned = paper.map(([x, y]): PaperPoint => [
     x * along[0] + y * along[1],
     x * across[0] + y * across[1],

@@ -131,12 +131,15 @@ function sectionRows(input: PlanInput, scale: number, width: number): readonly P
         ]
       : textRows('Levels are not entered yet: drawn flat, flush with the edge.', width)),
     headingRow('Screed board', width),
-    pair('Pulled', pullWords(input.laying, board.pullDeg)),
-    pair(
-      board.passes > 1 ? `Clear, each of ${formatCount(board.passes)} strips` : 'Clear width',
-      length(board.bayWidth),
-    ),
-    pair('Board', length(board.boardLength)),
+    ...board.limbs.flatMap((run, n) => [
+      ...(board.limbs.length > 1 ? [pair('Limb', `${n + 1} of ${board.limbs.length}`)] : []),
+      pair('Pulled', pullWords(input.laying, run.pullDeg)),
+      pair(
+        run.passes > 1 ? `Clear, each of ${formatCount(run.passes)} strips` : 'Clear width',
+        length(run.bayWidth),
+      ),
+      pair('Board', length(run.boardLength)),
+    ]),
     pair('Lower edge below the ears', length(board.depth)),
     pair('Rides on', board.rides === 'edge' ? 'the edge' : 'rails at the finish'),
     ...(board.rails > 0 ? [pair('Rails to set', formatCount(board.rails))] : []),

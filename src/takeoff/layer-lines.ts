@@ -1,5 +1,5 @@
 import { formatArea } from '@/paving/area';
-import { documentBuildUp } from '@/paving/build-up';
+import { buildUpSaid, documentBuildUp } from '@/paving/build-up';
 import { formatCount } from '@/paving/count';
 import type { Laying } from '@/paving/laying';
 import type { LayoutDocument } from '@/paving/layout-document';
@@ -58,7 +58,11 @@ export function layerLines(
 ): TakeOffLine[] {
   const { display, buildUp } = document;
   const { bedding, base } = documentBuildUp(document);
-  const from = buildUp ? 'typed in under Levels' : 'not looked at yet: the least that is usual';
+  const from = buildUpSaid(document)
+    ? 'typed in under Levels'
+    : buildUp
+      ? 'not looked at yet: common practice'
+      : 'not looked at yet: the least that is usual';
   const thick = (mm: number) =>
     given('Thickness', formatLength(mm, display, { decimals: 1 }), from);
   const more = (m3: number, why: string) =>

@@ -1,3 +1,4 @@
+import { buildUpSaid } from '@/paving/build-up';
 import { bondPattern } from '@/paving/bond';
 import type { FillParts } from '@/paving/fill-parts';
 import type { Laying } from '@/paving/laying';
@@ -217,7 +218,7 @@ function openWarnings({ laying, parts, earth, report }: Looked): TakeOffWarning[
       line: null,
     });
   }
-  if (!document.buildUp) {
+  if (!buildUpSaid(document)) {
     warnings.push({
       id: 'no-build-up',
       weight: 'look',

@@ -13,6 +13,7 @@ import { DrawEntry, type DrawEntryHandle } from './DrawEntry';
 import FloorStage, { zoomToFit } from './FloorStage';
 import { GapRibbon } from './GapRibbon';
 import { KeyList } from './KeyList';
+import { LayoutDrop, LayoutFiles, LayoutRefused, useLayoutOpening } from './LayoutFiles';
 import { createFitService } from './fit/fit-service';
 import { BondPanel } from './panels/BondPanel';
 import { GroundPanel } from './panels/GroundPanel';
@@ -104,7 +105,8 @@ function Board({
   const entry = useRef<DrawEntryHandle>(null);
   const versions = useVersions(draft.layoutId);
   const number = (versions.data?.[0]?.number ?? 0) + 1;
-  const open = keys || saving;
+  const files = useLayoutOpening();
+  const open = keys || saving || files.refused !== null;
   const [fit] = useState(() => createFitService(table));
   // The fit is worked out only while somebody looks at it.
   useEffect(() => (step === 'fit' ? fit.start() : undefined), [fit, step]);
@@ -150,11 +152,11 @@ function Board({
           <PegString />
         </div>
         <div className="order-1 flex min-h-0 min-w-0 flex-[1_1_46%] flex-col md:order-2 md:flex-1">
-          <div className="relative min-h-0 flex-1">
+          <LayoutDrop onFile={(file) => void files.open(file)}>
             <Floor />
             <DrawEntry ref={entry} />
             <CanvasButtons onKeys={() => setKeys(true)} />
-          </div>
+          </LayoutDrop>
           <div className="border-t border-graphite">
             <GapRibbon />
           </div>
@@ -187,12 +189,18 @@ function Board({
           {step === 'takeOff' && <TakeOffPanel />}
           {step === 'setOut' && <SetOutPanel />}
           {step === 'versions' && (
-            <VersionsPanel layoutId={draft.layoutId} sync={sync} onSave={() => setSaving(true)} />
+            <>
+              <VersionsPanel layoutId={draft.layoutId} sync={sync} onSave={() => setSaving(true)} />
+              <div className="mt-6">
+                <LayoutFiles name={draft.layoutName} onFile={(file) => void files.open(file)} />
+              </div>
+            </>
           )}
         </aside>
       </div>
       <Said />
       <KeyList open={keys} onClose={() => setKeys(false)} />
+      <LayoutRefused refused={files.refused} onClose={files.dismiss} />
       <SaveVersion
         open={saving}
         onClose={() => setSaving(false)}

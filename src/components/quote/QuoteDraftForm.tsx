@@ -175,6 +175,16 @@ export function QuoteDraftForm({
             Holds until {dayText(quote.validUntil)} if it is sent today. The client reads what is in
             it, what each part comes to and the total: neither cost nor margin.
           </p>
+          <details className="mt-1 text-sm text-slate">
+            <summary className="cursor-pointer py-1 pointer-coarse:py-3">
+              How it is reckoned
+            </summary>
+            <ul className="list-disc pl-5">
+              {quote.words.map((words) => (
+                <li key={words}>{words}</li>
+              ))}
+            </ul>
+          </details>
           <div className="mt-3">
             <SaveNote draft={draft} />
           </div>

@@ -16,6 +16,7 @@ import { earthVolumes } from '@/takeoff/earth-volumes';
 import { contourInterval, levelMap } from '@/takeoff/level-map';
 import { levelsReport } from '@/takeoff/levels-report';
 import { pegLevels } from '@/takeoff/peg-levels';
+import { ringArea } from '@/geometry/ring';
 import { screedBoard } from '@/takeoff/screed-board';
 import { anyDocument, documentOf, parsed, real } from '../../oracle/documents';
 
@@ -232,7 +233,62 @@ describe('the screed board', () => {
       screedBoard(
         levelled({ fall: { kind: 'oneWay', direction: 0, percent: 2 }, finish: -10, proud: 4 }),
       ),
-    ).toMatchObject({ depth: 46, rides: 'rails', passes: 2, rails: 3 });
+    ).toMatchObject({ depth: 46, rides: 'rails', passes: 1, rails: 4, limbs: { length: 2 } });
+  });
+
+  test('of an L is one for each limb, each across its own width', () => {
+    // Worked out by hand: 8 × 6 m with limbs of 3 and 2.5 m: the one 6 × 3 m, pulled up and down; the other 5 × 2.5 m, pulled
+    // along. Where they meet the first has no edge along its pull: a rail.
+    const L = parsed(
+      documentOf({
+        ground: { perimeter: [[0, 0], [8000, 0], [8000, 2500], [3000, 2500], [3000, 6000], [0, 6000]], keepOuts: [] }, // prettier-ignore
+      }),
+    );
+    const { limbs, ...board } = screedBoard(L);
+    expect(board).toMatchObject({ clearWidth: 2500, boardLength: 2200, pullDeg: 0, rides: 'edge' });
+    expect(
+      limbs.map(({ clearWidth, passes, boardLength, pullDeg, rails }) => [clearWidth, passes, boardLength, pullDeg, rails]), // prettier-ignore
+    ).toEqual([
+      [2500, 1, 2200, 0, 1],
+      [3000, 1, 2700, 90, 0],
+    ]);
+    expect(limbs.map((run) => Math.round(ringArea(run.outline) / 1e4) / 100)).toEqual([20, 10.5]);
+  });
+
+  test('passes a step that is no more than the board is cut short by, and no larger one', () => {
+    const stepped = (step: number) =>
+      screedBoard(
+        parsed(
+          documentOf({
+            ground: { perimeter: [[0, 0], [6000, 0], [6000, 2000], [3000, 2000], [3000, 2000 + step], [0, 2000 + step]], keepOuts: [] }, // prettier-ignore
+          }),
+        ),
+      ).limbs.map(({ clearWidth }) => Math.round(clearWidth));
+    expect(stepped(300)).toEqual([2300]);
+    expect(stepped(301).length).toBe(2);
+  });
+
+  test('of a U has three, and a round floor one', () => {
+    const U = parsed(
+      documentOf({
+        ground: { perimeter: [[0, 0], [6000, 0], [6000, 5000], [4500, 5000], [4500, 1500], [1500, 1500], [1500, 5000], [0, 5000]], keepOuts: [] }, // prettier-ignore
+      }),
+    );
+    expect(screedBoard(U).limbs.map(({ clearWidth }) => Math.round(clearWidth))).toEqual([1500, 1500, 1500]); // prettier-ignore
+    const round = parsed(documentOf({ ground: { perimeter: [[-2000, 0, 1], [2000, 0, 1]], keepOuts: [] } })); // prettier-ignore
+    expect(screedBoard(round).limbs.length).toBe(1);
+  });
+
+  test('limbs make up the floor, whatever it is', () => {
+    fc.assert(
+      fc.property(anyDocument({ arcs: true }), (document) => {
+        const { limbs } = screedBoard(document);
+        const whole = ringArea(documentGround(document).rings[0].outline);
+        const parts = limbs.reduce((all, run) => all + ringArea(run.outline), 0);
+        expect(parts / whole).toBeCloseTo(1, 4);
+      }),
+      { numRuns: 60 },
+    );
   });
 
   test('strips and boards make up the clear width, whatever the ground and its turn', () => {
@@ -242,7 +298,7 @@ describe('the screed board', () => {
         expect(board.passes * board.bayWidth).toBeCloseTo(board.clearWidth, 6);
         expect(board.boardLength).toBeLessThanOrEqual(3000 + 1e-6);
         expect(board.boardLength).toBeGreaterThan(0);
-        const { outline } = documentGround(document).rings[0];
+        const { outline } = board;
         const radians = (board.pullDeg * Math.PI) / 180;
         const across = outline.map(([x, y]) => y * Math.cos(radians) - x * Math.sin(radians));
         expect(Math.max(...across) - Math.min(...across)).toBeCloseTo(board.clearWidth, 2);
