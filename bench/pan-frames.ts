@@ -14,6 +14,10 @@ interface Measured {
   readonly units: number;
   readonly shape: number;
   readonly nodes: number;
+  /** Units of the floor that is dragged, and what painting a step takes, ms. */
+  readonly dragged: number;
+  readonly moving: number;
+  readonly resting: number;
 }
 
 const TYPES: Record<string, string> = { '.html': 'text/html', '.js': 'text/javascript' };
@@ -63,13 +67,19 @@ async function measured(): Promise<Measured> {
 export const panFrames: Bench = {
   name: 'pan-frames',
   async run() {
-    const { units, shape, nodes } = await measured();
+    const { units, shape, nodes, dragged, moving, resting } = await measured();
     return [
       {
         name: 'a frame with one Konva node a unit over a frame with the floor as one shape',
         value: nodes / shape,
         least: 20,
         detail: `${units.toLocaleString('en-GB')} units in view; ${nodes.toFixed(1)} ms and ${shape.toFixed(2)} ms a frame`,
+      },
+      {
+        name: 'painting a large floor sharp over painting it under a moving hand',
+        value: resting / moving,
+        least: 4,
+        detail: `${dragged.toLocaleString('en-GB')} units in view; ${resting.toFixed(0)} ms and ${moving.toFixed(1)} ms a step`,
       },
     ];
   },

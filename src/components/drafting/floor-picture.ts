@@ -2,15 +2,10 @@ import type { LayoutDocument } from '@/paving/layout-document';
 import { documentRing, documentRingCount } from '@/paving/ground-edits';
 import type { CutPieces } from '@/paving/cutting/cut-pieces';
 import type { Laying, UnitSet } from '@/paving/laying';
-import { unitTone } from '@/paving/tones';
-import {
-  colourShaded,
-  PLAIN_AGGREGATE,
-  PLAIN_UNIT,
-  type DrawingColours,
-} from '../ui/drawing-colours';
+import { colourShaded, PLAIN_AGGREGATE, type DrawingColours } from '../ui/drawing-colours';
 import { screenFromGround, type Camera, type ScreenSize } from './camera';
 import { paintPieces } from './cutting/piece-picture';
+import { rasterUnits, unitColours } from './floor-raster';
 import { ringOutline } from './ring-outline';
 
 /** Laid units of one colour: their places in `laying.laid`. */
@@ -18,9 +13,6 @@ interface ColourBatch {
   readonly colour: string;
   readonly indices: Uint32Array;
 }
-
-/** Slight differences between units of one tone, as a delivered pallet has them. */
-const SHADES = [0, -0.03, 0.06] as const;
 
 /** A path is painted after so many units: a browser fills one path of thousands in more than square time. */
 const UNITS_A_PATH = 400;
@@ -30,28 +22,18 @@ const OUTLINE_FROM_PX = 5;
 
 const batches = new WeakMap<Laying, readonly ColourBatch[]>();
 
-const shadeOf = (i: number, j: number, k: number): number =>
-  ((Math.imul(i, 73856093) ^ Math.imul(j, 19349663) ^ Math.imul(k + 1, 83492791)) >>> 4) %
-  SHADES.length;
-
 function colourBatches(laying: Laying): readonly ColourBatch[] {
   const known = batches.get(laying);
   if (known) return known;
-  const { document, laid, motif } = laying;
-  const grouped = new Map<string, number[]>();
-  for (let n = 0; n < laid.count; n++) {
-    const [i, j, k] = [laid.i[n], laid.j[n], laid.k[n]];
-    const second = document.tones ? unitTone(document, i, j, k) === 1 : false;
-    const base = second ? document.tones!.second : (motif[k].unit.colour ?? PLAIN_UNIT);
-    const key = base + shadeOf(i, j, k);
-    const group = grouped.get(key);
-    if (group) group.push(n);
-    else grouped.set(key, [n]);
-  }
-  const made = [...grouped].map(([key, indices]) => ({
-    colour: colourShaded(key.slice(0, 7), SHADES[Number(key.slice(7))]),
-    indices: Uint32Array.from(indices),
-  }));
+  const { palette, of } = unitColours(laying);
+  const counts = new Uint32Array(palette.length);
+  for (const colour of of) counts[colour]++;
+  const indices = Array.from(counts, (count) => new Uint32Array(count));
+  counts.fill(0);
+  for (let n = 0; n < of.length; n++) indices[of[n]][counts[of[n]]++] = n;
+  const made = palette.flatMap((colour, at) =>
+    indices[at].length > 0 ? [{ colour, indices: indices[at] }] : [],
+  );
   batches.set(laying, made);
   return made;
 }
@@ -165,10 +147,38 @@ function grainPattern(
   return pattern;
 }
 
+/** Below this many pixels of the screen across, units are painted by the pixel while the hand moves. */
+const RASTER_BELOW_PX = 12;
+
+let rastered: { canvas: HTMLCanvasElement; image: ImageData; pixels: Uint32Array } | null = null;
+
+/** Units as plain pixels: for the moment in which a hand moves many of them. */
+function paintCoarsely(
+  ctx: CanvasRenderingContext2D,
+  laying: Laying,
+  camera: Camera,
+  size: ScreenSize,
+) {
+  const ratio = ctx.getTransform().a;
+  const [width, height] = [Math.ceil(size.width * ratio), Math.ceil(size.height * ratio)];
+  if (rastered?.image.width !== width || rastered.image.height !== height) {
+    const canvas = window.document.createElement('canvas');
+    canvas.width = width;
+    canvas.height = height;
+    const image = new ImageData(width, height);
+    rastered = { canvas, image, pixels: new Uint32Array(image.data.buffer) };
+  } else rastered.pixels.fill(0);
+  const inPixels = { ...camera, scale: camera.scale * ratio };
+  rasterUnits(rastered.pixels, laying, inPixels, { width, height });
+  rastered.canvas.getContext('2d')!.putImageData(rastered.image, 0, 0);
+  ctx.drawImage(rastered.canvas, 0, 0, width / ratio, height / ratio);
+}
+
 /**
  * Paints ground, aggregate and units, from flat arrays, into a window of `size` CSS pixels. Laid units
  * are filled; left-out ones are a dashed ghost; lifted ones a dashed outline crossed through. `cut`: the pieces that
- * take the place of ghosts on a floor cut at its edge.
+ * take the place of ghosts on a floor cut at its edge. `coarse`: quickly, for a floor of many units under a moving hand;
+ * small ones are pixels then, and what is not laid is left out.
  */
 export function paintFloor(
   ctx: CanvasRenderingContext2D,
@@ -178,6 +188,7 @@ export function paintFloor(
   size: ScreenSize,
   colours: DrawingColours,
   cut: CutPieces | null = null,
+  coarse = false,
 ) {
   const aggregate = document.aggregate?.colour ?? PLAIN_AGGREGATE;
   ctx.save();
@@ -197,6 +208,11 @@ export function paintFloor(
   );
   const outlined = across * camera.scale >= OUTLINE_FROM_PX;
 
+  if (coarse && across * camera.scale < RASTER_BELOW_PX) {
+    paintCoarsely(ctx, laying, camera, size);
+    ctx.restore();
+    return;
+  }
   for (const batch of colourBatches(laying)) {
     ctx.fillStyle = batch.colour;
     ctx.strokeStyle = dark;
