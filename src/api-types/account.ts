@@ -9,8 +9,6 @@ export const mailPreferencesSchema = z
     digest: z.enum(mailDigests, { error: 'must be hourly, daily or never' }),
   })
   .partial();
-export type MailPreferencesChange = z.input<typeof mailPreferencesSchema>;
-
 /** GET /api/account/mail. */
 export interface MailPreferences {
   /** A letter at once when somebody mentions me. */
@@ -29,8 +27,6 @@ export const passwordChangeSchema = z.object({
     .max(200),
   password: newPassword,
 });
-export type PasswordChange = z.input<typeof passwordChangeSchema>;
-
 /** POST /api/forgotten-password. 200 → `{}`, whether or not there is such an account. */
 export const forgottenPasswordSchema = z.object({ email });
 

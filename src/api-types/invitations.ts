@@ -49,8 +49,6 @@ export const acceptInvitationSchema = z.object({
   password: z.string().max(200, 'Keep it to 200 characters').optional(),
   display: displaySchema.default('metric'),
 });
-export type AcceptInvitation = z.input<typeof acceptInvitationSchema>;
-
 /** What somebody with an invitation's link is shown. */
 export interface OpenInvitation {
   readonly firmName: string;

@@ -15,8 +15,6 @@ export const newLayoutSchema = z.object({
   name: layoutName,
   document: layoutDocumentSchema.optional(),
 });
-export type NewLayout = z.input<typeof newLayoutSchema>;
-
 /**
  * PATCH /api/layouts/{id}: renames it, moves it to another project of the firm, archives or restores it. A layout
  * of which a version was shared moves only to a project with the same people on it: 422 `invalid`. 200 → `LayoutSummary`.

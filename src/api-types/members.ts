@@ -16,14 +16,10 @@ export interface Member {
 
 /** PATCH /api/people/{id}. 200 → `Member`; 403 when it would leave the firm without an owner. */
 export const memberChangeSchema = z.object({ role: z.enum(roles, { error: 'Choose a role' }) });
-export type MemberChange = z.input<typeof memberChangeSchema>;
-
 /** POST /api/projects/{id}/people and …/people/remove: an installer or client of the firm. 200 → `{ people }`. */
 export const projectPersonSchema = z.object({
   personId: z.string({ error: 'Choose a person' }).min(1, 'Choose a person').max(64),
 });
-export type ProjectPerson = z.input<typeof projectPersonSchema>;
-
 /** PATCH /api/firm. 200 → `Firm`. */
 export const firmChangeSchema = z
   .object({
@@ -35,8 +31,6 @@ export const firmChangeSchema = z
     terms: z.string().trim().max(20_000, 'Keep the terms to 20,000 characters'),
   })
   .partial();
-export type FirmChange = z.input<typeof firmChangeSchema>;
-
 /** GET /api/firm; for owners. */
 export interface Firm {
   readonly id: string;

@@ -42,19 +42,13 @@ export const signUpSchema = z.object({
   password: newPassword,
   display: displaySchema.default('metric'),
 });
-export type SignUp = z.input<typeof signUpSchema>;
-
 /** POST /api/sign-in. 200 → `Account`; 401 `signed-out` when the pair is wrong; 429 after too many tries. */
 export const signInSchema = z.object({
   email: z.string({ error: 'Give an e-mail address' }).trim().toLowerCase().min(1).max(254),
   password: z.string({ error: 'Give your password' }).min(1, 'Give your password').max(200),
 });
-export type SignIn = z.input<typeof signInSchema>;
-
 /** PATCH /api/account. 200 → `Account`. */
 export const accountChangeSchema = z.object({ name: personName, display: displaySchema }).partial();
-export type AccountChange = z.input<typeof accountChangeSchema>;
-
 /** GET /api/account: who is signed in, in which firm and role. */
 export interface Account {
   readonly id: string;

@@ -19,8 +19,6 @@ export const newProjectSchema = projectFields.extend({
   clientName: projectFields.shape.clientName.default(''),
   siteNote: projectFields.shape.siteNote.default(''),
 });
-export type NewProject = z.input<typeof newProjectSchema>;
-
 /** PATCH /api/projects/{id}. 200 → `ProjectSummary`. */
 export const projectChangeSchema = projectFields.extend({ archived: z.boolean() }).partial();
 export type ProjectChange = z.input<typeof projectChangeSchema>;

@@ -86,8 +86,6 @@ export type QuoteDraft = z.output<typeof draftFields>;
 export const quoteChangeSchema = draftFields
   .partial()
   .extend({ revision: z.number({ error: 'names no revision' }).int().min(1) });
-export type QuoteChange = z.input<typeof quoteChangeSchema>;
-
 /**
  * POST /api/quotes/{id}/send: numbers and freezes it, shows its totals to the project’s clients and writes to them with the quote as
  * a PDF. 200 → `QuoteSent`; 409 when it was changed since `revision`, is sent already, or the version is not shared yet.
