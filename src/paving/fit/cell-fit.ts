@@ -1,10 +1,12 @@
 import { cellPieces, type CellPieces } from './cell-pieces';
 import { unitCount } from './count';
-import type { FitFrame } from './fit-frame';
+import { cellPoint, type FitFrame } from './fit-frame';
+import { greatestReach, REACH_SHARE, type CellChoice } from './known-choices';
 import { cellMost, type CellMost } from './most';
 import { mostPlay } from './most-play';
 import { nearPieces } from './near-pieces';
-import { cellTradeOff, type CellChoice } from './trade-off';
+import { MANY_FAMILIES } from './strip-bound';
+import { cellTradeOff } from './trade-off';
 
 /** Choices go down to this share of the most units. */
 export const CHOICES_SHARE = 0.85;
@@ -26,10 +28,26 @@ export function frameMost(frame: FitFrame, stop?: () => boolean) {
   return { pieces, most };
 }
 
-/** First reach, in widths that the cell's area would have spread along all its pieces. */
+/** First reach, in widths that the cell's area would have spread along all its pieces; more where they are of many directions. */
 const FIRST_REACH = 8;
+const FIRST_REACH_MANY = 16;
 /** A face of the best starts is no longer than a way round the cell; pieces are known this many cells off at most. */
 const GREATEST_CELLS = 3;
+/** A reach that is too short is drawn out to so many times as much. */
+const REACH_GROWTH = 2;
+/** Sides of the squares that the cell is looked over in, in the same. */
+const SQUARE_SIDE = 1.75;
+/** Squares of a cell are no more than these. */
+const MOST_SQUARES = 1 << 18;
+
+/** The width that the cell's area would have, spread along all its pieces, mm. */
+function spreadWidth({ pitch, rise }: FitFrame, pieces: CellPieces): number {
+  let length = 0;
+  for (let n = 0; n < pieces.count; n++) {
+    length += Math.hypot(pieces.x1[n] - pieces.x0[n], pieces.y1[n] - pieces.y0[n]);
+  }
+  return (pitch * rise) / length;
+}
 
 /**
  * Asks for origins with the most slack, of pieces with their repeats as far off as the slack may reach. How
@@ -38,24 +56,18 @@ const GREATEST_CELLS = 3;
  */
 function withinReach<T>(
   { pitch, rise }: FitFrame,
-  pieces: CellPieces,
   first: number,
   found: (reach: number) => T,
   needed: (answer: T) => number,
 ): T {
-  let length = 0;
-  for (let n = 0; n < pieces.count; n++) {
-    length += Math.hypot(pieces.x1[n] - pieces.x0[n], pieces.y1[n] - pieces.y0[n]);
-  }
-  // No origin with a unit has more slack: the unit's neighbour along the row that is not whole bounds it.
-  const greatest = pitch * 1.001;
+  const greatest = greatestReach(pitch);
   const farthest = GREATEST_CELLS * (pitch + rise);
-  let reach = Math.min(Math.max(first, (FIRST_REACH * pitch * rise) / length), greatest);
+  let reach = Math.min(first, greatest);
   for (;;) {
     const answer = found(reach);
     const need = needed(answer);
-    if (need < reach * 0.999 || reach >= farthest) return answer;
-    reach = Math.min(Math.max(Math.min(4 * reach, greatest), 1.01 * need), farthest);
+    if (need < REACH_SHARE * reach || reach >= farthest) return answer;
+    reach = Math.min(Math.max(Math.min(REACH_GROWTH * reach, greatest), 1.01 * need), farthest);
   }
 }
 
@@ -69,8 +81,7 @@ export function frameStart(
   const { pitch, rise, shift } = frame;
   return withinReach(
     frame,
-    pieces,
-    0,
+    FIRST_REACH * spreadWidth(frame, pieces),
     (reach) => mostPlay(nearPieces(pieces, pitch, rise, shift, reach, true), reach, most, stop),
     // A face may run out of the cell, and the start with it: about that, too, all pieces must be known.
     ({ slack, u, v }) =>
@@ -87,13 +98,18 @@ export function frameChoices(
 ): CellChoice[] {
   const { pitch, rise, shift } = frame;
   const least = Math.max(1, Math.ceil(CHOICES_SHARE * most.count));
+  // The same floor from within the cell, about which all pieces are listed.
+  const [u, v] = cellPoint(frame, [most.u, most.v]);
+  const start = { ...most, u, v };
+  const width = spreadWidth(frame, pieces);
+  const many = pieces.families.nx.length >= MANY_FAMILIES;
+  const squares = many ? Math.min(MOST_SQUARES, (pitch * rise) / (SQUARE_SIDE * width) ** 2) : 0;
   return withinReach(
     frame,
-    pieces,
-    2 * most.slack,
+    Math.max(2 * most.slack, (many ? FIRST_REACH_MANY : FIRST_REACH) * width),
     (reach) => {
       const near = nearPieces(pieces, pitch, rise, shift, reach);
-      return cellTradeOff(near, pitch, rise, reach, { least, most, stop });
+      return cellTradeOff(near, pitch, rise, reach, { least, most: start, squares, stop });
     },
     (choices) => (stop?.() ? 0 : Math.max(...choices.map(({ slack }) => slack))),
   );

@@ -8,7 +8,7 @@ import { fitFrame, holdFrame, type FitFrame } from './fit-frame';
 import { holdRefusal, type FitHold, type HoldRefusal } from './hold';
 import { heldChoices } from './line-fit';
 import { rangeTurns, turnBest, turnSweep, type FitTurn, type TurnRange } from './turn-sweep';
-import type { CellChoice } from './trade-off';
+import type { CellChoice } from './known-choices';
 import { choiceVerified, type FitChoice } from './verified';
 
 export type { EdgeAddress, FitHold, HoldRefusal } from './hold';

@@ -8,7 +8,7 @@ import { cellPoint, groundFromFrame, type FitFrame } from './fit-frame';
 import { holdLines, type EdgeAddress, type FitHold, type HoldLine } from './hold';
 import { nearPieces } from './near-pieces';
 import { pieceGap, pieceGapsRoom, pointSlack, unitsApart } from './slack';
-import type { CellChoice } from './trade-off';
+import type { CellChoice } from './known-choices';
 
 /** A stretch of a line, or a point, whose origins all have the same units. */
 interface Stretch {

@@ -3,7 +3,7 @@ import { depthMoved, SPLIT, type CellMost } from './most';
 import type { NearPieces } from './near-pieces';
 import { pieceGap, pieceGapsRoom, type PieceGaps } from './slack';
 import { KEPT_OFF, stripCount, stripRoom, type OriginBox } from './strip-bound';
-import { SLACK_TOLERANCE_MM, type CellChoice } from './trade-off';
+import { SLACK_TOLERANCE_MM, type CellChoice } from './known-choices';
 
 /** So many of the pieces nearest to a point are weighed against each other. */
 const WEIGHED = 7;

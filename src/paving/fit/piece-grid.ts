@@ -77,3 +77,35 @@ export function pieceGrid(
   start[0] = 0;
   return { columns, rows, x, y, start, of };
 }
+
+/** The pieces that may come into a rectangle, each once and in no order; the next answer overwrites it. */
+export type PieceFinder = (west: number, south: number, east: number, north: number) => Int32Array;
+
+/** Finds pieces by place, in the squares of a grid. */
+export function pieceFinder(pieces: CellPieces, grid: PieceGrid): PieceFinder {
+  const { columns, rows, x, y, start, of } = grid;
+  const perU = columns / (x[columns] - x[0]);
+  const perV = rows / (y[rows] - y[0]);
+  const found = new Int32Array(pieces.count);
+  /** The search that last found each piece. */
+  const foundBy = new Int32Array(pieces.count);
+  let search = 0;
+  return (west, south, east, north) => {
+    search++;
+    let count = 0;
+    const first = Math.max(0, Math.floor((west - x[0]) * perU - HAIR_MM));
+    const last = Math.min(columns - 1, Math.floor((east - x[0]) * perU + HAIR_MM));
+    const low = Math.max(0, Math.floor((south - y[0]) * perV - HAIR_MM));
+    const high = Math.min(rows - 1, Math.floor((north - y[0]) * perV + HAIR_MM));
+    for (let row = low; row <= high && first <= last; row++) {
+      const end = start[row * columns + last + 1];
+      for (let at = start[row * columns + first]; at < end; at++) {
+        const n = of[at];
+        if (foundBy[n] === search) continue;
+        foundBy[n] = search;
+        found[count++] = n;
+      }
+    }
+    return found.subarray(0, count);
+  };
+}

@@ -1,5 +1,6 @@
 import type { CellPieces } from './cell-pieces';
 import { depthMoved } from './most';
+import type { PieceFinder } from './piece-grid';
 import { KEEP_OFF_MM, pieceGap, pieceGapsRoom, pointSlack, unitsApart } from './slack';
 
 /** A place found on the way, with how many units it has more than the start. */
@@ -15,10 +16,23 @@ export interface PolishedWithin {
   readonly pitch: number;
   readonly rise: number;
   readonly reach: number;
+  /** Steps down to this are tried, mm; the smallest that tell unless given. */
+  readonly leastStep?: number;
+  /** Finds the listed pieces, where there are so many that this is quicker than to go through the list. */
+  readonly about?: PieceFinder;
 }
 
 const LEAST_STEP_MM = 1e-7;
 const GREATEST_HELD = 10;
+const SIDES = [
+  [1, 0],
+  [-1, 0],
+  [0, 1],
+  [0, -1],
+] as const;
+/** Limits broken by no more than this, mm, are kept. */
+const LIMIT_HAIR_MM = 1e-9;
+const LEAST_DETERMINANT = 1e-9;
 
 /**
  * Moves an origin to where the slack about it is greatest: again and again, to the place that would
@@ -31,7 +45,7 @@ export function slackPolished(
   startU: number,
   startV: number,
   startSlack: number,
-  { pitch, rise, reach }: PolishedWithin,
+  { pitch, rise, reach, leastStep = LEAST_STEP_MM, about }: PolishedWithin,
 ): SlackPlace[] {
   const found: SlackPlace[] = [];
   let u = startU;
@@ -51,8 +65,10 @@ export function slackPolished(
     aboutU = u;
     aboutV = v;
     const nearest: number[] = [];
-    for (let a = 0; a < list.length; a++) {
-      const n = list[a];
+    const far = 2 * scope;
+    const some = about ? about(u - far, v - far, u + far, v + far) : list;
+    for (let a = 0; a < some.length; a++) {
+      const n = some[a];
       if (Math.min(pieces.x0[n], pieces.x1[n]) > u + 2 * scope) continue;
       if (Math.max(pieces.x0[n], pieces.x1[n]) < u - 2 * scope) continue;
       if (Math.min(pieces.y0[n], pieces.y1[n]) > v + 2 * scope) continue;
@@ -80,7 +96,7 @@ export function slackPolished(
       room,
       order,
     );
-  for (let round = 0; round < 60 && trust > LEAST_STEP_MM; round++) {
+  for (let round = 0; round < 60 && trust > leastStep; round++) {
     // Held: pieces of units that the origin has. Shunned: pieces of those it has not.
     let count = 0;
     for (let a = 0; a < local.length; a++) {
@@ -96,7 +112,7 @@ export function slackPolished(
     const shunned: Limit[] = [];
     for (let m = 0; m < count; m++) {
       const at = order[m];
-      if (unitsApart(pieces, local[at], local, order, m, 1) === 0 && room.side[at] < 0) continue;
+      if (room.side[at] < 0 && unitsApart(pieces, local[at], local, order, m, 1) === 0) continue;
       const d = room.distance[at];
       const nx = room.awayX[at];
       const ny = room.awayY[at];
@@ -107,16 +123,10 @@ export function slackPolished(
         shunned.push({ nx, ny, room: Math.max(0, d - 1.1 * KEEP_OFF_MM), slack: 0 });
       }
     }
+    if (limits.length === 0) break;
     limits.push(...shunned);
-    for (const [nx, ny] of [
-      [1, 0],
-      [-1, 0],
-      [0, 1],
-      [0, -1],
-    ]) {
-      limits.push({ nx, ny, room: trust, slack: 0 });
-    }
-    const step = limitedStep(limits);
+    const around = SIDES.map(([nx, ny]): Limit => ({ nx, ny, room: trust, slack: 0 }));
+    const step = limitedStep(around, limits);
     if (!step || step.slack <= slack + 1e-9) {
       trust /= 4;
       continue;
@@ -157,58 +167,75 @@ interface Limit {
   readonly slack: 0 | 1;
 }
 
-/** Those with slack come first. The step with the greatest s that keeps within all limits: a small linear programme, corner by corner. */
-function limitedStep(limits: readonly Limit[]): { x: number; y: number; slack: number } | null {
-  let best: { x: number; y: number; slack: number } | null = null;
-  const size = limits.length;
-  for (let a = 0; a < size; a++) {
-    if (limits[a].slack === 0) break;
-    for (let b = a + 1; b < size; b++) {
-      for (let c = b + 1; c < size; c++) {
-        const p = limits[a];
-        const q = limits[b];
-        const r = limits[c];
-        // room + n·x − slack·s = 0 for all three.
-        const m00 = p.nx;
-        const m01 = p.ny;
-        const m02 = -p.slack;
-        const m10 = q.nx;
-        const m11 = q.ny;
-        const m12 = -q.slack;
-        const m20 = r.nx;
-        const m21 = r.ny;
-        const m22 = -r.slack;
-        const det =
-          m00 * (m11 * m22 - m12 * m21) -
-          m01 * (m10 * m22 - m12 * m20) +
-          m02 * (m10 * m21 - m11 * m20);
-        if (Math.abs(det) < 1e-9) continue;
-        const k0 = -p.room;
-        const k1 = -q.room;
-        const k2 = -r.room;
-        const x =
-          (k0 * (m11 * m22 - m12 * m21) -
-            m01 * (k1 * m22 - m12 * k2) +
-            m02 * (k1 * m21 - m11 * k2)) /
-          det;
-        const y =
-          (m00 * (k1 * m22 - m12 * k2) -
-            k0 * (m10 * m22 - m12 * m20) +
-            m02 * (m10 * k2 - k1 * m20)) /
-          det;
-        const s =
-          (m00 * (m11 * k2 - k1 * m21) -
-            m01 * (m10 * k2 - k1 * m20) +
-            k0 * (m10 * m21 - m11 * m20)) /
-          det;
-        if (best && s <= best.slack) continue;
-        let kept = true;
-        for (let n = 0; n < size && kept; n++) {
-          const l = limits[n];
-          kept = l.room + l.nx * x + l.ny * y - l.slack * s >= -1e-9;
-        }
-        if (kept) best = { x, y, slack: s };
+interface Step {
+  readonly x: number;
+  readonly y: number;
+  readonly slack: number;
+}
+
+/**
+ * The step with the greatest s that keeps within all limits: a small linear programme. `within` bounds the step on
+ * every side, the first of the others has slack. Limits are taken in one by one, the one most broken first; the best step
+ * within one limit more lies on that limit.
+ */
+function limitedStep(within: readonly Limit[], others: readonly Limit[]): Step | null {
+  const kept: Limit[] = [...within];
+  const limits = [...within, ...others];
+  let next = others[0];
+  for (;;) {
+    const best = stepOnLimit(next, kept);
+    if (!best) return null;
+    kept.push(next);
+    let least = -LIMIT_HAIR_MM;
+    let broken: Limit | null = null;
+    for (const limit of limits) {
+      const left = limit.room + limit.nx * best.x + limit.ny * best.y - limit.slack * best.slack;
+      if (left >= least || kept.includes(limit)) continue;
+      least = left;
+      broken = limit;
+    }
+    if (!broken) return best;
+    next = broken;
+  }
+}
+
+/** The best step on a limit that keeps within the rest of them: where two of these meet it. */
+function stepOnLimit(p: Limit, rest: readonly Limit[]): Step | null {
+  let best: Step | null = null;
+  for (let b = 0; b < rest.length; b++) {
+    const q = rest[b];
+    for (let c = b + 1; c < rest.length; c++) {
+      const r = rest[c];
+      // room + n·x − slack·s = 0 for all three.
+      const qr = q.nx * r.ny - q.ny * r.nx;
+      const rp = r.nx * p.ny - r.ny * p.nx;
+      const pq = p.nx * q.ny - p.ny * q.nx;
+      const det = p.slack * qr + q.slack * rp + r.slack * pq;
+      if (Math.abs(det) < LEAST_DETERMINANT) continue;
+      const s = (p.room * qr + q.room * rp + r.room * pq) / det;
+      if (best && s <= best.slack) continue;
+      const pk = p.room - p.slack * s;
+      const qk = q.room - q.slack * s;
+      const rk = r.room - r.slack * s;
+      // From the two that cross most squarely.
+      let x: number;
+      let y: number;
+      if (Math.abs(qr) >= Math.abs(rp) && Math.abs(qr) >= Math.abs(pq)) {
+        x = (q.ny * rk - r.ny * qk) / qr;
+        y = (r.nx * qk - q.nx * rk) / qr;
+      } else if (Math.abs(rp) >= Math.abs(pq)) {
+        x = (r.ny * pk - p.ny * rk) / rp;
+        y = (p.nx * rk - r.nx * pk) / rp;
+      } else {
+        x = (p.ny * qk - q.ny * pk) / pq;
+        y = (q.nx * pk - p.nx * qk) / pq;
       }
+      let within = true;
+      for (let n = 0; n < rest.length && within; n++) {
+        const l = rest[n];
+        within = l.room + l.nx * x + l.ny * y - l.slack * s >= -LIMIT_HAIR_MM;
+      }
+      if (within) best = { x, y, slack: s };
     }
   }
   return best;

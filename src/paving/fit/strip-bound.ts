@@ -10,7 +10,7 @@ const THINNEST_MM = 1e-7;
 const HAIR_MM = 1e-7;
 
 /** With more families than this nearly parallel ones are bundled, in boxes that no more pieces are near to than the next. */
-const MANY_FAMILIES = 6;
+export const MANY_FAMILIES = 6;
 const BUNDLED_PIECES = 400;
 
 /** A box of origins, mm. */

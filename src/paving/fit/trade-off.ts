@@ -1,21 +1,23 @@
 import { envelopeTop, planeEnvelope } from '@/geometry/plane-envelope';
-import { LENGTH_TOLERANCE_MM } from '@/geometry/tolerance';
+import { boxFrom, boxKept, boxLevel, levelEmptied, levelRoom, type BoxLevel } from './box-level';
 import type { CellPieces } from './cell-pieces';
+import {
+  choiceOffered,
+  choicesListed,
+  knownChoices,
+  newsStair,
+  reachIsShort,
+  type CellChoice,
+} from './known-choices';
+import { freshClimbed } from './known-climbs';
 import { arcMeetsBox, arcOnlyTakes, depthMoved, SPLIT } from './most';
+import { pieceFinder, pieceGrid } from './piece-grid';
 import { KEEP_OFF_MM, pieceGap, pieceGapsRoom, pointSlack, unitsApart } from './slack';
-import { slackPolished } from './slack-polish';
+import { squaresSearched } from './square-search';
 import { KEPT_OFF, stripCount, stripRoom, type KeptOff, type OriginBox } from './strip-bound';
 
-/** The origin of the cell with the most slack among those with a count. */
-export interface CellChoice {
-  readonly count: number;
-  readonly slack: number;
-  readonly u: number;
-  readonly v: number;
-}
+export { SLACK_TOLERANCE_MM } from './known-choices';
 
-/** No origin of the same count has this much more slack than the one that is given, mm. */
-export const SLACK_TOLERANCE_MM = 0.004;
 const TOUCH_MM = 1e-8;
 /** While boxes are so many times larger than the most slack known, they are halved without a look at each piece. */
 const COARSE_TIMES = 3;
@@ -39,42 +41,18 @@ const SMALL_SHARE = 8;
 const STEEP = 1000;
 /** A piece that is not straight before all of a box makes no plane when it is no farther than this from being in it, mm. */
 const LEAST_AWAY_MM = 1e-3;
-/** Places that a level of boxes has for pieces at first. */
-const FIRST_ROOM = 256;
+/** Pieces are listed by so many columns of places. */
+const PLACES = 20;
 /** Below this, mm, a box is left. */
 const SMALLEST_BOX_MM = 1e-5;
-
-interface Level {
-  readonly x0: number[];
-  readonly y0: number[];
-  readonly x1: number[];
-  readonly y1: number[];
-  readonly depth: number[];
-  readonly reach: number[];
-  readonly from: number[];
-  readonly to: number[];
-  list: Int32Array;
-  top: number;
-}
-
-const levelOf = (size: number): Level => ({
-  x0: [],
-  y0: [],
-  x1: [],
-  y1: [],
-  depth: [],
-  reach: [],
-  from: [],
-  to: [],
-  list: new Int32Array(size),
-  top: 0,
-});
 
 export interface TradeOffOptions {
   /** Counts below this are of no interest. */
   readonly least: number;
   /** Of the origins with the most units, the one with the most slack. */
   readonly most: CellChoice;
+  /** How many squares a cell of many directions is looked over in at first. */
+  readonly squares: number;
   readonly stop?: () => boolean;
 }
 
@@ -91,59 +69,24 @@ export function cellTradeOff(
   pitch: number,
   rise: number,
   reach: number,
-  { least, most, stop }: TradeOffOptions,
+  { least, most, squares, stop }: TradeOffOptions,
 ): CellChoice[] {
   const { x0, y0, x1, y1, radius, family, height, step, families } = near;
-  const span = most.count - least + 1;
-  const bestSlack = new Float64Array(span).fill(-1);
-  const bestU = new Float64Array(span);
-  const bestV = new Float64Array(span);
-  /** The most slack known of any origin with that count or more. */
-  const known = new Float64Array(span).fill(-1);
-  const fresh = new Set<number>();
-
-  const offer = (count: number, slack: number, u: number, v: number) => {
-    const at = count - least;
-    if (at < 0 || at >= span || slack <= bestSlack[at]) return;
-    bestSlack[at] = slack;
-    bestU[at] = u;
-    bestV[at] = v;
-    if (slack <= known[at]) return;
-    fresh.add(at);
-    for (let n = at; n >= 0 && known[n] < slack; n--) known[n] = slack;
-    steps = null;
-  };
-  let steps: { readonly slack: number; readonly fewest: number }[] | null = null;
-  /**
-   * What would be news, as a stair: more than the slack, with at least the fewest units. Counts that are known with the
-   * same slack are one step, and the fewest of them is the easiest to beat.
-   */
-  const stair = () => {
-    if (steps) return steps;
-    steps = [];
-    for (let n = 0; n < span; n++) {
-      if (n === 0 || known[n] !== known[n - 1])
-        steps.push({ slack: Math.max(0, known[n] + SLACK_TOLERANCE_MM), fewest: n + least });
-    }
-    return steps;
-  };
+  const known = knownChoices(least, most.count);
+  const { atLeast } = known;
+  const offer = (count: number, slack: number, u: number, v: number) =>
+    choiceOffered(known, count, slack, u, v);
 
   const every = new Int32Array(near.count);
   for (let n = 0; n < near.count; n++) every[n] = n;
   const room = pieceGapsRoom(Math.max(64, near.count));
   const order = new Int32Array(Math.max(64, near.count));
-  const polish = () => {
-    for (const at of [...fresh]) {
-      if (bestSlack[at] < known[at]) continue;
-      const found = slackPolished(near, every, bestU[at], bestV[at], bestSlack[at], {
-        pitch,
-        rise,
-        reach,
-      });
-      for (const { u, v, gained, slack } of found) offer(at + least + gained, slack, u, v);
-    }
-    fresh.clear();
+  const finder = () => {
+    const lines = Math.max(1, Math.round((PLACES * rise) / pitch));
+    const places = pieceGrid(near, -reach, -reach, pitch + reach, rise + reach, PLACES, lines);
+    return pieceFinder(near, places);
   };
+  const cell = { near, every, pitch, rise, reach, about: squares > 0 ? finder() : undefined };
   offer(most.count, most.slack, most.u, most.v);
 
   const strips = stripRoom(near);
@@ -185,7 +128,7 @@ export function cellTradeOff(
     ay: number,
     bx: number,
     by: number,
-    out: Level,
+    out: BoxLevel,
   ) => {
     const u = ax + (bx - ax) * SPLIT;
     const v = ay + (by - ay) * SPLIT;
@@ -195,15 +138,11 @@ export function cellTradeOff(
     const hx = (bx - ax) / 2;
     const hy = (by - ay) / 2;
     const h = Math.hypot(Math.max(u - ax, bx - u), Math.max(v - ay, by - v));
-    if (out.top + (to - from) > out.list.length) {
-      const larger = new Int32Array(2 * (out.top + (to - from)));
-      larger.set(out.list);
-      out.list = larger;
-    }
+    levelRoom(out, to - from);
     const own = out.top;
     let { top } = out;
     const { list } = out;
-    if (h > COARSE_TIMES * known[0] && h > reach) {
+    if (h > COARSE_TIMES * atLeast[0] && h > reach) {
       for (let a = from; a < to; a++) {
         const n = source[a];
         if (pieceWithin(n, ax, ay, bx, by, mx, my, hx, hy, within)) list[top++] = n;
@@ -215,10 +154,10 @@ export function cellTradeOff(
         const box = { ax, ay, bx, by };
         if (!stripsNews(local, box, u, v, depth, h, within, onceSeen(local))) return;
       }
-      if (out.x0.length % COARSE_SAMPLE === 0) {
+      if (out.count % COARSE_SAMPLE === 0) {
         offer(depth, pointSlack(near, list, own, top, u, v, within, room, order), u, v);
       }
-      keep(out, ax, ay, bx, by, depth, within, own, top);
+      boxKept(out, ax, ay, bx, by, depth, within, top);
       return;
     }
     looks++;
@@ -352,7 +291,7 @@ export function cellTradeOff(
     const box = { ax, ay, bx, by };
     if (!news(local, box, u, v, depth, h, all, gains, losses, through, alone)) return;
     // Over the box no origin has more slack than this: what is farther off does not matter there.
-    keep(out, ax, ay, bx, by, depth, Math.min(within, all), own, top);
+    boxKept(out, ax, ay, bx, by, depth, Math.min(within, all), top);
   };
 
   /** Tells which units are in one listed piece only; true when each of the pieces is of one unit. */
@@ -435,7 +374,7 @@ export function cellTradeOff(
     const toV = (at[1] * nx[0] - at[0] * nx[1]) / cross;
     if (!(toU > ax && toU < bx && toV > ay && toV < by)) return;
     const there = depthMoved(near, local, 0, local.length, u, v, toU, toV, depth);
-    if (there < least || known[Math.min(there - least, span - 1)] >= all) return;
+    if (there < least || atLeast[Math.min(there, most.count) - least] >= all) return;
     const slack = pointSlack(near, local, 0, local.length, toU, toV, all, gaps, order);
     if (slack < all) offer(there, slack, toU, toV);
   };
@@ -451,7 +390,7 @@ export function cellTradeOff(
     all: number,
     alone: boolean,
   ): boolean => {
-    for (const { slack, fewest } of stair()) {
+    for (const { slack, fewest } of newsStair(known)) {
       if (slack >= all || stripsBound(local, box, u, v, depth, h, slack, alone) < fewest) continue;
       tryStrips(local, box, u, v, depth, all);
       return true;
@@ -476,7 +415,7 @@ export function cellTradeOff(
     through: number,
     alone: boolean,
   ): boolean => {
-    for (const { slack, fewest } of stair()) {
+    for (const { slack, fewest } of newsStair(known)) {
       if (slack >= all) continue;
       let count = depth;
       for (let m = 0; m < losses; m++) if (lossSlack[m] <= slack) count -= lossWeight[m];
@@ -581,28 +520,6 @@ export function cellTradeOff(
     return count;
   };
 
-  const keep = (
-    out: Level,
-    ax: number,
-    ay: number,
-    bx: number,
-    by: number,
-    depth: number,
-    within: number,
-    from: number,
-    to: number,
-  ) => {
-    out.x0.push(ax);
-    out.y0.push(ay);
-    out.x1.push(bx);
-    out.y1.push(by);
-    out.depth.push(depth);
-    out.reach.push(within);
-    out.from.push(from);
-    out.to.push(to);
-    out.top = to;
-  };
-
   /** False when the piece is farther than `within` from the whole box; it may be, too, where true. */
   const pieceWithin = (
     n: number,
@@ -633,54 +550,55 @@ export function cellTradeOff(
     return along >= h && along <= near.length[n] - h;
   };
 
-  const wholeCell = (): Level => {
-    const level = levelOf(near.count);
-    look(every, 0, near.count, most.u, most.v, most.count, reach, 0, 0, pitch, rise, level);
-    return level;
-  };
-
-  const search = (first: Level) => {
-    let level = first;
-    polish();
-    while (level.x0.length > 0 && !stop?.()) {
-      const next = levelOf(Math.max(FIRST_ROOM, 2 * level.top));
-      for (let box = 0; box < level.x0.length; box++) {
-        const ax = level.x0[box];
-        const ay = level.y0[box];
-        const bx = level.x1[box];
-        const by = level.y1[box];
+  let level = boxLevel(near.count);
+  if (squares > 0) {
+    squaresSearched(
+      cell,
+      known,
+      most,
+      squares,
+      ({ ax, ay, bx, by }, depth, slack, list) => {
         const u = ax + (bx - ax) * SPLIT;
         const v = ay + (by - ay) * SPLIT;
-        const wide = bx - ax >= by - ay;
-        const cut = wide ? u : v;
-        for (let part = 0; part < 2; part++) {
-          look(
-            level.list,
-            level.from[box],
-            level.to[box],
-            u,
-            v,
-            level.depth[box],
-            level.reach[box],
-            wide && part === 1 ? cut : ax,
-            !wide && part === 1 ? cut : ay,
-            wide && part === 0 ? cut : bx,
-            !wide && part === 0 ? cut : by,
-            next,
-          );
-        }
-      }
-      level = next;
-      polish();
-    }
-  };
-  search(wholeCell());
-  const choices: CellChoice[] = [];
-  let above = -Infinity;
-  for (let at = span - 1; at >= 0; at--) {
-    if (bestSlack[at] <= above + LENGTH_TOLERANCE_MM) continue;
-    above = bestSlack[at];
-    choices.push({ count: at + least, slack: bestSlack[at], u: bestU[at], v: bestV[at] });
+        look(list, 0, list.length, u, v, depth, slack, ax, ay, bx, by, level);
+      },
+      stop,
+    );
+  } else {
+    look(every, 0, near.count, most.u, most.v, most.count, reach, 0, 0, pitch, rise, level);
   }
-  return choices;
+  freshClimbed(cell, known);
+  let next = boxLevel(near.count);
+  while (level.count > 0 && !reachIsShort(known.atLeast[0], reach, pitch) && !stop?.()) {
+    levelEmptied(next);
+    for (let box = 0; box < level.count; box++) {
+      const ax = level.sides[4 * box];
+      const ay = level.sides[4 * box + 1];
+      const bx = level.sides[4 * box + 2];
+      const by = level.sides[4 * box + 3];
+      const u = ax + (bx - ax) * SPLIT;
+      const v = ay + (by - ay) * SPLIT;
+      const wide = bx - ax >= by - ay;
+      const cut = wide ? u : v;
+      for (let part = 0; part < 2; part++) {
+        look(
+          level.list,
+          boxFrom(level, box),
+          level.end[box],
+          u,
+          v,
+          level.depth[box],
+          level.reach[box],
+          wide && part === 1 ? cut : ax,
+          !wide && part === 1 ? cut : ay,
+          wide && part === 0 ? cut : bx,
+          !wide && part === 0 ? cut : by,
+          next,
+        );
+      }
+    }
+    [level, next] = [next, level];
+    freshClimbed(cell, known);
+  }
+  return choicesListed(known);
 }
