@@ -15,7 +15,7 @@ export const layoutPriceSchema = z.object({
       pack: z.object({
         holds: z
           .number({ error: 'Give what the pack holds' })
-          .positive('A pack must hold more than nothing')
+          .positive('A pack must hold more than 0')
           .max(1_000_000_000),
         measure: z.enum(packMeasures),
       }),

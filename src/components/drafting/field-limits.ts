@@ -19,6 +19,10 @@ export const lengthWithin =
         : null;
   };
 
+/** The side of a unit, or what a tape reads. */
+export const sizeWithin = (display: Display, greatest: number) => (mm: number) =>
+  mm <= 0 ? 'Must be more than 0.' : lengthWithin(display, 0, greatest)(mm);
+
 /** A joint, a gap or a clearance. */
 export const gapRefused = (display: Display) => lengthWithin(display, 0, GREATEST_UNIT_MM);
 

@@ -11,7 +11,7 @@ import { cornerName, keepOutName } from '../edge-names';
 export const GREATEST_SURVEY_POINTS = 80;
 export const GREATEST_TAPES = 400;
 /** No tape is longer, mm. */
-const GREATEST_TAPE_MM = 200_000;
+export const GREATEST_TAPE_MM = 200_000;
 
 const point = z.number().int().min(0).lt(GREATEST_SURVEY_POINTS);
 const length = z

@@ -2,13 +2,13 @@ import { useState } from 'react';
 import type { CatalogueItem } from '@/api-types/catalogue';
 import { unitChanged, mainUnitId } from '@/paving/bond-edits';
 import { GREATEST_UNIT_MM, type LayoutDocument, type Unit } from '@/paving/layout-document';
-import { formatLength, formatSize, type Display } from '@/paving/length';
+import { formatLength, formatSize } from '@/paving/length';
 import { STARTER_CATALOGUE, type CatalogueUnit } from '@/paving/starter-catalogue';
 import { LengthField } from '../../ui/LengthField';
 import { Segmented } from '../../ui/Segmented';
 import { PLAIN_UNIT } from '../../ui/drawing-colours';
 import { CatalogueChoice } from '../CatalogueChoice';
-import { lengthWithin } from '../field-limits';
+import { sizeWithin } from '../field-limits';
 import { FloorFigures } from '../FloorFigures';
 import { useShownFloor, useTable, useTableStore } from '../table-context';
 
@@ -32,9 +32,6 @@ function UnitPicture({ unit }: { unit: Pick<Unit, 'length' | 'width' | 'colour'>
     </svg>
   );
 }
-
-const sizeRefused = (display: Display) => (mm: number) =>
-  mm <= 0 ? 'Must be more than 0.' : lengthWithin(display, 0, GREATEST_UNIT_MM)(mm);
 
 export function UnitPanel() {
   const table = useTableStore();
@@ -189,7 +186,7 @@ function UnitFields({
             label={{ length: 'Length', width: 'Width', thickness: 'Thickness' }[side]}
             mm={unit[side]}
             display={display}
-            refuse={sizeRefused(display)}
+            refuse={sizeWithin(display, GREATEST_UNIT_MM)}
             onLength={(mm) => {
               const next = unitChanged(document, unit.id, { [side]: mm }).document.units.find(
                 (other) => other.id === unit.id,

@@ -1,7 +1,7 @@
 import { useEffect, useRef } from 'react';
 import type { Display } from '@/paving/length';
 import { formatLength } from '@/paving/length';
-import { tapeName, type Survey } from '@/paving/survey/survey';
+import { GREATEST_TAPE_MM, tapeName, type Survey } from '@/paving/survey/survey';
 import type { SurveyAnswer } from '@/paving/survey/survey-answer';
 import {
   sideBent,
@@ -11,6 +11,7 @@ import {
   tapeTakenAway,
 } from '@/paving/survey/survey-edits';
 import { LengthField } from '../../ui/LengthField';
+import { sizeWithin } from '../field-limits';
 
 interface Props {
   readonly survey: Survey;
@@ -25,12 +26,6 @@ interface Props {
   readonly onOpen: (index: number | null) => void;
   readonly onSurvey: (survey: Survey) => void;
 }
-
-/** Longest tape that can be typed, mm. */
-const GREATEST_MM = 200_000;
-
-export const tapeRefused = (mm: number): string | null =>
-  mm <= 0 || mm > GREATEST_MM ? 'More than nothing, and up to 200 m.' : null;
 
 /** What the tape is off, as it is read: + where it reads too long. */
 function Off({
@@ -102,7 +97,7 @@ export function TapeRow({
             hideLabel
             mm={tape.length ?? null}
             display={display}
-            refuse={tapeRefused}
+            refuse={sizeWithin(display, GREATEST_TAPE_MM)}
             onLength={(mm) => onSurvey(tapeReadAs(survey, index, mm))}
           />
         </div>
@@ -118,7 +113,7 @@ export function TapeRow({
               mm={rise ?? 0}
               display={display}
               refuse={(mm) =>
-                Math.abs(mm) > GREATEST_MM ? 'That rise is too great for this side.' : null
+                Math.abs(mm) > GREATEST_TAPE_MM ? 'That rise is too great for this side.' : null
               }
               onLength={(mm) => onSurvey(sideBent(survey, side.ring, side.edge, mm))}
             />
