@@ -116,7 +116,7 @@ export const pickChoices = async (
     );
     if (wrong >= 0) {
       const message =
-        'Only a version of this project that is shared and not superseded can be put before the client, and once';
+        'Only a version of this project that is shared and not superseded can be put before the client, each only once';
       return invalid(message, [{ path: ['versionIds', wrong], message }]);
     }
     await takeBack(tx, actor.firmId, projectId);

@@ -17,7 +17,7 @@ export function TypedPrice({ order, currency }: { order: OrderLine; currency: st
           const parsed = parseMoney(text, currency);
           return parsed.ok ? { ok: true, value: parsed.minor } : parsed;
         }}
-        refuse={(minor) => (minor < 0 ? 'A price is nothing or more.' : null)}
+        refuse={(minor) => (minor < 0 ? 'A price cannot be less than 0.' : null)}
         onValue={(costMinor) =>
           setting.mutate({
             orderId,
