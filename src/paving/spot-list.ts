@@ -1,20 +1,16 @@
-import Papa from 'papaparse';
-import { formatLength, MM_PER_FOOT, MM_PER_INCH, parseLength, type Display } from './length';
+import {
+  cellLength,
+  cellLines,
+  columnOf,
+  PLACE_HEADINGS,
+  roundedMm,
+  type BareUnit,
+} from './cell-list';
+import { formatLength, type Display } from './length';
 import { GREATEST_LEVEL_MM, GREATEST_SPOTS, spotClashes, type Spot } from './levels';
 
 /** Spots as text: a list pasted from a sheet or a survey, a line each. */
 
-/** What a number without a unit means in the list. */
-export type BareUnit = 'mm' | 'm' | 'in' | 'ft';
-
-const MM_PER: Readonly<Record<BareUnit, number>> = {
-  mm: 1,
-  m: 1000,
-  in: MM_PER_INCH,
-  ft: MM_PER_FOOT,
-};
-
-/** How a pasted list of spots is to be read. */
 export interface SpotListOptions {
   readonly display: Display;
   readonly bare: BareUnit;
@@ -50,44 +46,15 @@ const WORDS: Readonly<Record<Column, string>> = {
 };
 
 const HEADINGS: Readonly<Record<Column, readonly string[]>> = {
-  name: ['name', 'spot', 'point', 'id', 'no', 'nr', '#', 'label'],
-  x: ['x', 'across', 'east', 'easting', 'e'],
-  y: ['y', 'up', 'north', 'northing', 'n'],
+  ...PLACE_HEADINGS,
   level: ['level', 'z', 'height', 'elevation', 'h', 'rl'],
 };
-
-const columnOf = (heading: string): Column | null => {
-  const bare = heading
-    .toLowerCase()
-    .replace(/\(.*\)|,.*$/g, '')
-    .trim();
-  const found = Object.entries(HEADINGS).find(([, names]) => names.includes(bare));
-  return found ? (found[0] as Column) : null;
-};
-
-/** A number alone, its decimals after a point or a comma. */
-const BARE_NUMBER = /^[-−+]?\s*(\d+([.,]\d*)?|[.,]\d+)$/;
-
-function cellLength(text: string, { display, bare }: SpotListOptions): number | null {
-  const cell = text.trim();
-  if (BARE_NUMBER.test(cell)) {
-    const value = Number(cell.replace(/\s/g, '').replace('−', '-').replace(',', '.'));
-    return value * MM_PER[bare];
-  }
-  const parsed = parseLength(cell, display);
-  return parsed.ok ? parsed.mm : null;
-}
-
-/** A grid finer than a tape reads, mm: what a survey in metres loses in floating point comes back whole. */
-const GRID_MM = 0.001;
-const onGrid = (mm: number) => Math.round(mm / GRID_MM) * GRID_MM;
-const rounded = (mm: number) => Number(onGrid(mm).toFixed(3));
 
 /** The columns by a header, or in the usual order: name where there are four, then across, up, level. */
 function columnsOf(
   first: readonly string[],
 ): { readonly columns: readonly Column[]; readonly header: boolean } | SpotListProblem['message'] {
-  const named = first.map(columnOf);
+  const named = first.map((heading) => columnOf(HEADINGS, heading));
   // A header is a line of words; a line with any number in it is a spot.
   if (named.some(Boolean) && !first.some((cell) => /\d/.test(cell))) {
     const missing = (['x', 'y', 'level'] as const).filter((column) => !named.includes(column));
@@ -105,13 +72,7 @@ function columnsOf(
  * trade types them; a bare number is in `bare`. Every line that cannot be used is named with its reason.
  */
 export function parseSpotList(text: string, options: SpotListOptions): ParsedSpotList {
-  const bare = text.replace(/^\uFEFF/, '').replace(/\s+$/, '');
-  // Where cells are parted by tabs or semicolons, commas are decimal.
-  const delimiter = ['\t', ';'].find((mark) => bare.includes(mark)) ?? ',';
-  const parsed = Papa.parse<string[]>(bare, { delimiter });
-  const lines = parsed.data
-    .map((cells, n) => ({ line: n + 1, cells: cells.map((cell) => cell.trim()) }))
-    .filter(({ cells }) => cells.some((cell) => cell !== ''));
+  const lines = cellLines(text);
   if (lines.length === 0) {
     return {
       ok: false,
@@ -175,8 +136,8 @@ export function parseSpotList(text: string, options: SpotListOptions): ParsedSpo
     const name = cell('name').slice(0, 40);
     spots.push({
       ...(name ? { name } : {}),
-      at: [rounded(x!), rounded(y!)],
-      level: rounded(above),
+      at: [roundedMm(x!), roundedMm(y!)],
+      level: roundedMm(above),
     });
     from.push(line);
   }

@@ -1,7 +1,8 @@
 import { useState } from 'react';
 import { levelsChanged } from '@/paving/level-edits';
 import { documentLevels, GREATEST_SPOTS, spotClashes } from '@/paving/levels';
-import { parseSpotList, type BareUnit, type SpotListProblem } from '@/paving/spot-list';
+import type { BareUnit } from '@/paving/cell-list';
+import { parseSpotList, type SpotListProblem } from '@/paving/spot-list';
 import { Dialog } from '../../ui/Dialog';
 import { LengthField } from '../../ui/LengthField';
 import { Segmented } from '../../ui/Segmented';

@@ -23,6 +23,7 @@ import { Segmented } from '../../ui/Segmented';
 import { coordinateRefused, edgeRefused, gapRefused } from '../field-limits';
 import { FloorProblems } from '../FloorFigures';
 import { groundKeptInView } from '../FloorStage';
+import { GroundFileDialog } from '../ground-file/GroundFileDialog';
 import { SurveyDialog } from '../survey/SurveyDialog';
 import {
   cornerAdded,
@@ -242,7 +243,7 @@ export function GroundPanel() {
   const pick = useTable((state) => state.pick);
   const drawing = useTable((state) => state.drawing);
   const snap = useTable((state) => state.snap);
-  const [taping, setTaping] = useState(false);
+  const [asking, setAsking] = useState<'tapes' | 'file' | null>(null);
   const { document } = floor;
   if (drawing) return <DrawingPanel />;
   const { perimeter, keepOuts } = document.ground;
@@ -261,11 +262,15 @@ export function GroundPanel() {
         <button type="button" className="button" onClick={() => drawKeepOut(table)}>
           Add keep-out
         </button>
-        <button type="button" className="button col-span-2" onClick={() => setTaping(true)}>
+        <button type="button" className="button col-span-2" onClick={() => setAsking('tapes')}>
           {document.survey ? 'Go on with the tape survey' : 'Enter a tape survey'}
         </button>
+        <button type="button" className="button col-span-2" onClick={() => setAsking('file')}>
+          Open the edge from a file
+        </button>
       </div>
-      <SurveyDialog open={taping} onClose={() => setTaping(false)} />
+      <SurveyDialog open={asking === 'tapes'} onClose={() => setAsking(null)} />
+      <GroundFileDialog open={asking === 'file'} onClose={() => setAsking(null)} />
       {pick?.kind === 'vertex' && <PickedVertex pick={pick} />}
       <section aria-label="Perimeter">
         <div className="flex items-baseline justify-between border-b border-graphite pb-1">

@@ -1,6 +1,7 @@
 import type { Point } from '@/geometry/point';
 import { ringStarts, surveyPointName, tapeName, type Survey } from '@/paving/survey/survey';
 import type { SurveyAnswer } from '@/paving/survey/survey-answer';
+import { planPath, planView, PLAN_WIDE } from '../plan-view';
 import { ringOutline } from '../ring-outline';
 
 interface Props {
@@ -12,38 +13,9 @@ interface Props {
   readonly picked: number | null;
 }
 
-/** Width of the picture in its own units; letters and lines are sized in these. */
-const WIDE = 440;
-const MARGIN = 34;
-const HEIGHT = { least: 150, most: 330 };
-
-/** Ground to picture: y down, the whole survey in view. */
-function viewOf(places: readonly Point[]) {
-  const xs = places.map(([x]) => x);
-  const ys = places.map(([, y]) => y);
-  const [left, right, low, high] = [
-    Math.min(...xs),
-    Math.max(...xs),
-    Math.min(...ys),
-    Math.max(...ys),
-  ];
-  const scale = Math.min(
-    (WIDE - 2 * MARGIN) / Math.max(right - left, 1),
-    (HEIGHT.most - 2 * MARGIN) / Math.max(high - low, 1),
-  );
-  const height = Math.max(HEIGHT.least, (high - low) * scale + 2 * MARGIN);
-  const offX = (WIDE - (right - left) * scale) / 2 - left * scale;
-  const offY = (height - (high - low) * scale) / 2 + high * scale;
-  return { height, at: ([x, y]: Point): Point => [offX + x * scale, offY - y * scale] };
-}
-
-const pathOf = (points: readonly Point[], closed: boolean): string =>
-  points.map(([x, y], n) => `${n === 0 ? 'M' : 'L'}${x.toFixed(1)} ${y.toFixed(1)}`).join(' ') +
-  (closed ? ' Z' : '');
-
 /** The points of a survey as the tapes have them, with the tapes between. */
 export function SurveyPicture({ survey, answer, places, picked }: Props) {
-  const { height, at } = viewOf(places);
+  const { height, at } = planView(places);
   const starts = ringStarts(survey);
   const doubted = new Set(answer.doubts.flatMap(({ tapes }) => tapes));
   const middle = at([
@@ -61,11 +33,11 @@ export function SurveyPicture({ survey, answer, places, picked }: Props) {
         return rise === 0 || chord === 0 ? [x, y] : [x, y, (2 * rise) / chord];
       }),
     );
-    return { fixed, path: pathOf(outline.map(at), true) };
+    return { fixed, path: planPath(outline.map(at)) };
   });
   return (
     <svg
-      viewBox={`0 0 ${WIDE} ${height.toFixed(0)}`}
+      viewBox={`0 0 ${PLAN_WIDE} ${height.toFixed(0)}`}
       className="block w-full border border-stone-300 bg-stone-50"
       role="img"
       aria-label={`The ground by its tapes: ${rings.every(({ fixed }) => fixed) ? 'every corner is fixed' : 'some corners are not fixed yet and stand as sketched'}`}
@@ -147,14 +119,10 @@ export function SurveyPicture({ survey, answer, places, picked }: Props) {
 /** Another shape, small, to be pressed. */
 export function ShapeSketch({ places, corners }: { places: readonly Point[]; corners: number }) {
   const ring = places.slice(0, corners);
-  const { height, at } = viewOf(ring);
+  const { height, at } = planView(ring);
   return (
-    <svg viewBox={`0 0 ${WIDE} ${height.toFixed(0)}`} className="h-16 w-full" aria-hidden>
-      <path
-        d={pathOf(ring.map(at), true)}
-        className="fill-stone-100 stroke-graphite"
-        strokeWidth={6}
-      />
+    <svg viewBox={`0 0 ${PLAN_WIDE} ${height.toFixed(0)}`} className="h-16 w-full" aria-hidden>
+      <path d={planPath(ring.map(at))} className="fill-stone-100 stroke-graphite" strokeWidth={6} />
     </svg>
   );
 }

@@ -1,0 +1,71 @@
+import type { Point } from '@/geometry/point';
+import { ringHolds } from '@/geometry/ring';
+import { groundRing } from '../ground';
+import type { KeepOut, LayoutDocument, Vertex } from '../layout-document';
+import { ringAnticlockwise, vertexRingArea } from '../ring-validation';
+import { dxfFile } from './dxf-file';
+import { geojsonFile } from './geojson-file';
+import type { GroundFile, GroundFileOptions, Outline } from './outline';
+import { pointsFile } from './points-file';
+
+/** What kind of file it is, by its name or else by how it begins. */
+export function groundFileKind(name: string, text: string): 'dxf' | 'geojson' | 'points' {
+  const ending = name.toLowerCase().split('.').pop() ?? '';
+  if (ending === 'dxf') return 'dxf';
+  if (ending === 'geojson' || ending === 'json') return 'geojson';
+  if (/^\s*(999[\s\S]{0,200}?)?0\r?\n\s*SECTION/.test(text)) return 'dxf';
+  return /^\s*[{[]/.test(text) ? 'geojson' : 'points';
+}
+
+/** The outlines of a file, largest first. */
+export function groundFile(name: string, text: string, options: GroundFileOptions): GroundFile {
+  const kind = groundFileKind(name, text);
+  const found =
+    kind === 'dxf'
+      ? dxfFile(text, options)
+      : kind === 'geojson'
+        ? geojsonFile(text)
+        : pointsFile(text, options);
+  if (!found.ok) return found;
+  const size = ({ ring }: Outline) => Math.abs(vertexRingArea(ring));
+  const outlines = [...found.outlines].sort((one, other) => size(other) - size(one));
+  return { ...found, outlines };
+}
+
+/** The points of an outline, arcs flattened, mm. */
+export const outlineChords = ({ ring }: Outline): readonly Point[] =>
+  groundRing(ringAnticlockwise(ring), 0, null).outline;
+
+/** Outlines that lie in another: what may be its keep-outs. */
+export const outlinesWithin = (outlines: readonly Outline[], edge: Outline): readonly Outline[] => {
+  const within = outlineChords(edge);
+  return outlines.filter(
+    (outline) =>
+      outline !== edge && outlineChords(outline).every((point) => ringHolds(within, point)),
+  );
+};
+
+/** A ground of an outline and its keep-outs, moved so that it begins at nought across and up. */
+export function outlineGround(
+  edge: Outline,
+  keepOuts: readonly Outline[],
+): LayoutDocument['ground'] {
+  const left = Math.min(...edge.ring.map(([x]) => x));
+  const low = Math.min(...edge.ring.map(([, y]) => y));
+  const moved = (ring: readonly Vertex[]): Vertex[] =>
+    ringAnticlockwise(
+      ring.map(([x, y, bulge]): Vertex => {
+        const at = (value: number) => Number(value.toFixed(3));
+        return bulge === undefined
+          ? [at(x - left), at(y - low)]
+          : [at(x - left), at(y - low), bulge];
+      }),
+    );
+  return {
+    perimeter: moved(edge.ring),
+    keepOuts: keepOuts.map(({ name, ring }, n): KeepOut => ({
+      name: name.trim().slice(0, 80) || `Keep-out ${n + 1}`,
+      ring: moved(ring),
+    })),
+  };
+}
