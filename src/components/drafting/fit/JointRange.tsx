@@ -8,6 +8,7 @@ import { lengthWithin } from '../field-limits';
 import { useTable, useTableStore } from '../table-context';
 import { newHand, dismissed, type Hand } from './fit-hand';
 import { fitKey } from './fit-service';
+import { jointsTold, jointText } from './joints-told';
 
 /** Joints that the trade allows for blocks: 2 to 5 mm, 1/16 to 3/16 in (construction tolerances for interlocking pavements, ICPI). */
 const FIRST_RANGE: Readonly<Record<Display, SoughtRange>> = {
@@ -18,25 +19,6 @@ const FIRST_RANGE: Readonly<Record<Display, SoughtRange>> = {
 /** Bounds of what may be typed: wider than this is no joint, finer steps than that nobody can lay. */
 const GREATEST_JOINT_MM = 500;
 const LEAST_STEP_MM = 0.01;
-
-/** A joint to the hundredth of a millimetre, in feet and inches too: a sixteenth too much, and the row does not close. */
-const jointText = (mm: number, display: Display): string => {
-  const metric = formatLength(mm, 'metric', { decimals: 2 });
-  return display === 'metric' ? metric : `${formatLength(mm, display)} (${metric})`;
-};
-
-/** What a range of joints comes to, in a sentence. */
-function jointsTold(found: readonly JointFit[], length: (mm: number) => string): string {
-  const counts = found.map((joint) => joint.wholeUnits);
-  const most = Math.max(...counts);
-  if (Math.min(...counts) === most)
-    return `Every joint of this range lays ${formatCount(most)} whole, so none of them lets one more row close.`;
-  const widest = found.filter((joint) => joint.wholeUnits === most).at(-1)!;
-  const wider = counts.slice(found.indexOf(widest) + 1);
-  if (wider.length === 0)
-    return `The most, ${formatCount(most)} whole, lie with joints of ${length(widest.joint)}.`;
-  return `The most, ${formatCount(most)} whole, still close with joints of ${length(widest.joint)}; wider ones lay ${formatCount(Math.max(...wider))} or fewer.`;
-}
 
 /** Seeks the joint, within a range, at which one more row closes or the field ends evenly. */
 export function JointRange() {
@@ -128,7 +110,7 @@ export function JointRange() {
       )}
       {found && found.length > 0 && (
         <p className="mt-2 text-sm" data-testid="joints-told">
-          {jointsTold(found, (mm) => jointText(mm, display))}
+          {jointsTold(found, display)}
         </p>
       )}
       {found && (
