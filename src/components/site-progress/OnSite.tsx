@@ -84,7 +84,7 @@ function Standing({ version, role }: { version: VersionDetail; role: Role }) {
                 </details>
               )}
               <p className="mt-2">
-                <a className="button max-md:min-h-[44px]" href={`/site/${version.id}`}>
+                <a className="button" href={`/site/${version.id}`}>
                   Open as on the phone
                 </a>
               </p>

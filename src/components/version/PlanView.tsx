@@ -64,7 +64,7 @@ export default function PlanView({ version, stamp }: Pick<SheetPack, 'version' |
           </label>
           <select
             id="paper"
-            className="field w-60 max-md:min-h-[44px]"
+            className="field w-60"
             value={choice}
             onChange={(event) => setChoice(event.target.value as PaperChoice)}
           >
@@ -85,25 +85,21 @@ export default function PlanView({ version, stamp }: Pick<SheetPack, 'version' |
         <div className="flex flex-wrap gap-2 md:ml-auto">
           <button
             type="button"
-            className="button max-md:min-h-[44px]"
+            className="button"
             aria-pressed={trueSize}
             onClick={() => setTrueSize(!trueSize)}
           >
             True size
           </button>
-          <button type="button" className="button max-md:min-h-[44px]" onClick={takeSvg}>
+          <button type="button" className="button" onClick={takeSvg}>
             Download SVG
           </button>
-          <button
-            type="button"
-            className="button max-md:min-h-[44px]"
-            onClick={() => window.print()}
-          >
+          <button type="button" className="button" onClick={() => window.print()}>
             Print
           </button>
           <button
             type="button"
-            className="button button-primary max-md:min-h-[44px]"
+            className="button button-primary"
             disabled={making.kind === 'making'}
             onClick={() => void takePdf()}
           >
