@@ -34,6 +34,32 @@ export function segment(ctx: CanvasRenderingContext2D, a: Point, b: Point) {
   ctx.stroke();
 }
 
+/** How much of the page's colour stands either side of a live line, px. */
+const CASING_PX = 1.5;
+
+/**
+ * Strokes the path as a live line, cased in the page's colour: pink alone is lost on a pale floor at dusk and on a dark one by
+ * day; on the page itself the casing is not seen.
+ */
+export function strokeLive({ ctx, colours }: Ink, width: number) {
+  const dash = ctx.getLineDash();
+  ctx.setLineDash([]);
+  ctx.strokeStyle = colours.stone50;
+  ctx.lineWidth = width + 2 * CASING_PX;
+  ctx.stroke();
+  ctx.setLineDash(dash);
+  ctx.strokeStyle = colours.line;
+  ctx.lineWidth = width;
+  ctx.stroke();
+}
+
+export function liveSegment(ink: Ink, a: Point, b: Point, width: number) {
+  ink.ctx.beginPath();
+  ink.ctx.moveTo(a[0], a[1]);
+  ink.ctx.lineTo(b[0], b[1]);
+  strokeLive(ink, width);
+}
+
 export function dot(
   ctx: CanvasRenderingContext2D,
   [x, y]: Point,

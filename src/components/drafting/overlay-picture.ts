@@ -17,7 +17,17 @@ import { paintLetters } from './corner-letters';
 import { dimensionLines } from './dimension-lines';
 import type { Floor } from './floor';
 import { paintLevelMarks, paintLevels } from './levels-picture';
-import { boxedText, dot, FONT, path, screen, segment, type Ink } from './overlay-ink';
+import {
+  boxedText,
+  dot,
+  FONT,
+  liveSegment,
+  path,
+  screen,
+  segment,
+  strokeLive,
+  type Ink,
+} from './overlay-ink';
 import { paintSetOut } from './set-out/set-out-picture';
 import { edgeOutline, ringOutline } from './ring-outline';
 import { shownDocument, type Pick, type TableState } from './table-store';
@@ -133,8 +143,7 @@ function paintPick(ink: Ink, pick: Pick, strong: boolean) {
   if (pick.kind === 'edge') {
     if (pick.edge >= ring.length) return;
     path(ink, edgeOutline(ring, pick.edge), false);
-    ctx.lineWidth = strong ? 3.2 : 2;
-    ctx.stroke();
+    strokeLive(ink, strong ? 3.2 : 2);
     if (strong) {
       const [x, y] = screen(ink, edgeMiddle(ring, pick.edge));
       ctx.beginPath();
@@ -172,10 +181,8 @@ function paintDrawing(ink: Ink, state: TableState) {
   if (!drawing) return;
   const { ctx, colours } = ink;
   const points = drawing.next ? [...drawing.corners, drawing.next] : drawing.corners;
-  ctx.strokeStyle = colours.line;
-  ctx.lineWidth = 2.4;
   path(ink, points, false);
-  ctx.stroke();
+  strokeLive(ink, 2.4);
   if (points.length > 2 && drawing.next) {
     ctx.setLineDash([4, 5]);
     ctx.lineWidth = 1;
@@ -263,12 +270,10 @@ function paintLeastGap(ink: Ink, floor: Floor) {
   const n = leastGap.unit;
   const motif = laying.motif[laying.laid.k[n]];
   path(ink, unitCorners(motif, laying.laid.x[n], laying.laid.y[n]), true);
-  ctx.strokeStyle = colours.line;
-  ctx.lineWidth = 1.8;
-  ctx.stroke();
+  strokeLive(ink, 1.8);
   const edgePoint = screen(ink, leastGap.edgePoint);
   const unitPoint = screen(ink, leastGap.unitPoint);
-  segment(ctx, unitPoint, edgePoint);
+  liveSegment(ink, unitPoint, edgePoint, 1.8);
   dot(ctx, edgePoint, 4, colours.line);
 
   const text = `goes first: ${formatLength(leastGap.gap, ink.document.display, { decimals: leastGap.gap < 10 ? 1 : 0 })}`;
@@ -309,9 +314,7 @@ function paintLit(ink: Ink, state: TableState, floor: Floor) {
     const inward: Point = [(-(b[1] - a[1]) / length) * side, ((b[0] - a[0]) / length) * side];
     const gap = gapAt(floor, lit.ring, lit.edge, lit.s);
     const to: Point = [at[0] + inward[0] * (gap ?? 0), at[1] + inward[1] * (gap ?? 0)];
-    ink.ctx.strokeStyle = ink.colours.line;
-    ink.ctx.lineWidth = 2;
-    segment(ink.ctx, screen(ink, at), screen(ink, to));
+    liveSegment(ink, screen(ink, at), screen(ink, to), 2);
     dot(ink.ctx, screen(ink, at), 4.5, ink.colours.line);
     if (gap !== null) {
       const [x, y] = screen(ink, to);
@@ -357,18 +360,14 @@ function paintChosenUnit(ink: Ink, state: TableState, floor: Floor) {
   const x = laying.origin[0] + i * a[0] + j * b[0] + entry.at[0] * cos - entry.at[1] * sin;
   const y = laying.origin[1] + i * a[1] + j * b[1] + entry.at[0] * sin + entry.at[1] * cos;
   path(ink, unitCorners(entry, x, y), true);
-  ink.ctx.strokeStyle = ink.colours.line;
-  ink.ctx.lineWidth = 2.6;
-  ink.ctx.stroke();
+  strokeLive(ink, 2.6);
 }
 
 function paintTurnHandle(ink: Ink, state: TableState) {
   const handle = turnHandle(state, ink.document);
   if (!handle) return;
   const { ctx, colours } = ink;
-  ctx.strokeStyle = colours.line;
-  ctx.lineWidth = 1.6;
-  segment(ctx, handle.pivot, handle.handle);
+  liveSegment(ink, handle.pivot, handle.handle, 1.6);
   dot(ctx, handle.pivot, 3.5, colours.line);
   dot(ctx, handle.handle, 8, colours.stone50, colours.line);
   dot(ctx, handle.handle, 2.5, colours.line);

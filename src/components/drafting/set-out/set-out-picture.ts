@@ -6,7 +6,16 @@ import { cornerLabel } from '@/paving/set-out/marks';
 import type { ControlPoint, Course, Datum, SetOut } from '@/paving/set-out/set-out';
 import { screenFromGround } from '../camera';
 import type { Floor } from '../floor';
-import { boxedText, dot, path, screen, segment, type Ink } from '../overlay-ink';
+import {
+  boxedText,
+  dot,
+  liveSegment,
+  path,
+  screen,
+  segment,
+  strokeLive,
+  type Ink,
+} from '../overlay-ink';
 import type { TableState } from '../table-store';
 
 /** Half the length of the arcs that are swung at a point, px. */
@@ -61,10 +70,8 @@ function paintStrings(ink: Ink, courses: readonly Course[]) {
 /** A string in hand: pink, each unit's edges ticked across it. */
 function paintCourse(ink: Ink, course: Course) {
   const { ctx, colours } = ink;
-  ctx.strokeStyle = colours.line;
-  ctx.lineWidth = 1.8;
   const [a, b] = [screen(ink, course.from), screen(ink, course.to)];
-  segment(ctx, a, b);
+  liveSegment(ink, a, b, 1.8);
   const length = Math.hypot(b[0] - a[0], b[1] - a[1]) || 1;
   const [ux, uy] = [(b[0] - a[0]) / length, (b[1] - a[1]) / length];
   ctx.lineWidth = 1.2;
@@ -81,9 +88,7 @@ function paintCourse(ink: Ink, course: Course) {
 function paintTape(ink: Ink, from: Point, at: Point, length: number, bold: boolean) {
   const { ctx, colours, document } = ink;
   const [a, b] = [screen(ink, from), screen(ink, at)];
-  ctx.strokeStyle = colours.line;
-  ctx.lineWidth = bold ? 2 : 1.4;
-  segment(ctx, a, b);
+  liveSegment(ink, a, b, bold ? 2 : 1.4);
   const radius = Math.hypot(b[0] - a[0], b[1] - a[1]);
   if (radius < 1) return;
   const angle = Math.atan2(b[1] - a[1], b[0] - a[0]);
@@ -117,11 +122,9 @@ function paintOffsets(ink: Ink, { datums }: SetOut, point: ControlPoint) {
     first[0] + ((second[0] - first[0]) * point.along) / length,
     first[1] + ((second[1] - first[1]) * point.along) / length,
   ];
-  ctx.strokeStyle = colours.line;
-  ctx.lineWidth = 2;
   const [a, b, c] = [screen(ink, first), screen(ink, foot), screen(ink, point.at)];
-  segment(ctx, a, b);
-  segment(ctx, b, c);
+  liveSegment(ink, a, b, 2);
+  liveSegment(ink, b, c, 2);
   const shown = (mm: number) => formatLength(Math.abs(mm), document.display, { decimals: 1 });
   const level = (p: Point, q: Point): number => {
     const angle = Math.atan2(q[1] - p[1], q[0] - p[0]);
@@ -155,9 +158,7 @@ function paintLive(ink: Ink, setOut: SetOut, point: ControlPoint, floor: Floor) 
     const { laid, motif } = floor.laying;
     const { unit } = setOut.firstUnit;
     path(ink, unitCorners(motif[laid.k[unit]], laid.x[unit], laid.y[unit]), true);
-    ctx.strokeStyle = colours.line;
-    ctx.lineWidth = 1.8;
-    ctx.stroke();
+    strokeLive(ink, 1.8);
   }
   const [x, y] = screen(ink, point.at);
   if (point.by === 'offsets') paintOffsets(ink, setOut, point);
@@ -210,9 +211,7 @@ function paintChoosing(ink: Ink, state: TableState) {
         ? vertexPoint(documentRing(document, hover.ring)[hover.vertex])
         : null;
     if (to) {
-      ink.ctx.strokeStyle = colours.line;
-      ink.ctx.lineWidth = 1.6;
-      segment(ink.ctx, screen(ink, at), screen(ink, to));
+      liveSegment(ink, screen(ink, at), screen(ink, to), 1.6);
     }
   }
   if (hover?.kind === 'vertex') {
