@@ -133,7 +133,7 @@ function creepOptions(task: 'creep' | 'refit', options: readonly string[]): Cree
       if (rest.length > 0 || !(least >= 0 && greatest >= least))
         throw new Refusal(`"${value}" is not a range of joints; write FROM:TO in mm, such as 2:5`);
       asked = { ...asked, joints: { least, greatest } };
-    } else if (task === 'refit' && option === '--laid') {
+    } else if (option === '--laid') {
       asked = { ...asked, laid: courseNumbers(value) };
     } else if (task === 'refit' && option === '--offset') {
       asked = { ...asked, offset: length() };
@@ -200,12 +200,20 @@ const tasks: Readonly<Record<string, Task>> = {
     },
   },
   creep: {
-    usage: 'creep FILE|- [--measure UNIT:SIDE:COUNT:TOTAL …] [--joints FROM:TO]',
+    usage: 'creep FILE|- [--measure UNIT:SIDE:COUNT:TOTAL …] [--laid 1-4] [--joints FROM:TO]',
     run: (document, options) => {
-      const { measures, joints } = creepOptions('creep', options);
+      const { measures, joints, laid } = creepOptions('creep', options);
       const problem = measureProblem(document, measures);
       if (problem) throw new Refusal(problem);
-      return creep(layFloor(document), { measures, joints });
+      const laying = layFloor(document);
+      const plan = setOut(laying);
+      const { length } = plan.courses;
+      const unknown = laid.find((course) => course < 1 || course > length);
+      if (unknown !== undefined)
+        throw new Refusal(
+          `there is no course ${unknown}; ${length === 0 ? 'no unit is laid on this floor' : `they are numbered from 1 to ${length}`}`,
+        );
+      return creep(laying, { measures, joints, laid }, plan);
     },
   },
   refit: {
@@ -262,6 +270,12 @@ async function main([name, file, ...options]: readonly string[]): Promise<void> 
   if (!parsed.ok) throw new Refusal(parsed.problems.map(problemLine).join('\n'));
   process.stdout.write(`${JSON.stringify(task.run(parsed.document, options), null, 2)}\n`);
 }
+
+// Whoever reads the answer may have enough of it before its end, as `head` does.
+process.stdout.on('error', (error: NodeJS.ErrnoException) => {
+  if (error.code !== 'EPIPE') throw error;
+  process.exit();
+});
 
 main(process.argv.slice(2)).catch((error: unknown) => {
   if (!(error instanceof Refusal)) throw error;

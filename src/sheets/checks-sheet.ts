@@ -2,12 +2,10 @@ import type { Check } from '@/paving/set-out/set-out-types';
 import type { Display } from '@/paving/length';
 import { figuredText } from '@/paving/figured-words';
 import { figureText, lengthText } from './figures';
-import type { PaperName } from './paper';
 import type { TableCell, TableColumn } from './ruled-table';
 import { ruledTable } from './ruled-table';
 import type { SetOutInput } from './set-out-input';
-import type { SheetDraft } from './sheet-draft';
-import { tableDrafts } from './table-sheet';
+import type { TableContent } from './table-sheet';
 import { textRows } from './panel';
 
 const COLUMNS: readonly TableColumn[] = [
@@ -22,28 +20,24 @@ const COLUMNS: readonly TableColumn[] = [
 ];
 
 /** Checks: what to measure, what it should read, and room for what it reads. */
-export function checksDrafts(input: SetOutInput, paper: PaperName): readonly SheetDraft[] {
+export function checksTable(input: SetOutInput): TableContent {
   const { setOut, laying } = input;
   const { display } = laying.document;
-  return tableDrafts(
-    {
-      kind: 'checks',
-      type: 'Checks',
-      title: `Checks${display === 'metric' ? ', in mm' : ''}`,
-      sections: (width) => [
-        ruledTable(COLUMNS, checkCells(setOut.checks, display), width),
-        {
-          header: null,
-          rows: textRows(
-            'A reading out of its limits: stop, find out why, and ask the designer before you go on. Checked by, and date:',
-            width,
-          ),
-        },
-      ],
-    },
-    input,
-    paper,
-  );
+  return {
+    kind: 'checks',
+    type: 'Checks',
+    title: `Checks${display === 'metric' ? ', in mm' : ''}`,
+    sections: (width) => [
+      ruledTable(COLUMNS, checkCells(setOut.checks, display), width),
+      {
+        header: null,
+        rows: textRows(
+          'A reading out of its limits: stop, find out why, and ask the designer before you go on. Checked by, and date:',
+          width,
+        ),
+      },
+    ],
+  };
 }
 
 function checkCells(checks: readonly Check[], display: Display): readonly (readonly TableCell[])[] {

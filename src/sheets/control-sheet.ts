@@ -1,7 +1,7 @@
 import type { ControlPoint, TapeCross } from '@/paving/set-out/set-out-types';
 import type { DrawCommand, PaperBox } from './drawing';
 import { PENS, boxRing } from './drawing';
-import type { FiguredContent } from './figured-sheet';
+import type { FiguredContent, PanelRest } from './figured-sheet';
 import { figuredAndTabled } from './figured-sheet';
 import { figuredText } from '@/paving/figured-words';
 import { TAPE_READING_MM } from '@/paving/set-out/tape-cross';
@@ -22,8 +22,12 @@ import { baselineName } from './set-out-input';
 import type { SheetDraft } from './sheet-draft';
 import type { TableContent } from './table-sheet';
 
-/** Control: where the tapes hook on and every point by two tapes, by offsets and by coordinates. */
-export function controlDrafts(input: SetOutInput, paper: PaperName): readonly SheetDraft[] {
+/** Control: where the tapes hook on and every point by two tapes, by offsets and by coordinates; over the table what the sheet `before` had no room for. */
+export function controlDrafts(
+  input: SetOutInput,
+  paper: PaperName,
+  before: PanelRest | null,
+): readonly SheetDraft[] {
   const { laying, setOut } = input;
   const content: FiguredContent = {
     bounds: pointsBounds(laying.ground.rings[0].edges.flatMap((edge) => edge.chords)),
@@ -40,7 +44,7 @@ export function controlDrafts(input: SetOutInput, paper: PaperName): readonly Sh
     title: `Control points${laying.document.display === 'metric' ? ', in mm' : ''}`,
     sections: (width) => [controlTable(input, width)],
   };
-  return figuredAndTabled(content, table, 'Control points', input, paper);
+  return figuredAndTabled(content, table, 'Control points', input, paper, before);
 }
 
 function controlRows(input: SetOutInput, scale: number, width: number): readonly PanelRow[] {

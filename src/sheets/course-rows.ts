@@ -15,11 +15,23 @@ const MOST_BOXED = 1500;
 /** Whether a floor of so many units has its courses in compact lists. */
 export const isCompact = (units: number): boolean => units > MOST_BOXED;
 
+/** A box to tick with the space after it, and between columns, mm. */
+const BOX = 4.6;
+const SPACE = 3;
+
 export interface CourseWords {
   readonly display: Display;
   readonly units: readonly Unit[];
   /** Lengths in compact columns, without a box for each unit. */
   readonly compact: boolean;
+  /** What is said once for all courses, and not again of each. */
+  readonly common: CommonWords;
+}
+
+/** From near to far edge of every unit, and from unit to unit, as printed; null where courses differ. */
+export interface CommonWords {
+  readonly size: string | null;
+  readonly steps: string | null;
 }
 
 const AFTER: Readonly<Record<CourseRun['after'], string>> = {
@@ -71,10 +83,12 @@ export function courseRows(
       : `string ${course.number}a to ${course.number}b, ${lengthText(course.length, display)} long`,
     ...apartWords(group, display),
     `first unit ${lengthText(course.startGap, display)} from its start`,
-    ...(steps === null ? [] : [stepWords(steps, display)]),
-    ...(size === null || size === 0
+    ...(steps === null || stepWords(steps, display) === words.common.steps
       ? []
-      : [`each unit ${lengthText(size, display, 1)} from its near edge to its far edge`]),
+      : [`then ${stepWords(steps, display)}`]),
+    ...(size === null || size < 0.5 || sizeWords(size, display) === words.common.size
+      ? []
+      : [sizeWords(size, display)]),
     `last unit ${lengthText(course.endGap, display)} from its end`,
   ].join('; ');
   const outside = course.outside.map(
@@ -88,8 +102,13 @@ export function courseRows(
     course.runs.slice(0, n).reduce((sum, { units }) => sum + units, 0),
   );
   return [
-    ...headRows(`${many ? 'Courses' : 'Course'} ${numbersWords(numbers)}`, `${head}.`, width),
-    ...(compact ? laidRows(numbers, width) : []),
+    ...headRows(
+      `${many ? 'Courses' : 'Course'} ${numbersWords(numbers)}`,
+      `${head}.`,
+      width,
+      compact && !many,
+    ),
+    ...(compact && many ? laidRows(numbers, width) : []),
     ...(outside.length === 0 ? [] : kept(textRows(`On the string, ${outside.join('; ')}.`, width))),
     ...course.runs.flatMap((run, n) => [
       ...(n === 0 || AFTER[run.after] === ''
@@ -127,6 +146,31 @@ function apartWords(group: CourseGroup, display: Display): readonly string[] {
       );
 }
 
+const sizeWords = (size: number, display: Display): string =>
+  `each unit ${lengthText(size, display, 1)} from its near edge to its far edge`;
+
+/** What may be said of all courses at once. */
+export function commonWords(courses: readonly Course[], display: Display): CommonWords {
+  const one = (all: readonly (string | null)[]) =>
+    all.length > 0 && all.every((words) => words === all[0]) ? all[0] : null;
+  // A course of one unit has no step to say.
+  const stepped = courses.filter(({ units }) => units > 1);
+  return {
+    size: one(
+      courses.map((course) => {
+        const size = alikeSize(course);
+        return size === null || size < 0.5 ? null : sizeWords(size, display);
+      }),
+    ),
+    steps: one(
+      stepped.map((course) => {
+        const steps = courseSteps(course);
+        return steps?.length === 1 ? stepWords(steps, display) : null;
+      }),
+    ),
+  };
+}
+
 /** From near to far edge where that is the same of every unit of the course, mm; 0 where strings touch corners. */
 function alikeSize({ runs }: Course): number | null {
   const sizes = runs.flatMap(({ ticks }) => ticks.map(([near, far]) => far - near));
@@ -135,8 +179,8 @@ function alikeSize({ runs }: Course): number | null {
 
 const stepWords = (steps: readonly number[], display: Display): string =>
   steps.length === 1
-    ? `then a unit every ${lengthText(steps[0], display, 1)}`
-    : `then units in steps of ${steps.map((step) => lengthText(step, display, 1)).join(', ')} in turn`;
+    ? `a unit every ${lengthText(steps[0], display, 1)}`
+    : `units in steps of ${steps.map((step) => lengthText(step, display, 1)).join(', ')} in turn`;
 
 const kept = (rows: readonly PanelRow[]): readonly PanelRow[] =>
   rows.map((row) => ({ ...row, keepsNext: 'needed' as const }));
@@ -150,9 +194,15 @@ function kinds({ byUnit }: Course, { units }: CourseWords): string {
 }
 
 /** The course's name before what is said of it; a name too long for that has lines of its own. */
-function headRows(title: string, words: string, width: number): readonly PanelRow[] {
-  const indent = 24;
-  const beside = textWidth(title, LETTERING.small, 700) <= indent - 2;
+function headRows(
+  title: string,
+  words: string,
+  width: number,
+  boxed: boolean,
+): readonly PanelRow[] {
+  const box = boxed ? BOX : 0;
+  const indent = 24 + box;
+  const beside = box + textWidth(title, LETTERING.small, 700) <= indent - 2;
   const titles = beside ? [title] : textLines(title, width, LETTERING.small, 700);
   const lines = textLines(words, beside ? width - indent : width, LETTERING.small);
   const above = beside ? 0 : titles.length;
@@ -163,7 +213,8 @@ function headRows(title: string, words: string, width: number): readonly PanelRo
       draw: ([x, y], _width, frame) => {
         const line = (n: number) => y + 0.65 + LETTERING.small + n * LINE_PITCH;
         return [
-          ...titles.map((text, n) => panelText([x, line(n)], text, frame, { weight: 700 })),
+          ...(boxed ? [tickBox([x + 1.5, line(0) - 1.25])] : []),
+          ...titles.map((text, n) => panelText([x + box, line(n)], text, frame, { weight: 700 })),
           ...lines.map((text, n) =>
             panelText([beside ? x + indent : x, line(above + n)], text, frame),
           ),
@@ -172,9 +223,6 @@ function headRows(title: string, words: string, width: number): readonly PanelRo
     },
   ];
 }
-
-const BOX = 4.6;
-const SPACE = 3;
 
 /** Boxes to tick in columns of one width, with what stands beside each. */
 function boxRows(labels: readonly string[], width: number): readonly PanelRow[] {

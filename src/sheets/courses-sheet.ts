@@ -1,5 +1,5 @@
 import { coursesAlike } from './course-groups';
-import { courseRows, isCompact } from './course-rows';
+import { commonWords, courseRows, isCompact } from './course-rows';
 import type { FiguredContent } from './figured-sheet';
 import { figuredAndTabled } from './figured-sheet';
 import { formatCount } from '@/paving/count';
@@ -17,6 +17,8 @@ import { baselineName } from './set-out-input';
 import type { SheetDraft } from './sheet-draft';
 import type { TableContent } from './table-sheet';
 
+const ROOM: PanelRow = { height: 2, draw: () => [] };
+
 /** Courses: where their strings are, then each course with the running lengths of its units. None without units. */
 export function coursesDrafts(input: SetOutInput, paper: PaperName): readonly SheetDraft[] {
   const { laying, setOut } = input;
@@ -32,7 +34,9 @@ export function coursesDrafts(input: SetOutInput, paper: PaperName): readonly Sh
   };
   const { display, units } = laying.document;
   const compact = isCompact(laying.laid.count);
-  const words = { display, units, compact };
+  const common = compact ? commonWords(setOut.courses, display) : { size: null, steps: null };
+  const said = [common.steps, common.size].filter((words) => words !== null).join('; ');
+  const words = { display, units, compact, common };
   const groups = compact
     ? coursesAlike(setOut.courses, display)
     : setOut.courses.map((course) => [course]);
@@ -43,7 +47,10 @@ export function coursesDrafts(input: SetOutInput, paper: PaperName): readonly Sh
     sections: (width) => [
       {
         header: null,
-        rows: groups.flatMap((group) => courseRows(group, words, width)),
+        rows: [
+          ...(said === '' ? [] : [...textRows(`In every course ${said}.`, width), ROOM]),
+          ...groups.flatMap((group) => courseRows(group, words, width)),
+        ],
       },
     ],
   };

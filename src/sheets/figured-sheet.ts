@@ -9,9 +9,9 @@ import type { GroundBounds, PlanView } from './plan-view';
 import { viewCentred } from './plan-view';
 import { rowBand } from './row-band';
 import { scaleFitting } from './scales';
-import type { SheetDraft } from './sheet-draft';
+import type { SheetDraft, SheetKind } from './sheet-draft';
 import { footStrip, rule } from './sheet-draft';
-import { tableBox, tableDrafts, type TableContent } from './table-sheet';
+import { tableBox, tableDrafts, type TableContent, type TableLead } from './table-sheet';
 import { TITLE_STRIP_HEIGHT } from './title-strip';
 
 /** A drawing of the ground with a panel of figures beside it or below. */
@@ -209,7 +209,7 @@ export function panelsFlowed(
 }
 
 /** What is left of a panel, on as many sheets as it takes. */
-function panelsFurther(
+export function panelsFurther(
   left: readonly PanelRow[],
   width: number,
   paper: Paper,
@@ -228,10 +228,10 @@ function panelsFurther(
 }
 
 /** The sheet by itself, and the rows of its panel that it has no room for. */
-function figuredDraft(
+export function figuredDraft(
   content: FiguredContent,
   arrangement: Arrangement,
-  named: Pick<SheetDraft, 'kind' | 'type'>,
+  named: Pick<SheetDraft, 'kinds' | 'type'>,
 ): { readonly draft: SheetDraft; readonly rest: readonly PanelRow[] } {
   const { paper, scale, drawing, columns, title, rules } = arrangement;
   const inside = boxInset(drawing, 1.5);
@@ -252,25 +252,16 @@ function figuredDraft(
   };
 }
 
-/** The sheet, and as many further ones as its panel takes. */
-export function figuredDrafts(
-  content: FiguredContent,
-  arrangement: Arrangement,
-  named: Pick<SheetDraft, 'kind' | 'type'>,
-): readonly SheetDraft[] {
-  const { draft, rest } = figuredDraft(content, arrangement, named);
-  return [draft, ...furtherDrafts(rest, content, arrangement, named)];
-}
-
-function furtherDrafts(
+/** What a panel has no room for, on sheets of its own. */
+export function furtherDrafts(
   rest: readonly PanelRow[],
   { head }: FiguredContent,
   { paper, scale, columns }: Arrangement,
-  { kind, type }: Pick<SheetDraft, 'kind' | 'type'>,
+  { kinds, type }: Pick<SheetDraft, 'kinds' | 'type'>,
 ): readonly SheetDraft[] {
   const title = footStrip(paper);
   return panelsFurther(rest, boxWidth(columns[0].box), paper, head).map((panel): SheetDraft => ({
-    kind,
+    kinds,
     type: `${type}: tables`,
     paper,
     scale,
@@ -281,9 +272,31 @@ function furtherDrafts(
   }));
 }
 
+/** Rows of a panel, or of several, that found no room there. */
+export interface PanelRest {
+  readonly rows: readonly PanelRow[];
+  /** The width that they are made for. */
+  readonly width: number;
+  readonly kinds: readonly SheetKind[];
+}
+
+/** What panels had no room for, side by side over a table; null where it would take more than half of the table's first sheet. */
+export function restLead(rests: readonly PanelRest[], name: PaperName): TableLead | null {
+  const some = rests.filter(({ rows }) => rows.length > 0);
+  const box = tableBox(name);
+  const row = rowBand(
+    some.flatMap(({ rows }) => rows),
+    Math.max(...some.map(({ width }) => width)),
+    boxWidth(box),
+  );
+  return row.height <= boxHeight(box) / 2
+    ? { row, kinds: some.flatMap(({ kinds }) => kinds) }
+    : null;
+}
+
 /**
- * The sheet, then its table. What the panel has no room for stands over the table where that leaves the table
- * half of its first sheet, and else on sheets of its own.
+ * The sheet, then its table. What the panel has no room for, and what is left of a sheet `before`, stands over the table where that
+ * leaves the table half of its first sheet, and else on sheets of its own. `before` must fit by itself.
  */
 export function figuredAndTabled(
   content: FiguredContent,
@@ -291,19 +304,21 @@ export function figuredAndTabled(
   type: string,
   input: PlanInput,
   name: PaperName,
+  before: PanelRest | null = null,
 ): readonly SheetDraft[] {
-  const named = { kind: table.kind, type };
+  const named = { kinds: [table.kind], type };
   const arrangement = bestArrangement(content, name);
   const { draft, rest } = figuredDraft(content, arrangement, named);
-  if (rest.length === 0) return [draft, ...tableDrafts(table, input, name)];
-  const box = tableBox(name);
-  const lead = rowBand(rest, boxWidth(arrangement.columns[0].box), boxWidth(box));
-  if (lead.height <= boxHeight(box) / 2)
-    return [draft, ...tableDrafts({ ...table, lead }, input, name)];
+  const own: PanelRest = { rows: rest, width: boxWidth(arrangement.columns[0].box), ...named };
+  const left = [...(before ? [before] : []), ...(rest.length > 0 ? [own] : [])];
+  if (left.length === 0) return [draft, ...tableDrafts(table, input, name)];
+  const lead = restLead(left, name);
+  if (lead) return [draft, ...tableDrafts({ ...table, lead }, input, name)];
+  const lone = before && restLead([before], name);
   return [
     draft,
     ...furtherDrafts(rest, content, arrangement, named),
-    ...tableDrafts(table, input, name),
+    ...tableDrafts(lone ? { ...table, lead: lone } : table, input, name),
   ];
 }
 

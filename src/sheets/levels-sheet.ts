@@ -4,8 +4,9 @@ import { documentLevels } from '@/paving/levels';
 import { earthModel, type EarthModel } from '@/takeoff/earth-cells';
 import { levelMap, type LevelMap } from '@/takeoff/level-map';
 import { floorCautions } from './cautions';
-import type { FiguredContent } from './figured-sheet';
-import { bestArrangement, figuredDrafts } from './figured-sheet';
+import { boxWidth } from './drawing';
+import type { FiguredContent, PanelRest } from './figured-sheet';
+import { bestArrangement, figuredDraft, furtherDrafts } from './figured-sheet';
 import { levelMapDrawing, levelMapKey, mapKeySample } from './level-map-drawing';
 import { markRows } from './mark-row';
 import type { PanelRow } from './panel';
@@ -18,10 +19,17 @@ import { scaleName } from './scales';
 import type { SheetDraft } from './sheet-draft';
 
 /** Levels: the ground as it is, what is dug and made up, and the finish at the pegs. None of a level floor without spots. */
-export function levelsDrafts(input: PlanInput, paper: PaperName): readonly SheetDraft[] {
+export function levelsDraft(
+  input: PlanInput,
+  paper: PaperName,
+): {
+  readonly draft: SheetDraft;
+  readonly rest: PanelRest;
+  readonly further: () => readonly SheetDraft[];
+} | null {
   const { document, ground } = input.laying;
   const { spots, fall } = documentLevels(document);
-  if (spots.length === 0 && fall.kind === 'none') return [];
+  if (spots.length === 0 && fall.kind === 'none') return null;
   const model = earthModel(document, ground);
   const map = mapKnown(document, model);
   const content: FiguredContent = {
@@ -42,10 +50,14 @@ export function levelsDrafts(input: PlanInput, paper: PaperName): readonly Sheet
       };
     },
   };
-  return figuredDrafts(content, bestArrangement(content, paper), {
-    kind: 'section',
-    type: 'Levels',
-  });
+  const arrangement = bestArrangement(content, paper);
+  const named = { kinds: ['section' as const], type: 'Levels' };
+  const { draft, rest } = figuredDraft(content, arrangement, named);
+  return {
+    draft,
+    rest: { rows: rest, width: boxWidth(arrangement.columns[0].box), kinds: named.kinds },
+    further: () => furtherDrafts(rest, content, arrangement, named),
+  };
 }
 
 /** The map as far as the document tells: without spots nothing of the ground, without layers nothing of the dig. */

@@ -4,12 +4,10 @@ import type { TakeOffWithoutCosts } from '@/takeoff/without-costs';
 import type { Display } from '@/paving/length';
 import { floorCautions } from './cautions';
 import { headingRow, itemRow, textRows } from './panel';
-import type { PaperName } from './paper';
 import type { PlanInput } from './plan-input';
 import type { TableColumn } from './ruled-table';
 import { ruledTable } from './ruled-table';
-import type { SheetDraft } from './sheet-draft';
-import { tableDrafts, type TableSection } from './table-sheet';
+import type { TableContent, TableSection } from './table-sheet';
 
 const TAKEN: readonly TableColumn[] = [
   { title: 'The floor takes', align: 'start', weight: 600, grow: 1 },
@@ -28,66 +26,61 @@ const ORDERED: readonly TableColumn[] = [
 ];
 
 /** Materials: what the floor takes, how it is ordered, what to look at before that. */
-export function materialsDrafts(
+export function materialsTable(
   input: PlanInput,
   { lines, orders, warnings }: TakeOffWithoutCosts,
-  paper: PaperName,
-): readonly SheetDraft[] {
+): TableContent {
   const { document } = input.laying;
   const { display } = document;
   const cautions = floorCautions(document, input.report).filter((text) =>
     /weighs|vehicles|route|Figures/.test(text),
   );
-  return tableDrafts(
-    {
-      kind: 'materials',
-      type: 'Materials',
-      title: 'Materials',
-      sections: (width): readonly TableSection[] => [
-        ruledTable(
-          TAKEN,
-          lines.map((line) => takenCells(line, display)),
-          width,
-        ),
-        ...(orders.length === 0
-          ? []
-          : [
-              ruledTable(
-                ORDERED,
-                orders.map((order) => orderCells(order, display)),
+  return {
+    kind: 'materials',
+    type: 'Materials',
+    title: 'Materials',
+    sections: (width): readonly TableSection[] => [
+      ruledTable(
+        TAKEN,
+        lines.map((line) => takenCells(line, display)),
+        width,
+      ),
+      ...(orders.length === 0
+        ? []
+        : [
+            ruledTable(
+              ORDERED,
+              orders.map((order) => orderCells(order, display)),
+              width,
+            ),
+          ]),
+      ...(document.buildUp
+        ? []
+        : [
+            {
+              header: null,
+              rows: textRows(
+                'Bedding and base are not entered yet: they are reckoned with the usual thicknesses for a floor that is walked on.',
                 width,
               ),
-            ]),
-        ...(document.buildUp
-          ? []
-          : [
-              {
-                header: null,
-                rows: textRows(
-                  'Bedding and base are not entered yet: they are reckoned with the usual thicknesses for a floor that is walked on.',
-                  width,
-                ),
-              },
-            ]),
-        ...(warnings.length === 0
-          ? []
-          : [
-              {
-                header: headingRow('Look at before ordering', width),
-                rows: warnings.map(({ words, source }) =>
-                  itemRow(source ? `${words} (${source})` : words, width),
-                ),
-              },
-            ]),
-        {
-          header: headingRow('Take care', width),
-          rows: cautions.map((text) => itemRow(text, width)),
-        },
-      ],
-    },
-    input,
-    paper,
-  );
+            },
+          ]),
+      ...(warnings.length === 0
+        ? []
+        : [
+            {
+              header: headingRow('Look at before ordering', width),
+              rows: warnings.map(({ words, source }) =>
+                itemRow(source ? `${words} (${source})` : words, width),
+              ),
+            },
+          ]),
+      {
+        header: headingRow('Take care', width),
+        rows: cautions.map((text) => itemRow(text, width)),
+      },
+    ],
+  };
 }
 
 const massText = (kg: number | null, display: Display): string =>

@@ -1,16 +1,18 @@
 import { setOut } from '@/paving/set-out/set-out';
 import type { TakeOffWithoutCosts } from '@/takeoff/without-costs';
-import { checksDrafts } from './checks-sheet';
+import { checksTable } from './checks-sheet';
 import { controlDrafts } from './control-sheet';
 import { coursesDrafts } from './courses-sheet';
-import { materialsDrafts } from './materials-sheet';
+import { restLead } from './figured-sheet';
+import { materialsTable } from './materials-sheet';
 import type { PaperName } from './paper';
 import type { PlanInput } from './plan-input';
-import { planDrafts } from './plan-sheet';
+import { PLAN_SERIES, planDrafts, planOfPack } from './plan-sheet';
 import { sectionDrafts } from './section-sheet';
 import type { SetOutInput } from './set-out-input';
 import type { NumberedSheet, SheetKind } from './sheet-draft';
 import { sheetsNumbered } from './sheet-draft';
+import { tablesDrafts } from './table-sheet';
 
 /** All that a set-out pack is drawn from. */
 export interface PackInput extends SetOutInput {
@@ -36,23 +38,32 @@ export const SHEET_NAMES: Readonly<Record<SheetKind, { name: string; use: string
 
 /** Every sheet of the pack in the order of use, numbered through, all on one size of paper. */
 export function packSheets(input: PackInput): readonly NumberedSheet[] {
-  const plan = planDrafts(
+  const plan = planOfPack(
     input,
     input.setOut.points.filter(({ kind }) => kind !== 'string'),
     input.setOut,
   );
-  const paper: PaperName = plan[0].paper.name;
+  const paper: PaperName = plan.whole.paper.name;
+  // What the plan has no room for stands over the table of control points, where that leaves the table its room.
+  const carried =
+    plan.rest.rows.length > 0 && restLead([plan.rest], paper) !== null ? plan.rest : null;
+  const section = sectionDrafts(input, paper);
   const drafts = [
-    ...plan,
-    ...controlDrafts(input, paper),
+    plan.whole,
+    ...(carried ? [] : plan.further()),
+    ...plan.parts,
+    ...controlDrafts(input, paper, carried),
     ...coursesDrafts(input, paper),
-    ...sectionDrafts(input, paper),
-    ...materialsDrafts(input, input.takeOff, paper),
-    ...checksDrafts(input, paper),
+    ...section.drafts,
+    ...tablesDrafts(
+      [...section.tables, materialsTable(input, input.takeOff), checksTable(input)],
+      input,
+      paper,
+    ),
   ];
   return sheetsNumbered(drafts, input);
 }
 
 /** The plan sheets alone, for whoever may have no more. */
 export const planPackSheets = (input: PlanInput): readonly NumberedSheet[] =>
-  sheetsNumbered(planDrafts(input, []), input);
+  sheetsNumbered(planDrafts(input, []), input, PLAN_SERIES);

@@ -42,7 +42,7 @@ export function partDrafts(
     ];
     const panel = panelFlowed(rows, [{ frame: 'foot', box: words }]);
     return {
-      kind: 'plan',
+      kinds: ['plan'],
       type: `Floor plan, part ${part.name}`,
       paper,
       scale,

@@ -1,7 +1,8 @@
 import type { Laying } from '@/paving/laying';
 import type { SetOut } from '@/paving/set-out/set-out-types';
-import type { Arrangement, FiguredContent } from './figured-sheet';
-import { bestArrangement, figuredDrafts } from './figured-sheet';
+import { boxWidth } from './drawing';
+import type { Arrangement, FiguredContent, PanelRest } from './figured-sheet';
+import { bestArrangement, figuredDraft, furtherDrafts } from './figured-sheet';
 import { keepOutPlace } from './keep-out-place';
 import { markRows } from './mark-row';
 import type { PaperName } from './paper';
@@ -18,6 +19,9 @@ import type { NumberedSheet, SheetDraft } from './sheet-draft';
 import { sheetsNumbered } from './sheet-draft';
 import { startPoint } from './start-point';
 import { layingTinted } from './unit-drawing';
+
+/** A plan without its pack counts its own sheets and says so: `Plan 1/2` is no sheet of the pack’s. */
+export const PLAN_SERIES = 'Plan';
 
 /** Characters. */
 const LONG_NOTES = 400;
@@ -44,6 +48,16 @@ export function planDrafts(
   named: readonly NamedPoint[] | null = null,
   setOut?: SetOut,
 ): readonly SheetDraft[] {
+  const { whole, further, parts } = planOfPack(given, named, setOut);
+  return [whole, ...further(), ...parts];
+}
+
+/** The same, with what the panel has no room for still to be placed. */
+export function planOfPack(
+  given: PlanInput,
+  named: readonly NamedPoint[] | null,
+  setOut?: SetOut,
+): PlanOfPack {
   const laying = layingTinted(given.laying);
   const facts: PlanFacts = {
     input: { ...given, laying },
@@ -69,18 +83,30 @@ export function planDrafts(
   });
   const arrangement = arrangementChosen(contentWith([]), facts.input);
   const made = named && planParts(laying, bounds, arrangement.paper.name, arrangement.scale);
-  const whole = figuredDrafts(contentWith(made?.parts ?? []), arrangement, {
-    kind: 'plan',
-    type: 'Floor plan',
-  });
-  if (!made) return whole;
-  const inPart = { laying, start: facts.start, points: named };
-  return [...whole, ...partDrafts(facts.input, inPart, made, bounds)];
+  const content = contentWith(made?.parts ?? []);
+  const drafted = { kinds: ['plan' as const], type: 'Floor plan' };
+  const { draft, rest } = figuredDraft(content, arrangement, drafted);
+  const inPart = named && { laying, start: facts.start, points: named };
+  return {
+    whole: draft,
+    parts: made && inPart ? partDrafts(facts.input, inPart, made, bounds) : [],
+    rest: { rows: rest, width: boxWidth(arrangement.columns[0].box), kinds: drafted.kinds },
+    further: () => furtherDrafts(rest, content, arrangement, drafted),
+  };
+}
+
+/** The plan, its parts, and what its panel has no room for. */
+export interface PlanOfPack {
+  readonly whole: SheetDraft;
+  readonly parts: readonly SheetDraft[];
+  readonly rest: PanelRest;
+  /** The rest on sheets of its own. */
+  readonly further: () => readonly SheetDraft[];
 }
 
 /** The plan by itself, outside a pack. */
 export const planSheets = (input: PlanInput): readonly NumberedSheet[] =>
-  sheetsNumbered(planDrafts(input), input);
+  sheetsNumbered(planDrafts(input), input, PLAN_SERIES);
 
 /** Long notes go where there is room, on a further sheet if need be; they do not decide the paper. */
 function factsDeciding(facts: PlanFacts): PlanFacts {

@@ -8,14 +8,22 @@ import { screedBoard } from '@/takeoff/screed-board';
 import { floorCautions } from './cautions';
 import type { PaperBox } from './drawing';
 import { boxInset } from './drawing';
-import { COLUMN_INSET, COLUMN_WIDTH, panelsFlowed } from './figured-sheet';
+import { COLUMN_INSET, COLUMN_WIDTH, panelsFurther, restLead } from './figured-sheet';
 import { formatCount } from '@/paving/count';
 import { figureText, lengthText } from './figures';
 import { layerSection } from './layer-section';
-import { levelsDrafts } from './levels-sheet';
+import { levelsDraft } from './levels-sheet';
 import { markRows } from './mark-row';
 import type { PanelColumn, PanelRow } from './panel';
-import { headingRow, itemRow, keptTogether, pairRow, panelText, textRows } from './panel';
+import {
+  headingRow,
+  itemRow,
+  keptTogether,
+  pairRow,
+  panelFlowed,
+  panelText,
+  textRows,
+} from './panel';
 import type { PaperName } from './paper';
 import { paperOf } from './paper';
 import type { PlanInput } from './plan-input';
@@ -25,7 +33,7 @@ import { scaleName } from './scales';
 import { screedPicture } from './screed-picture';
 import type { SheetDraft } from './sheet-draft';
 import { footStrip, rule } from './sheet-draft';
-import { tableDrafts } from './table-sheet';
+import type { TableContent } from './table-sheet';
 import { LETTERING } from './text-measure';
 
 /** Most of the drawing's height that the section takes; the screed board has the rest. */
@@ -34,8 +42,14 @@ const FRAME = 'section';
 const BOARD_TITLE =
   'Screed board: how it is pulled, and the board as you look along its pull (not to scale)';
 
+/** The drawings, and the tables that go with them. */
+export interface SectionSheets {
+  readonly drafts: readonly SheetDraft[];
+  readonly tables: readonly TableContent[];
+}
+
 /** Section: the build-up figured, the screed board, and where levels are entered the level map and levels at pegs. */
-export function sectionDrafts(input: PlanInput, name: PaperName): readonly SheetDraft[] {
+export function sectionDrafts(input: PlanInput, name: PaperName): SectionSheets {
   const { document } = input.laying;
   const paper = paperOf(name, 'landscape');
   const title = footStrip(paper);
@@ -59,16 +73,18 @@ export function sectionDrafts(input: PlanInput, name: PaperName): readonly Sheet
     },
   ];
   const width = COLUMN_WIDTH - 2 * COLUMN_INSET;
-  const [first, ...further] = panelsFlowed(
-    sectionRows(input, scale, width),
-    columns,
-    paper,
-    (column) => markRows(input, column),
-  );
+  const panel = panelFlowed(sectionRows(input, scale, width), columns);
+  const levels = levelsDraft(input, name);
+  const rests = [
+    { rows: panel.rest, width, kinds: ['section' as const] },
+    ...(levels ? [levels.rest] : []),
+  ].filter(({ rows }) => rows.length > 0);
+  const lead = rests.length > 0 ? restLead(rests, name) : null;
+  const pegs = pegTable(input);
   const board = { ...drawing, top: drawing.top + high + 4 };
   const rules = [rule([title.left, title.top], [title.right, title.top])];
-  const common = { kind: 'section' as const, paper, title, scale };
-  return [
+  const common = { kinds: ['section' as const], paper, title, scale };
+  const drafts: readonly SheetDraft[] = [
     {
       ...common,
       type: 'Section',
@@ -87,20 +103,33 @@ export function sectionDrafts(input: PlanInput, name: PaperName): readonly Sheet
             ...screedPicture(document, { ...board, top: board.top + 5 }, FRAME),
           ],
         },
-        { name: 'panel', commands: first.commands },
+        { name: 'panel', commands: panel.commands },
       ],
       rules: [...rules, rule([split, paper.frame.top], [split, title.top])],
     },
-    ...further.map(({ commands, columns: used }): SheetDraft => ({
-      ...common,
-      type: 'Section: tables',
-      frames: Object.fromEntries(used.map(({ frame, box }) => [frame, box])),
-      layers: [{ name: 'panel', commands }],
-      rules,
-    })),
-    ...levelsDrafts(input, name),
-    ...pegDrafts(input, name),
+    // Rests too long to stand over a table have sheets of their own.
+    ...(lead || panel.rest.length === 0
+      ? []
+      : panelsFurther(panel.rest, width, paper, (column) => markRows(input, column)).map(
+          ({ commands, columns: used }): SheetDraft => ({
+            ...common,
+            type: 'Section: tables',
+            frames: Object.fromEntries(used.map(({ frame, box }) => [frame, box])),
+            layers: [{ name: 'panel', commands }],
+            rules,
+          }),
+        )),
+    ...(levels ? [levels.draft, ...(lead ? [] : levels.further())] : []),
   ];
+  if (pegs) return { drafts, tables: [lead ? { ...pegs, lead } : pegs] };
+  const alone: TableContent | null = lead && {
+    kind: 'section',
+    type: 'Section: tables',
+    title: levels ? 'Section and levels' : 'Section',
+    lead,
+    sections: () => [],
+  };
+  return { drafts, tables: alone ? [alone] : [] };
 }
 
 function sectionRows(input: PlanInput, scale: number, width: number): readonly PanelRow[] {
@@ -211,10 +240,10 @@ function pullWords({ ground, document }: Laying, degrees: number): string {
 }
 
 /** Levels at pegs, where there are levels and a build-up to reckon them from. */
-function pegDrafts(input: PlanInput, name: PaperName): readonly SheetDraft[] {
+function pegTable(input: PlanInput): TableContent | null {
   const { document } = input.laying;
   const { display } = document;
-  if (!document.levels || !document.buildUp) return [];
+  if (!document.levels || !document.buildUp) return null;
   const pegs = pegLevels(document);
   const existing = pegs.some((peg) => peg.existing !== null);
   const columns: readonly TableColumn[] = [
@@ -246,14 +275,10 @@ function pegDrafts(input: PlanInput, name: PaperName): readonly SheetDraft[] {
     ...(existing ? [figure(peg.existing), figure(peg.dig)] : []),
     { write: true } as const,
   ]);
-  return tableDrafts(
-    {
-      kind: 'section',
-      type: 'Levels at pegs',
-      title: `Levels at pegs, above the edge’s top${display === 'metric' ? ', in mm' : ''}`,
-      sections: (width) => [ruledTable(columns, rows, width)],
-    },
-    input,
-    name,
-  );
+  return {
+    kind: 'section',
+    type: 'Levels at pegs',
+    title: `Levels at pegs, above the edge’s top${display === 'metric' ? ', in mm' : ''}`,
+    sections: (width) => [ruledTable(columns, rows, width)],
+  };
 }

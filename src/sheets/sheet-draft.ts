@@ -22,7 +22,8 @@ export type SheetKind = (typeof SHEET_KINDS)[number];
 
 /** A sheet without its title strip: that says how many sheets there are in all. */
 export interface SheetDraft {
-  readonly kind: SheetKind;
+  /** What it is of; more than one where tables share a sheet. */
+  readonly kinds: readonly SheetKind[];
   /** As the title block has it: `Floor plan`. */
   readonly type: string;
   readonly paper: Paper;
@@ -36,7 +37,10 @@ export interface SheetDraft {
   readonly rules: readonly DrawCommand[];
 }
 
-export type NumberedSheet = Sheet & { readonly kind: SheetKind; readonly type: string };
+export type NumberedSheet = Sheet & {
+  readonly kinds: readonly SheetKind[];
+  readonly type: string;
+};
 
 /** The title strip's place across the foot of a sheet. */
 export const footStrip = ({ frame }: Paper): PaperBox => ({
@@ -55,16 +59,18 @@ export const rule = (
   stroke: { width: PENS.medium, colour: INK },
 });
 
-/** Each draft with its title strip, numbered through. */
+/** Each draft with its title strip, numbered through; `series` stands before the number where it is not the pack’s. */
 export function sheetsNumbered(
   drafts: readonly SheetDraft[],
   input: PlanInput,
+  series = '',
 ): readonly NumberedSheet[] {
   return drafts.map((draft, n) => {
     const { paper, title, scale } = draft;
-    const fields = titleFields(input, draft, n + 1, drafts.length);
+    const number = `${n + 1}/${drafts.length}`;
+    const fields = titleFields(input, draft, series === '' ? number : `${series} ${number}`);
     return {
-      kind: draft.kind,
+      kinds: draft.kinds,
       type: draft.type,
       width: paper.width,
       height: paper.height,
@@ -97,7 +103,7 @@ const paperSheet = (paper: Paper): DrawCommand => ({
   fill: PAPER,
 });
 
-function titleFields(input: PlanInput, draft: SheetDraft, sheet: number, of: number) {
+function titleFields(input: PlanInput, draft: SheetDraft, sheet: string) {
   const { stamp } = input;
   const text = {
     owner: input.firm,
@@ -115,7 +121,7 @@ function titleFields(input: PlanInput, draft: SheetDraft, sheet: number, of: num
         : `${scaleName(draft.scale)} on ${draft.paper.name}`,
     creator: input.creator,
     fingerprint: input.fingerprint.slice(0, 10),
-    sheet: `${sheet}/${of}`,
+    sheet,
   };
   return {
     ...(Object.fromEntries(

@@ -1,5 +1,6 @@
 import '../version/sheet-fonts.css';
-import { useRef, useState } from 'react';
+import { useEffect, useRef, useState } from 'react';
+import { flushSync } from 'react-dom';
 import type { SheetPack } from '@/api-types/sheet-pack';
 import type { PaperName } from '@/sheets/paper';
 import { PAPER_NAMES } from '@/sheets/paper';
@@ -7,7 +8,7 @@ import { SHEET_KINDS, type SheetKind } from '@/sheets/sheet-draft';
 import { download } from '../ui/download';
 import { planFileName } from '../version/plan-file-name';
 import { PackNotes } from './PackNotes';
-import { PackSheet } from './PackSheet';
+import { PackSheet, pageName } from './PackSheet';
 import { SheetChoice } from './SheetChoice';
 import { Stopped, packPdf, packSvg } from './pack-files';
 import { usePackSheets } from './use-pack-sheets';
@@ -30,10 +31,28 @@ export default function PackView({ pack }: { readonly pack: SheetPack }) {
   const all = drawn.kind === 'drawn' ? drawn.sheets : [];
   const taken = all
     .map((sheet, n) => ({ sheet, number: n + 1 }))
-    .filter(({ sheet }) => chosen.has(sheet.kind));
+    .filter(({ sheet }) => sheet.kinds.some((kind) => chosen.has(kind)));
   const title = `${version.projectName}, ${version.layoutName}, version ${version.number}`;
   const name = planFileName(version);
   const busy = making.kind === 'making';
+
+  const [printing, setPrinting] = useState(false);
+  // Printed by the browser's own command too: what is not drawn yet is drawn before it looks.
+  useEffect(() => {
+    const before = () => flushSync(() => setPrinting(true));
+    const after = () => setPrinting(false);
+    window.addEventListener('beforeprint', before);
+    window.addEventListener('afterprint', after);
+    return () => {
+      window.removeEventListener('beforeprint', before);
+      window.removeEventListener('afterprint', after);
+    };
+  }, []);
+  const print = () => {
+    flushSync(() => setPrinting(true));
+    window.print();
+  };
+  const pages = [...new Map(taken.map(({ sheet }) => [pageName(sheet), sheet])).entries()];
 
   const make = async (what: string, run: () => Promise<string>) => {
     stopped.current = false;
@@ -79,8 +98,16 @@ export default function PackView({ pack }: { readonly pack: SheetPack }) {
     });
 
   return (
-    <div className="lg:flex lg:items-start">
-      <div className="space-y-5 border-b border-stone-300 p-5 lg:sticky lg:top-0 lg:max-h-dvh lg:w-96 lg:shrink-0 lg:overflow-y-auto lg:border-r lg:border-b-0">
+    <div className="lg:flex lg:items-start print:block">
+      <style>
+        {pages
+          .map(
+            ([page, { width, height }]) =>
+              `@page ${page} { size: ${width}mm ${height}mm; margin: 0 }`,
+          )
+          .join(' ')}
+      </style>
+      <div className="print:hidden space-y-5 border-b border-stone-300 p-5 lg:sticky lg:top-0 lg:max-h-dvh lg:w-96 lg:shrink-0 lg:overflow-y-auto lg:border-r lg:border-b-0">
         <h1>{whole ? 'Set-out pack' : 'Plan'}</h1>
         <PackNotes pack={pack} />
         <div>
@@ -113,6 +140,14 @@ export default function PackView({ pack }: { readonly pack: SheetPack }) {
             onClick={() => void takePdf()}
           >
             Download PDF
+          </button>
+          <button
+            type="button"
+            className="button max-md:min-h-11"
+            disabled={busy || taken.length === 0}
+            onClick={print}
+          >
+            Print
           </button>
           <button
             type="button"
@@ -194,7 +229,7 @@ export default function PackView({ pack }: { readonly pack: SheetPack }) {
           {said}
         </p>
       </div>
-      <div className="min-w-0 flex-1 bg-stone-100 p-4 md:p-8">
+      <div className="min-w-0 flex-1 bg-stone-100 p-4 md:p-8 print:bg-transparent print:p-0">
         {drawn.kind === 'drawing' && <p className="py-16 text-center">Drawing the sheets …</p>}
         {drawn.kind === 'failed' && (
           <div role="alert" className="mx-auto max-w-md py-16">
@@ -208,7 +243,13 @@ export default function PackView({ pack }: { readonly pack: SheetPack }) {
           <p className="py-16 text-center">No sheet is chosen. Tick at least one kind.</p>
         )}
         {taken.map(({ sheet, number }) => (
-          <PackSheet key={number} sheet={sheet} number={number} of={all.length} />
+          <PackSheet
+            key={number}
+            sheet={sheet}
+            number={number}
+            of={all.length}
+            printing={printing}
+          />
         ))}
       </div>
     </div>

@@ -11,7 +11,7 @@ export function SheetChoice({
   readonly chosen: ReadonlySet<SheetKind>;
   readonly onChoose: (chosen: ReadonlySet<SheetKind>) => void;
 }) {
-  const kinds = SHEET_KINDS.filter((kind) => sheets.some((sheet) => sheet.kind === kind));
+  const kinds = SHEET_KINDS.filter((kind) => sheets.some((sheet) => sheet.kinds.includes(kind)));
   const change = (kind: SheetKind) => {
     const next = new Set(chosen);
     if (!next.delete(kind)) next.add(kind);
@@ -22,7 +22,7 @@ export function SheetChoice({
       <legend className="field-label">Sheets</legend>
       <div className="hairlines border-y border-stone-300">
         {kinds.map((kind) => {
-          const count = sheets.filter((sheet) => sheet.kind === kind).length;
+          const count = sheets.filter((sheet) => sheet.kinds.includes(kind)).length;
           return (
             <label
               key={kind}

@@ -91,7 +91,8 @@ function Capacity({ capacity, display }: { capacity: JointCapacity; display: Dis
   return (
     <>
       <h4 className="mt-5 font-bold">
-        Can the joints {direction === 'along' ? 'along a course' : 'between courses'} take it?
+        Can the joints {direction === 'along' ? 'along a course' : 'between courses'} take{' '}
+        {from === 'tolerance' ? 'what the maker allows' : 'what you measured'}?
       </h4>
       <p className="text-sm text-slate">
         {units} units in a run, each up to <Length mm={each} display={display} decimals={1} /> off

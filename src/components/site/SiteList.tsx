@@ -1,4 +1,5 @@
 import { useState } from 'react';
+import type { Role } from '@/api-types/people';
 import type { SitePackSummary } from '@/api-types/site';
 import { Mark } from '../ui/Mark';
 import { Peg } from '../ui/Peg';
@@ -17,9 +18,21 @@ interface Props {
   readonly asked: string | null;
 }
 
+/** Where no plan is issued: whose turn it is. */
+const EMPTY: Readonly<Record<Role, string>> = {
+  installer: 'No plan is issued to you yet. It comes here by itself once the designer issues it.',
+  designer:
+    'No version is issued yet. Issue one from its own page once the client has accepted it: it is then here, and on the phones of the crew.',
+  owner:
+    'No version is issued yet. Once the client has accepted one and it is issued, it is here, and on the phones of the crew.',
+  client:
+    'Nothing is being built yet. Once your version is issued, its page in the project shows how far the work is.',
+};
+
 /** The plans to build from: those kept on this phone, and those that can be. */
 export function SiteList({ person, packs, asked }: Props) {
   const { busy, heard } = useSite();
+  const builds = person.account.role === 'installer';
   const kept = new Map(packs.map((pack) => [pack.versionId, pack]));
   const current = person.summaries.filter(({ state }) => state === 'issued');
   const past = person.summaries.filter(
@@ -40,7 +53,7 @@ export function SiteList({ person, packs, asked }: Props) {
       </header>
       <SyncLine />
       <div className="mx-auto max-w-3xl px-4 py-5">
-        <h1 className="text-[1.5rem]">Plans to build from</h1>
+        <h1 className="text-[1.5rem]">{builds ? 'Plans to build from' : 'Plans on site'}</h1>
         <p className="mt-1 text-slate">
           {person.account.name}, {person.account.firm.name}
         </p>
@@ -48,7 +61,9 @@ export function SiteList({ person, packs, asked }: Props) {
           <p role="status" className="mt-4 border-l-2 border-amber pl-3">
             {wanted
               ? 'That plan is not kept on this phone yet. Keep it below while there is signal.'
-              : 'That plan is not among those you build from: it is not issued, or it is not yours.'}
+              : builds
+                ? 'That plan is not among those you build from: it is not issued, or it is not yours.'
+                : 'That plan is not issued, or it is not your firm’s.'}
           </p>
         )}
         {current.length === 0 && (
@@ -56,7 +71,7 @@ export function SiteList({ person, packs, asked }: Props) {
             {busy
               ? 'Asking which plans are issued to you …'
               : heard === 'heard'
-                ? 'No plan is issued to you yet. It comes here by itself once the designer issues it.'
+                ? EMPTY[person.account.role]
                 : 'No plan is kept on this phone yet. Open this page once where there is signal.'}
           </p>
         )}

@@ -74,7 +74,7 @@ const PACKS: readonly (readonly [name: string, document: LayoutDocument, paper: 
 describe.each(PACKS)('the pack of the %s as PDF, read by machine', (_name, document, paper) => {
   it('has no text out of the paper’s frame, none over another, none under 2.5 mm', async () => {
     const { sheets, pdf } = await packOf(document, paper);
-    expect([...new Set(sheets.map(({ kind }) => kind))]).toEqual(SHEET_KINDS);
+    expect([...new Set(sheets.flatMap(({ kinds }) => kinds))]).toEqual(SHEET_KINDS);
     for (const [n, sheet] of sheets.entries()) {
       const texts = await readTexts(await pdf.getPage(n + 1));
       expect(texts.length, sheet.type).toBeGreaterThan(10);

@@ -176,6 +176,36 @@ test('creep says what ten units laid tight come to on this floor', () => {
   expect(found.joints).toMatchObject({ least: 2, greatest: 4 });
 });
 
+test('creep reckons from the courses that are laid, by their numbers', () => {
+  const held = (laid: string) => {
+    const { status, stdout, stderr } = layout(
+      ['creep', '-', '--measure', 'a:length:10:4506', '--laid', laid],
+      good,
+    );
+    expect({ status, stderr }).toEqual({ status: 0, stderr: '' });
+    return (JSON.parse(stdout) as Creep).heldCourse;
+  };
+  const { length } = setOut(layFloor(parsed(documentOf({})))).courses;
+  expect(held('1-3')).toBe(1);
+  expect(held(`${length - 1},${length}`)).toBe(length);
+  expect(layout(['creep', '-', '--laid', `1-${length + 1}`], good)).toMatchObject({
+    status: 2,
+    stdout: '',
+    stderr: `there is no course ${length + 1}; they are numbered from 1 to ${length}\n`,
+  });
+});
+
+test('a reader that has enough of the answer before its end is no fault', () => {
+  const file = fileOf('floor.json', good);
+  const { stdout, stderr } = spawnSync(
+    'sh',
+    ['-c', `"$0" --import tsx scripts/layout.ts set-out "$1" | head -c 20`, process.execPath, file],
+    { cwd: root, encoding: 'utf8' },
+  );
+  expect(stdout).toHaveLength(20);
+  expect(stderr).toBe('');
+});
+
 test('refit holds the courses laid and gives the joint and the floor for the rest', () => {
   const { status, stdout, stderr } = layout(
     ['refit', '-', '--measure', 'a:length:10:4506', '--laid', '1-2', '--offset', '-3'],

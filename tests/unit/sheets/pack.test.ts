@@ -135,7 +135,7 @@ describe('the set-out pack', () => {
   it('has every kind of sheet in the order of use, all on one paper, numbered through', () => {
     for (const document of [COURT, BAY, TERRACE]) {
       const sheets = pack(document);
-      expect([...new Set(sheets.map(({ kind }) => kind))]).toEqual(SHEET_KINDS);
+      expect([...new Set(sheets.flatMap(({ kinds }) => kinds))]).toEqual(SHEET_KINDS);
       expect(new Set(sheets.map(({ paper }) => paper.name)).size).toBe(1);
       sheets.forEach((sheet, n) => expect(words(sheet)).toContain(`${n + 1}/${sheets.length}`));
     }
@@ -192,7 +192,9 @@ describe('the set-out pack', () => {
       const { points, courses } = setOut(input.laying, input.report);
       const sheets = pack(document);
       const of = (kind: string) =>
-        sheets.filter((sheet) => sheet.kind === kind).flatMap((sheet) => words(sheet));
+        sheets
+          .filter((sheet) => sheet.kinds.some((each) => each === kind))
+          .flatMap((sheet) => words(sheet));
       const control = of('control');
       for (const { name } of points) expect(control).toContain(name);
       const said = of('courses');
@@ -272,7 +274,10 @@ describe('the set-out pack', () => {
     );
     expect(lists.size).toBe(courses.length);
     for (const { number, runs } of courses) {
-      const [, list] = lists.get(number)!.split(' laid |');
+      const list = lists
+        .get(number)!
+        .split(/end\. \|/)
+        .at(-1)!;
       const said = [...list.matchAll(/(?<![\d:])(\d+)(?= \||$)/g)].map(([, mm]) => Number(mm));
       for (const [near] of runs.flatMap(({ ticks }) => ticks))
         expect(said).toContain(Math.round(near));
@@ -302,7 +307,7 @@ describe('the set-out pack', () => {
   });
 
   it('puts what the control sheet’s panel has no room for over its table, not on a sheet of its own', () => {
-    const sheets = pack(BAY, { paper: 'Letter' }).filter(({ kind }) => kind === 'control');
+    const sheets = pack(BAY, { paper: 'Letter' }).filter(({ kinds }) => kinds.includes('control'));
     expect(sheets.map(({ type }) => type)).not.toContain('Control points: tables');
     const said = sheets.map(words);
     expect(said[0].join(' ')).not.toContain('Figures rule over');
@@ -313,7 +318,7 @@ describe('the set-out pack', () => {
   it('says what of the build-up is not entered yet, and figures what is', () => {
     const section = (document: LayoutDocument) =>
       pack(document)
-        .filter(({ kind }) => kind === 'section')
+        .filter(({ kinds }) => kinds.includes('section'))
         .flatMap(words);
     expect(
       section(COURT).filter((text) => text.includes('not entered yet')).length,
@@ -328,7 +333,7 @@ describe('the set-out pack', () => {
   it('names the edge that the screed board is pulled along, however it lies', () => {
     const pulled = (perimeter: LayoutDocument['ground']['perimeter']) =>
       pack(floor(perimeter))
-        .filter(({ kind }) => kind === 'section')
+        .filter(({ kinds }) => kinds.includes('section'))
         .flatMap(words)
         .join(' ');
     expect(pulled(rectangle(0, 0, 4000, 2000))).toMatch(/along (AB|CD)/);

@@ -148,7 +148,9 @@ describe('a plan sheet', () => {
         const crossed = texts.filter((corners) => outlinesOverlap(corners, [from, to]));
         expect(crossed).toEqual([]);
         const middle = [(from[0] + to[0]) / 2, (from[1] + to[1]) / 2] as const;
-        if (document === COURT || document === STAIRS)
+        // Edges of these lie along the paper's sides, and so do their dimension lines; the leader of a letter may cross the ground.
+        const isDimension = from[0] === to[0] || from[1] === to[1];
+        if (isDimension && (document === COURT || document === STAIRS))
           expect(isInside(middle, perimeter.rings[0].points)).toBe(false);
       }
     }
@@ -269,7 +271,7 @@ describe('a plan sheet', () => {
     const sheets = planSheets(planInput(NAMED['names of every length'], { paper: 'A4' }));
     expect(sheets.length).toBeGreaterThan(1);
     sheets.forEach((sheet, n) => {
-      expect(sheetTexts(sheet).map(outlineText)).toContain(`${n + 1}/${sheets.length}`);
+      expect(sheetTexts(sheet).map(outlineText)).toContain(`Plan ${n + 1}/${sheets.length}`);
     });
     const notes = sheets.flatMap(sheetTexts).filter(({ text }) => text.includes('long note'));
     expect(notes.length).toBeGreaterThan(20);
