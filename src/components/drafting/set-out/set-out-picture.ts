@@ -69,7 +69,7 @@ function paintStrings(ink: Ink, courses: readonly Course[]) {
 
 /** A string in hand: pink, each unit's edges ticked across it. */
 function paintCourse(ink: Ink, course: Course) {
-  const { ctx, colours } = ink;
+  const { ctx } = ink;
   const [a, b] = [screen(ink, course.from), screen(ink, course.to)];
   liveSegment(ink, a, b, 1.8);
   const length = Math.hypot(b[0] - a[0], b[1] - a[1]) || 1;
@@ -115,7 +115,7 @@ function paintTape(ink: Ink, from: Point, at: Point, length: number, bold: boole
 
 /** Along the baseline and square to it, for a point that no two tapes fix well. */
 function paintOffsets(ink: Ink, { datums }: SetOut, point: ControlPoint) {
-  const { ctx, colours, document } = ink;
+  const { colours, document } = ink;
   const [first, second] = datums.map(({ at }) => at);
   const length = Math.hypot(second[0] - first[0], second[1] - first[1]);
   const foot: Point = [
