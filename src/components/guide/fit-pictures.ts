@@ -5,6 +5,7 @@ import { fitFrame, groundFromFrame } from '@/paving/fit/fit-frame';
 import { shiftMap, shiftMapPlace } from '@/paving/fit/shift-map';
 import { layFloor, unitCorners } from '@/paving/laying';
 import type { LayoutDocument } from '@/paving/layout-document';
+import { formatLength } from '@/paving/length';
 import { COURT } from './sample-floors';
 
 /** What the guide says of a floor's fit, with its pictures as SVG text in the theme's inks. */
@@ -14,7 +15,11 @@ export interface FitPicture {
   readonly map: string;
   readonly curve: string;
   /** The start with the most units, and one with fewer and more play, with the floor from each. */
-  readonly choices: readonly { readonly choice: FitChoice; readonly document: LayoutDocument }[];
+  readonly choices: readonly {
+    readonly choice: FitChoice;
+    readonly play: string;
+    readonly document: LayoutDocument;
+  }[];
 }
 
 const CHEQUER: LayoutDocument = {
@@ -40,9 +45,11 @@ function fitPictureOf(document: LayoutDocument): FitPicture {
     region: regionSvg(document),
     map: mapSvg(document, choices[0]),
     curve: curveSvg(document),
-    choices: choices
-      .slice(0, 2)
-      .map((choice) => ({ choice, document: { ...document, placement: choice.placement } })),
+    choices: choices.slice(0, 2).map((choice) => ({
+      choice,
+      play: formatLength(choice.play, document.display),
+      document: { ...document, placement: choice.placement },
+    })),
   };
 }
 
