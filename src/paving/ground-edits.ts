@@ -83,7 +83,7 @@ export function vertexRemoved(ring: Ring, vertex: number): Ring | null {
   return ring.length <= 3 ? null : ring.filter((_, index) => index !== vertex);
 }
 
-export const edgeBulged = (ring: Ring, edge: number, bulge: number): Ring =>
+const edgeBulged = (ring: Ring, edge: number, bulge: number): Ring =>
   ring.map((v, index) => (index === edge ? vertexOf(vertexPoint(v), bulge) : v));
 
 /** The chord's length from one end of an edge to the other, mm. */

@@ -62,14 +62,14 @@ const ring = z
     'needs at least 3 corners, or 2 joined by arcs',
   );
 
-export const keepOutSchema = z.object({
+const keepOutSchema = z.object({
   name: z.string().trim().min(1, 'needs a name').max(80),
   ring,
 });
 
 const colour = z.string().regex(/^#[0-9a-f]{6}$/i, 'must be a colour such as #e9e4d8');
 
-export const unitSchema = z.object({
+const unitSchema = z.object({
   id: z.string().min(1, 'needs an id').max(40),
   name: z.string().trim().min(1, 'needs a name').max(80),
   /** Along the unit's own x axis, mm. */
@@ -90,9 +90,9 @@ export const unitSchema = z.object({
 const unitId = z.string().min(1, 'names a unit of the document');
 const shift = z.number().min(0, 'must be at least 0').lt(1, 'must be below 1');
 
-export const motifEntrySchema = z.object({ unit: unitId, at: vector, turn: turn.default(0) });
+const motifEntrySchema = z.object({ unit: unitId, at: vector, turn: turn.default(0) });
 
-export const bondSchema = z.discriminatedUnion(
+const bondSchema = z.discriminatedUnion(
   'kind',
   [
     z.object({ kind: z.literal('stack'), unit: unitId, joint: gap }),
@@ -116,10 +116,10 @@ export const bondSchema = z.discriminatedUnion(
   },
 );
 
-export const placementSchema = z.object({ origin: vector, turn });
+const placementSchema = z.object({ origin: vector, turn });
 
 /** How two tones of a unit are spread over the floor. */
-export const tonesSchema = z.object({
+const tonesSchema = z.object({
   /** `single`: one tone. `alternate`: neighbours differ. `course`: by course. `random`: spread without clumps. */
   rule: z.enum(['single', 'alternate', 'course', 'random']),
   /** Second tone's colour; the first is the unit's own. */
@@ -130,7 +130,7 @@ export const tonesSchema = z.object({
   seed: z.number().int().min(0).max(999_999).default(1),
 });
 
-export const aggregateSchema = z.object({
+const aggregateSchema = z.object({
   name: z.string().trim().min(1).max(80),
   colour,
   /** The entry of the firm's catalogue that it was taken from. */

@@ -46,7 +46,7 @@ function wholeMinor(minor: number): bigint {
 }
 
 /** A number of things as whole millionths; finer is rounded off. */
-export function amountParts(amount: number): bigint {
+function amountParts(amount: number): bigint {
   if (!Number.isFinite(amount)) throw new Error(`${amount} is not an amount`);
   return BigInt(Math.round(amount * AMOUNT_PARTS));
 }
@@ -109,7 +109,7 @@ export function moneyAllotted(total: number, weights: readonly number[]): number
 const SYMBOLS = new Map<string, string>();
 
 /** `£`, `$`, `KWD`: before the figures. */
-export function currencySymbol(currency: string): string {
+function currencySymbol(currency: string): string {
   const known = SYMBOLS.get(currency);
   if (known !== undefined) return known;
   const parts = new Intl.NumberFormat('en', {

@@ -5,7 +5,7 @@ import type { Side, TapeCross } from './set-out-types';
 /** A tape is read to this, either way, mm. */
 export const TAPE_READING_MM = 2;
 /** Tapes that meet flatter or sharper than this do not fix a point well, degrees. */
-export const LEAST_CROSSING_DEG = 30;
+const LEAST_CROSSING_DEG = 30;
 
 /** Rounding of an angle that is just 30° or 150°, degrees. */
 const ANGLE_ROUNDING_DEG = 1e-7;

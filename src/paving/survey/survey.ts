@@ -9,7 +9,7 @@ import { cornerName, keepOutName } from '../edge-names';
  */
 
 export const GREATEST_SURVEY_POINTS = 80;
-export const GREATEST_TAPES = 400;
+const GREATEST_TAPES = 400;
 /** No tape is longer, mm. */
 export const GREATEST_TAPE_MM = 200_000;
 
@@ -22,7 +22,7 @@ const length = z
 const GREATEST_PLACE_MM = 100_000_000;
 const coordinate = z.number().min(-GREATEST_PLACE_MM).max(GREATEST_PLACE_MM);
 
-export const tapeSchema = z.object({
+const tapeSchema = z.object({
   from: point,
   to: point,
   /** As read; without it the tape is still to be read. */
@@ -31,14 +31,14 @@ export const tapeSchema = z.object({
   left: z.boolean().optional(),
 });
 
-export const surveyRingSchema = z.object({
+const surveyRingSchema = z.object({
   /** Of a keep-out; the perimeter has none. */
   name: z.string().trim().min(1, 'needs a name').max(80).optional(),
   corners: z.number().int().min(3, 'needs at least 3 corners').max(GREATEST_SURVEY_POINTS),
 });
 
 /** The greatest rise of an arc over the straight line between its ends, mm; negative where it bends into the ring. */
-export const surveyArcSchema = z.object({
+const surveyArcSchema = z.object({
   ring: z.number().int().min(0),
   edge: z.number().int().min(0),
   rise: z.number().min(-GREATEST_TAPE_MM).max(GREATEST_TAPE_MM),
