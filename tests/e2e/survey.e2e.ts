@@ -54,3 +54,32 @@ it('takes a ground from tapes: a wrong reading stands out, the rest is kept, and
   expect(complaints).toEqual([]);
   await context.close();
 });
+
+it('takes the edge from a drawing, with the keep-out that is chosen, and says what cannot be read', async () => {
+  const { page, complaints, context } = await openPage(browser);
+  await signUp(page);
+  await openNewTable(page);
+  await page.getByRole('button', { name: 'Open the edge from a file' }).click();
+  await page.getByLabel('Or paste a list of corners').fill('0,0\n7.2,oops\n7.2,3.1');
+  await page.getByRole('button', { name: 'Read the list' }).click();
+  await page.getByText('Line 2: up “oops” is not a length.').waitFor();
+
+  // A square of 5 m with a round pit of 1 m across in it, in metres ($INSUNITS 6 of the DXF reference).
+  const side = (x0: number, y0: number, x1: number, y1: number) =>
+    [0, 'LINE', 8, 'EDGE', 10, x0, 20, y0, 11, x1, 21, y1] as const;
+  const drawing = [
+    ...[0, 'SECTION', 2, 'HEADER', 9, '$INSUNITS', 70, 6, 0, 'ENDSEC', 0, 'SECTION', 2, 'ENTITIES'],
+    ...[...side(0, 0, 5, 0), ...side(5, 0, 5, 5), ...side(5, 5, 0, 5), ...side(0, 5, 0, 0)],
+    ...[0, 'CIRCLE', 8, 'PIT', 10, 2, 20, 2, 40, 0.5, 0, 'ENDSEC', 0, 'EOF'],
+  ].join('\n');
+  await page
+    .locator('input[type=file]')
+    .setInputFiles({ name: 'edge.dxf', mimeType: 'image/vnd.dxf', buffer: Buffer.from(drawing) });
+  expect(await page.getByTestId('outline-size').innerText()).toMatch(/^5.000.mm × 5.000.mm$/);
+  await page.getByRole('button', { name: 'Use this ground' }).click();
+  // 25 − π · 0.5² = 24.21 m².
+  expect(await area(page)).toMatch(/^24[.]21.m²$/);
+  expect(await page.getByLabel('Name of the keep-out').inputValue()).toBe('PIT');
+  expect(complaints).toEqual([]);
+  await context.close();
+});

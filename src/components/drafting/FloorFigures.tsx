@@ -132,7 +132,10 @@ export function FloorFigures({ brief = false }: { brief?: boolean }) {
 }
 
 /** What a problem is about, in the words of the table. */
-function problemSubject({ ground, units }: LayoutDocument, path: DocumentProblem['path']): string {
+export function problemSubject(
+  { ground, units }: LayoutDocument,
+  path: DocumentProblem['path'],
+): string {
   const [part, second, index] = path;
   if (part === 'ground' && second === 'perimeter') return 'The perimeter';
   if (part === 'ground' && second === 'keepOuts' && typeof index === 'number')

@@ -6,6 +6,7 @@ import type { LayoutDocument } from '@/paving/layout-document';
 import { formatLength, type Display } from '@/paving/length';
 import { Dialog } from '../../ui/Dialog';
 import { Segmented } from '../../ui/Segmented';
+import { problemSubject } from '../FloorFigures';
 import { zoomToFit } from '../FloorStage';
 import { planPath, planView, PLAN_WIDE } from '../plan-view';
 import { useTable, useTableStore } from '../table-context';
@@ -132,7 +133,7 @@ function FileSheet({ onClose }: { onClose: () => void }) {
           )}
         </div>
       )}
-      {file && (!file.ok || file.stated === null) && (
+      {file && (file.ok ? file.stated === null : readsBare(opened)) && (
         <Segmented
           label="A bare number in the file is in"
           value={bare}
@@ -158,6 +159,10 @@ function FileSheet({ onClose }: { onClose: () => void }) {
 
 const MOST_MESSAGES = 8;
 
+/** True where what a bare number means may be why a file was refused. */
+const readsBare = (opened: Opened | null): boolean =>
+  opened !== null && opened.reader.groundFileKind(opened.name, opened.text) === 'points';
+
 /** Shown as one may take it: which outline is the edge, and which are keep-outs. */
 function Outlines({
   file,
@@ -173,11 +178,13 @@ function Outlines({
   onAnother: () => void;
 }) {
   const table = useTableStore();
+  const document = useTable((state) => state.document);
   const [edgeAt, setEdgeAt] = useState(0);
-  const [left, setLeft] = useState<ReadonlySet<number>>(new Set());
+  const [left, setLeft] = useState<ReadonlySet<number> | null>(null);
   const edge = file.outlines[edgeAt];
   const within = reader.outlinesWithin(file.outlines, edge);
-  const taken = within.filter((outline) => !left.has(file.outlines.indexOf(outline)));
+  const leftOut = left ?? leftAtFirst(file.outlines, within, reader);
+  const taken = within.filter((outline) => !leftOut.has(file.outlines.indexOf(outline)));
   const ground = useMemo(() => reader.outlineGround(edge, taken), [reader, edge, taken]);
   const problems = useMemo(() => checker.ringProblems(ground), [checker, ground]);
   const size = outlineSize(edge, reader);
@@ -218,7 +225,7 @@ function Outlines({
               value={edgeAt}
               onChange={(event) => {
                 setEdgeAt(Number(event.target.value));
-                setLeft(new Set());
+                setLeft(null);
               }}
             >
               {file.outlines.map((outline, n) => (
@@ -239,9 +246,9 @@ function Outlines({
                   <input
                     type="checkbox"
                     className="size-5 accent-line"
-                    checked={!left.has(n)}
+                    checked={!leftOut.has(n)}
                     onChange={() => {
-                      const next = new Set(left);
+                      const next = new Set(leftOut);
                       if (!next.delete(n)) next.add(n);
                       setLeft(next);
                     }}
@@ -260,8 +267,10 @@ function Outlines({
         {problems.length > 0 && (
           <div className="border-t-2 border-amber bg-amber-wash px-3 py-2">
             <p className="font-semibold">It cannot be laid as it is.</p>
-            {problems.slice(0, 3).map(({ message }) => (
-              <p key={message}>{message}</p>
+            {problems.slice(0, 3).map(({ path, message }) => (
+              <p key={message}>
+                {problemSubject({ ...document, ground }, path)} {message}.
+              </p>
             ))}
             <p>
               You can take it all the same: the place is marked on the table, to be mended there.
@@ -279,6 +288,22 @@ function Outlines({
       </div>
     </div>
   );
+}
+
+/** More outlines than this inside an edge are no keep-outs, but whatever else is drawn there. */
+const MOST_KEEP_OUTS = 12;
+
+/** Which of the outlines inside an edge are left out until somebody says otherwise: those within another, or all of too many. */
+function leftAtFirst(
+  outlines: readonly Outline[],
+  within: readonly Outline[],
+  reader: Reader,
+): ReadonlySet<number> {
+  const inner =
+    within.length > MOST_KEEP_OUTS
+      ? within
+      : within.flatMap((outline) => reader.outlinesWithin(within, outline));
+  return new Set(inner.map((outline) => outlines.indexOf(outline)));
 }
 
 function outlineWords(outline: Outline, n: number, display: Display, checker: Checker): string {
