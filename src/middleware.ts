@@ -6,6 +6,8 @@ import { environment } from '@/server/environment';
 import { logError } from '@/server/log';
 import { startPosting } from '@/server/mail/posting';
 import { isOpenEndpoint, isOpenPage } from '@/server/next-page';
+import { SIGNED_OUT } from '@/server/outcomes';
+import { PdfNotMade } from './server/pdf/pdf-thread';
 import { problemResponse } from '@/server/problem-response';
 import { cameOverTls, isFromThisSite } from '@/server/request-origin';
 import { addSecurityHeaders } from '@/server/security-headers';
@@ -45,7 +47,7 @@ const guarded = async (context: APIContext, next: MiddlewareNext): Promise<Respo
     await identify(context);
     if (!context.locals.person) {
       if (isApi && !isOpenEndpoint(path)) {
-        return problemResponse('signed-out', 'Sign in to go on.');
+        return problemResponse('signed-out', SIGNED_OUT);
       }
       if (!isApi && !isOpenPage(path)) {
         const asked = `${context.url.pathname}${context.url.search}`;
@@ -62,7 +64,9 @@ const guarded = async (context: APIContext, next: MiddlewareNext): Promise<Respo
     logError(`${context.request.method} ${path}`, error);
     return problemResponse(
       'failed',
-      'The server could not do this. Nothing was changed; please try again.',
+      error instanceof PdfNotMade
+        ? error.message
+        : 'The server could not do this. Nothing was changed; please try again.',
     );
   }
 };

@@ -19,6 +19,16 @@ class JsonForm extends HTMLElement {
     this.querySelector('[data-problem]')!.textContent = text;
   }
 
+  /** In another tab, so that what is typed here stays. */
+  private offerSignIn() {
+    const link = document.createElement('a');
+    link.href = '/sign-in';
+    link.target = '_blank';
+    link.className = 'link';
+    link.textContent = 'Sign in';
+    this.querySelector('[data-problem]')!.append(' ', link);
+  }
+
   private clear() {
     this.say('');
     for (const field of this.form.querySelectorAll('[aria-invalid]'))
@@ -51,6 +61,7 @@ class JsonForm extends HTMLElement {
       const answer = await response.json().catch(() => null);
       if (response.ok) this.goOn(answer?.id);
       else this.refuse(answer);
+      if (response.status === 401 && this.dataset.action !== '/api/sign-in') this.offerSignIn();
     } catch {
       this.say('The server could not be reached. What you typed is still here; try again.');
     } finally {

@@ -1,7 +1,7 @@
 import type { APIContext, APIRoute } from 'astro';
 import type { z } from 'zod';
 import { database, type Db } from './database';
-import type { Outcome } from './outcomes';
+import { SIGNED_OUT, type Outcome } from './outcomes';
 import type { Actor } from './permissions';
 import { problemResponse, refusalResponse } from './problem-response';
 import { boundedBytes, parsedWith, readBody } from './request-body';
@@ -37,7 +37,7 @@ const callOf = async (context: APIContext): Promise<Call | null> => {
   };
 };
 
-const signIn = () => problemResponse('signed-out', 'Sign in to go on.');
+const signIn = () => problemResponse('signed-out', SIGNED_OUT);
 
 /** Who calls and what the query says, or the answer to give in place of the service's. */
 const queriedWith = async <S extends z.ZodType>(

@@ -38,7 +38,11 @@ export type Outcome<T> = Done<T> | Refusal;
 export const done = <T>(value: T): Done<T> => ({ ok: true, value });
 
 /** Nobody is signed in, or not with these words. */
-export const signedOut = (detail = 'Sign in to go on.'): Refusal => ({
+/** Said to whoever is in the middle of something when their session ends. */
+export const SIGNED_OUT =
+  'You are signed out. Sign in again in another tab, then try again here: nothing on this page is lost.';
+
+export const signedOut = (detail = SIGNED_OUT): Refusal => ({
   ok: false,
   kind: 'signed-out',
   detail,

@@ -1,3 +1,5 @@
+import { ApiError } from './api';
+
 /** What went wrong, in the server's words or ours, and the way to try again. */
 export function Wrong({
   error,
@@ -11,7 +13,7 @@ export function Wrong({
   if (!error) return null;
   return (
     <p role="alert" className={`text-brick ${className}`}>
-      {error.message}{' '}
+      {error.message} {error instanceof ApiError && error.status === 401 && <SignInLink />}{' '}
       {again && (
         <button type="button" className="link" onClick={again}>
           Try again
@@ -20,3 +22,10 @@ export function Wrong({
     </p>
   );
 }
+
+/** In another tab, so that what is typed here stays. */
+export const SignInLink = () => (
+  <a className="link" href="/sign-in" target="_blank">
+    Sign in
+  </a>
+);
