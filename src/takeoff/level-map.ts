@@ -108,8 +108,8 @@ const BORDER_MM = 1e-3;
 const sideDistance = (side: HalfPlane, point: Point): number =>
   planeHeight(side, point) / Math.hypot(side.a, side.b);
 
-/** The level map of a floor's earth. */
-export function levelMap(model: EarthModel, display: Display): LevelMap {
+/** The level map of a floor's earth; without its hatching where it is drawn in haste. */
+export function levelMap(model: EarthModel, display: Display, hatched = true): LevelMap {
   const { cells, dug, floorBins, dugBins, existing } = model;
   const points = dug.flat();
   const { min, max } = pointsBox(points);
@@ -144,8 +144,8 @@ export function levelMap(model: EarthModel, display: Display): LevelMap {
     contours,
     interval,
     meeting,
-    cut: hatching(model, apart, 1),
-    fill: hatching(model, apart * FILL_CLOSER, -1),
+    cut: hatched ? hatching(model, apart, 1) : [],
+    fill: hatched ? hatching(model, apart * FILL_CLOSER, -1) : [],
     rim: rimSegments(model).flatMap((segment) => segmentParts(dug, segment, dugBins)),
   };
 }

@@ -7,7 +7,7 @@ import { documentLevels, type Fall } from '@/paving/levels';
 import { groundMiddle } from '@/paving/placement-edits';
 import { spotName } from '@/takeoff/level-warnings';
 import { letterPlaces } from './corner-letters';
-import { earthOf } from './earth';
+import { earthOf, manySpots, type Earth } from './earth';
 import { figureRoom, type Box } from './figure-room';
 import type { Floor } from './floor';
 import { boxedText, dot, FONT, path, screen, segment, type Ink } from './overlay-ink';
@@ -44,8 +44,12 @@ function strokeAll(
   ctx.setLineDash([]);
 }
 
+/** Of many spots, hatching waits until the hand rests: contours follow it. */
+const mapShown = (earth: Earth, { preview }: TableState, { document }: Floor) =>
+  preview && manySpots(document) ? earth.bareMap : earth.map;
+
 /** The level map under edge and keep-outs: hatching, contours, and where ground and formation meet. */
-export function paintLevels(ink: Ink, floor: Floor) {
+export function paintLevels(ink: Ink, state: TableState, floor: Floor) {
   const earth = earthOf(floor);
   const { ctx, colours, document } = ink;
   path(ink, ringOutline(documentRing(document, 0)), true);
@@ -55,7 +59,7 @@ export function paintLevels(ink: Ink, floor: Floor) {
   ctx.fill();
   ctx.restore();
   if (!earth) return;
-  const { map } = earth;
+  const map = mapShown(earth, state, floor);
   strokeAll(ink, map.cut, colours.slate, 0.6);
   strokeAll(ink, map.fill, colours.graphite, 0.8);
   strokeAll(ink, map.rim, colours.slate, 1, [7, 5]);
@@ -174,7 +178,8 @@ export function paintLevelMarks(ink: Ink, state: TableState, floor: Floor) {
     if (n !== state.spot && inSight(here))
       figure(spotFigure(n), around(here), { colour: colours.slate, weight: 400 });
   });
-  for (const { level, segments } of earth?.map.contours ?? []) {
+  const contours = earth ? mapShown(earth, state, floor).contours : [];
+  for (const { level, segments } of contours) {
     const longest = segments
       .map(({ from, to }) => [screen(ink, from), screen(ink, to)] as const)
       .filter((each) => lengthPx(each) >= FIGURED_FROM_PX)

@@ -402,7 +402,7 @@ export function paintOverlay(
   const levelling = state.step === 'levels';
   ctx.save();
   ctx.globalAlpha = replacing ? 0.25 : 1;
-  if (levelling) paintLevels(ink, floor);
+  if (levelling) paintLevels(ink, state, floor);
   paintRings(ink);
   const taken: Taken = [];
   for (let ring = 0; ring < documentRingCount(ink.document) && !levelling; ring++)

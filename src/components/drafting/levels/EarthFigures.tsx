@@ -6,7 +6,8 @@ import { formatVolume } from '@/paving/volume';
 import type { EarthVolumes } from '@/takeoff/earth-volumes';
 import { formatWorkedVolume } from '@/takeoff/measures';
 import { earthOf } from '../earth';
-import { useSettledFloor, useShownFloor } from '../table-context';
+import { useSettledFloor } from '../table-context';
+import { useRestingFloor } from './use-resting-floor';
 
 interface Line {
   readonly name: string;
@@ -18,7 +19,7 @@ interface Line {
 
 /** What is dug and laid, live, each with its formula and what it stood at before the gesture in hand. */
 export function EarthFigures() {
-  const shown = useShownFloor();
+  const shown = useRestingFloor();
   const settled = useSettledFloor();
   const earth = earthOf(shown);
   const was = settled === shown ? null : (earthOf(settled)?.volumes ?? null);

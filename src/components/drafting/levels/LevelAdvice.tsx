@@ -1,10 +1,10 @@
 import { buildUpAdvice } from '@/paving/build-up-advice';
 import { earthOf } from '../earth';
-import { useShownFloor } from '../table-context';
+import { useRestingFloor } from './use-resting-floor';
 
 /** What to look at before the figures are built by: the survey first, then layers, units and falls. */
 export function LevelAdvice() {
-  const floor = useShownFloor();
+  const floor = useRestingFloor();
   const earth = earthOf(floor);
   if (!earth) return null;
   const advice = buildUpAdvice(floor.document);

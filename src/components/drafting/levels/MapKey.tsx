@@ -3,13 +3,13 @@ import { documentLevels } from '@/paving/levels';
 import { levelMapKey, mapKeySample } from '@/sheets/level-map-drawing';
 import { SheetPicture } from '../../ui/SheetPicture';
 import { earthOf } from '../earth';
-import { useShownFloor } from '../table-context';
+import { useRestingFloor } from './use-resting-floor';
 
 const SAMPLE = { left: 0.6, top: 0.6, right: 8.4, bottom: 4.4 };
 
 /** What is on the level map. */
 export function MapKey() {
-  const floor = useShownFloor();
+  const floor = useRestingFloor();
   const earth = earthOf(floor);
   if (!earth) return null;
   const falls = documentLevels(floor.document).fall.kind !== 'none';
