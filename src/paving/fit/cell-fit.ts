@@ -95,7 +95,7 @@ export function frameChoices(
   pieces: CellPieces,
   most: CellChoice,
   stop?: () => boolean,
-): CellChoice[] {
+): readonly CellChoice[] {
   const { pitch, rise, shift } = frame;
   const least = Math.max(1, Math.ceil(CHOICES_SHARE * most.count));
   // The same floor from within the cell, about which all pieces are listed.
@@ -111,6 +111,6 @@ export function frameChoices(
       const near = nearPieces(pieces, pitch, rise, shift, reach);
       return cellTradeOff(near, pitch, rise, reach, { least, most: start, squares, stop });
     },
-    (choices) => (stop?.() ? 0 : Math.max(...choices.map(({ slack }) => slack))),
-  );
+    ({ slack }) => (stop?.() ? 0 : slack),
+  ).choices;
 }

@@ -74,6 +74,7 @@ export function squaresSearched(
     else blocks.set(block, [at]);
   }
   for (const own of blocks.values()) {
+    if (stop?.()) return;
     const boxes = own.map(boxOf);
     const all = {
       ax: Math.min(...boxes.map(({ ax }) => ax)),

@@ -1,20 +1,30 @@
-import { envelopeTop, planeEnvelope } from '@/geometry/plane-envelope';
+import { envelopeTop } from '@/geometry/plane-envelope';
 import { boxFrom, boxKept, boxLevel, levelEmptied, levelRoom, type BoxLevel } from './box-level';
+import { boxIsNews, stripsAreNews } from './box-news';
 import type { CellPieces } from './cell-pieces';
 import {
   choiceOffered,
   choicesListed,
   knownChoices,
-  newsStair,
   reachIsShort,
   type CellChoice,
 } from './known-choices';
 import { freshClimbed } from './known-climbs';
+import {
+  gainPut,
+  lookRoom,
+  MOST_LOSSES,
+  nearestFirst,
+  straightBefore,
+  unitSeen,
+  unitsSeen,
+  WEIGHED,
+  type BoxLook,
+} from './look-room';
 import { arcMeetsBox, arcOnlyTakes, depthMoved, SPLIT } from './most';
 import { pieceFinder, pieceGrid } from './piece-grid';
-import { KEEP_OFF_MM, pieceGap, pieceGapsRoom, pointSlack, unitsApart } from './slack';
+import { KEEP_OFF_MM, pieceGap, pointSlack, unitsApart } from './slack';
 import { squaresSearched } from './square-search';
-import { KEPT_OFF, stripCount, stripRoom, type KeptOff, type OriginBox } from './strip-bound';
 
 export { SLACK_TOLERANCE_MM } from './known-choices';
 
@@ -25,20 +35,6 @@ const COARSE_TIMES = 3;
 const COARSE_SAMPLE = 8;
 /** So many of the nearest pieces are looked at one by one. */
 const NEAREST = 28;
-/** So many of the nearest pieces that no origin of a box loses are weighed against each other. */
-const WEIGHED = 7;
-/** So many units that must be lost, and as many that are held, are set against each other. */
-const MOST_WAYS = 5;
-/** So many of the nearest pieces that origins of a box may lose are weighed one by one. */
-const MOST_LOSSES = 64;
-/** With fewer lines right through a box, of many directions, strips are not looked at. */
-const FEW_LINES = 24;
-/** Directions whose sine is less are too nearly the same to cross. */
-const LEAST_CROSS = 1e-6;
-/** Boxes smaller than the slack by this are looked into where the slack should be greatest. */
-const SMALL_SHARE = 8;
-/** How much more steeply than a piece's own a plane rises that stands for having to be beyond it. */
-const STEEP = 1000;
 /** A piece that is not straight before all of a box makes no plane when it is no farther than this from being in it, mm. */
 const LEAST_AWAY_MM = 1e-3;
 /** Pieces are listed by so many columns of places. */
@@ -56,6 +52,13 @@ export interface TradeOffOptions {
   readonly stop?: () => boolean;
 }
 
+export interface TradeOff {
+  /** Most units first; each with more slack than all before it. */
+  readonly choices: readonly CellChoice[];
+  /** The most slack met with, mm, which may be a hair more than the last choice has. With all of the reach there may be more. */
+  readonly slack: number;
+}
+
 /**
  * For each count from `least` to the most, an origin with more slack than any with more units, where
  * there is one: most units first. `near` are the cell's pieces with their repeats out to `reach`.
@@ -70,8 +73,8 @@ export function cellTradeOff(
   rise: number,
   reach: number,
   { least, most, squares, stop }: TradeOffOptions,
-): CellChoice[] {
-  const { x0, y0, x1, y1, radius, family, height, step, families } = near;
+): TradeOff {
+  const { x0, y0, x1, y1, family, height, step, families } = near;
   const known = knownChoices(least, most.count);
   const { atLeast } = known;
   const offer = (count: number, slack: number, u: number, v: number) =>
@@ -79,8 +82,6 @@ export function cellTradeOff(
 
   const every = new Int32Array(near.count);
   for (let n = 0; n < near.count; n++) every[n] = n;
-  const room = pieceGapsRoom(Math.max(64, near.count));
-  const order = new Int32Array(Math.max(64, near.count));
   const finder = () => {
     const lines = Math.max(1, Math.round((PLACES * rise) / pitch));
     const places = pieceGrid(near, -reach, -reach, pitch + reach, rise + reach, PLACES, lines);
@@ -89,32 +90,8 @@ export function cellTradeOff(
   const cell = { near, every, pitch, rise, reach, about: squares > 0 ? finder() : undefined };
   offer(most.count, most.slack, most.u, most.v);
 
-  const strips = stripRoom(near);
-  const planes = planeEnvelope(WEIGHED);
-  const ways = planeEnvelope(2 * MOST_WAYS);
-  const gaps = pieceGapsRoom(Math.max(64, near.count));
-  // Pieces through which units may be gained, by the slack that an origin beyond them may have, most first.
-  const gainPiece = new Int32Array(near.count);
-  const gainSlack = new Float64Array(near.count);
-  const putGain = (count: number, n: number, slack: number): number => {
-    let place = count;
-    for (; place > 0 && gainSlack[place - 1] < slack; place--) {
-      gainSlack[place] = gainSlack[place - 1];
-      gainPiece[place] = gainPiece[place - 1];
-    }
-    gainSlack[place] = slack;
-    gainPiece[place] = n;
-    return count + 1;
-  };
-  // For each unit that a piece has to itself, when it was last seen, and in how many pieces of a list.
-  const seenAt = new Int32Array(strips.stamp.length);
-  const seen = new Int32Array(strips.stamp.length);
-  let looks = 0;
-  let stamped = 0;
-  const others = new Int32Array(near.count);
-  const lossAt = new Int32Array(MOST_LOSSES);
-  const lossWeight = new Int32Array(MOST_LOSSES);
-  const lossSlack = new Float64Array(MOST_LOSSES);
+  const scratch = lookRoom(near);
+  const { strips, planes, gaps: room, order, lossAt, lossWeight, lossSlack } = scratch;
 
   const look = (
     source: Int32Array,
@@ -151,8 +128,9 @@ export function cellTradeOff(
         // Parallel to few directions: strips tell much, even in a large box.
         const local = list.subarray(own, top);
         room.distance.fill(0, 0, local.length);
-        const box = { ax, ay, bx, by };
-        if (!stripsNews(local, box, u, v, depth, h, within, onceSeen(local))) return;
+        const alone = unitsSeen(scratch, local);
+        const found = { box: { ax, ay, bx, by }, local, u, v, depth, far: h, all: within, alone };
+        if (!stripsAreNews(scratch, { ...found, gains: 0, losses: 0, through: 0 }, known)) return;
       }
       if (out.count % COARSE_SAMPLE === 0) {
         offer(depth, pointSlack(near, list, own, top, u, v, within, room, order), u, v);
@@ -160,7 +138,7 @@ export function cellTradeOff(
       boxKept(out, ax, ay, bx, by, depth, within, top);
       return;
     }
-    looks++;
+    scratch.looks++;
     let gains = 0;
     let through = 0;
     let alone = true;
@@ -189,7 +167,7 @@ export function cellTradeOff(
       const d = room.distance[at];
       if (d > within + h) continue;
       list[top++] = n;
-      alone = unitSeen(n) && alone;
+      alone = unitSeen(scratch, n) && alone;
       // What it may add to the count over the box.
       if (d >= h) continue;
       if (
@@ -206,7 +184,7 @@ export function cellTradeOff(
         continue;
       if (f < 0) {
         if (arcMeetsBox(near, n, ax, ay, bx, by) && !arcOnlyTakes(near, n, u, v))
-          gains = putGain(gains, n, h - d);
+          gains = gainPut(scratch, gains, n, h - d);
         continue;
       }
       if (off > half - TOUCH_MM || off < TOUCH_MM - half) continue;
@@ -216,13 +194,13 @@ export function cellTradeOff(
       const above = height[n] - families.nx[f] * u - families.ny[f] * v;
       if (step[n] > 0 ? above < 0 : above > 0) continue;
       let beyond = h;
-      if (straightBefore(n, u, v, h)) {
+      if (straightBefore(near, n, u, v, h)) {
         const gx = room.awayX[at];
         const gy = room.awayY[at];
         beyond =
           (gx > 0 ? gx * (u - ax) : gx * (u - bx)) + (gy > 0 ? gy * (v - ay) : gy * (v - by));
       }
-      if (beyond > d) gains = putGain(gains, n, beyond - d);
+      if (beyond > d) gains = gainPut(scratch, gains, n, beyond - d);
     }
 
     // In order of distance: units that the point has and the box's origins may lose, up to the first
@@ -236,11 +214,11 @@ export function cellTradeOff(
     let losses = 0;
     planes.count = 0;
     // The nearest few tell nearly always; where they do not, all are gone through.
-    let count = inOrder(top - own, within, NEAREST);
+    let count = nearestFirst(scratch, top - own, within, NEAREST);
     for (let m = 0; planes.count < WEIGHED; m++) {
       if (m === count) {
         if (held >= 0 || count < NEAREST || count > NEAREST) break;
-        count = inOrder(top - own, within, Infinity);
+        count = nearestFirst(scratch, top - own, within, Infinity);
         if (m === count) break;
       }
       const at = order[m];
@@ -256,7 +234,7 @@ export function cellTradeOff(
       const apart = unitsApart(near, local[at], local, order, m, enough);
       if (apart === 0) continue;
       if (slackHere < 0) slackHere = d;
-      const plain = straightBefore(local[at], u, v, h);
+      const plain = straightBefore(near, local[at], u, v, h);
       if (d >= h) {
         // No origin of the box loses it: what is farther from it than the plane says is not in the box.
         if (held < 0) held = m;
@@ -288,236 +266,22 @@ export function cellTradeOff(
     if (slackHere < 0 && within === reach) slackHere = within;
     if (slackHere >= 0 && !doubtful) offer(depth, slackHere, u, v);
     if (bx - ax < SMALLEST_BOX_MM && by - ay < SMALLEST_BOX_MM) return;
-    const box = { ax, ay, bx, by };
-    if (!news(local, box, u, v, depth, h, all, gains, losses, through, alone)) return;
-    // Over the box no origin has more slack than this: what is farther off does not matter there.
-    boxKept(out, ax, ay, bx, by, depth, Math.min(within, all), top);
-  };
-
-  /** Tells which units are in one listed piece only; true when each of the pieces is of one unit. */
-  const onceSeen = (local: Int32Array): boolean => {
-    let alone = true;
-    looks++;
-    for (const n of local) alone = unitSeen(n) && alone;
-    return alone;
-  };
-
-  /** Counts one more piece of a listed piece's unit; false when it has more units than one. */
-  const unitSeen = (n: number): boolean => {
-    const unit = strips.unit[n];
-    if (unit < 0) return false;
-    if (seenAt[unit] === looks) seen[unit]++;
-    else {
-      seenAt[unit] = looks;
-      seen[unit] = 1;
-    }
-    return true;
-  };
-
-  /** The count that an origin of the box with more slack can have by its strips; `room` has the distances, or less. */
-  const stripsBound = (
-    local: Int32Array,
-    box: OriginBox,
-    u: number,
-    v: number,
-    depth: number,
-    h: number,
-    slack: number,
-    alone: boolean,
-  ): number => {
-    // A unit whose only piece near enough is this one is whole right up to it.
-    const nearby = slack + h;
-    const keptOff = (at: number): KeptOff => {
-      const unit = strips.unit[local[at]];
-      if (alone && seen[unit] === 1) return KEPT_OFF.held;
-      let count = 0;
-      for (let n = 0; n < local.length; n++) {
-        if (n === at || room.distance[n] > nearby) continue;
-        if (!alone) others[count++] = n;
-        else if (strips.unit[local[n]] === unit) return KEPT_OFF.none;
-      }
-      if (alone) return KEPT_OFF.held;
-      const apart = unitsApart(near, local[at], local, others, count, 1);
-      return apart > 0 ? KEPT_OFF.held : KEPT_OFF.none;
-    };
-    return stripCount(
-      near,
+    const found: BoxLook = {
+      box: { ax, ay, bx, by },
       local,
-      0,
-      local.length,
-      box,
       u,
       v,
       depth,
-      slack,
-      room.distance,
-      h,
-      false,
-      keptOff,
-      strips,
-    );
-  };
-
-  /** Tries where the strips that allow the most, of the two families with most lines, cross. */
-  const tryStrips = (
-    local: Int32Array,
-    { ax, ay, bx, by }: OriginBox,
-    u: number,
-    v: number,
-    depth: number,
-    all: number,
-  ) => {
-    const { found, nx, ny, at } = strips;
-    const cross = found < 2 ? 0 : nx[0] * ny[1] - ny[0] * nx[1];
-    if (Math.abs(cross) < LEAST_CROSS) return;
-    const toU = (at[0] * ny[1] - at[1] * ny[0]) / cross;
-    const toV = (at[1] * nx[0] - at[0] * nx[1]) / cross;
-    if (!(toU > ax && toU < bx && toV > ay && toV < by)) return;
-    const there = depthMoved(near, local, 0, local.length, u, v, toU, toV, depth);
-    if (there < least || atLeast[Math.min(there, most.count) - least] >= all) return;
-    const slack = pointSlack(near, local, 0, local.length, toU, toV, all, gaps, order);
-    if (slack < all) offer(there, slack, toU, toV);
-  };
-
-  /** False when the strips alone show that no origin of the box is news. */
-  const stripsNews = (
-    local: Int32Array,
-    box: OriginBox,
-    u: number,
-    v: number,
-    depth: number,
-    h: number,
-    all: number,
-    alone: boolean,
-  ): boolean => {
-    for (const { slack, fewest } of newsStair(known)) {
-      if (slack >= all || stripsBound(local, box, u, v, depth, h, slack, alone) < fewest) continue;
-      tryStrips(local, box, u, v, depth, all);
-      return true;
-    }
-    return false;
-  };
-
-  /**
-   * False when no origin of the box is news. For each step of the stair the origins with more slack are bounded: units that none of them can keep are lost, and those that none can be so far beyond the edge of are not
-   * gained; the ways to lose them must not contradict each other; and the strips must have room.
-   */
-  const news = (
-    local: Int32Array,
-    box: OriginBox,
-    u: number,
-    v: number,
-    depth: number,
-    h: number,
-    all: number,
-    gains: number,
-    losses: number,
-    through: number,
-    alone: boolean,
-  ): boolean => {
-    for (const { slack, fewest } of newsStair(known)) {
-      if (slack >= all) continue;
-      let count = depth;
-      for (let m = 0; m < losses; m++) if (lossSlack[m] <= slack) count -= lossWeight[m];
-      const counted = --stamped;
-      for (let m = 0; m < gains && count < fewest && gainSlack[m] > slack; m++) {
-        const unit = strips.unit[gainPiece[m]];
-        if (unit >= 0) {
-          if (seenAt[unit] === counted) continue;
-          seenAt[unit] = counted;
-        }
-        count += Math.abs(step[gainPiece[m]]);
-      }
-      if (count < fewest || !waysAgree(local, box, u, v, depth, h, all, slack, losses)) continue;
-      // Few lines of many directions leave no strips that tell.
-      if (through === 0 || (strips.bundles && through < FEW_LINES)) return true;
-      const bound = stripsBound(local, box, u, v, depth, h, slack, alone);
-      if (bound < fewest) continue;
-      tryStrips(local, box, u, v, depth, all);
-      return true;
-    }
-    return false;
-  };
-
-  /**
-   * False when no origin of the box is beyond the edges of all the units that must be lost for the slack and
-   * off those of the units that are held by as much. An origin that has lost a unit has gone out through some
-   * piece of it, and is beyond that piece's line; and not far from beyond the nearest one's, where they bend little.
-   */
-  const waysAgree = (
-    local: Int32Array,
-    { ax, ay, bx, by }: OriginBox,
-    u: number,
-    v: number,
-    depth: number,
-    h: number,
-    all: number,
-    slack: number,
-    losses: number,
-  ): boolean => {
-    ways.count = 0;
-    for (let m = 0; m < losses && ways.count < MOST_WAYS; m++) {
-      if (lossSlack[m] > slack) continue;
-      const n = local[lossAt[m]];
-      const unit = strips.unit[n];
-      if (unit < 0 || radius[n] > 0) continue;
-      const off = near.ux[n] * (v - y0[n]) - near.uy[n] * (u - x0[n]);
-      let bend = 0;
-      for (let a = 0, left = seen[unit] - 1; left > 0 && a < local.length; a++) {
-        const o = local[a];
-        if (o === n || strips.unit[o] !== unit) continue;
-        left--;
-        if (room.distance[a] > h) continue;
-        if (radius[o] > 0) bend = Infinity;
-        const other = near.ux[o] * (v - y0[o]) - near.uy[o] * (u - x0[o]);
-        const turn = Math.hypot(near.ux[n] - near.ux[o], near.uy[n] - near.uy[o]);
-        bend = Math.max(bend, off - other + turn * h);
-      }
-      if (bend > h) continue;
-      const to = ways.count++;
-      ways.d[to] = bend - off;
-      ways.gx[to] = near.uy[n];
-      ways.gy[to] = -near.ux[n];
-    }
-    if (ways.count === 0) return true;
-    const lines = ways.count;
-    for (let m = 0; m < planes.count && m < MOST_WAYS; m++) {
-      const to = ways.count++;
-      ways.d[to] = planes.d[m] - slack;
-      ways.gx[to] = planes.gx[m];
-      ways.gy[to] = planes.gy[m];
-    }
-    if (envelopeTop(ways, ax - u, ay - v, bx - u, by - v) < 0) return false;
-    if (h * SMALL_SHARE > slack) return true;
-    // In a small box, try where the slack is greatest just beyond those lines.
-    for (let to = 0; to < lines; to++) {
-      ways.d[to] = (ways.d[to] - 2 * KEEP_OFF_MM) * STEEP;
-      ways.gx[to] *= STEEP;
-      ways.gy[to] *= STEEP;
-    }
-    if (envelopeTop(ways, ax - u, ay - v, bx - u, by - v) <= 0) return true;
-    const toU = u + ways.x;
-    const toV = v + ways.y;
-    const there = depthMoved(near, local, 0, local.length, u, v, toU, toV, depth);
-    const found = pointSlack(near, local, 0, local.length, toU, toV, all, gaps, order);
-    if (found < all) offer(there, found, toU, toV);
-    return true;
-  };
-
-  /** Puts the listed pieces nearer than `within` in `order`, nearest first, `most` of them at most. */
-  const inOrder = (listed: number, within: number, most: number): number => {
-    let count = 0;
-    for (let at = 0; at < listed; at++) {
-      if (room.distance[at] >= within) continue;
-      const key = room.key[at];
-      const full = count === most;
-      if (full && key >= room.key[order[count - 1]]) continue;
-      let place = full ? count - 1 : count++;
-      for (; place > 0 && room.key[order[place - 1]] > key; place--)
-        order[place] = order[place - 1];
-      order[place] = at;
-    }
-    return count;
+      far: h,
+      all,
+      gains,
+      losses,
+      through,
+      alone,
+    };
+    if (!boxIsNews(scratch, found, known)) return;
+    // Over the box no origin has more slack than this: what is farther off does not matter there.
+    boxKept(out, ax, ay, bx, by, depth, Math.min(within, all), top);
   };
 
   /** False when the piece is farther than `within` from the whole box; it may be, too, where true. */
@@ -543,13 +307,6 @@ export function cellTradeOff(
     return Math.abs(height[n] - nx * mx - ny * my) <= half + within;
   };
 
-  /** True when every point within h of (u, v) has its foot on the straight piece. */
-  const straightBefore = (n: number, u: number, v: number, h: number): boolean => {
-    if (radius[n] > 0) return false;
-    const along = (u - x0[n]) * near.ux[n] + (v - y0[n]) * near.uy[n];
-    return along >= h && along <= near.length[n] - h;
-  };
-
   let level = boxLevel(near.count);
   if (squares > 0) {
     squaresSearched(
@@ -569,7 +326,7 @@ export function cellTradeOff(
   }
   freshClimbed(cell, known);
   let next = boxLevel(near.count);
-  while (level.count > 0 && !reachIsShort(known.atLeast[0], reach, pitch) && !stop?.()) {
+  while (level.count > 0 && !reachIsShort(atLeast[0], reach, pitch) && !stop?.()) {
     levelEmptied(next);
     for (let box = 0; box < level.count; box++) {
       const ax = level.sides[4 * box];
@@ -600,5 +357,5 @@ export function cellTradeOff(
     [level, next] = [next, level];
     freshClimbed(cell, known);
   }
-  return choicesListed(known);
+  return { choices: choicesListed(known), slack: atLeast[0] };
 }

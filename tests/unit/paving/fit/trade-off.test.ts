@@ -3,11 +3,14 @@ import { expect, test } from 'vitest';
 import { fit } from '@/paving/fit/fit';
 import { CHOICES_SHARE, frameChoices, frameMost, frameStart } from '@/paving/fit/cell-fit';
 import { unitCount } from '@/paving/fit/count';
-import { fitFrame } from '@/paving/fit/fit-frame';
+import { fitFrame, groundFromFrame } from '@/paving/fit/fit-frame';
 import { nearPieces } from '@/paving/fit/near-pieces';
 import { pieceGapsRoom, pointSlack } from '@/paving/fit/slack';
 import { slackPolished } from '@/paving/fit/slack-polish';
 import { SLACK_TOLERANCE_MM } from '@/paving/fit/trade-off';
+import { layFloor } from '@/paving/laying';
+import { parseLayoutDocument } from '@/paving/layout-validation';
+import { leastGapAt } from '@/paving/least-gap';
 import { LENGTH_TOLERANCE_MM } from '@/geometry/tolerance';
 import { anyDocument } from '../../../oracle/documents';
 
@@ -67,4 +70,31 @@ test('every choice is borne out by the laying: a fit ends without a fault', () =
       { seed, numRuns: 120 },
     );
   }
+}, 120_000);
+
+test('the trade-off goes on where what it may still find begins a hair above its last choice', () => {
+  // A ring of 90 × 60 m whose plays are fractions of a millimetre; the start was found by a finer search, and is laid here.
+  const corners = Array.from({ length: 12 }, (_, n): [number, number] => {
+    const angle = (n / 12) * 2 * Math.PI;
+    const radius = 46_000 * (1 + 0.07 * Math.sin(5 * angle) + 0.03 * Math.sin(23 * angle + 1));
+    return [1.09 * radius * Math.cos(angle), 0.65 * radius * Math.sin(angle)];
+  });
+  const parsed = parseLayoutDocument({
+    schema: 'evenlay/layout@1',
+    display: 'metric',
+    ground: { perimeter: corners, keepOuts: [] },
+    units: [{ id: 'a', name: 'Unit', length: 200, width: 100, thickness: 50 }],
+    bond: { kind: 'running', unit: 'a', joint: 0, shift: 0.5 },
+    placement: { origin: [0, 0], turn: 17 },
+    clearance: 5,
+  });
+  if (!parsed.ok) throw new Error(JSON.stringify(parsed.problems));
+  const { document } = parsed;
+  const frame = fitFrame(document);
+  const [x, y] = groundFromFrame(frame, [112.98259046570966, 98.60295627371738]);
+  const laying = layFloor({ ...document, placement: { origin: [x, y], turn: 17 } });
+  const play = leastGapAt(laying)!.gap - document.clearance;
+  expect(play).toBeGreaterThan(0.75);
+  const found = fit(document).choices.filter(({ wholeUnits }) => wholeUnits >= laying.laid.count);
+  expect(Math.max(...found.map((choice) => choice.play))).toBeGreaterThan(play - 0.01);
 }, 120_000);
