@@ -69,14 +69,14 @@ function hatching(
   return pattern ?? colour;
 }
 
-const fateColour = (fate: Fate, colours: DrawingColours): string =>
+const fateColour = (fate: Fate, { onFloor }: DrawingColours): string =>
   fate === 'gone'
-    ? colours.brick
+    ? onFloor.brick
     : fate === 'new'
-      ? colours.vial
+      ? onFloor.vial
       : fate === 'moved'
-        ? colours.amber
-        : colours.graphite;
+        ? onFloor.amber
+        : onFloor.graphite;
 
 interface Halves {
   readonly ax: number;
@@ -187,7 +187,7 @@ function drawArrows(
   matching: UnitMatching,
 ) {
   const { scale, centre } = camera;
-  ctx.strokeStyle = colours.graphite;
+  ctx.strokeStyle = colours.onFloor.graphite;
   ctx.lineWidth = 1.2;
   ctx.beginPath();
   let inPath = 0;

@@ -10,6 +10,13 @@ export interface DrawingColours {
   readonly vial: string;
   readonly amber: string;
   readonly brick: string;
+  /** The same, for marks over units and aggregate: those are as pale at dusk as by day. */
+  readonly onFloor: {
+    readonly graphite: string;
+    readonly vial: string;
+    readonly amber: string;
+    readonly brick: string;
+  };
 }
 
 export function drawingColours(): DrawingColours {
@@ -26,6 +33,12 @@ export function drawingColours(): DrawingColours {
     vial: token('vial'),
     amber: token('amber'),
     brick: token('brick'),
+    onFloor: {
+      graphite: token('graphite-on-floor'),
+      vial: token('vial-on-floor'),
+      amber: token('amber-on-floor'),
+      brick: token('brick-on-floor'),
+    },
   };
 }
 
