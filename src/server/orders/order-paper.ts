@@ -9,7 +9,7 @@ import { textCellWritten } from '@/takeoff/text-cell';
 import { pricingOf } from '../catalogue/pricing-settings';
 import type { Db } from '../database';
 import { done, type Outcome } from '../outcomes';
-import { nodePdf } from '../pdf/node-pdf';
+import { threadPdf } from '../pdf/pdf-thread';
 import type { Actor } from '../permissions';
 import { firmOnPaper, personName, versionOnPaper } from '../pricing/on-paper';
 import type { SeenVersion } from '../seen-version';
@@ -77,7 +77,7 @@ const orderPaper = (order: OnPaper): OrderPaper => {
 
 /** The order’s paper; one without a number is a draft. */
 export const orderPdf = (order: OnPaper): Promise<Uint8Array<ArrayBuffer>> =>
-  nodePdf(orderSheets(orderPaper(order)), {
+  threadPdf(orderSheets(orderPaper(order)), {
     title: order.number === null ? 'Order (draft)' : `Order ${order.number}`,
     author: order.firm.name,
   });

@@ -15,7 +15,7 @@ import { newId } from '../ids';
 import type { Letter } from '../mail/letter';
 import { attachment, postLetter } from '../mail/outbox';
 import { changedMeanwhile, done, invalid, type Outcome } from '../outcomes';
-import { nodePdfMeans } from '../pdf/node-pdf';
+import { pdfThreadBegun } from '../pdf/pdf-thread';
 import type { Actor } from '../permissions';
 import { personEmail } from '../pricing/on-paper';
 import { nextNumber, numberedFile } from '../pricing/paper-numbers';
@@ -86,7 +86,7 @@ export const sendOrder = async (
   if (!found.ok) return found;
   const { version } = found.value;
   // Read in beforehand: the transaction is not to wait for it.
-  await nodePdfMeans();
+  await pdfThreadBegun();
   const outcome = await db.transaction(async (tx): Promise<Outcome<null>> => {
     await lockProjectOrders(tx, version);
     const locked = await lockedOrder(tx, actor, id, revision);

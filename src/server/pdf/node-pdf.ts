@@ -74,7 +74,7 @@ async function newMeans(): Promise<PdfMeans> {
   };
 }
 
-/** Sheets as a PDF on the server: quotes, orders and whatever is sent with a letter. About a tenth of a second a page. */
+/** Sheets as a PDF, in the thread that calls: about a tenth of a second a page. The server asks `threadPdf`. */
 export const nodePdf = async (
   sheets: readonly Sheet[],
   about: PdfAbout,

@@ -4,7 +4,7 @@ import { quoteSheets } from '@/sheets/quote-sheet';
 import { pricingOf } from '../catalogue/pricing-settings';
 import type { Db } from '../database';
 import { done, notFound, type Outcome } from '../outcomes';
-import { nodePdf } from '../pdf/node-pdf';
+import { threadPdf } from '../pdf/pdf-thread';
 import { permissions, seesCosts, type Actor } from '../permissions';
 import { firmOnPaper, personName, versionOnPaper } from '../pricing/on-paper';
 import { seenVersion, type SeenVersion } from '../seen-version';
@@ -82,7 +82,7 @@ export const asSent = async (
 
 /** The quote’s paper; one without a number is a draft. */
 export const quotePdf = (sent: Omit<SentQuote, 'number'> & { number: string | null }) =>
-  nodePdf(quoteSheets(quotePaper(sent)), {
+  threadPdf(quoteSheets(quotePaper(sent)), {
     title: sent.number === null ? 'Quote (draft)' : `Quote ${sent.number}`,
     author: sent.firm.name,
   });

@@ -10,7 +10,7 @@ import type { Letter } from '../mail/letter';
 import { attachment, postLetter } from '../mail/outbox';
 import { changedMeanwhile, done, invalid, type Outcome } from '../outcomes';
 import { onlookersOf } from '../onlookers';
-import { nodePdfMeans } from '../pdf/node-pdf';
+import { pdfThreadBegun } from '../pdf/pdf-thread';
 import type { Actor } from '../permissions';
 import { nextNumber, numberedFile } from '../pricing/paper-numbers';
 import { versionName, type SeenVersion } from '../seen-version';
@@ -50,7 +50,7 @@ export const sendQuote = async (
   if (!found.ok) return found;
   const { version } = found.value;
   // Read in beforehand: the transaction is not to wait for it.
-  await nodePdfMeans();
+  await pdfThreadBegun();
   const outcome = await db.transaction(async (tx): Promise<Outcome<number>> => {
     const locked = await lockedDraft(tx, actor, id, revision);
     if (!locked.ok) return locked;
