@@ -285,7 +285,10 @@ export function mostPlay(
       count = gathered(all, all.length, within, box, u, v, h, false);
       for (let at = 0; at < count; at++) nearest = Math.min(nearest, room.distance[at]);
       planesAbout(room, own, count, u, v, h);
-      bound = Math.min(within, envelopeTop(planes, ax - u, ay - v, bx - u, by - v));
+      // The planes tell of the point's own face; the way to another face in the box crosses a piece.
+      const across = h - nearest;
+      const top = envelopeTop(planes, ax - u, ay - v, bx - u, by - v);
+      bound = Math.min(within, Math.max(top, across));
       if (nearest > best) offer(nearest, u, v);
     }
     if (bound <= known()) return;
