@@ -62,13 +62,3 @@ function placesLevelled(places: readonly Point[], { sketch, rings }: Survey): re
     oy + sin * (x - ox) + cos * (y - oy),
   ]);
 }
-
-/** True when the perimeter is still as the survey has it: nothing was moved since it was taken. */
-export function groundIsSurveyed(
-  survey: Survey,
-  answer: Pick<SurveyAnswer, 'places'>,
-  ground: LayoutDocument['ground'],
-): boolean {
-  const taped = surveyedGround(survey, answer, ground);
-  return taped !== null && JSON.stringify(taped.perimeter) === JSON.stringify(ground.perimeter);
-}
