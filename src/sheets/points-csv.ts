@@ -1,4 +1,5 @@
 import Papa from 'papaparse';
+import { figuredText } from '@/paving/figured-words';
 import { finishSurface } from '@/paving/finish-level';
 import { surfaceHeight } from '@/geometry/plane-pieces';
 import type { LayoutDocument } from '@/paving/layout-document';
@@ -21,7 +22,7 @@ export function pointsCsv(document: LayoutDocument, setOut: SetOut): string {
         tenth(at[0]),
         tenth(at[1]),
         surface ? tenth(surfaceHeight(surface, at)) : '',
-        what,
+        figuredText(what, document.display),
       ]),
     },
     // A keep-out's name is somebody's own words: a spreadsheet must not take it for a formula.

@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import Papa from 'papaparse';
 import { describe, expect, it } from 'vitest';
+import { figuredText } from '@/paving/figured-words';
 import { unitCorners } from '@/paving/laying';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { parseLayoutDocument } from '@/paving/layout-validation';
@@ -470,6 +471,9 @@ describe('the points as CSV', () => {
     for (const document of [COURT, BAY, TERRACE]) {
       const { points, rows } = read(document);
       expect(rows.map(({ name }) => name)).toEqual(points.map(({ name }) => name));
+      expect(rows.map(({ what }) => what)).toEqual(
+        points.map(({ what }) => figuredText(what, document.display)),
+      );
       points.forEach(({ at }, n) => {
         expect(Math.abs(Number(rows[n].x_mm) - at[0])).toBeLessThanOrEqual(0.051);
         expect(Math.abs(Number(rows[n].y_mm) - at[1])).toBeLessThanOrEqual(0.051);

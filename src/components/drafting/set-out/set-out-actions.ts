@@ -1,3 +1,4 @@
+import { figuredText } from '@/paving/figured-words';
 import { documentRing, documentRingCount } from '@/paving/ground-edits';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { LEAST_BASELINE_MM } from '@/paving/set-out/datum-choice';
@@ -81,11 +82,16 @@ export function datumsCleared(table: TableStore): void {
 /** Picks the control point before or after, round and round. */
 export function pointStepped(table: TableStore, by: 1 | -1): void {
   const state = table.getState();
-  const points = floorOf(shownDocument(state)).setOut?.points ?? [];
+  const document = shownDocument(state);
+  const points = floorOf(document).setOut?.points ?? [];
   if (points.length === 0) return;
   const at = points.findIndex(({ name }) => name === state.point);
   const next =
     at < 0 ? (by === 1 ? 0 : points.length - 1) : (at + by + points.length) % points.length;
   const { name, what } = points[next];
-  state.set({ point: name, pointed: null, said: `${name}: ${what}.` });
+  state.set({
+    point: name,
+    pointed: null,
+    said: `${name}: ${figuredText(what, document.display)}.`,
+  });
 }
