@@ -65,7 +65,13 @@ test('a rectangle of many small units, where the most lie whole in several faces
       fc.record({
         width: real(1000, 5000),
         depth: real(1000, 5000),
-        unit: fc.constantFrom([240, 118], [200, 100], [450, 450], [300, 300], [600, 400]),
+        unit: fc.constantFrom<[number, number][]>(
+          [240, 118],
+          [200, 100],
+          [450, 450],
+          [300, 300],
+          [600, 400],
+        ),
         joint: fc.constantFrom(0, 3, 5, 10),
         clearance: fc.constantFrom(0, 6),
         turn: real(-90, 90),
