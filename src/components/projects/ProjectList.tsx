@@ -83,9 +83,11 @@ function List({ look: firstLook, first, role, any }: Props) {
         drafting={drafting}
       />
       <p role="status" className="mt-4 min-h-6 text-slate" data-testid="shown">
-        {list.isPlaceholderData || !list.data
-          ? 'Reading the list …'
-          : projects.length > 0 && shownWords(projects.length, total)}
+        {list.error
+          ? null
+          : list.isPlaceholderData || !list.data
+            ? 'Reading the list …'
+            : projects.length > 0 && shownWords(projects.length, total)}
       </p>
       <Wrong error={list.error} again={() => void list.refetch()} className="mt-4" />
       <div className={list.isPlaceholderData ? 'opacity-60' : ''}>

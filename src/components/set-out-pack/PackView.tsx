@@ -5,6 +5,7 @@ import type { SheetPack } from '@/api-types/sheet-pack';
 import type { PaperName } from '@/sheets/paper';
 import { PAPER_NAMES } from '@/sheets/paper';
 import { SHEET_KINDS, type SheetKind } from '@/sheets/sheet-draft';
+import { failureWords } from '../ui/failure-words';
 import { download } from '../ui/download';
 import { planFileName } from '../version/plan-file-name';
 import { PackNotes } from './PackNotes';
@@ -66,8 +67,8 @@ export default function PackView({ pack }: { readonly pack: SheetPack }) {
         setSaid(`Stopped: no ${what} was made.`);
         return setMaking({ kind: 'idle' });
       }
-      const reason = error instanceof Error ? error.message : '';
-      setMaking({ kind: 'failed', message: `The ${what} could not be made. ${reason} Try again.` });
+      const message = `The ${what} could not be made. ${failureWords(error)} Try again.`;
+      setMaking({ kind: 'failed', message });
     }
   };
   const takePdf = () =>

@@ -8,6 +8,7 @@ import type { Sheet } from '@/sheets/sheet';
 import { planSheets } from '@/sheets/plan-sheet';
 import { scaleName } from '@/sheets/scales';
 import { drawingSvg } from '@/sheets/svg-sink';
+import { failureWords } from '../ui/failure-words';
 import { download } from '../ui/download';
 import { Moment } from '../ui/Moment';
 import { LetteringNote } from './LetteringNote';
@@ -42,8 +43,8 @@ export default function PlanView({ version, stamp }: Pick<SheetPack, 'version' |
       setMaking({ kind: 'idle' });
       setSaid(`The PDF is made: ${sheetCount(sheets)} of ${paper.name} at ${scaleName(scale)}.`);
     } catch (error) {
-      const message = error instanceof Error ? error.message : '';
-      setMaking({ kind: 'failed', message: `The PDF could not be made. ${message} Try again.` });
+      const message = `The PDF could not be made. ${failureWords(error)} Try again.`;
+      setMaking({ kind: 'failed', message });
     }
   };
   const takeSvg = () => {
