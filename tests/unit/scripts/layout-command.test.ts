@@ -196,7 +196,11 @@ test('creep reckons from the courses that are laid, by their numbers', () => {
 });
 
 test('a reader that has enough of the answer before its end is no fault', () => {
-  const file = fileOf('floor.json', good);
+  // Far more than a pipe holds (64 kB), so that the rest meets a closed pipe.
+  const units = [{ id: 'a', name: 'Sett', length: 80, width: 80, thickness: 80 }];
+  const many = documentOf({ units, bond: { kind: 'stack', unit: 'a', joint: 3 } });
+  expect(JSON.stringify(setOut(layFloor(parsed(many)))).length).toBeGreaterThan(100_000);
+  const file = fileOf('setts.json', JSON.stringify(many));
   const { stdout, stderr } = spawnSync(
     'sh',
     ['-c', `"$0" --import tsx scripts/layout.ts set-out "$1" | head -c 20`, process.execPath, file],
