@@ -197,7 +197,7 @@ test('creep reckons from the courses that are laid, by their numbers', () => {
 
 test('a reader that has enough of the answer before its end is no fault', () => {
   // Far more than a pipe holds (64 kB), so that the rest meets a closed pipe.
-  const units = [{ id: 'a', name: 'Sett', length: 80, width: 80, thickness: 80 }];
+  const units = [{ id: 'a', name: 'Sett', length: 50, width: 50, thickness: 50 }];
   const many = documentOf({ units, bond: { kind: 'stack', unit: 'a', joint: 3 } });
   expect(JSON.stringify(setOut(layFloor(parsed(many)))).length).toBeGreaterThan(100_000);
   const file = fileOf('setts.json', JSON.stringify(many));
