@@ -19,37 +19,76 @@ export function strandTurned(strand: Strand): Vertex[] {
   });
 }
 
+interface End {
+  readonly strand: Strand;
+  readonly at: Vertex;
+  /** It is the strand's last corner: the strand is turned to go on from here. */
+  readonly turn: boolean;
+}
+
+const squareOf = (mm: number): number => Math.floor(mm / MEET_MM);
+
+/** Every end of the strands by the square of the plane that it lies in, one as wide as ends may lie apart. */
+function endsBySquare(strands: readonly Strand[]): ReadonlyMap<string, End[]> {
+  const squares = new Map<string, End[]>();
+  for (const strand of strands)
+    for (const turn of [false, true]) {
+      const at = turn ? strand[strand.length - 1] : strand[0];
+      const key = `${squareOf(at[0])} ${squareOf(at[1])}`;
+      const own = squares.get(key);
+      if (own) own.push({ strand, at, turn });
+      else squares.set(key, [{ strand, at, turn }]);
+    }
+  return squares;
+}
+
+/** The nearest end of a waiting strand that meets a place; ends of strands that wait no longer are dropped. */
+function nearestEnd(
+  squares: ReadonlyMap<string, End[]>,
+  waiting: ReadonlySet<Strand>,
+  place: Vertex,
+): End | null {
+  let nearest: End | null = null;
+  let least = MEET_MM;
+  for (let x = squareOf(place[0]) - 1; x <= squareOf(place[0]) + 1; x++)
+    for (let y = squareOf(place[1]) - 1; y <= squareOf(place[1]) + 1; y++) {
+      const ends = squares.get(`${x} ${y}`) ?? [];
+      for (let n = ends.length - 1; n >= 0; n--) {
+        if (!waiting.has(ends[n].strand)) {
+          ends.splice(n, 1);
+          continue;
+        }
+        const gap = apart(place, ends[n].at);
+        if (gap > least) continue;
+        least = gap;
+        nearest = ends[n];
+      }
+    }
+  return nearest;
+}
+
 /**
  * Strands joined end to end into rings, each to the nearest end that meets it. `left` counts the strands that
  * belong to none.
  */
 export function chained(strands: readonly Strand[]): { rings: Vertex[][]; left: number } {
   const waiting = new Set(strands);
+  const squares = endsBySquare(strands);
   const rings: Vertex[][] = [];
   let left = 0;
   for (const first of strands) {
     if (!waiting.delete(first)) continue;
-    let chain: Vertex[] = [...first];
+    const chain: Vertex[] = [...first];
     let used = 1;
     for (;;) {
       const end = chain[chain.length - 1];
       if (chain.length > 2 && apart(chain[0], end) <= MEET_MM) break;
-      let next: Strand | null = null;
-      let least = MEET_MM;
-      let turn = false;
-      for (const other of waiting) {
-        for (const turned of [false, true]) {
-          const gap = apart(end, turned ? other[other.length - 1] : other[0]);
-          if (gap > least) continue;
-          least = gap;
-          next = other;
-          turn = turned;
-        }
-      }
+      const next = nearestEnd(squares, waiting, end);
       if (!next) break;
-      waiting.delete(next);
+      waiting.delete(next.strand);
       used++;
-      chain = [...chain.slice(0, -1), ...joined(end, turn ? strandTurned(next) : next)];
+      chain.pop();
+      chain.push(...joined(end, next.turn ? strandTurned(next.strand) : next.strand));
     }
     const closed = chain.length > 2 && apart(chain[0], chain[chain.length - 1]) <= MEET_MM;
     if (closed) rings.push(chain.slice(0, -1));

@@ -17,6 +17,21 @@ export function groundFileKind(name: string, text: string): 'dxf' | 'geojson' | 
   return /^\s*[{[]/.test(text) ? 'geojson' : 'points';
 }
 
+/** Corners nearer than this are one, mm: drawings close rings on a corner of their own. */
+const SAME_MM = 0.5;
+
+/** An outline without corners that lie on the next one. */
+function outlineTidied({ name, ring }: Outline): Outline {
+  const kept = ring.filter(([x, y], n) => {
+    const [nextX, nextY] = ring[(n + 1) % ring.length];
+    return Math.hypot(nextX - x, nextY - y) >= SAME_MM;
+  });
+  return { name, ring: kept };
+}
+
+const holdsGround = ({ ring }: Outline): boolean =>
+  ring.length >= 3 || (ring.length === 2 && ring.some(([, , bulge]) => bulge));
+
 /** The outlines of a file, largest first. */
 export function groundFile(name: string, text: string, options: GroundFileOptions): GroundFile {
   const kind = groundFileKind(name, text);
@@ -28,7 +43,17 @@ export function groundFile(name: string, text: string, options: GroundFileOption
         : pointsFile(text, options);
   if (!found.ok) return found;
   const size = ({ ring }: Outline) => Math.abs(vertexRingArea(ring));
-  const outlines = [...found.outlines].sort((one, other) => size(other) - size(one));
+  const outlines = found.outlines
+    .map(outlineTidied)
+    .filter(holdsGround)
+    .sort((one, other) => size(other) - size(one));
+  if (outlines.length === 0)
+    return {
+      ok: false,
+      messages: [
+        'Every outline in this file shrinks to a point or a line. The unit may be wrong: a bare number may be in metres or feet.',
+      ],
+    };
   return { ...found, outlines };
 }
 

@@ -16,20 +16,49 @@ type Column = keyof typeof PLACE_HEADINGS;
 /** Corners nearer than this are one: a ring closed by its first corner, mm. */
 const SAME_MM = 0.5;
 
-function columnsOf(
-  first: CellLine,
-): { columns: readonly (Column | null)[]; header: boolean } | string {
+interface Columns {
+  readonly columns: readonly (Column | null)[];
+  readonly header: boolean;
+  /** What was made of a list whose columns are not named, where that may be wrong. */
+  readonly notes: readonly string[];
+}
+
+/** True where the first cells count the corners: 1, 2, 3 … or 101, 102, 103 …. */
+const numbersCorners = (lines: readonly CellLine[]): boolean => {
+  const [begin] = lines.map(({ cells }) => Number(cells[0]));
+  return (
+    Number.isInteger(begin) &&
+    begin > 0 &&
+    lines.every(({ cells }, n) => cells[0] === `${begin + n}`)
+  );
+};
+
+function columnsOf(lines: readonly CellLine[]): Columns | string {
+  const [first] = lines;
   const named = first.cells.map((heading) => columnOf(PLACE_HEADINGS, heading));
   if (named.some(Boolean) && !first.cells.some((cell) => /\d/.test(cell))) {
     return named.includes('x') && named.includes('y')
-      ? { columns: named, header: true }
+      ? { columns: named, header: true, notes: [] }
       : 'The headings must name a column x and a column y; a third may be name.';
   }
+  const most = Math.max(...lines.map(({ cells }) => cells.length));
+  if (most < 3) return { columns: ['x', 'y'], header: false, notes: [] };
   // A first cell that is no number is the corner's name.
-  const named_ = first.cells.length > 2 && Number.isNaN(Number(first.cells[0].replace(',', '.')));
+  const isName = Number.isNaN(Number(first.cells[0].replace(',', '.')));
+  if (isName || most > 3 || numbersCorners(lines))
+    return {
+      columns: ['name', 'x', 'y'],
+      header: false,
+      notes: isName
+        ? []
+        : [
+            'The first column is taken for the numbers of the corners, the next two for across and up.',
+          ],
+    };
   return {
-    columns: named_ || first.cells.length > 3 ? ['name', 'x', 'y'] : ['x', 'y'],
+    columns: ['x', 'y'],
     header: false,
+    notes: ['The first two columns are taken for across and up; the third is left out.'],
   };
 }
 
@@ -37,9 +66,9 @@ function columnsOf(
 export function pointsFile(text: string, options: GroundFileOptions): GroundFile {
   const lines = cellLines(text);
   if (lines.length === 0) return { ok: false, messages: ['There is nothing in this list.'] };
-  const arranged = columnsOf(lines[0]);
+  const arranged = columnsOf(lines);
   if (typeof arranged === 'string') return { ok: false, messages: [arranged] };
-  const { columns, header } = arranged;
+  const { columns, header, notes } = arranged;
   const messages: string[] = [];
   const ring: Vertex[] = [];
   for (const { line, cells } of header ? lines.slice(1) : lines) {
@@ -64,5 +93,5 @@ export function pointsFile(text: string, options: GroundFileOptions): GroundFile
       ok: false,
       messages: [`The list has ${ring.length} corners; an edge needs at least 3.`],
     };
-  return { ok: true, outlines: [{ name: '', ring }], stated: null, notes: [] };
+  return { ok: true, outlines: [{ name: '', ring }], stated: null, notes };
 }

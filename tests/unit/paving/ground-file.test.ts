@@ -86,6 +86,31 @@ describe('points', () => {
     ]);
   });
 
+  test('numbers of corners, as survey lists have them first, are no places; a height is left out', () => {
+    const court = [
+      [0, 0],
+      [7200, 0],
+      [7200, 3100],
+    ];
+    // Point number, across, up, height, code: the usual order of a list from a survey instrument (common practice).
+    for (const text of [
+      '1,0,0\n2,7200,0\n3,7200,3100',
+      '101;0;0;12,5;K\n102;7200;0;12,4;K\n103;7200;3100;12,4;K',
+    ]) {
+      const { outlines, notes } = opened('a.csv', text);
+      expect(outlines[0].ring).toEqual(court);
+      expect(notes[0]).toMatch(/^The first column is taken for the numbers of the corners/);
+    }
+    const { outlines, notes } = opened('a.csv', '0,0,12\n7200,0,12\n7200,3100,12');
+    expect(outlines[0].ring).toEqual(court);
+    expect(notes[0]).toMatch(/third is left out/);
+  });
+
+  test('a corner that is written twice is one', () => {
+    expect(opened('a.csv', '0,0\n7200,0\n7200,0\n7200,3100').outlines[0].ring).toHaveLength(3);
+    expect(refused('a.csv', '0,0\n0.2,0\n0.2,0.2')![0]).toMatch(/unit may be wrong/);
+  });
+
   test('says which line cannot be read, and takes nothing by halves', () => {
     expect(refused('a.csv', '0,0\n7200,\nfar,3100')).toEqual([
       `Line 2: up is missing. Write 3200, 3.2 m or 10' 6".`,
@@ -183,6 +208,22 @@ describe('DXF', () => {
     expect(outlinesWithin(outlines, outlines[0]).map(({ name }) => name)).toEqual(['PIT']);
   });
 
+  test('a closed polyline that comes back to its first corner has it once', () => {
+    const places = [
+      [0, 0],
+      [5, 0],
+      [5, 4],
+      [0, 4],
+      [0, 0],
+    ].flatMap(([x, y]) => [10, x, 20, y]);
+    const { outlines } = opened(
+      'a.dxf',
+      dxf(...header(6), ...entities(0, 'LWPOLYLINE', 8, 'EDGE', 90, 5, 70, 1, ...places)),
+    );
+    expect(outlines[0].ring).toHaveLength(4);
+    expect(ringProblems(outlineGround(outlines[0], []))).toEqual([]);
+  });
+
   test('says what is wrong with a drawing that has no edge', () => {
     expect(
       refused('a.dxf', dxf(...entities(...line(0, 0, 1, 0), ...line(5, 5, 6, 5))))![0],
@@ -194,6 +235,30 @@ describe('DXF', () => {
 });
 
 describe('strands', () => {
+  test('of a large drawing are joined, the ring among them found', () => {
+    // 20 000 loose lines and, among them, a square of 4 × 5 000 lines end to end.
+    const loose = Array.from({ length: 20_000 }, (_, n): Vertex[] => [
+      [n * 10, -50_000],
+      [n * 10 + 5, -40_000],
+    ]);
+    const around = (n: number): Vertex => {
+      const along = (n % 5_000) * 4;
+      return (
+        [
+          [along, 0],
+          [20_000, along],
+          [20_000 - along, 20_000],
+          [0, 20_000 - along],
+        ] as const
+      )[Math.floor(n / 5_000) % 4] as Vertex;
+    };
+    const edge = Array.from({ length: 20_000 }, (_, n): Vertex[] => [around(n), around(n + 1)]);
+    const { rings, left } = chained([...loose, ...edge]);
+    expect(left).toBe(20_000);
+    expect(rings.map((ring) => ring.length)).toEqual([20_000]);
+    expect(vertexRingArea(rings[0])).toBeCloseTo(20_000 ** 2, 0);
+  });
+
   test('of any ring, cut up, mixed and turned about, come back as that ring', () => {
     const ring = fc
       .array(fc.integer({ min: 1000, max: 9000 }), { minLength: 3, maxLength: 12 })
