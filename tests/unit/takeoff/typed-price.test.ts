@@ -20,7 +20,11 @@ const laying = layFloor(
   ),
 );
 const ORDER = 'units:a:first-tone';
-const typed: TypedPrice = { orderId: ORDER, costMinor: 98_765, pack: { holds: 1, measure: 'each' } };
+const typed: TypedPrice = {
+  orderId: ORDER,
+  costMinor: 98_765,
+  pack: { holds: 1, measure: 'each' },
+};
 const slab: PriceItem = {
   id: 'slab',
   kind: 'unit',
@@ -45,7 +49,10 @@ const ordered = (prices: PriceList) =>
 describe('a price that was typed for an order', () => {
   test('counts where the catalogue has none', () => {
     // 12 × 987.65.
-    expect(ordered(list({ typed: [typed] }))).toMatchObject({ costMinor: 1_185_180, priceTyped: true });
+    expect(ordered(list({ typed: [typed] }))).toMatchObject({
+      costMinor: 1_185_180,
+      priceTyped: true,
+    });
   });
 
   test('gives way to the catalogue’s', () => {
