@@ -6,7 +6,7 @@ import type { TableCell, TableColumn } from './ruled-table';
 import { ruledTable } from './ruled-table';
 import type { SetOutInput } from './set-out-input';
 import type { TableContent } from './table-sheet';
-import { textRows } from './panel';
+import { keptTogether, textRows } from './panel';
 
 const COLUMNS: readonly TableColumn[] = [
   { title: 'No.', align: 'end', weight: 600 },
@@ -19,6 +19,12 @@ const COLUMNS: readonly TableColumn[] = [
   { title: 'Why these limits', align: 'start', grow: 1 },
 ];
 
+const CLOSE =
+  'A reading out of its limits: stop, find out why, and ask the designer before you go on. Checked by, and date:';
+const CLOSE_SPACE = 3;
+/** So many checks go on to the next sheet with the closing words. */
+const LAST_WITH_CLOSE = 3;
+
 /** Checks: what to measure, what it should read, and room for what it reads. */
 export function checksTable(input: SetOutInput): TableContent {
   const { setOut, laying } = input;
@@ -27,16 +33,24 @@ export function checksTable(input: SetOutInput): TableContent {
     kind: 'checks',
     type: 'Checks',
     title: `Checks${display === 'metric' ? ', in mm' : ''}`,
-    sections: (width) => [
-      ruledTable(COLUMNS, checkCells(setOut.checks, display), width),
-      {
-        header: null,
-        rows: textRows(
-          'A reading out of its limits: stop, find out why, and ask the designer before you go on. Checked by, and date:',
-          width,
-        ),
-      },
-    ],
+    sections: (width) => {
+      const { header, rows } = ruledTable(COLUMNS, checkCells(setOut.checks, display), width);
+      const close = textRows(CLOSE, width);
+      // Whoever signs has checks over the words, never a sheet of the words alone.
+      return [
+        {
+          header,
+          rows: [
+            ...rows.slice(0, -LAST_WITH_CLOSE),
+            ...keptTogether([
+              ...rows.slice(-LAST_WITH_CLOSE),
+              { height: CLOSE_SPACE, draw: () => [] },
+              ...close,
+            ]),
+          ],
+        },
+      ];
+    },
   };
 }
 

@@ -84,16 +84,15 @@ const REMEDIES: Readonly<Record<CheckKind, (long: boolean) => string>> = {
 export const readingRemedy = (check: Pick<Check, 'kind'>, verdict: Verdict): string | null =>
   verdict.within ? null : REMEDIES[check.kind](verdict.off > 0);
 
-/** The verdict in words: "Within: 2 mm over what is drawn." */
+/** The verdict in words: "Within: 2 mm over what is drawn." What the display's own steps cannot show is not said as 0. */
 export const verdictWords = (verdict: Verdict, display: Display): string => {
-  const off = formatLength(Math.abs(verdict.off), display, { decimals: 1 });
+  const said = (mm: number) => formatLength(mm, display, { decimals: 1 });
+  const [off, past, none] = [Math.abs(verdict.off), verdict.past, 0].map(said);
   const how =
-    Math.abs(verdict.off) <= READING_TOLERANCE_MM
-      ? 'just as drawn'
-      : `${off} ${verdict.off > 0 ? 'over' : 'under'} what is drawn`;
+    off === none ? 'just as drawn' : `${off} ${verdict.off > 0 ? 'over' : 'under'} what is drawn`;
   return verdict.within
     ? `Within: ${how}.`
-    : `Not within: ${how}, ${formatLength(verdict.past, display, { decimals: 1 })} past what will do.`;
+    : `Not within: ${how}, ${past === none ? 'just' : past} past what will do.`;
 };
 
 /** What will do, in words: "2 995 mm to 3 005 mm". */

@@ -75,6 +75,17 @@ describe('a reading against its check', () => {
     );
   });
 
+  test('what no sixteenth shows is not said as 0 inches', () => {
+    const edge = { expected: 6400, least: 6391, greatest: 6409 };
+    // 20 ft 11 15/16 in is 6399.2125 mm, as the edge itself is printed in inches (1 in = 25.4 mm exactly, NIST SP 811).
+    const read = readingVerdict(edge, (20 * 12 + 11 + 15 / 16) * 25.4);
+    expect(verdictWords(read, 'imperial')).toBe('Within: just as drawn.');
+    expect(verdictWords(read, 'metric')).toBe('Within: 0.8\u202fmm under what is drawn.');
+    expect(verdictWords({ within: false, off: 9.6, past: 0.6 }, 'imperial')).toBe(
+      'Not within: 3/8" over what is drawn, just past what will do.',
+    );
+  });
+
   test('without a limit on a side there is none to break there', () => {
     expect(readingVerdict({ expected: 40, least: 6, greatest: null }, 4000).within).toBe(true);
     expect(readingVerdict({ expected: 40, least: 6, greatest: null }, 5).within).toBe(false);

@@ -316,6 +316,28 @@ describe('the set-out pack', () => {
     expect(said[1]).toContain('What it is');
   });
 
+  it('has the last checks over the words to sign under, on every paper and for floors of every length of list', () => {
+    for (const paper of PAPER_NAMES)
+      for (const document of [
+        BAY,
+        COURT,
+        TERRACE,
+        STAR,
+        STAIRS,
+        PATH,
+        SIDE_YARD,
+        levelled(COURT),
+      ]) {
+        const sheets = pack(document, { paper }).filter(({ kinds }) => kinds.includes('checks'));
+        const { checks } = setOut(planInput(document).laying);
+        const closing = sheets.map(words).filter((said) => said.join(' ').includes('Checked by'));
+        expect(closing).toHaveLength(1);
+        for (const number of [checks.length - 2, checks.length])
+          expect(closing[0]).toContain(String(number));
+        expect(closing[0]).toContain('What to measure');
+      }
+  });
+
   it('says what of the build-up is not entered yet, and figures what is', () => {
     const section = (document: LayoutDocument) =>
       pack(document)
