@@ -2,11 +2,13 @@ import fc from 'fast-check';
 import { levenbergMarquardt } from 'ml-levenberg-marquardt';
 import { describe, expect, test } from 'vitest';
 import type { Point } from '@/geometry/point';
+import { ringArea } from '@/geometry/ring';
 import { misreading } from '@/paving/survey/misreading';
 import { figuredText } from '@/paving/figured-words';
 import { readTapes, surveyOf, surveyPointName, tapeName, usualTapes } from '@/paving/survey/survey';
 import { surveyWords } from '@/paving/survey/survey-words';
 import { MISTAKE, surveyAnswer } from '@/paving/survey/survey-answer';
+import { freshSurvey, lettersTurned, sideBent, tapeSide } from '@/paving/survey/survey-edits';
 import { surveyedGround } from '@/paving/survey/survey-ground';
 import { tapeError, tapesAdjusted } from '@/paving/survey/tape-adjustment';
 import { pointsPlaced, tapesMeet } from '@/paving/survey/tape-placing';
@@ -440,6 +442,50 @@ describe('a wrong reading', () => {
     expect(restAgrees).toBe(true);
   });
 
+  test('two of them, where the rest can tell: each is named with what the sound tapes say, and no other', () => {
+    // Every pair of six corners leaves six tapes to spare. A – B a metre short, C – F burned by 100 mm.
+    const errors = everyPair(6).map(([from, to]) =>
+      from === 0 && to === 1 ? -1000 : from === 2 && to === 5 ? 100 : 0,
+    );
+    const survey = surveyOfPoints(L_COURT, everyPair(6), { errors });
+    const { doubts, restAgrees } = surveyAnswer(survey);
+    expect(restAgrees).toBe(true);
+    const found = new Map(
+      doubts.map(({ tapes: [tape], should: [should] }) => [
+        tapeName(survey, survey.tapes[tape]),
+        should!,
+      ]),
+    );
+    expect([...found.keys()].sort()).toEqual(['A – B', 'C – F']);
+    expect(found.get('A – B')).toBeCloseTo(7200, 3);
+    expect(found.get('C – F')).toBeCloseTo(Math.hypot(7200, 5400 - 3100), 3);
+  });
+
+  test('more than the tapes can tell apart: no length is said of any of them', () => {
+    // Worked by trial: of the usual tapes of the court, three to check by, two are wrong.
+    const wrong = new Map([
+      ['A – C', 7389],
+      ['B – E', 7120],
+    ]);
+    const usual = surveyOf(L_COURT);
+    const survey = {
+      ...usual,
+      tapes: usual.tapes.map((tape) => ({
+        ...tape,
+        length:
+          wrong.get(tapeName(usual, tape)) ??
+          Math.round(distance(L_COURT[tape.from], L_COURT[tape.to])),
+      })),
+    };
+    const { state, words } = surveyWords(survey, surveyAnswer(survey), 'metric');
+    const said = words.map((sentence) => figuredText(sentence, 'metric'));
+    expect(state).toBe('doubt');
+    expect(said).toHaveLength(1);
+    expect(said[0]).toMatch(/^More than one reading is wrong, and the tapes cannot tell/);
+    expect(said[0]).toContain('B – E');
+    expect(said[0]).not.toMatch(/mm/);
+  });
+
   test('of the size that reading explains is none', () => {
     const survey = surveyOfPoints(L_COURT, everyPair(6), { errors: [2, -2, 1, -1, 2, -2] });
     const { agrees, tapes } = surveyAnswer(survey);
@@ -459,6 +505,80 @@ describe('a wrong reading', () => {
   ] as const)('%d for %d, %s: %s', (read, should, display, kind) => {
     // Common practice: how tapes are misread.
     expect(misreading(read, should, 0, display)).toBe(kind);
+  });
+});
+
+describe('what is said', () => {
+  const read = (pairs: readonly [number, number][]) => {
+    const survey = surveyOfPoints(L_COURT, pairs);
+    const { state, words } = surveyWords(survey, surveyAnswer(survey), 'metric');
+    return { state, said: words.map((sentence) => figuredText(sentence, 'metric')) };
+  };
+  const sides = L_COURT.map((_, n): [number, number] => [n, (n + 1) % 6]);
+  const fromA: [number, number][] = [
+    [0, 2],
+    [0, 3],
+    [0, 4],
+  ];
+
+  test('of a ground of which only a part is checked is which corners are not', () => {
+    // One spare tape, B – D, checks A to D; E hangs on A and D alone and F on A and E.
+    expect(read([...sides, ...fromA]).state).toBe('bare');
+    const { state, said } = read([...sides, ...fromA, [1, 3]]);
+    expect(state).toBe('part');
+    expect(said[1]).toBe(
+      'Nothing checks E and F: a wrong reading to one of them would not show. Tape one more to each.',
+    );
+    expect(read([...sides, ...fromA, [1, 3], [1, 4], [1, 5]]).state).toBe('agrees');
+  });
+
+  test('a wrong reading to a corner that is not checked does not show: it is one that is named', () => {
+    const pairs: [number, number][] = [...sides, ...fromA, [1, 3]];
+    const errors = pairs.map(([from, to]) => (from === 0 && to === 4 ? 200 : 0));
+    const survey = surveyOfPoints(L_COURT, pairs, { errors });
+    const { agrees, unchecked, places } = surveyAnswer(survey);
+    expect(agrees).toBe(true);
+    const off = distance(places[1]!, places[4]!) - distance(L_COURT[1], L_COURT[4]);
+    expect(Math.abs(off)).toBeGreaterThan(50);
+    expect(unchecked).toContain(4);
+  });
+});
+
+describe('letters run clockwise', () => {
+  test('come out as they stand once they are turned, and twice turned are as they were', () => {
+    // The court lettered clockwise from A, taped on its own letters; the sketch knows nothing of it.
+    const clockwise = L_COURT.map((_, n) => L_COURT[(6 - n) % 6]);
+    const fresh = freshSurvey(6);
+    const survey = {
+      ...fresh,
+      tapes: everyPair(6).map(([from, to]) => ({
+        from,
+        to,
+        length: distance(clockwise[from], clockwise[to]),
+      })),
+    };
+    const area = (points: readonly (Point | null)[]) => ringArea(points as Point[]);
+    const turnOf = (points: readonly (Point | null)[]) => {
+      // On which side of the line from A to its neighbour the court steps in: told by the longer of the two first sides.
+      const [a, b, , , , f] = points as Point[];
+      return distance(a, b) > distance(a, f);
+    };
+    expect(turnOf(surveyAnswer(survey).places)).toBe(false);
+    const turned = surveyAnswer(lettersTurned(survey)).places;
+    expectShape(turned, L_COURT, 0.01);
+    expect(turnOf(turned)).toBe(true);
+    expect(area(turned)).toBeGreaterThan(0);
+    expect(lettersTurned(lettersTurned(survey))).toEqual(survey);
+  });
+
+  test('arcs go with their sides', () => {
+    const survey = sideBent(freshSurvey(5), 0, 0, 300);
+    // A – B becomes A – E: the last side.
+    expect(lettersTurned(survey).arcs).toEqual([{ ring: 0, edge: 4, rise: 300 }]);
+    expect(tapeSide(lettersTurned(survey), lettersTurned(survey).tapes[0])).toEqual({
+      ring: 0,
+      edge: 4,
+    });
   });
 });
 

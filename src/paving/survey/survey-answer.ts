@@ -23,6 +23,8 @@ const NO_RING = 1000;
 const MISREAD = 100;
 /** Shapes that differ by less are one, mm. */
 const ONE_SHAPE_MM = 5;
+/** A tape is checked when so great a share of an error shows: at less, some 100 mm could hide in it. */
+const CHECKED = 0.01;
 /** At most so many tapes are doubted, one after another. */
 const MOST_DOUBTS = 4;
 
@@ -43,6 +45,8 @@ export interface SurveyAnswer {
   readonly tapes: readonly (TapeResidual | null)[];
   /** Tapes read beyond those that the points need: what they are checked by. */
   readonly spare: number;
+  /** Fixed points that no tape checks: a wrong reading there would not show. */
+  readonly unchecked: readonly number[];
   /** No residual is beyond what reading a tape explains. */
   readonly agrees: boolean;
   /** The greatest residual, mm, without its sign. */
@@ -65,6 +69,7 @@ function nothingRead(survey: Survey): SurveyAnswer {
     error: Array.from({ length: points }, () => Infinity),
     tapes: survey.tapes.map(() => null),
     spare: 0,
+    unchecked: [],
     agrees: true,
     greatest: 0,
     doubts: [],
@@ -125,6 +130,7 @@ export function surveyAnswer(survey: Survey): SurveyAnswer {
     error: adjustment.error,
     tapes: residuals,
     spare: adjustment.spare,
+    unchecked: pointsUnchecked(adjustment, tapes),
     agrees: agree(adjustment),
     greatest: Math.max(0, ...adjustment.tapes.map(({ residual }) => Math.abs(residual))),
     doubts,
@@ -227,7 +233,51 @@ function tapeDoubts(
     }
     [{ rest: used, adjustment: now }] = named;
   }
-  return { doubts, restAgrees: true, shapes: [] };
+  return { doubts: doubtsSettled(doubts, now, used, tapes, base), restAgrees: true, shapes: [] };
+}
+
+/**
+ * Doubts of which each names one tape, looked at once more when all wrong tapes are out: a tape that agrees with
+ * what is left was blamed for another's fault, and what each should read is what the sound tapes say.
+ */
+function doubtsSettled(
+  doubts: readonly TapeDoubt[],
+  sound: TapeAdjustment,
+  used: readonly ReadTape[],
+  tapes: readonly ReadTape[],
+  base: readonly [number, number],
+): TapeDoubt[] {
+  let now = sound;
+  let kept = used;
+  const wrong: ReadTape[] = [];
+  for (const {
+    tapes: [doubted],
+  } of doubts) {
+    const tape = tapes.find((other) => other.tape === doubted)!;
+    const rest = [...kept, tape];
+    const adjustment = doubts.length > 1 ? tapesAdjusted(now.places, rest, base) : now;
+    const own = adjustment.tapes.find((other) => other.tape === doubted);
+    if (own && own.share > 0 && agree(adjustment)) {
+      kept = rest;
+      now = adjustment;
+    } else wrong.push(tape);
+  }
+  return wrong.map(({ tape, from, to }) => {
+    const [[ax, ay], [bx, by]] = [now.places[from], now.places[to]];
+    const loose = now.loose[from] || now.loose[to];
+    return { tapes: [tape], should: [loose ? null : Math.hypot(bx - ax, by - ay)] };
+  });
+}
+
+/** Fixed points all of whose tapes are read without a check. */
+function pointsUnchecked(
+  { tapes, loose }: TapeAdjustment,
+  read: readonly ReadTape[],
+): readonly number[] {
+  const checked = new Set(
+    read.flatMap(({ from, to }, n) => (tapes[n].share >= CHECKED ? [from, to] : [])),
+  );
+  return loose.flatMap((is, point) => (is || checked.has(point) ? [] : [point]));
 }
 
 /** True when no residual is more than chance explains. */

@@ -104,6 +104,28 @@ export function sideBent(survey: Survey, ring: number, edge: number, rise: numbe
   return { ...survey, arcs: rise === 0 ? others : [...others, { ring, edge, rise }] };
 }
 
+/**
+ * With the letters of every ring run round the other way, the first corner of each kept: for tapes that were
+ * read to corners lettered clockwise. The readings go with their corners, so that the ground is mirrored.
+ */
+export function lettersTurned(survey: Survey): Survey {
+  const starts = ringStarts(survey);
+  const turned = (point: number): number => {
+    const ring = survey.rings.findIndex((_, n) => point < starts[n + 1]);
+    if (ring < 0) return point;
+    const { corners } = survey.rings[ring];
+    return starts[ring] + ((corners - (point - starts[ring])) % corners);
+  };
+  return {
+    ...survey,
+    tapes: survey.tapes.map((tape) => ({ ...tape, from: turned(tape.from), to: turned(tape.to) })),
+    arcs: survey.arcs.map((arc) => ({
+      ...arc,
+      edge: survey.rings[arc.ring].corners - 1 - arc.edge,
+    })),
+  };
+}
+
 /** The ring and edge that a tape lies along; null for one that runs across. */
 export function tapeSide(
   survey: Survey,

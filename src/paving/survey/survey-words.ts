@@ -5,16 +5,20 @@ import { readTapes, surveyPointName, tapeName, type Survey } from './survey';
 import type { SurveyAnswer, TapeDoubt } from './survey-answer';
 import { tapeError } from './tape-adjustment';
 
-/** What is said of a survey: `short` of readings, `bare` of checks, agreeing, or in doubt. */
+/** What is said of a survey: `short` of readings, `bare` of checks, checked in `part`, agreeing, or in doubt. */
 export interface SurveyWords {
-  readonly state: 'short' | 'bare' | 'agrees' | 'doubt';
+  readonly state: 'short' | 'bare' | 'part' | 'agrees' | 'doubt';
   readonly words: readonly FiguredWords[];
 }
 
-const GUESSES: Readonly<Record<Misreading, string>> = {
+const guessWords = (slip: Misreading, display: Display): string =>
+  slip === 'miscounted'
+    ? `A whole ${display === 'metric' ? 'metre' : 'foot'} may have been counted too many or too few.`
+    : GUESSES[slip];
+
+const GUESSES: Readonly<Record<Exclude<Misreading, 'miscounted'>, string>> = {
   'digits swapped': 'Two digits may have changed places.',
   'burned tape': 'The tape may have been held at a mark rather than at its end.',
-  miscounted: 'A whole one may have been counted too many or too few.',
   'one digit': 'One digit may have been misread.',
 };
 
@@ -71,7 +75,7 @@ function doubtWords(
       const at = doubt.tapes.indexOf(slips[0]);
       const { length = 0 } = survey.tapes[slips[0]];
       const slip = slipOf(survey, slips[0], doubt.should[at], display)!;
-      return figured`One of ${listed(names, 'or')} is wrong. It looks like ${names[at]}: it reads ${{ mm: length }}, and ${{ mm: doubt.should[at]! }} would agree. ${GUESSES[slip]} ${more}`;
+      return figured`One of ${listed(names, 'or')} is wrong. It looks like ${names[at]}: it reads ${{ mm: length }}, and ${{ mm: doubt.should[at]! }} would agree. ${guessWords(slip, display)} ${more}`;
     }
     return answer.spare === 1
       ? `One of the tapes is wrong, and with one to check by nobody can tell which. ${more}`
@@ -81,16 +85,32 @@ function doubtWords(
   if (should === null)
     return `${name} does not agree with the other tapes. Read it again, or leave it out.`;
   const guess = slipOf(survey, tape, should, display);
-  return figured`${name} does not agree with the others: it reads ${{ mm: length }}, they say ${{ mm: should }}. ${guess ? `${GUESSES[guess]} ` : ''}Read it again, or leave it out.`;
+  return figured`${name} does not agree with the others: it reads ${{ mm: length }}, they say ${{ mm: should }}. ${guess ? `${guessWords(guess, display)} ` : ''}Read it again, or leave it out.`;
+}
+
+/** Several readings are wrong, and what is left does not tell them apart: no length is given for any of them. */
+function muddleWords(survey: Survey, { doubts }: SurveyAnswer): string {
+  const tapes = [...new Set(doubts.flatMap((doubt) => doubt.tapes))];
+  const names = tapes.slice(0, MOST_NAMES).map((tape) => tapeName(survey, survey.tapes[tape]));
+  return `More than one reading is wrong, and the tapes cannot tell what each should be. Read these again, the most doubtful first: ${listed(names)}.`;
+}
+
+function uncheckedWords(survey: Survey, { unchecked }: SurveyAnswer): string {
+  const names = unchecked.slice(0, MOST_NAMES).map((n) => surveyPointName(survey, n));
+  if (unchecked.length > MOST_NAMES) names.push(`${unchecked.length - MOST_NAMES} more`);
+  return unchecked.length === 1
+    ? `Nothing checks ${names[0]}: a wrong reading to it would not show. Tape one more to it.`
+    : `Nothing checks ${listed(names)}: a wrong reading to one of them would not show. Tape one more to each.`;
 }
 
 /** What the tapes come to, in sentences for whoever holds them. */
 export function surveyWords(survey: Survey, answer: SurveyAnswer, display: Display): SurveyWords {
   const words: FiguredWords[] = [];
   const loose = answer.places.some((place) => place === null);
-  for (const doubt of answer.doubts) words.push(doubtWords(survey, answer, doubt, display));
-  if (answer.doubts.length > 0 && !answer.restAgrees && answer.doubts[0].tapes.length === 1)
-    words.push('Without these the rest do not agree either: more than one tape is wrong.');
+  const one = answer.doubts.length === 1 && answer.doubts[0].tapes.length > 1;
+  if (answer.doubts.length > 0 && !answer.restAgrees && !one)
+    words.push(muddleWords(survey, answer));
+  else for (const doubt of answer.doubts) words.push(doubtWords(survey, answer, doubt, display));
   if (loose) words.push(looseWords(survey, answer));
   if (answer.doubts.length > 0) return { state: 'doubt', words };
   if (loose) return { state: 'short', words };
@@ -105,5 +125,7 @@ export function surveyWords(survey: Survey, answer: SurveyAnswer, display: Displ
   words.push(
     figured`${count} tapes fix ${answer.places.length} points with ${answer.spare} to check by. They agree to ${{ mm: answer.greatest, decimals: 1 }}; each point is sure to about ±${{ mm: sure }}.`,
   );
-  return { state: 'agrees', words };
+  if (answer.unchecked.length === 0) return { state: 'agrees', words };
+  words.push(uncheckedWords(survey, answer));
+  return { state: 'part', words };
 }

@@ -190,7 +190,9 @@ function Outlines({
   const size = outlineSize(edge, reader);
 
   const take = () => {
-    table.getState().edit(({ survey: _, ...now }): LayoutDocument => ({ ...now, ground }));
+    table
+      .getState()
+      .edit(({ survey: _, ...now }): LayoutDocument => ({ ...now, ground, lifted: [] }));
     table.getState().set({
       pick: null,
       hover: null,

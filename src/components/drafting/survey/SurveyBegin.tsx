@@ -51,6 +51,10 @@ export function SurveyBegin({
       </section>
       <section className="space-y-2 border-t border-stone-300 pt-3">
         <h3>Another ground</h3>
+        <p className="text-slate">
+          Chalk a letter at each corner first: A wherever you like, then B, C and on as you walk
+          round with the ground on your <b>left</b> hand.
+        </p>
         <div className="flex items-end gap-3">
           <div className="w-28">
             <NumberField

@@ -4,6 +4,7 @@ import type { Point } from '@/geometry/point';
 import { ringStarts, surveyPointName, tapeName, type Survey } from '@/paving/survey/survey';
 import { surveyAnswer } from '@/paving/survey/survey-answer';
 import {
+  lettersTurned,
   pegAdded,
   pegTakenAway,
   shapeTaken,
@@ -45,6 +46,7 @@ function SurveySheet({ onClose }: { onClose: () => void }) {
 const STATE_LOOK = {
   short: 'border-slate bg-stone-100',
   bare: 'border-slate bg-stone-100',
+  part: 'border-amber bg-stone-100',
   agrees: 'border-vial bg-stone-100',
   doubt: 'border-amber bg-amber-wash',
 } as const;
@@ -52,8 +54,18 @@ const STATE_LOOK = {
 const STATE_NAME = {
   short: 'More tapes are needed',
   bare: 'Fixed, but not checked',
+  part: 'Fixed, but not all is checked',
   agrees: 'The tapes agree',
   doubt: 'The tapes do not agree',
+} as const;
+
+/** Said beside what lays the ground, where the rest may be out of sight. */
+const STATE_CAUTION = {
+  short: 'More tapes are needed before it is a ground.',
+  bare: 'Nothing checks these tapes yet. Tape one more before anybody digs.',
+  part: 'A part is not checked yet. Tape more before anybody digs.',
+  agrees: 'The tapes agree.',
+  doubt: 'A reading is wrong, and it bends this shape. Put it right before anybody digs.',
 } as const;
 
 function SurveyForm({
@@ -82,11 +94,14 @@ function SurveyForm({
 
   const lay = () => {
     if (!ground) return;
-    table.getState().edit((now) => ({ ...now, ground }));
+    // On a ground of another shape nothing is left of the units that were lifted by hand.
+    const anew = document.ground.perimeter.length !== ground.perimeter.length;
+    table.getState().edit((now) => ({ ...now, ground, ...(anew && { lifted: [] }) }));
+    const drawn = ground.keepOuts.length > survey.rings.length - 1;
     table.getState().set({
       pick: null,
       hover: null,
-      said: 'The ground is as taped. Undo brings back the one before.',
+      said: `The ground is as taped.${drawn ? ' Keep-outs that were not taped stand where they were drawn.' : ''} Undo brings back the one before.`,
     });
     zoomToFit(table);
     onClose();
@@ -111,8 +126,22 @@ function SurveyForm({
       <div className="space-y-3 md:sticky md:top-0 md:self-start">
         <SurveyPicture {...{ survey, answer, places }} picked={live} />
         <p className="text-sm text-slate">
-          Letters run anticlockwise, as seen from above. Dotted tapes are still to be read; an empty
-          ring is a point that stands as sketched.
+          Letters run anticlockwise, as seen from above: walking from A to B, the ground is on your
+          left. Dotted tapes are still to be read; an empty ring is a point that stands as sketched.
+        </p>
+        <p className="text-sm text-slate">
+          Lettered the other way round, the ground would come out as in a mirror, and no tape can
+          show that.{' '}
+          <button
+            type="button"
+            className="button button-quiet"
+            onClick={() => {
+              setOpened(null);
+              onSurvey(lettersTurned(survey));
+            }}
+          >
+            My letters run clockwise
+          </button>
         </p>
         {answer.others.length > 0 && (
           <div className="space-y-1">
@@ -167,7 +196,7 @@ function SurveyForm({
                 <ul className="hairlines">
                   {tapes.map((index) => (
                     <TapeRow
-                      key={`${survey.tapes[index].from}-${survey.tapes[index].to}`}
+                      key={`${survey.tapes[index].from}-${survey.tapes[index].to}-${tapesBefore(survey, index)}`}
                       {...{ survey, answer, index, display, onSurvey }}
                       live={live === index}
                       open={opened === index}
@@ -197,11 +226,15 @@ function SurveyForm({
               Take peg {surveyPointName(survey, survey.sketch.length - 1)} away
             </button>
           )}
-          <button type="button" className="button button-quiet" onClick={() => onSurvey(undefined)}>
-            Begin anew
-          </button>
+          <BeginAnew read={survey.tapes.some(isRead)} onAnew={() => onSurvey(undefined)} />
         </div>
         <div className="sticky -bottom-4 -mb-4 flex flex-wrap justify-end gap-2 border-t border-graphite bg-stone-50 pt-3 pb-5">
+          <p
+            data-testid="survey-caution"
+            className={`w-full text-sm ${state === 'doubt' ? 'font-semibold text-amber' : 'text-slate'}`}
+          >
+            {STATE_CAUTION[state]}
+          </p>
           <button type="button" className="button" onClick={onClose}>
             Go on later
           </button>
@@ -219,8 +252,47 @@ function SurveyForm({
   );
 }
 
+const isRead = ({ length }: Survey['tapes'][number]): boolean => length !== undefined;
+
+/** Rubs the whole survey out; asked once more where there is anything to lose. */
+function BeginAnew({ read, onAnew }: { read: boolean; onAnew: () => void }) {
+  const [asked, setAsked] = useState(false);
+  if (!asked)
+    return (
+      <button
+        type="button"
+        className="button button-quiet"
+        onClick={() => (read ? setAsked(true) : onAnew())}
+      >
+        Begin anew
+      </button>
+    );
+  return (
+    <div role="group" aria-label="Begin anew" className="flex w-full flex-wrap gap-2">
+      <p className="w-full">All readings go. Undo on the table brings them back.</p>
+      <button type="button" className="button" onClick={onAnew}>
+        Rub all readings out
+      </button>
+      <button
+        type="button"
+        autoFocus
+        className="button button-quiet"
+        onClick={() => setAsked(false)}
+      >
+        Keep them
+      </button>
+    </div>
+  );
+}
+
 const indexesOf = ({ tapes }: Survey, keep: (index: number) => boolean): number[] =>
   tapes.flatMap((_, n) => (keep(n) ? [n] : []));
+
+/** How many tapes between the same points stand before this one. */
+const tapesBefore = ({ tapes }: Survey, index: number): number =>
+  tapes
+    .slice(0, index)
+    .filter(({ from, to }) => from === tapes[index].from && to === tapes[index].to).length;
 
 /** The first two points between which no tape is listed; the first two of all where there is one everywhere. */
 function untaped(survey: Survey): { from: number; to: number } {
