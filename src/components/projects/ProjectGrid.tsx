@@ -3,7 +3,13 @@ import { FloorDrawing } from '../ui/FloorDrawing';
 import { Moment } from '../ui/Moment';
 import { STATE_WORDS } from '../ui/version-words';
 
-export function ProjectGrid({ projects }: { projects: readonly ProjectSummary[] }) {
+interface Props {
+  readonly projects: readonly ProjectSummary[];
+  /** Whoever may name a project's client is told that it has none yet. */
+  readonly naming: boolean;
+}
+
+export function ProjectGrid({ projects, naming }: Props) {
   return (
     <ul className="mt-6 grid gap-x-8 gap-y-10 sm:grid-cols-2 lg:grid-cols-3">
       {projects.map((project) => (
@@ -17,8 +23,12 @@ export function ProjectGrid({ projects }: { projects: readonly ProjectSummary[] 
               <span className="shrink-0 text-sm text-slate">{STATE_WORDS[project.stage]}</span>
             </div>
             <p className="truncate text-slate">
-              {project.clientName || 'No client named yet'} · {project.layouts}{' '}
-              {project.layouts === 1 ? 'layout' : 'layouts'}
+              {[
+                project.clientName || (naming && 'No client named yet'),
+                project.layouts === 1 ? '1 layout' : `${project.layouts} layouts`,
+              ]
+                .filter(Boolean)
+                .join(' · ')}
             </p>
             <div className="mt-3 flex h-56 items-center justify-center border border-stone-300 p-4">
               {project.document ? (

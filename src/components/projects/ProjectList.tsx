@@ -101,7 +101,7 @@ function List({ look: firstLook, first, role, any }: Props) {
               onSort={(sort) => change({ sort })}
             />
           ) : (
-            <ProjectGrid projects={projects} />
+            <ProjectGrid projects={projects} naming={drafting} />
           ))}
       </div>
       {list.data && projects.length === 0 && !list.isFetching && (
