@@ -283,10 +283,17 @@ export function mostPlay(
       within = Math.min(reach, atMost, nearest + h);
       const all = listed >= within ? source : every;
       count = gathered(all, all.length, within, box, u, v, h, false);
-      for (let at = 0; at < count; at++) nearest = Math.min(nearest, room.distance[at]);
+      let gained = Infinity;
+      for (let at = 0; at < count; at++) {
+        nearest = Math.min(nearest, room.distance[at]);
+        // In through an arc one may come from either side of it.
+        if (room.side[at] < 0 || near.radius[own[at]] > 0)
+          gained = Math.min(gained, room.distance[at]);
+      }
       planesAbout(room, own, count, u, v, h);
-      // The planes tell of the point's own face; the way to another face in the box crosses a piece.
-      const across = h - nearest;
+      // The planes tell of the point's own face. Another face in the box lacks some of its units and has as many others:
+      // the way there goes out through one piece and in through another, and has no more slack than beyond that one.
+      const across = nearest < h ? h - gained : -Infinity;
       const top = envelopeTop(planes, ax - u, ay - v, bx - u, by - v);
       bound = Math.min(within, Math.max(top, across));
       if (nearest > best) offer(nearest, u, v);
