@@ -1,5 +1,6 @@
 import DxfParser from 'dxf-parser';
 import { MM_PER_BARE, roundedMm } from '../cell-list';
+import { formatCount } from '../count';
 import type { Vertex } from '../layout-document';
 import { MM_PER_FOOT, MM_PER_INCH } from '../length';
 import { chained, type Strand } from './chained';
@@ -141,12 +142,12 @@ export function dxfFile(text: string, { bare }: GroundFileOptions): GroundFile {
         ? [
             loose === 1
               ? 'One line does not close on itself and is left out.'
-              : `${loose} lines do not close on themselves and are left out.`,
+              : `${formatCount(loose)} lines do not close on themselves and are left out.`,
           ]
         : []),
       ...(others > 0
         ? [
-            `${others === 1 ? 'One thing' : `${others} things`} in the drawing (blocks, curves of other kinds) cannot be read as an edge.`,
+            `${others === 1 ? 'One thing' : `${formatCount(others)} things`} in the drawing (blocks, curves of other kinds) cannot be read as an edge.`,
           ]
         : []),
     ],

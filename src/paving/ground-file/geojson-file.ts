@@ -1,5 +1,6 @@
 import proj4 from 'proj4';
 import { z } from 'zod';
+import { formatCount } from '../count';
 import type { Vertex } from '../layout-document';
 import { roundedMm } from '../cell-list';
 import type { GroundFile, Outline } from './outline';
@@ -110,7 +111,7 @@ export function geojsonFile(text: string): GroundFile {
         ? [
             open === 1
               ? 'One line does not close on itself and is left out.'
-              : `${open} lines do not close on themselves and are left out.`,
+              : `${formatCount(open)} lines do not close on themselves and are left out.`,
           ]
         : []),
     ],

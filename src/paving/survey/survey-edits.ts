@@ -118,7 +118,12 @@ export function lettersTurned(survey: Survey): Survey {
   };
   return {
     ...survey,
-    tapes: survey.tapes.map((tape) => ({ ...tape, from: turned(tape.from), to: turned(tape.to) })),
+    tapes: survey.tapes.map((tape) => {
+      const [from, to] = [turned(tape.to), turned(tape.from)];
+      // Sides are named as they run, tapes across by the first letter.
+      const ordered = tapeSide(survey, tape) !== null || from < to;
+      return { ...tape, from: ordered ? from : to, to: ordered ? to : from };
+    }),
     arcs: survey.arcs.map((arc) => ({
       ...arc,
       edge: survey.rings[arc.ring].corners - 1 - arc.edge,

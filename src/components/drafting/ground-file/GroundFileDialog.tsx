@@ -216,9 +216,22 @@ function Outlines({
           <dt className="text-slate">Measured in</dt>
           <dd>{file.stated ?? 'what is said above'}</dd>
         </dl>
-        <p className="text-slate">
-          If the size cannot be right, the unit is wrong: check one side against a tape.
-        </p>
+        {oddSize(size) ? (
+          <p
+            role="alert"
+            className="border-l-4 border-amber bg-amber-wash px-3 py-2"
+            data-testid="odd-size"
+          >
+            A floor is hardly ever as {oddSize(size)} as that. The unit is probably wrong:{' '}
+            {file.stated === null
+              ? 'choose another above.'
+              : 'look at how the drawing was saved, or choose another outline.'}
+          </p>
+        ) : (
+          <p className="text-slate">
+            If the size cannot be right, the unit is wrong: check one side against a tape.
+          </p>
+        )}
         {file.outlines.length > 1 && (
           <label className="block">
             <span className="field-label">The edge is</span>
@@ -321,6 +334,15 @@ function outlineSize(outline: Outline, reader: Reader) {
     across: Math.max(...xs) - Math.min(...xs),
     up: Math.max(...ys) - Math.min(...ys),
   };
+}
+
+/** Floors are seldom wider than this or narrower than that, mm: common practice. */
+const HARDLY = { wider: 300_000, narrower: 300 };
+
+/** How a size is odd for a floor, as it is where a drawing's unit was mistaken; null where it is not. */
+function oddSize({ across, up }: { across: number; up: number }): 'large' | 'small' | null {
+  if (Math.max(across, up) > HARDLY.wider) return 'large';
+  return Math.max(across, up) < HARDLY.narrower ? 'small' : null;
 }
 
 /** Outlines drawn beyond this number are left out of the picture. */

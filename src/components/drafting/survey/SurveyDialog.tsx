@@ -129,20 +129,6 @@ function SurveyForm({
           Letters run anticlockwise, as seen from above: walking from A to B, the ground is on your
           left. Dotted tapes are still to be read; an empty ring is a point that stands as sketched.
         </p>
-        <p className="text-sm text-slate">
-          Lettered the other way round, the ground would come out as in a mirror, and no tape can
-          show that.{' '}
-          <button
-            type="button"
-            className="button button-quiet"
-            onClick={() => {
-              setOpened(null);
-              onSurvey(lettersTurned(survey));
-            }}
-          >
-            My letters run clockwise
-          </button>
-        </p>
         {answer.others.length > 0 && (
           <div className="space-y-1">
             <p>
@@ -183,7 +169,7 @@ function SurveyForm({
             </p>
           ))}
         </div>
-        <div ref={list} onKeyDown={onKeyDown} className="space-y-4">
+        <div ref={list} onKeyDown={onKeyDown} className="space-y-4 [&_input]:scroll-mb-36">
           {groups.map(({ name, tapes }) => (
             <section key={name} aria-label={name}>
               <div className="flex items-baseline border-b border-graphite pb-1">
@@ -226,8 +212,22 @@ function SurveyForm({
               Take peg {surveyPointName(survey, survey.sketch.length - 1)} away
             </button>
           )}
+          <button
+            type="button"
+            className="button button-quiet"
+            onClick={() => {
+              setOpened(null);
+              onSurvey(lettersTurned(survey));
+            }}
+          >
+            My letters run clockwise
+          </button>
           <BeginAnew read={survey.tapes.some(isRead)} onAnew={() => onSurvey(undefined)} />
         </div>
+        <p className="text-sm text-slate">
+          Letters that run clockwise would give the ground as in a mirror, and no tape can show
+          that. Turned round, A stays and the others change places: chalk them anew.
+        </p>
         <div className="sticky -bottom-4 -mb-4 flex flex-wrap justify-end gap-2 border-t border-graphite bg-stone-50 pt-3 pb-5">
           <p
             data-testid="survey-caution"
@@ -276,7 +276,7 @@ function BeginAnew({ read, onAnew }: { read: boolean; onAnew: () => void }) {
       <button
         type="button"
         autoFocus
-        className="button button-quiet"
+        className="button button-quiet scroll-mb-36"
         onClick={() => setAsked(false)}
       >
         Keep them
