@@ -5,7 +5,7 @@ import { fitFrame } from '@/paving/fit/fit-frame';
 import type { LayoutDocument } from '@/paving/layout-document';
 import { COURT_CHEQUER, COURT_SQUARE, ROUND_TERRACE, SIDE_YARD } from '@/server/demo-layouts';
 import { fitFloors, squareFloor } from './fit-floors';
-import { medianMs, type Bench, type Ratio } from './ratio';
+import { medianMs, medianOf, type Bench, type Ratio } from './ratio';
 
 /** Starts that the search tries each way. */
 const SEARCH = 64;
@@ -25,19 +25,27 @@ function searchMost(document: LayoutDocument): number {
 }
 
 /** Work is repeated for so long before it is timed, the fit as the search, so that all of it runs compiled, ms. */
-const WARM_MS = 300;
+const WARM_MS = 1000;
 
 /** Then it is timed for so long, or as many times as `RUNS` tells where that is longer, ms. */
-const TIMED_MS = 150;
+const TIMED_MS = 300;
 
-function warmMs(work: () => unknown): number {
-  const end = performance.now() + WARM_MS;
-  let runs = 0;
-  while (performance.now() < end) {
-    work();
-    runs++;
+/** Medians of several works that are timed by turns, so that what else the machine does falls on all alike, ms. */
+function warmMs(...works: readonly (() => unknown)[]): number[] {
+  for (const work of works) {
+    const end = performance.now() + WARM_MS;
+    while (performance.now() < end) work();
   }
-  return medianMs(work, Math.max(RUNS, Math.round((runs * TIMED_MS) / WARM_MS)), 0);
+  const times = works.map((): number[] => []);
+  const end = performance.now() + TIMED_MS * works.length;
+  for (let run = 0; run < RUNS || performance.now() < end; run++) {
+    works.forEach((work, n) => {
+      const start = performance.now();
+      work();
+      times[n].push(performance.now() - start);
+    });
+  }
+  return times.map(medianOf);
 }
 
 /**
@@ -53,9 +61,11 @@ export const fitAgainstSearch: Bench = {
       const found = searchMost(document);
       const { wholeUnits } = fit(document, { choices: false });
       if (wholeUnits < found) throw new Error(`${name}: fit ${wholeUnits}, search ${found}`);
-      const search = warmMs(() => searchMost(document));
-      const proof = warmMs(() => frameMost(fitFrame(document)));
-      const best = warmMs(() => fit(document, { choices: false }));
+      const [search, proof, best] = warmMs(
+        () => searchMost(document),
+        () => frameMost(fitFrame(document)),
+        () => fit(document, { choices: false }),
+      );
       const units = `fit ${wholeUnits} units, search ${found}`;
       return [
         {
@@ -83,7 +93,8 @@ export const fitOnTable: Bench = {
   name: 'fit-on-table',
   run: () => {
     const prompt = Object.entries(demo).map(([name, document]): Ratio => {
-      const ms = medianMs(() => fit(document), RUNS, 4);
+      // The table's worker lives on: its fits run compiled.
+      const [ms] = warmMs(() => fit(document));
       return {
         name: `${name}: the whole fit ÷ ${PROMPT_MS} ms`,
         value: ms / PROMPT_MS,
@@ -91,7 +102,7 @@ export const fitOnTable: Bench = {
         detail: `${ms.toFixed(1)} ms with the trade-off`,
       };
     });
-    const single = medianMs(() => fit(COURT_CHEQUER), RUNS, 4);
+    const [single] = warmMs(() => fit(COURT_CHEQUER));
     const range = { from: 0, to: 90, step: 0.5 };
     const sweep = medianMs(() => fit(COURT_CHEQUER, { turn: range }), 3, 1);
     return [

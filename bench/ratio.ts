@@ -16,10 +16,15 @@ export interface Bench {
 /** Median wall time of `runs` calls after `warm` calls that are not counted, ms. */
 export function medianMs(work: () => unknown, runs: number, warm = 2): number {
   for (let n = 0; n < warm; n++) work();
-  const times = Array.from({ length: runs }, () => {
-    const from = performance.now();
-    work();
-    return performance.now() - from;
-  }).sort((one, other) => one - other);
-  return times[times.length >> 1];
+  return medianOf(
+    Array.from({ length: runs }, () => {
+      const from = performance.now();
+      work();
+      return performance.now() - from;
+    }),
+  );
+}
+
+export function medianOf(times: readonly number[]): number {
+  return [...times].sort((one, other) => one - other)[times.length >> 1];
 }
