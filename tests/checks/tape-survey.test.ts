@@ -427,7 +427,7 @@ describe('a wrong reading', () => {
     );
     // √(7200² + 3100²) = 7838.9, worked by hand; read as 7389.
     expect(said[0]).toContain(
-      'It looks like A – C: it reads 7\u202f389\u202fmm, and 7\u202f839\u202fmm would agree.',
+      'It looks like A\u00a0–\u00a0C: it reads 7\u202f389\u202fmm, and 7\u202f839\u202fmm would agree.',
     );
     expect(said[0]).toContain('Two digits may have changed places.');
     const { from, to } = answer.telling!;
@@ -482,7 +482,7 @@ describe('a wrong reading', () => {
     expect(state).toBe('doubt');
     expect(said).toHaveLength(1);
     expect(said[0]).toMatch(/^More than one reading is wrong, and the tapes cannot tell/);
-    expect(said[0]).toContain('B – E');
+    expect(said[0]).toContain('B\u00a0–\u00a0E');
     expect(said[0]).not.toMatch(/mm/);
   });
 

@@ -1,7 +1,7 @@
 import { figured, type FiguredWords } from '../figured-words';
 import type { Display } from '../length';
 import { misreading, type Misreading } from './misreading';
-import { readTapes, surveyPointName, tapeName, type Survey } from './survey';
+import { readTapes, surveyPointName, tapeName, type Survey, type Tape } from './survey';
 import type { SurveyAnswer, TapeDoubt } from './survey-answer';
 import { tapeError } from './tape-adjustment';
 
@@ -21,6 +21,10 @@ const GUESSES: Readonly<Record<Exclude<Misreading, 'miscounted'>, string>> = {
   'burned tape': 'The tape may have been held at a mark rather than at its end.',
   'one digit': 'One digit may have been misread.',
 };
+
+/** A tape's name within a sentence: no line ends in the middle of it. */
+const tapeWord = (survey: Survey, tape: Pick<Tape, 'from' | 'to'>): string =>
+  tapeName(survey, tape).replaceAll(' ', '\u00a0');
 
 /** `A`, `A and B`, `A, B and C`. */
 function listed(names: readonly string[], last = 'and'): string {
@@ -63,11 +67,11 @@ function doubtWords(
 ): FiguredWords {
   const [tape] = doubt.tapes;
   const [should] = doubt.should;
-  const name = tapeName(survey, survey.tapes[tape]);
+  const name = tapeWord(survey, survey.tapes[tape]);
   if (doubt.tapes.length > 1) {
-    const names = doubt.tapes.map((n) => tapeName(survey, survey.tapes[n]));
+    const names = doubt.tapes.map((n) => tapeWord(survey, survey.tapes[n]));
     const more = answer.telling
-      ? `${tapeName(survey, answer.telling)} would tell: tape it too.`
+      ? `${tapeWord(survey, answer.telling)} would tell: tape it too.`
       : 'Read them again.';
     // Where one of them looks like a usual slip and no other does, it comes first.
     const slips = doubt.tapes.filter((n, at) => slipOf(survey, n, doubt.should[at], display));
@@ -91,7 +95,7 @@ function doubtWords(
 /** Several readings are wrong, and what is left does not tell them apart: no length is given for any of them. */
 function muddleWords(survey: Survey, { doubts }: SurveyAnswer): string {
   const tapes = [...new Set(doubts.flatMap((doubt) => doubt.tapes))];
-  const names = tapes.slice(0, MOST_NAMES).map((tape) => tapeName(survey, survey.tapes[tape]));
+  const names = tapes.slice(0, MOST_NAMES).map((tape) => tapeWord(survey, survey.tapes[tape]));
   return `More than one reading is wrong, and the tapes cannot tell what each should be. Read these again, the most doubtful first: ${listed(names)}.`;
 }
 
