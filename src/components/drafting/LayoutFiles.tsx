@@ -1,7 +1,8 @@
 import { FolderOpen, Save } from 'lucide-react';
-import { useRef, useState, type DragEvent, type ReactNode } from 'react';
+import { useState, type DragEvent, type ReactNode } from 'react';
 import { Dialog } from '../ui/Dialog';
-import { LAYOUT_FILE_ACCEPT, layoutOfFile, layoutSaved } from '../ui/layout-files';
+import { LayoutFileButton } from '../ui/LayoutFileButton';
+import { layoutOfFile, layoutSaved } from '../ui/layout-files';
 import { zoomToFit } from './FloorStage';
 import { useTableStore } from './table-context';
 
@@ -90,7 +91,6 @@ export function LayoutRefused({
 /** The layout as a file: opened here, and saved from here. */
 export function LayoutFiles({ name, onFile }: { name: string; onFile: (file: File) => void }) {
   const table = useTableStore();
-  const chosen = useRef<HTMLInputElement>(null);
   return (
     <section aria-label="Layout file" className="border-t border-graphite pt-3">
       <h2 className="text-base">Layout file</h2>
@@ -99,9 +99,9 @@ export function LayoutFiles({ name, onFile }: { name: string; onFile: (file: Fil
         the floor on the table, in one step that Undo takes back. You can also drop it on the floor.
       </p>
       <div className="mt-2 flex flex-wrap gap-2">
-        <button type="button" className="button" onClick={() => chosen.current?.click()}>
+        <LayoutFileButton onFile={onFile}>
           <FolderOpen size={16} aria-hidden /> Open a layout file
-        </button>
+        </LayoutFileButton>
         <button
           type="button"
           className="button"
@@ -110,19 +110,6 @@ export function LayoutFiles({ name, onFile }: { name: string; onFile: (file: Fil
           <Save size={16} aria-hidden /> Save as a layout file
         </button>
       </div>
-      <input
-        ref={chosen}
-        type="file"
-        className="sr-only"
-        tabIndex={-1}
-        aria-label="Layout file to open"
-        accept={LAYOUT_FILE_ACCEPT}
-        onChange={(event) => {
-          const [file] = event.target.files ?? [];
-          event.target.value = '';
-          if (file) onFile(file);
-        }}
-      />
     </section>
   );
 }

@@ -1,3 +1,4 @@
+import { pointsBox } from '@/geometry/convex-part';
 import type { Point } from '@/geometry/point';
 
 /** Width of a small plan in its own units; letters and lines are sized in these. */
@@ -10,10 +11,10 @@ export function planView(points: readonly Point[]): {
   readonly height: number;
   readonly at: (point: Point) => Point;
 } {
-  const xs = points.map(([x]) => x);
-  const ys = points.map(([, y]) => y);
-  const [left, right] = [Math.min(...xs), Math.max(...xs)];
-  const [low, high] = [Math.min(...ys), Math.max(...ys)];
+  const {
+    min: [left, low],
+    max: [right, high],
+  } = pointsBox(points);
   const scale = Math.min(
     (PLAN_WIDE - 2 * MARGIN) / Math.max(right - left, 1),
     (HEIGHT.most - 2 * MARGIN) / Math.max(high - low, 1),

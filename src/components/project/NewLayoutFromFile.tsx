@@ -1,8 +1,9 @@
 import { useMutation } from '@tanstack/react-query';
-import { useRef, useState } from 'react';
+import { useState } from 'react';
 import type { LayoutSummary } from '@/api-types/layouts';
 import { api, type ApiError } from '../ui/api';
-import { LAYOUT_FILE_ACCEPT, layoutNameOf, layoutOfFile } from '../ui/layout-files';
+import { LayoutFileButton } from '../ui/LayoutFileButton';
+import { layoutNameOf, layoutOfFile } from '../ui/layout-files';
 import { Queries } from '../ui/Queries';
 
 /** A new layout out of a layout file, named after it. */
@@ -15,7 +16,6 @@ export default function NewLayoutFromFile({ projectId }: { projectId: string }) 
 }
 
 function FromFile({ projectId }: { projectId: string }) {
-  const chosen = useRef<HTMLInputElement>(null);
   const [wrong, setWrong] = useState<{ name: string; reasons: readonly string[] } | null>(null);
   const make = useMutation<LayoutSummary | null, ApiError, File>({
     networkMode: 'always',
@@ -37,31 +37,13 @@ function FromFile({ projectId }: { projectId: string }) {
   });
   return (
     <div className="mt-4 border-t border-stone-300 pt-4">
-      <button
-        type="button"
-        className="button"
-        disabled={make.isPending}
-        onClick={() => chosen.current?.click()}
-      >
+      <LayoutFileButton disabled={make.isPending} onFile={make.mutate}>
         {make.isPending ? 'Opening …' : 'Open a layout file'}
-      </button>
+      </LayoutFileButton>
       <p className="mt-1 text-sm text-slate">
         It becomes a layout of this project, named after the file. One is saved from the drafting
         table, under Versions.
       </p>
-      <input
-        ref={chosen}
-        type="file"
-        className="sr-only"
-        tabIndex={-1}
-        aria-label="Layout file to open"
-        accept={LAYOUT_FILE_ACCEPT}
-        onChange={(event) => {
-          const [file] = event.target.files ?? [];
-          event.target.value = '';
-          if (file) make.mutate(file);
-        }}
-      />
       {wrong && (
         <div role="alert" className="mt-2 border-t-2 border-brick bg-brick-wash px-3 py-2">
           <p className="wrap-anywhere">“{wrong.name}” was not opened:</p>

@@ -1,3 +1,4 @@
+import { vertexBulge, vertexOf, vertexPoint } from '../ground-edits';
 import type { Vertex } from '../layout-document';
 
 /** Corners from one end to the other; the last has no edge of its own, so its bulge says nothing. */
@@ -9,14 +10,15 @@ const MEET_MM = 1;
 const apart = (one: Vertex, other: Vertex): number =>
   Math.hypot(one[0] - other[0], one[1] - other[1]);
 
+/** True when two ends are near enough to be one. */
+export const endsMeet = (one: Vertex, other: Vertex): boolean => apart(one, other) <= MEET_MM;
+
 /** The strand run from its other end: each arc goes with its edge and bulges the other way. */
 export function strandTurned(strand: Strand): Vertex[] {
   const last = strand.length - 1;
-  return strand.map((_, n): Vertex => {
-    const [x, y] = strand[last - n];
-    const bulge = n < last ? -(strand[last - n - 1][2] ?? 0) : 0;
-    return bulge === 0 ? [x, y] : [x, y, bulge];
-  });
+  return strand.map((_, n) =>
+    vertexOf(vertexPoint(strand[last - n]), n < last ? -vertexBulge(strand[last - n - 1]) : 0),
+  );
 }
 
 interface End {
@@ -80,9 +82,9 @@ export function chained(strands: readonly Strand[]): { rings: Vertex[][]; left: 
     if (!waiting.delete(first)) continue;
     const chain: Vertex[] = [...first];
     let used = 1;
-    for (;;) {
+    const closed = () => chain.length > 2 && endsMeet(chain[0], chain[chain.length - 1]);
+    while (!closed()) {
       const end = chain[chain.length - 1];
-      if (chain.length > 2 && apart(chain[0], end) <= MEET_MM) break;
       const next = nearestEnd(squares, waiting, end);
       if (!next) break;
       waiting.delete(next.strand);
@@ -90,15 +92,14 @@ export function chained(strands: readonly Strand[]): { rings: Vertex[][]; left: 
       chain.pop();
       chain.push(...joined(end, next.turn ? strandTurned(next.strand) : next.strand));
     }
-    const closed = chain.length > 2 && apart(chain[0], chain[chain.length - 1]) <= MEET_MM;
-    if (closed) rings.push(chain.slice(0, -1));
+    if (closed()) rings.push(chain.slice(0, -1));
     else left += used;
   }
   return { rings, left };
 }
 
 /** The next strand begun where the last one ended. */
-function joined([x, y]: Vertex, next: Strand): Vertex[] {
-  const bulge = next[0][2] ?? 0;
-  return [bulge === 0 ? [x, y] : [x, y, bulge], ...next.slice(1)];
-}
+const joined = (end: Vertex, next: Strand): Vertex[] => [
+  vertexOf(vertexPoint(end), vertexBulge(next[0])),
+  ...next.slice(1),
+];

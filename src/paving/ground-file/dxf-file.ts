@@ -1,9 +1,10 @@
 import DxfParser from 'dxf-parser';
 import { MM_PER_BARE, roundedMm } from '../cell-list';
 import { formatCount } from '../count';
+import { vertexOf } from '../ground-edits';
 import type { Vertex } from '../layout-document';
 import { MM_PER_FOOT, MM_PER_INCH } from '../length';
-import { chained, type Strand } from './chained';
+import { chained, endsMeet, type Strand } from './chained';
 import type { GroundFile, GroundFileOptions, Outline } from './outline';
 
 /**
@@ -42,10 +43,8 @@ interface DxfEntity {
 /** Kinds of entities that hold no edge: passed over without a word. */
 const NO_EDGE = ['TEXT', 'MTEXT', 'DIMENSION', 'POINT', 'ATTDEF', 'VIEWPORT', 'HATCH'];
 
-const vertexOf = ({ x, y, bulge = 0 }: DxfPoint, scale: number): Vertex =>
-  bulge === 0
-    ? [roundedMm(x * scale), roundedMm(y * scale)]
-    : [roundedMm(x * scale), roundedMm(y * scale), bulge];
+const drawnVertex = ({ x, y, bulge = 0 }: DxfPoint, scale: number): Vertex =>
+  vertexOf([roundedMm(x * scale), roundedMm(y * scale)], bulge);
 
 /** An arc as a strand of one edge; angles in radians, anticlockwise from start to end. */
 function arcStrand(
@@ -59,8 +58,8 @@ function arcStrand(
     y: center.y + radius * Math.sin(angle),
   });
   return [
-    vertexOf({ ...at(startAngle), bulge: Math.tan(sweep / 4) }, scale),
-    vertexOf(at(endAngle), scale),
+    drawnVertex({ ...at(startAngle), bulge: Math.tan(sweep / 4) }, scale),
+    drawnVertex(at(endAngle), scale),
   ];
 }
 
@@ -68,13 +67,10 @@ function arcStrand(
 function circleRing({ center, radius = 0 }: DxfEntity, scale: number): Vertex[] | null {
   if (!center || radius <= 0) return null;
   return [
-    vertexOf({ x: center.x - radius, y: center.y, bulge: 1 }, scale),
-    vertexOf({ x: center.x + radius, y: center.y, bulge: 1 }, scale),
+    drawnVertex({ x: center.x - radius, y: center.y, bulge: 1 }, scale),
+    drawnVertex({ x: center.x + radius, y: center.y, bulge: 1 }, scale),
   ];
 }
-
-const meet = (one: Vertex, other: Vertex): boolean =>
-  Math.hypot(one[0] - other[0], one[1] - other[1]) <= 1;
 
 export function dxfFile(text: string, { bare }: GroundFileOptions): GroundFile {
   const refused = (message: string): GroundFile => ({ ok: false, messages: [message] });
@@ -105,15 +101,15 @@ export function dxfFile(text: string, { bare }: GroundFileOptions): GroundFile {
     // Drawn in a mirrored plane: rare, and not to be guessed at.
     if ((entity.extrusionDirectionZ ?? 1) < 0) others++;
     else if (type === 'LWPOLYLINE' || type === 'POLYLINE') {
-      const ring = vertices.map((vertex) => vertexOf(vertex, scale));
+      const ring = vertices.map((vertex) => drawnVertex(vertex, scale));
       if (entity.shape && ring.length >= 2) outlines.push({ name: layer, ring });
-      else if (ring.length >= 4 && meet(ring[0], ring[ring.length - 1]))
+      else if (ring.length >= 4 && endsMeet(ring[0], ring[ring.length - 1]))
         outlines.push({ name: layer, ring: ring.slice(0, -1) });
       else if (ring.length >= 2) strand(layer, ring);
     } else if (type === 'LINE' && vertices.length === 2) {
       strand(
         layer,
-        vertices.map((vertex) => vertexOf(vertex, scale)),
+        vertices.map((vertex) => drawnVertex(vertex, scale)),
       );
     } else if (type === 'ARC') {
       const arc = arcStrand(entity, scale);

@@ -1,5 +1,7 @@
 import proj4 from 'proj4';
 import { z } from 'zod';
+import { pointsBox } from '@/geometry/convex-part';
+import type { Point } from '@/geometry/point';
 import { formatCount } from '../count';
 import type { Vertex } from '../layout-document';
 import { roundedMm } from '../cell-list';
@@ -80,8 +82,10 @@ export function geojsonFile(text: string): GroundFile {
         : 'No line in this file ends where it begins, so none is an edge.',
     );
   const all = closed.flatMap(({ positions }) => positions);
-  const [west, east] = extent(all.map(([longitude]) => longitude));
-  const [south, north] = extent(all.map(([, latitude]) => latitude));
+  const {
+    min: [west, south],
+    max: [east, north],
+  } = pointsBox(all.map(([longitude, latitude]): Point => [longitude, latitude]));
   if (south < -90 || north > 90 || west < -180 || east > 180)
     return refused(
       'GeoJSON is in degrees of longitude and latitude, and these numbers are not. Export the drawing as DXF or as a list of points instead.',
@@ -117,9 +121,3 @@ export function geojsonFile(text: string): GroundFile {
     ],
   };
 }
-
-const extent = (values: readonly number[]): [number, number] =>
-  values.reduce<[number, number]>(
-    ([least, greatest], value) => [Math.min(least, value), Math.max(greatest, value)],
-    [Infinity, -Infinity],
-  );

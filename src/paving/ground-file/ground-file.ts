@@ -1,6 +1,9 @@
+import { pointsBox } from '@/geometry/convex-part';
 import type { Point } from '@/geometry/point';
 import { ringHolds } from '@/geometry/ring';
+import { roundedMm } from '../cell-list';
 import { groundRing } from '../ground';
+import { vertexBulge, vertexOf, vertexPoint } from '../ground-edits';
 import type { KeepOut, LayoutDocument, Vertex } from '../layout-document';
 import { ringAnticlockwise, vertexRingArea } from '../ring-validation';
 import { dxfFile } from './dxf-file';
@@ -75,16 +78,12 @@ export function outlineGround(
   edge: Outline,
   keepOuts: readonly Outline[],
 ): LayoutDocument['ground'] {
-  const left = Math.min(...edge.ring.map(([x]) => x));
-  const low = Math.min(...edge.ring.map(([, y]) => y));
+  const [left, low] = pointsBox(edge.ring.map(vertexPoint)).min;
   const moved = (ring: readonly Vertex[]): Vertex[] =>
     ringAnticlockwise(
-      ring.map(([x, y, bulge]): Vertex => {
-        const at = (value: number) => Number(value.toFixed(3));
-        return bulge === undefined
-          ? [at(x - left), at(y - low)]
-          : [at(x - left), at(y - low), bulge];
-      }),
+      ring.map((vertex) =>
+        vertexOf([roundedMm(vertex[0] - left), roundedMm(vertex[1] - low)], vertexBulge(vertex)),
+      ),
     );
   return {
     perimeter: moved(edge.ring),

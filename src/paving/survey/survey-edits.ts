@@ -1,5 +1,5 @@
 import type { Point } from '@/geometry/point';
-import { vertexPoint } from '../ground-edits';
+import { arcRise, vertexBulge, vertexPoint } from '../ground-edits';
 import type { LayoutDocument } from '../layout-document';
 import { regularSketch, ringStarts, surveyOf, usualTapes, type Survey, type Tape } from './survey';
 
@@ -14,12 +14,9 @@ export function groundSurvey({ ground }: Pick<LayoutDocument, 'ground'>): Survey
     ground.keepOuts.map(({ name, ring }) => ({ name, ring: ring.map(vertexPoint) })),
   );
   const arcs = rings.flatMap((ring, n) =>
-    ring.flatMap(([x, y, bulge = 0], edge) => {
-      const [toX, toY] = ring[(edge + 1) % ring.length];
-      return bulge === 0
-        ? []
-        : [{ ring: n, edge, rise: (bulge * Math.hypot(toX - x, toY - y)) / 2 }];
-    }),
+    ring.flatMap((vertex, edge) =>
+      vertexBulge(vertex) === 0 ? [] : [{ ring: n, edge, rise: arcRise(ring, edge) }],
+    ),
   );
   return { ...survey, arcs };
 }

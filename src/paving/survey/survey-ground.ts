@@ -1,12 +1,25 @@
 import type { Point } from '@/geometry/point';
-import { vertexOf } from '../ground-edits';
-import type { KeepOut, LayoutDocument, Vertex } from '../layout-document';
+import { edgeRiseSet, vertexBulge, vertexOf, type Ring } from '../ground-edits';
+import type { KeepOut, LayoutDocument } from '../layout-document';
 import { ringStarts, type Survey } from './survey';
 import type { SurveyAnswer } from './survey-answer';
 
 /** Corners are put on a grid finer than tapes read, mm. */
 const GRID_MM = 0.1;
 const onGrid = (mm: number) => Number((Math.round(mm / GRID_MM) * GRID_MM).toFixed(1));
+
+/** The rings of a survey with its points at `places`, each side bent by its rise. */
+export function surveyRings(survey: Survey, places: readonly Point[]): Ring[] {
+  const starts = ringStarts(survey);
+  return survey.rings.map((_, ring) =>
+    survey.arcs
+      .filter((arc) => arc.ring === ring)
+      .reduce<Ring>(
+        (bent, { edge, rise }) => edgeRiseSet(bent, edge, rise),
+        places.slice(starts[ring], starts[ring + 1]).map(([x, y]) => [x, y]),
+      ),
+  );
+}
 
 /**
  * The ground as surveyed; null while a corner of it is not fixed. It lies where the sketch lay, and the
@@ -17,18 +30,10 @@ export function surveyedGround(
   { places }: Pick<SurveyAnswer, 'places'>,
   before: LayoutDocument['ground'],
 ): LayoutDocument['ground'] | null {
-  const starts = ringStarts(survey);
-  const corners = places.slice(0, starts[survey.rings.length]);
+  const corners = places.slice(0, ringStarts(survey)[survey.rings.length]);
   if (corners.some((place) => place === null)) return null;
-  const levelled = placesLevelled(corners as Point[], survey);
-  const rings = survey.rings.map(({ corners: count }, ring) =>
-    Array.from({ length: count }, (_, edge): Vertex => {
-      const [x, y] = levelled[starts[ring] + edge];
-      const [toX, toY] = levelled[starts[ring] + ((edge + 1) % count)];
-      const rise = survey.arcs.find((arc) => arc.ring === ring && arc.edge === edge)?.rise ?? 0;
-      const chord = Math.hypot(toX - x, toY - y);
-      return vertexOf([onGrid(x), onGrid(y)], chord > 0 ? (2 * rise) / chord : 0);
-    }),
+  const rings = surveyRings(survey, placesLevelled(corners as Point[], survey)).map((ring) =>
+    ring.map((vertex) => vertexOf([onGrid(vertex[0]), onGrid(vertex[1])], vertexBulge(vertex))),
   );
   const taped = survey.rings
     .slice(1)

@@ -1,6 +1,7 @@
 import type { Point } from '@/geometry/point';
 import { ringStarts, surveyPointName, tapeName, type Survey } from '@/paving/survey/survey';
 import type { SurveyAnswer } from '@/paving/survey/survey-answer';
+import { surveyRings } from '@/paving/survey/survey-ground';
 import { planPath, planView, PLAN_WIDE } from '../plan-view';
 import { ringOutline } from '../ring-outline';
 
@@ -22,19 +23,10 @@ export function SurveyPicture({ survey, answer, places, picked }: Props) {
     places.reduce((sum, [x]) => sum + x, 0) / places.length,
     places.reduce((sum, [, y]) => sum + y, 0) / places.length,
   ]);
-  const rings = survey.rings.map(({ corners }, ring) => {
-    const own = places.slice(starts[ring], starts[ring] + corners);
-    const fixed = answer.places.slice(starts[ring], starts[ring] + corners).every(Boolean);
-    const outline = ringOutline(
-      own.map(([x, y], edge) => {
-        const [toX, toY] = own[(edge + 1) % corners];
-        const rise = survey.arcs.find((arc) => arc.ring === ring && arc.edge === edge)?.rise ?? 0;
-        const chord = Math.hypot(toX - x, toY - y);
-        return rise === 0 || chord === 0 ? [x, y] : [x, y, (2 * rise) / chord];
-      }),
-    );
-    return { fixed, path: planPath(outline.map(at)) };
-  });
+  const rings = surveyRings(survey, places).map((vertices, ring) => ({
+    fixed: answer.places.slice(starts[ring], starts[ring + 1]).every(Boolean),
+    path: planPath(ringOutline(vertices).map(at)),
+  }));
   return (
     <svg
       viewBox={`0 0 ${PLAN_WIDE} ${height.toFixed(0)}`}
